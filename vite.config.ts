@@ -1,0 +1,38 @@
+import tailwind from "@tailwindcss/vite";
+import react from "@vitejs/plugin-react";
+import { defineConfig } from "vitest/config";
+
+const root = import.meta.dirname;
+
+export default defineConfig({
+  root: `${root}/client`,
+  publicDir: false,
+  plugins: [react(), tailwind()],
+  build: { outDir: `${root}/dist/client`, emptyOutDir: true, manifest: true, target: "es2022", chunkSizeWarningLimit: 900 },
+  worker: { format: "es" },
+  test: {
+    projects: [
+      {
+        root,
+        test: { name: "unit", include: ["tests/engine/**/*.test.ts", "tests/published/**/*.test.ts"], environment: "node" },
+      },
+      {
+        root,
+        plugins: [react()],
+        test: { name: "client", include: ["tests/client/**/*.test.{ts,tsx}"], environment: "happy-dom" },
+      },
+      {
+        root,
+        test: {
+          name: "server",
+          include: ["tests/server/**/*.test.ts"],
+          environment: "node",
+          globalSetup: ["tests/server/global-setup.ts"],
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      { root, test: { name: "house", include: ["tests/lint/**/*.test.ts"], environment: "node", testTimeout: 120_000 } },
+    ],
+  },
+});
