@@ -1,0 +1,12 @@
+export interface Cluster {
+  /** Connection address of one database of the cluster. */
+  url(database: string): string;
+  stop(mode?: string): void;
+  /** Ends the server at once, as a crash would. */
+  halt(): void;
+  /** Starts it again on the same port. */
+  restart(): Promise<void>;
+  /** Ends it and deletes its data. */
+  remove(): void;
+}
+export function ensureCluster(wish: { folder: string; testing?: boolean }): Promise<Cluster>;
