@@ -1,0 +1,34 @@
+/** `npm run bench`: measures and prints figures with their ratios; it judges nothing. */
+import { spawnSync } from "node:child_process";
+import { mkdtempSync, chmodSync, rmSync } from "node:fs";
+import { join } from "node:path";
+import { ensureDependencies } from "./dependencies.mjs";
+import { root } from "./place.mjs";
+import { endWith, say } from "./say.mjs";
+
+try {
+  ensureDependencies();
+  const { ensureChromium } = await import("./debian.mjs");
+  const { ensureClientBuild } = await import("./client-build.mjs");
+  const { ensureCluster } = await import("./postgres.mjs");
+  ensureClientBuild();
+  const folder = mkdtempSync("/var/tmp/subleading-bench-");
+  chmodSync(folder, 0o711);
+  // A real store is measured: fsync stays on.
+  const cluster = await ensureCluster({ folder: join(folder, "postgres") });
+  const env = { ...process.env, SUBLEADING_TEST_DATABASE_URL: cluster.url("postgres"), CHROMIUM_PATH: ensureChromium() };
+  let failed = false;
+  try {
+    for (const bench of ["delivery", "evaluation", "bundle"]) {
+      say(`tests/bench/${bench}.ts`);
+      const { status } = spawnSync(process.execPath, ["--import", "tsx", `tests/bench/${bench}.ts`], { cwd: root, stdio: "inherit", env });
+      failed ||= status !== 0;
+    }
+  } finally {
+    cluster.remove();
+    rmSync(folder, { recursive: true, force: true });
+  }
+  process.exit(failed ? 1 : 0);
+} catch (error) {
+  endWith(error);
+}
