@@ -8,13 +8,23 @@ export default defineConfig({
   root: `${root}/client`,
   publicDir: false,
   plugins: [react(), tailwind()],
-  build: { outDir: `${root}/dist/client`, emptyOutDir: true, manifest: true, target: "es2022", chunkSizeWarningLimit: 900 },
+  build: {
+    outDir: `${root}/dist/client`,
+    emptyOutDir: true,
+    manifest: true,
+    target: "es2022",
+    chunkSizeWarningLimit: 900,
+  },
   worker: { format: "es" },
   test: {
     projects: [
       {
         root,
-        test: { name: "unit", include: ["tests/engine/**/*.test.ts", "tests/published/**/*.test.ts"], environment: "node" },
+        test: {
+          name: "unit",
+          include: ["tests/engine/**/*.test.ts", "tests/published/**/*.test.ts"],
+          environment: "node",
+        },
       },
       {
         root,
@@ -32,7 +42,15 @@ export default defineConfig({
           hookTimeout: 60_000,
         },
       },
-      { root, test: { name: "house", include: ["tests/lint/**/*.test.ts"], environment: "node", testTimeout: 120_000 } },
+      {
+        root,
+        test: {
+          name: "house",
+          include: ["tests/lint/**/*.test.ts"],
+          environment: "node",
+          testTimeout: 120_000,
+        },
+      },
     ],
   },
 });

@@ -16,12 +16,20 @@ try {
   chmodSync(folder, 0o711);
   // A real store is measured: fsync stays on.
   const cluster = await ensureCluster({ folder: join(folder, "postgres") });
-  const env = { ...process.env, SUBLEADING_TEST_DATABASE_URL: cluster.url("postgres"), CHROMIUM_PATH: ensureChromium() };
+  const env = {
+    ...process.env,
+    SUBLEADING_TEST_DATABASE_URL: cluster.url("postgres"),
+    CHROMIUM_PATH: ensureChromium(),
+  };
   let failed = false;
   try {
     for (const bench of ["delivery", "evaluation", "bundle"]) {
       say(`tests/bench/${bench}.ts`);
-      const { status } = spawnSync(process.execPath, ["--import", "tsx", `tests/bench/${bench}.ts`], { cwd: root, stdio: "inherit", env });
+      const { status } = spawnSync(process.execPath, ["--import", "tsx", `tests/bench/${bench}.ts`], {
+        cwd: root,
+        stdio: "inherit",
+        env,
+      });
       failed ||= status !== 0;
     }
   } finally {

@@ -17,7 +17,9 @@ const loader = pathToFileURL(join(root, "node_modules/tsx/dist/loader.mjs")).hre
  * @returns {Promise<{ ready: any, process: import("node:child_process").ChildProcess, stop: (signal?: NodeJS.Signals) => Promise<void> }>}
  */
 export function startChild(name, entry, { env, output = "inherit", watch = false }) {
-  const args = watch ? [join(root, "node_modules/tsx/dist/cli.mjs"), "watch", "--clear-screen=false", entry] : ["--import", loader, entry];
+  const args = watch
+    ? [join(root, "node_modules/tsx/dist/cli.mjs"), "watch", "--clear-screen=false", entry]
+    : ["--import", loader, entry];
   const child = spawn(process.execPath, args, {
     cwd: root,
     env: { ...process.env, ...env },
@@ -32,9 +34,14 @@ export function startChild(name, entry, { env, output = "inherit", watch = false
   };
   return new Promise((resolve, reject) => {
     child.once("error", reject);
-    child.once("exit", (code, signal) => reject(new Advice(`${name} ended before it was ready (${signal ?? `exit ${code}`}).`)));
+    child.once("exit", (code, signal) =>
+      reject(new Advice(`${name} ended before it was ready (${signal ?? `exit ${code}`}).`)),
+    );
+    // The watcher keeps its child's messages to itself; the server is then waited for by whoever asks it.
+    if (watch) resolve({ ready: null, process: child, stop });
     child.on("message", (message) => {
-      if (message && typeof message === "object" && "ready" in message) resolve({ ready: message.ready, process: child, stop });
+      if (message && typeof message === "object" && "ready" in message)
+        resolve({ ready: message.ready, process: child, stop });
     });
   });
 }

@@ -21,10 +21,14 @@ export function ensureClientBuild() {
   const digest = digestOfSources();
   if (existsSync(mark) && readFileSync(mark, "utf8") === digest) return;
   say("building the client");
-  const { status } = spawnSync(process.execPath, [join(root, "node_modules/vite/bin/vite.js"), "build", "--logLevel", "warn"], {
-    cwd: root,
-    stdio: ["ignore", "inherit", "inherit"],
-  });
+  const { status } = spawnSync(
+    process.execPath,
+    [join(root, "node_modules/vite/bin/vite.js"), "build", "--logLevel", "warn"],
+    {
+      cwd: root,
+      stdio: ["ignore", "inherit", "inherit"],
+    },
+  );
   if (status !== 0) throw new Advice("The client does not build; the words of the build are above.");
   writeFileSync(mark, digest);
 }

@@ -7,20 +7,30 @@ function install(packages) {
   const isRoot = process.getuid?.() === 0;
   const command = `${isRoot ? "" : "sudo "}apt-get install -y --no-install-recommends ${packages.join(" ")}`;
   const mayInstall =
-    existsSync("/usr/bin/apt-get") && (isRoot || spawnSync("sudo", ["-n", "true"], { stdio: "ignore" }).status === 0);
-  if (!mayInstall) throw new Advice(`${packages.join(", ")} is missing and may not be installed from here. Please run:\n\n  ${command}\n`);
+    existsSync("/usr/bin/apt-get") &&
+    (isRoot || spawnSync("sudo", ["-n", "true"], { stdio: "ignore" }).status === 0);
+  if (!mayInstall)
+    throw new Advice(
+      `${packages.join(", ")} is missing and may not be installed from here. Please run:\n\n  ${command}\n`,
+    );
   say(`installing ${packages.join(", ")} from Debian's packages`);
   const apt = isRoot ? ["apt-get"] : ["sudo", "-n", "apt-get"];
   const run = (...args) => {
     const [program, ...before] = apt;
-    const options = { stdio: ["ignore", "ignore", "inherit"], env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" } };
+    const options = {
+      stdio: ["ignore", "ignore", "inherit"],
+      env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" },
+    };
     return spawnSync(program, [...before, "-o", "DPkg::Lock::Timeout=540", ...args], options).status === 0;
   };
   // An old package list is tried first: it is often good enough and saves a minute.
   const done =
     run("install", "-y", "--no-install-recommends", ...packages) ||
     (run("update") && run("install", "-y", "--no-install-recommends", ...packages));
-  if (!done) throw new Advice(`Installing ${packages.join(", ")} failed; the words of apt-get are above. By hand:\n\n  ${command}\n`);
+  if (!done)
+    throw new Advice(
+      `Installing ${packages.join(", ")} failed; the words of apt-get are above. By hand:\n\n  ${command}\n`,
+    );
 }
 
 function newestPostgres() {

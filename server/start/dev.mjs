@@ -9,7 +9,12 @@ try {
   const { freePort } = await import("./ports.mjs");
   const { startStack, stopOnSignal } = await import("./stack.mjs");
   const pagePort = await freePort(Number(process.env.PORT ?? 4317));
-  const stack = await startStack({ folder: dataFolder, publicPort: pagePort, watch: true, env: { NODE_ENV: "development" } });
+  const stack = await startStack({
+    folder: dataFolder,
+    publicPort: pagePort,
+    watch: true,
+    env: { NODE_ENV: "development" },
+  });
   const target = `http://127.0.0.1:${stack.serverPort}`;
   const vite = await createServer({
     server: {
@@ -27,7 +32,8 @@ try {
     await vite.close();
     await stack.stop();
   });
-  if (stack.mailboxUrl) say(`local stand-ins: invented accounts to sign in with; their mail is at ${stack.mailboxUrl}`);
+  if (stack.mailboxUrl)
+    say(`local stand-ins: invented accounts to sign in with; their mail is at ${stack.mailboxUrl}`);
   say(`Subleading (reloading) is at ${stack.url}`);
 } catch (error) {
   endWith(error);

@@ -1,4 +1,6 @@
 export interface Cluster {
+  /** Makes a database unless it is there. */
+  ensureDatabase(database: string): void;
   /** Connection address of one database of the cluster. */
   url(database: string): string;
   stop(mode?: string): void;

@@ -20,14 +20,30 @@ function sessionSecret(folder) {
  *   watch?: boolean, env?: Record<string, string>
  * }} wish  `folder` holds all data; `publicPort` is the port people use when it is not the server's own
  */
-export async function startStack({ folder, testing = false, port = 0, publicPort, output = "inherit", watch = false, env = {} }) {
+export async function startStack({
+  folder,
+  testing = false,
+  port = 0,
+  publicPort,
+  output = "inherit",
+  watch = false,
+  env = {},
+}) {
   mkdirSync(folder, { recursive: true });
   const given = { ...process.env, ...env };
-  const cluster = given.DATABASE_URL ? null : await ensureCluster({ folder: join(folder, "postgres"), testing });
+  const cluster = given.DATABASE_URL
+    ? null
+    : await ensureCluster({ folder: join(folder, "postgres"), testing });
+  cluster?.ensureDatabase("subleading");
   const serverPort = await freePort(port);
   const publicUrl = given.PUBLIC_URL ?? `http://localhost:${publicPort ?? serverPort}`;
   const needsFakes = !given.GITHUB_CLIENT_ID || !given.SMTP_URL;
-  const fakes = needsFakes ? await startChild("the stand-ins for sign-in and mail", "fakes/main.ts", { env: { PUBLIC_URL: publicUrl }, output }) : null;
+  const fakes = needsFakes
+    ? await startChild("the stand-ins for sign-in and mail", "fakes/main.ts", {
+        env: { PUBLIC_URL: publicUrl },
+        output,
+      })
+    : null;
   // The stand-ins answer with the variables that point the server at them; what was given by hand wins.
   const settings = {
     NODE_ENV: testing ? "test" : "production",

@@ -12,7 +12,8 @@ import { endWith, say } from "./say.mjs";
 
 const reports = mkdtempSync(join(tmpdir(), "subleading-reports-"));
 const bin = (name) => join(root, "node_modules", name);
-const node = (...args) => spawnSync(process.execPath, args, { cwd: root, stdio: ["ignore", "inherit", "inherit"] }).status === 0;
+const node = (...args) =>
+  spawnSync(process.execPath, args, { cwd: root, stdio: ["ignore", "inherit", "inherit"] }).status === 0;
 
 const tally = { passed: 0, failed: 0 };
 const failures = [];
@@ -34,21 +35,36 @@ function count(name, succeeded, report, read) {
 
 function runVitest() {
   const report = join(reports, "vitest.json");
-  const succeeded = node(bin("vitest/vitest.mjs"), "run", "--reporter=dot", "--reporter=json", `--outputFile.json=${report}`);
-  count("tests", succeeded, report, (json) => ({ passed: json.numPassedTests, failed: json.numFailedTests + json.numFailedTestSuites - suitesWithFailedTests(json) }));
-}
-
-/** Files with failed tests are already counted by their tests; a file that failed to load is a failure of its own. */
-function suitesWithFailedTests(json) {
-  const loaded = json.testResults.filter((file) => file.status === "failed" && file.assertionResults.length === 0).length;
-  return json.numFailedTestSuites - loaded;
+  const succeeded = node(
+    bin("vitest/vitest.mjs"),
+    "run",
+    "--reporter=dot",
+    "--reporter=json",
+    `--outputFile.json=${report}`,
+  );
+  // A file that does not even load has no failed test to be counted by.
+  const unloaded = (json) =>
+    json.testResults.filter((file) => file.status === "failed" && file.assertionResults.length === 0).length;
+  count("tests", succeeded, report, (json) => ({
+    passed: json.numPassedTests,
+    failed: json.numFailedTests + unloaded(json),
+  }));
 }
 
 function runBrowserTests() {
   const report = join(reports, "browser.json");
   process.env.PLAYWRIGHT_JSON_OUTPUT_FILE = report;
-  const succeeded = node(bin("playwright/cli.js"), "test", "-c", "e2e/playwright.config.ts", "--reporter=line,json");
-  count("browser tests", succeeded, report, ({ stats }) => ({ passed: stats.expected + stats.flaky, failed: stats.unexpected }));
+  const succeeded = node(
+    bin("playwright/cli.js"),
+    "test",
+    "-c",
+    "e2e/playwright.config.ts",
+    "--reporter=line,json",
+  );
+  count("browser tests", succeeded, report, ({ stats }) => ({
+    passed: stats.expected + stats.flaky,
+    failed: stats.unexpected,
+  }));
 }
 
 try {
@@ -61,8 +77,32 @@ try {
   check("types", node("server/start/types.mjs"));
   say("lint and import boundaries");
   check("lint", node(bin("eslint/bin/eslint.js"), "--config", "tests/lint/eslint.config.js", "."));
-  check("import boundaries", node(bin("dependency-cruiser/bin/dependency-cruise.mjs"), "--config", "tests/lint/boundaries.cjs", "client", "server", "fakes"));
-  check("format", node(bin("prettier/bin/prettier.cjs"), "--check", "--log-level", "warn", "client", "server", "tests", "e2e", "fakes", "migrations"));
+  check(
+    "import boundaries",
+    node(
+      bin("dependency-cruiser/bin/dependency-cruise.mjs"),
+      "--config",
+      "tests/lint/boundaries.cjs",
+      "client",
+      "server",
+      "fakes",
+    ),
+  );
+  check(
+    "format",
+    node(
+      bin("prettier/bin/prettier.cjs"),
+      "--check",
+      "--log-level",
+      "warn",
+      "client",
+      "server",
+      "tests",
+      "e2e",
+      "fakes",
+      "migrations",
+    ),
+  );
   ensureClientBuild();
   say("unit, published, client and server tests");
   runVitest();

@@ -14,7 +14,10 @@ module.exports = {
       name: "engine-only-parses-with-mathjs",
       severity: "error",
       from: { path: "^client/engine/" },
-      to: { path: "^node_modules/mathjs/", pathNot: "^node_modules/mathjs/(lib/(esm|cjs)/(entry/mainNumber|number)|number|lib/esm/number)" },
+      to: {
+        path: "^node_modules/mathjs/",
+        pathNot: "^node_modules/mathjs/(lib/(esm|cjs)/(entry/mainNumber|number)|number|lib/esm/number)",
+      },
     },
     {
       name: "mathjs-stays-in-the-engine",

@@ -9,7 +9,18 @@ import typescript from "typescript-eslint";
 const root = resolve(dirname(fileURLToPath(import.meta.url)), "../..");
 
 /** The engine has no clock, no unseeded randomness and no way out. */
-const impureGlobals = ["Date", "performance", "crypto", "fetch", "setTimeout", "setInterval", "window", "document", "process", "console"];
+const impureGlobals = [
+  "Date",
+  "performance",
+  "crypto",
+  "fetch",
+  "setTimeout",
+  "setInterval",
+  "window",
+  "document",
+  "process",
+  "console",
+];
 
 export default typescript.config(
   { ignores: ["**/dist/**", "**/.data/**", "**/node_modules/**", "test-results/**", "tests/lint/*.cjs"] },
@@ -20,7 +31,10 @@ export default typescript.config(
     extends: [typescript.configs.strictTypeChecked],
     languageOptions: { parserOptions: { project: [resolve(root, "tsconfig.json")], tsconfigRootDir: root } },
     rules: {
-      "@typescript-eslint/restrict-template-expressions": ["error", { allowNumber: true, allowBoolean: true }],
+      "@typescript-eslint/restrict-template-expressions": [
+        "error",
+        { allowNumber: true, allowBoolean: true },
+      ],
       "@typescript-eslint/no-confusing-void-expression": "off",
       "@typescript-eslint/consistent-type-imports": "error",
       "@typescript-eslint/no-extraneous-class": "off",
@@ -36,7 +50,10 @@ export default typescript.config(
     files: ["client/engine/**/*.ts"],
     rules: {
       "no-restricted-globals": ["error", ...impureGlobals],
-      "no-restricted-properties": ["error", { object: "Math", property: "random", message: "The engine is deterministic." }],
+      "no-restricted-properties": [
+        "error",
+        { object: "Math", property: "random", message: "The engine is deterministic." },
+      ],
     },
   },
   {
