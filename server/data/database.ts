@@ -1,0 +1,42 @@
+/** The one way to PostgreSQL for queries. Sessions and listeners keep connections of their own. */
+import createKnex, { type Knex } from "knex";
+
+export type Database = Knex;
+/** A knex or a transaction of it: what a query needs, whoever owns the transaction. */
+export type Queryable = Knex | Knex.Transaction;
+
+export interface DatabaseOptions {
+  readonly most?: number;
+  readonly name?: string;
+}
+
+export function openDatabase(
+  url: string,
+  { most = 10, name = "subleading" }: DatabaseOptions = {},
+): Database {
+  return createKnex({
+    client: "pg",
+    connection: { connectionString: url, application_name: name },
+    pool: { min: 0, max: most },
+    acquireConnectionTimeout: 10_000,
+  });
+}
+
+/** Rows of a raw query, typed by the caller who wrote the select list. */
+export async function rows<Row>(
+  database: Queryable,
+  sql: string,
+  bindings: Knex.RawBinding[] = [],
+): Promise<Row[]> {
+  const answer = (await database.raw(sql, bindings)) as { rows: Row[] }; // knex types raw answers as any
+  return answer.rows;
+}
+
+/** The first row, or undefined. */
+export async function firstRow<Row>(
+  database: Queryable,
+  sql: string,
+  bindings: Knex.RawBinding[] = [],
+): Promise<Row | undefined> {
+  return (await rows<Row>(database, sql, bindings))[0];
+}
