@@ -1,11 +1,11 @@
 /** One node per block kind, made from the kind's shape, and the rows and cells of its tables. */
 import { Node, type AnyExtension } from "@tiptap/core";
-import type { BlockKind } from "#engine/kind.ts";
+import type { BlockDescription } from "#engine/kind.ts";
 import { cellNode, rowNode } from "./block-structure.ts";
 import { carried, textAttributes } from "./text-attributes.ts";
 
 /** The node of a kind: `row*` is the only content, so no merge of two people's edits can make it invalid. */
-export function blockNodeOf(kind: BlockKind): AnyExtension {
+export function blockNodeOf(kind: BlockDescription): AnyExtension {
   const initial: Record<string, string> = { blockId: "", standsOn: "" };
   for (const [name, field] of Object.entries(kind.shape.fields)) {
     if (name in initial)

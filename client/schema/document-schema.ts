@@ -1,7 +1,7 @@
 /** The shared document: the same nodes and marks on the server and in every editor. Views are added by the client. */
 import { getSchema, type AnyExtension } from "@tiptap/core";
 import type { Schema } from "@tiptap/pm/model";
-import { kinds } from "#engine/kinds.ts";
+import { kindDescriptions } from "#engine/descriptions.ts";
 import { blockNodeOf, Cell, Row } from "./block-nodes.ts";
 import { DisplayMath, InlineMath } from "./mathematics-nodes.ts";
 import { Pin } from "./pin-node.ts";
@@ -13,7 +13,7 @@ export const documentExtensions: readonly AnyExtension[] = [
   InlineMath,
   DisplayMath,
   Pin,
-  ...Object.values(kinds).map((kind) => blockNodeOf(kind)),
+  ...Object.values(kindDescriptions).map(blockNodeOf),
   Row,
   Cell,
 ];

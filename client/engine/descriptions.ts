@@ -1,0 +1,15 @@
+/** Every block kind by name, without its computation: for documents, forms and the index of what can be placed. */
+import { divergenceDescription } from "./divergence/description.ts";
+import type { BlockDescription, KindName } from "./kind.ts";
+import { orderPlanDescription } from "./plan/description.ts";
+import { premisesDescription } from "./premises/description.ts";
+import { scalingDescription } from "./scaling/description.ts";
+import { truncationErrorDescription } from "./truncation/description.ts";
+
+export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
+  premises: premisesDescription,
+  scaling: scalingDescription,
+  divergence: divergenceDescription,
+  orderPlan: orderPlanDescription,
+  truncationError: truncationErrorDescription,
+};

@@ -1,0 +1,11 @@
+/** What the Truncation error block is and takes, without its computation: forms and documents need no more. */
+import type { BlockDescription } from "../kind.ts";
+import { truncationShape } from "./shape.ts";
+
+export const truncationErrorDescription: BlockDescription<typeof truncationShape> = {
+  kind: "truncationError",
+  title: "Truncation error",
+  purpose: "Estimate what the omitted orders may amount to, from predictions order by order.",
+  shape: truncationShape,
+  premises: "optional",
+};
