@@ -1,0 +1,37 @@
+/** What a Divergence block is asked: one graph by its vertices and legs, or the whole theory within caps. */
+import { choice, defineShape, note, text, type InputsOf } from "../shape.ts";
+
+export const divergenceShape = defineShape({
+  fields: {
+    title: note(),
+    /** One connected graph, or every amplitude the premises' interactions can make. */
+    mode: choice("one graph", "whole theory"),
+    /** Whole theory: the most loops considered; "" is 2. */
+    loops: text("2"),
+    /** Whole theory: the most external legs listed; "" is 6. */
+    legs: text("6"),
+    /** Whole theory: the largest order in 1/Λ (sum of Δ − d over the insertions) considered; "" is 2. */
+    order: text("2"),
+    /** Whether the charges of the premises' symmetries forbid amplitudes and counterterms. */
+    symmetries: choice("yes", "no"),
+    note: note(),
+  },
+  tables: {
+    vertices: {
+      /** Row id of a term of the premises: it survives reordering and retyping. */
+      term: text(),
+      /** How many of it: a positive whole number. */
+      count: text("1"),
+    },
+    legs: {
+      /** Symbol of a field of the premises: "phi", "psi". */
+      field: text(),
+      /** "pair" is one leg of the field and one of its conjugate; a real field's legs are all "field". */
+      leg: choice("field", "conjugate", "pair"),
+      /** How many: a positive whole number. A pair counts two legs. */
+      count: text("1"),
+    },
+  },
+});
+
+export type DivergenceInputs = InputsOf<typeof divergenceShape>;

@@ -1,0 +1,162 @@
+/**
+ * What a Divergence block says: plain JSON, exact numbers as canonical text with their LaTeX beside them.
+ * Degrees and dimensions are linear forms in d (or D and z): text "4 - …", "d - 4", "1/2".
+ */
+
+/** An exact number or linear form, as text ("3/2*d - 3") and as LaTeX without dollar signs. */
+export interface Exact {
+  readonly text: string;
+  readonly latex: string;
+}
+
+/** Convergence of one graph: "tree" has no loop integral at all; "depends" when d, D or z is a symbol. */
+export type Verdict = "tree" | "convergent" | "logarithmic" | "power" | "depends";
+
+export interface LegCount {
+  readonly fieldRowId: string;
+  readonly symbol: string;
+  /** Legs of the field itself and, for fields that are not their own conjugate, of the conjugate. */
+  readonly count: number;
+  readonly conjugateCount: number;
+}
+
+export interface Legs {
+  /** Made of field row ids: "f1:2,f2:1:1" (two legs of f1, one of f2 and one of its conjugate); "vacuum" for none. */
+  readonly key: string;
+  /** The legs as a product of fields, "\\phi^{2}\\bar{\\psi}\\psi"; "1" for the vacuum. */
+  readonly latex: string;
+  /** Plain words for screen readers: "phi^2 psibar psi", "vacuum". */
+  readonly text: string;
+  readonly total: number;
+  readonly fields: readonly LegCount[];
+}
+
+export interface Counterterm {
+  /** The operator's fields and derivatives: "\\partial^{2}\\phi^{2}". */
+  readonly latex: string;
+  readonly text: string;
+  readonly derivatives: number;
+  readonly timeDerivatives: number;
+  /** Power of mass dimension that masses (or relevant couplings) must make up: ω minus the weight of the derivatives. */
+  readonly massPower: Exact;
+  /** Dimension of the operator, and of its coefficient (measure − Δ). */
+  readonly dimension: Exact;
+  readonly coefficient: Exact;
+  /** Order in 1/Λ at which its coefficient enters naturally: max(0, Δ − measure). */
+  readonly order: Exact;
+  /** Row id of the premises' term of the same fields and derivatives; null when nobody wrote it down. */
+  readonly presentAs: string | null;
+  /** False when a symmetry of the premises forbids it. */
+  readonly allowed: boolean;
+}
+
+export interface GraphVertex {
+  readonly termRowId: string;
+  readonly latex: string;
+  readonly count: number;
+  /** Ultraviolet dimension [g] of the coefficient, and weight k of the derivatives. */
+  readonly coefficient: Exact;
+  readonly derivatives: Exact;
+}
+
+export interface InternalLine {
+  readonly fieldRowId: string;
+  readonly latex: string;
+  readonly count: number;
+  /** δ_f. */
+  readonly weight: Exact;
+}
+
+/** What the degree means in a regulator: a short code worded on the page, see `regulatorMeanings`. */
+export type Meaning =
+  /** No loop. */
+  | "tree"
+  /** ω < 0: the overall integral converges; subgraphs may not. */
+  | "convergent"
+  /** Dimensional regularisation: a pole, with the counterterms listed. */
+  | "pole"
+  /** Dimensional regularisation: no pole, d and L odd. */
+  | "no pole: odd dimension, odd loops"
+  /** No local operator with analytic coefficients has the right dimension. */
+  | "no pole: no analytic counterterm"
+  /** Schrödinger propagators: D·L odd after the energy integrals. */
+  | "no pole: Schrödinger, odd D·L"
+  /** A closed loop of retarded propagators: zero in vacuum. */
+  | "vanishes: retarded loop"
+  | "logarithm of the cutoff"
+  | "powers of the cutoff"
+  | "powers and a logarithm of the cutoff"
+  | "depends";
+
+export interface GraphDivergence {
+  readonly mode: "one graph";
+  readonly legs: Legs;
+  readonly vertices: readonly GraphVertex[];
+  readonly lines: readonly InternalLine[];
+  readonly loops: number;
+  readonly omega: Exact;
+  readonly verdict: Verdict;
+  /** For symbolic d alone: the dimension where ω = 0, and whether ω grows with d. Null otherwise. */
+  readonly logarithmicAt: { readonly symbol: "d" | "D" | "z"; readonly value: Exact; readonly growsAbove: boolean } | null;
+  readonly dimensional: Meaning;
+  readonly cutoff: Meaning;
+  /** Highest power of the cutoff, when ω is a number > 0. */
+  readonly cutoffPower: Exact | null;
+  readonly counterterms: readonly Counterterm[];
+}
+
+/** "divergent": ω ≥ 0 and a graph exists. The rest have ω ≥ 0 by their legs but no graph makes them. */
+export type AmplitudeStatus = "divergent" | "forbidden by symmetry" | "forbidden by fermion parity" | "no graph within the caps";
+
+export interface AmplitudeAtOrder {
+  /** Order in 1/Λ: Σ V max(0, −[g]). */
+  readonly order: Exact;
+  readonly omega: Exact;
+  /** Fewest loops at which this degree is reached, and the vertices that reach it, "2 × (r1) + …" as counts. */
+  readonly loops: number;
+  readonly vertices: readonly { readonly termRowId: string; readonly latex: string; readonly count: number }[];
+}
+
+export interface Amplitude {
+  readonly legs: Legs;
+  readonly status: AmplitudeStatus;
+  /** Name of the symmetry that forbids it. */
+  readonly forbiddenBy: string | null;
+  /** Largest degree within the caps; for an amplitude without a graph, the bound by its legs alone. */
+  readonly omega: Exact;
+  readonly verdict: "logarithmic" | "power";
+  /** Largest degree at each order in 1/Λ within the caps that has a divergent graph, ascending. */
+  readonly atOrders: readonly AmplitudeAtOrder[];
+  /** Counterterms of the largest degree. */
+  readonly counterterms: readonly Counterterm[];
+}
+
+export type TheoryVerdict =
+  | "free"
+  | "super-renormalisable"
+  | "renormalisable"
+  | "infinitely many divergent amplitudes"
+  | "new terms at every order";
+
+export interface VerdictRange {
+  /** A single dimension (from = to) or an open interval; null is no bound. */
+  readonly from: Exact | null;
+  readonly to: Exact | null;
+  readonly verdict: TheoryVerdict;
+}
+
+export interface TheoryDivergence {
+  readonly mode: "whole theory";
+  /** Null when d, D or z is a symbol: then `ranges` says where each verdict holds. */
+  readonly verdict: TheoryVerdict | null;
+  readonly ranges: readonly VerdictRange[];
+  /** The interactions with their ultraviolet coefficient dimension. */
+  readonly couplings: readonly { readonly termRowId: string; readonly latex: string; readonly coefficient: Exact }[];
+  /** Divergent ones first, by number of legs. Empty when d, D or z is a symbol. */
+  readonly amplitudes: readonly Amplitude[];
+  /** Counterterms that symmetries allow and the premises lack, without repetition, by order in 1/Λ. */
+  readonly missing: readonly Counterterm[];
+  readonly caps: { readonly loops: number; readonly legs: number; readonly order: Exact };
+}
+
+export type DivergenceValue = GraphDivergence | TheoryDivergence;
