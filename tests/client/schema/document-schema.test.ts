@@ -1,7 +1,7 @@
 // @vitest-environment node
 import { describe, expect, it } from "vitest";
 import type { Attrs, MarkType, NodeType } from "@tiptap/pm/model";
-import { kinds } from "#engine/kinds.ts";
+import { kindDescriptions } from "#engine/descriptions.ts";
 import { documentSchema } from "#schema/document-schema.ts";
 import { SCHEMA_VERSION } from "#schema/version.ts";
 
@@ -40,7 +40,7 @@ describe("the document's schema", () => {
   });
 
   it("has a node per block kind whose only content is rows, so that no merge makes it invalid", () => {
-    for (const kind of Object.values(kinds)) {
+    for (const kind of Object.values(kindDescriptions)) {
       const type = documentSchema.nodes[kind.kind];
       expect(type?.spec.content, kind.kind).toBe("row*");
       expect(type?.isAtom).toBe(true);
@@ -50,7 +50,14 @@ describe("the document's schema", () => {
   });
 
   it("gives every block, row and cell attribute a text default", () => {
-    for (const name of [...Object.keys(kinds), "row", "cell", "pin", "inlineMath", "displayMath"]) {
+    for (const name of [
+      ...Object.keys(kindDescriptions),
+      "row",
+      "cell",
+      "pin",
+      "inlineMath",
+      "displayMath",
+    ]) {
       for (const initial of Object.values(documentSchema.nodes[name]?.spec.attrs ?? {})) {
         expect(typeof initial.default, name).toBe("string");
       }

@@ -1,0 +1,114 @@
+/**
+ * One history per person and notebook, for prose and for the fields of blocks alike.
+ *
+ * Y.UndoManager.undo() goes on to older steps when the newest has no effect any more, because a colleague overwrote
+ * it. That would undo something the person did not mean. Here the older steps are kept aside during the call: the
+ * newest either has an effect or is discarded, and the person is told.
+ */
+import { defaultDeleteFilter, defaultProtectedNodes, ySyncPluginKey } from "@tiptap/y-tiptap";
+import * as Y from "yjs";
+import { FRAGMENT } from "#contract/collab.ts";
+
+/** Origin of a transaction that writes a block's field or rows: it becomes a step of its own in the history. */
+export const FIELD_ORIGIN = Object.freeze({ origin: "field" });
+/** Origin of what nobody did by hand (seeding, repairs): never a step. */
+export const UNDOABLE_BY_NOBODY = Object.freeze({ origin: "seed" });
+
+export type HistoryOutcome =
+  | "done"
+  /** There is no step left. */
+  | "nothing"
+  /** A colleague has overwritten the newest step: it is gone from the history, nothing else was touched. */
+  | "overwritten";
+
+export interface HistoryState {
+  readonly canUndo: boolean;
+  readonly canRedo: boolean;
+  /** Words for the last outcome that needs any; counted, so that the same words are said again. */
+  readonly message: { readonly text: string; readonly count: number } | null;
+}
+
+export interface NotebookHistory {
+  readonly manager: Y.UndoManager;
+  undoOnce(): HistoryOutcome;
+  redoOnce(): HistoryOutcome;
+  /** What follows is a new step, even if it comes at once. */
+  startNewStep(): void;
+  subscribe(listener: () => void): () => void;
+  state(): HistoryState;
+  destroy(): void;
+}
+
+const overwrittenWords = {
+  undo: "A colleague has changed this since, so your last change was not undone. It has left your history; earlier ones are untouched.",
+  redo: "A colleague has changed this since, so your change was not made again. It has left your history.",
+} as const;
+
+export function createHistory(doc: Y.Doc): NotebookHistory {
+  const manager = new Y.UndoManager(doc.getXmlFragment(FRAGMENT), {
+    trackedOrigins: new Set<unknown>([ySyncPluginKey, FIELD_ORIGIN]),
+    // A paragraph that a colleague has meanwhile written in stays.
+    deleteFilter: (item) => defaultDeleteFilter(item, defaultProtectedNodes),
+    captureTransaction: (transaction) => transaction.meta.get("addToHistory") !== false,
+  });
+  const listeners = new Set<() => void>();
+  let current: HistoryState = { canUndo: false, canRedo: false, message: null };
+  let lastOrigin: unknown = null;
+
+  function publish(text: string | null) {
+    const message = text === null ? null : { text, count: (current.message?.count ?? 0) + 1 };
+    current = { canUndo: manager.canUndo(), canRedo: manager.canRedo(), message };
+    for (const listener of listeners) listener();
+  }
+
+  // Typing is gathered into steps by time; a field's write is a step of its own on both sides.
+  function separateFieldWrites(transaction: Y.Transaction) {
+    const { origin } = transaction;
+    if (origin !== FIELD_ORIGIN && origin !== ySyncPluginKey) return;
+    if (origin === FIELD_ORIGIN || lastOrigin === FIELD_ORIGIN) manager.stopCapturing();
+    lastOrigin = origin;
+  }
+
+  function step(direction: "undo" | "redo"): HistoryOutcome {
+    const stackName = direction === "undo" ? "undoStack" : "redoStack";
+    const newest = manager[stackName].at(-1);
+    if (!newest) return "nothing";
+    const older = manager[stackName].slice(0, -1);
+    manager[stackName] = [newest];
+    let effective: boolean;
+    try {
+      effective = manager[direction]() !== null;
+    } finally {
+      manager[stackName] = older;
+    }
+    manager.stopCapturing();
+    publish(effective ? null : overwrittenWords[direction]);
+    return effective ? "done" : "overwritten";
+  }
+
+  const republish = () => {
+    publish(null);
+  };
+  manager.on("stack-item-added", republish);
+  manager.on("stack-cleared", republish);
+  doc.on("beforeTransaction", separateFieldWrites);
+
+  return {
+    manager,
+    undoOnce: () => step("undo"),
+    redoOnce: () => step("redo"),
+    startNewStep: () => {
+      manager.stopCapturing();
+    },
+    subscribe(listener) {
+      listeners.add(listener);
+      return () => listeners.delete(listener);
+    },
+    state: () => current,
+    destroy() {
+      doc.off("beforeTransaction", separateFieldWrites);
+      manager.destroy();
+      listeners.clear();
+    },
+  };
+}
