@@ -1,13 +1,14 @@
 import tailwind from "@tailwindcss/vite";
 import react from "@vitejs/plugin-react";
 import { defineConfig } from "vitest/config";
+import { firstPaint } from "./client/app/first-paint-plugin.ts";
 
 const root = import.meta.dirname;
 
 export default defineConfig({
   root: `${root}/client`,
   publicDir: false,
-  plugins: [react(), tailwind()],
+  plugins: [react(), tailwind(), firstPaint()],
   build: {
     outDir: `${root}/dist/client`,
     emptyOutDir: true,
