@@ -3,7 +3,7 @@ import { Fragment, useLayoutEffect, useRef, useState } from "react";
 import { katexNow, loadKatex, type LatexFault } from "./katex-loader.ts";
 import { latexFaultWords } from "./latex-fault-words.ts";
 
-export interface MathProps {
+export interface FormulaProps {
   readonly latex: string;
   /** On a line of its own, in the large style. */
   readonly display?: boolean;
@@ -11,7 +11,7 @@ export interface MathProps {
   readonly onFault?: (fault: LatexFault | null) => void;
 }
 
-export function Math({ latex, display = false, onFault }: MathProps) {
+export function Formula({ latex, display = false, onFault }: FormulaProps) {
   const element = useRef<HTMLSpanElement>(null);
   const tell = useRef(onFault);
   useLayoutEffect(() => {
@@ -72,7 +72,7 @@ export function drawMath(
 export function TextWithMath({ text }: { readonly text: string }) {
   return splitMath(text).map((part, index) => (
     // The parts of a phrase have no identity but their place.
-    <Fragment key={index}>{part.math ? <Math latex={part.text} /> : part.text}</Fragment>
+    <Fragment key={index}>{part.math ? <Formula latex={part.text} /> : part.text}</Fragment>
   ));
 }
 
