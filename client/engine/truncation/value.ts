@@ -30,6 +30,8 @@ export interface OrderEstimate {
   readonly coefficientCount: number;
   /** c̄, the largest of them in size; null when there are none. */
   readonly largest: number | null;
+  /** ν and τ² of the conjugate method; null when it has neither prior nor data. */
+  readonly posterior: { readonly nu: number; readonly tau2: number } | null;
   /** Those that exist here, in the order of the methods, then degrees; a method missing here is refused. */
   readonly bands: readonly Band[];
 }
@@ -53,9 +55,6 @@ export interface TruncationValue {
   readonly orders: readonly OrderEstimate[];
   /** The band to draw attention to, at the first degree of belief; null when that method is refused. */
   readonly highlighted: Band | null;
-  /** The last order's estimates with Q and with Q² as expansion parameter. Same data, other counting: see the working. */
-  readonly rescaled: {
-    readonly q: number;
-    readonly bands: readonly Band[];
-  } | null;
+  /** The last order's estimates if Q² were the expansion parameter of the same numbers; null when it underflows. */
+  readonly rescaled: { readonly q: number; readonly bands: readonly Band[] } | null;
 }

@@ -1,0 +1,19 @@
+/** The block kinds of this version, by name. What they are without computing is in `descriptions.ts`. */
+import { divergence } from "./divergence/kind.ts";
+import type { BlockKind, KindName } from "./kind.ts";
+import { orderPlan } from "./plan/kind.ts";
+import { premises } from "./premises/kind.ts";
+import { scaling } from "./scaling/kind.ts";
+import { truncationError } from "./truncation/kind.ts";
+
+/**
+ * Keyed by the name that documents and files use. Whoever picks a kind at run time checks its inputs against its
+ * `shape` first: that makes them what its `evaluate` takes.
+ */
+export const kinds: Readonly<Record<KindName, BlockKind>> = {
+  premises,
+  scaling,
+  divergence,
+  orderPlan,
+  truncationError,
+};

@@ -1,0 +1,67 @@
+/** Evaluates a Truncation error block: coefficients, the four estimates at every order, scalars and working. */
+import type { Evaluation, Notice, Problem } from "../evaluation.ts";
+import type { Theory } from "../premises/theory.ts";
+import { readExpansionParameter } from "./expansion-parameter.ts";
+import { judge } from "./judge.ts";
+import { presentValue } from "./present.ts";
+import { readOrders } from "./read-orders.ts";
+import { readSettings } from "./read-settings.ts";
+import { describeScalars } from "./scalars.ts";
+import { estimateSeries, type Series } from "./series.ts";
+import type { TruncationInputs } from "./shape.ts";
+import type { TruncationValue } from "./value.ts";
+import { describeWorking } from "./working.ts";
+
+/**
+ * Pure and total. Errors in the inputs leave no value; a refused method is a problem beside the value when it is
+ * the one highlighted, and a notice otherwise.
+ *
+ * @param theory gives the scales that `q` may name; null when the block stands on no premises
+ */
+export function evaluateTruncation(
+  inputs: TruncationInputs,
+  theory: Theory | null,
+): Evaluation<TruncationValue> {
+  const orders = readOrders(inputs.orders);
+  const settings = readSettings(inputs);
+  const parameter = readExpansionParameter(inputs.q, theory);
+  const problems: Problem[] = [
+    ...orders.problems,
+    ...settings.problems,
+    ...(parameter.ok ? [] : parameter.problems),
+  ];
+  const notices: Notice[] = [...orders.notices, ...settings.notices];
+  const lowest = orders.known[0];
+  if (settings.reference === null && lowest && lowest.value === 0) {
+    problems.push({ code: "reference-zero", path: ["orders", lowest.rowId, "value"], facts: { text: "0" } });
+  }
+  if (problems.length > 0 || !parameter.ok) return empty(problems, notices);
+
+  const series: Series = {
+    known: orders.known,
+    absent: orders.absent.map(({ order }) => order),
+    reference: settings.reference,
+    includeOrderZero: inputs.first === "from c_0",
+    degrees: settings.degrees,
+    nu0: settings.nu0,
+    tau0: settings.tau0,
+  };
+  const { q } = parameter;
+  const estimate = estimateSeries(series, q.value);
+  if (!estimate)
+    return empty([{ code: "coefficients-not-finite", path: ["q"], facts: { value: q.value } }], notices);
+
+  const value = presentValue(inputs, series, q, estimate);
+  const verdict = judge(inputs, series, q, value);
+  return {
+    value,
+    problems: verdict.problems,
+    notices: [...notices, ...verdict.notices],
+    scalars: describeScalars(value),
+    working: describeWorking(value, series),
+  };
+}
+
+function empty(problems: readonly Problem[], notices: readonly Notice[]): Evaluation<TruncationValue> {
+  return { value: null, problems, notices, scalars: [], working: [] };
+}
