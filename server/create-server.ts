@@ -1,0 +1,80 @@
+/** Builds one server from its configuration: used by main.ts, by tests and by the benchmarks. */
+import { createServer as createHttpServer, type Server } from "node:http";
+import type { AddressInfo } from "node:net";
+import type { DestinationStream } from "pino";
+import type { Configuration } from "./configuration.ts";
+import { openDatabase } from "./data/database.ts";
+import { createApp } from "./http/app.ts";
+import { openLog } from "./http/request-log.ts";
+import { openSessions } from "./http/sessions.ts";
+import { listenForAccessChanges } from "./policies/access-changes.ts";
+import type { Services } from "./services.ts";
+
+export interface RunningServer {
+  readonly httpServer: Server;
+  /** Where people reach it, without a closing slash. */
+  readonly address: string;
+  readonly services: Services;
+  /** Lets requests end, closes sockets, writes what is queued, then lets go of the database. */
+  stop(): Promise<void>;
+}
+
+/** How long a request may take to end after the server was asked to stop. */
+const PATIENCE_MS = 5_000;
+
+function listen(httpServer: Server, { port, host }: Configuration): Promise<number> {
+  return new Promise((resolve, reject) => {
+    httpServer.once("error", reject);
+    httpServer.listen(port, host, () => {
+      httpServer.off("error", reject);
+      // A server that listens on a port has an address of this kind, not a pipe's name.
+      resolve((httpServer.address() as AddressInfo).port);
+    });
+  });
+}
+
+function closeHttp(httpServer: Server): Promise<void> {
+  return new Promise((resolve) => {
+    const force = setTimeout(() => httpServer.closeAllConnections(), PATIENCE_MS);
+    httpServer.close(() => {
+      clearTimeout(force);
+      resolve();
+    });
+    httpServer.closeIdleConnections();
+  });
+}
+
+/** The database must have been migrated. `logDestination` is for tests that read the log. */
+export async function createServer(
+  configuration: Configuration,
+  { logDestination }: { readonly logDestination?: DestinationStream } = {},
+): Promise<RunningServer> {
+  const log = openLog(configuration, logDestination);
+  const accessChanges = await listenForAccessChanges(configuration.databaseUrl, log);
+  const httpServer = createHttpServer();
+  httpServer.on("clientError", (error, socket) => {
+    log.debug({ err: error }, "a client spoke no HTTP");
+    if (socket.writable) socket.end("HTTP/1.1 400 Bad Request\r\nConnection: close\r\n\r\n");
+  });
+  let port: number;
+  try {
+    port = await listen(httpServer, configuration);
+  } catch (error) {
+    await accessChanges.stop();
+    throw error;
+  }
+  // From here to the handlers nothing waits, so no request comes in between.
+  const publicUrl = configuration.publicUrl ?? `http://${configuration.host}:${port}`;
+  const database = openDatabase(configuration.databaseUrl);
+  const sessions = openSessions(configuration, publicUrl, log);
+  const services: Services = { configuration, publicUrl, database, log, sessions, accessChanges };
+  httpServer.on("request", createApp(services));
+
+  const stop = async () => {
+    await closeHttp(httpServer);
+    await accessChanges.stop();
+    await sessions.stop();
+    await database.destroy();
+  };
+  return { httpServer, address: publicUrl, services, stop };
+}

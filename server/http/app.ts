@@ -1,0 +1,39 @@
+/** The order in which a request passes. */
+import express, { type Express } from "express";
+import type { Services } from "../services.ts";
+import { answerFailure, answerUnknownAddress } from "./failures.ts";
+import { healthRoutes } from "./health.ts";
+import { servePages } from "./pages.ts";
+import { createRateLimits } from "./rate-limits.ts";
+import { logRequests } from "./request-log.ts";
+import { meRoutes } from "./routes/me.ts";
+import { signInRoutes } from "./routes/sign-in.ts";
+import { requireSameSite } from "./same-site.ts";
+import { hideReferrer, securityHeaders } from "./security-headers.ts";
+
+export function createApp(services: Services): Express {
+  const { configuration, publicUrl, log, sessions } = services;
+  const limits = createRateLimits(configuration.rateLimitFactor);
+  const app = express();
+  app.set("trust proxy", configuration.trustedProxies);
+  app.set("query parser", "simple");
+  app.disable("x-powered-by");
+  app.use(securityHeaders(publicUrl));
+  app.use(healthRoutes(services));
+  app.use(logRequests(log));
+  app.use(["/api", "/auth"], (_request, response, next) => {
+    // What one person may see must not be kept for the next.
+    response.setHeader("Cache-Control", "no-store");
+    next();
+  });
+  app.use("/api/referee", hideReferrer);
+  app.use(["/api", "/auth"], sessions.middleware, requireSameSite(publicUrl));
+  app.use("/api", express.json({ limit: "64kb" }));
+  app.use(signInRoutes(services, limits));
+  app.use(meRoutes(services));
+  app.use(["/api", "/auth", "/collab"], answerUnknownAddress);
+  app.use(servePages(configuration.clientFolder, publicUrl));
+  app.use(answerUnknownAddress);
+  app.use(answerFailure);
+  return app;
+}

@@ -1,0 +1,71 @@
+/** Asks the sign-in service who someone is, over passport-github2, and which address of theirs is verified. */
+import { Strategy, type StrategyOptions } from "passport-github2";
+import * as z from "zod";
+import type { Account } from "../commands/sign-in-person.ts";
+import type { GitHubEndpoints } from "../configuration.ts";
+
+const PATIENCE_MS = 10_000;
+const USER_AGENT = "Subleading";
+
+const emailsSchema = z.array(
+  z.object({ email: z.string().max(254), primary: z.boolean(), verified: z.boolean() }),
+);
+/** What passport-github2 makes of /user. */
+const profileSchema = z.object({
+  id: z.string().min(1),
+  username: z.string().min(1).max(100),
+  displayName: z.string().nullish(),
+});
+
+type EmailAddress = Pick<Account, "email" | "emailVerified">;
+
+/** passport-github2 drops the `verified` mark, so the addresses are asked for here. */
+async function primaryEmail(emailsUrl: string, accessToken: string): Promise<EmailAddress> {
+  const response = await fetch(emailsUrl, {
+    headers: { authorization: `Bearer ${accessToken}`, accept: "application/json", "user-agent": USER_AGENT },
+    signal: AbortSignal.timeout(PATIENCE_MS),
+  });
+  // The person may withhold the address; they can sign in all the same.
+  if (response.status === 403 || response.status === 404) return { email: null, emailVerified: false };
+  if (!response.ok)
+    throw new Error(`The sign-in service answered ${response.status} when asked for addresses.`);
+  const primary = emailsSchema.parse(await response.json()).find((entry) => entry.primary);
+  return { email: primary?.email ?? null, emailVerified: primary?.verified ?? false };
+}
+
+async function readAccount(
+  endpoints: GitHubEndpoints,
+  accessToken: string,
+  profile: unknown,
+): Promise<Account> {
+  const { id, username, displayName } = profileSchema.parse(profile);
+  const name = displayName?.trim().slice(0, 200);
+  return {
+    provider: "github",
+    subject: id,
+    login: username,
+    name: name === undefined || name === "" ? username : name,
+    ...(await primaryEmail(endpoints.emailsUrl, accessToken)),
+  };
+}
+
+export function githubStrategy(endpoints: GitHubEndpoints, callbackUrl: string): Strategy {
+  const options = {
+    clientID: endpoints.clientId,
+    clientSecret: endpoints.clientSecret,
+    callbackURL: callbackUrl,
+    authorizationURL: endpoints.authorizeUrl,
+    tokenURL: endpoints.tokenUrl,
+    userProfileURL: endpoints.userUrl,
+    userAgent: USER_AGENT,
+    // true: a random state is kept in the session and compared on return. The types still ask for a fixed text.
+    state: true as unknown as string,
+  } satisfies StrategyOptions;
+  type Done = (error: unknown, account?: Account) => void;
+  return new Strategy(options, (accessToken: string, _refreshToken: string, profile: unknown, done: Done) => {
+    readAccount(endpoints, accessToken, profile).then(
+      (account) => done(null, account),
+      (error: unknown) => done(error),
+    );
+  });
+}

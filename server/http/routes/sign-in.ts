@@ -1,0 +1,109 @@
+/** GET /auth/github, its callback, and POST /auth/sign-out. */
+import { Router, type Request, type Response } from "express";
+import { Passport } from "passport";
+import { signInPerson, type Account } from "../../commands/sign-in-person.ts";
+import { recordEvent } from "../../data/events.ts";
+import { announceAccessChange } from "../../policies/access-changes.ts";
+import type { Services } from "../../services.ts";
+import { githubStrategy } from "../github-account.ts";
+import { safeNextPath } from "../next-path.ts";
+import type { RateLimits } from "../rate-limits.ts";
+import { newCsrfToken } from "../same-site.ts";
+import { digestOfSession } from "../sessions.ts";
+
+const CALLBACK = "/auth/github/callback";
+/** The page says why one is not signed in. */
+type Failure = "refused" | "failed";
+
+function regenerate(request: Request): Promise<void> {
+  return new Promise((resolve, reject) =>
+    request.session.regenerate((error?: Error) =>
+      error === undefined || error === null ? resolve() : reject(error),
+    ),
+  );
+}
+function save(request: Request): Promise<void> {
+  return new Promise((resolve, reject) =>
+    request.session.save((error?: Error) =>
+      error === undefined || error === null ? resolve() : reject(error),
+    ),
+  );
+}
+function destroy(request: Request): Promise<void> {
+  return new Promise((resolve, reject) =>
+    request.session.destroy((error?: Error) =>
+      error === undefined || error === null ? resolve() : reject(error),
+    ),
+  );
+}
+
+function explainFailure(response: Response, failure: Failure, next: string): void {
+  const query = new URLSearchParams({ "sign-in": failure, ...(next === "/" ? {} : { next }) });
+  response.redirect(303, `/?${query.toString()}`);
+}
+
+/** Sockets opened under the session that ends now are closed by whoever holds them. */
+async function announceEndOfSession(services: Services, request: Request): Promise<void> {
+  if (request.session.personId === undefined) return;
+  await announceAccessChange(services.database, {
+    about: "session",
+    sessionId: digestOfSession(request.sessionID),
+  });
+}
+
+async function completeSignIn(services: Services, request: Request, account: Account): Promise<string> {
+  const next = safeNextPath(request.session.next);
+  const personId = await signInPerson(services.database, account);
+  await announceEndOfSession(services, request);
+  // A new session name: one that was planted in the browser before must not become a signed-in one.
+  await regenerate(request);
+  request.session.personId = personId;
+  request.session.csrfToken = newCsrfToken();
+  await save(request);
+  return next;
+}
+
+export function signInRoutes(services: Services, limits: RateLimits): Router {
+  const passport = new Passport();
+  passport.use("github", githubStrategy(services.configuration.github, `${services.publicUrl}${CALLBACK}`));
+  // The strategy would fetch the addresses itself if it knew the scope, and forget which are verified.
+  const toConsent = { session: false, scope: ["user:email"] };
+  const router = Router();
+
+  router.get("/auth/github", limits.signIn, (request, response, next) => {
+    request.session.next = safeNextPath(request.query["next"]);
+    passport.authenticate("github", toConsent)(request, response, next);
+  });
+
+  router.get(CALLBACK, limits.signIn, (request, response, next) => {
+    const finish = async (error: unknown, account: Account | false | null | undefined) => {
+      const goal = safeNextPath(request.session.next);
+      if (error !== null && error !== undefined) {
+        request.log.warn({ err: error }, "signing in failed");
+        return explainFailure(response, "failed", goal);
+      }
+      if (!account)
+        return explainFailure(
+          response,
+          request.query["error"] === "access_denied" ? "refused" : "failed",
+          goal,
+        );
+      response.redirect(303, await completeSignIn(services, request, account));
+    };
+    const done = (error: unknown, account: Account | false | null | undefined) =>
+      void finish(error, account).catch(next);
+    passport.authenticate("github", { session: false }, done)(request, response, next);
+  });
+
+  router.post("/auth/sign-out", async (request, response) => {
+    const { personId } = request.session;
+    if (personId !== undefined) {
+      await announceEndOfSession(services, request);
+      await recordEvent(services.database, { personId, what: "signed-out" });
+    }
+    await destroy(request);
+    response.clearCookie(services.sessions.cookieName, { path: "/" });
+    response.status(204).end();
+  });
+  return router;
+}

@@ -1,0 +1,43 @@
+/** The server as a process: reads the environment, migrates, serves until it is told to stop. */
+import { readConfiguration } from "./configuration.ts";
+import { createServer, type RunningServer } from "./create-server.ts";
+import { openDatabase } from "./data/database.ts";
+import { migrateToLatest } from "./data/migrate.ts";
+
+async function start(): Promise<RunningServer | null> {
+  const outcome = readConfiguration(process.env);
+  if (!outcome.ok) {
+    for (const { words } of outcome.problems) process.stderr.write(`${words}\n`);
+    return null;
+  }
+  const database = openDatabase(outcome.configuration.databaseUrl, {
+    most: 2,
+    name: "subleading migrations",
+  });
+  await migrateToLatest(database).finally(() => database.destroy());
+  return createServer(outcome.configuration);
+}
+
+const server = await start();
+if (server === null) {
+  process.exitCode = 1;
+} else {
+  server.services.log.info({ address: server.address }, "serving");
+  // A parent that started us learns that we are ready, and takes us along when it goes.
+  process.send?.({ ready: { address: server.address } });
+  let stopping = false;
+  const stop = (why: string) => {
+    if (stopping) return;
+    stopping = true;
+    server.services.log.info({ why }, "stopping");
+    server.stop().then(
+      () => process.exit(0),
+      (error: unknown) => {
+        server.services.log.fatal({ err: error }, "stopping failed");
+        process.exit(1);
+      },
+    );
+  };
+  for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"] as const) process.on(signal, () => stop(signal));
+  process.on("disconnect", () => stop("the parent process ended"));
+}
