@@ -1,0 +1,70 @@
+/** Blocks, rows and cells as they sit in the shared Y document. See schema/block-structure.ts for the shape. */
+import * as Y from "yjs";
+import { kindNames, type KindName } from "#engine/kind.ts";
+import { cellNode, rowNode } from "#schema/block-structure.ts";
+
+const names: ReadonlySet<string> = new Set(kindNames);
+
+export function isKindName(name: string): name is KindName {
+  return names.has(name);
+}
+
+export function isBlockElement(node: unknown): node is Y.XmlElement {
+  return node instanceof Y.XmlElement && isKindName(node.nodeName);
+}
+
+/** An attribute as text; what is missing or not text gives the fallback. */
+export function attributeOf(element: Y.XmlElement, name: string, fallback = ""): string {
+  // y-tiptap stores attributes as they are; Yjs types them all as string.
+  const value: unknown = element.getAttribute(name);
+  return typeof value === "string" ? value : fallback;
+}
+
+/** Every block in document order, also those inside quotations, lists and tables. */
+export function blockElements(parent: Y.XmlFragment): Y.XmlElement[] {
+  return parent.toArray().flatMap((child) => {
+    if (!(child instanceof Y.XmlElement)) return [];
+    return isBlockElement(child) ? [child] : blockElements(child);
+  });
+}
+
+export function rowElements(block: Y.XmlElement): Y.XmlElement[] {
+  return block
+    .toArray()
+    .filter((child): child is Y.XmlElement => child instanceof Y.XmlElement && child.nodeName === rowNode);
+}
+
+/** The cell that counts for a column: the last of them, should a merge have left two. */
+export function cellElement(row: Y.XmlElement, column: string): Y.XmlElement | null {
+  return (
+    row
+      .toArray()
+      .filter(
+        (child): child is Y.XmlElement =>
+          child instanceof Y.XmlElement &&
+          child.nodeName === cellNode &&
+          attributeOf(child, "field") === column,
+      )
+      .at(-1) ?? null
+  );
+}
+
+/** Rows of one table in reading order: by key as text, then as they sit in the document. */
+export function orderedRows(block: Y.XmlElement, table: string): Y.XmlElement[] {
+  return rowElements(block)
+    .filter((row) => attributeOf(row, "table") === table)
+    .map((row) => ({ row, order: attributeOf(row, "order") }))
+    .sort((a, b) => (a.order < b.order ? -1 : a.order > b.order ? 1 : 0))
+    .map(({ row }) => row);
+}
+
+/** The block that an element or text lies in, or is. */
+export function enclosingBlock(type: Y.AbstractType<unknown>): Y.XmlElement | null {
+  let current: Y.AbstractType<unknown> | null = type;
+  while (current !== null) {
+    if (isBlockElement(current)) return current;
+    // Yjs types the parent of a type loosely; it is an AbstractType or null.
+    current = current.parent as Y.AbstractType<unknown> | null;
+  }
+  return null;
+}
