@@ -33,9 +33,13 @@ const raised = new Map(
   [..."-0123456789"].map((character, index) => [character, [..."⁻⁰¹²³⁴⁵⁶⁷⁸⁹"][index] ?? ""]),
 );
 
+/** @example superscript("-4") // "⁻⁴" */
+export function superscript(integer: string): string {
+  return [...integer].map((character) => raised.get(character) ?? character).join("");
+}
+
 function powerOfTen(exponent: number, markup: Markup): string {
-  if (markup === "latex") return ` \\times 10^{${exponent}}`;
-  return ` × 10${[...String(exponent)].map((character) => raised.get(character) ?? "").join("")}`;
+  return markup === "latex" ? ` \\times 10^{${exponent}}` : ` × 10${superscript(String(exponent))}`;
 }
 
 /** The sign people see: a true minus in Unicode. */
