@@ -1,0 +1,191 @@
+/** The editor of one formula: its source, drawn as one types; what is wrong, in words. */
+import type { Editor } from "@tiptap/core";
+import { Popover } from "radix-ui";
+import { useId, useRef, useState, useSyncExternalStore, type KeyboardEvent } from "react";
+import type { LatexFault } from "../../ui/katex-loader.ts";
+import { latexFaultWords } from "../../ui/latex-fault-words.ts";
+import { Formula } from "../../ui/math.tsx";
+import type { LatexSymbol } from "./latex-symbols.ts";
+import type { MathEditing, OpenFormula } from "./math-editing.ts";
+import { writeFormula } from "./mathematics.ts";
+import { SymbolList, useSymbolCompletion } from "./symbol-completion.tsx";
+
+interface MathematicsEditorProps {
+  readonly editor: Editor;
+  readonly editing: MathEditing;
+  /** Symbols of the notebook's premises, offered before the others. */
+  readonly ownSymbols: () => readonly LatexSymbol[];
+}
+
+export function MathematicsEditor({ editor, editing, ownSymbols }: MathematicsEditorProps) {
+  const formula = useSyncExternalStore(editing.subscribe, editing.current);
+  if (!formula) return null;
+  // One editor per opening: its draft starts from the formula that was opened.
+  return <OpenEditor key={keyOf(formula)} {...{ editor, editing, formula, ownSymbols }} />;
+}
+
+const keys = new WeakMap<OpenFormula, number>();
+let lastKey = 0;
+function keyOf(formula: OpenFormula): number {
+  const known = keys.get(formula);
+  if (known !== undefined) return known;
+  lastKey += 1;
+  keys.set(formula, lastKey);
+  return lastKey;
+}
+
+function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenFormula }) {
+  const { editor, editing, formula, ownSymbols } = props;
+  const [before] = useState(() => formula.latex());
+  const [source, setSource] = useState(before);
+  const [label, setLabel] = useState(() => formula.label());
+  const [fault, setFault] = useState<LatexFault | null>(null);
+  const [replaced, setReplaced] = useState(false);
+  const field = useRef<HTMLTextAreaElement>(null);
+  const [ownNow] = useState(ownSymbols);
+  const completion = useSymbolCompletion({ source, setSource, field, ownSymbols: ownNow });
+  const names = { source: useId(), fault: useId(), label: useId() };
+
+  function leave(latex: string | null, side: "before" | "after" = "after") {
+    const position = formula.position();
+    editing.close();
+    if (position === null) return;
+    if (latex !== null)
+      writeFormula(editor, position, { latex, ...(formula.display ? { label } : {}) }, side);
+    else if (formula.isNew || before.trim() === "") writeFormula(editor, position, { latex: "" });
+    editor.commands.focus();
+  }
+
+  function keep(side: "before" | "after" = "after") {
+    // Someone else's newer source is not overwritten without a word.
+    if (formula.latex() !== before && !replaced && source !== formula.latex()) {
+      setReplaced(true);
+      return;
+    }
+    leave(trimDollars(source), side);
+  }
+
+  function onKeyDown(event: KeyboardEvent<HTMLTextAreaElement>) {
+    if (completion.onKeyDown(event)) return;
+    const { selectionStart, selectionEnd, value } = event.currentTarget;
+    const collapsed = selectionStart === selectionEnd;
+    if (event.key === "Enter" && !event.shiftKey) {
+      event.preventDefault();
+      keep();
+    } else if (event.key === "ArrowRight" && collapsed && selectionEnd === value.length) {
+      event.preventDefault();
+      keep("after");
+    } else if (event.key === "ArrowLeft" && collapsed && selectionStart === 0) {
+      event.preventDefault();
+      keep("before");
+    }
+  }
+
+  const words = fault ? latexFaultWords(fault, source) : null;
+  return (
+    <Popover.Root
+      open
+      onOpenChange={(open) => {
+        if (!open) leave(null);
+      }}
+    >
+      <Popover.Anchor virtualRef={{ current: formula.element }} />
+      <Popover.Portal>
+        <Popover.Content
+          className="formula-editor"
+          aria-label={formula.display ? "Displayed equation" : "Formula"}
+          side="bottom"
+          align="start"
+          sideOffset={8}
+          collisionPadding={12}
+          onOpenAutoFocus={(event) => {
+            event.preventDefault();
+            field.current?.focus();
+            field.current?.setSelectionRange(source.length, source.length);
+          }}
+          onCloseAutoFocus={(event) => {
+            event.preventDefault();
+          }}
+          onInteractOutside={(event) => {
+            event.preventDefault();
+            keep();
+          }}
+          onEscapeKeyDown={(event) => {
+            if (!completion.close()) return;
+            event.preventDefault();
+          }}
+        >
+          <div className="formula-preview">
+            {source.trim() === "" ? (
+              <span className="formula-hint">the formula appears here as you type</span>
+            ) : (
+              <Formula latex={trimDollars(source)} display={formula.display} onFault={setFault} />
+            )}
+          </div>
+          <label className="formula-label" htmlFor={names.source}>
+            LaTeX
+          </label>
+          <textarea
+            id={names.source}
+            ref={field}
+            className="formula-source"
+            value={source}
+            rows={formula.display ? 3 : 1}
+            spellCheck={false}
+            autoCapitalize="off"
+            autoComplete="off"
+            aria-invalid={words !== null}
+            aria-describedby={names.fault}
+            {...completion.fieldProps}
+            onChange={(event) => {
+              setSource(event.target.value);
+              completion.look(event.target.value, event.target.selectionStart);
+            }}
+            onSelect={(event) => {
+              completion.look(event.currentTarget.value, event.currentTarget.selectionStart);
+            }}
+            onKeyDown={onKeyDown}
+          />
+          <SymbolList completion={completion} />
+          <p id={names.fault} className="formula-fault" role="status">
+            {words && source.trim() !== "" ? [words.sentence, words.place].filter(Boolean).join(" — ") : ""}
+          </p>
+          {replaced && (
+            <p className="formula-fault" role="alert">
+              A colleague has changed this formula to <code>{formula.latex()}</code> meanwhile. Enter again
+              replaces it with yours; Escape keeps theirs.
+            </p>
+          )}
+          {formula.display && (
+            <div className="formula-name">
+              <label htmlFor={names.label}>name for references</label>
+              <input
+                id={names.label}
+                value={label}
+                spellCheck={false}
+                onChange={(event) => {
+                  setLabel(event.target.value);
+                }}
+                onKeyDown={(event) => {
+                  if (event.key === "Enter") keep();
+                }}
+              />
+            </div>
+          )}
+          <p className="formula-keys">
+            <kbd>Enter</kbd> keeps, <kbd>Escape</kbd> gives up, <kbd>\</kbd> completes symbols
+          </p>
+        </Popover.Content>
+      </Popover.Portal>
+    </Popover.Root>
+  );
+}
+
+/** Whoever types the closing dollars out of habit means them as the end. */
+function trimDollars(source: string): string {
+  return source
+    .trim()
+    .replace(/(?<!\\)\${1,2}$/, "")
+    .replace(/^\${1,2}/, "")
+    .trim();
+}
