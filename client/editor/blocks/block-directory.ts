@@ -4,27 +4,17 @@
  */
 import * as Y from "yjs";
 import { kindDescriptions } from "#engine/descriptions.ts";
-import type { KindName } from "#engine/kind.ts";
-import { attributeOf, blockElements, enclosingBlock, isKindName, orderedRows } from "./block-elements.ts";
-
-export interface RowInputs {
-  readonly id: string;
-  readonly [column: string]: string;
-}
-
-export interface BlockInputs {
-  readonly blockId: string;
-  readonly kind: KindName;
-  /** As chosen; "" leaves it to the only Premises there is. */
-  readonly standsOn: string;
-  readonly fields: Readonly<Record<string, string>>;
-  readonly tables: Readonly<Record<string, readonly RowInputs[]>>;
-}
+import type { Problem } from "#engine/evaluation.ts";
+import type { BlockInstance } from "#engine/notebook/block-instance.ts";
+import { freeId } from "#engine/notebook/free-id.ts";
+import { readInputs } from "#engine/notebook/read-inputs.ts";
+import { cellNode } from "#schema/block-structure.ts";
+import { attributeOf, blockElements, enclosingBlock, isKindName, rowElements } from "./block-elements.ts";
 
 export interface BlockDirectory {
   /** In document order. The array and each entry stay the same object until they change. */
-  blocks(): readonly BlockInputs[];
-  block(blockId: string): BlockInputs | null;
+  blocks(): readonly BlockInstance[];
+  block(blockId: string): BlockInstance | null;
   /** The element to write to; null once the block is gone. */
   element(blockId: string): Y.XmlElement | null;
   idOf(element: Y.XmlElement): string | null;
@@ -35,13 +25,13 @@ export interface BlockDirectory {
 export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
   let elements = new Map<string, Y.XmlElement>();
   let ids = new Map<Y.XmlElement, string>();
-  let inputs = new Map<string, BlockInputs>();
-  let list: readonly BlockInputs[] = [];
+  let inputs = new Map<string, BlockInstance>();
+  let list: readonly BlockInstance[] = [];
   const listeners = new Set<() => void>();
 
   function readAll(changed: ReadonlySet<Y.XmlElement>) {
     const found = identify(blockElements(fragment));
-    const next = new Map<string, BlockInputs>();
+    const next = new Map<string, BlockInstance>();
     for (const [blockId, element] of found) {
       const known = elements.get(blockId) === element && !changed.has(element) ? inputs.get(blockId) : undefined;
       next.set(blockId, known ?? readBlock(blockId, element));
@@ -97,37 +87,43 @@ function holdsBlocks(event: Y.YEvent<Y.AbstractType<unknown>>): boolean {
   });
 }
 
-/** First of an id in document order keeps it; a second one, left by two people moving the block at once, is read apart. */
+/** The same names as engine/notebook/read-document.ts gives them: a second block of one id is read apart. */
 function identify(found: readonly Y.XmlElement[]): Map<string, Y.XmlElement> {
-  const byId = new Map<string, Y.XmlElement>();
-  for (const element of found) {
-    const own = attributeOf(element, "blockId") || "unnamed";
-    let blockId = own;
-    for (let copy = 2; byId.has(blockId); copy++) blockId = `${own}~${copy}`;
-    byId.set(blockId, element);
-  }
-  return byId;
+  const taken = new Set<string>();
+  return new Map(found.map((element) => [freeId(attributeOf(element, "blockId"), "unnamed", taken), element]));
 }
 
-function readBlock(blockId: string, element: Y.XmlElement): BlockInputs {
+function readBlock(id: string, element: Y.XmlElement): BlockInstance {
   const kind = element.nodeName;
   if (!isKindName(kind)) throw new Error(`${kind} is not a block kind`);
   const { shape } = kindDescriptions[kind];
-  const fields: Record<string, string> = {};
-  for (const [name, spec] of Object.entries(shape.fields)) fields[name] = attributeOf(element, name, spec.initial);
-  const tables: Record<string, readonly RowInputs[]> = {};
-  for (const [table, columns] of Object.entries(shape.tables)) {
-    tables[table] = orderedRows(element, table).map((row) => {
-      const values: Record<string, string> = {};
-      for (const [column, spec] of Object.entries(columns)) values[column] = spec.initial;
-      for (const cell of row.toArray()) {
-        if (!(cell instanceof Y.XmlElement)) continue;
-        const column = attributeOf(cell, "field");
-        const spec = columns[column];
-        if (spec) values[column] = attributeOf(cell, "value", spec.initial);
-      }
-      return { ...values, id: attributeOf(row, "rowId") };
-    });
-  }
-  return { blockId, kind, standsOn: attributeOf(element, "standsOn"), fields, tables };
+  const fields = new Map(Object.keys(shape.fields).flatMap((name) => textAt(element, name)));
+  const rows = rowElements(element).map((row) => ({
+    table: attributeOf(row, "table"),
+    id: attributeOf(row, "rowId"),
+    order: attributeOf(row, "order"),
+    cells: new Map(
+      row.toArray().flatMap((cell) => {
+        if (!(cell instanceof Y.XmlElement) || cell.nodeName !== cellNode) return [];
+        return textAt(cell, "value").map(([, value]) => [attributeOf(cell, "field"), value] as const);
+      }),
+    ),
+  }));
+  const problems: Problem[] = [];
+  const inputs = readInputs(shape, fields, rows, problems);
+  const title = inputs["title"] ?? inputs["name"];
+  const standsOn = attributeOf(element, "standsOn");
+  return {
+    id,
+    kind,
+    standsOn: standsOn === "" ? null : standsOn,
+    inputs,
+    title: typeof title === "string" ? title : "",
+    problems,
+  };
+}
+
+/** A named text, or nothing when the element does not have it. */
+function textAt(element: Y.XmlElement, name: string): (readonly [string, string])[] {
+  return element.getAttribute(name) === undefined ? [] : [[name, attributeOf(element, name)]];
 }

@@ -1,6 +1,7 @@
 /** Blocks, rows and cells as they sit in the shared Y document. See schema/block-structure.ts for the shape. */
 import * as Y from "yjs";
 import { kindNames, type KindName } from "#engine/kind.ts";
+import { freeId } from "#engine/notebook/free-id.ts";
 import { cellNode, rowNode } from "#schema/block-structure.ts";
 
 const names: ReadonlySet<string> = new Set(kindNames);
@@ -49,13 +50,28 @@ export function cellElement(row: Y.XmlElement, column: string): Y.XmlElement | n
   );
 }
 
-/** Rows of one table in reading order: by key as text, then as they sit in the document. */
-export function orderedRows(block: Y.XmlElement, table: string): Y.XmlElement[] {
+export interface RowElement {
+  /** As read: of two rows with one id the first in the document keeps it. */
+  readonly id: string;
+  readonly order: string;
+  readonly element: Y.XmlElement;
+}
+
+/** Rows of one table in reading order, under the ids that engine/notebook/read-inputs.ts reads them by. */
+export function orderedRows(block: Y.XmlElement, table: string): RowElement[] {
+  const taken = new Set<string>();
   return rowElements(block)
-    .filter((row) => attributeOf(row, "table") === table)
-    .map((row) => ({ row, order: attributeOf(row, "order") }))
-    .sort((a, b) => (a.order < b.order ? -1 : a.order > b.order ? 1 : 0))
-    .map(({ row }) => row);
+    .filter((element) => attributeOf(element, "table") === table)
+    .map((element) => ({
+      id: freeId(attributeOf(element, "rowId"), "row", taken),
+      order: attributeOf(element, "order"),
+      element,
+    }))
+    .sort((a, b) => compareText(a.order, b.order) || compareText(a.id, b.id));
+}
+
+function compareText(a: string, b: string): number {
+  return a < b ? -1 : a > b ? 1 : 0;
 }
 
 /** The block that an element or text lies in, or is. */

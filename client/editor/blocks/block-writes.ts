@@ -6,7 +6,7 @@ import * as Y from "yjs";
 import type { BlockDescription } from "#engine/kind.ts";
 import { cellNode, rowNode } from "#schema/block-structure.ts";
 import { FIELD_ORIGIN } from "../history.ts";
-import { attributeOf, cellElement, orderedRows, rowElements } from "./block-elements.ts";
+import { cellElement, orderedRows, type RowElement } from "./block-elements.ts";
 import { evenOrderKeys, orderKeyBetween } from "./order-key.ts";
 
 export interface NewRow {
@@ -25,8 +25,8 @@ export function writeField(block: Y.XmlElement, field: string, value: string): v
   if (block.getAttribute(field) !== value) block.setAttribute(field, value);
 }
 
-export function writeCell(block: Y.XmlElement, rowId: string, column: string, value: string): void {
-  const row = rowById(block, rowId);
+export function writeCell(block: Y.XmlElement, table: string, rowId: string, column: string, value: string): void {
+  const row = orderedRows(block, table).find(({ id }) => id === rowId)?.element;
   if (!row) return;
   const cell = cellElement(row, column);
   if (!cell) row.push([newCell(column, value)]);
@@ -42,39 +42,33 @@ export function insertRows(
   afterRowId: string | null,
 ): void {
   const present = orderedRows(block, table);
-  const found = afterRowId === null ? -1 : present.findIndex((row) => attributeOf(row, "rowId") === afterRowId);
+  const found = afterRowId === null ? -1 : present.findIndex(({ id }) => id === afterRowId);
   const at = found === -1 ? present.length : found + 1;
   const keys = keysFor(present, at, rows.length);
   block.push(rows.map((row, index) => newRow(description, table, row, keys[index] ?? "")));
 }
 
-export function removeRow(block: Y.XmlElement, rowId: string): void {
-  const at = block
-    .toArray()
-    .findIndex((child) => child instanceof Y.XmlElement && child.nodeName === rowNode && attributeOf(child, "rowId") === rowId);
-  if (at !== -1) block.delete(at, 1);
+export function removeRow(block: Y.XmlElement, table: string, rowId: string): void {
+  const row = orderedRows(block, table).find(({ id }) => id === rowId);
+  if (row) block.delete(block.toArray().indexOf(row.element), 1);
 }
 
 /** Puts a row before another of its table, or last with null. */
 export function moveRow(block: Y.XmlElement, table: string, rowId: string, beforeRowId: string | null): void {
-  const row = rowById(block, rowId);
+  const rows = orderedRows(block, table);
+  const row = rows.find(({ id }) => id === rowId);
   if (!row || rowId === beforeRowId) return;
-  const others = orderedRows(block, table).filter((other) => other !== row);
-  const found = beforeRowId === null ? -1 : others.findIndex((other) => attributeOf(other, "rowId") === beforeRowId);
+  const others = rows.filter((other) => other !== row);
+  const found = beforeRowId === null ? -1 : others.findIndex(({ id }) => id === beforeRowId);
   const [key] = keysFor(others, found === -1 ? others.length : found, 1);
-  if (key !== undefined) row.setAttribute("order", key);
-}
-
-function rowById(block: Y.XmlElement, rowId: string): Y.XmlElement | null {
-  return rowElements(block).find((row) => attributeOf(row, "rowId") === rowId) ?? null;
+  if (key !== undefined) row.element.setAttribute("order", key);
 }
 
 /** Keys for new rows at a place among others; gives the others new keys when there is no room between them. */
-function keysFor(rows: readonly Y.XmlElement[], at: number, count: number): string[] {
+function keysFor(rows: readonly RowElement[], at: number, count: number): string[] {
   const keys: string[] = [];
-  const [previous, next] = [rows[at - 1], rows[at]];
-  const after = next ? attributeOf(next, "order") : null;
-  let before = previous ? attributeOf(previous, "order") : null;
+  const after = rows[at]?.order ?? null;
+  let before = rows[at - 1]?.order ?? null;
   for (let made = 0; made < count; made++) {
     const key = orderKeyBetween(before, after);
     if (key === null) return rewriteKeys(rows, at, count);
@@ -84,10 +78,10 @@ function keysFor(rows: readonly Y.XmlElement[], at: number, count: number): stri
   return keys;
 }
 
-function rewriteKeys(rows: readonly Y.XmlElement[], at: number, count: number): string[] {
+function rewriteKeys(rows: readonly RowElement[], at: number, count: number): string[] {
   const all = evenOrderKeys(rows.length + count);
   for (const [index, row] of rows.entries()) {
-    row.setAttribute("order", all[index < at ? index : index + count] ?? "");
+    row.element.setAttribute("order", all[index < at ? index : index + count] ?? "");
   }
   return all.slice(at, at + count);
 }

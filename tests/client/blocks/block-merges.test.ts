@@ -2,6 +2,7 @@ import type { JSONContent } from "@tiptap/core";
 import { NodeSelection } from "@tiptap/pm/state";
 import { afterEach, describe, expect, it } from "vitest";
 import { kindDescriptions } from "#engine/descriptions.ts";
+import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
 import { changeInputs, insertRows, moveRow, removeRow, writeCell, writeField } from "../../../client/editor/blocks/block-writes.ts";
 import { leave, meet, notebookState, paragraph, person, row, type Person } from "./two-editors.ts";
 
@@ -42,6 +43,11 @@ function element(who: Person, blockId = target) {
   const found = who.directory.element(blockId);
   if (!found) throw new Error(`no element ${blockId}`);
   return found;
+}
+
+function scales(block: BlockInstance | null): readonly BlockRow[] {
+  const rows = block?.inputs["scales"];
+  return typeof rows === "object" ? rows : [];
 }
 
 function typeProse(who: Person, text: string): void {
@@ -95,7 +101,7 @@ const structural: Record<string, { act(who: Person, rows: number): void; keepsEl
   "delete a row": {
     keepsElement: true,
     act: (who, rows) => {
-      if (rows > 0) changeInputs(element(who), () => removeRow(element(who), `${target}-r${rows - 1}`));
+      if (rows > 0) changeInputs(element(who), () => removeRow(element(who), "scales", `${target}-r${rows - 1}`));
     },
   },
   "move it": {
@@ -148,25 +154,25 @@ const structural: Record<string, { act(who: Person, rows: number): void; keepsEl
 const edits: Record<string, { act(who: Person, rows: number): void; survives(who: Person, rows: number): boolean }> = {
   "edits the field": {
     act: (who) => changeInputs(element(who), () => writeField(element(who), "note", "second's note")),
-    survives: (who) => who.directory.block(target)?.fields["note"] === "second's note",
+    survives: (who) => who.directory.block(target)?.inputs["note"] === "second's note",
   },
   "edits another field": {
     act: (who) => changeInputs(element(who), () => writeField(element(who), "d", "6")),
-    survives: (who) => who.directory.block(target)?.fields["d"] === "6",
+    survives: (who) => who.directory.block(target)?.inputs["d"] === "6",
   },
   "edits a row": {
     act: (who, rows) => {
-      if (rows > 0) changeInputs(element(who), () => writeCell(element(who), `${target}-r0`, "value", "7 TeV"));
+      if (rows > 0) changeInputs(element(who), () => writeCell(element(who), "scales", `${target}-r0`, "value", "7 TeV"));
     },
     survives: (who, rows) =>
-      rows === 0 || who.directory.block(target)?.tables["scales"]?.find((r) => r.id === `${target}-r0`)?.["value"] === "7 TeV",
+      rows === 0 || scales(who.directory.block(target)).find((r) => r.id === `${target}-r0`)?.["value"] === "7 TeV",
   },
   "adds a row": {
     act: (who) =>
       changeInputs(element(who), () =>
         insertRows(element(who), kindDescriptions.premises, "scales", [{ id: "added", values: { symbol: "q" } }], null),
       ),
-    survives: (who) => who.directory.block(target)?.tables["scales"]?.some((r) => r.id === "added" && r["symbol"] === "q") === true,
+    survives: (who) => scales(who.directory.block(target)).some((r) => r.id === "added" && r["symbol"] === "q"),
   },
 };
 
@@ -202,17 +208,17 @@ describe.each(Object.entries(structural))("while one person would %s", (name, { 
       // No row lost or doubled, in any block; none in the wrong one.
       const deletedRow = name === "delete a row" && rows > 0 ? `${target}-r${rows - 1}` : null;
       for (const block of first.directory.blocks()) {
-        const ids = (block.tables["scales"] ?? []).map(({ id }) => id).filter((id) => id !== "added");
-        const own = Array.from({ length: block.blockId === "new" ? 1 : rows }, (_, index) => `${block.blockId}-r${index}`);
+        const ids = scales(block).map(({ id }) => id).filter((id) => id !== "added");
+        const own = Array.from({ length: block.id === "new" ? 1 : rows }, (_, index) => `${block.id}-r${index}`);
         expect([...ids].sort()).toEqual(own.filter((id) => id !== deletedRow));
-        expect(block.fields["name"]).toBe(`name of ${block.blockId}`);
+        expect(block.inputs["name"]).toBe(`name of ${block.id}`);
       }
-      const added = first.directory.blocks().flatMap((block) => (block.tables["scales"] ?? []).filter(({ id }) => id === "added"));
+      const added = first.directory.blocks().flatMap((block) => scales(block).filter(({ id }) => id === "added"));
       expect(added.length).toBeLessThanOrEqual(1);
 
       // No value that nobody typed.
       for (const block of first.directory.blocks()) {
-        const values = [...Object.values(block.fields), ...(block.tables["scales"] ?? []).flatMap(({ id: _, ...cells }) => Object.values(cells))];
+        const values = [...Object.values(block.inputs).filter((value) => typeof value === "string"), ...scales(block).flatMap(({ id: _, ...cells }) => Object.values(cells))];
         expect(values.filter((value) => !typed.has(value))).toEqual([]);
       }
 
@@ -234,12 +240,12 @@ describe("deleting a block", () => {
     const who = person(10, notebookState(notebook(rows, { third: true })));
     people = [who];
     changeInputs(element(who), () => writeField(element(who), "d", "6"));
-    if (rows > 0) changeInputs(element(who), () => writeCell(element(who), `${target}-r0`, "value", "7 TeV"));
+    if (rows > 0) changeInputs(element(who), () => writeCell(element(who), "scales", `${target}-r0`, "value", "7 TeV"));
     const before = who.directory.block(target);
     who.editor.commands.deleteRange(place(who, target));
     expect(who.directory.block(target)).toBeNull();
     who.history.undoOnce();
     expect(who.directory.block(target)).toEqual(before);
-    expect(who.directory.blocks().map(({ blockId }) => blockId)).toEqual(["first", target, "last"]);
+    expect(who.directory.blocks().map(({ id }) => id)).toEqual(["first", target, "last"]);
   });
 });
