@@ -84,7 +84,8 @@ export class LinearForm {
     let text = "";
     const add = (value: Rational, symbol: string) => {
       const size = value.sign() < 0 ? value.negated() : value;
-      const body = symbol === "" ? show(size) : size.equals(Rational.one) ? symbol : show(size) + times + symbol;
+      const body =
+        symbol === "" ? show(size) : size.equals(Rational.one) ? symbol : show(size) + times + symbol;
       text += text === "" ? (value.sign() < 0 ? "-" : "") + body : (value.sign() < 0 ? " - " : " + ") + body;
     };
     for (const symbol of this.freeSymbols()) add(this.slope(symbol), symbol);

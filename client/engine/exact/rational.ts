@@ -65,8 +65,19 @@ export class Rational {
   over(other: Rational): Rational {
     return Rational.of(this.numerator * other.denominator, this.denominator * other.numerator);
   }
+  /**
+   * Whole powers, negative ones too; throws on a negative power of zero. The caller bounds the exponent.
+   * @example Rational.of(2, 3).power(-2).toString() // "9/4"
+   */
+  power(exponent: number): Rational {
+    if (exponent < 0) return Rational.one.over(this.power(-exponent));
+    return new Rational(this.numerator ** BigInt(exponent), this.denominator ** BigInt(exponent));
+  }
   negated(): Rational {
     return new Rational(-this.numerator, this.denominator);
+  }
+  absolute(): Rational {
+    return this.numerator < 0n ? this.negated() : this;
   }
   /** -1, 0 or 1. */
   sign(): -1 | 0 | 1 {
@@ -91,7 +102,9 @@ export class Rational {
     const direct = Number(this.numerator) / Number(this.denominator);
     if (Number.isFinite(direct)) return direct;
     // Both parts overflow a double: scale them down together first.
-    const excess = BigInt(Math.max(this.numerator.toString(2).length, this.denominator.toString(2).length) - 1000);
+    const excess = BigInt(
+      Math.max(this.numerator.toString(2).length, this.denominator.toString(2).length) - 1000,
+    );
     return Number(this.numerator >> excess) / Number(this.denominator >> excess);
   }
   /** "3", "-3/2". */

@@ -5,7 +5,8 @@ import { scalingShape } from "./inputs.ts";
 export const scalingDescription: BlockDescription<typeof scalingShape> = {
   kind: "scaling",
   title: "Scaling",
-  purpose: "Dimension, class and size of every term: relevant, marginal or irrelevant, and how large at the probe scale.",
+  purpose:
+    "Dimension, class and size of every term: relevant, marginal or irrelevant, and how large at the probe scale.",
   shape: scalingShape,
   premises: "required",
 };
