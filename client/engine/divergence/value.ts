@@ -3,11 +3,7 @@
  * Degrees and dimensions are linear forms in d (or D and z): text "4 - …", "d - 4", "1/2".
  */
 
-/** An exact number or linear form, as text ("3/2*d - 3") and as LaTeX without dollar signs. */
-export interface Exact {
-  readonly text: string;
-  readonly latex: string;
-}
+import type { Exact } from "../premises/value.ts";
 
 /** Convergence of one graph: "tree" has no loop integral at all; "depends" when d, D or z is a symbol. */
 export type Verdict = "tree" | "convergent" | "logarithmic" | "power" | "depends";
@@ -37,8 +33,10 @@ export interface Counterterm {
   readonly text: string;
   readonly derivatives: number;
   readonly timeDerivatives: number;
-  /** Power of mass dimension that masses (or relevant couplings) must make up: ω minus the weight of the derivatives. */
+  /** ω minus the weight of the derivatives: the power of masses (or of a cutoff) that makes up the rest of the dimension. */
   readonly massPower: Exact;
+  /** Whether masses can do so analytically (m², or m with fermions): only then can it be a pole. Else only a cutoff power. */
+  readonly analytic: boolean;
   /** Dimension of the operator, and of its coefficient (measure − Δ). */
   readonly dimension: Exact;
   readonly coefficient: Exact;
@@ -48,6 +46,8 @@ export interface Counterterm {
   readonly presentAs: string | null;
   /** False when a symmetry of the premises forbids it. */
   readonly allowed: boolean;
+  /** Legs of gauge potentials: gauge invariance restricts it, or excludes it (only such legs, too few derivatives). */
+  readonly gauge: "none" | "restricted" | "excluded";
 }
 
 export interface GraphVertex {
@@ -67,7 +67,7 @@ export interface InternalLine {
   readonly weight: Exact;
 }
 
-/** What the degree means in a regulator: a short code worded on the page, see `regulatorMeanings`. */
+/** What the degree means in a regulator. */
 export type Meaning =
   /** No loop. */
   | "tree"
@@ -106,7 +106,9 @@ export interface GraphDivergence {
 }
 
 /** "divergent": ω ≥ 0 and a graph exists. The rest have ω ≥ 0 by their legs but no graph makes them. */
-export type AmplitudeStatus = "divergent" | "forbidden by symmetry" | "forbidden by fermion parity" | "no graph within the caps";
+export type AmplitudeStatus = "divergent" | "forbidden by symmetry" | "forbidden by fermion parity" | "no graph within the caps"
+  /** Every graph has a closed loop of retarded propagators. */
+  | "vanishes in vacuum";
 
 export interface AmplitudeAtOrder {
   /** Order in 1/Λ: Σ V max(0, −[g]). */
@@ -156,6 +158,10 @@ export interface TheoryDivergence {
   readonly amplitudes: readonly Amplitude[];
   /** Counterterms that symmetries allow and the premises lack, without repetition, by order in 1/Λ. */
   readonly missing: readonly Counterterm[];
+  /** At each order n in 1/Λ within the caps: no divergence needs an operator of dimension above measure + n. */
+  readonly bounds: readonly { readonly order: Exact; readonly largestDimension: Exact }[];
+  /** False when an interacting field has δ ≤ 0: then each order has infinitely many divergent amplitudes. */
+  readonly finitelyManyPerOrder: boolean | null;
   readonly caps: { readonly loops: number; readonly legs: number; readonly order: Exact };
 }
 

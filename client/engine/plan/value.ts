@@ -2,10 +2,7 @@
  * What an Order plan says: plain JSON. Orders are exact powers of Q = p/Λ as text; sizes are floats relative to the
  * leading amplitude (or rate), rounded to 12 digits.
  */
-export interface Exact {
-  readonly text: string;
-  readonly latex: string;
-}
+import type { Exact } from "../premises/value.ts";
 
 export interface Measured {
   readonly value: number;

@@ -1,0 +1,138 @@
+/** The superficially divergent amplitudes of a theory within caps, and those that something forbids. */
+import { Rational } from "../exact/rational.ts";
+import { shown } from "../exact/shown.ts";
+import type { Theory } from "../premises/theory.ts";
+import { countertermsOf } from "./counterterms.ts";
+import { graphExists, internalLines } from "./graph-existence.ts";
+import { addHalfEdges, conjugated, countOf, noHalfEdges, totalOf, weigh, type HalfEdges } from "./half-edges.ts";
+import { describeLegs } from "./legs.ts";
+import { vanishesInVacuum } from "./retarded.ts";
+import { forbiddingSymmetry, isFermionOdd } from "./selection.ts";
+import type { Amplitude, AmplitudeAtOrder, AmplitudeStatus } from "./value.ts";
+import { numberOf, type VertexSet } from "./vertex-sets.ts";
+
+export interface Caps {
+  readonly loops: number;
+  readonly legs: number;
+  readonly order: Rational;
+}
+
+/** Every choice of up to `most` legs, one of each pair of Hermitian conjugates. Null when there are more than `limit`. */
+export function legChoices(theory: Theory, most: number, limit: number): HalfEdges[] | null {
+  let choices: HalfEdges[] = [noHalfEdges(theory)];
+  theory.fields.forEach((field, f) => {
+    const sides = field.selfConjugate ? (["plain"] as const) : (["plain", "conjugate"] as const);
+    for (const side of sides) {
+      const single = { ...noHalfEdges(theory), [side]: theory.fields.map((_, g) => (g === f ? 1 : 0)) };
+      if (choices.length > limit) return;
+      choices = choices.flatMap((legs) =>
+        Array.from({ length: most - totalOf(legs) + 1 }, (_, count) => addHalfEdges(legs, single, count)),
+      );
+    }
+  });
+  if (choices.length > limit) return null;
+  const seen = new Set<string>();
+  const keyOf = (legs: HalfEdges) => `${legs.plain.join(",")}|${legs.conjugate.join(",")}`;
+  return choices.filter((legs) => {
+    seen.add(keyOf(legs));
+    const mirror = keyOf(conjugated(legs, theory));
+    return mirror === keyOf(legs) || !seen.has(mirror);
+  });
+}
+
+interface Found {
+  readonly atOrders: readonly { readonly order: Rational; readonly omega: Rational; readonly loops: number; readonly set: VertexSet }[];
+  /** Whether graphs exist at all, and whether each of them vanishes in vacuum. */
+  readonly anyGraph: boolean;
+  readonly anyRetarded: boolean;
+}
+
+/** The largest degree at each order in 1/Λ, with the fewest loops that reach it, among graphs that exist. */
+function bestGraphs(legs: HalfEdges, sets: ReadonlyMap<number, readonly VertexSet[]>, caps: Caps, theory: Theory): Found {
+  const bound = numberOf(theory.measure.minus(weigh(legs, theory, (field) => field.weight)));
+  const best = new Map<string, Found["atOrders"][number]>();
+  let anyGraph = false;
+  let anyRetarded = false;
+  // The vacuum has one graph without vertices: the free loop.
+  const lone = sets.get(0)?.find(({ vertices }) => vertices.length === 0);
+  if (totalOf(legs) === 0 && lone) {
+    anyGraph = true;
+    best.set("0", { order: Rational.zero, omega: bound, loops: 1, set: lone });
+  }
+  for (let loops = 1; loops <= caps.loops; loops += 1) {
+    for (const set of sets.get(2 * (loops - 1) + totalOf(legs)) ?? []) {
+      const omega = bound.minus(set.coefficients);
+      const before = best.get(set.order.toString());
+      if (set.vertices.length === 0 || (before && before.omega.compare(omega) >= 0) || (anyGraph && omega.sign() < 0)) continue;
+      if (!hasGraph(set, legs, theory)) continue;
+      if (vanishesInVacuum(set.vertices, legs, theory)) {
+        anyRetarded = true;
+        continue;
+      }
+      anyGraph = true;
+      if (omega.sign() >= 0) best.set(set.order.toString(), { order: set.order, omega, loops, set });
+    }
+  }
+  const atOrders = [...best.values()].sort((a, b) => a.order.compare(b.order));
+  return { atOrders, anyGraph, anyRetarded };
+}
+
+function hasGraph(set: VertexSet, legs: HalfEdges, theory: Theory): boolean {
+  const tooMany = theory.fields.some((_, f) => countOf(set.edges, f) < countOf(legs, f) || (countOf(set.edges, f) - countOf(legs, f)) % 2 !== 0);
+  if (tooMany) return false;
+  return graphExists(set.vertices, legs, internalLines(set.vertices, legs, theory), theory) === "exists";
+}
+
+/** @returns null when the legs neither diverge nor would if something did not forbid it. */
+export function amplitudeOf(
+  legs: HalfEdges,
+  sets: ReadonlyMap<number, readonly VertexSet[]>,
+  caps: Caps,
+  theory: Theory,
+  useSymmetries: boolean,
+): Amplitude | null {
+  const bound = numberOf(theory.measure.minus(weigh(legs, theory, (field) => field.weight)));
+  if (bound.plus(caps.order).sign() < 0) return null;
+  const broken = useSymmetries ? forbiddingSymmetry(legs, theory) : null;
+  const odd = isFermionOdd(legs, theory);
+  const found = odd || broken ? null : bestGraphs(legs, sets, caps, theory);
+  const largest = found?.atOrders.reduce((top, one) => (one.omega.compare(top.omega) > 0 ? one : top), found.atOrders[0] ?? { omega: bound });
+  if (found && found.atOrders.length > 0 && largest) {
+    const omega = largest.omega;
+    return {
+      legs: describeLegs(legs, theory),
+      status: "divergent",
+      forbiddenBy: null,
+      omega: shown(omega),
+      verdict: omega.sign() === 0 ? "logarithmic" : "power",
+      atOrders: found.atOrders.map(describeOrder),
+      counterterms: countertermsOf(omega, legs, theory, useSymmetries),
+    };
+  }
+  // Amplitudes that converge on their own are not listed, nor those that only irrelevant terms would make diverge.
+  if (bound.sign() < 0 || found?.anyGraph) return null;
+  return {
+    legs: describeLegs(legs, theory),
+    status: statusOf(odd, broken !== null, found?.anyRetarded ?? false),
+    forbiddenBy: odd ? null : (broken?.name ?? null),
+    omega: shown(bound),
+    verdict: bound.sign() === 0 ? "logarithmic" : "power",
+    atOrders: [],
+    counterterms: [],
+  };
+}
+
+function statusOf(odd: boolean, broken: boolean, retarded: boolean): AmplitudeStatus {
+  if (odd) return "forbidden by fermion parity";
+  if (broken) return "forbidden by symmetry";
+  return retarded ? "vanishes in vacuum" : "no graph within the caps";
+}
+
+function describeOrder({ order, omega, loops, set }: Found["atOrders"][number]): AmplitudeAtOrder {
+  return {
+    order: shown(order),
+    omega: shown(omega),
+    loops,
+    vertices: set.vertices.map(({ interaction: { term }, count }) => ({ termRowId: term.rowId, latex: term.latex, count })),
+  };
+}

@@ -1,0 +1,127 @@
+/** The whole theory: which amplitudes diverge, what they need, and what that makes of the theory. */
+import type { Evaluation, Notice, Problem, Scalar } from "../evaluation.ts";
+import { Rational } from "../exact/rational.ts";
+import { shown } from "../exact/shown.ts";
+import { LinearForm } from "../exact/linear-form.ts";
+import type { Theory } from "../premises/theory.ts";
+import { amplitudeOf, legChoices, type Caps } from "./amplitudes.ts";
+import type { DivergenceInputs } from "./inputs.ts";
+import { renormalisability } from "./theory-verdict.ts";
+import type { Amplitude, Counterterm, TheoryDivergence } from "./value.ts";
+import { interactionTerms, interactionsOf, vertexSets, type VertexSet } from "./vertex-sets.ts";
+import { explainTheory } from "./working-theory.ts";
+
+const MOST_LOOPS = 6;
+const MOST_LEGS = 12;
+const MOST_ORDER = 12;
+/** Past these a listing would take seconds: lower caps are asked for instead. */
+const MOST_VERTEX_SETS = 6_000;
+const MOST_LEG_CHOICES = 6_000;
+
+export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evaluation<TheoryDivergence> {
+  const refuse = (problems: Problem[]): Evaluation<TheoryDivergence> => ({ value: null, problems, notices: [], scalars: [], working: [] });
+  const problems: Problem[] = [];
+  const caps = readCaps(inputs, problems);
+  if (problems.length > 0) return refuse(problems);
+  const listed = listAmplitudes(theory, caps, inputs.symmetries === "yes");
+  if (listed === "too many") return refuse([{ code: "theory-too-large", path: ["loops"], facts: { loops: caps.loops, legs: caps.legs, order: caps.order.toString() } }]);
+  const value: TheoryDivergence = {
+    mode: "whole theory",
+    ...renormalisability(theory),
+    couplings: interactionTerms(theory).map(({ term }) => ({
+      termRowId: term.rowId,
+      latex: term.latex,
+      coefficient: shown(term.ultravioletCoefficient),
+    })),
+    amplitudes: listed ?? [],
+    missing: missingFrom(listed ?? []),
+    bounds: boundsOf(theory, listed ?? []),
+    caps: { loops: caps.loops, legs: caps.legs, order: shown(caps.order) },
+  };
+  return { value, problems: [], notices: noticesOf(value, listed === null), scalars: scalarsOf(value), working: explainTheory(value, theory) };
+}
+
+function readCaps(inputs: DivergenceInputs, problems: Problem[]): Caps {
+  const whole = (field: "loops" | "legs", initial: number, most: number): number => {
+    const typed = inputs[field].trim();
+    if (typed === "") return initial;
+    const value = /^\d{1,4}$/.test(typed) ? Number(typed) : -1;
+    if (value < 1 || value > most) problems.push({ code: "cap-unreadable", path: [field], facts: { text: typed, most } });
+    return value;
+  };
+  const loops = whole("loops", 2, MOST_LOOPS);
+  const legs = whole("legs", 6, MOST_LEGS);
+  const typed = inputs.order.trim();
+  const order = typed === "" ? Rational.of(2) : Rational.parse(typed);
+  const fits = order !== null && order.sign() >= 0 && order.compare(Rational.of(MOST_ORDER)) <= 0;
+  if (!fits) problems.push({ code: "cap-unreadable", path: ["order"], facts: { text: typed, most: MOST_ORDER } });
+  return { loops, legs, order: fits ? order : Rational.zero };
+}
+
+/** @returns null when a dimension is symbolic: then no amplitude is divergent or not. */
+function listAmplitudes(theory: Theory, caps: Caps, useSymmetries: boolean): Amplitude[] | null | "too many" {
+  const interactions = interactionsOf(theory);
+  const isNumber = (form: LinearForm) => form.asRational() !== null;
+  if (!interactions || !isNumber(theory.measure) || !theory.fields.every(({ weight }) => isNumber(weight))) return null;
+  const sets = vertexSets(interactions, theory, { surplus: 2 * (caps.loops - 1) + caps.legs, order: caps.order }, MOST_VERTEX_SETS);
+  const choices = legChoices(theory, caps.legs, MOST_LEG_CHOICES);
+  if (!sets || !choices) return "too many";
+  const bySurplus = groupBySurplus(sets);
+  const found = choices.flatMap((legs) => amplitudeOf(legs, bySurplus, caps, theory, useSymmetries) ?? []);
+  const rank = ({ status }: Amplitude) => (status === "divergent" ? 0 : 1);
+  return found.sort((a, b) => rank(a) - rank(b) || a.legs.total - b.legs.total);
+}
+
+/** By Σ V (n − 2), which legs and loops fix; those that take least from the degree first. */
+function groupBySurplus(sets: readonly VertexSet[]): Map<number, VertexSet[]> {
+  const groups = new Map<number, VertexSet[]>();
+  for (const set of sets) groups.set(set.surplus, [...(groups.get(set.surplus) ?? []), set]);
+  for (const group of groups.values()) group.sort((a, b) => a.coefficients.compare(b.coefficients));
+  return groups;
+}
+
+/** Each operator once, by rising order: not the vacuum energy, and nothing that symmetry or gauge invariance excludes. */
+function missingFrom(amplitudes: readonly Amplitude[]): Counterterm[] {
+  const wanted = amplitudes
+    .filter(({ legs }) => legs.total > 0)
+    .flatMap(({ counterterms }) => counterterms)
+    .filter(({ presentAs, allowed, gauge }) => presentAs === null && allowed && gauge !== "excluded");
+  const orderOf = ({ order }: Counterterm) => Rational.parse(order.text) ?? Rational.zero;
+  return wanted.sort((a, b) => orderOf(a).compare(orderOf(b)));
+}
+
+/** One line for each order in 1/Λ that graphs within the caps reach. */
+function boundsOf(theory: Theory, amplitudes: readonly Amplitude[]): TheoryDivergence["bounds"] {
+  const orders = new Map(amplitudes.flatMap(({ atOrders }) => atOrders).map(({ order }) => [order.text, Rational.parse(order.text) ?? Rational.zero]));
+  return [...orders.values()]
+    .sort((a, b) => a.compare(b))
+    .map((order) => ({ order: shown(order), largestDimension: shown(theory.measure.plus(LinearForm.constant(order))) }));
+}
+
+function noticesOf(value: TheoryDivergence, isSymbolic: boolean): Notice[] {
+  const notice = (code: string): Notice => ({ code, path: [], facts: {} });
+  if (isSymbolic) return [notice("amplitudes-need-numbers")];
+  const divergent = value.amplitudes.filter(({ status }) => status === "divergent");
+  const touchesGauge = divergent.some(({ counterterms }) => counterterms.some(({ gauge }) => gauge !== "none"));
+  return [
+    ...(divergent.length > 0 ? [notice("omega-not-sufficient")] : []),
+    ...(touchesGauge ? [notice("omega-gauge")] : []),
+    ...(value.missing.length > 0 ? [notice("theory-not-closed")] : []),
+  ];
+}
+
+function scalarsOf(value: TheoryDivergence): Scalar[] {
+  const divergent = value.amplitudes.filter(({ status }) => status === "divergent");
+  const verdict: Scalar[] = value.verdict
+    ? [{ id: "verdict", label: "renormalisability by power counting", value: { type: "word", text: value.verdict } }]
+    : [];
+  return [
+    ...verdict,
+    { id: "divergent", label: "divergent amplitudes within the caps", value: { type: "exact", text: String(divergent.length) } },
+    ...divergent.map(({ legs, omega }): Scalar => ({
+      id: `${legs.key}/omega`,
+      label: `degree of divergence of ${legs.latex === "1" ? "the vacuum" : `$${legs.latex}$`}`,
+      value: { type: "exact", text: omega.text },
+    })),
+  ];
+}
