@@ -1,0 +1,20 @@
+/** Every problem and notice of the engine in plain words. The only place that knows how to say them. */
+import type { Problem } from "#engine/evaluation.ts";
+import { truncationWords } from "./words/truncation-words.ts";
+import { notebookWords } from "./words/notebook-words.ts";
+import type { Words } from "./words/words.ts";
+
+/** By code; a test fails when the engine uses a code that is not here. */
+export const problemWords: Words = { ...notebookWords, ...truncationWords };
+
+/**
+ * One sentence that says what is wrong, where, and what would be right.
+ * @example wordProblem({ code: "order-twice", path: ["orders", "r2", "order"], facts: { row: 2, order: 1 } })
+ * // "Order 1 is in the table twice, again in row 2. Keep one of them."
+ */
+export function wordProblem({ code, path, facts }: Problem): string {
+  const words = problemWords[code];
+  if (words) return words(facts, path);
+  // Unreachable while the test of all codes is green; still, what is unknown must be said rather than hidden.
+  return `Something is wrong here (${code}${path.length > 0 ? `, at ${path.join(" › ")}` : ""}).`;
+}
