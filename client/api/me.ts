@@ -39,10 +39,19 @@ export function signInAddress(place: string): string {
   return `/auth/github?next=${encodeURIComponent(place)}`;
 }
 
-/** Signs out and leaves nothing of this person's on the page: the document is loaded afresh. */
+/**
+ * Signs out and leaves nothing of this person's behind: the local copies go, and the next page is loaded afresh.
+ * The copies go only once the server has agreed, so that a failed attempt costs nothing.
+ */
 export function useSignOut() {
   return useMutation({
-    mutationFn: () => askOrThrow<void>("/auth/sign-out", { method: "POST" }),
-    onSuccess: () => window.location.assign("/"),
+    mutationFn: async () => {
+      await askOrThrow<void>("/auth/sign-out", { method: "POST" });
+      const { dropLocalCopies } = await import("../editor/local-copy.ts");
+      await dropLocalCopies();
+    },
+    onSuccess: () => {
+      window.location.assign("/");
+    },
   });
 }

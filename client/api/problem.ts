@@ -15,6 +15,12 @@ export const unreachable: Problem = {
   sentence: "The server could not be reached. Check your connection and try again.",
 };
 
+export const signedOut: Problem = {
+  code: "urn:subleading:signed-out",
+  status: 401,
+  sentence: "You are signed out. Sign in again and repeat this.",
+};
+
 /** TanStack Query tells failure from success by a throw; this carries the problem through it, and nothing else throws it. */
 export class RequestRefused extends Error {
   readonly problem: Problem;

@@ -10,7 +10,7 @@ export function useRefereeLinks(notebookId: string, enabled: boolean) {
   return useQuery({
     queryKey: refereeLinksKey(notebookId),
     queryFn: ({ signal }) =>
-      askOrThrow<{ readonly links: readonly RefereeLink[] }>(`/api/notebooks/${notebookId}/referee-links`, {
+      askOrThrow<readonly RefereeLink[]>(`/api/notebooks/${notebookId}/referee-links`, {
         signal,
       }),
     enabled,

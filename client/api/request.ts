@@ -1,6 +1,6 @@
 /** One way to the server: typed answers, failures as values, the CSRF token on everything that changes something. */
 import type { Me } from "#contract/api.ts";
-import { readProblem, RequestRefused, unreachable, type Problem } from "./problem.ts";
+import { readProblem, RequestRefused, signedOut, unreachable, type Problem } from "./problem.ts";
 import { currentCsrfToken, rememberCsrfToken, setSessionLapsed } from "./session-state.ts";
 
 export type Answer<T> =
@@ -20,7 +20,10 @@ export async function ask<T>(path: string, options: RequestOptions = {}): Promis
   if (first.ok || method === "GET" || first.problem.code !== "urn:subleading:cross-site") return first;
   // The session changed since the token was read (signed in again in another tab): read the token once more.
   const renewed = await readMe();
-  return renewed.ok ? send<T>(path, method, options) : renewed;
+  if (!renewed.ok) return renewed;
+  if (renewed.value.person) return send<T>(path, method, options);
+  setSessionLapsed(true);
+  return { ok: false, problem: signedOut };
 }
 
 /** For TanStack Query, which tells failure by a throw. */

@@ -2,7 +2,10 @@
 import { readFileSync } from "node:fs";
 import type { HtmlTagDescriptor, Plugin } from "vite";
 
-const facesOfTheFirstScreen = [/\/commissioner-latin-[\w-]+\.woff2$/, /\/stix-two-text-latin-[\w-]+\.woff2$/];
+const facesOfTheFirstScreen = [
+  /\/commissioner-latin-[\w-]{8}\.woff2$/,
+  /\/stix-two-text-latin-[\w-]{8}\.woff2$/,
+];
 
 /** Puts first-paint.js as a blocking script into the head (a module would run too late) and preloads two faces. */
 export function firstPaint(): Plugin {

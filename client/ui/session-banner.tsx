@@ -1,14 +1,15 @@
 import { useLocation } from "react-router-dom";
-import { signInAddress, useSessionLapsed } from "../api/me.ts";
+import { signInAddress, useMe, useSessionLapsed } from "../api/me.ts";
 import { linkClasses } from "./text-link.tsx";
 
 /** The session ended while the page was open. The page stays; this says so and leads back to the same place. */
 export function SessionBanner() {
   const lapsed = useSessionLapsed();
+  const person = useMe().data?.person;
   const place = useLocation();
   return (
     <div role="status">
-      {lapsed && (
+      {lapsed && person && (
         <p className="border-b border-line bg-field px-4 py-3 text-body sm:px-8">
           <span className="border-l-2 border-hairline pl-3">
             You are signed out. What you typed is kept here.{" "}

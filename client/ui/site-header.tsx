@@ -1,10 +1,8 @@
 import type { ReactNode } from "react";
 import { Link } from "react-router-dom";
-import { useMe, useSessionLapsed, useSignOut } from "../api/me.ts";
-import { Button } from "./button.tsx";
+import { useMe, useSessionLapsed } from "../api/me.ts";
 import { Mark } from "./mark.tsx";
-import { say } from "./notices.ts";
-import { sentenceOf } from "../api/problem.ts";
+import { SignOutButton } from "./sign-out-button.tsx";
 import { ThemeSwitch } from "./theme-switch.tsx";
 
 /** The mark and the name, what the page adds, who is here, and the light. */
@@ -36,27 +34,11 @@ export function SiteHeader({
 function Person() {
   const person = useMe().data?.person;
   const lapsed = useSessionLapsed();
-  const signOut = useSignOut();
   if (!person) return null;
   return (
     <>
-      <span className="hidden text-ink-2 sm:inline">{person.name}</span>
-      {!lapsed && (
-        <Button
-          look="quiet"
-          className="text-small"
-          busy={signOut.isPending}
-          onClick={() => {
-            signOut.mutate(undefined, {
-              onError: (error) => {
-                say(sentenceOf(error), "refused");
-              },
-            });
-          }}
-        >
-          Sign out
-        </Button>
-      )}
+      <span className="hidden text-ink-2 md:inline">{person.name}</span>
+      {!lapsed && <SignOutButton />}
     </>
   );
 }
