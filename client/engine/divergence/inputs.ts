@@ -7,11 +7,11 @@ export const divergenceShape = defineShape({
     /** One connected graph, or every amplitude the premises' interactions can make. */
     mode: choice("one graph", "whole theory"),
     /** Whole theory: the most loops considered; "" is 2. */
-    loops: text("2"),
+    maxLoops: text("2"),
     /** Whole theory: the most external legs listed; "" is 6. */
-    legs: text("6"),
+    maxLegs: text("6"),
     /** Whole theory: the largest order in 1/Λ (sum of Δ − d over the insertions) considered; "" is 2. */
-    order: text("2"),
+    maxOrder: text("2"),
     /** Whether the charges of the premises' symmetries forbid amplitudes and counterterms. */
     symmetries: choice("yes", "no"),
     note: note(),

@@ -24,7 +24,7 @@ export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evalua
   const caps = readCaps(inputs, problems);
   if (problems.length > 0) return refuse(problems);
   const listed = listAmplitudes(theory, caps, inputs.symmetries === "yes");
-  if (listed === "too many") return refuse([{ code: "theory-too-large", path: ["loops"], facts: { loops: caps.loops, legs: caps.legs, order: caps.order.toString() } }]);
+  if (listed === "too many") return refuse([{ code: "theory-too-large", path: ["maxLoops"], facts: { loops: caps.loops, legs: caps.legs, order: caps.order.toString() } }]);
   const value: TheoryDivergence = {
     mode: "whole theory",
     ...renormalisability(theory),
@@ -42,19 +42,19 @@ export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evalua
 }
 
 function readCaps(inputs: DivergenceInputs, problems: Problem[]): Caps {
-  const whole = (field: "loops" | "legs", initial: number, most: number): number => {
+  const whole = (field: "maxLoops" | "maxLegs", initial: number, most: number): number => {
     const typed = inputs[field].trim();
     if (typed === "") return initial;
     const value = /^\d{1,4}$/.test(typed) ? Number(typed) : -1;
     if (value < 1 || value > most) problems.push({ code: "cap-unreadable", path: [field], facts: { text: typed, most } });
     return value;
   };
-  const loops = whole("loops", 2, MOST_LOOPS);
-  const legs = whole("legs", 6, MOST_LEGS);
-  const typed = inputs.order.trim();
+  const loops = whole("maxLoops", 2, MOST_LOOPS);
+  const legs = whole("maxLegs", 6, MOST_LEGS);
+  const typed = inputs.maxOrder.trim();
   const order = typed === "" ? Rational.of(2) : Rational.parse(typed);
   const fits = order !== null && order.sign() >= 0 && order.compare(Rational.of(MOST_ORDER)) <= 0;
-  if (!fits) problems.push({ code: "cap-unreadable", path: ["order"], facts: { text: typed, most: MOST_ORDER } });
+  if (!fits) problems.push({ code: "cap-unreadable", path: ["maxOrder"], facts: { text: typed, most: MOST_ORDER } });
   return { loops, legs, order: fits ? order : Rational.zero };
 }
 

@@ -35,7 +35,7 @@ export function refusalOf(theory: Theory, vertices: Record<string, number>, legs
   return askGraph(theory, vertices, legs).problems.map(({ code }) => code);
 }
 
-export function askTheory(theory: Theory, caps: { loops?: string; legs?: string; order?: string; symmetries?: string } = {}): Evaluation<TheoryDivergence> {
+export function askTheory(theory: Theory, caps: { maxLoops?: string; maxLegs?: string; maxOrder?: string; symmetries?: string } = {}): Evaluation<TheoryDivergence> {
   // Mode "whole theory" is asked for, so the value is a theory's.
   return evaluateDivergence(inputs({ mode: "whole theory", ...caps }), theory) as Evaluation<TheoryDivergence>;
 }
