@@ -33,6 +33,8 @@ export const closeCode = {
   /** The document has moved to a newer schema: reload the page. */
   schemaTooOld: 4426,
   tooFast: 4429,
+  /** Not final: the server could not keep the notebook open and loads it afresh; reconnecting is welcome. */
+  failed: 4500,
   /** Not final: the reader fell too far behind; reconnecting is welcome. */
   slowReader: 4508,
   /** Not final: the server is stopping. */

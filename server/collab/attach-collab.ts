@@ -1,0 +1,204 @@
+/** Live co-editing on an HTTP server: WebSockets at /collab/:notebookId. */
+import { once } from "node:events";
+import { STATUS_CODES, type IncomingMessage, type Server } from "node:http";
+import type { Duplex } from "node:stream";
+import type { Logger } from "pino";
+import { WebSocketServer } from "ws";
+import { closeCode } from "#contract/collab.ts";
+import type { Database } from "../data/database.ts";
+import type { Sessions } from "../http/sessions.ts";
+import type { AccessChanges } from "../policies/access-changes.ts";
+import { AccessWatch } from "./access-watch.ts";
+import { admit, type Admitted } from "./admission.ts";
+import { Connection } from "./connection.ts";
+import { createDocumentStore, type DocumentStore } from "./document-store.ts";
+import {
+  CONNECTIONS_PER_NOTEBOOK,
+  CONNECTIONS_PER_VISITOR,
+  HEARTBEAT,
+  LARGEST_PAYLOAD_BYTES,
+} from "./limits.ts";
+import { receiveFrames } from "./receive-frames.ts";
+import { RoomNotFound, type Lease, type RoomObserver } from "./room.ts";
+import { Rooms } from "./rooms.ts";
+
+export interface CollabDependencies {
+  readonly database: Database;
+  readonly log: Logger;
+  readonly sessions: Pick<Sessions, "identify">;
+  readonly accessChanges: Pick<AccessChanges, "onAccessChange">;
+  /** Its origin is the only one that pages may come from. */
+  readonly publicUrl: string;
+  readonly observers?: readonly RoomObserver[];
+  /** For tests: a store that is slow or fails on purpose. */
+  readonly store?: DocumentStore;
+  readonly lingerMs?: number;
+  readonly retry?: { readonly firstMs: number; readonly longestMs: number };
+}
+export interface Collab {
+  readonly rooms: Rooms;
+  /** Takes no more frames, stores what is queued, closes every socket (1012) and ends. */
+  stop(): Promise<void>;
+}
+
+const LINGER_MS = 5_000;
+const LOAD_PATIENCE_MS = 20_000;
+const STOP_PATIENCE_MS = 10_000;
+const RECHECK_EVERY_MS = 30_000;
+
+export function attachCollab(server: Server, dependencies: CollabDependencies): Collab {
+  const { database, log, sessions, accessChanges } = dependencies;
+  const rooms = new Rooms({
+    store: dependencies.store ?? createDocumentStore(database),
+    log,
+    observers: dependencies.observers ?? [],
+    lingerMs: dependencies.lingerMs ?? LINGER_MS,
+    ...(dependencies.retry === undefined ? {} : { retry: dependencies.retry }),
+  });
+  const watch = new AccessWatch({ database, sessions, log });
+  const sockets = new WebSocketServer({
+    noServer: true,
+    maxPayload: LARGEST_PAYLOAD_BYTES,
+    perMessageDeflate: false,
+    clientTracking: true,
+  });
+  sockets.on("error", (error) => log.error({ err: error }, "the socket server failed"));
+  const connections = new Set<Connection>();
+  let stopping = false;
+
+  async function upgrade(request: IncomingMessage, socket: Duplex, head: Buffer): Promise<void> {
+    if (stopping) return refuse(socket, 503);
+    const admission = await admit(request, dependencies);
+    if (!admission.admitted) return refuse(socket, admission.status);
+    if (admission.editorSchema < admission.storedSchema) return refuseOldSchema(request, socket, head);
+    if (isCrowded(admission)) return refuse(socket, 429);
+    const lease = await enterRoom(admission.notebookId);
+    if (typeof lease === "number") return refuse(socket, lease);
+    if (stopping || socket.destroyed) {
+      lease.release();
+      return refuse(socket, 503);
+    }
+    sockets.handleUpgrade(request, socket, head, (accepted) => {
+      const connection = new Connection({
+        ...admission,
+        socket: accepted,
+        schemaVersion: admission.editorSchema,
+        log: log.child({ notebookId: admission.notebookId }),
+      });
+      begin(connection, lease, admission, request.headers.cookie);
+    });
+    // `ws` answers a broken handshake by itself and then calls nobody; the lease must not outlive the socket.
+    socket.once("close", () => lease.release());
+  }
+
+  /** The document is loaded before the upgrade completes, so that no early message is lost. */
+  async function enterRoom(notebookId: string): Promise<Lease | 404 | 503> {
+    let isLate = false;
+    const entered = rooms.enter(notebookId).then((lease) => {
+      if (isLate) lease.release();
+      return lease;
+    });
+    let timer: NodeJS.Timeout | undefined;
+    const late = new Promise<503>((resolve) => {
+      timer = setTimeout(() => {
+        isLate = true;
+        resolve(503);
+      }, LOAD_PATIENCE_MS);
+    });
+    try {
+      return await Promise.race([entered, late]);
+    } catch (error) {
+      log.warn({ err: error, notebookId }, "a notebook could not be opened");
+      return error instanceof RoomNotFound ? 404 : 503;
+    } finally {
+      clearTimeout(timer);
+    }
+  }
+
+  function begin(
+    connection: Connection,
+    lease: Lease,
+    admission: Admitted,
+    cookie: string | undefined,
+  ): void {
+    const { room } = lease;
+    const watched = { connection, room, cookie, endsAt: admission.endsAt };
+    connections.add(connection);
+    connection.onEnd(() => {
+      connections.delete(connection);
+      watch.remove(watched);
+      room.leave(connection);
+      lease.release();
+    });
+    watch.add(watched);
+    receiveFrames(room, connection);
+    room.join(connection);
+    // Raised while this editor was on its way in.
+    if (connection.schemaVersion < (room.taking?.document.schemaVersion ?? 0))
+      connection.close(closeCode.schemaTooOld, "the notebook needs a newer page");
+  }
+
+  function isCrowded({ notebookId, visitor }: Admitted): boolean {
+    const isSame = (other: Connection) =>
+      visitor.as === "member"
+        ? other.visitor.as === "member" && other.visitor.personId === visitor.personId
+        : other.visitor.as === "referee" && other.visitor.refereeLinkId === visitor.refereeLinkId;
+    const inNotebook = [...connections].filter((connection) => connection.notebookId === notebookId);
+    return (
+      inNotebook.length >= CONNECTIONS_PER_NOTEBOOK ||
+      inNotebook.filter(isSame).length >= CONNECTIONS_PER_VISITOR
+    );
+  }
+
+  function refuseOldSchema(request: IncomingMessage, socket: Duplex, head: Buffer): void {
+    sockets.handleUpgrade(request, socket, head, (accepted) => {
+      accepted.on("error", (error) => log.info({ err: error }, "a socket failed"));
+      accepted.close(closeCode.schemaTooOld, "the notebook needs a newer page");
+    });
+  }
+
+  const onUpgrade = (request: IncomingMessage, socket: Duplex, head: Buffer) => {
+    socket.on("error", (error) => log.info({ err: error }, "a socket failed before or while it was opened"));
+    upgrade(request, socket, head).catch((error: unknown) => {
+      log.error({ err: error }, "an upgrade failed");
+      refuse(socket, 503);
+    });
+  };
+  server.on("upgrade", onUpgrade);
+
+  const stopListening = accessChanges.onAccessChange((change) => watch.heed(change));
+  const beat = setInterval(() => {
+    const now = Date.now();
+    for (const connection of connections)
+      connection.keepAlive(now, HEARTBEAT.silentForMs, HEARTBEAT.deadAfterMs);
+    for (const room of rooms.all()) room.tick(now);
+  }, HEARTBEAT.checkEveryMs);
+  const recheck = setInterval(() => watch.recheckAll(), RECHECK_EVERY_MS);
+
+  return {
+    rooms,
+    stop: async () => {
+      stopping = true;
+      stopListening();
+      clearInterval(beat);
+      clearInterval(recheck);
+      watch.stop();
+      await rooms.stop(STOP_PATIENCE_MS);
+      server.off("upgrade", onUpgrade);
+      // Each is being closed with a word why; one that does not answer is cut after `CLOSING_PATIENCE_MS`.
+      await Promise.all([...sockets.clients].map((socket) => once(socket, "close")));
+      await new Promise<void>((resolve, reject) =>
+        sockets.close((error) => (error === undefined ? resolve() : reject(error))),
+      );
+    },
+  };
+}
+
+function refuse(socket: Duplex, status: number): void {
+  if (socket.destroyed) return;
+  const retry = status === 503 || status === 429 ? "Retry-After: 2\r\n" : "";
+  socket.end(
+    `HTTP/1.1 ${status} ${STATUS_CODES[status] ?? ""}\r\n${retry}Connection: close\r\nContent-Length: 0\r\n\r\n`,
+    () => socket.destroy(),
+  );
+}

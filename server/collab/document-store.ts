@@ -1,0 +1,192 @@
+/** Documents in PostgreSQL: an append-only log of updates per notebook, and a compacted state beside it. */
+import { roleMay, roles } from "#contract/roles.ts";
+import { firstRow, rows, type Database, type Queryable } from "../data/database.ts";
+import type { BadRow, StoredUpdate } from "./build-document.ts";
+
+export interface StoredDocument {
+  readonly state: Uint8Array | null;
+  /** Good rows after the state, in order. */
+  readonly tail: readonly StoredUpdate[];
+  readonly lastSeq: number;
+  readonly schemaVersion: number;
+}
+export interface NewUpdate {
+  readonly update: Uint8Array;
+  readonly personId: string;
+}
+export interface AppendRequest {
+  readonly notebookId: string;
+  /** The last row this process knows; nothing is stored when there are others. */
+  readonly after: number;
+  readonly updates: readonly NewUpdate[];
+  /** Schema versions of the editors that wrote them. */
+  readonly schema: { readonly lowest: number; readonly highest: number };
+}
+/** All updates are stored, or none and at least one of the reasons holds. */
+export interface AppendOutcome {
+  readonly stored: boolean;
+  readonly lastSeq: number;
+  readonly schemaVersion: number;
+  readonly archived: boolean;
+  readonly deleted: boolean;
+  /** People among the writers who may not write (any more). */
+  readonly denied: readonly string[];
+}
+
+export interface DocumentStore {
+  /** Null when there is no such notebook (or it was deleted). */
+  load(notebookId: string): Promise<StoredDocument | null>;
+  /** Null when there is no such notebook. Committed durably when it resolves with `stored`. */
+  append(request: AppendRequest): Promise<AppendOutcome | null>;
+  readAfter(notebookId: string, seq: number): Promise<readonly StoredUpdate[]>;
+  /** False when a newer state is there already. */
+  saveState(notebookId: string, seq: number, state: Uint8Array): Promise<boolean>;
+  quarantine(notebookId: string, bad: readonly BadRow[]): Promise<void>;
+}
+
+const writingRoles = roles.filter((role) => roleMay(role, "notebook.write"));
+
+/**
+ * One statement, one round trip, one commit. The row lock on the notebook orders the writers of all processes, so a
+ * seq is never visible before a lower one; a serial number would not promise that.
+ */
+const appendStatement = `
+  with notebook as materialized (
+    select id, last_seq, schema_version, archived_at is not null as archived, deleted_at is not null as deleted
+      from notebooks where id = :notebookId for update
+  ), denied as (
+    select distinct writer from unnest(cast(:writers as uuid[])) as writer
+     where not exists (select 1 from notebook_people p
+       where p.notebook_id = :notebookId and p.person_id = writer and p.role = any(cast(:writingRoles as text[])))
+  ), fit as (
+    select id, last_seq from notebook
+     where not archived and not deleted and last_seq = :after and schema_version <= :lowest
+       and not exists (select 1 from denied)
+  ), inserted as (
+    insert into document_updates (notebook_id, seq, update, person_id)
+    select fit.id, fit.last_seq + line.number, line.update, line.writer
+      from fit, unnest(cast(:updates as bytea[]), cast(:writers as uuid[])) with ordinality as line (update, writer, number)
+  ), raised as (
+    update notebooks n
+       set last_seq = fit.last_seq + :count, schema_version = greatest(n.schema_version, :highest)
+      from fit where n.id = fit.id
+  )
+  select cast(last_seq as text) as last_seq, schema_version, archived, deleted, exists (select 1 from fit) as stored,
+         coalesce((select array_agg(cast(writer as text)) from denied), '{}') as denied
+    from notebook`;
+
+interface UpdateRow {
+  readonly seq: string;
+  readonly update: Buffer;
+  readonly person_id: string | null;
+}
+const asStoredUpdate = (row: UpdateRow): StoredUpdate => ({
+  seq: Number(row.seq),
+  update: row.update,
+  personId: row.person_id,
+});
+
+async function tailAfter(database: Queryable, notebookId: string, seq: number): Promise<StoredUpdate[]> {
+  const found = await rows<UpdateRow>(
+    database,
+    `select seq::text, update, person_id from document_updates
+      where notebook_id = ? and seq > ? and quarantined_at is null order by seq`,
+    [notebookId, seq],
+  );
+  return found.map(asStoredUpdate);
+}
+
+export function createDocumentStore(database: Database): DocumentStore {
+  return {
+    load: (notebookId) =>
+      // One snapshot: a compaction between two reads would otherwise leave a gap.
+      database.transaction(
+        async (transaction) => {
+          const notebook = await firstRow<{
+            last_seq: string;
+            schema_version: number;
+            seq: string | null;
+            state: Buffer | null;
+          }>(
+            transaction,
+            `select n.last_seq::text, n.schema_version, s.seq::text, s.state
+               from notebooks n left join document_states s on s.notebook_id = n.id
+              where n.id = ? and n.deleted_at is null`,
+            [notebookId],
+          );
+          if (notebook === undefined) return null;
+          return {
+            state: notebook.state,
+            tail: await tailAfter(transaction, notebookId, Number(notebook.seq ?? 0)),
+            lastSeq: Number(notebook.last_seq),
+            schemaVersion: notebook.schema_version,
+          };
+        },
+        { isolationLevel: "repeatable read", readOnly: true },
+      ),
+
+    async append({ notebookId, after, updates, schema }) {
+      const answer = (await database.raw(appendStatement, {
+        notebookId,
+        after,
+        lowest: schema.lowest,
+        highest: schema.highest,
+        count: updates.length,
+        // Knex passes arrays on to PostgreSQL as they are; its binding type does not name arrays of buffers.
+        updates: updates.map(({ update }) => asBuffer(update)) as unknown as readonly string[],
+        writers: updates.map(({ personId }) => personId),
+        writingRoles,
+      })) as {
+        rows: (Omit<AppendOutcome, "lastSeq" | "schemaVersion"> & {
+          last_seq: string;
+          schema_version: number;
+        })[];
+      }; // as selected above
+      const [row] = answer.rows;
+      if (row === undefined) return null;
+      const { stored, archived, deleted, denied } = row;
+      return {
+        stored,
+        lastSeq: Number(row.last_seq) + (stored ? updates.length : 0),
+        schemaVersion: stored ? Math.max(row.schema_version, schema.highest) : row.schema_version,
+        archived,
+        deleted,
+        denied,
+      };
+    },
+
+    readAfter: (notebookId, seq) => tailAfter(database, notebookId, seq),
+
+    saveState: (notebookId, seq, state) =>
+      database.transaction(async (transaction) => {
+        await transaction.raw("select 1 from notebooks where id = ? for update", [notebookId]);
+        const saved = await rows(
+          transaction,
+          `insert into document_states (notebook_id, seq, state) values (?, ?, ?)
+           on conflict (notebook_id) do update
+             set seq = excluded.seq, state = excluded.state, compacted_at = now()
+             where document_states.seq < excluded.seq
+           returning 1`,
+          [notebookId, seq, asBuffer(state)],
+        );
+        return saved.length > 0;
+      }),
+
+    quarantine: (notebookId, bad) =>
+      database.transaction(async (transaction) => {
+        await transaction.raw(
+          `update document_updates set quarantined_at = now()
+            where notebook_id = ? and seq = any(?) and quarantined_at is null`,
+          [notebookId, bad.map(({ seq }) => seq)],
+        );
+        await transaction.raw(
+          `insert into events (notebook_id, what, details) values (?, 'document.row-quarantined', ?::jsonb)`,
+          [notebookId, JSON.stringify({ rows: bad })],
+        );
+      }),
+  };
+}
+
+function asBuffer(bytes: Uint8Array): Buffer {
+  return Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+}

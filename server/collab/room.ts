@@ -1,0 +1,336 @@
+/**
+ * A notebook that is open in this process. One state machine:
+ *
+ *   loading ──▶ open ◀──▶ draining ──▶ closed
+ *      │          │           │
+ *      └──────────┴───────────┴──────▶ failed
+ *
+ * A room stays as long as someone holds a lease on it (from before its load until their socket ends) or as long as
+ * something is not stored. Draining turns back to open when someone comes.
+ */
+import type { Logger } from "pino";
+import { closeCode, type ServerNotice } from "#contract/collab.ts";
+import { CommittedDocument, type CommittedBy } from "./committed-document.ts";
+import type { Connection } from "./connection.ts";
+import type { DocumentStore } from "./document-store.ts";
+import { writeStep1, writeUpdate } from "./frames.ts";
+import { Presence } from "./presence.ts";
+import { UpdateWriter, type QueuedUpdate, type WriterReports } from "./update-writer.ts";
+
+export type RoomState = "loading" | "open" | "draining" | "closed" | "failed";
+
+const ways: Readonly<Record<RoomState, readonly RoomState[]>> = {
+  loading: ["open", "failed"],
+  open: ["draining", "failed"],
+  draining: ["open", "closed", "failed"],
+  closed: [],
+  failed: [],
+};
+
+/** What others may see of an open room. */
+export interface OpenRoom {
+  readonly notebookId: string;
+  readonly content: CommittedDocument;
+  notify(notice: ServerNotice): void;
+}
+/** Told of what happens in rooms: evaluation and compaction listen. Must not throw. */
+export interface RoomObserver {
+  opened?(room: OpenRoom): void;
+  committed?(room: OpenRoom): void;
+  /** Before a room closes; it waits for this, and turns back if someone comes meanwhile. */
+  draining?(room: OpenRoom): Promise<void>;
+  /** Also after a failure. */
+  ended?(room: OpenRoom): void;
+}
+
+export interface RoomOptions {
+  readonly notebookId: string;
+  readonly store: DocumentStore;
+  readonly log: Logger;
+  readonly observers: readonly RoomObserver[];
+  /** How long an empty room is kept for those who reload their page. */
+  readonly lingerMs: number;
+  readonly retry?: { readonly firstMs: number; readonly longestMs: number };
+}
+
+export class RoomNotFound extends Error {}
+export class RoomFailed extends Error {}
+
+export interface Lease {
+  readonly room: Room;
+  release(): void;
+}
+
+interface Content {
+  readonly document: CommittedDocument;
+  readonly writer: UpdateWriter;
+  readonly open: OpenRoom;
+}
+
+export class Room {
+  readonly notebookId: string;
+  readonly members = new Set<Connection>();
+  /** Resolves once, when the room is closed or failed. */
+  readonly ended: Promise<void>;
+
+  readonly #options: RoomOptions;
+  readonly #loaded: Promise<Content>;
+  readonly #presence: Presence;
+  #state: RoomState = "loading";
+  #content: Content | null = null;
+  #leases = 0;
+  #stopping = false;
+  #linger: NodeJS.Timeout | null = null;
+  /** Told apart by number: one that was interrupted must not end the room under a later one. */
+  #drains = 0;
+  #resolveEnded: () => void = () => undefined;
+
+  constructor(options: RoomOptions) {
+    this.notebookId = options.notebookId;
+    this.#options = options;
+    this.#presence = new Presence({ audience: () => this.members });
+    this.ended = new Promise((resolve) => (this.#resolveEnded = resolve));
+    this.#loaded = this.#load();
+    // Whoever waits for the load hears of its failure; nobody may be waiting any more.
+    this.#loaded.catch(() => undefined);
+  }
+
+  get state(): RoomState {
+    return this.#state;
+  }
+
+  /** Waits for the load. Throws `RoomNotFound` or `RoomFailed`; the lease is then released already. */
+  async enter(): Promise<Lease> {
+    this.#leases += 1;
+    this.#stay();
+    let held = true;
+    const release = () => {
+      if (!held) return;
+      held = false;
+      this.#leases -= 1;
+      this.#leaveIfEmpty();
+    };
+    try {
+      await this.#loaded;
+    } catch (error) {
+      release();
+      throw error;
+    }
+    if (this.#state === "failed" || this.#state === "closed") {
+      release();
+      throw new RoomFailed("the notebook has just been closed");
+    }
+    return { room: this, release };
+  }
+
+  /** The caller holds a lease. */
+  join(connection: Connection): void {
+    const content = this.#opened();
+    if (content === null) return connection.close(closeCode.failed, "the notebook could not be kept open");
+    this.members.add(connection);
+    if (connection.rights.mayWrite) connection.send(writeStep1(content.document.document));
+    const present = this.#presence.snapshotFor(connection);
+    if (present !== null) connection.send(present);
+  }
+
+  leave(connection: Connection): void {
+    this.members.delete(connection);
+    this.#presence.leave(connection);
+    this.#content?.writer.forget(connection);
+  }
+
+  /** Null unless frames may be taken at the moment. */
+  get taking(): { readonly document: CommittedDocument; readonly writer: UpdateWriter } | null {
+    return this.#stopping || this.#state !== "open" ? null : this.#opened();
+  }
+
+  get presence(): Presence {
+    return this.#presence;
+  }
+
+  /** After a change of rights: tells the person, and asks for what they have typed meanwhile. */
+  rightsChanged(connection: Connection, before: { readonly mayWrite: boolean }): void {
+    if (!connection.rights.maySendPresence) this.#presence.leave(connection);
+    if (before.mayWrite === connection.rights.mayWrite) return;
+    connection.notify({ about: connection.rights.mayWrite ? "writable" : "read-only" });
+    if (!connection.rights.mayWrite) this.#content?.writer.forget(connection);
+    else if (this.#content !== null) connection.send(writeStep1(this.#content.document.document));
+  }
+
+  notify(notice: ServerNotice): void {
+    for (const member of this.members) member.notify(notice);
+  }
+
+  /** Called every few seconds. */
+  tick(now: number): void {
+    this.#presence.expire();
+    this.#content?.writer.expireHeld(now);
+  }
+
+  /** Takes no more frames, stores what is queued, closes the sockets and ends. */
+  async stop(patienceMs: number): Promise<void> {
+    this.#stopping = true;
+    if (this.#state === "loading") await this.#loaded.catch(() => undefined); // a failed load has ended the room
+    const content = this.#content;
+    if (content !== null) {
+      const timer = setTimeout(() => {
+        this.#options.log.error("updates could not be stored before the end; their authors still hold them");
+        content.writer.abandon();
+      }, patienceMs);
+      await content.writer.drained();
+      clearTimeout(timer);
+    }
+    for (const member of this.members) member.close(closeCode.goingAway, "the server is stopping");
+    await this.#drain();
+    await this.ended;
+  }
+
+  /** Ends at once; whoever comes next loads the room anew. */
+  fail(
+    error: unknown,
+    code: number = closeCode.failed,
+    reason = "the notebook is being loaded afresh",
+  ): void {
+    if (this.#state === "failed" || this.#state === "closed") return;
+    this.#options.log.warn({ err: error }, "a room failed");
+    this.#content?.writer.abandon();
+    for (const member of this.members) member.close(code, reason);
+    this.#end("failed");
+  }
+
+  #move(to: RoomState): void {
+    if (!ways[this.#state].includes(to)) throw new Error(`a room cannot go from ${this.#state} to ${to}`);
+    this.#state = to;
+  }
+
+  async #load(): Promise<Content> {
+    const { store, notebookId, observers, log } = this.#options;
+    try {
+      const stored = await store.load(notebookId);
+      if (stored === null) throw new RoomNotFound("there is no such notebook");
+      const document = new CommittedDocument(stored);
+      if (document.bad.length > 0) {
+        log.error({ rows: document.bad }, "stored rows do not apply and were set aside");
+        await store
+          .quarantine(notebookId, document.bad)
+          .catch((error: unknown) => log.error({ err: error }, "rows could not be set aside"));
+      }
+      const content = this.#open(document);
+      this.#move("open");
+      for (const observer of observers) observer.opened?.(content.open);
+      this.#leaveIfEmpty();
+      return content;
+    } catch (error) {
+      this.#options.log.warn({ err: error }, "a notebook could not be loaded");
+      this.#end("failed");
+      throw error instanceof RoomNotFound
+        ? error
+        : new RoomFailed("the notebook could not be loaded", { cause: error });
+    }
+  }
+
+  #open(document: CommittedDocument): Content {
+    const { notebookId, store, log, retry } = this.#options;
+    document.onUpdate((update, origin) => this.#broadcast(update, origin));
+    const writer = new UpdateWriter({
+      notebookId,
+      store,
+      document,
+      log,
+      reports: this.#reports(),
+      ...(retry === undefined ? {} : { retry }),
+    });
+    const open = { notebookId, content: document, notify: (notice: ServerNotice) => this.notify(notice) };
+    this.#content = { document, writer, open };
+    return this.#content;
+  }
+
+  #opened(): Content | null {
+    return this.#state === "open" || this.#state === "draining" ? this.#content : null;
+  }
+
+  #broadcast(update: Uint8Array, origin: CommittedBy): void {
+    const frame = writeUpdate(update);
+    for (const member of this.members) if (member.joined && member !== origin.connection) member.send(frame);
+  }
+
+  #reports(): WriterReports {
+    return {
+      committed: (batch) => this.#committed(batch),
+      refused: ({ connection }, reason) => connection.notify({ about: "rejected", reason }),
+      malformed: (connection, reason) => connection.close(closeCode.malformed, reason.slice(0, 100)),
+      lostRight: (people) => {
+        for (const member of this.members) {
+          const { visitor, rights } = member;
+          if (visitor.as !== "member" || !rights.mayWrite) continue;
+          if (people !== "everyone" && !people.includes(visitor.personId)) continue;
+          member.rights = { ...rights, mayWrite: false };
+          this.rightsChanged(member, rights);
+        }
+      },
+      schemaRaised: () => {
+        const version = this.#content?.document.schemaVersion ?? 0;
+        for (const member of this.members)
+          if (member.schemaVersion < version)
+            member.close(closeCode.schemaTooOld, "the notebook needs a newer page");
+      },
+      storeUnreachable: () => this.notify({ about: "store-unreachable" }),
+      storeBack: () => this.notify({ about: "store-back" }),
+      notebookGone: () =>
+        this.fail(new RoomNotFound("deleted"), closeCode.notFound, "the notebook was deleted"),
+      broken: (error) => this.fail(error),
+    };
+  }
+
+  #committed(batch: readonly QueuedUpdate[]): void {
+    for (const connection of new Set(batch.map(({ connection }) => connection))) connection.sendSaved();
+    const content = this.#content;
+    if (content === null || !batch.some(({ carries }) => carries)) return;
+    for (const observer of this.#options.observers) observer.committed?.(content.open);
+  }
+
+  #stay(): void {
+    if (this.#linger !== null) clearTimeout(this.#linger);
+    this.#linger = null;
+    if (this.#state !== "draining" || this.#stopping) return;
+    this.#drains += 1;
+    this.#move("open");
+  }
+
+  #leaveIfEmpty(): void {
+    if (this.#leases > 0 || this.#state !== "open" || this.#stopping || this.#linger !== null) return;
+    this.#linger = setTimeout(() => {
+      this.#linger = null;
+      this.#drain().catch((error: unknown) => this.fail(error));
+    }, this.#options.lingerMs);
+  }
+
+  /** Ends the room unless someone comes while it is being tidied. */
+  async #drain(): Promise<void> {
+    if (this.#state !== "open" || (this.#leases > 0 && !this.#stopping)) return;
+    const content = this.#content;
+    if (content === null) return;
+    this.#move("draining");
+    this.#drains += 1;
+    const turn = this.#drains;
+    await content.writer.drained();
+    for (const observer of this.#options.observers) {
+      if (turn !== this.#drains) return;
+      await observer.draining?.(content.open);
+    }
+    if (turn === this.#drains && this.state === "draining") this.#end("closed");
+  }
+
+  #end(state: "closed" | "failed"): void {
+    this.#move(state);
+    if (this.#linger !== null) clearTimeout(this.#linger);
+    this.#linger = null;
+    this.#presence.stop();
+    const content = this.#content;
+    if (content !== null) {
+      for (const observer of this.#options.observers) observer.ended?.(content.open);
+      content.document.destroy();
+    }
+    this.#resolveEnded();
+  }
+}

@@ -1,0 +1,319 @@
+/**
+ * The one ordered writer of a room. What arrives while one insert commits is gathered for the next (group commit);
+ * only what is committed is applied, broadcast and acknowledged. A store that cannot be reached is waited for.
+ */
+import { setTimeout as sleep } from "node:timers/promises";
+import type { Logger } from "pino";
+import { CommittedBy, type CommittedDocument } from "./committed-document.ts";
+import type { Connection } from "./connection.ts";
+import type { AppendOutcome, DocumentStore } from "./document-store.ts";
+import { BackPressure } from "./back-pressure.ts";
+import { HeldFrames } from "./held-frames.ts";
+import { BATCH } from "./limits.ts";
+import { isPassing } from "./store-errors.ts";
+import { assessUpdate, isDeletedIn, type Assessment, type KnownContent } from "./update-check.ts";
+
+export interface QueuedUpdate {
+  readonly connection: Connection;
+  readonly frame: number;
+  readonly personId: string;
+  readonly update: Uint8Array;
+  /** False when there is nothing new in it: it is acknowledged in its turn and not stored. */
+  carries: boolean;
+}
+
+/** What the writer has to say; the room acts on it. */
+export interface WriterReports {
+  committed(batch: readonly QueuedUpdate[]): void;
+  /** This update will never be stored. */
+  refused(update: QueuedUpdate, reason: string): void;
+  malformed(connection: Connection, reason: string): void;
+  /** These people may not write, or nobody may. */
+  lostRight(personIds: readonly string[] | "everyone"): void;
+  schemaRaised(): void;
+  storeUnreachable(): void;
+  storeBack(): void;
+  notebookGone(): void;
+  /** The room cannot go on and must be loaded afresh; nothing that was acknowledged is lost by that. */
+  broken(error: unknown): void;
+}
+
+export interface WriterOptions {
+  readonly notebookId: string;
+  readonly store: DocumentStore;
+  readonly document: CommittedDocument;
+  readonly reports: WriterReports;
+  readonly log: Logger;
+  readonly retry?: { readonly firstMs: number; readonly longestMs: number };
+}
+
+const ATTEMPTS_WHEN_HOPELESS = 3;
+
+export class UpdateWriter {
+  readonly #options: WriterOptions;
+  readonly #queue: QueuedUpdate[] = [];
+  /** Clocks that the queue brings clients to, beyond the document's. */
+  readonly #reaches = new Map<number, number>();
+  readonly #pressure = new BackPressure();
+  readonly #held = new HeldFrames();
+  readonly #known: KnownContent;
+  readonly #stop = new AbortController();
+  #running: Promise<void> | null = null;
+
+  constructor(options: WriterOptions) {
+    this.#options = options;
+    const { document } = options;
+    this.#known = {
+      clockOf: (client) => Math.max(this.#reaches.get(client) ?? 0, document.clockOf(client)),
+      isDeleted: (client, clock, length) => isDeletedIn(document.document, client, clock, length),
+    };
+  }
+
+  /** Takes a content frame of someone who may write. */
+  offer(connection: Connection, personId: string, update: Uint8Array): void {
+    const frame = connection.saved.take();
+    const assessment = assessUpdate(update, this.#known);
+    const entry = { connection, frame, personId, update, carries: assessment.verdict === "new" };
+    if (assessment.verdict === "malformed")
+      return this.#options.reports.malformed(connection, assessment.reason);
+    if (assessment.verdict === "waiting") return this.#hold(entry);
+    this.#enqueue(entry, assessment);
+    if (entry.carries) this.#retryHeld(connection);
+  }
+
+  /** Frames of a closed connection that wait for something are given up; queued ones are still stored. */
+  forget(connection: Connection): void {
+    this.#held.drop(connection);
+  }
+
+  /** Gives up frames that have waited too long for what they build on. */
+  expireHeld(now: number): void {
+    for (const connection of this.#held.connections()) this.#retryHeld(connection);
+    for (const entry of this.#held.takeExpired(now))
+      this.#options.reports.refused(entry, "it builds on something that never arrived");
+  }
+
+  get isIdle(): boolean {
+    return this.#running === null;
+  }
+
+  /** Resolves when everything queued is stored (or the writer was abandoned). */
+  async drained(): Promise<void> {
+    while (this.#running !== null) await this.#running;
+  }
+
+  /** Stops trying. What is queued was never acknowledged, so its authors still hold it. */
+  abandon(): void {
+    this.#stop.abort();
+    this.#queue.length = 0;
+    this.#reaches.clear();
+    this.#pressure.releaseAll();
+  }
+
+  /** Takes in rows that another process wrote. */
+  async #catchUp(atLeast: number): Promise<void> {
+    const { store, document, notebookId } = this.#options;
+    const rows = await store.readAfter(notebookId, document.lastSeq);
+    for (const { seq, update, personId } of rows) {
+      if (this.#stop.signal.aborted) return;
+      if (seq > document.lastSeq) this.#apply(seq, update, new CommittedBy(personId, null));
+    }
+    // Quarantined rows are passed over, and so leave gaps.
+    document.lastSeq = Math.max(document.lastSeq, atLeast);
+    this.#reassess();
+  }
+
+  #hold(entry: QueuedUpdate): void {
+    if (this.#held.add(entry, Date.now())) return;
+    this.#options.reports.malformed(entry.connection, "too much builds on something that is not there");
+  }
+
+  #retryHeld(connection: Connection): void {
+    for (let entry = this.#held.first(connection); entry !== null; entry = this.#held.first(connection)) {
+      const assessment = assessUpdate(entry.update, this.#known);
+      if (assessment.verdict === "waiting") return;
+      this.#held.takeFirst(connection);
+      if (assessment.verdict === "malformed")
+        return this.#options.reports.malformed(connection, assessment.reason);
+      this.#enqueue(entry, assessment);
+    }
+  }
+
+  #enqueue(entry: QueuedUpdate, assessment: Assessment): void {
+    entry.carries = assessment.verdict === "new";
+    if (assessment.verdict === "new") this.#note(assessment.reaches);
+    this.#queue.push(entry);
+    this.#pressure.add(entry.connection, entry.update.length);
+    this.#running ??= this.#run().finally(() => (this.#running = null));
+  }
+
+  #note(reaches: ReadonlyMap<number, number>): void {
+    for (const [client, clock] of reaches) this.#reaches.set(client, clock);
+  }
+
+  async #run(): Promise<void> {
+    // What arrives in the same turn of the event loop shares the first insert.
+    await Promise.resolve();
+    while (this.#queue.length > 0 && !this.#stop.signal.aborted) {
+      const batch = this.#nextBatch();
+      const carrying = batch.filter(({ carries }) => carries);
+      if (carrying.length === 0) {
+        this.#settle(batch);
+        continue;
+      }
+      const outcome = await this.#append(carrying);
+      if (outcome === "given up") return;
+      if (outcome === null) return this.#options.reports.notebookGone();
+      if (outcome.stored) this.#commit(batch, carrying, outcome);
+      else await this.#resolve(outcome);
+    }
+  }
+
+  #nextBatch(): readonly QueuedUpdate[] {
+    let bytes = 0;
+    let count = 0;
+    for (const { update } of this.#queue) {
+      if (count > 0 && (count >= BATCH.frames || bytes + update.length > BATCH.bytes)) break;
+      bytes += update.length;
+      count += 1;
+    }
+    return this.#queue.slice(0, count);
+  }
+
+  /** Tries until the store answers; only errors that cannot pass by themselves end it. */
+  async #append(carrying: readonly QueuedUpdate[]): Promise<AppendOutcome | null | "given up"> {
+    const { store, document, notebookId, reports, log, retry } = this.#options;
+    const versions = carrying.map(({ connection }) => connection.schemaVersion);
+    const request = {
+      notebookId,
+      after: document.lastSeq,
+      updates: carrying,
+      schema: { lowest: Math.min(...versions), highest: Math.max(...versions) },
+    };
+    const longest = retry?.longestMs ?? 2_000;
+    let delay = retry?.firstMs ?? 100;
+    let hopeless = 0;
+    for (let attempt = 1; ; attempt += 1) {
+      try {
+        const outcome = await store.append(request);
+        if (this.#stop.signal.aborted) return "given up";
+        if (attempt > 1) reports.storeBack();
+        return outcome;
+      } catch (error) {
+        if (this.#stop.signal.aborted) return "given up";
+        log.error({ err: error, attempt }, "updates could not be stored");
+        if (!isPassing(error)) hopeless += 1;
+        if (hopeless >= ATTEMPTS_WHEN_HOPELESS) {
+          reports.broken(error);
+          return "given up";
+        }
+        if (attempt === 1) reports.storeUnreachable();
+      }
+      await sleep(delay, undefined, { signal: this.#stop.signal }).catch(() => undefined); // aborted: looked at above
+      if (this.#stop.signal.aborted) return "given up";
+      delay = Math.min(delay * 2, longest);
+    }
+  }
+
+  #commit(batch: readonly QueuedUpdate[], carrying: readonly QueuedUpdate[], outcome: AppendOutcome): void {
+    const { document, reports } = this.#options;
+    let seq = outcome.lastSeq - carrying.length;
+    for (const { update, personId, connection } of carrying) {
+      seq += 1;
+      if (!this.#apply(seq, update, new CommittedBy(personId, connection))) return;
+    }
+    this.#settle(batch);
+    if (outcome.schemaVersion > document.schemaVersion) {
+      document.schemaVersion = outcome.schemaVersion;
+      reports.schemaRaised();
+    }
+  }
+
+  #settle(batch: readonly QueuedUpdate[]): void {
+    this.#queue.splice(0, batch.length);
+    if (this.#queue.length === 0) this.#reaches.clear();
+    for (const { connection, frame, update } of batch) {
+      connection.saved.commit(frame);
+      this.#pressure.remove(connection, update.length);
+    }
+    this.#options.reports.committed(batch);
+  }
+
+  /** Checked before it was stored, so this failing is our own mistake: the row is set aside and the room made anew. */
+  #apply(seq: number, update: Uint8Array, origin: CommittedBy): boolean {
+    const { document, store, notebookId, reports, log } = this.#options;
+    const applied = document.apply(seq, update, origin);
+    if (applied.ok) return true;
+    log.error({ seq, reason: applied.reason }, "a stored update does not apply");
+    store
+      .quarantine(notebookId, [{ seq, reason: applied.reason }])
+      .catch((error: unknown) => log.error({ err: error, seq }, "a row could not be set aside"))
+      .finally(() => reports.broken(new Error(`row ${seq} does not apply: ${applied.reason}`)));
+    this.#stop.abort();
+    return false;
+  }
+
+  /** Nothing was stored: sees to each reason, so that the next attempt differs from this one. */
+  async #resolve(outcome: AppendOutcome): Promise<void> {
+    const { document, reports } = this.#options;
+    if (outcome.deleted) return reports.notebookGone();
+    if (outcome.lastSeq < document.lastSeq)
+      return reports.broken(new Error("the stored log is shorter than what was committed"));
+    if (outcome.archived) {
+      this.#refuse(() => true, "the notebook is archived");
+      return reports.lostRight("everyone");
+    }
+    if (outcome.denied.length > 0) {
+      const denied = new Set(outcome.denied);
+      this.#refuse(({ personId }) => denied.has(personId), "you may only read this notebook");
+      reports.lostRight(outcome.denied);
+    }
+    if (outcome.schemaVersion > document.schemaVersion) {
+      document.schemaVersion = outcome.schemaVersion;
+      this.#refuse(
+        ({ connection }) => connection.schemaVersion < outcome.schemaVersion,
+        "the notebook needs a newer page",
+      );
+      reports.schemaRaised();
+    }
+    if (outcome.lastSeq > document.lastSeq) await this.#catchUpOrWait(outcome.lastSeq);
+  }
+
+  async #catchUpOrWait(lastSeq: number): Promise<void> {
+    try {
+      await this.#catchUp(lastSeq);
+    } catch (error) {
+      // The next append meets the same store and says what there is to say about it.
+      this.#options.log.error({ err: error }, "rows of another process could not be read");
+      await sleep(this.#options.retry?.firstMs ?? 100);
+    }
+  }
+
+  #refuse(isRefused: (entry: QueuedUpdate) => boolean, reason: string): void {
+    const refused = this.#queue.filter(isRefused);
+    const kept = this.#queue.filter((entry) => !refused.includes(entry));
+    this.#queue.splice(0, this.#queue.length, ...kept);
+    for (const entry of refused) {
+      this.#pressure.remove(entry.connection, entry.update.length);
+      this.#options.reports.refused(entry, reason);
+    }
+    this.#reassess();
+  }
+
+  /** What the queue builds on has changed: some of it may be known by now, or have lost what it builds on. */
+  #reassess(): void {
+    const queued = this.#queue.splice(0);
+    this.#reaches.clear();
+    for (const entry of queued) {
+      const assessment = assessUpdate(entry.update, this.#known);
+      if (assessment.verdict === "new") this.#note(assessment.reaches);
+      entry.carries = assessment.verdict === "new";
+      if (assessment.verdict === "new" || assessment.verdict === "known") {
+        this.#queue.push(entry);
+        continue;
+      }
+      this.#pressure.remove(entry.connection, entry.update.length);
+      this.#options.reports.refused(entry, "it builds on something that was not accepted");
+    }
+  }
+}
