@@ -132,9 +132,10 @@ export async function up(knex: Knex): Promise<void> {
       last_error text,
       created_at timestamptz not null default now(),
       next_attempt_at timestamptz not null default now(),
-      sent_at timestamptz
+      sent_at timestamptz,
+      given_up_at timestamptz
     );
-    create index mail_queue_due on mail_queue (next_attempt_at) where sent_at is null;
+    create index mail_queue_due on mail_queue (next_attempt_at) where sent_at is null and given_up_at is null;
 
     create table events (
       id bigint generated always as identity primary key,

@@ -7,6 +7,7 @@ import { openDatabase } from "./data/database.ts";
 import { createApp } from "./http/app.ts";
 import { openLog } from "./http/request-log.ts";
 import { openSessions } from "./http/sessions.ts";
+import { startMailSender } from "./mail/sender.ts";
 import { listenForAccessChanges } from "./policies/access-changes.ts";
 import type { Services } from "./services.ts";
 
@@ -69,9 +70,11 @@ export async function createServer(
   const sessions = openSessions(configuration, publicUrl, log);
   const services: Services = { configuration, publicUrl, database, log, sessions, accessChanges };
   httpServer.on("request", createApp(services));
+  const mail = await startMailSender(configuration, publicUrl, database, log);
 
   const stop = async () => {
     await closeHttp(httpServer);
+    await mail?.stop();
     await accessChanges.stop();
     await sessions.stop();
     await database.destroy();

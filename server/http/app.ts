@@ -8,7 +8,10 @@ import { createRateLimits } from "./rate-limits.ts";
 import { logRequests } from "./request-log.ts";
 import { meRoutes } from "./routes/me.ts";
 import { signInRoutes } from "./routes/sign-in.ts";
-import { requireSameSite } from "./same-site.ts";
+import { notebookRoutes } from "./routes/notebooks.ts";
+import { peopleRoutes } from "./routes/people.ts";
+import { refereeLinkRoutes } from "./routes/referee-links.ts";
+import { harmless, requireSameSite } from "./same-site.ts";
 import { hideReferrer, securityHeaders } from "./security-headers.ts";
 
 export function createApp(services: Services): Express {
@@ -28,9 +31,15 @@ export function createApp(services: Services): Express {
   });
   app.use("/api/referee", hideReferrer);
   app.use(["/api", "/auth"], sessions.middleware, requireSameSite(publicUrl));
+  app.use("/api", (request, response, next) =>
+    harmless.has(request.method) ? next() : limits.changes(request, response, next),
+  );
   app.use("/api", express.json({ limit: "64kb" }));
   app.use(signInRoutes(services, limits));
   app.use(meRoutes(services));
+  app.use(notebookRoutes(services));
+  app.use(peopleRoutes(services, limits));
+  app.use(refereeLinkRoutes(services, limits));
   app.use(["/api", "/auth", "/collab"], answerUnknownAddress);
   app.use(servePages(configuration.clientFolder, publicUrl));
   app.use(answerUnknownAddress);

@@ -5,7 +5,8 @@ import { refuse } from "../commands/outcome.ts";
 import { sendProblem } from "./problems.ts";
 
 export const CSRF_HEADER = "X-CSRF-Token";
-const harmless = new Set(["GET", "HEAD", "OPTIONS"]);
+/** Methods that change nothing (RFC 9110, section 9.2.1). */
+export const harmless: ReadonlySet<string> = new Set(["GET", "HEAD", "OPTIONS"]);
 
 export function newCsrfToken(): string {
   return randomBytes(32).toString("base64url");
