@@ -70,9 +70,9 @@ export function useSymbolCompletion({ source, setSource, field, ownSymbols }: Co
   }
 
   const fieldProps = {
-    role: "combobox",
+    // A text area keeps its own role, which knows no "expanded"; the active option is announced all the same.
     "aria-autocomplete": "list",
-    "aria-expanded": shown,
+    "aria-haspopup": "listbox",
     "aria-controls": listId,
     "aria-activedescendant": shown ? `${listId}-${String(active)}` : undefined,
   } as const;

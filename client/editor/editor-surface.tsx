@@ -1,0 +1,91 @@
+/** The writing surface: the section scale, the margin tick, the writing bar and the document itself. */
+import { EditorContent, useEditor } from "@tiptap/react";
+import { useEffect, useMemo, useRef, useState, useSyncExternalStore } from "react";
+import { say } from "../ui/notices.ts";
+import { isFinal, type ConnectionState } from "./connection-words.ts";
+import { editorExtensions } from "./editor-extensions.ts";
+import { createMathEditing } from "./mathematics/math-editing.ts";
+import { MathematicsEditor } from "./mathematics/mathematics-editor.tsx";
+import { premisesSymbols } from "./mathematics/premises-symbols.ts";
+import { NotebookContext, type OpenNotebook } from "./notebook-context.ts";
+import type { NotebookSession } from "./notebook-session.ts";
+import { MarginTick } from "./placing/margin-tick.tsx";
+import { SectionScale } from "./section-scale.tsx";
+import { WritingBar } from "./writing/writing-bar.tsx";
+
+interface EditorSurfaceProps {
+  readonly session: NotebookSession;
+  readonly state: ConnectionState;
+}
+
+export function EditorSurface({ session, state }: EditorSurfaceProps) {
+  const readOnly = state.readOnly || isFinal(state.phase);
+  const editing = useMemo(createMathEditing, []);
+  const [indexOpen, setIndexOpen] = useState(false);
+  const openIndex = useRef(() => undefined as void);
+  useEffect(() => {
+    openIndex.current = () => {
+      setIndexOpen(true);
+    };
+  });
+  const editor = useEditor(
+    {
+      extensions: editorExtensions({
+        session,
+        editing,
+        views: {},
+        openIndex: () => {
+          openIndex.current();
+        },
+      }),
+      editable: !readOnly,
+      // Our own style sheet has these rules; a strict Content-Security-Policy refuses injected ones.
+      injectCSS: false,
+      shouldRerenderOnTransaction: false,
+      editorProps: {
+        attributes: {
+          class: "prose",
+          "aria-label": "Notebook text",
+          "aria-multiline": "true",
+          spellcheck: "true",
+        },
+        scrollMargin: { top: 120, bottom: 80, left: 0, right: 0 },
+        scrollThreshold: { top: 120, bottom: 80, left: 0, right: 0 },
+      },
+    },
+    [session, editing],
+  );
+  useEffect(() => {
+    editor.setEditable(!readOnly, false);
+  }, [editor, readOnly]);
+  useHistoryWords(session);
+
+  const notebook = useMemo<OpenNotebook>(() => ({ session, editor, readOnly }), [session, editor, readOnly]);
+  return (
+    <NotebookContext value={notebook}>
+      <div className="notebook-surface">
+        <SectionScale editor={editor} />
+        <div className="notebook-column">
+          {!readOnly && <WritingBar editor={editor} />}
+          {!readOnly && <MarginTick editor={editor} open={indexOpen} onOpenChange={setIndexOpen} />}
+          <EditorContent editor={editor} />
+        </div>
+        {!readOnly && (
+          <MathematicsEditor
+            editor={editor}
+            editing={editing}
+            ownSymbols={() => premisesSymbols(editor.state.doc)}
+          />
+        )}
+      </div>
+    </NotebookContext>
+  );
+}
+
+/** Says when a step of the history had no effect any more. */
+function useHistoryWords({ history }: NotebookSession): void {
+  const { message } = useSyncExternalStore(history.subscribe, history.state);
+  useEffect(() => {
+    if (message) say(message.text, "refused");
+  }, [message]);
+}
