@@ -1,62 +1,55 @@
 /** Reads the expansion parameter Q: a number with or without uncertainty, or from the scales of the premises. */
 import type { Problem } from "../evaluation.ts";
-import type { Scale, ScaleRole, Theory } from "../premises/theory.ts";
-import { readNumber } from "./read-orders.ts";
+import { sigmaOf, unitText } from "../notation/quantity.ts";
+import { readQuantity } from "../notation/read-quantity.ts";
+import type { ScaleRole, Theory } from "../premises/theory.ts";
+import { declaredScales } from "./declared-scales.ts";
 
 export interface ExpansionParameter {
   readonly value: number;
+  /** Standard uncertainty; uncertainties are propagated to first order. */
   readonly sigma: number;
+  /** The expression as read; "Q" when it is a bare number. */
   readonly latex: string;
 }
 export type ReadExpansionParameter =
   | { readonly ok: true; readonly q: ExpansionParameter }
   | { readonly ok: false; readonly problems: readonly Problem[] };
 
-function refuse(code: string, facts: Readonly<Record<string, string | number>> = {}): ReadExpansionParameter {
-  return { ok: false, problems: [{ code, path: ["q"], facts }] };
-}
-
+/**
+ * @param text "0.3", "0.30(5)", "p/Lambda", "max(p, m)/Lambda"; "" is the probe scale over the heavy scale
+ * Problems, all at the field q: those of `readQuantity`, and `q-needs-premises`, `q-needs-roles`,
+ * `scale-without-number`, `q-has-units`, `q-not-positive`.
+ */
 export function readExpansionParameter(text: string, theory: Theory | null): ReadExpansionParameter {
-  const read = text.trim() === "" ? fromRoles(theory) : fromNumber(text);
-  if (!read.ok) return read;
-  return read.q.value > 0 ? read : refuse("q-not-positive", { value: read.q.value });
+  const typed = text.trim() === "" ? ratioOfRoles(theory) : text;
+  if (typeof typed !== "string") return { ok: false, problems: [typed] };
+  const reading = readQuantity(typed, declaredScales(theory), "q");
+  if (!reading.ok) {
+    const { code, facts } = reading.failure;
+    const isNameless = code === "unknown-symbol" && theory === null;
+    return refuse(isNameless ? "q-needs-premises" : code, { text: typed, ...facts });
+  }
+  const { quantity, latex } = reading.value;
+  if (quantity.energy.sign() !== 0) return refuse("q-has-units", { text: typed, unit: unitText(quantity) });
+  if (!(quantity.value > 0)) return refuse("q-not-positive", { value: quantity.value });
+  const isNumber = quantity.exact !== null && !/[A-Za-z\\]/.test(typed.replace(/\\pm|\d[eE][+-]?\d/g, ""));
+  return { ok: true, q: { value: quantity.value, sigma: sigmaOf(quantity), latex: isNumber ? "Q" : latex } };
 }
 
-/** "0.3", "3/10", "0.30(5)", "0.30 ± 0.05", "0.30 +- 0.05". Digits in parentheses count in the last place. */
-function fromNumber(text: string): ReadExpansionParameter {
-  const spread = /^\s*(?<value>[^()±]+?)\s*(?:\((?<digits>\d+)\)|(?:±|\+-|\\pm)\s*(?<sigma>\S+))?\s*$/u.exec(
-    text,
-  )?.groups;
-  const value = readNumber(spread?.["value"] ?? "");
-  if (value === null) return refuse("q-unreadable", { text });
-  const digits = spread?.["digits"];
-  const decimals = /\.(\d*)/.exec(spread?.["value"] ?? "")?.[1]?.length ?? 0;
-  const sigma = digits
-    ? Number(digits) * 10 ** -decimals
-    : (readNumber(spread?.["sigma"] ?? "0")?.toFloat() ?? NaN);
-  if (!(sigma >= 0)) return refuse("q-unreadable", { text });
-  return { ok: true, q: { value: value.toFloat(), sigma, latex: "Q" } };
+function refuse(code: string, facts: Problem["facts"] = {}): ReadExpansionParameter {
+  return { ok: false, problems: [problem(code, facts)] };
+}
+function problem(code: string, facts: Problem["facts"] = {}): Problem {
+  return { code, path: ["q"], facts };
 }
 
-/** Probe over heavy scale; relative uncertainties add in quadrature. */
-function fromRoles(theory: Theory | null): ReadExpansionParameter {
-  if (theory === null) return refuse("q-needs-premises");
-  const one = (role: ScaleRole): Scale | null => {
-    const found = theory.scales.filter((scale) => scale.role === role);
-    return found.length === 1 ? (found[0] ?? null) : null;
-  };
-  const probe = one("probe");
-  const heavy = one("heavy");
-  if (!probe || !heavy) return refuse("q-needs-roles");
-  const sizes = [probe, heavy].map((scale) => scale.gev ?? (scale.value === null ? null : scale));
-  const [top, bottom] = sizes;
-  const withoutNumber = [probe, heavy].find((_, index) => !sizes[index]);
-  if (!top || !bottom || top.value === null || bottom.value === null)
-    return refuse("scale-without-number", { symbol: withoutNumber?.symbol ?? "" });
-  if ((probe.gev === null) !== (heavy.gev === null))
-    return refuse("q-has-units", { text: `${probe.symbol}/${heavy.symbol}` });
-  if (bottom.value === 0) return refuse("q-not-finite", { text: `${probe.symbol}/${heavy.symbol}` });
-  const value = top.value / bottom.value;
-  const sigma = Math.hypot(top.sigma / bottom.value, (value * bottom.sigma) / bottom.value);
-  return { ok: true, q: { value, sigma, latex: `\\frac{${probe.latex}}{${heavy.latex}}` } };
+/** "p/Lambda" from the one probe and the one heavy scale. */
+function ratioOfRoles(theory: Theory | null): string | Problem {
+  if (!theory) return problem("q-needs-premises");
+  const withRole = (role: ScaleRole) => theory.scales.filter((scale) => scale.role === role);
+  const [probe, ...otherProbes] = withRole("probe");
+  const [heavy, ...otherHeavy] = withRole("heavy");
+  if (!probe || !heavy || otherProbes.length + otherHeavy.length > 0) return problem("q-needs-roles");
+  return `${probe.symbol}/${heavy.symbol}`;
 }
