@@ -13,3 +13,12 @@ export function useInvite(notebookId: string) {
     onSuccess: () => client.invalidateQueries({ queryKey: peopleKey(notebookId) }),
   });
 }
+
+export function useWithdrawInvitation(notebookId: string) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (invitationId: string) =>
+      askOrThrow<void>(`/api/notebooks/${notebookId}/invitations/${invitationId}`, { method: "DELETE" }),
+    onSuccess: () => client.invalidateQueries({ queryKey: peopleKey(notebookId) }),
+  });
+}

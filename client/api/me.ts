@@ -16,8 +16,11 @@ export function useMe() {
       const answer = await readMe(signal);
       if (!answer.ok) throw new RequestRefused(answer.problem);
       const before = client.getQueryData<Me>(meKey);
-      if (answer.value.person) setSessionLapsed(false);
-      else if (before?.person) {
+      if (answer.value.person) {
+        // Someone else signed in beside this page: nothing of the one before may stay on it.
+        if (before?.person && before.person.id !== answer.value.person.id) window.location.reload();
+        setSessionLapsed(false);
+      } else if (before?.person) {
         // The session ended while the page was open: keep the person, so that the page stays, and say so.
         setSessionLapsed(true);
         return { ...answer.value, person: before.person };

@@ -11,11 +11,18 @@ interface Props {
   readonly heading?: ReactNode;
   /** Stands in the header before the person and the theme. */
   readonly instruments?: ReactNode;
-  readonly narrow?: boolean;
+  /** A line's measure, a table's width, or all of the window with the page setting its own margins. */
+  readonly width?: "measure" | "page" | "window";
 }
 
+const widths = {
+  measure: "mx-auto max-w-[46rem] px-4 pt-10 pb-24 sm:px-8",
+  page: "mx-auto max-w-(--page) px-4 pt-10 pb-24 sm:px-8",
+  window: "",
+} as const;
+
 /** What every page has: the way past the header, the header, what to know about the session, the page itself. */
-export function PageFrame({ title, children, heading, instruments, narrow = false }: Props) {
+export function PageFrame({ title, children, heading, instruments, width = "page" }: Props) {
   return (
     <>
       <title>{title === "" ? "Subleading" : `${title} · Subleading`}</title>
@@ -27,14 +34,7 @@ export function PageFrame({ title, children, heading, instruments, narrow = fals
       </a>
       <SiteHeader heading={heading} instruments={instruments} />
       <SessionBanner />
-      <main
-        id="main"
-        tabIndex={-1}
-        className={classes(
-          "mx-auto px-4 pb-24 pt-10 outline-none sm:px-8",
-          narrow ? "max-w-(--measure)" : "max-w-(--page)",
-        )}
-      >
+      <main id="main" tabIndex={-1} className={classes("outline-none", widths[width])}>
         {children}
       </main>
     </>

@@ -1,7 +1,7 @@
 import { useSyncExternalStore } from "react";
 import { chooseTheme, onThemeChange, readThemeChoice, themeChoices, type ThemeChoice } from "../app/theme.ts";
 
-const names: Readonly<Record<ThemeChoice, string>> = { day: "Day", night: "Night", system: "As the system" };
+const names: Readonly<Record<ThemeChoice, string>> = { day: "Day", night: "Night", system: "System" };
 
 /** Day, night, or as the system says. A native list: three choices need nothing more. */
 export function ThemeSwitch() {

@@ -5,6 +5,7 @@ import { buttonClasses } from "../../ui/button.tsx";
 import { DemonstrationNote } from "../../ui/demonstration-note.tsx";
 import { PageFrame } from "../../ui/page-frame.tsx";
 import { Refusal } from "../../ui/refusal.tsx";
+import { Scale } from "./scale.tsx";
 
 /** The server comes back here when signing in did not end well. */
 const failures: ReadonlyMap<string, string> = new Map([
@@ -22,38 +23,41 @@ export function HomePage() {
   const failure = failures.get(parameters.get("sign-in") ?? "");
   const place = parameters.get("next") ?? "/shelf";
   return (
-    <PageFrame title="" narrow>
-      <h1 className="font-prose text-title leading-tight">
-        Write the power counting together; keep its error honest
-      </h1>
-      <div className="mt-6 space-y-4 font-prose text-prose leading-prose">
-        <p>
-          Subleading is a notebook for people who work with effective theories. Two or three of you write one
-          argument: prose, equations, and blocks that compute what the counting implies.
+    <PageFrame title="" width="window">
+      <Scale />
+      <div className="mx-auto max-w-[46rem] px-4 pt-12 pb-24 sm:px-8">
+        <h1 className="font-prose text-title leading-tight">
+          Write the power counting together; keep its error honest
+        </h1>
+        <div className="mt-6 space-y-4 font-prose text-prose leading-prose">
+          <p>
+            Subleading is a notebook for people who work with effective theories. Two or three of you write
+            one argument: prose, equations, and blocks that compute what the counting implies.
+          </p>
+          <p>
+            You state the premises once: dimension, fields, symmetries, scales, terms. From them the notebook
+            works out which terms are relevant, which graphs diverge and what they demand, where to stop for
+            the accuracy you need, and how large the part left out may be. The working stands open under every
+            result.
+          </p>
+          <p>
+            A number in a sentence is pinned to the block it came from. When a premise changes, every pin that
+            no longer agrees says so, with both values, before a referee does.
+          </p>
+        </div>
+        <Refusal sentence={failure ?? (me.isError ? sentenceOf(me.error) : null)} />
+        <p className="mt-8 flex flex-wrap items-center gap-4">
+          <a className={buttonClasses("main")} href={signInAddress(place)}>
+            Sign in with GitHub
+          </a>
+          <span className="text-small text-ink-2">
+            Your name, account name and e-mail address are read, nothing else.
+          </span>
         </p>
-        <p>
-          You state the premises once: dimension, fields, symmetries, scales, terms. From them the notebook
-          works out which terms are relevant, which graphs diverge and what they demand, where to stop for the
-          accuracy you need, and how large the part left out may be. The working stands open under every
-          result.
-        </p>
-        <p>
-          A number in a sentence is pinned to the block it came from. When a premise changes, every pin that
-          no longer agrees says so, with both values, before a referee does.
-        </p>
+        {me.data?.demonstration && (
+          <DemonstrationNote mailboxUrl={me.data.demonstration.mailboxUrl} className="mt-8" />
+        )}
       </div>
-      <Refusal sentence={failure ?? (me.isError ? sentenceOf(me.error) : null)} />
-      <p className="mt-8 flex flex-wrap items-center gap-4">
-        <a className={buttonClasses("main")} href={signInAddress(place)}>
-          Sign in with GitHub
-        </a>
-        <span className="text-small text-ink-2">
-          Your name, account name and e-mail address are read, nothing else.
-        </span>
-      </p>
-      {me.data?.demonstration && (
-        <DemonstrationNote mailboxUrl={me.data.demonstration.mailboxUrl} className="mt-8" />
-      )}
     </PageFrame>
   );
 }

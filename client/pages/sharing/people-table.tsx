@@ -88,7 +88,7 @@ function ManagePerson({ notebookId, member, isSelf }: Omit<EntryProps, "mayManag
     );
   };
   return (
-    <div className="flex flex-col items-end gap-1 sm:flex-row sm:items-center sm:gap-4">
+    <div className="flex flex-col items-end gap-2 sm:flex-row sm:items-center sm:gap-4">
       <select
         aria-label={`Role of ${member.name}`}
         className="control w-auto"

@@ -25,7 +25,7 @@ export function SharingPage() {
 
   if (notebook.isPending || people.isPending) {
     return (
-      <PageFrame title="Sharing" narrow>
+      <PageFrame title="Sharing" width="measure">
         <Loading what="Reading who takes part" />
       </PageFrame>
     );
@@ -33,7 +33,7 @@ export function SharingPage() {
   const failure = notebook.error ?? people.error;
   if (!notebook.data || !people.data || !me?.person) {
     return (
-      <PageFrame title="Sharing" narrow>
+      <PageFrame title="Sharing" width="measure">
         <h1 className="font-prose text-title leading-tight">
           {isNotFound(failure) ? "This notebook is not open to you" : "Sharing could not be read"}
         </h1>
@@ -60,7 +60,7 @@ export function SharingPage() {
   const { role, title, archivedAt } = notebook.data;
   const { person, demonstration } = me;
   return (
-    <PageFrame title={`Sharing “${title}”`} narrow>
+    <PageFrame title={`Sharing “${title}”`} width="measure">
       <p className="text-small text-ink-2">
         <TextLink to={`/notebooks/${id}`}>{title}</TextLink>
         {archivedAt && " · archived"}
@@ -75,7 +75,7 @@ export function SharingPage() {
       />
       {roleMay(role, "invitation.manage") && (
         <>
-          <WaitingInvitations invitations={people.data.invitations} />
+          <WaitingInvitations notebookId={id} invitations={people.data.invitations} />
           <InviteForm notebookId={id} />
           {demonstration && <DemonstrationNote mailboxUrl={demonstration.mailboxUrl} className="mt-4" />}
         </>

@@ -32,7 +32,7 @@ export function ShelfTable({ notebooks, labelledBy, stale }: Props) {
           <th role="columnheader">Last change</th>
           <th role="columnheader">People</th>
           <th role="columnheader">Pins</th>
-          <th role="columnheader">Your role</th>
+          <th role="columnheader">Role</th>
           <th role="columnheader">
             <span className="sr-only">Actions</span>
           </th>
@@ -60,7 +60,7 @@ function ShelfRow({ notebook }: { readonly notebook: NotebookRow }) {
       </th>
       <td role="cell" className="shelf-change">
         <Moment at={notebook.lastChangedAt} />
-        {notebook.lastChangedBy && <span className="text-ink-2"> by {notebook.lastChangedBy}</span>}
+        {notebook.lastChangedBy && <span className="shelf-by"> by {notebook.lastChangedBy}</span>}
       </td>
       <td role="cell" className="shelf-people">
         {sayPeople(notebook.people)}
@@ -80,7 +80,7 @@ function ShelfRow({ notebook }: { readonly notebook: NotebookRow }) {
 
 /** Moved and loose pins in words; the red hairline stands only where a number has moved. */
 function Pins({ moved, loose }: { readonly moved: number; readonly loose: number }) {
-  if (moved === 0 && loose === 0) return <span className="text-ink-2">hold</span>;
+  if (moved === 0 && loose === 0) return <span className="text-ink-2">none moved</span>;
   return (
     <span
       className={classes(

@@ -9,7 +9,7 @@ export function SignInPage({ problem }: { readonly problem?: string }) {
   const place = useLocation();
   const demonstration = useMe().data?.demonstration;
   return (
-    <PageFrame title="Sign in" narrow>
+    <PageFrame title="Sign in" width="measure">
       <h1 className="font-prose text-title leading-tight">Sign in to open this page</h1>
       {problem ? (
         <p role="alert" className="mt-6 border-l-2 border-hairline pl-3">
