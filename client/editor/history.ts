@@ -45,7 +45,8 @@ const overwrittenWords = {
 } as const;
 
 export function createHistory(doc: Y.Doc): NotebookHistory {
-  const manager = new Y.UndoManager(doc.getXmlFragment(FRAGMENT), {
+  const fragment = doc.getXmlFragment(FRAGMENT);
+  const manager = new Y.UndoManager(fragment, {
     trackedOrigins: new Set<unknown>([ySyncPluginKey, FIELD_ORIGIN]),
     // A paragraph that a colleague has meanwhile written in stays.
     deleteFilter: (item) => defaultDeleteFilter(item, defaultProtectedNodes),
@@ -74,13 +75,17 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
     const newest = manager[stackName].at(-1);
     if (!newest) return "nothing";
     const older = manager[stackName].slice(0, -1);
+    const before = fragment.toString();
     manager[stackName] = [newest];
-    let effective: boolean;
+    let applied: boolean;
     try {
-      effective = manager[direction]() !== null;
+      applied = manager[direction]() !== null;
     } finally {
       manager[stackName] = older;
     }
+    // Removing the empty husk of a text that a colleague has deleted counts for Yjs, yet nobody can see it.
+    const effective = applied && fragment.toString() !== before;
+    if (applied && !effective) manager[direction === "undo" ? "redoStack" : "undoStack"].pop();
     manager.stopCapturing();
     publish(effective ? null : overwrittenWords[direction]);
     return effective ? "done" : "overwritten";

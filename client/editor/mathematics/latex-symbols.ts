@@ -60,7 +60,7 @@ const taking: readonly (readonly [group: string, insert: string, example: string
   ["Structure", "\\boxed{▯}", "\\boxed{x}"],
   ["Structure", "\\tag{▯}", "\\text{(tag)}"],
   ["Structure", "\\mathcal{O}(▯)", "\\mathcal{O}(p^n)"],
-  ["Structure", "\\slashed{▯}", "\\not{p}"],
+  ["Structure", "\\not{▯}", "\\not{p}"],
   ["Accents", "\\hat{▯}", "\\hat{a}"],
   ["Accents", "\\widehat{▯}", "\\widehat{ab}"],
   ["Accents", "\\tilde{▯}", "\\tilde{a}"],
