@@ -2,6 +2,7 @@
 import { createServer as createHttpServer, type Server } from "node:http";
 import type { AddressInfo } from "node:net";
 import type { DestinationStream } from "pino";
+import { attachCollab } from "./collab/attach-collab.ts";
 import type { Configuration } from "./configuration.ts";
 import { openDatabase } from "./data/database.ts";
 import { createApp } from "./http/app.ts";
@@ -70,11 +71,15 @@ export async function createServer(
   const sessions = openSessions(configuration, publicUrl, log);
   const services: Services = { configuration, publicUrl, database, log, sessions, accessChanges };
   httpServer.on("request", createApp(services));
-  const mail = await startMailSender(configuration, publicUrl, database, log);
+  const collab = attachCollab(httpServer, services);
+  const mail = startMailSender(services);
 
   const stop = async () => {
-    await closeHttp(httpServer);
-    await mail?.stop();
+    const closed = closeHttp(httpServer);
+    // Open sockets would keep the HTTP server from closing; what they sent is stored first.
+    await collab.stop();
+    await closed;
+    await mail.stop();
     await accessChanges.stop();
     await sessions.stop();
     await database.destroy();

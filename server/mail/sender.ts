@@ -3,10 +3,9 @@
  * A process that dies between the sending and the commit sends the letter again, with the same Message-ID.
  */
 import { createTransport, type Transporter } from "nodemailer";
-import type { Logger } from "pino";
-import type { Configuration } from "../configuration.ts";
 import { firstRow, type Database } from "../data/database.ts";
 import { listenForNotifications } from "../data/notifications.ts";
+import type { Services } from "../services.ts";
 import { MAIL_CHANNEL } from "./queue.ts";
 
 export interface MailSender {
@@ -19,6 +18,14 @@ interface Waiting {
   readonly subject: string;
   readonly body: string;
   readonly attempts: number;
+}
+
+interface PostOffice {
+  readonly database: Database;
+  readonly transport: Transporter;
+  readonly from: string;
+  /** Ends the Message-ID. */
+  readonly host: string;
 }
 
 const MOST_ATTEMPTS = 10;
@@ -39,12 +46,7 @@ function isPermanent(error: unknown): boolean {
   return typeof code === "number" && code >= 500 && code < 600;
 }
 
-async function sendOne(
-  database: Database,
-  transport: Transporter,
-  from: string,
-  host: string,
-): Promise<"sent" | "failed" | "none"> {
+async function sendOne({ database, transport, from, host }: PostOffice): Promise<"sent" | "failed" | "none"> {
   return database.transaction(async (transaction) => {
     const letter = await firstRow<Waiting>(
       transaction,
@@ -81,15 +83,11 @@ async function sendOne(
   });
 }
 
-export async function startMailSender(
-  configuration: Configuration,
-  publicUrl: string,
-  database: Database,
-  log: Logger,
-): Promise<MailSender | null> {
+/** Begins at once; while the database or the mail service is away, letters wait and nothing else suffers. */
+export function startMailSender({ configuration, publicUrl, database, log }: Services): MailSender {
   if (configuration.smtpUrl === null) {
     log.warn("SMTP_URL is not set: letters wait in the queue");
-    return null;
+    return { stop: () => Promise.resolve() };
   }
   const transport = createTransport({
     url: configuration.smtpUrl,
@@ -100,51 +98,51 @@ export async function startMailSender(
     disableFileAccess: true,
     disableUrlAccess: true,
   });
-  const { hostname } = new URL(publicUrl);
+  const postOffice: PostOffice = {
+    database,
+    transport,
+    from: configuration.mailFrom,
+    host: new URL(publicUrl).hostname,
+  };
   let stopped = false;
   let work: Promise<void> | null = null;
   let isAskedAgain = false;
 
   async function sendAll(): Promise<void> {
-    for (;;) {
-      if (stopped) return;
+    // Told of another letter while looking: look once more, or it waits for the next round.
+    while (isAskedAgain && !stopped) {
       isAskedAgain = false;
-      try {
-        let result: Awaited<ReturnType<typeof sendOne>>;
-        do {
-          result = await sendOne(database, transport, configuration.mailFrom, hostname);
-          if (result === "failed") log.warn("a letter could not be sent");
-        } while (result !== "none" && !stopped);
-      } catch (error) {
-        log.error({ err: error }, "the mail queue cannot be read");
-        return;
-      }
-      // Told of another letter while looking: look once more, or it waits for the next round.
-      if (!isAskedAgain) return;
+      let result: Awaited<ReturnType<typeof sendOne>>;
+      do {
+        result = await sendOne(postOffice);
+        if (result === "failed") log.warn("a letter could not be sent");
+      } while (result !== "none" && !stopped);
     }
   }
   function look(): void {
-    if (stopped) return;
     isAskedAgain = true;
-    work ??= sendAll().finally(() => {
-      work = null;
-    });
+    work ??= sendAll()
+      .catch((error: unknown) => log.error({ err: error }, "the mail queue cannot be read"))
+      .finally(() => {
+        work = null;
+      });
   }
-  const notifications = await listenForNotifications({
-    databaseUrl: configuration.databaseUrl,
-    channels: [MAIL_CHANNEL],
-    log,
-    onNotification: look,
-    onGap: look,
-  });
   const timer = setInterval(look, LOOK_EVERY_MS);
   timer.unref();
+  const { databaseUrl } = configuration;
+  const channels = [MAIL_CHANNEL];
+  const listening = listenForNotifications({ databaseUrl, channels, log, onNotification: look, onGap: look });
+  // Without the listener a letter waits for the next round, which is late but not lost.
+  listening.catch((error: unknown) => log.error({ err: error }, "new letters are not announced"));
   look();
   return {
     stop: async () => {
       stopped = true;
       clearInterval(timer);
-      await notifications.stop();
+      await listening.then(
+        (notifications) => notifications.stop(),
+        () => undefined, // It never listened; that was logged above.
+      );
       await work;
       transport.close();
     },

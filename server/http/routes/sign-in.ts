@@ -42,25 +42,37 @@ function explainFailure(response: Response, failure: Failure, next: string): voi
   response.redirect(303, `/?${query.toString()}`);
 }
 
-/** Sockets opened under the session that ends now are closed by whoever holds them. */
-async function announceEndOfSession(services: Services, request: Request): Promise<void> {
-  if (request.session.personId === undefined) return;
+/**
+ * Sockets opened under the session are closed by whoever holds them. Told only once the session is gone:
+ * they look it up again when they hear of it.
+ */
+async function announceEndOfSession(services: Services, sessionName: string): Promise<void> {
   await announceAccessChange(services.database, {
     about: "session",
-    sessionId: digestOfSession(request.sessionID),
+    sessionId: digestOfSession(sessionName),
   });
 }
 
 async function completeSignIn(services: Services, request: Request, account: Account): Promise<string> {
   const next = safeNextPath(request.session.next);
   const personId = await signInPerson(services.database, account);
-  await announceEndOfSession(services, request);
+  const before = { sessionName: request.sessionID, isSignedIn: request.session.personId !== undefined };
   // A new session name: one that was planted in the browser before must not become a signed-in one.
   await regenerate(request);
   request.session.personId = personId;
   request.session.csrfToken = newCsrfToken();
   await save(request);
+  if (before.isSignedIn) await announceEndOfSession(services, before.sessionName);
   return next;
+}
+
+async function signOut(services: Services, request: Request): Promise<void> {
+  const { personId } = request.session;
+  const sessionName = request.sessionID;
+  await destroy(request);
+  if (personId === undefined) return;
+  await announceEndOfSession(services, sessionName);
+  await recordEvent(services.database, { personId, what: "signed-out" });
 }
 
 export function signInRoutes(services: Services, limits: RateLimits): Router {
@@ -96,12 +108,7 @@ export function signInRoutes(services: Services, limits: RateLimits): Router {
   });
 
   router.post("/auth/sign-out", async (request, response) => {
-    const { personId } = request.session;
-    if (personId !== undefined) {
-      await announceEndOfSession(services, request);
-      await recordEvent(services.database, { personId, what: "signed-out" });
-    }
-    await destroy(request);
+    await signOut(services, request);
     response.clearCookie(services.sessions.cookieName, { path: "/" });
     response.status(204).end();
   });
