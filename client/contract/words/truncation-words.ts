@@ -37,7 +37,7 @@ export const truncationWords: Words = {
     "Q is to come from the scales of the premises, but this block stands on none. Choose premises, or enter a number.",
   "q-needs-roles": () =>
     "Q is left empty, so it is the probe scale over the heavy scale; the premises need exactly one of each. Or enter Q.",
-  "scale-without-number": ({ symbol }) => `The scale ${quoted(symbol)} has no value in the premises.`,
+  "scale-has-no-number": ({ symbol }) => `The scale ${quoted(symbol)} has no value in the premises.`,
   "q-has-units": ({ text }) => `${quoted(text)} is not a pure number: its units do not cancel.`,
   "q-not-finite": ({ text }) => `${quoted(text)} divides by zero.`,
   "sum-needs-q-below-one": ({ value }) =>

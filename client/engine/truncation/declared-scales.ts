@@ -6,7 +6,10 @@ import type { Scale, Theory } from "../premises/theory.ts";
 
 const nothing: Declared = { lookUp: () => null, symbols: [] };
 
-/** Each scale is an independent source of uncertainty, named by its row. Without a theory no name is declared. */
+/**
+ * Scales keep the sources of their uncertainty, so that two made of a third move together.
+ * Without a theory no name is declared. `lookUp` fails with `scale-has-no-number`.
+ */
 export function declaredScales(theory: Theory | null): Declared {
   const scales = theory?.scales ?? [];
   return {
@@ -14,17 +17,18 @@ export function declaredScales(theory: Theory | null): Declared {
     lookUp: (symbol) => {
       const scale = scales.find((candidate) => candidate.symbol === symbol);
       if (!scale) return null;
-      return quantityOf(scale) ?? { code: "scale-without-number", facts: { symbol } };
+      return quantityOf(scale) ?? { code: "scale-has-no-number", facts: { symbol } };
     },
   };
 }
 
-function quantityOf({ rowId, value, sigma, unit }: Scale): Quantity | null {
+function quantityOf({ rowId, value, sigma, unit, spread }: Scale): Quantity | null {
   if (value === null) return null;
   const one = unit === "" ? number(Rational.one) : unitQuantity(unit);
   if (!one) return null;
-  const spread: ReadonlyMap<string, number> = sigma > 0 ? new Map([[rowId, sigma * one.value]]) : new Map();
-  return { ...one, value: value * one.value, exact: null, spread };
+  const sources = Object.entries(spread ?? (sigma > 0 ? { [rowId]: sigma } : {}));
+  const inGeV = new Map(sources.map(([source, share]) => [source, share * one.value]));
+  return { ...one, value: value * one.value, exact: null, spread: inGeV };
 }
 
 /** "fm^-1" as a quantity: the size of one of it. */

@@ -19,7 +19,7 @@ export type ReadExpansionParameter =
 /**
  * @param text "0.3", "0.30(5)", "p/Lambda", "max(p, m)/Lambda"; "" is the probe scale over the heavy scale
  * Problems, all at the field q: those of `readQuantity`, and `q-needs-premises`, `q-needs-roles`,
- * `scale-without-number`, `q-has-units`, `q-not-positive`.
+ * `scale-has-no-number`, `q-has-units`, `q-not-positive`.
  */
 export function readExpansionParameter(text: string, theory: Theory | null): ReadExpansionParameter {
   const typed = text.trim() === "" ? ratioOfRoles(theory) : text;

@@ -63,7 +63,7 @@ describe("the expansion parameter", () => {
     ["p/Lambda", null, "q-needs-premises"],
     ["", theoryOf(scale("p", "probe", 1)), "q-needs-roles"],
     ["", theoryOf(scale("p", "probe", 1), scale("k", "probe", 2), scale("L", "heavy", 3)), "q-needs-roles"],
-    ["", theoryOf(scale("p", "probe", null), scale("L", "heavy", 3)), "scale-without-number"],
+    ["", theoryOf(scale("p", "probe", null), scale("L", "heavy", 3)), "scale-has-no-number"],
     ["p/M", lantern, "unknown-symbol"],
     ["p", lantern, "q-has-units"],
     ["p - m/Lambda", lantern, "units-differ"],
@@ -73,6 +73,13 @@ describe("the expansion parameter", () => {
     ["p/", lantern, "missing-operand"],
   ])("%j is refused", (text, theory, code) => {
     expect(read(text, theory)).toEqual([code]);
+  });
+
+  it("keeps scales made of one another correlated", () => {
+    // k = Λ/8 moves with Λ, so k/Λ has no uncertainty at all.
+    const heavy = { ...scale("Lambda", "heavy", 3.2, 0.4, "TeV"), spread: { "s1@0": 0.4 } };
+    const made = { ...scale("k", "other", 400, 50), spread: { "s1@0": 50 } };
+    expect(read("k/Lambda", theoryOf(heavy, made))).toEqual({ value: 0.125, sigma: 0 });
   });
 
   it("names the field and quotes what was typed", () => {
