@@ -10,6 +10,7 @@ import type { Sessions } from "../http/sessions.ts";
 import type { AccessChanges } from "../policies/access-changes.ts";
 import { AccessWatch } from "./access-watch.ts";
 import { admit, type Admitted } from "./admission.ts";
+import { compactHere, createCompaction, type Compact } from "./compaction.ts";
 import { Connection } from "./connection.ts";
 import { createDocumentStore, type DocumentStore } from "./document-store.ts";
 import {
@@ -30,6 +31,8 @@ export interface CollabDependencies {
   /** Its origin is the only one that pages may come from. */
   readonly publicUrl: string;
   readonly observers?: readonly RoomObserver[];
+  /** Done in another thread where there is one. */
+  readonly compact?: Compact;
   /** For tests: a store that is slow or fails on purpose. */
   readonly store?: DocumentStore;
   readonly lingerMs?: number;
@@ -48,10 +51,14 @@ const RECHECK_EVERY_MS = 30_000;
 
 export function attachCollab(server: Server, dependencies: CollabDependencies): Collab {
   const { database, log, sessions, accessChanges } = dependencies;
+  const store = dependencies.store ?? createDocumentStore(database);
   const rooms = new Rooms({
-    store: dependencies.store ?? createDocumentStore(database),
+    store,
     log,
-    observers: dependencies.observers ?? [],
+    observers: [
+      ...(dependencies.observers ?? []),
+      createCompaction({ store, log, compact: dependencies.compact ?? compactHere }),
+    ],
     lingerMs: dependencies.lingerMs ?? LINGER_MS,
     ...(dependencies.retry === undefined ? {} : { retry: dependencies.retry }),
   });

@@ -1,0 +1,31 @@
+/** The inside of a compute thread. */
+import { buildDocument } from "../collab/build-document.ts";
+import { compactHere, type Compacted } from "../collab/compaction.ts";
+import { evaluateFile } from "./evaluate-file.ts";
+import { createMemo } from "./memo.ts";
+import { settleDocument } from "./settle-document.ts";
+import type { ComputeTask, FileAnswer, SettledDocument } from "./tasks.ts";
+
+const memo = createMemo(2_000);
+
+export default function perform(task: ComputeTask): SettledDocument | FileAnswer | Promise<Compacted> {
+  switch (task.task) {
+    case "settle": {
+      const { document } = buildDocument(task.document, []);
+      const settled = settleDocument(document, memo);
+      document.destroy();
+      return settled;
+    }
+    case "file": {
+      const mistakes: string[] = [];
+      const outcome = evaluateFile(task.body, (error, block) => {
+        mistakes.push(
+          `${block.kind}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`,
+        );
+      });
+      return { outcome, mistakes };
+    }
+    case "compact":
+      return compactHere(task);
+  }
+}

@@ -1,0 +1,130 @@
+/** Evaluates a notebook once its document has settled, and stores what is new. */
+import type { Logger } from "pino";
+import type { OpenRoom, RoomObserver } from "../collab/room.ts";
+import { isPassing } from "../collab/store-errors.ts";
+import type { Database } from "../data/database.ts";
+import { ComputeTimeout, type ComputePool } from "./compute-pool.ts";
+import { storeLastChange, storeSettled } from "./store-settled.ts";
+import { TouchedBlocks, type Touched } from "./touched-blocks.ts";
+
+export interface SettlingOptions {
+  readonly database: Database;
+  readonly pool: ComputePool;
+  readonly log: Logger;
+  readonly times?: Partial<SettlingTimes>;
+}
+export interface SettlingTimes {
+  /** After the last change. */
+  readonly quietMs: number;
+  /** After the first change, however long the typing goes on. */
+  readonly longestMs: number;
+  readonly limitMs: number;
+  readonly retryMs: number;
+}
+const usualTimes: SettlingTimes = { quietMs: 300, longestMs: 2_000, limitMs: 10_000, retryMs: 2_000 };
+
+export function createSettling(options: SettlingOptions): RoomObserver {
+  const rooms = new Map<OpenRoom, RoomSettling>();
+  return {
+    opened(room) {
+      const settling = new RoomSettling(room, options);
+      rooms.set(room, settling);
+      // Results may be missing: the engine has a new version, or the last process ended before it stored them.
+      settling.checkAll();
+    },
+    committed: (room) => rooms.get(room)?.schedule(),
+    draining: async (room) => rooms.get(room)?.finish(),
+    ended(room) {
+      rooms.get(room)?.stop();
+      rooms.delete(room);
+    },
+  };
+}
+
+class RoomSettling {
+  readonly #touched: TouchedBlocks;
+  readonly #times: SettlingTimes;
+  #timer: NodeJS.Timeout | null = null;
+  #firstChangeAt: number | null = null;
+  #everything = false;
+  #running: Promise<void> | null = null;
+  #stopped = false;
+
+  constructor(
+    private readonly room: OpenRoom,
+    private readonly options: SettlingOptions,
+  ) {
+    this.#touched = new TouchedBlocks(room.content.document);
+    this.#times = { ...usualTimes, ...options.times };
+  }
+
+  checkAll(): void {
+    this.#everything = true;
+    this.schedule();
+  }
+
+  schedule(): void {
+    if (this.#stopped) return;
+    const now = Date.now();
+    this.#firstChangeAt ??= now;
+    const latest = this.#firstChangeAt + this.#times.longestMs;
+    this.#runIn(Math.max(0, Math.min(this.#times.quietMs, latest - now)));
+  }
+
+  /** Before the room closes: what waits is done now. */
+  async finish(): Promise<void> {
+    if (this.#timer !== null) this.#runIn(null);
+    await this.#running;
+  }
+
+  stop(): void {
+    this.#stopped = true;
+    if (this.#timer !== null) clearTimeout(this.#timer);
+    this.#timer = null;
+  }
+
+  /** One run at a time; null means now. */
+  #runIn(wait: number | null): void {
+    if (this.#timer !== null) clearTimeout(this.#timer);
+    this.#timer = null;
+    const run = () => {
+      this.#timer = null;
+      this.#running = (this.#running ?? Promise.resolve())
+        .then(() => this.#settle())
+        .finally(() => (this.#running = null));
+    };
+    if (wait === null) run();
+    else this.#timer = setTimeout(run, wait);
+  }
+
+  async #settle(): Promise<void> {
+    if (this.#stopped) return;
+    const { log } = this.options;
+    const touched = this.#touched.take();
+    const everything = this.#everything;
+    this.#everything = false;
+    this.#firstChangeAt = null;
+    try {
+      if (everything || touched.mayChangeResults) await this.#evaluate(touched);
+      if (touched.anything) await storeLastChange(this.options.database, this.room.notebookId, touched.last);
+    } catch (error) {
+      log.error({ err: error, notebookId: this.room.notebookId }, "a notebook could not be settled");
+      // What takes too long or is refused as it is would fare no better; the next change is tried afresh.
+      if (error instanceof ComputeTimeout || !isPassing(error) || this.#stopped) return;
+      this.#touched.giveBack(touched);
+      this.#everything ||= everything;
+      if (this.#timer === null) this.#runIn(this.#times.retryMs);
+    }
+  }
+
+  async #evaluate(touched: Touched): Promise<void> {
+    const { database, pool, log } = this.options;
+    const { notebookId, content } = this.room;
+    const settled = await pool.run({ task: "settle", document: content.encoded() }, this.#times.limitMs);
+    for (const mistake of settled.mistakes) log.error({ notebookId, mistake }, "a block kind threw");
+    const changed = await database.transaction((transaction) =>
+      storeSettled(transaction, notebookId, settled, touched),
+    );
+    if (changed) this.room.notify({ about: "results" });
+  }
+}

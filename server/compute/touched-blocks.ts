@@ -1,0 +1,94 @@
+/** Remembers whose committed change touched which block, until the results of that change are stored. */
+import * as Y from "yjs";
+import { kindNames } from "#engine/index.ts";
+import { FRAGMENT } from "#contract/collab.ts";
+import { CommittedBy } from "../collab/committed-document.ts";
+
+export interface Touched {
+  /** By block id; null when the account is gone. */
+  readonly blocks: ReadonlyMap<string, string | null>;
+  /** Who last added or removed a node: a block may change because the premises it stood on went. */
+  readonly structure: string | null;
+  /** Who changed anything last. */
+  readonly last: string | null;
+  /** False when only text was typed, which no result depends on. */
+  readonly mayChangeResults: boolean;
+  readonly anything: boolean;
+}
+
+const kinds: ReadonlySet<string> = new Set(kindNames);
+
+export class TouchedBlocks {
+  #blocks = new Map<string, string | null>();
+  #structure: string | null = null;
+  #last: string | null = null;
+  #mayChangeResults = false;
+  #anything = false;
+
+  constructor(document: Y.Doc) {
+    document
+      .getXmlFragment(FRAGMENT)
+      .observeDeep((events: readonly Y.YEvent<Y.XmlFragment | Y.XmlText>[], transaction) => {
+        if (transaction.origin instanceof CommittedBy) this.#note(events, transaction.origin.personId);
+      });
+  }
+
+  /** What was touched since this was asked last. */
+  take(): Touched {
+    const touched = {
+      blocks: this.#blocks,
+      structure: this.#structure,
+      last: this.#last,
+      mayChangeResults: this.#mayChangeResults,
+      anything: this.#anything,
+    };
+    this.#blocks = new Map();
+    this.#structure = null;
+    this.#last = null;
+    this.#mayChangeResults = this.#anything = false;
+    return touched;
+  }
+
+  /** Puts back what could not be stored; newer touches win. */
+  giveBack(touched: Touched): void {
+    this.#blocks = new Map([...touched.blocks, ...this.#blocks]);
+    this.#structure ??= touched.structure;
+    this.#last ??= touched.last;
+    this.#mayChangeResults ||= touched.mayChangeResults;
+    this.#anything ||= touched.anything;
+  }
+
+  #note(events: readonly Y.YEvent<Y.XmlFragment | Y.XmlText>[], personId: string | null): void {
+    this.#anything = true;
+    this.#last = personId;
+    for (const event of events) {
+      if (event.target instanceof Y.XmlText) continue;
+      this.#mayChangeResults = true;
+      const within = enclosingBlock(event.target);
+      if (within !== null) {
+        this.#blocks.set(within, personId);
+        continue;
+      }
+      this.#structure = personId;
+      for (const item of event.changes.added)
+        if (item.content instanceof Y.ContentType)
+          for (const blockId of blocksIn(item.content.type)) this.#blocks.set(blockId, personId);
+    }
+  }
+}
+
+/** The id of the block that a node is or lies in; null in prose. */
+function enclosingBlock(node: Y.XmlFragment | Y.XmlText): string | null {
+  for (let at: unknown = node; at instanceof Y.XmlFragment || at instanceof Y.XmlText; at = at.parent)
+    if (isBlock(at)) return at.getAttribute("blockId") ?? "";
+  return null;
+}
+
+function* blocksIn(node: unknown): Generator<string> {
+  if (isBlock(node)) yield node.getAttribute("blockId") ?? "";
+  else if (node instanceof Y.XmlFragment) for (const child of node.toArray()) yield* blocksIn(child);
+}
+
+function isBlock(node: unknown): node is Y.XmlElement<{ blockId: string }> {
+  return node instanceof Y.XmlElement && kinds.has(node.nodeName);
+}
