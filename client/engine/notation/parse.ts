@@ -8,12 +8,14 @@
  *   atom     := number | name | bracketed sum | |sum| | accent atom | \frac{sum}{sum} | \sqrt{sum}
  */
 import { Rational } from "../exact/rational.ts";
+import { canonicalName } from "./names.ts";
+import { exactLiteral, measuredLiteral } from "./literals.ts";
+import { unitNamed } from "./units.ts";
 import { FirstFailure, read, type Read } from "./failure.ts";
 import type { Factor, Tree } from "./tree.ts";
 import { tokenise, type Token } from "./tokens.ts";
 
 const DEEPEST = 40;
-const LARGEST_EXPONENT_OF_TEN = 400;
 const closing = { "(": ")", "[": "]", "{": "}", "⟨": "⟩" } as const;
 /** The words that are functions when a bracket follows. */
 const functions = new Set(["sqrt", "max", "min"]);
@@ -111,12 +113,32 @@ class Parser {
       const token = this.peek();
       if (token.type === "sign" && (token.sign === "*" || token.sign === "/" || token.sign === ".")) {
         this.take();
-        factors.push({ join: token.sign, node: this.factor() });
+        const node = this.factor();
+        const unit = token.sign === "/" && !factors.every(isLiteral) ? this.unitOf(node) : null;
+        factors.push({ join: token.sign, node: unit ?? node });
       } else if (this.startsFactor(token)) factors.push({ join: "juxtaposed", node: this.factor() });
       else break;
     }
     const [only] = factors;
     return factors.length === 1 && only ? only.node : { type: "product", factors, at: start.at };
+  }
+
+  /**
+   * A number keeps its unit: "350 GeV / 3.2 TeV" is a ratio. Only a fraction of two bare numbers is a number
+   * before its unit arrives: "1/2 GeV" is half a GeV.
+   */
+  private unitOf(node: Tree): Tree | null {
+    const token = this.peek();
+    const styled = token.type === "accent" && token.accent === "plain" && this.peek(1).type === "open";
+    const word = styled ? this.peek(2) : token;
+    const isUnit = word.type === "name" && unitNamed(canonicalName(word.name)) !== null;
+    if (!this.options.quantities || (node.type !== "number" && node.type !== "measured") || !isUnit)
+      return null;
+    const factors: Factor[] = [
+      { join: "juxtaposed", node },
+      { join: "juxtaposed", node: this.factor() },
+    ];
+    return { type: "product", factors, at: node.at };
   }
 
   private factor(): Tree {
@@ -231,29 +253,21 @@ class Parser {
 
   /** Exact value of a literal, and in quantities "± uncertainty" right after it. */
   private number(token: Token & { type: "number" }): Tree {
-    const value = Rational.parse(token.text);
-    if (!value || tenfold(token.text) > LARGEST_EXPONENT_OF_TEN) return this.fail("number-too-large", token);
+    const value = exactLiteral(token.text);
+    if (!value) return this.fail("number-too-large", token);
     const spread = this.peek(1);
     if (!this.options.quantities || !this.isSign(this.peek(), "±") || spread.type !== "number")
       return { type: "number", value, text: token.text, at: token.at };
-    const sigma = Rational.parse(spread.text);
-    if (!sigma || tenfold(spread.text) > LARGEST_EXPONENT_OF_TEN)
-      return this.fail("number-too-large", spread);
+    const sigma = exactLiteral(spread.text);
+    if (!sigma) return this.fail("number-too-large", spread);
     this.next += 2;
     return { type: "measured", value, sigma, text: `${token.text} \\pm ${spread.text}`, at: token.at };
   }
 
   private measured(token: Token & { type: "measured" }): Tree {
-    const { digits, uncertainty, exponent } = token;
-    const decimals = /\.(\d*)$/.exec(digits)?.[1]?.length ?? 0;
-    const spread = uncertainty.includes(".") ? uncertainty : `${uncertainty}e-${decimals}`;
-    const scale = Rational.parse(`1e${exponent}`);
-    const value = Rational.parse(digits);
-    const sigma = Rational.parse(spread);
-    if (!scale || !value || !sigma || Math.abs(Number(exponent)) > LARGEST_EXPONENT_OF_TEN)
-      return this.fail("number-too-large", token);
-    const text = this.text.slice(token.at, token.to);
-    return { type: "measured", value: value.times(scale), sigma: sigma.times(scale), text, at: token.at };
+    const literal = measuredLiteral(token.digits, token.uncertainty, token.exponent);
+    if (!literal) return this.fail("number-too-large", token);
+    return { type: "measured", ...literal, text: this.text.slice(token.at, token.to), at: token.at };
   }
 
   private bracketed(open: Token & { type: "open" }): Tree {
@@ -301,8 +315,8 @@ class Parser {
   }
 }
 
-function tenfold(literal: string): number {
-  return Math.abs(Number(/[eE]([+-]?\d+)$/.exec(literal)?.[1] ?? 0));
+function isLiteral({ node }: Factor): boolean {
+  return node.type === "number" || node.type === "measured";
 }
 
 /** Names only, as in ^{\mu\nu} and ^a: marks where something points, no power. */

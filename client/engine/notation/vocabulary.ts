@@ -2,14 +2,19 @@
 import { isLowerGreek } from "./letters.ts";
 import { canonicalName, nearestSymbol, type Name } from "./names.ts";
 
+export interface DeclaredField {
+  readonly selfConjugate: boolean;
+  /** Its row cannot be counted with. */
+  readonly inError: boolean;
+  /** A field strength, whose dual \tilde F is the same to counting. */
+  readonly strength: boolean;
+}
+
 /** What reading a term needs to know of the theory. */
 export interface Vocabulary {
   readonly geometry: "isotropic" | "anisotropic";
   /** By canonical symbol. A field whose row is in error is known by name, so that terms can say so. */
-  readonly fields: ReadonlyMap<
-    string,
-    { readonly selfConjugate: boolean; readonly inError: boolean; readonly strength: boolean }
-  >;
+  readonly fields: ReadonlyMap<string, DeclaredField>;
   /** Canonical symbols of the declared scales. */
   readonly scales: ReadonlySet<string>;
 }
@@ -81,7 +86,12 @@ export function meaningOf(name: Name, raised: readonly string[], vocabulary: Voc
   if (derivative) return derivative;
   const matrix = /^(gamma_[05]|P_[LR])$/.test(symbol);
   const indexed = [...raised, ...name.subscript].some((piece) => isIndex(piece));
-  if (matrix || (tensors.has(name.base) && indexed && (raised.length > 0 || isLorentz(name.subscript))))
+  if (
+    matrix ||
+    (tensors.has(name.base.replace(/(bar|tilde)$/, "")) &&
+      indexed &&
+      (raised.length > 0 || isLorentz(name.subscript)))
+  )
     return { means: "structure" };
   return { means: "coefficient", symbol, declared: false };
 }

@@ -64,6 +64,11 @@ export interface Scale {
   readonly sigma: number;
   /** "TeV", "fm^-1", "" for a pure number. */
   readonly unit: string;
+  /**
+   * What one standard deviation of each independent source does to `value`, signed: a scale made of others shares
+   * their sources, so p/Λ knows how both move together. Absent: the scale is a source of its own.
+   */
+  readonly spread?: Readonly<Record<string, number>>;
   /** Value and uncertainty in GeV when `unit` is an energy or inverse length, else null. */
   readonly gev: { readonly value: number; readonly sigma: number } | null;
 }
@@ -81,9 +86,9 @@ export interface Term {
   readonly ultravioletCoefficient: LinearForm;
   /** Σ derivatives, each ∂ₜ counting z. */
   readonly derivativeWeight: LinearForm;
-  /** Natural coefficient ĝ, 1 unless stated. */
+  /** Natural coefficient ĝ, 1 unless stated; NaN when its text is in error, so that no size is claimed. */
   readonly natural: number;
-  /** Relative size given by hand (tuned or protected couplings), with uncertainty; null when by dimension. */
+  /** Relative size given by hand (tuned or protected couplings), with uncertainty; null when by dimension, NaN when in error. */
   readonly assigned: { readonly value: number; readonly sigma: number } | null;
   /** True for kinetic terms: bilinear, fixing the fields' dimensions (coefficient of dimension 0, two legs). */
   readonly kinetic: boolean;

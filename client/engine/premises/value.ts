@@ -54,7 +54,8 @@ export interface PremisesValue {
     readonly allowed: boolean;
     /** Names of the symmetries that forbid it. */
     readonly forbiddenBy: readonly string[];
-    readonly natural: number;
+    /** Null when its text is in error. */
+    readonly natural: number | null;
     readonly assigned: Measured | null;
   }[];
 }
