@@ -26,6 +26,13 @@ function breaksChirality(theory: Theory): boolean {
   });
 }
 
+/** Derivatives and vector indices contract in pairs, unless a gamma matrix or a fixed velocity takes one. */
+export function contracts(legs: HalfEdges, derivatives: number, theory: Theory): boolean {
+  const indices = legsThat(legs, theory, ({ kind }) => vectors.includes(kind));
+  if (theory.spacetime.geometry === "anisotropic") return indices > 0 || derivatives % 2 === 0;
+  return legsThat(legs, theory, isSpinor) > 0 || (derivatives + indices) % 2 === 0;
+}
+
 interface Derivatives {
   readonly space: number;
   readonly time: number;
@@ -37,7 +44,6 @@ interface Derivatives {
 /** Every number of derivatives of weight up to ω that the legs can contract. */
 function derivativesUpTo(omega: Rational, legs: HalfEdges, theory: Theory): Derivatives[] {
   const spinors = legsThat(legs, theory, isSpinor);
-  const indices = legsThat(legs, theory, ({ kind }) => vectors.includes(kind));
   const time = theory.spacetime.geometry === "anisotropic" ? theory.spacetime.z.asRational() : null;
   const schroedinger = legsThat(legs, theory, ({ kind }) => kind === "Schrödinger field") > 0;
   const oddMasses = breaksChirality(theory) || spinors > 0;
@@ -51,9 +57,7 @@ function derivativesUpTo(omega: Rational, legs: HalfEdges, theory: Theory): Deri
       if (rest.sign() < 0) continue;
       // The derivative of the vacuum energy is zero, and of a single field a total derivative.
       if (totalOf(legs) < 2 && inSpace + inTime > 0) continue;
-      // Derivatives and vector indices contract in pairs, unless a gamma matrix or a fixed velocity takes one.
-      const contracts = time ? indices > 0 || inSpace % 2 === 0 : spinors > 0 || (inSpace + indices) % 2 === 0;
-      if (!contracts) continue;
+      if (!contracts(legs, inSpace, theory)) continue;
       if (time && !schroedinger && spinors === 0 && inTime % 2 !== 0) continue;
       found.push({ space: inSpace, time: inTime, weight, analytic: isAnalytic(rest, time, schroedinger, oddMasses) });
     }

@@ -45,13 +45,14 @@ export interface PlanOrder {
   readonly sum: number;
   /** What is left out when one stops here: listed entries beyond, and the estimate of unlisted ones. */
   readonly leftOut: { readonly listed: number; readonly unlisted: number; readonly used: number };
-  /** Largest p (in the probe's unit) at which stopping here meets the target; null when no p does. */
-  readonly largestProbe: number | null;
+  /** Largest p (in the probe's unit) at which stopping here meets the target. */
+  readonly largestProbe: number;
   /** True when the target is met up to Q = 1, the end of the expansion, so that `largestProbe` is Λ. */
   readonly largestProbeIsHeavy: boolean;
   /**
    * Loops that go with this order. `insertions`: the most that suppressed insertions of this order alone can make.
-   * `target`: the fewest whose next loop falls below the target when each costs `loopFactor`; null when d is not a number.
+   * `target`: the fewest whose next loop falls below the target when each costs `loopFactor`; 0 when no leading
+   * interaction closes loops, null when d is not a whole number.
    */
   readonly loops: { readonly insertions: number; readonly target: number | null };
   readonly included: boolean;
@@ -90,17 +91,28 @@ export interface OrderPlanValue {
   /** The order to stop at; null when the listed terms do not reach the target. */
   readonly order: Exact | null;
   /** What is left out at that order (or at the highest order, when the target is not reached). */
-  readonly leftOut: { readonly listed: number; readonly unlisted: number; readonly used: number };
+  readonly leftOut: {
+    readonly listed: number;
+    readonly unlisted: number;
+    readonly used: number;
+    /** Standard uncertainty of `used` from p, Λ and sizes given by hand. */
+    readonly sigma: number;
+  };
   /** First entry left out among the listed ones; null when all are in. */
   readonly firstOut: PlanEntry | null;
   /** First order at which no new term is listed, and its natural size: where the tail begins. */
   readonly firstUnlisted: { readonly order: Exact; readonly size: number };
-  readonly largestProbe: number | null;
+  /** Distance between the orders at which unlisted terms may exist, from fields and symmetries. */
+  readonly step: Exact;
+  /** Of the order to stop at, in the probe's unit; of the highest order when the target is not reached. */
+  readonly largestProbe: number;
   readonly largestProbeIsHeavy: boolean;
   /** Ascending; order 0 first. */
   readonly orders: readonly PlanOrder[];
   /** Size of one loop, 1/((4π)^{d/2} Γ(d/2)), with couplings of 1; null when d is not a number. */
   readonly loopFactor: number | null;
+  /** Each counted term on its own: its order, its size at p, and whether the size was given by hand. */
+  readonly terms: readonly { readonly rowId: string; readonly latex: string; readonly order: Exact; readonly size: number; readonly assigned: boolean }[];
   readonly shifts: readonly Shift[];
   readonly probeTable: readonly ProbeRow[];
   readonly curves: readonly LeftOutCurve[];

@@ -1,0 +1,52 @@
+/** The step between orders at which local operators exist at all, given fields and symmetries. */
+import { Rational } from "../exact/rational.ts";
+import type { Theory } from "../premises/theory.ts";
+import { legChoices } from "../divergence/amplitudes.ts";
+import { contracts } from "../divergence/counterterms.ts";
+import { totalOf, weigh } from "../divergence/half-edges.ts";
+import { forbiddingSymmetry, isFermionOdd } from "../divergence/selection.ts";
+
+/** Orders are looked at from just above 0 to here: what is allowed beyond follows the same step. */
+const HIGHEST_LOOKED_AT = 4;
+const MOST_LEGS = 16;
+const MOST_CHOICES = 20_000;
+
+/** Largest number that divides both a whole number of times; 0 divides nothing and is passed over. */
+export function commonStep(a: Rational, b: Rational): Rational {
+  let [large, small] = a.compare(b) > 0 ? [a, b] : [b, a];
+  while (small.sign() > 0) [large, small] = [small, large.minus(small.times(Rational.of(large.over(small).floor())))];
+  return large;
+}
+
+/**
+ * Greatest step that reaches every order in (0, 4] at which an operator exists that symmetries, fermion parity and
+ * contraction of indices allow: 2 for scalars with φ → −φ in d = 4, 1 as soon as spinors can flip chirality.
+ * Operators that equations of motion make redundant are counted: at worst the step comes out too small, never too large.
+ *
+ * @returns null when there are none, or too many fields to look through.
+ */
+export function stepOfOrders(theory: Theory): Rational | null {
+  const measure = theory.measure.asRational();
+  const weights = theory.fields.map(({ dimension }) => dimension.asRational());
+  const time = theory.spacetime.geometry === "anisotropic" ? theory.spacetime.z.asRational() : null;
+  if (!measure || weights.length === 0 || weights.some((weight) => !weight || weight.sign() <= 0)) return null;
+  const highest = measure.plus(Rational.of(HIGHEST_LOOKED_AT));
+  const lightest = weights.reduce((least, weight) => (weight && least && weight.compare(least) < 0 ? weight : least), weights[0] ?? null);
+  const most = lightest ? Math.min(MOST_LEGS, Number(highest.over(lightest).floor())) : 0;
+  const choices = legChoices(theory, most, MOST_CHOICES);
+  if (!choices) return null;
+  let step = Rational.zero;
+  for (const legs of choices) {
+    if (totalOf(legs) < 2 || isFermionOdd(legs, theory) || forbiddingSymmetry(legs, theory)) continue;
+    const fields = weigh(legs, theory, ({ dimension }) => dimension).asRational() ?? highest;
+    for (let inTime = 0; inTime === 0 || (time && inTime <= HIGHEST_LOOKED_AT); inTime += 1) {
+      for (let space = 0; ; space += 1) {
+        const weight = Rational.of(space).plus(time ? time.times(Rational.of(inTime)) : Rational.zero);
+        const order = fields.plus(weight).minus(measure);
+        if (order.compare(Rational.of(HIGHEST_LOOKED_AT)) > 0) break;
+        if (order.sign() > 0 && contracts(legs, space, theory)) step = commonStep(step, order);
+      }
+    }
+  }
+  return step.sign() > 0 ? step : null;
+}

@@ -1,0 +1,96 @@
+/** The derivation of an order plan: parameter, sizes, sums, the cut, and what is assumed. */
+import type { WorkingStep } from "../evaluation.ts";
+import type { PlanTerm } from "./terms.ts";
+import type { OrderPlanValue } from "./value.ts";
+
+/** "0.0119", "3.2\times 10^{-5}": enough digits to follow, as LaTeX. */
+export function floatLatex(value: number): string {
+  if (value === 0) return "0";
+  if (!Number.isFinite(value)) return "\\infty";
+  const [mantissa = "", exponent = "0"] = value.toExponential(2).split("e");
+  const power = Number(exponent);
+  return power >= -3 && power <= 4 ? String(Number(value.toPrecision(3))) : `${mantissa}\\times 10^{${power}}`;
+}
+
+export function explainPlan(value: OrderPlanValue, terms: readonly PlanTerm[]): WorkingStep[] {
+  return [
+    ...parameterSteps(value),
+    ...sizeSteps(value, terms),
+    ...sumSteps(value),
+    ...loopSteps(value),
+    { step: "heading", text: "Assumptions" },
+    {
+      step: "prose",
+      text: `Coefficients are natural unless stated, the scales are well separated, and the premises list every term through order ${value.firstUnlisted.order.text} exclusive. Insertions of order 0 come along with every order and are not counted again. Sizes are added without regard to sign; the estimate is a model of what is left out, not a bound.`,
+    },
+  ];
+}
+
+function parameterSteps({ parameters, probe, heavy }: OrderPlanValue): WorkingStep[] {
+  const [Q] = parameters;
+  if (!Q) return [];
+  const spread = Q.sigma > 0 ? ` \\pm ${floatLatex(Q.sigma)}` : "";
+  const unit = (scale: typeof probe) => (scale.unit === "" ? "" : `\\,\\mathrm{${scale.unit}}`);
+  return [
+    { step: "heading", text: "Expansion parameter" },
+    {
+      step: "formula",
+      latex: `Q = ${Q.latex} = \\frac{${floatLatex(probe.value)}${unit(probe)}}{${floatLatex(heavy.value)}${unit(heavy)}} = ${floatLatex(Q.value)}${spread}`,
+    },
+  ];
+}
+
+function sizeSteps({ terms: sized, orders, observable }: OrderPlanValue, terms: readonly PlanTerm[]): WorkingStep[] {
+  const lines = terms.map((term): WorkingStep => {
+    const size = sized.find(({ rowId }) => rowId === term.rowId)?.size ?? 0;
+    const natural = term.natural === 1 ? "" : `${floatLatex(term.natural)}\\,`;
+    const by = term.assigned ? "\\text{given by hand}" : `${natural}Q^{${term.excess.toLatex()}}`;
+    return { step: "formula", latex: `${term.latex}:\\quad \\Delta - d = ${term.excess.toLatex()},\\quad ${by} = ${floatLatex(size)}` };
+  });
+  const rate =
+    observable === "amplitude"
+      ? "Orders of products add."
+      : `The rate is $|1 + \\sum a|^2$ relative to the leading one, expanded by total order: ${observable === "rate with interference" ? "$2a$ from interference, " : "interference with the leading amplitude vanishes, "}$a^2$ and $2ab$ from squares and cross terms.`;
+  return [
+    { step: "heading", text: "Orders and sizes" },
+    ...lines,
+    { step: "prose", text: rate },
+    ...orders.map(({ order, sum, entries }): WorkingStep => ({
+      step: "formula",
+      latex: `Q^{${order[0]?.latex ?? ""}}:\\quad ${entries.length}\\text{ listed},\\quad \\Sigma = ${floatLatex(sum)}`,
+    })),
+  ];
+}
+
+function sumSteps(value: OrderPlanValue): WorkingStep[] {
+  const { firstUnlisted, step, orders, target, sumUsed, order } = value;
+  const decides = sumUsed === "natural tail" ? "Listed and unlisted terms together decide." : "Listed terms alone decide; the estimate of unlisted ones stands beside them.";
+  const outcome = order
+    ? `The lowest order that leaves out less than the target $${floatLatex(target)}$ is $r = ${order.latex}$.`
+    : `No listed order leaves out less than the target $${floatLatex(target)}$: terms of order $${firstUnlisted.order.latex}$ would have to be listed.`;
+  return [
+    { step: "heading", text: "What is left out" },
+    {
+      step: "prose",
+      text: `Beyond the listed terms, one term of natural size is taken at each order from $${firstUnlisted.order.latex}$ on in steps of $${step.latex}$, the orders that fields and symmetries allow; their amplitude sums to`,
+    },
+    { step: "formula", latex: `T = \\frac{Q^{${firstUnlisted.order.latex}}}{1 - Q^{${step.latex}}}` },
+    ...orders.map(({ order: at, leftOut }): WorkingStep => ({
+      step: "formula",
+      latex: `r = ${at[0]?.latex ?? ""}:\\quad ${floatLatex(leftOut.listed)}\\ \\text{listed} + ${floatLatex(leftOut.unlisted)}\\ \\text{unlisted}`,
+    })),
+    { step: "prose", text: `${decides} ${outcome}` },
+  ];
+}
+
+function loopSteps({ loopFactor }: OrderPlanValue): WorkingStep[] {
+  const prose =
+    "Dimensions count powers of $Q$, not loops: a loop of marginal couplings costs no power of $Q$, so each order has contributions of any number of loops, and only the coupling and the loop factor suppress them.";
+  const estimate = loopFactor === null ? [] : [{ step: "formula", latex: `\\frac{1}{(4\\pi)^{d/2}\\,\\Gamma(d/2)} = ${floatLatex(loopFactor)}` } as const];
+  return [
+    { step: "heading", text: "Loops" },
+    { step: "prose", text: prose },
+    ...estimate,
+    ...(loopFactor === null ? [] : [{ step: "prose", text: "With couplings of 1 each loop is taken to cost this factor; an order needs loops until the next falls below the target." } as const]),
+  ];
+}
