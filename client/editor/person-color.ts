@@ -9,6 +9,7 @@ export function personColor(personId: string): string {
   if (slot === undefined) {
     const taken = new Set(given.values());
     slot = spread(personId);
+    // Beyond eight people some share a colour; their names still tell them apart.
     for (let tries = 0; tries < colors && taken.has(slot); tries += 1) slot = (slot + 1) % colors;
     given.set(personId, slot);
   }
