@@ -45,7 +45,11 @@ const selfConjugate: readonly FieldKind[] = [
   "field strength",
   "anisotropic scalar",
 ];
-const bosons: readonly FieldKind[] = [...selfConjugate.filter((kind) => kind !== "Majorana spinor"), "complex scalar", "Schrödinger field"];
+const bosons: readonly FieldKind[] = [
+  ...selfConjugate.filter((kind) => kind !== "Majorana spinor"),
+  "complex scalar",
+  "Schrödinger field",
+];
 
 /** Canonical dimensions and ultraviolet weights: (d − 2)/2, (d − 1)/2, d/2, D/2, (D − z)/2. */
 function dimensionsOf(kind: FieldKind, space: Spacetime): { dimension: LinearForm; weight: LinearForm } {
@@ -113,7 +117,13 @@ export function theoryOf(sketch: TheorySketch): Theory {
     const dimension = weigh((field) => field.dimension);
     return {
       rowId,
-      monomial: { prefactor: Rational.one, coefficients: [], fields: factors, derivatives: term.derivatives ?? 0, timeDerivatives: time },
+      monomial: {
+        prefactor: Rational.one,
+        coefficients: [],
+        fields: factors,
+        derivatives: term.derivatives ?? 0,
+        timeDerivatives: time,
+      },
       latex: term.fields,
       dimension,
       coefficient: measure.minus(dimension),

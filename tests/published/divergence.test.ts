@@ -6,8 +6,10 @@ import { describe, expect, it } from "vitest";
 import { divergent, graphOf, listOf } from "../engine/divergence/ask.ts";
 import { theoryOf } from "../engine/theory-builder.ts";
 
-const qed = (d: number | string) => theoryOf({ d, fields: { A: "gauge potential", psi: "Dirac spinor" }, terms: { e: "psi~ psi A" } });
-const phi = (n: number, d: number | string) => theoryOf({ d, fields: { phi: "real scalar" }, terms: { g: `phi${n}` } });
+const qed = (d: number | string) =>
+  theoryOf({ d, fields: { A: "gauge potential", psi: "Dirac spinor" }, terms: { e: "psi~ psi A" } });
+const phi = (n: number, d: number | string) =>
+  theoryOf({ d, fields: { phi: "real scalar" }, terms: { g: `phi${n}` } });
 
 describe("lists of superficially divergent amplitudes", () => {
   // Peskin, Schroeder (1995) ch. 10; Srednicki (2007) ch. 18; Collins (1984).
@@ -23,7 +25,10 @@ describe("lists of superficially divergent amplitudes", () => {
 
   // Peskin, Schroeder (1995) ch. 10; Srednicki (2007) ch. 51.
   it("Yukawa theory in d = 4, where φ⁴ is demanded though nobody wrote it", () => {
-    const yukawa = theoryOf({ fields: { phi: "real scalar", psi: "Dirac spinor" }, terms: { y: "psi~ psi phi", k: { fields: "phi2", derivatives: 2, kinetic: true } } });
+    const yukawa = theoryOf({
+      fields: { phi: "real scalar", psi: "Dirac spinor" },
+      terms: { y: "psi~ psi phi", k: { fields: "phi2", derivatives: 2, kinetic: true } },
+    });
     expect(divergent(yukawa)).toEqual({
       vacuum: "4",
       phi: "3",
@@ -38,7 +43,15 @@ describe("lists of superficially divergent amplitudes", () => {
 
   // Peskin, Schroeder (1995) fig. 10.2: seven amplitudes, from ω = 4 − E_γ − (3/2) E_e (Mandl, Shaw).
   it("quantum electrodynamics in d = 4", () => {
-    expect(divergent(qed(4))).toEqual({ vacuum: "4", A: "3", "A^2": "2", "A^3": "1", "A^4": "0", "psibar psi": "1", "A psibar psi": "0" });
+    expect(divergent(qed(4))).toEqual({
+      vacuum: "4",
+      A: "3",
+      "A^2": "2",
+      "A^3": "1",
+      "A^4": "0",
+      "psibar psi": "1",
+      "A psibar psi": "0",
+    });
   });
 
   // Srednicki (2007) ch. 72; Collins (1984): ω = 4 − E_A − E_c − (3/2) E_ψ.
@@ -75,8 +88,20 @@ describe("lists of superficially divergent amplitudes", () => {
     });
     const found = divergent(staticQuark);
     expect([found["hbar h"], found["A hbar h"]]).toEqual(["1", "0"]);
-    expect(found).toEqual({ vacuum: "4", A: "3", "A^2": "2", "A^3": "1", "A^4": "0", "hbar h": "1", "A hbar h": "0" });
-    expect(divergent(theoryOf({ fields: { A: "gauge potential", h: "static heavy field" }, terms: { heavy: "h~ h A" } }))).toEqual({
+    expect(found).toEqual({
+      vacuum: "4",
+      A: "3",
+      "A^2": "2",
+      "A^3": "1",
+      "A^4": "0",
+      "hbar h": "1",
+      "A hbar h": "0",
+    });
+    expect(
+      divergent(
+        theoryOf({ fields: { A: "gauge potential", h: "static heavy field" }, terms: { heavy: "h~ h A" } }),
+      ),
+    ).toEqual({
       vacuum: "4",
       "hbar h": "1",
       "A hbar h": "0",
@@ -108,25 +133,40 @@ describe("degrees of worked graphs", () => {
   it("Fermi theory in d = 4", () => {
     const fermi = theoryOf({ fields: { psi: "Dirac spinor" }, terms: { G: "psi~2 psi2" } });
     for (const vertices of [2, 3, 4]) {
-      expect(graphOf(fermi, { G: vertices }, { psi: 2, "psi~": 2 }).omega.text).toBe(String(2 * vertices - 2));
+      expect(graphOf(fermi, { G: vertices }, { psi: 2, "psi~": 2 }).omega.text).toBe(
+        String(2 * vertices - 2),
+      );
     }
   });
 
   // 't Hooft, Veltman 1974; Goroff, Sagnotti 1986: ω = (d − 2) L + 2, whatever the legs: 4, 6, 8 at one to three loops in d = 4.
   it("gravity: every vertex has two derivatives", () => {
     const gravity = (d: number | string) =>
-      theoryOf({ d, fields: { h: "metric fluctuation" }, terms: { three: { fields: "h3", derivatives: 2 }, four: { fields: "h4", derivatives: 2 } } });
+      theoryOf({
+        d,
+        fields: { h: "metric fluctuation" },
+        terms: { three: { fields: "h3", derivatives: 2 }, four: { fields: "h4", derivatives: 2 } },
+      });
     expect(graphOf(gravity(4), { three: 2 }, { h: 2 })).toMatchObject({ loops: 1, omega: { text: "4" } });
     expect(graphOf(gravity(4), { three: 4 }, { h: 4 })).toMatchObject({ loops: 1, omega: { text: "4" } });
     expect(graphOf(gravity(4), { four: 2 }, { h: 2 })).toMatchObject({ loops: 2, omega: { text: "6" } });
     expect(graphOf(gravity(4), { four: 3 }, { h: 2 })).toMatchObject({ loops: 3, omega: { text: "8" } });
-    expect(graphOf(gravity("d"), { three: 4, four: 1 }, { h: 4 })).toMatchObject({ loops: 2, omega: { text: "2*d - 2" } });
+    expect(graphOf(gravity("d"), { three: 4, four: 1 }, { h: 4 })).toMatchObject({
+      loops: 2,
+      omega: { text: "2*d - 2" },
+    });
   });
 
   // Kaplan, Savage, Wise 1998, Nucl. Phys. B 534, 329: the bubble with C₀ diverges linearly in D = 3; C_2n adds 2n powers.
   it("nonrelativistic contact interactions", () => {
-    const contact = theoryOf({ D: 3, z: 2, fields: { N: "Schrödinger field" }, terms: { c0: "N~2 N2", c2: { fields: "N~2 N2", derivatives: 2 } } });
-    const degree = (vertices: Record<string, number>) => graphOf(contact, vertices, { N: 2, "N~": 2 }).omega.text;
+    const contact = theoryOf({
+      D: 3,
+      z: 2,
+      fields: { N: "Schrödinger field" },
+      terms: { c0: "N~2 N2", c2: { fields: "N~2 N2", derivatives: 2 } },
+    });
+    const degree = (vertices: Record<string, number>) =>
+      graphOf(contact, vertices, { N: 2, "N~": 2 }).omega.text;
     expect(degree({ c0: 2 })).toBe("1");
     expect(degree({ c0: 1, c2: 1 })).toBe("3");
     expect(degree({ c2: 2 })).toBe("5");
@@ -134,18 +174,36 @@ describe("degrees of worked graphs", () => {
 
   // Visser 2009, Phys. Rev. D 80, 025011: for z = D and vertices without derivatives only single-vertex loops diverge.
   it("a Lifshitz scalar with z = D: ω = 2D (1 − V)", () => {
-    const lifshitz = theoryOf({ D: 3, z: 3, fields: { phi: "anisotropic scalar" }, terms: { l4: "phi4", l6: "phi6" } });
+    const lifshitz = theoryOf({
+      D: 3,
+      z: 3,
+      fields: { phi: "anisotropic scalar" },
+      terms: { l4: "phi4", l6: "phi6" },
+    });
     expect(graphOf(lifshitz, { l4: 1 }, { phi: 2 }).omega.text).toBe("0");
     expect(graphOf(lifshitz, { l6: 1 }, { phi: 2 })).toMatchObject({ loops: 2, omega: { text: "0" } });
     expect(graphOf(lifshitz, { l4: 2 }, { phi: 4 }).omega.text).toBe("-6");
     expect(graphOf(lifshitz, { l4: 2, l6: 1 }, { phi: 4 }).omega.text).toBe("-12");
-    const withGradients = theoryOf({ D: 3, z: 3, fields: { phi: "anisotropic scalar" }, terms: { g: { fields: "phi4", derivatives: 6 } } });
-    expect([1, 2, 3].map((count) => graphOf(withGradients, { g: count }, { phi: 2 }).omega.text)).toEqual(["6", "6", "6"]);
+    const withGradients = theoryOf({
+      D: 3,
+      z: 3,
+      fields: { phi: "anisotropic scalar" },
+      terms: { g: { fields: "phi4", derivatives: 6 } },
+    });
+    expect([1, 2, 3].map((count) => graphOf(withGradients, { g: count }, { phi: 2 }).omega.text)).toEqual([
+      "6",
+      "6",
+      "6",
+    ]);
   });
 
   // Weinberg 1979, Physica A 96, 327: 2 + (d − 2) L + Σ V_n (n − 2), pions as scalars with n derivatives per vertex.
   it("chiral vertices in d dimensions", () => {
-    const chiral = theoryOf({ d: "d", fields: { pi: "real scalar" }, terms: { p2: { fields: "pi4", derivatives: 2 }, p4: { fields: "pi4", derivatives: 4 } } });
+    const chiral = theoryOf({
+      d: "d",
+      fields: { pi: "real scalar" },
+      terms: { p2: { fields: "pi4", derivatives: 2 }, p4: { fields: "pi4", derivatives: 4 } },
+    });
     expect(graphOf(chiral, { p2: 2 }, { pi: 4 }).omega.text).toBe("d"); // 2 + (d − 2)
     expect(graphOf(chiral, { p2: 1, p4: 1 }, { pi: 4 }).omega.text).toBe("d + 2");
   });
@@ -169,15 +227,17 @@ describe("renormalisability by the dimension of the coupling", () => {
 
   // Zinn-Justin, Quantum Field Theory and Critical Phenomena: ω = 2 for every number of legs in d = 2.
   it("a sigma model in d = 2 has infinitely many divergent amplitudes of degree 2", () => {
-    const sigma = theoryOf({ d: 2, fields: { pi: "real scalar" }, terms: { g: { fields: "pi4", derivatives: 2 } } });
+    const sigma = theoryOf({
+      d: 2,
+      fields: { pi: "real scalar" },
+      terms: { g: { fields: "pi4", derivatives: 2 } },
+    });
     const { verdict, amplitudes } = listOf(sigma, { maxLegs: "8" });
     expect(verdict).toBe("infinitely many divergent amplitudes");
-    expect(amplitudes.filter(({ status }) => status === "divergent").map(({ legs, omega }) => `${legs.total}: ${omega.text}`)).toEqual([
-      "0: 2",
-      "2: 2",
-      "4: 2",
-      "6: 2",
-      "8: 2",
-    ]);
+    expect(
+      amplitudes
+        .filter(({ status }) => status === "divergent")
+        .map(({ legs, omega }) => `${legs.total}: ${omega.text}`),
+    ).toEqual(["0: 2", "2: 2", "4: 2", "6: 2", "8: 2"]);
   });
 });

@@ -4,7 +4,15 @@ import { shown } from "../exact/shown.ts";
 import type { Theory } from "../premises/theory.ts";
 import { countertermsOf } from "./counterterms.ts";
 import { graphExists, internalLines } from "./graph-existence.ts";
-import { addHalfEdges, conjugated, countOf, noHalfEdges, totalOf, weigh, type HalfEdges } from "./half-edges.ts";
+import {
+  addHalfEdges,
+  conjugated,
+  countOf,
+  noHalfEdges,
+  totalOf,
+  weigh,
+  type HalfEdges,
+} from "./half-edges.ts";
 import { describeLegs } from "./legs.ts";
 import { vanishesInVacuum } from "./retarded.ts";
 import { forbiddingSymmetry, isFermionOdd } from "./selection.ts";
@@ -41,14 +49,24 @@ export function legChoices(theory: Theory, most: number, limit: number): HalfEdg
 }
 
 interface Found {
-  readonly atOrders: readonly { readonly order: Rational; readonly omega: Rational; readonly loops: number; readonly set: VertexSet }[];
+  readonly atOrders: readonly {
+    readonly order: Rational;
+    readonly omega: Rational;
+    readonly loops: number;
+    readonly set: VertexSet;
+  }[];
   /** Whether graphs exist at all, and whether each of them vanishes in vacuum. */
   readonly anyGraph: boolean;
   readonly anyRetarded: boolean;
 }
 
 /** The largest degree at each order in 1/Λ, with the fewest loops that reach it, among graphs that exist. */
-function bestGraphs(legs: HalfEdges, sets: ReadonlyMap<number, readonly VertexSet[]>, caps: Caps, theory: Theory): Found {
+function bestGraphs(
+  legs: HalfEdges,
+  sets: ReadonlyMap<number, readonly VertexSet[]>,
+  caps: Caps,
+  theory: Theory,
+): Found {
   const bound = numberOf(theory.measure.minus(weigh(legs, theory, (field) => field.weight)));
   const best = new Map<string, Found["atOrders"][number]>();
   let anyGraph = false;
@@ -63,7 +81,12 @@ function bestGraphs(legs: HalfEdges, sets: ReadonlyMap<number, readonly VertexSe
     for (const set of sets.get(2 * (loops - 1) + totalOf(legs)) ?? []) {
       const omega = bound.minus(set.coefficients);
       const before = best.get(set.order.toString());
-      if (set.vertices.length === 0 || (before && before.omega.compare(omega) >= 0) || (anyGraph && omega.sign() < 0)) continue;
+      if (
+        set.vertices.length === 0 ||
+        (before && before.omega.compare(omega) >= 0) ||
+        (anyGraph && omega.sign() < 0)
+      )
+        continue;
       if (!hasGraph(set, legs, theory)) continue;
       if (vanishesInVacuum(set.vertices, legs, theory)) {
         anyRetarded = true;
@@ -78,7 +101,10 @@ function bestGraphs(legs: HalfEdges, sets: ReadonlyMap<number, readonly VertexSe
 }
 
 function hasGraph(set: VertexSet, legs: HalfEdges, theory: Theory): boolean {
-  const tooMany = theory.fields.some((_, f) => countOf(set.edges, f) < countOf(legs, f) || (countOf(set.edges, f) - countOf(legs, f)) % 2 !== 0);
+  const tooMany = theory.fields.some(
+    (_, f) =>
+      countOf(set.edges, f) < countOf(legs, f) || (countOf(set.edges, f) - countOf(legs, f)) % 2 !== 0,
+  );
   if (tooMany) return false;
   return graphExists(set.vertices, legs, internalLines(set.vertices, legs, theory), theory) === "exists";
 }
@@ -96,7 +122,10 @@ export function amplitudeOf(
   const broken = useSymmetries ? forbiddingSymmetry(legs, theory) : null;
   const odd = isFermionOdd(legs, theory);
   const found = odd || broken ? null : bestGraphs(legs, sets, caps, theory);
-  const largest = found?.atOrders.reduce((top, one) => (one.omega.compare(top.omega) > 0 ? one : top), found.atOrders[0] ?? { omega: bound });
+  const largest = found?.atOrders.reduce(
+    (top, one) => (one.omega.compare(top.omega) > 0 ? one : top),
+    found.atOrders[0] ?? { omega: bound },
+  );
   if (found && found.atOrders.length > 0 && largest) {
     const omega = largest.omega;
     return {
@@ -133,6 +162,10 @@ function describeOrder({ order, omega, loops, set }: Found["atOrders"][number]):
     order: shown(order),
     omega: shown(omega),
     loops,
-    vertices: set.vertices.map(({ interaction: { term }, count }) => ({ termRowId: term.rowId, latex: term.latex, count })),
+    vertices: set.vertices.map(({ interaction: { term }, count }) => ({
+      termRowId: term.rowId,
+      latex: term.latex,
+      count,
+    })),
   };
 }

@@ -8,7 +8,11 @@ function caution(code: string, facts: Notice["facts"] = {}): Notice {
   return { code, path: [], facts };
 }
 
-function hasLeg(legs: HalfEdges, theory: Theory, holds: (field: Theory["fields"][number]) => boolean): boolean {
+function hasLeg(
+  legs: HalfEdges,
+  theory: Theory,
+  holds: (field: Theory["fields"][number]) => boolean,
+): boolean {
   return theory.fields.some((field, f) => holds(field) && countOf(legs, f) > 0);
 }
 
@@ -20,7 +24,9 @@ export function symmetryCautions(legs: HalfEdges, theory: Theory): Notice[] {
       : []),
     ...(hasLeg(legs, theory, ({ kind }) => kind === "ghost") ? [caution("omega-ghost")] : []),
     ...(hasLeg(legs, theory, isSpinor) ? [caution("omega-chiral")] : []),
-    ...(hasLeg(legs, theory, ({ kind }) => kind === "real scalar" || kind === "complex scalar") ? [caution("omega-shift")] : []),
+    ...(hasLeg(legs, theory, ({ kind }) => kind === "real scalar" || kind === "complex scalar")
+      ? [caution("omega-shift")]
+      : []),
   ];
 }
 

@@ -3,7 +3,15 @@ import { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
 import { shown } from "../exact/shown.ts";
 import type { Theory } from "../premises/theory.ts";
-import { conjugated, countOf, halfEdgesOf, sameHalfEdges, totalOf, weigh, type HalfEdges } from "./half-edges.ts";
+import {
+  conjugated,
+  countOf,
+  halfEdgesOf,
+  sameHalfEdges,
+  totalOf,
+  weigh,
+  type HalfEdges,
+} from "./half-edges.ts";
 import { isSpinor, productLatex, productText } from "./legs.ts";
 import { forbiddingSymmetry } from "./selection.ts";
 import type { Counterterm } from "./value.ts";
@@ -13,7 +21,11 @@ const MOST_DERIVATIVES = 40;
 
 const vectors = ["gauge potential", "massive vector", "massive vector, conserved current"];
 
-function legsThat(edges: HalfEdges, theory: Theory, holds: (field: Theory["fields"][number]) => boolean): number {
+function legsThat(
+  edges: HalfEdges,
+  theory: Theory,
+  holds: (field: Theory["fields"][number]) => boolean,
+): number {
   return theory.fields.reduce((sum, field, f) => sum + (holds(field) ? countOf(edges, f) : 0), 0);
 }
 
@@ -21,8 +33,16 @@ function legsThat(edges: HalfEdges, theory: Theory, holds: (field: Theory["field
 function breaksChirality(theory: Theory): boolean {
   return theory.terms.some((term) => {
     const edges = halfEdgesOf(term.monomial, theory);
-    const spinorLegs = edges ? legsThat(edges, theory, (field) => isSpinor(field) && field.kind !== "static heavy field") : 0;
-    return !term.kinetic && edges !== null && totalOf(edges) === 2 && spinorLegs === 2 && term.derivativeWeight.equals(LinearForm.zero);
+    const spinorLegs = edges
+      ? legsThat(edges, theory, (field) => isSpinor(field) && field.kind !== "static heavy field")
+      : 0;
+    return (
+      !term.kinetic &&
+      edges !== null &&
+      totalOf(edges) === 2 &&
+      spinorLegs === 2 &&
+      term.derivativeWeight.equals(LinearForm.zero)
+    );
   });
 }
 
@@ -49,7 +69,8 @@ function derivativesUpTo(omega: Rational, legs: HalfEdges, theory: Theory): Deri
   const oddMasses = breaksChirality(theory) || spinors > 0;
   const found: Derivatives[] = [];
   const most = Math.min(MOST_DERIVATIVES, Number(omega.floor()));
-  const mostInTime = time && time.sign() > 0 ? Math.min(MOST_DERIVATIVES, Number(omega.over(time).floor())) : 0;
+  const mostInTime =
+    time && time.sign() > 0 ? Math.min(MOST_DERIVATIVES, Number(omega.over(time).floor())) : 0;
   for (let inTime = 0; inTime <= mostInTime; inTime += 1) {
     for (let inSpace = 0; inSpace <= most; inSpace += 1) {
       const weight = Rational.of(inSpace).plus(time ? time.times(Rational.of(inTime)) : Rational.zero);
@@ -59,14 +80,24 @@ function derivativesUpTo(omega: Rational, legs: HalfEdges, theory: Theory): Deri
       if (totalOf(legs) < 2 && inSpace + inTime > 0) continue;
       if (!contracts(legs, inSpace, theory)) continue;
       if (time && !schroedinger && spinors === 0 && inTime % 2 !== 0) continue;
-      found.push({ space: inSpace, time: inTime, weight, analytic: isAnalytic(rest, time, schroedinger, oddMasses) });
+      found.push({
+        space: inSpace,
+        time: inTime,
+        weight,
+        analytic: isAnalytic(rest, time, schroedinger, oddMasses),
+      });
     }
   }
   return found.sort((a, b) => b.weight.compare(a.weight));
 }
 
 /** The rest of the dimension is made up by m², by m where chirality is broken, by energies for Schrödinger fields. */
-function isAnalytic(rest: Rational, time: Rational | null, schroedinger: boolean, oddMasses: boolean): boolean {
+function isAnalytic(
+  rest: Rational,
+  time: Rational | null,
+  schroedinger: boolean,
+  oddMasses: boolean,
+): boolean {
   if (time && schroedinger) return rest.over(time).isInteger();
   if (!rest.isInteger()) return false;
   return oddMasses || rest.over(Rational.of(2)).isInteger();
@@ -90,7 +121,12 @@ function writtenAs(legs: HalfEdges, { space, time }: Derivatives, theory: Theory
 }
 
 /** @param omega a number; for ω < 0 there are none. Highest derivative first. */
-export function countertermsOf(omega: Rational, legs: HalfEdges, theory: Theory, useSymmetries: boolean): Counterterm[] {
+export function countertermsOf(
+  omega: Rational,
+  legs: HalfEdges,
+  theory: Theory,
+  useSymmetries: boolean,
+): Counterterm[] {
   if (omega.sign() < 0) return [];
   const fields = weigh(legs, theory, (field) => field.dimension);
   const allowed = !useSymmetries || forbiddingSymmetry(legs, theory) === null;
@@ -103,10 +139,17 @@ export function countertermsOf(omega: Rational, legs: HalfEdges, theory: Theory,
       ...(time > 0 ? [time === 1 ? "\\partial_t" : `\\partial_t^{${time}}`] : []),
       ...(space > 0 ? [space === 1 ? "\\partial" : `\\partial^{${space}}`] : []),
     ];
-    const words = [time > 0 ? `d_t^${time}` : "", space > 0 ? `d^${space}` : "", productText(legs, theory) || "1"];
+    const words = [
+      time > 0 ? `d_t^${time}` : "",
+      space > 0 ? `d^${space}` : "",
+      productText(legs, theory) || "1",
+    ];
     return {
       latex: [...marks, productLatex(legs, theory)].join("\\,"),
-      text: words.filter((word) => word !== "").join(" ").replaceAll("^1 ", " "),
+      text: words
+        .filter((word) => word !== "")
+        .join(" ")
+        .replaceAll("^1 ", " "),
       derivatives: space,
       timeDerivatives: time,
       massPower: shown(omega.minus(weight)),

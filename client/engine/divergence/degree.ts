@@ -42,15 +42,23 @@ export function degreeOf({ vertices, legs }: GraphParts, theory: Theory): Degree
   const lines = internalLines(vertices, legs, theory);
   const vertexCount = vertices.reduce((sum, { count }) => sum + count, 0);
   const loops = lines.reduce((sum, count) => sum + count, 0) - vertexCount + 1;
-  const derivatives = vertices.reduce((sum, { term, count }) => sum.plus(term.derivativeWeight.times(count)), LinearForm.zero);
+  const derivatives = vertices.reduce(
+    (sum, { term, count }) => sum.plus(term.derivativeWeight.times(count)),
+    LinearForm.zero,
+  );
   const byMomenta = theory.measure
     .times(exact(loops))
     .minus(propagatorPowers(lines, theory))
     .plus(derivatives);
-  const couplings = vertices.reduce((sum, { term, count }) => sum.plus(term.ultravioletCoefficient.times(count)), LinearForm.zero);
+  const couplings = vertices.reduce(
+    (sum, { term, count }) => sum.plus(term.ultravioletCoefficient.times(count)),
+    LinearForm.zero,
+  );
   const byDimensions = theory.measure.minus(weigh(legs, theory, (field) => field.weight)).minus(couplings);
   if (!byMomenta.equals(byDimensions)) {
-    throw new Error(`degree of divergence: ${byMomenta.toString()} by momenta, ${byDimensions.toString()} by dimensions`);
+    throw new Error(
+      `degree of divergence: ${byMomenta.toString()} by momenta, ${byDimensions.toString()} by dimensions`,
+    );
   }
   return { lines, loops, omega: byDimensions };
 }

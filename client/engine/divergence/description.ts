@@ -5,7 +5,8 @@ import { divergenceShape } from "./inputs.ts";
 export const divergenceDescription: BlockDescription<typeof divergenceShape> = {
   kind: "divergence",
   title: "Divergence",
-  purpose: "The superficial degree of divergence of a graph or of a theory's amplitudes, and the counterterms it demands.",
+  purpose:
+    "The superficial degree of divergence of a graph or of a theory's amplitudes, and the counterterms it demands.",
   shape: divergenceShape,
   premises: "required",
 };

@@ -11,9 +11,18 @@ import { evaluateTheory } from "./whole-theory.ts";
  *
  * @returns a value without problems, or problems without a value: a graph that does not exist has no degree.
  */
-export function evaluateDivergence(inputs: DivergenceInputs, theory: Theory | null): Evaluation<DivergenceValue> {
+export function evaluateDivergence(
+  inputs: DivergenceInputs,
+  theory: Theory | null,
+): Evaluation<DivergenceValue> {
   if (theory === null) {
-    return { value: null, problems: [{ code: "premises-missing", path: [], facts: {} }], notices: [], scalars: [], working: [] };
+    return {
+      value: null,
+      problems: [{ code: "premises-missing", path: [], facts: {} }],
+      notices: [],
+      scalars: [],
+      working: [],
+    };
   }
   return inputs.mode === "one graph" ? evaluateGraph(inputs, theory) : evaluateTheory(inputs, theory);
 }

@@ -31,7 +31,11 @@ function closingSplits(vertices: readonly VertexCount[], legs: HalfEdges, theory
     if (net.every((count) => count === 0)) return choose(index + 1, missing, [...split, vertex.count]);
     for (let plain = vertex.count; plain >= 0 && found.length < 50; plain -= 1) {
       const surplus = 2 * plain - vertex.count;
-      choose(index + 1, missing.map((count, f) => count - surplus * (net[f] ?? 0)), [...split, plain]);
+      choose(
+        index + 1,
+        missing.map((count, f) => count - surplus * (net[f] ?? 0)),
+        [...split, plain],
+      );
     }
   };
   choose(0, wanted, []);
@@ -86,7 +90,8 @@ function joinings(a: HalfEdges, b: HalfEdges, free: readonly number[], theory: T
       ? has(a.plain) && has(b.plain)
       : (has(a.plain) && has(b.conjugate)) || (has(a.conjugate) && has(b.plain));
     if (!possible) return;
-    const less = (side: readonly number[], by: number) => side.map((count, g) => (g === f ? count - by : count));
+    const less = (side: readonly number[], by: number) =>
+      side.map((count, g) => (g === f ? count - by : count));
     const piece = field.selfConjugate
       ? { plain: less(sum.plain, 2), conjugate: sum.conjugate }
       : { plain: less(sum.plain, 1), conjugate: less(sum.conjugate, 1) };
@@ -121,6 +126,9 @@ export function graphExists(
 
 /** I_f = (Σ V n_f − E_f)/2 for each field; halves and negative numbers are left for the caller to refuse. */
 export function internalLines(vertices: readonly VertexCount[], legs: HalfEdges, theory: Theory): number[] {
-  const ends = vertices.reduce((sum, { edges, count }) => addHalfEdges(sum, edges, count), noHalfEdges(theory));
+  const ends = vertices.reduce(
+    (sum, { edges, count }) => addHalfEdges(sum, edges, count),
+    noHalfEdges(theory),
+  );
   return theory.fields.map((_, f) => (countOf(ends, f) - countOf(legs, f)) / 2);
 }

@@ -56,12 +56,15 @@ export function totalOf(edges: HalfEdges): number {
 
 /** ψ's minus ψ̄'s of each field; 0 for self-conjugate fields, whose lines have no direction. */
 export function netOf(edges: HalfEdges, theory: Theory): number[] {
-  return theory.fields.map((field, f) => (field.selfConjugate ? 0 : (edges.plain[f] ?? 0) - (edges.conjugate[f] ?? 0)));
+  return theory.fields.map((field, f) =>
+    field.selfConjugate ? 0 : (edges.plain[f] ?? 0) - (edges.conjugate[f] ?? 0),
+  );
 }
 
 export function sameHalfEdges(a: HalfEdges, b: HalfEdges): boolean {
   return (
-    a.plain.every((count, f) => count === b.plain[f]) && a.conjugate.every((count, f) => count === b.conjugate[f])
+    a.plain.every((count, f) => count === b.plain[f]) &&
+    a.conjugate.every((count, f) => count === b.conjugate[f])
   );
 }
 

@@ -46,8 +46,12 @@ export function productLatex(edges: HalfEdges, theory: Theory): string {
 
 export function productText(edges: HalfEdges, theory: Theory): string {
   const factors = theory.fields.flatMap((field, f) => {
-    const word = (symbol: string, count: number) => (count === 0 ? [] : [count === 1 ? symbol : `${symbol}^${count}`]);
-    return [...word(conjugateText(field), edges.conjugate[f] ?? 0), ...word(field.symbol, edges.plain[f] ?? 0)];
+    const word = (symbol: string, count: number) =>
+      count === 0 ? [] : [count === 1 ? symbol : `${symbol}^${count}`];
+    return [
+      ...word(conjugateText(field), edges.conjugate[f] ?? 0),
+      ...word(field.symbol, edges.plain[f] ?? 0),
+    ];
   });
   return factors.join(" ");
 }
@@ -57,7 +61,15 @@ export function describeLegs(edges: HalfEdges, theory: Theory): Legs {
     const count = edges.plain[f] ?? 0;
     const conjugateCount = edges.conjugate[f] ?? 0;
     if (count + conjugateCount === 0) return [];
-    return [{ fieldRowId: field.rowId, symbol: field.symbol, count, conjugateCount, selfConjugate: field.selfConjugate }];
+    return [
+      {
+        fieldRowId: field.rowId,
+        symbol: field.symbol,
+        count,
+        conjugateCount,
+        selfConjugate: field.selfConjugate,
+      },
+    ];
   });
   const key = fields
     .map(({ fieldRowId, count, conjugateCount, selfConjugate }) =>

@@ -32,11 +32,23 @@ export function evaluateGraph(inputs: DivergenceInputs, theory: Theory): Evaluat
     theory,
   );
   const broken = inputs.symmetries === "yes" ? forbiddingSymmetry(graph.legs, theory) : null;
-  if (broken) notices.unshift({ code: "legs-break-symmetry", path: ["legs"], facts: { symmetry: broken.name } });
-  return { value, problems: [], notices, scalars: scalarsOf(value), working: explainGraph(graph, degree, value, theory) };
+  if (broken)
+    notices.unshift({ code: "legs-break-symmetry", path: ["legs"], facts: { symmetry: broken.name } });
+  return {
+    value,
+    problems: [],
+    notices,
+    scalars: scalarsOf(value),
+    working: explainGraph(graph, degree, value, theory),
+  };
 }
 
-function describeGraph(graph: GraphParts, degree: Degree, theory: Theory, useSymmetries: boolean): GraphDivergence {
+function describeGraph(
+  graph: GraphParts,
+  degree: Degree,
+  theory: Theory,
+  useSymmetries: boolean,
+): GraphDivergence {
   const { omega, loops, lines } = degree;
   const number = omega.asRational();
   const verdict = verdictOf(omega, loops);
@@ -47,7 +59,9 @@ function describeGraph(graph: GraphParts, degree: Degree, theory: Theory, useSym
     loops,
     counterterms,
     vanishes: loops > 0 && vanishesInVacuum(graph.vertices, graph.legs, theory),
-    onlySchroedingerLines: theory.fields.every(({ kind }, f) => kind === "Schrödinger field" || lines[f] === 0),
+    onlySchroedingerLines: theory.fields.every(
+      ({ kind }, f) => kind === "Schrödinger field" || lines[f] === 0,
+    ),
   };
   const dimensional = dimensionalMeaning(facts, theory);
   return {
@@ -62,7 +76,9 @@ function describeGraph(graph: GraphParts, degree: Degree, theory: Theory, useSym
     })),
     lines: theory.fields.flatMap((field, f) => {
       const count = lines[f] ?? 0;
-      return count === 0 ? [] : [{ fieldRowId: field.rowId, latex: field.latex, count, weight: shown(field.weight) }];
+      return count === 0
+        ? []
+        : [{ fieldRowId: field.rowId, latex: field.latex, count, weight: shown(field.weight) }];
     }),
     loops,
     omega: shown(omega),
@@ -78,15 +94,28 @@ function describeGraph(graph: GraphParts, degree: Degree, theory: Theory, useSym
 function scalarsOf(value: GraphDivergence): Scalar[] {
   const legs = value.legs.latex === "1" ? "the vacuum" : `$${value.legs.latex}$`;
   return [
-    { id: "omega", label: `degree of divergence of ${legs}`, value: { type: "exact", text: value.omega.text } },
-    { id: "loops", label: `loops of the graph with legs ${legs}`, value: { type: "exact", text: String(value.loops) } },
-    { id: "verdict", label: `convergence of the graph with legs ${legs}`, value: { type: "word", text: verdictWord(value) } },
+    {
+      id: "omega",
+      label: `degree of divergence of ${legs}`,
+      value: { type: "exact", text: value.omega.text },
+    },
+    {
+      id: "loops",
+      label: `loops of the graph with legs ${legs}`,
+      value: { type: "exact", text: String(value.loops) },
+    },
+    {
+      id: "verdict",
+      label: `convergence of the graph with legs ${legs}`,
+      value: { type: "word", text: verdictWord(value) },
+    },
   ];
 }
 
 /** "logarithmic", "convergent", "power 2", "tree", "logarithmic at d = 4". */
 function verdictWord({ verdict, omega, logarithmicAt: at }: GraphDivergence): string {
   if (verdict === "power") return `power ${omega.text}`;
-  if (verdict === "depends") return at ? `logarithmic at ${at.symbol} = ${at.value.text}` : "depends on the dimension";
+  if (verdict === "depends")
+    return at ? `logarithmic at ${at.symbol} = ${at.value.text}` : "depends on the dimension";
   return verdict;
 }

@@ -32,7 +32,11 @@ function readCount(text: string, table: string, rowId: string, problems: Problem
   const typed = text.trim();
   const count = /^\d{1,6}$/.test(typed) ? Number(typed) : 0;
   if (count >= 1 && count <= MOST_OF_A_KIND) return count;
-  problems.push({ code: "count-unreadable", path: [table, rowId, "count"], facts: { text, most: MOST_OF_A_KIND } });
+  problems.push({
+    code: "count-unreadable",
+    path: [table, rowId, "count"],
+    facts: { text, most: MOST_OF_A_KIND },
+  });
   return null;
 }
 
@@ -46,7 +50,8 @@ function readVertices(inputs: DivergenceInputs, theory: Theory, problems: Proble
     const path = ["vertices", row.id, "term"];
     if (!term || !edges) problems.push({ code: "vertex-unknown", path, facts: { text: row.term } });
     else if (term.kinetic) problems.push({ code: "vertex-kinetic", path, facts: { latex: term.latex } });
-    else if (totalOf(edges) === 0) problems.push({ code: "vertex-without-fields", path, facts: { latex: term.latex } });
+    else if (totalOf(edges) === 0)
+      problems.push({ code: "vertex-without-fields", path, facts: { latex: term.latex } });
     else if (count !== null) {
       found.set(term.rowId, { term, edges, count: count + (found.get(term.rowId)?.count ?? 0) });
     }
@@ -78,9 +83,17 @@ function readLegs(inputs: DivergenceInputs, theory: Theory, problems: Problem[])
 
 /** The reason why no connected graph has these vertices and legs; null when one has. */
 function refuse({ vertices, legs }: GraphParts, { lines, loops }: Degree, theory: Theory): Problem | null {
-  const ends = vertices.reduce((sum, { edges, count }) => addHalfEdges(sum, edges, count), noHalfEdges(theory));
+  const ends = vertices.reduce(
+    (sum, { edges, count }) => addHalfEdges(sum, edges, count),
+    noHalfEdges(theory),
+  );
   for (const [f, field] of theory.fields.entries()) {
-    const facts = { symbol: field.symbol, latex: field.latex, ends: countOf(ends, f), legs: countOf(legs, f) };
+    const facts = {
+      symbol: field.symbol,
+      latex: field.latex,
+      ends: countOf(ends, f),
+      legs: countOf(legs, f),
+    };
     const internal = lines[f] ?? 0;
     if (internal < 0) return { code: "graph-too-many-legs", path: ["legs"], facts };
     if (!Number.isInteger(internal)) return { code: "graph-half-line", path: ["legs"], facts };
@@ -88,11 +101,19 @@ function refuse({ vertices, legs }: GraphParts, { lines, loops }: Degree, theory
   const vertexCount = vertices.reduce((sum, { count }) => sum + count, 0);
   if (loops < 0) {
     const internal = lines.reduce((sum, count) => sum + count, 0);
-    return { code: "graph-unconnected", path: ["vertices"], facts: { lines: internal, vertices: vertexCount, needed: vertexCount - 1 } };
+    return {
+      code: "graph-unconnected",
+      path: ["vertices"],
+      facts: { lines: internal, vertices: vertexCount, needed: vertexCount - 1 },
+    };
   }
   const existence = graphExists(vertices, legs, lines, theory);
   if (existence === "lines do not close") {
-    return { code: "graph-charge", path: ["legs"], facts: { symbols: directedSymbols(vertices, legs, theory) } };
+    return {
+      code: "graph-charge",
+      path: ["legs"],
+      facts: { symbols: directedSymbols(vertices, legs, theory) },
+    };
   }
   return existence === "falls apart" ? { code: "graph-falls-apart", path: ["vertices"], facts: {} } : null;
 }
@@ -100,5 +121,8 @@ function refuse({ vertices, legs }: GraphParts, { lines, loops }: Degree, theory
 /** Fields with a direction that take part: the ones whose number the legs or vertices fail to conserve. */
 function directedSymbols(vertices: GraphParts["vertices"], legs: HalfEdges, theory: Theory): string {
   const taking = (f: number) => countOf(legs, f) > 0 || vertices.some(({ edges }) => countOf(edges, f) > 0);
-  return theory.fields.filter((field, f) => !field.selfConjugate && taking(f)).map(({ symbol }) => symbol).join(", ");
+  return theory.fields
+    .filter((field, f) => !field.selfConjugate && taking(f))
+    .map(({ symbol }) => symbol)
+    .join(", ");
 }

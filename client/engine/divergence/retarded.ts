@@ -22,7 +22,11 @@ function outgoing(edges: HalfEdges, fields: readonly number[]): number {
  *
  * @example one (ψ†ψ)² vertex with legs ψ†ψ: two particles would have to meet where only one came in; vanishes.
  */
-export function vanishesInVacuum(vertices: readonly { readonly edges: HalfEdges }[], legs: HalfEdges, theory: Theory): boolean {
+export function vanishesInVacuum(
+  vertices: readonly { readonly edges: HalfEdges }[],
+  legs: HalfEdges,
+  theory: Theory,
+): boolean {
   const retarded = theory.fields.flatMap((field, f) => (isRetarded(field) ? [f] : []));
   return [retarded, ...retarded.map((f) => [f])].some((fields) => {
     const conserved = vertices.every(({ edges }) => incoming(edges, fields) === outgoing(edges, fields));

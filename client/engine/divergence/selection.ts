@@ -10,13 +10,18 @@ export function forbiddingSymmetry(legs: HalfEdges, theory: Theory): Symmetry | 
       const net = (legs.plain[f] ?? 0) - (legs.conjugate[f] ?? 0);
       return sum.plus((field.charges[s] ?? Rational.zero).times(Rational.of(net)));
     }, Rational.zero);
-    return symmetry.modulus === null ? charge.sign() !== 0 : !charge.over(Rational.of(symmetry.modulus)).isInteger();
+    return symmetry.modulus === null
+      ? charge.sign() !== 0
+      : !charge.over(Rational.of(symmetry.modulus)).isInteger();
   });
   return broken ?? null;
 }
 
 /** Whether an odd number of fermions is left over, which rotation by 2π forbids. Ghosts anticommute and count too. */
 export function isFermionOdd(legs: HalfEdges, theory: Theory): boolean {
-  const fermions = theory.fields.reduce((sum, field, f) => sum + (field.statistics === "fermion" ? countOf(legs, f) : 0), 0);
+  const fermions = theory.fields.reduce(
+    (sum, field, f) => sum + (field.statistics === "fermion" ? countOf(legs, f) : 0),
+    0,
+  );
   return fermions % 2 !== 0;
 }

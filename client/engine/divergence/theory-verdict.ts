@@ -17,12 +17,17 @@ interface Forms {
 
 function formsOf(theory: Theory): Forms {
   const terms = interactionTerms(theory);
-  const legsOf = (edges: (typeof terms)[number]["edges"]) => theory.fields.reduce((sum, _, f) => sum + countOf(edges, f), 0);
+  const legsOf = (edges: (typeof terms)[number]["edges"]) =>
+    theory.fields.reduce((sum, _, f) => sum + countOf(edges, f), 0);
   const interacting = terms.filter(({ edges }) => legsOf(edges) > 2);
   return {
     couplings: interacting.map(({ term }) => term.ultravioletCoefficient),
-    bilinears: terms.filter(({ edges }) => legsOf(edges) === 2).map(({ term }) => term.ultravioletCoefficient),
-    weights: theory.fields.filter((_, f) => interacting.some(({ edges }) => countOf(edges, f) > 0)).map(({ weight }) => weight),
+    bilinears: terms
+      .filter(({ edges }) => legsOf(edges) === 2)
+      .map(({ term }) => term.ultravioletCoefficient),
+    weights: theory.fields
+      .filter((_, f) => interacting.some(({ edges }) => countOf(edges, f) > 0))
+      .map(({ weight }) => weight),
   };
 }
 
@@ -31,13 +36,18 @@ function formsOf(theory: Theory): Forms {
  * δ ≤ 0 can be added to any amplitude at no cost. Some [g] < 0: every amplitude diverges at some order.
  * Source: Peskin, Schroeder (1995), section 10.1; the case δ ≤ 0 is an own derivation from ω = d − Σ E δ − Σ V [g].
  */
-function verdictFrom(signs: (forms: readonly LinearForm[]) => readonly number[], forms: Forms): TheoryVerdict {
+function verdictFrom(
+  signs: (forms: readonly LinearForm[]) => readonly number[],
+  forms: Forms,
+): TheoryVerdict {
   const couplings = signs(forms.couplings);
   const bilinears = signs(forms.bilinears);
   if (couplings.length === 0) return "free";
   if ([...couplings, ...bilinears].some((sign) => sign < 0)) return "new terms at every order";
   if (couplings.every((sign) => sign > 0)) return "super-renormalisable";
-  return signs(forms.weights).some((sign) => sign <= 0) ? "infinitely many divergent amplitudes" : "renormalisable";
+  return signs(forms.weights).some((sign) => sign <= 0)
+    ? "infinitely many divergent amplitudes"
+    : "renormalisable";
 }
 
 const signsAt =
@@ -71,9 +81,17 @@ export function renormalisability(theory: Theory): RenormalisabilityVerdict {
 
 /** The verdict at each dimension where some sign changes, and on the open intervals between, for positive values. */
 function rangesIn(symbol: "d" | "D" | "z", all: readonly LinearForm[], forms: Forms): VerdictRange[] {
-  const zeros = all.map((form) => form.zeroIn(symbol)).filter((zero): zero is Rational => zero !== null && zero.sign() > 0);
-  const sorted = zeros.sort((a, b) => a.compare(b)).filter((zero, n, list) => n === 0 || !zero.equals(list[n - 1] ?? zero));
-  const verdictAt = (value: Rational) => verdictFrom(signsAt((form) => form.at(symbol, value).constant), forms);
+  const zeros = all
+    .map((form) => form.zeroIn(symbol))
+    .filter((zero): zero is Rational => zero !== null && zero.sign() > 0);
+  const sorted = zeros
+    .sort((a, b) => a.compare(b))
+    .filter((zero, n, list) => n === 0 || !zero.equals(list[n - 1] ?? zero));
+  const verdictAt = (value: Rational) =>
+    verdictFrom(
+      signsAt((form) => form.at(symbol, value).constant),
+      forms,
+    );
   const pieces: { from: Rational | null; to: Rational | null; verdict: TheoryVerdict }[] = [];
   let below = Rational.zero;
   for (const zero of sorted) {

@@ -97,7 +97,11 @@ export interface GraphDivergence {
   readonly omega: Exact;
   readonly verdict: Verdict;
   /** For symbolic d alone: the dimension where ω = 0, and whether ω grows with d. Null otherwise. */
-  readonly logarithmicAt: { readonly symbol: "d" | "D" | "z"; readonly value: Exact; readonly growsAbove: boolean } | null;
+  readonly logarithmicAt: {
+    readonly symbol: "d" | "D" | "z";
+    readonly value: Exact;
+    readonly growsAbove: boolean;
+  } | null;
   readonly dimensional: Meaning;
   readonly cutoff: Meaning;
   /** Highest power of the cutoff, when ω is a number > 0. */
@@ -106,7 +110,11 @@ export interface GraphDivergence {
 }
 
 /** "divergent": ω ≥ 0 and a graph exists. The rest have ω ≥ 0 by their legs but no graph makes them. */
-export type AmplitudeStatus = "divergent" | "forbidden by symmetry" | "forbidden by fermion parity" | "no graph within the caps"
+export type AmplitudeStatus =
+  | "divergent"
+  | "forbidden by symmetry"
+  | "forbidden by fermion parity"
+  | "no graph within the caps"
   /** Every graph has a closed loop of retarded propagators. */
   | "vanishes in vacuum";
 
@@ -116,7 +124,11 @@ export interface AmplitudeAtOrder {
   readonly omega: Exact;
   /** Fewest loops at which this degree is reached, and the vertices that reach it, "2 × (r1) + …" as counts. */
   readonly loops: number;
-  readonly vertices: readonly { readonly termRowId: string; readonly latex: string; readonly count: number }[];
+  readonly vertices: readonly {
+    readonly termRowId: string;
+    readonly latex: string;
+    readonly count: number;
+  }[];
 }
 
 export interface Amplitude {
@@ -153,7 +165,11 @@ export interface TheoryDivergence {
   readonly verdict: TheoryVerdict | null;
   readonly ranges: readonly VerdictRange[];
   /** The interactions with their ultraviolet coefficient dimension. */
-  readonly couplings: readonly { readonly termRowId: string; readonly latex: string; readonly coefficient: Exact }[];
+  readonly couplings: readonly {
+    readonly termRowId: string;
+    readonly latex: string;
+    readonly coefficient: Exact;
+  }[];
   /** Divergent ones first, by number of legs. Empty when d, D or z is a symbol. */
   readonly amplitudes: readonly Amplitude[];
   /** Counterterms that symmetries allow and the premises lack, without repetition, by order in 1/Λ. */

@@ -16,7 +16,11 @@ export interface Interaction {
 
 /** Vertices with total n − 2 = `surplus`, so that L = surplus/2 − E/2 + 1. */
 export interface VertexSet {
-  readonly vertices: readonly { readonly interaction: Interaction; readonly edges: HalfEdges; readonly count: number }[];
+  readonly vertices: readonly {
+    readonly interaction: Interaction;
+    readonly edges: HalfEdges;
+    readonly count: number;
+  }[];
   readonly edges: HalfEdges;
   /** Σ V (n − 2). */
   readonly surplus: number;
@@ -57,7 +61,13 @@ export function vertexSets(
   caps: { readonly surplus: number; readonly order: Rational },
   most: number,
 ): VertexSet[] | null {
-  const empty: VertexSet = { vertices: [], edges: noHalfEdges(theory), surplus: 0, coefficients: Rational.zero, order: Rational.zero };
+  const empty: VertexSet = {
+    vertices: [],
+    edges: noHalfEdges(theory),
+    surplus: 0,
+    coefficients: Rational.zero,
+    order: Rational.zero,
+  };
   let sets: VertexSet[] = [empty];
   for (const interaction of interactions) {
     const grown: VertexSet[] = [];

@@ -19,12 +19,25 @@ const MOST_VERTEX_SETS = 6_000;
 const MOST_LEG_CHOICES = 6_000;
 
 export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evaluation<TheoryDivergence> {
-  const refuse = (problems: Problem[]): Evaluation<TheoryDivergence> => ({ value: null, problems, notices: [], scalars: [], working: [] });
+  const refuse = (problems: Problem[]): Evaluation<TheoryDivergence> => ({
+    value: null,
+    problems,
+    notices: [],
+    scalars: [],
+    working: [],
+  });
   const problems: Problem[] = [];
   const caps = readCaps(inputs, problems);
   if (problems.length > 0) return refuse(problems);
   const listed = listAmplitudes(theory, caps, inputs.symmetries === "yes");
-  if (listed === "too many") return refuse([{ code: "theory-too-large", path: ["maxLoops"], facts: { loops: caps.loops, legs: caps.legs, order: caps.order.toString() } }]);
+  if (listed === "too many")
+    return refuse([
+      {
+        code: "theory-too-large",
+        path: ["maxLoops"],
+        facts: { loops: caps.loops, legs: caps.legs, order: caps.order.toString() },
+      },
+    ]);
   const value: TheoryDivergence = {
     mode: "whole theory",
     ...renormalisability(theory),
@@ -38,7 +51,13 @@ export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evalua
     bounds: boundsOf(theory, listed ?? []),
     caps: { loops: caps.loops, legs: caps.legs, order: shown(caps.order) },
   };
-  return { value, problems: [], notices: noticesOf(value, listed === null), scalars: scalarsOf(value), working: explainTheory(value, theory) };
+  return {
+    value,
+    problems: [],
+    notices: noticesOf(value, listed === null),
+    scalars: scalarsOf(value),
+    working: explainTheory(value, theory),
+  };
 }
 
 function readCaps(inputs: DivergenceInputs, problems: Problem[]): Caps {
@@ -46,7 +65,8 @@ function readCaps(inputs: DivergenceInputs, problems: Problem[]): Caps {
     const typed = inputs[field].trim();
     if (typed === "") return initial;
     const value = /^\d{1,4}$/.test(typed) ? Number(typed) : -1;
-    if (value < 1 || value > most) problems.push({ code: "cap-unreadable", path: [field], facts: { text: typed, most } });
+    if (value < 1 || value > most)
+      problems.push({ code: "cap-unreadable", path: [field], facts: { text: typed, most } });
     return value;
   };
   const loops = whole("maxLoops", 2, MOST_LOOPS);
@@ -54,7 +74,8 @@ function readCaps(inputs: DivergenceInputs, problems: Problem[]): Caps {
   const typed = inputs.maxOrder.trim();
   const order = typed === "" ? Rational.of(2) : Rational.parse(typed);
   const fits = order !== null && order.sign() >= 0 && order.compare(Rational.of(MOST_ORDER)) <= 0;
-  if (!fits) problems.push({ code: "cap-unreadable", path: ["maxOrder"], facts: { text: typed, most: MOST_ORDER } });
+  if (!fits)
+    problems.push({ code: "cap-unreadable", path: ["maxOrder"], facts: { text: typed, most: MOST_ORDER } });
   return { loops, legs, order: fits ? order : Rational.zero };
 }
 
@@ -62,8 +83,14 @@ function readCaps(inputs: DivergenceInputs, problems: Problem[]): Caps {
 function listAmplitudes(theory: Theory, caps: Caps, useSymmetries: boolean): Amplitude[] | null | "too many" {
   const interactions = interactionsOf(theory);
   const isNumber = (form: LinearForm) => form.asRational() !== null;
-  if (!interactions || !isNumber(theory.measure) || !theory.fields.every(({ weight }) => isNumber(weight))) return null;
-  const sets = vertexSets(interactions, theory, { surplus: 2 * (caps.loops - 1) + caps.legs, order: caps.order }, MOST_VERTEX_SETS);
+  if (!interactions || !isNumber(theory.measure) || !theory.fields.every(({ weight }) => isNumber(weight)))
+    return null;
+  const sets = vertexSets(
+    interactions,
+    theory,
+    { surplus: 2 * (caps.loops - 1) + caps.legs, order: caps.order },
+    MOST_VERTEX_SETS,
+  );
   const choices = legChoices(theory, caps.legs, MOST_LEG_CHOICES);
   if (!sets || !choices) return "too many";
   const bySurplus = groupBySurplus(sets);
@@ -92,17 +119,26 @@ function missingFrom(amplitudes: readonly Amplitude[]): Counterterm[] {
 
 /** One line for each order in 1/Λ that graphs within the caps reach. */
 function boundsOf(theory: Theory, amplitudes: readonly Amplitude[]): TheoryDivergence["bounds"] {
-  const orders = new Map(amplitudes.flatMap(({ atOrders }) => atOrders).map(({ order }) => [order.text, Rational.parse(order.text) ?? Rational.zero]));
+  const orders = new Map(
+    amplitudes
+      .flatMap(({ atOrders }) => atOrders)
+      .map(({ order }) => [order.text, Rational.parse(order.text) ?? Rational.zero]),
+  );
   return [...orders.values()]
     .sort((a, b) => a.compare(b))
-    .map((order) => ({ order: shown(order), largestDimension: shown(theory.measure.plus(LinearForm.constant(order))) }));
+    .map((order) => ({
+      order: shown(order),
+      largestDimension: shown(theory.measure.plus(LinearForm.constant(order))),
+    }));
 }
 
 function noticesOf(value: TheoryDivergence, isSymbolic: boolean): Notice[] {
   const notice = (code: string): Notice => ({ code, path: [], facts: {} });
   if (isSymbolic) return [notice("amplitudes-need-numbers")];
   const divergent = value.amplitudes.filter(({ status }) => status === "divergent");
-  const touchesGauge = divergent.some(({ counterterms }) => counterterms.some(({ gauge }) => gauge !== "none"));
+  const touchesGauge = divergent.some(({ counterterms }) =>
+    counterterms.some(({ gauge }) => gauge !== "none"),
+  );
   return [
     ...(divergent.length > 0 ? [notice("omega-not-sufficient")] : []),
     ...(touchesGauge ? [notice("omega-gauge")] : []),
@@ -113,11 +149,21 @@ function noticesOf(value: TheoryDivergence, isSymbolic: boolean): Notice[] {
 function scalarsOf(value: TheoryDivergence): Scalar[] {
   const divergent = value.amplitudes.filter(({ status }) => status === "divergent");
   const verdict: Scalar[] = value.verdict
-    ? [{ id: "verdict", label: "renormalisability by power counting", value: { type: "word", text: value.verdict } }]
+    ? [
+        {
+          id: "verdict",
+          label: "renormalisability by power counting",
+          value: { type: "word", text: value.verdict },
+        },
+      ]
     : [];
   return [
     ...verdict,
-    { id: "divergent", label: "divergent amplitudes within the caps", value: { type: "exact", text: String(divergent.length) } },
+    {
+      id: "divergent",
+      label: "divergent amplitudes within the caps",
+      value: { type: "exact", text: String(divergent.length) },
+    },
     ...divergent.map(({ legs, omega }): Scalar => ({
       id: `${legs.key}/omega`,
       label: `degree of divergence of ${legs.latex === "1" ? "the vacuum" : `$${legs.latex}$`}`,

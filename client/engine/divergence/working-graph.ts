@@ -17,29 +17,54 @@ function minusEach(products: readonly string[]): string {
   return products.map((product) => ` - ${product}`).join("");
 }
 
-export function explainGraph(graph: GraphParts, degree: Degree, value: GraphDivergence, theory: Theory): WorkingStep[] {
+export function explainGraph(
+  graph: GraphParts,
+  degree: Degree,
+  value: GraphDivergence,
+  theory: Theory,
+): WorkingStep[] {
   const steps: WorkingStep[] = [
     { step: "heading", text: "Internal lines and loops" },
-    { step: "formula", latex: "I_f = \\tfrac12\\Bigl(\\sum_i V_i n_{if} - E_f\\Bigr), \\qquad L = \\sum_f I_f - \\sum_i V_i + 1" },
+    {
+      step: "formula",
+      latex:
+        "I_f = \\tfrac12\\Bigl(\\sum_i V_i n_{if} - E_f\\Bigr), \\qquad L = \\sum_f I_f - \\sum_i V_i + 1",
+    },
     ...lineSteps(graph, degree, theory),
     { step: "formula", latex: loopFormula(graph, degree) },
     { step: "heading", text: "Degree by powers of momentum" },
-    { step: "prose", text: `The measure weighs $${theory.measure.toLatex()}$; a propagator of $f$ falls as $p^{2\\delta_f - ${theory.measure.toLatex()}}$.` },
+    {
+      step: "prose",
+      text: `The measure weighs $${theory.measure.toLatex()}$; a propagator of $f$ falls as $p^{2\\delta_f - ${theory.measure.toLatex()}}$.`,
+    },
     { step: "formula", latex: byMomenta(graph, degree, theory) },
     { step: "heading", text: "Degree by dimensions" },
     { step: "formula", latex: byDimensions(graph, degree, theory) },
-    { step: "prose", text: "Both ways agree (Weinberg 1995, section 12.1; Peskin and Schroeder 1995, section 10.1)." },
+    {
+      step: "prose",
+      text: "Both ways agree (Weinberg 1995, section 12.1; Peskin and Schroeder 1995, section 10.1).",
+    },
     ...symbolicSteps(value),
   ];
   return value.counterterms.length === 0 ? steps : [...steps, ...countertermSteps(value)];
 }
 
 function lineSteps({ vertices, legs }: GraphParts, { lines }: Degree, theory: Theory): WorkingStep[] {
-  const ends = vertices.reduce((sum, { edges, count }) => addHalfEdges(sum, edges, count), noHalfEdges(theory));
+  const ends = vertices.reduce(
+    (sum, { edges, count }) => addHalfEdges(sum, edges, count),
+    noHalfEdges(theory),
+  );
   return theory.fields.flatMap((field, f): WorkingStep[] => {
     if (countOf(ends, f) === 0) return [];
-    const parts = vertices.filter(({ edges }) => countOf(edges, f) > 0).map(({ edges, count }) => `${count}\\cdot ${countOf(edges, f)}`);
-    return [{ step: "formula", latex: `I_{${field.latex}} = \\tfrac12\\bigl(${parts.join(" + ")} - ${countOf(legs, f)}\\bigr) = ${lines[f] ?? 0}` }];
+    const parts = vertices
+      .filter(({ edges }) => countOf(edges, f) > 0)
+      .map(({ edges, count }) => `${count}\\cdot ${countOf(edges, f)}`);
+    return [
+      {
+        step: "formula",
+        latex: `I_{${field.latex}} = \\tfrac12\\bigl(${parts.join(" + ")} - ${countOf(legs, f)}\\bigr) = ${lines[f] ?? 0}`,
+      },
+    ];
   });
 }
 
@@ -56,7 +81,8 @@ function byMomenta({ vertices }: GraphParts, { lines, loops, omega }: Degree, th
   const derivatives = vertices
     .filter(({ term }) => !term.derivativeWeight.equals(LinearForm.zero))
     .map(({ term, count }) => ` + ${count}\\cdot ${bracketed(term.derivativeWeight)}`);
-  const general = "\\omega = [\\text{measure}]\\,L - \\sum_f I_f\\,([\\text{measure}] - 2\\delta_f) + \\sum_i V_i k_i";
+  const general =
+    "\\omega = [\\text{measure}]\\,L - \\sum_f I_f\\,([\\text{measure}] - 2\\delta_f) + \\sum_i V_i k_i";
   const numbers = `${bracketed(theory.measure)}\\cdot ${loops}${minusEach(propagators)}${derivatives.join("")}`;
   return `\\begin{aligned} ${general.replace("=", "&=")} \\\\ &= ${numbers} = ${omega.toLatex()} \\end{aligned}`;
 }
@@ -66,7 +92,9 @@ function byDimensions({ vertices, legs }: GraphParts, { omega }: Degree, theory:
     const count = countOf(legs, f);
     return count === 0 ? [] : [`${count}\\cdot ${bracketed(field.weight)}`];
   });
-  const couplings = vertices.map(({ term, count }) => `${count}\\cdot ${bracketed(term.ultravioletCoefficient)}`);
+  const couplings = vertices.map(
+    ({ term, count }) => `${count}\\cdot ${bracketed(term.ultravioletCoefficient)}`,
+  );
   const general = "\\omega = [\\text{measure}] - \\sum_f E_f \\delta_f - \\sum_i V_i [g_i]";
   const numbers = `${theory.measure.toLatex()}${minusEach(external)}${minusEach(couplings)}`;
   return `\\begin{aligned} ${general.replace("=", "&=")} \\\\ &= ${numbers} = ${omega.toLatex()} \\end{aligned}`;
@@ -74,9 +102,14 @@ function byDimensions({ vertices, legs }: GraphParts, { omega }: Degree, theory:
 
 function symbolicSteps({ logarithmicAt: at }: GraphDivergence): WorkingStep[] {
   if (!at) return [];
-  const [above, below] = at.growsAbove ? ["diverges as a power", "converges"] : ["converges", "diverges as a power"];
+  const [above, below] = at.growsAbove
+    ? ["diverges as a power", "converges"]
+    : ["converges", "diverges as a power"];
   return [
-    { step: "prose", text: `$\\omega = 0$ at $${at.symbol} = ${at.value.latex}$: there the graph diverges logarithmically; above it ${above}, below it ${below}.` },
+    {
+      step: "prose",
+      text: `$\\omega = 0$ at $${at.symbol} = ${at.value.latex}$: there the graph diverges logarithmically; above it ${above}, below it ${below}.`,
+    },
   ];
 }
 
@@ -89,7 +122,10 @@ function countertermSteps({ counterterms, omega }: GraphDivergence): WorkingStep
     },
     ...counterterms.map((term): WorkingStep => {
       const rest = term.massPower.text === "0" ? "" : `,\\quad \\text{rest } [m]^{${term.massPower.latex}}`;
-      return { step: "formula", latex: `${term.latex}:\\quad \\Delta = ${term.dimension.latex},\\quad [c] = ${term.coefficient.latex}${rest}` };
+      return {
+        step: "formula",
+        latex: `${term.latex}:\\quad \\Delta = ${term.dimension.latex},\\quad [c] = ${term.coefficient.latex}${rest}`,
+      };
     }),
   ];
 }

@@ -22,7 +22,9 @@ export function explainTheory(value: TheoryDivergence, theory: Theory): WorkingS
     const term = theory.terms.find(({ rowId }) => rowId === termRowId);
     return { latex, coefficient: term?.ultravioletCoefficient, name: `V_{${index + 1}}` };
   });
-  const vertices = couplings.map(({ coefficient, name }) => (coefficient ? ` - ${bracketed(coefficient)}\\,${name}` : "")).join("");
+  const vertices = couplings
+    .map(({ coefficient, name }) => (coefficient ? ` - ${bracketed(coefficient)}\\,${name}` : ""))
+    .join("");
   return [
     { step: "heading", text: "Degree of every amplitude" },
     { step: "formula", latex: "\\omega = [\\text{measure}] - \\sum_f E_f \\delta_f - \\sum_i V_i [g_i]" },
@@ -38,15 +40,24 @@ export function explainTheory(value: TheoryDivergence, theory: Theory): WorkingS
 }
 
 function verdictSteps({ verdict, ranges }: TheoryDivergence): WorkingStep[] {
-  if (verdict) return [{ step: "prose", text: `${reasons[verdict]} (Peskin and Schroeder 1995, section 10.1.)` }];
+  if (verdict)
+    return [{ step: "prose", text: `${reasons[verdict]} (Peskin and Schroeder 1995, section 10.1.)` }];
   return ranges.map(({ from, to, verdict: here }): WorkingStep => {
-    const place = from && to && from.text === to.text ? `at $${from.latex}$` : to ? `between $${from?.latex ?? "0"}$ and $${to.latex}$` : `above $${from?.latex ?? "0"}$`;
+    const place =
+      from && to && from.text === to.text
+        ? `at $${from.latex}$`
+        : to
+          ? `between $${from?.latex ?? "0"}$ and $${to.latex}$`
+          : `above $${from?.latex ?? "0"}$`;
     return { step: "prose", text: `Dimension ${place}: ${here}. ${reasons[here]}` };
   });
 }
 
 /** The exact statement behind "renormalisable order by order". */
-function orderSteps({ verdict, finitelyManyPerOrder, bounds }: TheoryDivergence, theory: Theory): WorkingStep[] {
+function orderSteps(
+  { verdict, finitelyManyPerOrder, bounds }: TheoryDivergence,
+  theory: Theory,
+): WorkingStep[] {
   if (verdict !== "new terms at every order") return [];
   const measure = theory.measure.toLatex();
   const finite = finitelyManyPerOrder
@@ -58,7 +69,10 @@ function orderSteps({ verdict, finitelyManyPerOrder, bounds }: TheoryDivergence,
       step: "prose",
       text: `Let $n = \\sum_i V_i \\max(0, -[g_i])$ be the order in $1/\\Lambda$. Then $\\omega \\le ${measure} - \\sum_f E_f\\delta_f + n$, so divergences at order $n$ need no operator of dimension above $${measure} + n$; ${finite}`,
     },
-    ...bounds.map(({ order, largestDimension }): WorkingStep => ({ step: "formula", latex: `n = ${order.latex}:\\quad \\Delta \\le ${largestDimension.latex}` })),
+    ...bounds.map(({ order, largestDimension }): WorkingStep => ({
+      step: "formula",
+      latex: `n = ${order.latex}:\\quad \\Delta \\le ${largestDimension.latex}`,
+    })),
     {
       step: "prose",
       text: "In dimensional regularisation with mass-independent subtraction, and with every mass kept as a light parameter, counterterms of order $n$ are exactly of order $n$; a cutoff also renormalises operators of lower dimension.",

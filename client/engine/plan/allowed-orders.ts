@@ -14,7 +14,8 @@ const MOST_CHOICES = 20_000;
 /** Largest number that divides both a whole number of times; 0 divides nothing and is passed over. */
 export function commonStep(a: Rational, b: Rational): Rational {
   let [large, small] = a.compare(b) > 0 ? [a, b] : [b, a];
-  while (small.sign() > 0) [large, small] = [small, large.minus(small.times(Rational.of(large.over(small).floor())))];
+  while (small.sign() > 0)
+    [large, small] = [small, large.minus(small.times(Rational.of(large.over(small).floor())))];
   return large;
 }
 
@@ -29,9 +30,13 @@ export function stepOfOrders(theory: Theory): Rational | null {
   const measure = theory.measure.asRational();
   const weights = theory.fields.map(({ dimension }) => dimension.asRational());
   const time = theory.spacetime.geometry === "anisotropic" ? theory.spacetime.z.asRational() : null;
-  if (!measure || weights.length === 0 || weights.some((weight) => !weight || weight.sign() <= 0)) return null;
+  if (!measure || weights.length === 0 || weights.some((weight) => !weight || weight.sign() <= 0))
+    return null;
   const highest = measure.plus(Rational.of(HIGHEST_LOOKED_AT));
-  const lightest = weights.reduce((least, weight) => (weight && least && weight.compare(least) < 0 ? weight : least), weights[0] ?? null);
+  const lightest = weights.reduce(
+    (least, weight) => (weight && least && weight.compare(least) < 0 ? weight : least),
+    weights[0] ?? null,
+  );
   const most = lightest ? Math.min(MOST_LEGS, Number(highest.over(lightest).floor())) : 0;
   const choices = legChoices(theory, most, MOST_CHOICES);
   if (!choices) return null;

@@ -11,21 +11,39 @@ function caution(code: string, facts: Notice["facts"] = {}): Notice {
   return { code, path: [], facts };
 }
 
-export function planCautions(expansion: Expansion, order: Rational | null, terms: readonly PlanTerm[], scales: PlanScales, theory: Theory): Notice[] {
+export function planCautions(
+  expansion: Expansion,
+  order: Rational | null,
+  terms: readonly PlanTerm[],
+  scales: PlanScales,
+  theory: Theory,
+): Notice[] {
   const found: Notice[] = [];
   if (scales.Q > 0.5) found.push(caution("plan-slow", { Q: Number(scales.Q.toPrecision(3)) }));
-  if (scales.Q + scales.sigmaQ >= 1) found.push(caution("plan-reaches-end", { Q: scales.Q, sigma: scales.sigmaQ }));
+  if (scales.Q + scales.sigmaQ >= 1)
+    found.push(caution("plan-reaches-end", { Q: scales.Q, sigma: scales.sigmaQ }));
   for (const term of terms) {
     const size = sizeOf(term, expansion.Q, workingPoint);
     if (term.assigned && term.order.sign() === 0 && size > 1)
-      found.push(caution("plan-assigned-large", { latex: term.latex, rowId: term.rowId, size: Number(size.toPrecision(3)) }));
+      found.push(
+        caution("plan-assigned-large", {
+          latex: term.latex,
+          rowId: term.rowId,
+          size: Number(size.toPrecision(3)),
+        }),
+      );
   }
   for (const term of theory.terms)
-    if (!term.allowed && !term.kinetic) found.push(caution("plan-forbidden-term", { latex: term.latex, rowId: term.rowId }));
+    if (!term.allowed && !term.kinetic)
+      found.push(caution("plan-forbidden-term", { latex: term.latex, rowId: term.rowId }));
   const last = order ?? expansion.orders.at(-1);
   if (last) {
     const { listed, unlisted } = leftOutAt(expansion, last, workingPoint);
-    if (expansion.sumUsed === "listed terms only" && listed + unlisted >= expansion.target && listed < expansion.target)
+    if (
+      expansion.sumUsed === "listed terms only" &&
+      listed + unlisted >= expansion.target &&
+      listed < expansion.target
+    )
       found.push(caution("plan-tail-matters", { unlisted: Number(unlisted.toPrecision(3)) }));
     found.push(...rateCautions(expansion, last));
   }
@@ -42,6 +60,8 @@ function rateCautions({ observable, entries }: Expansion, kept: Rational): Notic
     return lowest ? [caution("plan-square-leads", { order: lowest.order.toString() })] : [];
   }
   if (observable !== "rate with interference" || !first) return [];
-  const hasInterference = entries.some((entry) => entry.role === "interference" && isLoneTerm(entry) && entry.order.equals(first.order));
+  const hasInterference = entries.some(
+    (entry) => entry.role === "interference" && isLoneTerm(entry) && entry.order.equals(first.order),
+  );
   return hasInterference ? [] : [caution("plan-square-alone", { order: first.order.toString() })];
 }

@@ -11,14 +11,26 @@ import { largestProbe, leftOutAt, type Expansion, type LeftOut } from "./sums.ts
 import { sizeOf, workingPoint, type PlanTerm } from "./terms.ts";
 import type { OrderPlanValue, PlanEntry, PlanOrder, PlanScale } from "./value.ts";
 
-export function describePlan(expansion: Expansion, order: Rational | null, terms: readonly PlanTerm[], scales: PlanScales, theory: Theory): OrderPlanValue {
+export function describePlan(
+  expansion: Expansion,
+  order: Rational | null,
+  terms: readonly PlanTerm[],
+  scales: PlanScales,
+  theory: Theory,
+): OrderPlanValue {
   const factor = loopFactor(theory);
   const orders = expansion.orders.map((at) => describeOrder(expansion, at, order, terms, factor, scales));
   const stop = orders.find(({ order: [at] }) => at?.text === order?.toString()) ?? orders.at(-1);
   const firstUnlisted = expansion.highestListed.plus(expansion.step);
   const text = order && shown(order);
   return {
-    parameters: [{ latex: `\\frac{${scales.probe.latex}}{${scales.heavy.latex}}`, value: roundFloat(scales.Q), sigma: roundFloat(scales.sigmaQ) }],
+    parameters: [
+      {
+        latex: `\\frac{${scales.probe.latex}}{${scales.heavy.latex}}`,
+        value: roundFloat(scales.Q),
+        sigma: roundFloat(scales.sigmaQ),
+      },
+    ],
     probe: describeScale(scales.probe),
     heavy: describeScale(scales.heavy),
     target: expansion.target,
@@ -55,7 +67,8 @@ function describeScale({ value, sigma, latex, unit }: PlanScaleRead): PlanScale 
 
 function describeEntry(entry: Entry, Q: number): PlanEntry {
   const counts = new Map<string, number>();
-  for (const { term, count } of entry.insertions) counts.set(term.rowId, count + (counts.get(term.rowId) ?? 0));
+  for (const { term, count } of entry.insertions)
+    counts.set(term.rowId, count + (counts.get(term.rowId) ?? 0));
   return {
     id: entry.id,
     latex: entryLatex(entry),
@@ -67,20 +80,33 @@ function describeEntry(entry: Entry, Q: number): PlanEntry {
   };
 }
 
-function describeOrder(expansion: Expansion, at: Rational, stop: Rational | null, terms: readonly PlanTerm[], factor: number | null, scales: PlanScales): PlanOrder {
+function describeOrder(
+  expansion: Expansion,
+  at: Rational,
+  stop: Rational | null,
+  terms: readonly PlanTerm[],
+  factor: number | null,
+  scales: PlanScales,
+): PlanOrder {
   const own = at.sign() === 0 ? leading(terms) : expansion.entries.filter(({ order }) => order.equals(at));
   const entries = own.map((entry) => describeEntry(entry, expansion.Q)).sort((a, b) => b.size - a.size);
   const sum = entries.reduce((total, { size }) => total + size, 0);
   const probe = largestProbe(expansion, at);
   // At order 0 the leading amplitude itself, of size 1, carries the loops.
   const carried = at.sign() === 0 ? 1 : sum;
-  const loops = !hasLeadingLoops(terms) ? 0 : factor === null ? null : loopsForTarget(carried, factor, expansion.target);
+  const loops = !hasLeadingLoops(terms)
+    ? 0
+    : factor === null
+      ? null
+      : loopsForTarget(carried, factor, expansion.target);
   return {
     order: [shown(at)],
     entries,
     sum: roundFloat(sum),
     leftOut: rounded(leftOutAt(expansion, at, workingPoint)),
-    largestProbe: roundFloat(probe.isHeavy ? scales.probe.value / scales.Q : probe.probe * scales.probe.value),
+    largestProbe: roundFloat(
+      probe.isHeavy ? scales.probe.value / scales.Q : probe.probe * scales.probe.value,
+    ),
     largestProbeIsHeavy: probe.isHeavy,
     loops: { insertions: at.sign() === 0 ? 0 : loopsOfInsertions(own), target: loops },
     included: stop === null || at.compare(stop) <= 0,

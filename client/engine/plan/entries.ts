@@ -20,11 +20,17 @@ export interface Entry {
 }
 
 export function sizeOfEntry(entry: Entry, Q: number, point: Point): number {
-  return entry.insertions.reduce((size, { term, count }) => size * sizeOf(term, Q, point) ** count, entry.factor as number);
+  return entry.insertions.reduce(
+    (size, { term, count }) => size * sizeOf(term, Q, point) ** count,
+    entry.factor as number,
+  );
 }
 
 function orderOf(insertions: readonly Insertion[]): Rational {
-  return insertions.reduce((sum, { term, count }) => sum.plus(term.order.times(Rational.of(count))), Rational.zero);
+  return insertions.reduce(
+    (sum, { term, count }) => sum.plus(term.order.times(Rational.of(count))),
+    Rational.zero,
+  );
 }
 
 function idOf(insertions: readonly Insertion[]): string {
@@ -32,14 +38,26 @@ function idOf(insertions: readonly Insertion[]): string {
 }
 
 function single(insertions: readonly Insertion[]): Entry {
-  return { id: idOf(insertions), order: orderOf(insertions), role: "insertion", insertions, factor: 1, sides: [insertions] };
+  return {
+    id: idOf(insertions),
+    order: orderOf(insertions),
+    role: "insertion",
+    insertions,
+    factor: 1,
+    sides: [insertions],
+  };
 }
 
 /**
  * Corrections to an amplitude: every product of up to `most` suppressed terms whose order is within the cap.
  * Orders add: a product of insertions is of order Σ (Δ − d). Null when there are more than `limit`.
  */
-export function corrections(terms: readonly PlanTerm[], most: number, cap: Rational, limit: number): Entry[] | null {
+export function corrections(
+  terms: readonly PlanTerm[],
+  most: number,
+  cap: Rational,
+  limit: number,
+): Entry[] | null {
   const suppressed = terms.filter(({ order }) => order.sign() > 0);
   let products: Insertion[][] = [[]];
   for (const term of suppressed) {
@@ -55,7 +73,8 @@ export function corrections(terms: readonly PlanTerm[], most: number, cap: Ratio
     }
     products = grown;
   }
-  const places = (product: Insertion[]) => product.flatMap(({ term, count }) => Array.from({ length: count }, () => suppressed.indexOf(term)));
+  const places = (product: Insertion[]) =>
+    product.flatMap(({ term, count }) => Array.from({ length: count }, () => suppressed.indexOf(term)));
   return products
     .filter((product) => product.length > 0)
     .sort((a, b) => inOrderOf(places(a), places(b)))
@@ -77,11 +96,22 @@ export function leading(terms: readonly PlanTerm[]): Entry[] {
  * |1 + Σ a|² expanded by total order: 2a for the interference with the leading amplitude (unless it vanishes), a² and
  * 2ab for the squares and cross terms. Null when there are more than `limit`.
  */
-export function rateEntries(amplitude: readonly Entry[], interferes: boolean, cap: Rational, limit: number): Entry[] | null {
+export function rateEntries(
+  amplitude: readonly Entry[],
+  interferes: boolean,
+  cap: Rational,
+  limit: number,
+): Entry[] | null {
   const found: Entry[] = [];
   if (interferes) {
     for (const entry of amplitude)
-      found.push({ ...entry, id: `${entry.id}|`, role: "interference", factor: 2, sides: [[], entry.insertions] });
+      found.push({
+        ...entry,
+        id: `${entry.id}|`,
+        role: "interference",
+        factor: 2,
+        sides: [[], entry.insertions],
+      });
   }
   for (const [index, one] of amplitude.entries()) {
     for (const other of amplitude.slice(index)) {
@@ -106,9 +136,16 @@ export function entryLatex(entry: Entry): string {
   const product = (insertions: readonly Insertion[]) =>
     insertions.length === 0
       ? "1"
-      : insertions.map(({ term, count }) => (count === 1 ? `\\left(${term.latex}\\right)` : `\\left(${term.latex}\\right)^{${count}}`)).join("\\,");
+      : insertions
+          .map(({ term, count }) =>
+            count === 1 ? `\\left(${term.latex}\\right)` : `\\left(${term.latex}\\right)^{${count}}`,
+          )
+          .join("\\,");
   const [one = [], other = []] = entry.sides;
-  if (entry.role === "insertion") return one.length === 1 && one[0]?.count === 1 ? one[0].term.latex : product(one);
+  if (entry.role === "insertion")
+    return one.length === 1 && one[0]?.count === 1 ? one[0].term.latex : product(one);
   if (entry.role === "interference") return `2\\,\\mathrm{Re}\\;${product(other)}`;
-  return entry.factor === 1 ? `\\bigl|${product(one)}\\bigr|^2` : `2\\,\\mathrm{Re}\\;${product(one)}\\,${product(other)}^{*}`;
+  return entry.factor === 1
+    ? `\\bigl|${product(one)}\\bigr|^2`
+    : `2\\,\\mathrm{Re}\\;${product(one)}\\,${product(other)}^{*}`;
 }

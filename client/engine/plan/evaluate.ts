@@ -22,16 +22,30 @@ const MOST_ENTRIES = 1_500;
  * The order to stop at for a target accuracy, in one expansion parameter Q = p/Λ. Problems beside a value: a relevant
  * term without a size, which is left out, and a target that the listed terms do not reach.
  */
-export function evaluateOrderPlan(inputs: OrderPlanInputs, theory: Theory | null): Evaluation<OrderPlanValue> {
-  const refuse = (problems: readonly Problem[]): Evaluation<OrderPlanValue> => ({ value: null, problems, notices: [], scalars: [], working: [] });
-  const problem = (code: string, path: Problem["path"] = [], facts: Problem["facts"] = {}): Problem => ({ code, path, facts });
+export function evaluateOrderPlan(
+  inputs: OrderPlanInputs,
+  theory: Theory | null,
+): Evaluation<OrderPlanValue> {
+  const refuse = (problems: readonly Problem[]): Evaluation<OrderPlanValue> => ({
+    value: null,
+    problems,
+    notices: [],
+    scalars: [],
+    working: [],
+  });
+  const problem = (code: string, path: Problem["path"] = [], facts: Problem["facts"] = {}): Problem => ({
+    code,
+    path,
+    facts,
+  });
   if (theory === null) return refuse([problem("premises-missing")]);
   const problems: Problem[] = [];
   const settings = readSettings(inputs, problems);
   const scales = readScales(inputs, theory, problems);
   const read = planTerms(theory);
   if (!read) problems.push(problem("plan-dimension-symbolic"));
-  if (scales && scales.Q >= 1) problems.push(problem("plan-q-not-below-one", ["probe"], { Q: Number(scales.Q.toPrecision(4)) }));
+  if (scales && scales.Q >= 1)
+    problems.push(problem("plan-q-not-below-one", ["probe"], { Q: Number(scales.Q.toPrecision(4)) }));
   if (!scales || !read || problems.length > 0) return refuse(problems);
 
   const expansion = expand(inputs, settings, scales, read.terms, theory);
@@ -41,7 +55,13 @@ export function evaluateOrderPlan(inputs: OrderPlanInputs, theory: Theory | null
   const missed = leftOutAt(expansion, expansion.orders.at(-1) ?? Rational.zero, workingPoint);
   const unreached = order
     ? []
-    : [problem("plan-target-unreached", ["target"], { target: settings.target, leftOut: roundFloat(Number(missed.used.toPrecision(3))), next: value.firstUnlisted.order.text })];
+    : [
+        problem("plan-target-unreached", ["target"], {
+          target: settings.target,
+          leftOut: roundFloat(Number(missed.used.toPrecision(3))),
+          next: value.firstUnlisted.order.text,
+        }),
+      ];
   return {
     value,
     problems: [...read.problems, ...unreached],
@@ -51,13 +71,22 @@ export function evaluateOrderPlan(inputs: OrderPlanInputs, theory: Theory | null
   };
 }
 
-function expand(inputs: OrderPlanInputs, settings: PlanSettings, scales: PlanScales, terms: readonly PlanTerm[], theory: Theory): Expansion | null {
+function expand(
+  inputs: OrderPlanInputs,
+  settings: PlanSettings,
+  scales: PlanScales,
+  terms: readonly PlanTerm[],
+  theory: Theory,
+): Expansion | null {
   const amplitude = corrections(terms, settings.insertions, settings.cap, MOST_ENTRIES);
   // The shape's choices are exactly these; the schema refuses anything else.
   const observable = inputs.observable as Expansion["observable"];
   const sumUsed = inputs.unlisted as Expansion["sumUsed"];
   if (!amplitude) return null;
-  const entries = observable === "amplitude" ? amplitude : rateEntries(amplitude, observable === "rate with interference", settings.cap, MOST_ENTRIES);
+  const entries =
+    observable === "amplitude"
+      ? amplitude
+      : rateEntries(amplitude, observable === "rate with interference", settings.cap, MOST_ENTRIES);
   if (!entries) return null;
   const listed = terms.map(({ order }) => order).filter((order) => order.compare(settings.cap) <= 0);
   return {
@@ -67,7 +96,10 @@ function expand(inputs: OrderPlanInputs, settings: PlanSettings, scales: PlanSca
     orders: distinctOrders(entries),
     observable,
     sumUsed,
-    highestListed: listed.reduce((highest, order) => (order.compare(highest) > 0 ? order : highest), Rational.zero),
+    highestListed: listed.reduce(
+      (highest, order) => (order.compare(highest) > 0 ? order : highest),
+      Rational.zero,
+    ),
     step: stepOfOrders(theory) ?? Rational.one,
     target: settings.target,
   };

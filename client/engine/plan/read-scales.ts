@@ -38,7 +38,12 @@ export function readScales(inputs: OrderPlanInputs, theory: Theory, problems: Pr
   return { probe, heavy, Q: ratio.value, sigmaQ: sigmaOf(ratio) };
 }
 
-function readScale(role: "probe" | "heavy", typed: string, theory: Theory, problems: Problem[]): PlanScaleRead | null {
+function readScale(
+  role: "probe" | "heavy",
+  typed: string,
+  theory: Theory,
+  problems: Problem[],
+): PlanScaleRead | null {
   const wrong = (code: string, facts: Problem["facts"]): null => {
     problems.push({ code, path: [role], facts });
     return null;
@@ -46,7 +51,10 @@ function readScale(role: "probe" | "heavy", typed: string, theory: Theory, probl
   const candidates = theory.scales.filter((scale) => scale.role === role);
   const [only, ...others] = candidates;
   if (typed.trim() === "" && others.length > 0)
-    return wrong("plan-scale-ambiguous", { role, symbols: candidates.map(({ symbol }) => symbol).join(", ") });
+    return wrong("plan-scale-ambiguous", {
+      role,
+      symbols: candidates.map(({ symbol }) => symbol).join(", "),
+    });
   if (typed.trim() === "" && !only) return wrong("plan-scale-missing", { role });
   const text = typed.trim() === "" ? (only?.symbol ?? "") : typed;
   const read = readQuantity(text, declaredScales(theory), role);
@@ -54,7 +62,13 @@ function readScale(role: "probe" | "heavy", typed: string, theory: Theory, probl
   const { quantity, latex } = read.value;
   if (!(quantity.value > 0)) return wrong("plan-scale-not-positive", { role, value: quantity.value });
   const { value, sigma } = shown(quantity);
-  return { quantity, latex: isLiteral(text) ? (role === "probe" ? "p" : "\\Lambda") : latex, value, sigma, unit: unitText(quantity) };
+  return {
+    quantity,
+    latex: isLiteral(text) ? (role === "probe" ? "p" : "\\Lambda") : latex,
+    value,
+    sigma,
+    unit: unitText(quantity),
+  };
 }
 
 /** "250 GeV" has no name of its own: it goes by the role's usual letter. */

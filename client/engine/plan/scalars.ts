@@ -12,15 +12,38 @@ export function planScalars(value: OrderPlanValue): Scalar[] {
     value: { type: "number", value: size, ...(sigma > 0 ? { sigma } : {}), ...(unit === "" ? {} : { unit }) },
   });
   return [
-    ...(order ? [{ id: "order", label: `order to stop at for a relative accuracy of ${target} of the ${what}`, value: { type: "exact", text: order.text } } as const] : []),
+    ...(order
+      ? [
+          {
+            id: "order",
+            label: `order to stop at for a relative accuracy of ${target} of the ${what}`,
+            value: { type: "exact", text: order.text },
+          } as const,
+        ]
+      : []),
     ...(Q ? [number("Q", `expansion parameter $${Q.latex}$`, Q.value, Q.sigma)] : []),
-    number("left-out", `what is left out of the ${what} (${value.sumUsed === "natural tail" ? "listed terms and natural tail" : "listed terms"})`, leftOut.used, leftOut.sigma),
+    number(
+      "left-out",
+      `what is left out of the ${what} (${value.sumUsed === "natural tail" ? "listed terms and natural tail" : "listed terms"})`,
+      leftOut.used,
+      leftOut.sigma,
+    ),
     number("left-out/listed", `listed terms left out of the ${what}`, leftOut.listed),
     number("left-out/unlisted", `estimate of unlisted terms left out of the ${what}`, leftOut.unlisted),
     firstOut
       ? number("first-out/size", `size of the first term left out, $${firstOut.latex}$`, firstOut.size)
-      : number("first-out/size", `natural size of the first unlisted term, of order ${firstUnlisted.order.text}`, firstUnlisted.size),
-    number("largest-probe", "largest probe scale at which this order meets the target", largestProbe, 0, probe.unit),
+      : number(
+          "first-out/size",
+          `natural size of the first unlisted term, of order ${firstUnlisted.order.text}`,
+          firstUnlisted.size,
+        ),
+    number(
+      "largest-probe",
+      "largest probe scale at which this order meets the target",
+      largestProbe,
+      0,
+      probe.unit,
+    ),
     ...value.terms.flatMap(({ rowId, latex, order: at, size }): Scalar[] => [
       number(`${rowId}/size`, `size of $${latex}$ at the probe scale`, size),
       { id: `${rowId}/order`, label: `order of $${latex}$`, value: { type: "exact", text: at.text } },

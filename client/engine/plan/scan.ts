@@ -37,14 +37,19 @@ export function shiftsOf(expansion: Expansion, { probe, heavy }: PlanScales): Sh
 export function probeTable(expansion: Expansion, { probe }: PlanScales): ProbeRow[] {
   return probeFactors
     .filter((factor) => factor * expansion.Q < 1)
-    .map((factor) => ({ probe: roundFloat(factor * probe.value), ...outcomeAt(expansion, { probe: factor, heavy: 1 }) }));
+    .map((factor) => ({
+      probe: roundFloat(factor * probe.value),
+      ...outcomeAt(expansion, { probe: factor, heavy: 1 }),
+    }));
 }
 
 /** From a tenth of p to just below Λ, equally spaced in the logarithm. */
 export function curvesOf(expansion: Expansion, { probe }: PlanScales): LeftOutCurve[] {
   const first = Math.log(0.1);
   const last = Math.log(0.97 / expansion.Q);
-  const factors = Array.from({ length: CURVE_POINTS }, (_, n) => Math.exp(first + ((last - first) * n) / (CURVE_POINTS - 1)));
+  const factors = Array.from({ length: CURVE_POINTS }, (_, n) =>
+    Math.exp(first + ((last - first) * n) / (CURVE_POINTS - 1)),
+  );
   return expansion.orders.slice(0, MOST_CURVES).map((order) => ({
     order: shown(order),
     points: factors.map((factor) => ({
@@ -64,13 +69,21 @@ export function sigmaOfLeftOut(expansion: Expansion, order: Rational, { probe, h
   const slope = (point: (by: number) => Point) => (used(point(step)) - used(point(-step))) / (2 * step);
   const alongProbe = slope((by) => ({ probe: Math.exp(by), heavy: 1 }));
   const alongHeavy = slope((by) => ({ probe: 1, heavy: Math.exp(by) }));
-  const relative = ({ quantity }: PlanScales["probe"], source: string) => (quantity.spread.get(source) ?? 0) / quantity.value;
+  const relative = ({ quantity }: PlanScales["probe"], source: string) =>
+    (quantity.spread.get(source) ?? 0) / quantity.value;
   const sources = new Set([...probe.quantity.spread.keys(), ...heavy.quantity.spread.keys()]);
-  const shares = [...sources].map((source) => alongProbe * relative(probe, source) + alongHeavy * relative(heavy, source));
-  const byHand = new Map(expansion.entries.flatMap(({ insertions }) => insertions).map(({ term }) => [term.rowId, term.assigned]));
+  const shares = [...sources].map(
+    (source) => alongProbe * relative(probe, source) + alongHeavy * relative(heavy, source),
+  );
+  const byHand = new Map(
+    expansion.entries.flatMap(({ insertions }) => insertions).map(({ term }) => [term.rowId, term.assigned]),
+  );
   for (const [rowId, assigned] of byHand) {
     if (!assigned || assigned.sigma === 0 || assigned.value === 0) continue;
-    const point = (by: number): Point => ({ ...workingPoint, assigned: new Map([[rowId, assigned.value * (1 + by)]]) });
+    const point = (by: number): Point => ({
+      ...workingPoint,
+      assigned: new Map([[rowId, assigned.value * (1 + by)]]),
+    });
     shares.push(slope(point) * (assigned.sigma / assigned.value));
   }
   return Math.hypot(...shares);

@@ -28,7 +28,10 @@ export interface LeftOut {
 }
 
 export function distinctOrders(entries: readonly Entry[]): Rational[] {
-  const orders = new Map([[Rational.zero.toString(), Rational.zero], ...entries.map(({ order }) => [order.toString(), order] as const)]);
+  const orders = new Map([
+    [Rational.zero.toString(), Rational.zero],
+    ...entries.map(({ order }) => [order.toString(), order] as const),
+  ]);
   return [...orders.values()].sort((a, b) => a.compare(b));
 }
 

@@ -43,11 +43,23 @@ export function planTerms(theory: Theory): PlanTerms | null {
     const excess = term.coefficient.asRational()?.negated();
     if (!excess) return null;
     if (excess.sign() < 0 && !term.assigned) {
-      problems.push({ code: "plan-relevant-unassigned", path: [], facts: { latex: term.latex, rowId: term.rowId } });
+      problems.push({
+        code: "plan-relevant-unassigned",
+        path: [],
+        facts: { latex: term.latex, rowId: term.rowId },
+      });
       continue;
     }
     const order = excess.sign() < 0 ? Rational.zero : excess;
-    terms.push({ rowId: term.rowId, latex: term.latex, legs, order, excess, natural: Math.abs(term.natural), assigned: term.assigned });
+    terms.push({
+      rowId: term.rowId,
+      latex: term.latex,
+      legs,
+      order,
+      excess,
+      natural: Math.abs(term.natural),
+      assigned: term.assigned,
+    });
   }
   return { terms, problems };
 }

@@ -112,7 +112,13 @@ export interface OrderPlanValue {
   /** Size of one loop, 1/((4π)^{d/2} Γ(d/2)), with couplings of 1; null when d is not a number. */
   readonly loopFactor: number | null;
   /** Each counted term on its own: its order, its size at p, and whether the size was given by hand. */
-  readonly terms: readonly { readonly rowId: string; readonly latex: string; readonly order: Exact; readonly size: number; readonly assigned: boolean }[];
+  readonly terms: readonly {
+    readonly rowId: string;
+    readonly latex: string;
+    readonly order: Exact;
+    readonly size: number;
+    readonly assigned: boolean;
+  }[];
   readonly shifts: readonly Shift[];
   readonly probeTable: readonly ProbeRow[];
   readonly curves: readonly LeftOutCurve[];

@@ -9,7 +9,9 @@ export function floatLatex(value: number): string {
   if (!Number.isFinite(value)) return "\\infty";
   const [mantissa = "", exponent = "0"] = value.toExponential(2).split("e");
   const power = Number(exponent);
-  return power >= -3 && power <= 4 ? String(Number(value.toPrecision(3))) : `${mantissa}\\times 10^{${power}}`;
+  return power >= -3 && power <= 4
+    ? String(Number(value.toPrecision(3)))
+    : `${mantissa}\\times 10^{${power}}`;
 }
 
 export function explainPlan(value: OrderPlanValue, terms: readonly PlanTerm[]): WorkingStep[] {
@@ -40,12 +42,18 @@ function parameterSteps({ parameters, probe, heavy }: OrderPlanValue): WorkingSt
   ];
 }
 
-function sizeSteps({ terms: sized, orders, observable }: OrderPlanValue, terms: readonly PlanTerm[]): WorkingStep[] {
+function sizeSteps(
+  { terms: sized, orders, observable }: OrderPlanValue,
+  terms: readonly PlanTerm[],
+): WorkingStep[] {
   const lines = terms.map((term): WorkingStep => {
     const size = sized.find(({ rowId }) => rowId === term.rowId)?.size ?? 0;
     const natural = term.natural === 1 ? "" : `${floatLatex(term.natural)}\\,`;
     const by = term.assigned ? "\\text{given by hand}" : `${natural}Q^{${term.excess.toLatex()}}`;
-    return { step: "formula", latex: `${term.latex}:\\quad \\Delta - d = ${term.excess.toLatex()},\\quad ${by} = ${floatLatex(size)}` };
+    return {
+      step: "formula",
+      latex: `${term.latex}:\\quad \\Delta - d = ${term.excess.toLatex()},\\quad ${by} = ${floatLatex(size)}`,
+    };
   });
   const rate =
     observable === "amplitude"
@@ -64,7 +72,10 @@ function sizeSteps({ terms: sized, orders, observable }: OrderPlanValue, terms: 
 
 function sumSteps(value: OrderPlanValue): WorkingStep[] {
   const { firstUnlisted, step, orders, target, sumUsed, order } = value;
-  const decides = sumUsed === "natural tail" ? "Listed and unlisted terms together decide." : "Listed terms alone decide; the estimate of unlisted ones stands beside them.";
+  const decides =
+    sumUsed === "natural tail"
+      ? "Listed and unlisted terms together decide."
+      : "Listed terms alone decide; the estimate of unlisted ones stands beside them.";
   const outcome = order
     ? `The lowest order that leaves out less than the target $${floatLatex(target)}$ is $r = ${order.latex}$.`
     : `No listed order leaves out less than the target $${floatLatex(target)}$: terms of order $${firstUnlisted.order.latex}$ would have to be listed.`;
@@ -86,11 +97,26 @@ function sumSteps(value: OrderPlanValue): WorkingStep[] {
 function loopSteps({ loopFactor }: OrderPlanValue): WorkingStep[] {
   const prose =
     "Dimensions count powers of $Q$, not loops: a loop of marginal couplings costs no power of $Q$, so each order has contributions of any number of loops, and only the coupling and the loop factor suppress them.";
-  const estimate = loopFactor === null ? [] : [{ step: "formula", latex: `\\frac{1}{(4\\pi)^{d/2}\\,\\Gamma(d/2)} = ${floatLatex(loopFactor)}` } as const];
+  const estimate =
+    loopFactor === null
+      ? []
+      : [
+          {
+            step: "formula",
+            latex: `\\frac{1}{(4\\pi)^{d/2}\\,\\Gamma(d/2)} = ${floatLatex(loopFactor)}`,
+          } as const,
+        ];
   return [
     { step: "heading", text: "Loops" },
     { step: "prose", text: prose },
     ...estimate,
-    ...(loopFactor === null ? [] : [{ step: "prose", text: "With couplings of 1 each loop is taken to cost this factor; an order needs loops until the next falls below the target." } as const]),
+    ...(loopFactor === null
+      ? []
+      : [
+          {
+            step: "prose",
+            text: "With couplings of 1 each loop is taken to cost this factor; an order needs loops until the next falls below the target.",
+          } as const,
+        ]),
   ];
 }

