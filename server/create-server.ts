@@ -3,6 +3,7 @@ import { createServer as createHttpServer, type Server } from "node:http";
 import type { AddressInfo } from "node:net";
 import type { DestinationStream } from "pino";
 import { attachCollab } from "./collab/attach-collab.ts";
+import { openCompute } from "./compute/open-compute.ts";
 import type { Configuration } from "./configuration.ts";
 import { openDatabase } from "./data/database.ts";
 import { createApp } from "./http/app.ts";
@@ -70,8 +71,13 @@ export async function createServer(
   const database = openDatabase(configuration.databaseUrl);
   const sessions = openSessions(configuration, publicUrl, log);
   const services: Services = { configuration, publicUrl, database, log, sessions, accessChanges };
-  httpServer.on("request", createApp(services));
-  const collab = attachCollab(httpServer, services);
+  const compute = openCompute({ database, log });
+  httpServer.on("request", createApp(services, compute));
+  const collab = attachCollab(httpServer, {
+    ...services,
+    observers: [compute.observer],
+    compact: compute.compact,
+  });
   const mail = startMailSender(services);
 
   const stop = async () => {
@@ -79,6 +85,7 @@ export async function createServer(
     // Open sockets would keep the HTTP server from closing; what they sent is stored first.
     await collab.stop();
     await closed;
+    await compute.stop();
     await mail.stop();
     await accessChanges.stop();
     await sessions.stop();

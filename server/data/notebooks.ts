@@ -16,8 +16,15 @@ export interface ShelfQuery {
 
 const PAGE = 50;
 
-/** What the last row of a page was sorted by, as PostgreSQL writes it: no digit of the time is lost. */
-const cursorSchema = z.tuple([z.string().max(300), z.uuid()]);
+/** What the last row of a page was sorted by, times with the microseconds that a Date would lose. */
+const cursorSchema = z.tuple([
+  z
+    .string()
+    .max(300)
+    .regex(/^[^\0]*$/),
+  z.uuid(),
+]);
+const cursorTime = z.iso.datetime({ precision: 6 });
 type Cursor = z.infer<typeof cursorSchema>;
 
 function writeCursor(cursor: Cursor): string {
@@ -32,8 +39,7 @@ function readCursor(text: string, sort: ShelfQuery["sort"]): Cursor | null {
   }
   const parsed = cursorSchema.safeParse(value);
   if (!parsed.success) return null;
-  if (sort === "changed" && !/^\d{4}-\d\d-\d\d \d\d:\d\d:\d\d(\.\d+)?[+-]\d\d(:\d\d)?$/.test(parsed.data[0]))
-    return null;
+  if (sort === "changed" && !cursorTime.safeParse(parsed.data[0]).success) return null;
   return parsed.data;
 }
 
@@ -51,7 +57,7 @@ interface ShelfRow extends Omit<NotebookRow, "lastChangedAt" | "archivedAt"> {
 /** In each order, ties are settled by the id, so a page begins exactly where the last one ended. */
 const orders = {
   changed: {
-    sortedBy: "n.changed_at::text",
+    sortedBy: `to_char(n.changed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"')`,
     orderBy: "n.changed_at desc, n.id desc",
     after: "(n.changed_at, n.id) < (?::timestamptz, ?::uuid)",
   },

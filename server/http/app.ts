@@ -1,5 +1,7 @@
 /** The order in which a request passes. */
 import express, { type Express } from "express";
+import type { Compute } from "../compute/open-compute.ts";
+import { evaluateRoutes, resultRoutes } from "../compute/routes.ts";
 import type { Services } from "../services.ts";
 import { answerFailure, answerUnknownAddress } from "./failures.ts";
 import { healthRoutes } from "./health.ts";
@@ -14,7 +16,7 @@ import { refereeLinkRoutes } from "./routes/referee-links.ts";
 import { harmless, requireSameSite } from "./same-site.ts";
 import { hideReferrer, securityHeaders } from "./security-headers.ts";
 
-export function createApp(services: Services): Express {
+export function createApp(services: Services, compute: Compute): Express {
   const { configuration, publicUrl, log, sessions } = services;
   const limits = createRateLimits(configuration.rateLimitFactor);
   const app = express();
@@ -30,7 +32,10 @@ export function createApp(services: Services): Express {
     next();
   });
   app.use("/api/referee", hideReferrer);
-  app.use(["/api", "/auth"], sessions.middleware, requireSameSite(publicUrl));
+  app.use(["/api", "/auth"], sessions.middleware);
+  // It changes nothing and takes larger bodies than the rest, so it stands before what the rest must pass.
+  app.use(evaluateRoutes(services, compute, limits.evaluate));
+  app.use(["/api", "/auth"], requireSameSite(publicUrl));
   app.use("/api", (request, response, next) =>
     harmless.has(request.method) ? next() : limits.changes(request, response, next),
   );
@@ -38,6 +43,7 @@ export function createApp(services: Services): Express {
   app.use(signInRoutes(services, limits));
   app.use(meRoutes(services));
   app.use(notebookRoutes(services));
+  app.use(resultRoutes(services));
   app.use(peopleRoutes(services, limits));
   app.use(refereeLinkRoutes(services, limits));
   app.use(["/api", "/auth", "/collab"], answerUnknownAddress);

@@ -24,7 +24,7 @@ function leadToPublicName(publicUrl: string): RequestHandler {
 
 export function servePages(clientFolder: string | null, publicUrl: string): Router {
   const router = Router();
-  router.use(/^\/r\//, hideReferrer);
+  router.use("/r", hideReferrer);
   if (clientFolder === null) return router;
   const index = join(clientFolder, "index.html");
   router.use(

@@ -32,7 +32,15 @@ function sentenceOf(issue: $ZodIssue): string {
   return `${where} ${wordsOf(issue)}.`;
 }
 
+/** PostgreSQL stores no NUL, and nobody types one. */
+function holdsNul(value: unknown): boolean {
+  if (typeof value === "string") return value.includes("\0");
+  return typeof value === "object" && value !== null && Object.values(value).some(holdsNul);
+}
+
 export function check<Schema extends $ZodType>(schema: Schema, value: unknown): Outcome<output<Schema>> {
+  if (holdsNul(value))
+    return refuse("invalid", "The request holds a character that cannot be stored (U+0000).");
   const parsed = safeParse(schema, value);
   if (parsed.success) return succeed(parsed.data);
   return refuse("invalid", parsed.error.issues.slice(0, 5).map(sentenceOf).join(" "));

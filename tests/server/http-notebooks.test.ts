@@ -50,6 +50,7 @@ describe("making a notebook", () => {
     ["a title that is no text", { title: 5 }, "“title” must be given as string"],
     ["a title too long", { title: "a".repeat(301) }, "“title” may have at most 300 characters"],
     ["an unknown template", { template: "other" }, "must be one of blank, lantern"],
+    ["a character that cannot be stored", { title: "a\0b" }, "cannot be stored (U+0000)"],
     ["a list", [], "The request must be given as object"],
   ])("refuses %s", async (_what, body, words) => {
     const answer = await wren.post("/api/notebooks", body);
@@ -231,6 +232,7 @@ describe("the shelf", () => {
     expect(await search("otto")).toEqual(["Plain_name"]);
     expect(await search("\\")).toEqual([]);
     expect(await search("')--")).toEqual([]);
+    expect((await wren.get("/api/notebooks?search=%00")).status).toBe(422);
   });
 
   it("keeps archived ones apart, and finds those whose pins need a look", async () => {
@@ -245,15 +247,23 @@ describe("the shelf", () => {
     expect(attention.notebooks).toMatchObject([{ title: "Moved", pinsMoved: 2, pinsLoose: 0 }]);
   });
 
+  const anId = "00000000-0000-4000-8000-000000000000";
   it.each([
-    "x",
-    "",
-    "W10",
-    Buffer.from('["2020","x"]').toString("base64url"),
-    Buffer.from('["not a time","00000000-0000-4000-8000-000000000000"]').toString("base64url"),
-  ])("refuses the cursor %j, which it did not write", async (cursor) => {
-    const answer = await wren.get(`/api/notebooks?cursor=${cursor}`);
-    expect([answer.status, answer.body.type]).toEqual([422, "urn:subleading:invalid"]);
+    ["both", "x"],
+    ["both", ""],
+    ["both", "{}"],
+    ["both", "[]"],
+    ["both", '["2020","x"]'],
+    ["both", JSON.stringify(["\0", anId])],
+    ["changed", JSON.stringify(["not a time", anId])],
+    ["changed", JSON.stringify(["2026-13-45T00:00:00.000000Z", anId])],
+    ["changed", JSON.stringify(["2026-12-01T00:00:00.000000Z'--", anId])],
+  ])("refuses, in %s orders, the cursor %j, which it did not write", async (which, cursor) => {
+    for (const sort of which === "both" ? ["changed", "title"] : [which]) {
+      const query = new URLSearchParams({ sort, cursor: Buffer.from(cursor).toString("base64url") });
+      const answer = await wren.get(`/api/notebooks?${query.toString()}`);
+      expect([answer.status, answer.body.type]).toEqual([422, "urn:subleading:invalid"]);
+    }
   });
 
   it("refuses an unknown order", async () => {
