@@ -29,7 +29,7 @@ export interface BlockOutcome {
   readonly kind: KindName;
   readonly key: string;
   readonly evaluation: Evaluation;
-  /** The problems of the evaluation in plain words, in the same order. */
+  /** The problems of the evaluation in plain words with their places, in the same order. */
   readonly messages: readonly string[];
 }
 export interface ResultsFile {

@@ -1,7 +1,7 @@
 /** Evaluates a file of blocks: what the command `evaluate` and POST /api/evaluate have in common. */
 import { safeParse, type $ZodIssue } from "zod/v4/core";
 import { evaluateFile as fileSchema, RESULTS_FORMAT, type ResultsFile } from "#contract/evaluate-file.ts";
-import { wordProblem } from "#contract/problem-words.ts";
+import { wordPlace, wordProblem } from "#contract/problem-words.ts";
 import {
   ENGINE_VERSION,
   evaluateNotebook,
@@ -74,7 +74,9 @@ export function evaluateFile(
         kind,
         key,
         evaluation,
-        messages: evaluation.problems.map(wordProblem),
+        messages: evaluation.problems.map((problem) =>
+          [wordPlace(problem.path), wordProblem(problem)].filter(Boolean).join(": "),
+        ),
       })),
     },
   };

@@ -30,16 +30,12 @@ export const truncationWords: Words = {
     `The series starts at order ${said(order)}; the reference is its first value divided by Q to that power, so that its coefficient is 1.`,
   "coefficients-not-finite": ({ value }) =>
     `With Q = ${said(value)} some power of Q is too small to divide by, so a coefficient has no value.`,
-  "q-unreadable": ({ text }) =>
-    `Q is ${quoted(text)}, which is neither a number nor an expression in the premises' scales.`,
   "q-not-positive": ({ value }) => `Q is ${said(value)}. An expansion parameter must be above 0.`,
   "q-needs-premises": () =>
     "Q is to come from the scales of the premises, but this block stands on none. Choose premises, or enter a number.",
   "q-needs-roles": () =>
     "Q is left empty, so it is the probe scale over the heavy scale; the premises need exactly one of each. Or enter Q.",
-  "scale-has-no-number": ({ symbol }) => `The scale ${quoted(symbol)} has no value in the premises.`,
   "q-has-units": ({ text }) => `${quoted(text)} is not a pure number: its units do not cancel.`,
-  "q-not-finite": ({ text }) => `${quoted(text)} divides by zero.`,
   "sum-needs-q-below-one": ({ value }) =>
     `Q is ${said(value)}. The sum over all omitted orders exists only for Q below 1, so it is refused; the first omitted term can still be shown.`,
   "q-not-below-one": ({ value }) =>

@@ -14,3 +14,18 @@ export function quoted(text: string | number | undefined): string {
 export function said(fact: string | number | undefined): string {
   return fact === undefined ? "?" : String(fact);
 }
+
+/** LaTeX of a fact, as prose may hold it: "$\\lambda\\phi^4$". */
+export function formula(latex: string | number | undefined): string {
+  return `$${said(latex)}$`;
+}
+
+/** " at character 5", counted from 1 in what was typed; "" when the problem is not about one place in it. */
+export function atCharacter({ offset }: Facts): string {
+  return typeof offset === "number" ? ` at character ${offset + 1}` : "";
+}
+
+/** " Did you mean “chi”?", or "" when nothing typed is near. */
+export function didYouMean({ suggestion }: Facts): string {
+  return suggestion === undefined ? "" : ` Did you mean ${quoted(suggestion)}?`;
+}

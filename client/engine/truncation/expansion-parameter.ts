@@ -34,7 +34,9 @@ export function readExpansionParameter(text: string, theory: Theory | null): Rea
   if (quantity.energy.sign() !== 0) return refuse("q-has-units", { text: typed, unit: unitText(quantity) });
   if (!(quantity.value > 0)) return refuse("q-not-positive", { value: quantity.value });
   const isNumber = quantity.exact !== null && !/[A-Za-z\\]/.test(typed.replace(/\\pm|\d[eE][+-]?\d/g, ""));
-  return { ok: true, q: { value: quantity.value, sigma: sigmaOf(quantity), latex: isNumber ? "Q" : latex } };
+  // Uncertainties that cancel leave a rest of rounding, which is none.
+  const sigma = sigmaOf(quantity) < 1e-13 * quantity.value ? 0 : sigmaOf(quantity);
+  return { ok: true, q: { value: quantity.value, sigma, latex: isNumber ? "Q" : latex } };
 }
 
 function refuse(code: string, facts: Problem["facts"] = {}): ReadExpansionParameter {
