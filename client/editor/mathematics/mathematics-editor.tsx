@@ -2,13 +2,14 @@
 import type { Editor } from "@tiptap/core";
 import { Popover } from "radix-ui";
 import { useId, useRef, useState, useSyncExternalStore, type KeyboardEvent } from "react";
-import type { LatexFault } from "../../ui/katex-loader.ts";
+import { classes } from "../../ui/classes.ts";
 import { latexFaultWords } from "../../ui/latex-fault-words.ts";
 import { Formula } from "../../ui/math.tsx";
 import type { LatexSymbol } from "./latex-symbols.ts";
 import type { MathEditing, OpenFormula } from "./math-editing.ts";
 import { writeFormula } from "./mathematics.ts";
 import { SymbolList, useSymbolCompletion } from "./symbol-completion.tsx";
+import { useCheckedSource } from "./use-checked-source.ts";
 
 interface MathematicsEditorProps {
   readonly editor: Editor;
@@ -39,7 +40,7 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
   const [before] = useState(() => formula.latex());
   const [source, setSource] = useState(before);
   const [label, setLabel] = useState(() => formula.label());
-  const [fault, setFault] = useState<LatexFault | null>(null);
+  const checked = useCheckedSource(trimDollars(source), formula.display);
   const [replaced, setReplaced] = useState(false);
   const field = useRef<HTMLTextAreaElement>(null);
   const [ownNow] = useState(ownSymbols);
@@ -81,7 +82,9 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
     }
   }
 
-  const words = fault ? latexFaultWords(fault, source) : null;
+  // A command that is still being typed is no mistake yet.
+  const words =
+    checked.fault && completion.found.length === 0 ? latexFaultWords(checked.fault, source) : null;
   return (
     <Popover.Root
       open
@@ -115,11 +118,11 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
             event.preventDefault();
           }}
         >
-          <div className="formula-preview">
-            {source.trim() === "" ? (
+          <div className={classes("formula-preview", checked.fault && "is-behind")}>
+            {checked.good === "" ? (
               <span className="formula-hint">the formula appears here as you type</span>
             ) : (
-              <Formula latex={trimDollars(source)} display={formula.display} onFault={setFault} />
+              <Formula latex={checked.good} display={formula.display} />
             )}
           </div>
           <label className="formula-label" htmlFor={names.source}>
@@ -148,7 +151,7 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
           />
           <SymbolList completion={completion} />
           <p id={names.fault} className="formula-fault" role="status">
-            {words && source.trim() !== "" ? [words.sentence, words.place].filter(Boolean).join(" — ") : ""}
+            {words ? [words.sentence, words.place].filter(Boolean).join(" — ") : ""}
           </p>
           {replaced && (
             <p className="formula-fault" role="alert">

@@ -26,10 +26,11 @@ export function placeNode(editor: Editor, node: Node, gap: number): number {
     tr.insert(position, node);
   }
   leaveRoomAfter(tr, position + node.nodeSize);
+  const inside = position + (node.isAtom ? node.nodeSize : 1);
   tr.setSelection(
-    node.isTextblock || !NodeSelection.isSelectable(node)
-      ? TextSelection.near(tr.doc.resolve(position + 1))
-      : NodeSelection.create(tr.doc, position),
+    node.isAtom && node.type.name !== "horizontalRule"
+      ? NodeSelection.create(tr.doc, position)
+      : TextSelection.near(tr.doc.resolve(inside)),
   );
   editor.view.dispatch(tr.scrollIntoView());
   return position;
