@@ -21,6 +21,7 @@ export interface CollabServer {
 
 export type Parts = Partial<Omit<CollabDependencies, "database" | "sessions" | "accessChanges" | "log">> & {
   readonly log?: Logger;
+  readonly port?: number;
   /** Made of the database, which exists only once the server starts. */
   readonly with?: (database: Database) => Partial<CollabDependencies>;
 };
@@ -38,7 +39,7 @@ function configurationFor(databaseUrl: string): Configuration {
 }
 
 export async function startCollabServer(databaseUrl: string, parts: Parts = {}): Promise<CollabServer> {
-  const { with: made, ...given } = parts;
+  const { with: made, port = 0, ...given } = parts;
   const log = given.log ?? pino({ level: process.env["TEST_LOG_LEVEL"] ?? "silent" });
   const database = openDatabase(databaseUrl);
   const sessions = openSessions(configurationFor(databaseUrl), publicUrl, log);
@@ -54,7 +55,7 @@ export async function startCollabServer(databaseUrl: string, parts: Parts = {}):
     sessions,
     accessChanges,
   });
-  await new Promise<void>((resolve) => server.listen(0, "127.0.0.1", resolve));
+  await new Promise<void>((resolve) => server.listen(port, "127.0.0.1", resolve));
   return {
     port: (server.address() as AddressInfo).port,
     database,

@@ -27,6 +27,10 @@ export interface Writer {
   readonly notices: ServerNotice[];
   readonly closes: { readonly code: number; readonly reason: string }[];
   saved(): number;
+  /** Sockets so far; frames are counted anew on each. */
+  sockets(): number;
+  /** Frames that were said to be committed, by number of the socket from 1. */
+  savedOn(socket: number): number;
   /** Content frames sent over the present socket. */
   sent(): number;
   text(): string;
@@ -84,7 +88,7 @@ export function openWriter(options: WriterOptions): Writer {
   const awareness = new Awareness(document);
   const notices: ServerNotice[] = [];
   const closes: { code: number; reason: string }[] = [];
-  let saved = 0;
+  const savedOn: number[] = [0];
   let sent = 0;
   const provider = new WebsocketProvider(
     `ws://127.0.0.1:${options.port}/collab`,
@@ -105,30 +109,35 @@ export function openWriter(options: WriterOptions): Writer {
     },
   );
   provider.messageHandlers[messageType.saved] = (_encoder, decoder) => {
-    saved = decoding.readVarUint(decoder);
+    savedOn[savedOn.length - 1] = decoding.readVarUint(decoder);
   };
   provider.messageHandlers[messageType.notice] = (_encoder, decoder) => {
     notices.push(JSON.parse(decoding.readVarString(decoder)) as ServerNotice);
   };
   provider.on("status", ({ status }) => {
-    if (status === "connecting") saved = sent = 0;
+    if (status !== "connecting") return;
+    savedOn.push(0);
+    sent = 0;
   });
   provider.on("connection-close", (event) => {
     if (event !== null) closes.push({ code: event.code, reason: event.reason });
   });
+  const saved = () => savedOn.at(-1) ?? 0;
   return {
     document,
     awareness,
     provider,
     notices,
     closes,
-    saved: () => saved,
+    saved,
+    sockets: () => savedOn.length - 1,
+    savedOn: (socket) => savedOn[socket] ?? 0,
     sent: () => sent,
     text: () => textOf(document),
     type: (text) => paragraphOf(document).insert(paragraphOf(document).length, text),
     erase: (count) => paragraphOf(document).delete(0, count),
     synced: () => until("the document is synced", () => provider.synced),
-    allSaved: () => until("everything sent is saved", () => sent > 0 && saved === sent),
+    allSaved: () => until("everything sent is saved", () => sent > 0 && saved() === sent),
     stop: () => {
       provider.destroy();
       awareness.destroy();
