@@ -1,5 +1,6 @@
 /** LaTeX of the legs and derivatives of a monomial, without its coefficient: what counting sees of a term. */
-import type { FieldFactor } from "./monomial.ts";
+import type { FieldFactor, Monomial } from "./monomial.ts";
+import { symbolLatex } from "./symbol-latex.ts";
 
 interface DrawnField {
   readonly symbol: string;
@@ -47,4 +48,20 @@ export function operatorLatex(
       : []),
   ];
   return [...signs, ...legs].join(" ");
+}
+
+/**
+ * The couplings and scales of a monomial with their powers, without its number: "\frac{c_6}{\Lambda^{2}}"; "1" if none.
+ */
+export function coefficientLatex({ coefficients }: Pick<Monomial, "coefficients">): string {
+  const side = (sign: 1 | -1) =>
+    coefficients
+      .filter(({ power }) => power.sign() === sign)
+      .map(({ symbol, power }) => {
+        const size = power.absolute();
+        return size.toString() === "1" ? symbolLatex(symbol) : `${symbolLatex(symbol)}^{${size.toString()}}`;
+      })
+      .join("\\,");
+  const [over, under] = [side(1), side(-1)];
+  return under === "" ? over || "1" : `\\frac{${over || "1"}}{${under}}`;
 }

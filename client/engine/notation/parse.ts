@@ -13,6 +13,7 @@ import { exactLiteral, measuredLiteral } from "./literals.ts";
 import { unitNamed } from "./units.ts";
 import { FirstFailure, read, type Read } from "./failure.ts";
 import type { Factor, Tree } from "./tree.ts";
+import { isIndices, isLiteral, withSubscript } from "./tree-shape.ts";
 import { tokenise, type Token } from "./tokens.ts";
 
 const DEEPEST = 40;
@@ -313,34 +314,4 @@ class Parser {
     this.tokens.splice(this.next, 1, rest);
     return { type: "number", value: Rational.of(BigInt(digit)), text: digit, at: token.at };
   }
-}
-
-function isLiteral({ node }: Factor): boolean {
-  return node.type === "number" || node.type === "measured";
-}
-
-/** Names only, as in ^{\mu\nu} and ^a: marks where something points, no power. */
-export function isIndices(tree: Tree): boolean {
-  if (tree.type === "name") return true;
-  if (tree.type === "group") return isIndices(tree.body);
-  return (
-    tree.type === "product" &&
-    tree.factors.every((factor) => factor.join === "juxtaposed" && isIndices(factor.node))
-  );
-}
-
-/** Puts a subscript on the name inside accents and indices; null when there is none, or it has one already. */
-function withSubscript(tree: Tree, pieces: readonly string[]): Tree | null {
-  if (tree.type === "name") {
-    return tree.name.subscript.length > 0 ? null : { ...tree, name: { ...tree.name, subscript: pieces } };
-  }
-  if (tree.type === "accent" || tree.type === "group" || tree.type === "conjugate") {
-    const body = withSubscript(tree.body, pieces);
-    return body && { ...tree, body };
-  }
-  if (tree.type === "power") {
-    const base = withSubscript(tree.base, pieces);
-    return base && { ...tree, base };
-  }
-  return null;
 }

@@ -64,10 +64,16 @@ function combine<T>(
   return result;
 }
 
+/** x + y, and exactly nothing where both cancel up to rounding: m/Λ · Λ/p does not depend on Λ. */
+function sumOf(x: number, y: number): number | null {
+  const sum = x + y;
+  return Math.abs(sum) <= 1e-12 * (Math.abs(x) + Math.abs(y)) ? null : sum;
+}
+
 export function times(a: Quantity, b: Quantity): Quantity {
   return withExact(a.exact && b.exact && a.exact.times(b.exact), a.value * b.value, {
     energy: a.energy.plus(b.energy),
-    spread: combine(a.spread, b.spread, (x = 0, y = 0) => x * b.value + y * a.value),
+    spread: combine(a.spread, b.spread, (x = 0, y = 0) => sumOf(x * b.value, y * a.value)),
     units: combine(a.units, b.units, (x = Rational.zero, y = Rational.zero) => {
       const sum = x.plus(y);
       return sum.sign() === 0 ? null : sum;
@@ -106,7 +112,7 @@ export function plus(a: Quantity, b: Quantity, sign: 1 | -1): Quantity | Notatio
   const exact = a.exact && b.exact && a.exact.plus(sign === 1 ? b.exact : b.exact.negated());
   return withExact(exact, a.value + sign * b.value, {
     energy: a.energy,
-    spread: combine(a.spread, b.spread, (x = 0, y = 0) => x + sign * y),
+    spread: combine(a.spread, b.spread, (x = 0, y = 0) => sumOf(x, sign * y)),
     units: a.units.size > 0 ? a.units : b.units,
   });
 }

@@ -4,7 +4,8 @@ import { constantOf } from "./constant.ts";
 import { failed, FirstFailure, read, type NotationFailure, type Read } from "./failure.ts";
 import type { Monomial } from "./monomial.ts";
 import { canonicalName, type Name } from "./names.ts";
-import { isIndices, parse } from "./parse.ts";
+import { parse } from "./parse.ts";
+import { isIndices } from "./tree-shape.ts";
 import {
   conjugate,
   hasLegs,

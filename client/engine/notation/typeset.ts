@@ -1,6 +1,6 @@
 /** LaTeX of a tree as it is understood: what a person sees beside what they typed. */
 import { constantOf } from "./constant.ts";
-import { isIndices } from "./parse.ts";
+import { isIndices } from "./tree-shape.ts";
 import { nameLatex, subscriptLatex, type Name } from "./names.ts";
 import type { Accent } from "./tokens.ts";
 import type { Factor, Tree } from "./tree.ts";

@@ -1,15 +1,15 @@
 /** Evaluates premises: the theory as understood, with cautions, scalars and working. */
 import { roundFloat, type Evaluation } from "../evaluation.ts";
 import { shown } from "../exact/shown.ts";
-import { measuredText } from "../notation/measured.ts";
 import type { PremisesInputs } from "./inputs.ts";
+import { presentEstimate, presentMeasured } from "./present-measured.ts";
 import { premisesNotices } from "./notices.ts";
 import { readPremises } from "./read-theory.ts";
 import { forbidding } from "./read-terms.ts";
 import { groupText } from "./read-symmetries.ts";
 import { premisesScalars } from "./scalars.ts";
 import type { Theory } from "./theory.ts";
-import type { Measured, PremisesValue } from "./value.ts";
+import type { PremisesValue } from "./value.ts";
 import { premisesWorking, spacetimeLatex } from "./working.ts";
 
 export function evaluatePremises(inputs: PremisesInputs): Evaluation<PremisesValue> {
@@ -21,11 +21,6 @@ export function evaluatePremises(inputs: PremisesInputs): Evaluation<PremisesVal
     scalars: premisesScalars(theory),
     working: premisesWorking(theory, expressions),
   };
-}
-
-/** Rounded for the engine's edge, with its text. */
-export function presentMeasured(value: number, sigma: number, unit: string): Measured {
-  return { value: roundFloat(value), sigma: roundFloat(sigma), unit, text: measuredText(value, sigma, unit) };
 }
 
 function presentTheory(theory: Theory): PremisesValue {
@@ -69,7 +64,7 @@ function presentTheory(theory: Theory): PremisesValue {
       assigned:
         term.assigned === null || Number.isNaN(term.assigned.value)
           ? null
-          : presentMeasured(term.assigned.value, term.assigned.sigma, ""),
+          : presentEstimate(term.assigned.value, term.assigned.sigma),
     })),
   };
 }
