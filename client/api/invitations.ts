@@ -18,7 +18,7 @@ export function useWithdrawInvitation(notebookId: string) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (invitationId: string) =>
-      askOrThrow<void>(`/api/notebooks/${notebookId}/invitations/${invitationId}`, { method: "DELETE" }),
+      askOrThrow<undefined>(`/api/notebooks/${notebookId}/invitations/${invitationId}`, { method: "DELETE" }),
     onSuccess: () => client.invalidateQueries({ queryKey: peopleKey(notebookId) }),
   });
 }

@@ -49,7 +49,7 @@ export function signInAddress(place: string): string {
 export function useSignOut() {
   return useMutation({
     mutationFn: async () => {
-      await askOrThrow<void>("/auth/sign-out", { method: "POST" });
+      await askOrThrow<undefined>("/auth/sign-out", { method: "POST" });
       const { dropLocalCopies } = await import("../editor/local-copy.ts");
       await dropLocalCopies();
     },

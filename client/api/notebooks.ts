@@ -72,7 +72,7 @@ export function useChangeNotebook() {
 export function useDeleteNotebook() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (id: string) => askOrThrow<void>(`/api/notebooks/${id}`, { method: "DELETE" }),
+    mutationFn: (id: string) => askOrThrow<undefined>(`/api/notebooks/${id}`, { method: "DELETE" }),
     onSuccess: (_answer, id) => {
       client.removeQueries({ queryKey: notebookKey(id) });
       return client.invalidateQueries({ queryKey: shelfKey });

@@ -35,7 +35,7 @@ export function useRemovePerson(notebookId: string) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (personId: string) =>
-      askOrThrow<void>(`/api/notebooks/${notebookId}/people/${personId}`, { method: "DELETE" }),
+      askOrThrow<undefined>(`/api/notebooks/${notebookId}/people/${personId}`, { method: "DELETE" }),
     onSuccess: () => client.invalidateQueries({ queryKey: peopleKey(notebookId) }),
   });
 }

@@ -32,7 +32,7 @@ export function useRevokeRefereeLink(notebookId: string) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (linkId: string) =>
-      askOrThrow<void>(`/api/notebooks/${notebookId}/referee-links/${linkId}`, { method: "DELETE" }),
+      askOrThrow<undefined>(`/api/notebooks/${notebookId}/referee-links/${linkId}`, { method: "DELETE" }),
     onSuccess: () => client.invalidateQueries({ queryKey: refereeLinksKey(notebookId) }),
   });
 }

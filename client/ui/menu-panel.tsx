@@ -33,17 +33,23 @@ export function MenuPanel({ label, items, button, onClose }: Props) {
           className="z-50 min-w-44 border border-tick border-t-ink bg-paper py-1 outline-none"
           onCloseAutoFocus={(event) => {
             event.preventDefault();
-            button.current?.focus();
+            // Unless what was chosen has taken the focus, a dialog for one.
+            if (document.activeElement === document.body) button.current?.focus();
           }}
           onPointerDownOutside={(event) => {
             // A press on the button closes by its own click; closing here as well would open it again.
-            if (event.target instanceof Node && button.current?.contains(event.target)) event.preventDefault();
+            if (event.target instanceof Node && button.current?.contains(event.target))
+              event.preventDefault();
           }}
         >
           {items.map((item) => (
             <DropdownMenu.Item
               key={item.name}
-              onSelect={item.onSelect}
+              onSelect={() => {
+                // First back to the button: a dialog that opens now returns the focus there.
+                button.current?.focus();
+                item.onSelect();
+              }}
               className={classes(
                 "flex min-h-9 cursor-pointer items-center px-4 text-body outline-none",
                 "data-highlighted:bg-highlight data-highlighted:shadow-[inset_2px_0_0_var(--ink)]",

@@ -45,7 +45,7 @@ export function NewAddress({ made, onPutAway }: Props) {
             />
             <Button onClick={() => void copy()}>Copy</Button>
             <Button look="quiet" onClick={onPutAway}>
-              Put away
+              Hide the address
             </Button>
           </div>
         )}

@@ -1,4 +1,4 @@
-import { useEffect, useState } from "react";
+import { useCallback, useEffect, useState } from "react";
 import type { ShelfView } from "../../api/notebooks.ts";
 import { Choice, SelectField, TextField } from "../../ui/field.tsx";
 
@@ -16,8 +16,7 @@ export function ShelfControls({ view, onChange }: Props) {
       aria-label="Shelf"
       className="mt-6 grid grid-cols-2 items-end gap-x-5 gap-y-3 sm:flex sm:flex-wrap"
     >
-      {/* A fresh field whenever the address changes from elsewhere: the browser's way back, a cleared search. */}
-      <SearchField key={view.search} view={view} onChange={onChange} />
+      <SearchField view={view} onChange={onChange} />
       <SelectField
         label="Show"
         className="sm:w-36"
@@ -59,16 +58,34 @@ export function ShelfControls({ view, onChange }: Props) {
 /** What is typed is searched for after a pause, or at once with Enter. */
 function SearchField({ view, onChange }: Props) {
   const [typed, setTyped] = useState(view.search);
+  // What this field last put into the address, and what it last found there: a difference came from elsewhere
+  // (the browser's way back, a cleared search) and replaces what is typed.
+  const [sent, setSent] = useState(view.search);
+  const [found, setFound] = useState(view.search);
+  if (view.search !== found) {
+    setFound(view.search);
+    if (view.search !== sent) {
+      setSent(view.search);
+      setTyped(view.search);
+    }
+  }
+  const search = useCallback(
+    (wanted: string) => {
+      setSent(wanted);
+      onChange({ search: wanted });
+    },
+    [onChange],
+  );
   useEffect(() => {
     const wanted = typed.trim();
-    if (wanted === view.search) return;
+    if (wanted === sent) return;
     const timer = setTimeout(() => {
-      onChange({ search: wanted });
+      search(wanted);
     }, PAUSE_MS);
     return () => {
       clearTimeout(timer);
     };
-  }, [typed, view.search, onChange]);
+  }, [typed, sent, search]);
   return (
     <TextField
       label="Search titles, people, premises"
@@ -78,7 +95,7 @@ function SearchField({ view, onChange }: Props) {
       value={typed}
       onValue={setTyped}
       onKeyDown={(event) => {
-        if (event.key === "Enter") onChange({ search: typed.trim() });
+        if (event.key === "Enter") search(typed.trim());
       }}
     />
   );

@@ -1,3 +1,5 @@
+/* eslint-disable jsx-a11y-x/no-redundant-roles, jsx-a11y-x/no-interactive-element-to-noninteractive-role --
+   see ShelfTable: the roles are not redundant where the style sheet lays the table out anew */
 import type { NotebookRow } from "#contract/api.ts";
 import { Link } from "react-router-dom";
 import { classes } from "../../ui/classes.ts";
@@ -19,13 +21,7 @@ interface Props {
  */
 export function ShelfTable({ notebooks, labelledBy, stale }: Props) {
   return (
-    <table
-      role="table"
-      aria-labelledby={labelledBy}
-      aria-busy={stale || undefined}
-      className="shelf-table"
-      onKeyDown={moveBetweenRows}
-    >
+    <table role="table" aria-labelledby={labelledBy} aria-busy={stale || undefined} className="shelf-table">
       <thead role="rowgroup">
         <tr role="row">
           <th role="columnheader">Notebook</th>
@@ -51,7 +47,7 @@ function ShelfRow({ notebook }: { readonly notebook: NotebookRow }) {
   return (
     <tr role="row">
       <th role="rowheader" scope="row" className="shelf-title">
-        <Link to={`/notebooks/${notebook.id}`} className="shelf-link">
+        <Link to={`/notebooks/${notebook.id}`} className="shelf-link" onKeyDown={moveBetweenRows}>
           {notebook.title}
         </Link>
         <span className="shelf-premises">
