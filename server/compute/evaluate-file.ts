@@ -52,6 +52,7 @@ export function evaluateFile(
       complaints.push(...inputs.error.issues.map((issue) => complain(issue, typed, [...place, "inputs"])));
       return;
     }
+    complaints.push(...repeatedRowIds(inputs.data, Object.keys(shape.tables), [...place, "inputs"]));
     blocks.push({
       id: block.id,
       kind: block.kind,
@@ -86,7 +87,7 @@ function refused(complaints: readonly Complaint[]): FileOutcome {
   return { ok: false, complaints: complaints.slice(0, MOST_COMPLAINTS) };
 }
 
-/** Rows written by hand may leave their ids out: they are then "1", "2", … by place. */
+/** Rows written by hand may leave their ids out: they are then "terms1", "terms2", … by table and place. */
 function withRowIds(
   inputs: Readonly<Record<string, unknown>>,
   tables: readonly string[],
@@ -96,10 +97,35 @@ function withRowIds(
     const rows = inputs[table];
     if (!Array.isArray(rows)) continue;
     complete[table] = rows.map((row: unknown, index) =>
-      typeof row === "object" && row !== null && !("id" in row) ? { id: String(index + 1), ...row } : row,
+      typeof row === "object" && row !== null && !("id" in row)
+        ? { id: `${table}${index + 1}`, ...row }
+        : row,
     );
   }
   return complete;
+}
+
+/** Scalars are named by row id and quantity, so a row id may occur once in a block, whatever the table. */
+function repeatedRowIds(
+  inputs: Readonly<Record<string, unknown>>,
+  tables: readonly string[],
+  before: readonly PropertyKey[],
+): Complaint[] {
+  const seen = new Set<string>();
+  return tables.flatMap((table) =>
+    // The schema has just made every table a list of rows with ids.
+    (inputs[table] as readonly { readonly id: string }[]).flatMap(({ id }, index) => {
+      const isRepeated = seen.has(id);
+      seen.add(id);
+      if (!isRepeated) return [];
+      return [
+        {
+          place: placeOf([...before, table, index, "id"]),
+          message: `“${id}” names another row of this block already`,
+        },
+      ];
+    }),
+  );
 }
 
 /** ["blocks", 1, "inputs", "orders", 0] → "blocks[1].inputs.orders[0]". */

@@ -24,13 +24,14 @@ export function readInputs(
   problems: Problem[],
 ): BlockInputs {
   const inputs: Record<string, string | readonly BlockRow[]> = {};
+  // One set for all tables: scalars are named by row id and quantity, whichever table the row is in.
+  const taken = new Set<string>();
   for (const [name, spec] of Object.entries(shape.fields))
     inputs[name] = fit(spec, fields.get(name), [name], problems);
   for (const [table, columns] of Object.entries(shape.tables)) {
     const own = rows.filter((row) => row.table === table);
     if (own.length > MOST_ROWS)
       problems.push({ code: "rows-too-many", path: [table], facts: { count: own.length, most: MOST_ROWS } });
-    const taken = new Set<string>();
     inputs[table] = own
       .slice(0, MOST_ROWS)
       .map((row) => ({ ...row, id: freeId(row.id, "row", taken) }))

@@ -106,6 +106,14 @@ describe("reading a document", () => {
     expect((inputs["orders"] as { id: string }[]).map(({ id }) => id)).toEqual(["a", "a~2"]);
   });
 
+  it("reads rows of two tables with one id under two, since scalars are named by row id alone", () => {
+    const { inputs } = onlyBlock(
+      block("premises", { blockId: "p" }, row("terms", "a", "a", {}), row("fields", "a", "a", {})),
+    );
+    const ids = (table: string) => (inputs[table] as { id: string }[]).map(({ id }) => id);
+    expect([ids("fields"), ids("terms")]).toEqual([["a"], ["a~2"]]);
+  });
+
   it("reports blocks of unknown kinds and does not lose those around them", () => {
     const { blocks, unknown } = readDocument(
       documentOf(block("basisCount", { blockId: "n" }), truncationBlock("t")),
