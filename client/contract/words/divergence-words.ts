@@ -8,6 +8,8 @@ const capNames: Readonly<Record<string, string>> = {
 };
 
 export const divergenceWords: Words = {
+  "premises-incomplete": ({ count }) =>
+    `Something in the premises cannot be read (${said(count)} ${count === 1 ? "problem" : "problems"}), and what it concerns is left out here.`,
   "count-unreadable": ({ text, most }, path) =>
     `The number of ${path[0] === "legs" ? "legs" : "vertices"} is ${quoted(text)}; it must be a whole number from 1 to ${said(most)}.`,
   "vertex-unknown": () =>

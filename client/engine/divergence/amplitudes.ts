@@ -25,10 +25,19 @@ export interface Caps {
   readonly order: Rational;
 }
 
-/** Every choice of up to `most` legs, one of each pair of Hermitian conjugates. Null when there are more than `limit`. */
-export function legChoices(theory: Theory, most: number, limit: number): HalfEdges[] | null {
+/**
+ * Every choice of up to `most` legs of the fields that `takesPart` names, one of each pair of Hermitian conjugates.
+ * Null when there are more than `limit`.
+ */
+export function legChoices(
+  theory: Theory,
+  most: number,
+  limit: number,
+  takesPart: (field: number) => boolean = () => true,
+): HalfEdges[] | null {
   let choices: HalfEdges[] = [noHalfEdges(theory)];
   theory.fields.forEach((field, f) => {
+    if (!takesPart(f)) return;
     const sides = field.selfConjugate ? (["plain"] as const) : (["plain", "conjugate"] as const);
     for (const side of sides) {
       const single = { ...noHalfEdges(theory), [side]: theory.fields.map((_, g) => (g === f ? 1 : 0)) };

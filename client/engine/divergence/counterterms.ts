@@ -103,21 +103,45 @@ function isAnalytic(
   return oddMasses || rest.over(Rational.of(2)).isInteger();
 }
 
-/** "restricted": legs of gauge potentials; "excluded": only such legs, with too few derivatives to make two field strengths. */
-function gaugeStatus(legs: HalfEdges, derivatives: number, theory: Theory): Counterterm["gauge"] {
-  const potentials = legsThat(legs, theory, ({ kind }) => kind === "gauge potential");
-  if (potentials === 0) return "none";
-  return potentials === totalOf(legs) && derivatives + potentials < 4 ? "excluded" : "restricted";
+/** Whether gauge potentials meet themselves in some term: then the theory is not abelian. */
+function gaugeSelfInteracts(theory: Theory): boolean {
+  return theory.terms.some((term) => {
+    const edges = halfEdgesOf(term.monomial, theory);
+    return edges !== null && legsThat(edges, theory, ({ kind }) => kind === "gauge potential") > 2;
+  });
 }
 
+/**
+ * "excluded": only legs of gauge potentials, with too few derivatives for a field strength on each leg (abelian) or for
+ * two field strengths in all. "restricted": gauge or ghost legs among others.
+ */
+function gaugeStatus(legs: HalfEdges, derivatives: number, theory: Theory): Counterterm["gauge"] {
+  const potentials = legsThat(legs, theory, ({ kind }) => kind === "gauge potential");
+  const ghosts = legsThat(legs, theory, ({ kind }) => kind === "ghost");
+  if (potentials + ghosts === 0) return "none";
+  if (potentials < totalOf(legs)) return "restricted";
+  const needed = gaugeSelfInteracts(theory) ? 4 - potentials : Math.max(potentials, 4 - potentials);
+  return derivatives < needed ? "excluded" : "restricted";
+}
+
+/** Row of the term with these legs and derivatives; a squared field strength stands for two potentials and two derivatives. */
 function writtenAs(legs: HalfEdges, { space, time }: Derivatives, theory: Theory): string | null {
   const mirror = conjugated(legs, theory);
-  const found = theory.terms.find(({ monomial }) => {
+  const written = theory.terms.find(({ monomial }) => {
     if (monomial.derivatives !== space || monomial.timeDerivatives !== time) return false;
     const edges = halfEdgesOf(monomial, theory);
     return edges !== null && (sameHalfEdges(edges, legs) || sameHalfEdges(edges, mirror));
   });
-  return found?.rowId ?? null;
+  if (written) return written.rowId;
+  const potentials = legsThat(legs, theory, ({ kind }) => kind === "gauge potential");
+  if (potentials !== 2 || totalOf(legs) !== 2 || space !== 2) return null;
+  const squared = theory.terms.find(({ kinetic, monomial }) => {
+    const edges = halfEdgesOf(monomial, theory);
+    return (
+      kinetic && edges !== null && legsThat(edges, theory, ({ kind }) => kind === "field strength") === 2
+    );
+  });
+  return squared?.rowId ?? null;
 }
 
 /** @param omega a number; for ω < 0 there are none. Highest derivative first. */

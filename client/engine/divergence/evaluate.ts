@@ -18,7 +18,7 @@ export function evaluateDivergence(
   if (theory === null) {
     return {
       value: null,
-      problems: [{ code: "premises-missing", path: [], facts: {} }],
+      problems: [{ code: "premises-missing", path: ["standsOn"], facts: {} }],
       notices: [],
       scalars: [],
       working: [],

@@ -1,6 +1,7 @@
 /** One graph: its degree both ways, what that means, and the counterterms it demands. */
-import type { Evaluation, Scalar } from "../evaluation.ts";
+import type { Evaluation, Notice, Scalar } from "../evaluation.ts";
 import { shown } from "../exact/shown.ts";
+import { incompletePremises } from "../premises/incomplete.ts";
 import type { Theory } from "../premises/theory.ts";
 import { graphCautions } from "./cautions.ts";
 import { countertermsOf } from "./counterterms.ts";
@@ -20,7 +21,7 @@ export function evaluateGraph(inputs: DivergenceInputs, theory: Theory): Evaluat
   if (!read.ok) return { value: null, problems: read.problems, notices: [], scalars: [], working: [] };
   const { graph, degree } = read;
   const value = describeGraph(graph, degree, theory, inputs.symmetries === "yes");
-  const notices = graphCautions(
+  const cautions = graphCautions(
     {
       sign: degree.omega.asRational()?.sign() ?? null,
       loops: degree.loops,
@@ -32,8 +33,11 @@ export function evaluateGraph(inputs: DivergenceInputs, theory: Theory): Evaluat
     theory,
   );
   const broken = inputs.symmetries === "yes" ? forbiddingSymmetry(graph.legs, theory) : null;
-  if (broken)
-    notices.unshift({ code: "legs-break-symmetry", path: ["legs"], facts: { symmetry: broken.name } });
+  const notices: Notice[] = [
+    ...incompletePremises(theory),
+    ...(broken ? [{ code: "legs-break-symmetry", path: ["legs"], facts: { symmetry: broken.name } }] : []),
+    ...cautions,
+  ];
   return {
     value,
     problems: [],

@@ -4,7 +4,9 @@ import { Rational } from "../exact/rational.ts";
 import { shown } from "../exact/shown.ts";
 import { LinearForm } from "../exact/linear-form.ts";
 import type { Theory } from "../premises/theory.ts";
+import { incompletePremises } from "../premises/incomplete.ts";
 import { amplitudeOf, legChoices, type Caps } from "./amplitudes.ts";
+import { countOf } from "./half-edges.ts";
 import type { DivergenceInputs } from "./inputs.ts";
 import { renormalisability } from "./theory-verdict.ts";
 import type { Amplitude, Counterterm, TheoryDivergence } from "./value.ts";
@@ -54,7 +56,7 @@ export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evalua
   return {
     value,
     problems: [],
-    notices: noticesOf(value, listed === null),
+    notices: [...incompletePremises(theory), ...noticesOf(value, listed === null)],
     scalars: scalarsOf(value),
     working: explainTheory(value, theory),
   };
@@ -91,7 +93,8 @@ function listAmplitudes(theory: Theory, caps: Caps, useSymmetries: boolean): Amp
     { surplus: 2 * (caps.loops - 1) + caps.legs, order: caps.order },
     MOST_VERTEX_SETS,
   );
-  const choices = legChoices(theory, caps.legs, MOST_LEG_CHOICES);
+  const interacts = (field: number) => interactions.some(({ edges }) => countOf(edges, field) > 0);
+  const choices = legChoices(theory, caps.legs, MOST_LEG_CHOICES, interacts);
   if (!sets || !choices) return "too many";
   const bySurplus = groupBySurplus(sets);
   const found = choices.flatMap((legs) => amplitudeOf(legs, bySurplus, caps, theory, useSymmetries) ?? []);

@@ -1,5 +1,6 @@
 /** The Order plan block: how far to expand for a target accuracy. */
 import { roundFloat, type Evaluation, type Problem } from "../evaluation.ts";
+import { incompletePremises } from "../premises/incomplete.ts";
 import type { Theory } from "../premises/theory.ts";
 import { planCautions } from "./cautions.ts";
 import { corrections, rateEntries } from "./entries.ts";
@@ -38,11 +39,11 @@ export function evaluateOrderPlan(
     path,
     facts,
   });
-  if (theory === null) return refuse([problem("premises-missing")]);
+  if (theory === null) return refuse([problem("premises-missing", ["standsOn"])]);
   const problems: Problem[] = [];
   const settings = readSettings(inputs, problems);
   const scales = readScales(inputs, theory, problems);
-  const read = planTerms(theory);
+  const read = planTerms(theory, scales?.Q ?? 1);
   if (!read) problems.push(problem("plan-dimension-symbolic"));
   if (scales && scales.Q >= 1)
     problems.push(problem("plan-q-not-below-one", ["probe"], { Q: Number(scales.Q.toPrecision(4)) }));
@@ -65,7 +66,7 @@ export function evaluateOrderPlan(
   return {
     value,
     problems: [...read.problems, ...unreached],
-    notices: planCautions(expansion, order, read.terms, scales, theory),
+    notices: [...incompletePremises(theory), ...planCautions(expansion, order, read.terms, scales, theory)],
     scalars: planScalars(value),
     working: explainPlan(value, read.terms),
   };

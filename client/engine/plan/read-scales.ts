@@ -3,8 +3,8 @@ import type { Problem } from "../evaluation.ts";
 import { Rational } from "../exact/rational.ts";
 import { power, shown, sigmaOf, times, unitText, type Quantity } from "../notation/quantity.ts";
 import { readQuantity } from "../notation/read-quantity.ts";
+import { declaredScales } from "../premises/declared-scales.ts";
 import type { Theory } from "../premises/theory.ts";
-import { declaredScales } from "../truncation/declared-scales.ts";
 import type { OrderPlanInputs } from "./inputs.ts";
 
 export interface PlanScaleRead {

@@ -31,10 +31,12 @@ export interface PlanTerms {
 }
 
 /**
- * Every term but the kinetic ones. A relevant term with no assigned size is left out and named: at its natural size it
- * would outweigh the leading term. Null when a dimension is symbolic.
+ * Every term but the kinetic ones. A relevant term that outweighs the leading amplitude at its natural size and has no
+ * size of its own is left out and named, and so is a term whose typed size cannot be read.
+ *
+ * @returns null when a dimension is symbolic.
  */
-export function planTerms(theory: Theory): PlanTerms | null {
+export function planTerms(theory: Theory, Q: number): PlanTerms | null {
   const problems: Problem[] = [];
   const terms: PlanTerm[] = [];
   for (const term of theory.terms) {
@@ -42,24 +44,14 @@ export function planTerms(theory: Theory): PlanTerms | null {
     if (term.kinetic || legs === 0) continue;
     const excess = term.coefficient.asRational()?.negated();
     if (!excess) return null;
-    if (excess.sign() < 0 && !term.assigned) {
-      problems.push({
-        code: "plan-relevant-unassigned",
-        path: [],
-        facts: { latex: term.latex, rowId: term.rowId },
-      });
-      continue;
-    }
     const order = excess.sign() < 0 ? Rational.zero : excess;
-    terms.push({
-      rowId: term.rowId,
-      latex: term.latex,
-      legs,
-      order,
-      excess,
-      natural: Math.abs(term.natural),
-      assigned: term.assigned,
-    });
+    const { rowId, latex, assigned } = term;
+    const read = { rowId, latex, legs, order, excess, natural: Math.abs(term.natural), assigned };
+    const size = sizeOf(read, Q, workingPoint);
+    const refuse = (code: string) => problems.push({ code, path: ["standsOn"], facts: { latex, rowId } });
+    if (Number.isNaN(size)) refuse("plan-size-unreadable");
+    else if (excess.sign() < 0 && !assigned && size >= 1) refuse("plan-relevant-unassigned");
+    else terms.push(read);
   }
   return { terms, problems };
 }
