@@ -52,6 +52,10 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
     deleteFilter: (item) => defaultDeleteFilter(item, defaultProtectedNodes),
     captureTransaction: (transaction) => transaction.meta.get("addToHistory") !== false,
   });
+  // An editor's plugin destroys the manager when its view goes, also one that was never shown (React builds some twice).
+  // The history outlives any one view: only the notebook's session ends it.
+  const destroyManager = manager.destroy;
+  manager.destroy = () => undefined;
   const listeners = new Set<() => void>();
   let current: HistoryState = { canUndo: false, canRedo: false, message: null };
   let lastOrigin: unknown = null;
@@ -112,7 +116,7 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
     state: () => current,
     destroy() {
       doc.off("beforeTransaction", separateFieldWrites);
-      manager.destroy();
+      destroyManager();
       listeners.clear();
     },
   };

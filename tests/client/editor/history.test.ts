@@ -2,7 +2,7 @@ import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import * as Y from "yjs";
 import { FIELD_ORIGIN, UNDOABLE_BY_NOBODY } from "../../../client/editor/history.ts";
 import { placeBlock } from "../../../client/editor/placing/place.ts";
-import { twoPeople, type as typeText, type Person, type TwoPeople } from "./two-people.ts";
+import { onePerson, twoPeople, type as typeText, type Person, type TwoPeople } from "./two-people.ts";
 
 let people: TwoPeople;
 let wren: Person;
@@ -146,6 +146,15 @@ describe("the history of one person", () => {
     expect(wren.history.undoOnce()).toBe("done");
     expect(wren.editor.getJSON()).toEqual(before);
     expect(otto.editor.getJSON()).toEqual(before);
+  });
+
+  it("outlives the view of an editor", () => {
+    const spare = onePerson(wren.doc, wren.history);
+    spare.editor.destroy();
+    typeText(wren.editor, "typed");
+    expect(wren.history.state().canUndo).toBe(true);
+    expect(wren.history.undoOnce()).toBe("done");
+    expect(otto.text()).toBe("");
   });
 
   it("works from the editor's keys and commands too", () => {
