@@ -1,9 +1,9 @@
 /** Reads the expansion parameter Q: a number with or without uncertainty, or from the scales of the premises. */
 import type { Problem } from "../evaluation.ts";
 import { sigmaOf, unitText } from "../notation/quantity.ts";
-import { readQuantity } from "../notation/read-quantity.ts";
+import { readQuantity, type Declared } from "../notation/read-quantity.ts";
+import { declaredScales } from "../premises/declared-scales.ts";
 import type { ScaleRole, Theory } from "../premises/theory.ts";
-import { declaredScales } from "./declared-scales.ts";
 
 export interface ExpansionParameter {
   readonly value: number;
@@ -16,6 +16,8 @@ export type ReadExpansionParameter =
   | { readonly ok: true; readonly q: ExpansionParameter }
   | { readonly ok: false; readonly problems: readonly Problem[] };
 
+const nothing: Declared = { lookUp: () => null, symbols: [] };
+
 /**
  * @param text "0.3", "0.30(5)", "p/Lambda", "max(p, m)/Lambda"; "" is the probe scale over the heavy scale
  * Problems, all at the field q: those of `readQuantity`, and `q-needs-premises`, `q-needs-roles`,
@@ -24,7 +26,7 @@ export type ReadExpansionParameter =
 export function readExpansionParameter(text: string, theory: Theory | null): ReadExpansionParameter {
   const typed = text.trim() === "" ? ratioOfRoles(theory) : text;
   if (typeof typed !== "string") return { ok: false, problems: [typed] };
-  const reading = readQuantity(typed, declaredScales(theory), "q");
+  const reading = readQuantity(typed, theory ? declaredScales(theory) : nothing, "q");
   if (!reading.ok) {
     const { code, facts } = reading.failure;
     const isNameless = code === "unknown-symbol" && theory === null;
