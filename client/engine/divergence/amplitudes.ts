@@ -42,9 +42,11 @@ export function legChoices(
     for (const side of sides) {
       const single = { ...noHalfEdges(theory), [side]: theory.fields.map((_, g) => (g === f ? 1 : 0)) };
       if (choices.length > limit) return;
-      choices = choices.flatMap((legs) =>
-        Array.from({ length: most - totalOf(legs) + 1 }, (_, count) => addHalfEdges(legs, single, count)),
-      );
+      choices = choices.flatMap((legs) => {
+        const free = most - totalOf(legs);
+        // Many of the first field come first, and more fields than conjugates: the order in which people list them.
+        return Array.from({ length: free + 1 }, (_, n) => addHalfEdges(legs, single, free - n));
+      });
     }
   });
   if (choices.length > limit) return null;
