@@ -71,7 +71,7 @@ export function readWorkingPoint(
 function byRole(theory: Theory, role: "probe" | "heavy", notices: Notice[]): Point | null {
   const scale = theory.scales.find((one) => one.role === role);
   if (!scale) {
-    notices.push({ code: `${role}-missing`, path: [role], facts: {} });
+    notices.push({ code: role === "probe" ? "probe-missing" : "heavy-missing", path: [role], facts: {} });
     return null;
   }
   const quantity = quantityOfScale(scale);
