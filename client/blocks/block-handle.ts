@@ -1,12 +1,9 @@
 /** What a block's form and result see of their block: its inputs, its evaluation, and the ways to change it. */
 import type { Evaluation } from "#engine/evaluation.ts";
 import type { KindName } from "#engine/kind.ts";
-import { createContext, useContext } from "react";
+import type { BlockRow } from "#engine/notebook/block-instance.ts";
+import { createContext, useContext, useSyncExternalStore } from "react";
 
-export interface RowInputs {
-  readonly id: string;
-  readonly [column: string]: string;
-}
 /** A single field, or one column of one row. */
 export type FieldPlace =
   | { readonly field: string }
@@ -17,13 +14,22 @@ export interface Colleague {
   readonly color: string;
 }
 
+export interface PastedGrid {
+  readonly table: string;
+  /** The row and column that the upper left value goes to; null for a row of its own after the last. */
+  readonly rowId: string | null;
+  /** Columns in the order they are shown, from the one that was pasted into. */
+  readonly columns: readonly string[];
+  readonly lines: readonly (readonly string[])[];
+}
+
 export interface BlockHandle {
   readonly blockId: string;
   readonly kind: KindName;
   /** Single fields by name (also those that do not enter the key). */
   readonly fields: Readonly<Record<string, string>>;
   /** Rows by table name, in order. */
-  readonly tables: Readonly<Record<string, readonly RowInputs[]>>;
+  readonly tables: Readonly<Record<string, readonly BlockRow[]>>;
   readonly readOnly: boolean;
   /** The evaluation of the inputs as they are; null until the worker has answered. */
   readonly evaluation: Evaluation | null;
@@ -35,17 +41,26 @@ export interface BlockHandle {
   readonly premisesChoices: readonly { readonly blockId: string; readonly name: string }[];
   readonly standsOn: string | null;
   setStandsOn(blockId: string): void;
+  /** The result of the premises it stands on, for choices such as "which term"; null without. */
+  readonly premisesEvaluation: Evaluation | null;
   setValue(place: FieldPlace, value: string): void;
+  /** Adds a row after another, or at the end; gives its id. */
   addRow(table: string, values?: Readonly<Record<string, string>>, afterRowId?: string): string;
-  removeRow(rowId: string): void;
+  removeRow(table: string, rowId: string): void;
   /** Moves a row before another, or to the end with null. */
   moveRow(table: string, rowId: string, beforeRowId: string | null): void;
+  /** Fills rows from a place on, adding what is missing, as one step of the history. */
+  paste(grid: PastedGrid): void;
   /** Shared per-person history, also from within a field. */
   undo(): void;
   redo(): void;
   /** Tells colleagues that this person is in a field (null: in none). */
   setFocus(place: FieldPlace | null): void;
+  /** The same array until it changes, so that it can be subscribed to. */
   colleaguesIn(place: FieldPlace): readonly Colleague[];
+  onColleagues(listener: () => void): () => void;
+  /** Who wrote the value that is stored now: a name, "someone" when not known, null for oneself. */
+  writerOf(place: FieldPlace): string | null;
   /** Puts a pin of this scalar at the caret's last place in the prose; absent where there is no prose to pin into. */
   pin?(scalarId: string): void;
 }
@@ -57,4 +72,19 @@ export function useBlock(): BlockHandle {
   const handle = useContext(BlockHandleContext);
   if (!handle) throw new Error("a block's form and result are drawn inside a block");
   return handle;
+}
+
+export function useColleaguesIn(place: FieldPlace): readonly Colleague[] {
+  const { onColleagues, colleaguesIn } = useBlock();
+  return useSyncExternalStore(onColleagues, () => colleaguesIn(place));
+}
+
+/** A place as text: an attribute of its element, a key of maps, and what presence says. */
+export function placeKey(place: FieldPlace): string {
+  return "field" in place ? place.field : `${place.table}/${place.rowId}/${place.column}`;
+}
+
+export function valueAt(block: Pick<BlockHandle, "fields" | "tables">, place: FieldPlace): string {
+  if ("field" in place) return block.fields[place.field] ?? "";
+  return block.tables[place.table]?.find(({ id }) => id === place.rowId)?.[place.column] ?? "";
 }

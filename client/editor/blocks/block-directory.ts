@@ -11,22 +11,28 @@ import { readInputs } from "#engine/notebook/read-inputs.ts";
 import { cellNode } from "#schema/block-structure.ts";
 import { attributeOf, blockElements, enclosingBlock, isKindName, rowElements } from "./block-elements.ts";
 
+export interface PremisesChoice {
+  readonly blockId: string;
+  readonly name: string;
+}
+
 export interface BlockDirectory {
   /** In document order. The array and each entry stay the same object until they change. */
   blocks(): readonly BlockInstance[];
   block(blockId: string): BlockInstance | null;
   /** The element to write to; null once the block is gone. */
   element(blockId: string): Y.XmlElement | null;
-  idOf(element: Y.XmlElement): string | null;
+  /** The Premises blocks, for a choice; the same array until one comes, goes or is renamed. */
+  premises(): readonly PremisesChoice[];
   subscribe(listener: () => void): () => void;
   destroy(): void;
 }
 
 export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
   let elements = new Map<string, Y.XmlElement>();
-  let ids = new Map<Y.XmlElement, string>();
   let inputs = new Map<string, BlockInstance>();
   let list: readonly BlockInstance[] = [];
+  let premises: readonly PremisesChoice[] = [];
   const listeners = new Set<() => void>();
 
   function readAll(changed: ReadonlySet<Y.XmlElement>) {
@@ -37,9 +43,9 @@ export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
       next.set(blockId, known ?? readBlock(blockId, element));
     }
     elements = found;
-    ids = new Map([...found].map(([blockId, element]) => [element, blockId]));
     inputs = next;
     list = [...next.values()];
+    premises = keepEqual(premises, list);
   }
 
   function follow(events: readonly Y.YEvent<Y.AbstractType<unknown>>[]) {
@@ -66,7 +72,7 @@ export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
     blocks: () => list,
     block: (blockId) => inputs.get(blockId) ?? null,
     element: (blockId) => elements.get(blockId) ?? null,
-    idOf: (element) => ids.get(element) ?? null,
+    premises: () => premises,
     subscribe(listener) {
       listeners.add(listener);
       return () => listeners.delete(listener);
@@ -76,6 +82,14 @@ export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
       listeners.clear();
     },
   };
+}
+
+function keepEqual(before: readonly PremisesChoice[], blocks: readonly BlockInstance[]): readonly PremisesChoice[] {
+  const next = blocks.filter(({ kind }) => kind === "premises").map(({ id, title }) => ({ blockId: id, name: title }));
+  const same =
+    next.length === before.length &&
+    next.every(({ blockId, name }, index) => blockId === before[index]?.blockId && name === before[index].name);
+  return same ? before : next;
 }
 
 /** Whether children came or went that are blocks or may contain them; a paragraph's text is neither. */

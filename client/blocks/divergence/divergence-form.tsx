@@ -1,0 +1,94 @@
+import type { PremisesValue } from "#engine/premises/value.ts";
+import { useBlock } from "../block-handle.ts";
+import { ChoiceField } from "../parts/choice-field.tsx";
+import { RowTable } from "../parts/row-table.tsx";
+import { TextField } from "../parts/text-field.tsx";
+
+/** One graph by its vertices and legs, or the whole theory within caps. */
+export function DivergenceForm() {
+  const block = useBlock();
+  const oneGraph = block.fields["mode"] !== "whole theory";
+  return (
+    <>
+      <div className="block-settings">
+        <ChoiceField place={{ field: "mode" }} label="of" showLabel options={["one graph", "whole theory"]} />
+        <ChoiceField
+          place={{ field: "symmetries" }}
+          label="symmetries select"
+          showLabel
+          options={[
+            { value: "yes", label: "what they allow" },
+            { value: "no", label: "nothing: all operators" },
+          ]}
+        />
+        {!oneGraph && (
+          <>
+            <TextField place={{ field: "loops" }} label="most loops" showLabel size={4} />
+            <TextField place={{ field: "legs" }} label="most legs" showLabel size={4} />
+            <TextField place={{ field: "order" }} label="largest order in 1/Λ" showLabel size={4} />
+          </>
+        )}
+      </div>
+      {oneGraph && <GraphTables />}
+    </>
+  );
+}
+
+function GraphTables() {
+  const block = useBlock();
+  // Premises' value is what the engine's premises folder gives.
+  const premises = block.premisesEvaluation?.value as PremisesValue | null | undefined;
+  const terms = (premises?.terms ?? []).filter(({ kinetic }) => !kinetic);
+  const typed = new Map(terms.map(({ rowId, latex }) => [rowId, plainLatex(latex)]));
+  return (
+    <div className="divergence-graph">
+      <RowTable
+        table="vertices"
+        noun="vertex"
+        caption="Vertices"
+        nameOf={(row) => typed.get(row["term"] ?? "") ?? ""}
+        invitation="1"
+        columns={[
+          { column: "count", heading: "how many", size: 4, placeholder: "1" },
+          { column: "term", heading: "of the term", options: terms.map(({ rowId, latex }) => ({ value: rowId, label: plainLatex(latex) })) },
+        ]}
+      />
+      <RowTable
+        table="legs"
+        noun="leg"
+        caption="External legs"
+        nameOf={(row) => row["field"] ?? ""}
+        invitation="2"
+        columns={[
+          { column: "count", heading: "how many", size: 4, placeholder: "2" },
+          {
+            column: "field",
+            heading: "of the field",
+            options: (premises?.fields ?? []).map(({ symbol, latex }) => ({ value: symbol, label: plainLatex(latex) })),
+          },
+          { column: "leg", heading: "as", options: ["field", "conjugate", "pair"] },
+        ]}
+      />
+    </div>
+  );
+}
+
+const letters: Readonly<Record<string, string>> = {
+  alpha: "α", beta: "β", gamma: "γ", delta: "δ", epsilon: "ε", varepsilon: "ε", zeta: "ζ", eta: "η", theta: "θ", kappa: "κ",
+  lambda: "λ", mu: "μ", nu: "ν", xi: "ξ", pi: "π", rho: "ρ", sigma: "σ", tau: "τ", phi: "φ", varphi: "φ", chi: "χ", psi: "ψ",
+  omega: "ω", Gamma: "Γ", Delta: "Δ", Theta: "Θ", Lambda: "Λ", Xi: "Ξ", Pi: "Π", Sigma: "Σ", Phi: "Φ", Psi: "Ψ", Omega: "Ω", partial: "∂",
+};
+
+/** A native list shows text only: the LaTeX as plain letters, "c₆/(6! Λ²) χ⁶" at its simplest. */
+export function plainLatex(latex: string): string {
+  return latex
+    .replace(/\\frac\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}/g, "$1/($2)")
+    .replace(/\\bar\{([^{}]*)\}/g, "$1̄")
+    .replace(/\\([A-Za-z]+)/g, (_, name: string) => letters[name] ?? "")
+    .replace(/\^\{?(\d+)\}?/g, (_, digits: string) => [...digits].map((digit) => "⁰¹²³⁴⁵⁶⁷⁸⁹".charAt(Number(digit))).join(""))
+    .replace(/_\{?(\d+)\}?/g, (_, digits: string) => [...digits].map((digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))).join(""))
+    .replace(/\\[,;!: ]|~/g, " ")
+    .replace(/[{}]/g, "")
+    .replace(/\s+/g, " ")
+    .trim();
+}

@@ -1,0 +1,114 @@
+import type { GraphDivergence, Meaning } from "#engine/divergence/value.ts";
+import { Formula } from "../../ui/math.tsx";
+import { Figure } from "../parts/figure.tsx";
+import { Counterterms } from "./counterterms.tsx";
+
+const meaningWords: Readonly<Record<Meaning, string>> = {
+  tree: "a tree: no loop integral",
+  convergent: "converges overall; subgraphs may still diverge",
+  pole: "a pole, with the counterterms below",
+  "no pole: odd dimension, odd loops": "no pole: dimension and number of loops are odd",
+  "no pole: no analytic counterterm": "no pole: no analytic counterterm has the right dimension",
+  "no pole: Schrödinger, odd D·L": "no pole: after the energy integrals, D·L is odd",
+  "vanishes: retarded loop": "vanishes: a closed loop of retarded propagators",
+  "logarithm of the cutoff": "a logarithm of the cutoff",
+  "powers of the cutoff": "powers of the cutoff",
+  "powers and a logarithm of the cutoff": "powers and a logarithm of the cutoff",
+  depends: "depends on the dimension",
+};
+
+/** The degree of one graph, both ways it was computed, and what follows. */
+export function GraphResult({ value }: { readonly value: GraphDivergence }) {
+  const { omega, loops, legs, logarithmicAt, counterterms } = value;
+  return (
+    <>
+      <dl className="block-facts">
+        <dt>degree of divergence</dt>
+        <dd>
+          <Formula latex="\omega =" />{" "}
+          <Figure scalar="omega">
+            <Formula latex={omega.latex} />
+          </Figure>
+          , <Figure scalar="verdict">{verdictWords(value)}</Figure>
+        </dd>
+        <dt>loops</dt>
+        <dd>
+          <Formula latex="L =" /> <Figure scalar="loops">{String(loops)}</Figure>
+          {legs.total > 0 && (
+            <>
+              , legs <Formula latex={legs.latex} />
+            </>
+          )}
+        </dd>
+        <dt>by lines and loops</dt>
+        <dd>
+          <Formula latex={byLines(value)} />
+        </dd>
+        <dt>by legs and vertices</dt>
+        <dd>
+          <Formula latex={byVertices(value)} />
+        </dd>
+        {logarithmicAt && (
+          <>
+            <dt>logarithmic</dt>
+            <dd>
+              at <Formula latex={`${logarithmicAt.symbol} = ${logarithmicAt.value.latex}`} />, a power{" "}
+              {logarithmicAt.growsAbove ? "above" : "below"}
+            </dd>
+          </>
+        )}
+        <dt>dimensional regularisation</dt>
+        <dd>{meaningWords[value.dimensional]}</dd>
+        <dt>with a cutoff</dt>
+        <dd>
+          {meaningWords[value.cutoff]}
+          {value.cutoffPower && (
+            <>
+              , up to <Formula latex={`\\Lambda_c^{${value.cutoffPower.latex}}`} />
+            </>
+          )}
+        </dd>
+      </dl>
+      {counterterms.length > 0 && <Counterterms caption="Counterterms it demands" counterterms={counterterms} />}
+    </>
+  );
+}
+
+function verdictWords({ verdict }: GraphDivergence): string {
+  switch (verdict) {
+    case "tree":
+      return "a tree";
+    case "convergent":
+      return "convergent";
+    case "logarithmic":
+      return "logarithmic";
+    case "power":
+      return "a power";
+    case "depends":
+      return "depends on the dimension";
+  }
+}
+
+/** ω = d L − Σ I (d − 2δ) + Σ V k, with this graph's numbers. */
+function byLines({ loops, lines, vertices, omega }: GraphDivergence): string {
+  const inner = lines.filter(({ count }) => count > 0).map(({ count, weight, latex }) => `${count}\\,(d - 2\\cdot ${bracketed(weight.latex)})_{${latex}}`);
+  const derivatives = vertices.filter(({ derivatives: { text } }) => text !== "0").map(({ count, derivatives }) => `${count}\\cdot ${bracketed(derivatives.latex)}`);
+  const minus = inner.length === 0 ? "" : ` - ${inner.join(" - ")}`;
+  const plus = derivatives.length === 0 ? "" : ` + ${derivatives.join(" + ")}`;
+  return `\\omega = d\\cdot ${loops}${minus}${plus} = ${omega.latex}`;
+}
+
+/** ω = d − Σ E δ − Σ V [g]. */
+function byVertices({ legs, lines, vertices, omega }: GraphDivergence): string {
+  const weightOf = new Map(lines.map(({ fieldRowId, weight }) => [fieldRowId, weight.latex]));
+  const outer = legs.fields.flatMap(({ fieldRowId, count, conjugateCount }) => {
+    const weight = weightOf.get(fieldRowId);
+    return weight === undefined ? [] : [` - ${count + conjugateCount}\\cdot ${bracketed(weight)}`];
+  });
+  const couplings = vertices.map(({ count, coefficient }) => ` - ${count}\\cdot ${bracketed(coefficient.latex)}`);
+  return `\\omega = d${outer.join("")}${couplings.join("")} = ${omega.latex}`;
+}
+
+function bracketed(latex: string): string {
+  return /[+\s-]/.test(latex) ? `\\left(${latex}\\right)` : latex;
+}

@@ -1,0 +1,87 @@
+import { fieldKinds } from "#engine/premises/theory.ts";
+import type { PremisesValue } from "#engine/premises/value.ts";
+import { shownEvaluation } from "../block-parts.ts";
+import { useBlock } from "../block-handle.ts";
+import { ChoiceField } from "../parts/choice-field.tsx";
+import { RowTable } from "../parts/row-table.tsx";
+import { TextField } from "../parts/text-field.tsx";
+import { Formula } from "../../ui/math.tsx";
+import { FieldsTable } from "./fields-table.tsx";
+import { TermsTable } from "./terms-table.tsx";
+
+/** The premises of a theory: what stands here, everything else computes from. Readings stand beside what is typed. */
+export function PremisesForm() {
+  const block = useBlock();
+  // Premises' value is what the engine's premises folder gives.
+  const value = shownEvaluation(block).evaluation?.value as PremisesValue | null | undefined;
+  const scales = new Map(value?.scales.map((scale) => [scale.rowId, scale]));
+  const anisotropic = block.fields["geometry"] === "anisotropic";
+  return (
+    <div className="premises-form">
+      <div className="premises-space">
+        <ChoiceField
+          place={{ field: "geometry" }}
+          label="geometry"
+          showLabel
+          options={[
+            { value: "isotropic", label: "space and time alike" },
+            { value: "anisotropic", label: "space and time scale apart" },
+          ]}
+        />
+        {anisotropic ? (
+          <>
+            <TextField place={{ field: "D" }} label="space dimensions D" showLabel size={4} />
+            <TextField place={{ field: "z" }} label="time counts z" showLabel size={4} />
+          </>
+        ) : (
+          <TextField place={{ field: "d" }} label="spacetime dimension d" showLabel size={4} />
+        )}
+        {value && (
+          <span className="premises-measure">
+            <Formula latex={value.spacetimeLatex} />
+          </span>
+        )}
+      </div>
+      <div className="premises-tables">
+        <FieldsTable value={value ?? null} kinds={fieldKinds} />
+        <RowTable
+          table="scales"
+          noun="scale"
+          caption="Scales"
+          nameOf={(row) => row["symbol"] ?? ""}
+          invitation="Lambda"
+          columns={[
+            {
+              column: "symbol",
+              heading: "symbol",
+              size: 7,
+              placeholder: "Lambda",
+              reading: (row) => drawn(scales.get(row.id)?.latex),
+            },
+            { column: "value", heading: "value", placeholder: "3.2(4) TeV", size: 12 },
+            { column: "role", heading: "role", options: ["heavy", "probe", "light", "other"] },
+            { column: "meaning", heading: "meaning", notation: false, size: 12 },
+          ]}
+          results={[{ heading: "is", show: (row) => scales.get(row.id)?.size?.text ?? "" }]}
+        />
+        <RowTable
+          table="symmetries"
+          noun="symmetry"
+          caption="Symmetries"
+          nameOf={(row) => row["name"] ?? ""}
+          invitation="reflection"
+          columns={[
+            { column: "name", heading: "name", notation: false, size: 12, placeholder: "reflection" },
+            { column: "group", heading: "group", size: 6, placeholder: "Z2" },
+            { column: "meaning", heading: "meaning", notation: false, size: 14 },
+          ]}
+        />
+      </div>
+      <TermsTable value={value ?? null} />
+    </div>
+  );
+}
+
+function drawn(latex: string | undefined) {
+  return latex === undefined ? null : <Formula latex={latex} />;
+}

@@ -1,0 +1,16 @@
+/** The block kinds as the page draws them. Adding a kind is one line here and one in the engine. */
+import type { KindName } from "#engine/kind.ts";
+import type { BlockParts } from "./block-parts.ts";
+import { divergenceParts } from "./divergence/divergence-parts.ts";
+import { orderPlanParts } from "./order-plan/order-plan-parts.ts";
+import { premisesParts } from "./premises/premises-parts.ts";
+import { scalingParts } from "./scaling/scaling-parts.ts";
+import { truncationErrorParts } from "./truncation-error/truncation-error-parts.ts";
+
+export const blockParts: Readonly<Record<KindName, BlockParts>> = {
+  premises: premisesParts,
+  scaling: scalingParts,
+  divergence: divergenceParts,
+  orderPlan: orderPlanParts,
+  truncationError: truncationErrorParts,
+};

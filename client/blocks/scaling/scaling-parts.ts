@@ -1,0 +1,12 @@
+import { forKind, type BlockParts } from "../block-parts.ts";
+import { ScalingForm } from "./scaling-form.tsx";
+import { ScalingPlot } from "./scaling-plot.tsx";
+import { ScalingResult } from "./scaling-result.tsx";
+
+export const scalingParts: BlockParts = {
+  titleField: "title",
+  titleHint: "title",
+  Form: ScalingForm,
+  Result: forKind(ScalingResult),
+  Plot: forKind(ScalingPlot),
+};

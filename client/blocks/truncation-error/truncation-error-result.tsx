@@ -1,0 +1,66 @@
+import type { TruncationValue } from "#engine/truncation/value.ts";
+import { Formula, TextWithMath } from "../../ui/math.tsx";
+import type { ResultProps } from "../block-parts.ts";
+import { useBlock } from "../block-handle.ts";
+import { Figure } from "../parts/figure.tsx";
+import { sizeText, textTo, withUnit } from "../parts/number-text.ts";
+import { ResultTable, type ResultColumnSpec } from "../parts/result-table.tsx";
+import { Coefficients } from "./coefficients.tsx";
+import { assumptionOf, bandScalar, methodRows, resolutionOf, type MethodRow } from "./method-rows.ts";
+
+/** The methods side by side on the same data; the chosen one stands out. */
+export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
+  const { fields } = useBlock();
+  const last = value.orders.at(-1);
+  if (!last) return null;
+  const resolution = resolutionOf(value);
+  const rows = methodRows(last.bands, value.highlighted);
+  const name = ({ method, omitted }: MethodRow) =>
+    rows.filter((row) => row.method === method).length > 1 ? `${method}, ${omitted === "all omitted orders" ? "all" : "first only"}` : method;
+  return (
+    <>
+      <p className="block-line block-verdict">
+        {fields["quantity"] === "" || fields["quantity"] === undefined ? "X" : fields["quantity"]} through order{" "}
+        <Figure scalar="order">{String(last.order)}</Figure> is{" "}
+        {value.highlighted ? (
+          <strong>
+            <Figure scalar="value">
+              {textTo(last.value, value.highlighted.halfWidth)} ± {withUnit(textTo(value.highlighted.halfWidth, value.highlighted.halfWidth), value.unit)}
+            </Figure>
+          </strong>
+        ) : (
+          withUnit(sizeText(last.value, 4), value.unit)
+        )}
+        ; with <Formula latex={value.q.latex === "Q" ? "Q" : `Q = ${value.q.latex}`} /> ={" "}
+        <Figure scalar="Q">{sizeText(value.q.value, 3)}</Figure>, the first order left out is{" "}
+        <Figure scalar="next-order">{String(last.nextOrder)}</Figure>.
+      </p>
+      <ResultTable<MethodRow>
+        caption={`Truncation error after order ${last.order}, by method${value.unit === "" ? "" : `, in ${value.unit}`}`}
+        rows={rows}
+        keyOf={({ method, omitted }) => `${method} ${omitted}`}
+        toneOf={({ chosen }) => (chosen ? "chosen" : null)}
+        columns={[
+          { heading: "method", show: name },
+          ...columnsOf(value, resolution),
+          { heading: "assumes", show: ({ method, omitted }) => <TextWithMath text={assumptionOf(method, omitted, fields)} /> },
+        ]}
+      />
+      <Coefficients value={value} />
+      <p className="block-line block-caution">A model of what was left out, not a bound: it takes the coefficients to be of natural size.</p>
+    </>
+  );
+}
+
+/** One column per degree of belief; a method that states none puts its one number under the first. */
+function columnsOf(value: TruncationValue, resolution: number): ResultColumnSpec<MethodRow>[] {
+  return value.degrees.map(({ text }, index) => ({
+    heading: `${text} %`,
+    numeric: true,
+    show: ({ bands }) => {
+      const band = bands.get(text) ?? (index === 0 ? bands.get("") : undefined);
+      if (!band) return <span className="block-absent">–</span>;
+      return <Figure scalar={bandScalar(band)}>{textTo(band.halfWidth, resolution)}</Figure>;
+    },
+  }));
+}

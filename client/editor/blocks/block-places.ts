@@ -1,0 +1,91 @@
+/** Where blocks stand in the editor's document, and moving and deleting them there. */
+import type { Editor } from "@tiptap/core";
+import type { Node } from "@tiptap/pm/model";
+import { NodeSelection } from "@tiptap/pm/state";
+import { isKindName } from "./block-elements.ts";
+import type { BlockWorld } from "./block-world.ts";
+
+export interface BlockPlace {
+  readonly position: number;
+  readonly node: Node;
+}
+
+/** Blocks in document order under the ids they are read by: a second block of one id is "id~2". */
+export function blockPlaces(doc: Node): ReadonlyMap<string, BlockPlace> {
+  const places = new Map<string, BlockPlace>();
+  doc.descendants((node, position) => {
+    if (!isKindName(node.type.name)) return !node.isTextblock;
+    const own = String(node.attrs["blockId"]);
+    let blockId = own === "" ? "unnamed~1" : own;
+    for (let copy = 2; places.has(blockId); copy++) blockId = `${own === "" ? "unnamed" : own}~${copy}`;
+    places.set(blockId, { position, node });
+    return false;
+  });
+  return places;
+}
+
+/** The id by which the block at a position is read. */
+export function blockIdAt(doc: Node, position: number): string | null {
+  for (const [blockId, place] of blockPlaces(doc)) if (place.position === position) return blockId;
+  return null;
+}
+
+export function selectBlock(editor: Editor, position: number): void {
+  if (!isKindName(editor.state.doc.nodeAt(position)?.type.name ?? "")) return;
+  editor.view.dispatch(editor.state.tr.setSelection(NodeSelection.create(editor.state.doc, position)));
+  editor.view.focus();
+}
+
+/** Brings a block into view and selects it. */
+export function goToBlock(editor: Editor, blockId: string): boolean {
+  const place = blockPlaces(editor.state.doc).get(blockId);
+  if (!place) return false;
+  selectBlock(editor, place.position);
+  const element = editor.view.nodeDOM(place.position);
+  if (element instanceof HTMLElement) element.scrollIntoView({ block: "center" });
+  return true;
+}
+
+/** Swaps a block with its neighbour. The block is made anew in its place, so a colleague inside is asked about first. */
+export function moveBlock(world: BlockWorld, editor: Editor, blockId: string, step: -1 | 1): void {
+  askIfOccupied(world, blockId, "Move the block", "moves", () => {
+    const place = blockPlaces(editor.state.doc).get(blockId);
+    if (!place) return;
+    const { position, node } = place;
+    const { doc, tr } = editor.state;
+    const resolved = doc.resolve(position);
+    const index = resolved.index();
+    const neighbour = resolved.parent.maybeChild(index + step);
+    if (!neighbour) return;
+    const target = step === -1 ? position - neighbour.nodeSize : position + neighbour.nodeSize;
+    tr.delete(position, position + node.nodeSize).insert(target, node);
+    tr.setSelection(NodeSelection.create(tr.doc, target));
+    editor.view.dispatch(tr.scrollIntoView());
+    editor.view.focus();
+  });
+}
+
+export function deleteBlock(world: BlockWorld, editor: Editor, blockId: string): void {
+  askIfOccupied(world, blockId, "Delete the block", "goes", () => {
+    const place = blockPlaces(editor.state.doc).get(blockId);
+    if (!place) return;
+    editor.view.dispatch(editor.state.tr.delete(place.position, place.position + place.node.nodeSize).scrollIntoView());
+    editor.view.focus();
+  });
+}
+
+function askIfOccupied(world: BlockWorld, blockId: string, action: string, verb: "moves" | "goes", act: () => void): void {
+  const colleagues = world.presence.inBlock(blockId);
+  if (colleagues.length === 0) {
+    act();
+    return;
+  }
+  const names = colleagues.map(({ name }) => name).join(" and ");
+  const are = colleagues.length > 1 ? "are" : "is";
+  world.ask({
+    title: `${names} ${are} in this block`,
+    sentence: `What ${names} ${are} typing there at this moment may be lost when the block ${verb}.`,
+    yes: action,
+    act,
+  });
+}

@@ -1,0 +1,75 @@
+import type { StoredResult } from "#contract/api.ts";
+import type { Editor } from "@tiptap/core";
+import { useEffect, useState, useSyncExternalStore, type ReactNode } from "react";
+import { ConfirmDialog } from "../../ui/confirm-dialog.tsx";
+import "../../blocks/blocks.css";
+import { ResultsContext } from "../evaluation/use-results.ts";
+import type { NotebookSession } from "../notebook-session.ts";
+import { announcePins } from "../pins/use-pin-counts.ts";
+import { BlockWorldContext, createBlockWorld, useBlockWorld, type BlockWorld } from "./block-world.ts";
+
+interface Props {
+  readonly session: NotebookSession;
+  /** What the server has stored, for the first paint and for "moved by whom"; undefined while it is on its way. */
+  readonly stored: readonly StoredResult[] | undefined;
+  readonly children: ReactNode;
+}
+
+/** Around the editor: the blocks of the notebook, their results and who is in them. */
+export function BlocksProvider({ session, stored, children }: Props) {
+  const [world, setWorld] = useState<BlockWorld | null>(null);
+  useEffect(() => {
+    const opened = createBlockWorld(session);
+    setWorld(opened);
+    return () => {
+      setWorld(null);
+      opened.destroy();
+    };
+  }, [session]);
+  useEffect(() => {
+    if (world && stored) world.results.setStored(stored);
+  }, [world, stored]);
+  if (!world) return null;
+  return (
+    <BlockWorldContext value={world}>
+      <ResultsContext value={world.results}>
+        {children}
+        <Asking world={world} />
+      </ResultsContext>
+    </BlockWorldContext>
+  );
+}
+
+/** Tells the blocks which editor shows them. Called once by the editor's component. */
+export function useBlocksEditor(editor: Editor): void {
+  const world = useBlockWorld();
+  useEffect(() => {
+    world.editor = editor;
+    const quiet = announcePins(world, editor);
+    return () => {
+      quiet();
+      world.editor = null;
+    };
+  }, [world, editor]);
+}
+
+function Asking({ world }: { readonly world: BlockWorld }) {
+  const question = useSyncExternalStore(world.onQuestion, world.question);
+  if (!question) return null;
+  return (
+    <ConfirmDialog
+      open
+      title={question.title}
+      action={question.yes}
+      busy={false}
+      problem={null}
+      onClose={() => world.ask(null)}
+      onConfirm={() => {
+        world.ask(null);
+        question.act();
+      }}
+    >
+      {question.sentence}
+    </ConfirmDialog>
+  );
+}

@@ -1,0 +1,138 @@
+/** The handle that a block's form and result are given, over the shared document and the results. */
+import { useMemo, useSyncExternalStore } from "react";
+import type * as Y from "yjs";
+import { kindDescriptions } from "#engine/descriptions.ts";
+import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
+import { choosePremises } from "#engine/notebook/choose-premises.ts";
+import { placeKey, type BlockHandle, type FieldPlace } from "../../blocks/block-handle.ts";
+import { useBlockResult } from "../evaluation/use-results.ts";
+import { newId } from "../new-id.ts";
+import { placePinAtCaret } from "../pins/place-pin.ts";
+import { cellElement, orderedRows } from "./block-elements.ts";
+import { useBlockWorld, useReadOnly, type BlockWorld } from "./block-world.ts";
+import { changeInputs, insertRows, moveRow, removeRow, writeCell, writeField } from "./block-writes.ts";
+import { pasteInto } from "./paste-rows.ts";
+
+/** Null once the block is gone. */
+export function useBlockHandle(blockId: string): BlockHandle | null {
+  const world = useBlockWorld();
+  const { directory } = world;
+  const block = useSyncExternalStore(directory.subscribe, () => directory.block(blockId));
+  const premises = useSyncExternalStore(directory.subscribe, directory.premises);
+  const result = useBlockResult(blockId);
+  const readOnly = useReadOnly();
+  const changes = useMemo(() => changesOf(world, blockId), [world, blockId]);
+  const standsOn = useSyncExternalStore(directory.subscribe, () => {
+    const current = directory.block(blockId);
+    const choice = current && choosePremises(current, directory.blocks());
+    return choice && "found" in choice ? (choice.found?.id ?? null) : null;
+  });
+  const premisesResult = useBlockResult(standsOn ?? "");
+  const premisesEvaluation = standsOn === null ? null : (premisesResult.lastGood ?? premisesResult.evaluation);
+  return useMemo(() => {
+    if (!block) return null;
+    const { evaluation, lastGood, pending } = result;
+    return {
+      ...changes,
+      ...valuesOf(block),
+      blockId,
+      kind: block.kind,
+      readOnly,
+      evaluation,
+      lastGood: evaluation?.value == null ? lastGood : null,
+      pending,
+      premisesChoices: premises,
+      standsOn,
+      premisesEvaluation,
+    };
+  }, [block, result, readOnly, changes, premises, standsOn, premisesEvaluation, blockId]);
+}
+
+function valuesOf({ kind, inputs }: BlockInstance): Pick<BlockHandle, "fields" | "tables"> {
+  const { shape } = kindDescriptions[kind];
+  const fields: Record<string, string> = {};
+  const tables: Record<string, readonly BlockRow[]> = {};
+  for (const name of Object.keys(shape.fields)) {
+    const value = inputs[name];
+    if (typeof value === "string") fields[name] = value;
+  }
+  for (const name of Object.keys(shape.tables)) {
+    const value = inputs[name];
+    if (typeof value === "object") tables[name] = value;
+  }
+  return { fields, tables };
+}
+
+type Changes = Pick<
+  BlockHandle,
+  | "setStandsOn"
+  | "setValue"
+  | "addRow"
+  | "removeRow"
+  | "moveRow"
+  | "paste"
+  | "undo"
+  | "redo"
+  | "setFocus"
+  | "colleaguesIn"
+  | "onColleagues"
+  | "writerOf"
+  | "pin"
+>;
+
+/** Everything a block's form may do. None of it changes while the block stays the same. */
+function changesOf(world: BlockWorld, blockId: string): Changes {
+  const { directory, presence, session } = world;
+
+  function change(act: (element: Y.XmlElement, block: BlockInstance) => void): void {
+    const element = directory.element(blockId);
+    const block = directory.block(blockId);
+    // A colleague may have deleted the block an instant ago; a demoted person's form may still be closing.
+    if (!element || !block || session.state().readOnly) return;
+    changeInputs(element, () => act(element, block));
+  }
+
+  return {
+    setStandsOn: (premisesId) => change((element) => writeField(element, "standsOn", premisesId)),
+    setValue: (place, value) =>
+      change((element) => {
+        if ("field" in place) writeField(element, place.field, value);
+        else writeCell(element, place.table, place.rowId, place.column, value);
+      }),
+    addRow(table, values = {}, afterRowId) {
+      const id = newId();
+      change((element, { kind }) => insertRows(element, kindDescriptions[kind], table, [{ id, values }], afterRowId ?? null));
+      return id;
+    },
+    removeRow: (table, rowId) => change((element) => removeRow(element, table, rowId)),
+    moveRow: (table, rowId, beforeRowId) => change((element) => moveRow(element, table, rowId, beforeRowId)),
+    paste: (grid) => change((element, { kind }) => pasteInto(element, kindDescriptions[kind], grid, newId)),
+    undo: () => void session.history.undoOnce(),
+    redo: () => void session.history.redoOnce(),
+    setFocus(place) {
+      if (place) presence.enter(blockId, placeKey(place));
+      else presence.leave(blockId);
+    },
+    colleaguesIn: (place) => presence.inField(blockId, placeKey(place)),
+    onColleagues: presence.subscribe,
+    writerOf(place) {
+      const clientId = writerOf(directory.element(blockId), place);
+      return clientId === null ? "someone" : presence.nameOf(clientId);
+    },
+    pin: (scalarId) => placePinAtCaret(world, blockId, scalarId),
+  };
+}
+
+/** The client of the shared document that wrote the value as it stands. */
+function writerOf(block: Y.XmlElement | null, place: FieldPlace): number | null {
+  if (!block) return null;
+  if ("field" in place) return clientOf(block, place.field);
+  const row = orderedRows(block, place.table).find(({ id }) => id === place.rowId);
+  const cell = row && cellElement(row.element, place.column);
+  return cell ? clientOf(cell, "value") : null;
+}
+
+/** Yjs keeps attributes as items that carry their writer's client id; `_map` is where, in the version we pin. */
+function clientOf(element: Y.XmlElement, attribute: string): number | null {
+  return element._map.get(attribute)?.id.client ?? null;
+}
