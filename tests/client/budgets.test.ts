@@ -30,7 +30,9 @@ describe("what the browser fetches", () => {
   });
 
   it("opens the sign-in with at most 110 kB of JavaScript", () => {
-    expect(kilobytes(closureOf(readManifest(), [entry, "pages/home/home-page.tsx"]))).toBeLessThanOrEqual(110);
+    expect(kilobytes(closureOf(readManifest(), [entry, "pages/home/home-page.tsx"]))).toBeLessThanOrEqual(
+      110,
+    );
   });
 
   it("opens a notebook with at most 230 kB more", () => {

@@ -40,7 +40,9 @@ export function serve(lines: Lines): Asked[] {
     };
     requests.push(asked);
     const line = lines[`${asked.method} ${asked.path}`];
-    const reply = line ? line(asked) : refused(404, "not-found", "There is nothing here, or you may not see it.");
+    const reply = line
+      ? line(asked)
+      : refused(404, "not-found", "There is nothing here, or you may not see it.");
     return Promise.resolve(
       new Response(reply.status === 204 ? null : JSON.stringify(reply.body), {
         status: reply.status,

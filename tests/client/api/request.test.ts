@@ -44,7 +44,10 @@ describe("a request", () => {
   });
 
   it("is refused as signed out when that session has ended meanwhile", async () => {
-    serve({ "GET /api/me": signedOut, "DELETE /api/notebooks/1": () => refused(403, "cross-site", "Reload the page.") });
+    serve({
+      "GET /api/me": signedOut,
+      "DELETE /api/notebooks/1": () => refused(403, "cross-site", "Reload the page."),
+    });
     const answer = await ask("/api/notebooks/1", { method: "DELETE" });
     expect(answer).toMatchObject({ ok: false, problem: { code: "urn:subleading:signed-out", status: 401 } });
     expect(sessionHasLapsed()).toBe(true);
@@ -61,8 +64,16 @@ describe("a failure", () => {
   });
 
   it.each([
-    ["a page instead of a problem", { status: 502, body: "<html>", type: "text/html" }, /could not do this just now/],
-    ["a problem without a sentence", { status: 400, body: { type: "x" }, type: "application/problem+json" }, /did not accept/],
+    [
+      "a page instead of a problem",
+      { status: 502, body: "<html>", type: "text/html" },
+      /could not do this just now/,
+    ],
+    [
+      "a problem without a sentence",
+      { status: 400, body: { type: "x" }, type: "application/problem+json" },
+      /did not accept/,
+    ],
   ])("is put into words when the answer is %s", async (_what, reply, sentence) => {
     serve({ "GET /api/notebooks": () => reply });
     const answer = await ask("/api/notebooks");
@@ -71,7 +82,10 @@ describe("a failure", () => {
 
   it("is put into words when there is no network", async () => {
     vi.spyOn(globalThis, "fetch").mockRejectedValue(new TypeError("network"));
-    expect(await ask("/api/notebooks")).toMatchObject({ ok: false, problem: { status: 0, sentence: /could not be reached/ } });
+    expect(await ask("/api/notebooks")).toMatchObject({
+      ok: false,
+      problem: { status: 0, sentence: /could not be reached/ },
+    });
   });
 
   it("of 401 says that the session has lapsed", async () => {

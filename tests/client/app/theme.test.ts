@@ -2,7 +2,13 @@ import { readFileSync } from "node:fs";
 import { join } from "node:path";
 import { runInNewContext } from "node:vm";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
-import { chooseTheme, followTheme, readThemeChoice, THEME_KEY, themeInUse } from "../../../client/app/theme.ts";
+import {
+  chooseTheme,
+  followTheme,
+  readThemeChoice,
+  THEME_KEY,
+  themeInUse,
+} from "../../../client/app/theme.ts";
 
 let systemIsDark = false;
 const watchers = new Set<() => void>();
@@ -42,7 +48,11 @@ describe("the theme", () => {
 
   it("keeps what was chosen, whatever the system says", () => {
     chooseTheme("night");
-    expect([shown(), localStorage.getItem(THEME_KEY), readThemeChoice()]).toEqual(["night", "night", "night"]);
+    expect([shown(), localStorage.getItem(THEME_KEY), readThemeChoice()]).toEqual([
+      "night",
+      "night",
+      "night",
+    ]);
     systemIsDark = true;
     chooseTheme("day");
     expect(themeInUse()).toBe("day");
