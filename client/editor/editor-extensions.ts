@@ -14,11 +14,19 @@ export interface EditorWiring {
   readonly editing: MathEditing;
   /** Views by node name, for blocks and pins. */
   readonly views: Readonly<Record<string, NodeViewRenderer>>;
+  /** Behaviour that goes with the views. */
+  readonly others: readonly AnyExtension[];
   /** Opens the index of what can be placed. */
   openIndex(): void;
 }
 
-export function editorExtensions({ session, editing, views, openIndex }: EditorWiring): AnyExtension[] {
+export function editorExtensions({
+  session,
+  editing,
+  views,
+  others,
+  openIndex,
+}: EditorWiring): AnyExtension[] {
   const drawn = { inlineMath: mathNodeView(editing), displayMath: mathNodeView(editing), ...views };
   return [
     ...documentExtensions.map((extension) => withView(extension, drawn)),
@@ -26,6 +34,7 @@ export function editorExtensions({ session, editing, views, openIndex }: EditorW
     mathematicsTyping(session.history),
     NumberingExtension,
     Pasting,
+    ...others,
     Extension.create({
       name: "indexShortcut",
       addKeyboardShortcuts: () => ({

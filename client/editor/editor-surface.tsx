@@ -1,7 +1,11 @@
 /** The writing surface: the section scale, the margin tick, the writing bar and the document itself. */
 import { EditorContent, useEditor } from "@tiptap/react";
 import { useEffect, useMemo, useRef, useState, useSyncExternalStore } from "react";
+import type { StoredResult } from "#contract/api.ts";
 import { say } from "../ui/notices.ts";
+import { blockExtensions, blockViews } from "./blocks/block-extensions.ts";
+import { useBlockWorld } from "./blocks/block-world.ts";
+import { BlocksProvider, useBlocksEditor } from "./blocks/blocks-provider.tsx";
 import { isFinal, type ConnectionState } from "./connection-words.ts";
 import { editorExtensions } from "./editor-extensions.ts";
 import { createMathEditing } from "./mathematics/math-editing.ts";
@@ -16,9 +20,20 @@ import { WritingBar } from "./writing/writing-bar.tsx";
 interface EditorSurfaceProps {
   readonly session: NotebookSession;
   readonly state: ConnectionState;
+  /** What the server has stored; undefined while it is on its way. */
+  readonly stored: readonly StoredResult[] | undefined;
 }
 
-export function EditorSurface({ session, state }: EditorSurfaceProps) {
+export function EditorSurface({ session, state, stored }: EditorSurfaceProps) {
+  return (
+    <BlocksProvider session={session} stored={stored}>
+      <WritingSurface session={session} state={state} />
+    </BlocksProvider>
+  );
+}
+
+function WritingSurface({ session, state }: Omit<EditorSurfaceProps, "stored">) {
+  const world = useBlockWorld();
   const readOnly = state.readOnly || isFinal(state.phase);
   const editing = useMemo(createMathEditing, []);
   const [indexOpen, setIndexOpen] = useState(false);
@@ -33,7 +48,8 @@ export function EditorSurface({ session, state }: EditorSurfaceProps) {
       extensions: editorExtensions({
         session,
         editing,
-        views: {},
+        views: blockViews,
+        others: blockExtensions(world),
         openIndex: () => {
           openIndex.current();
         },
@@ -53,11 +69,12 @@ export function EditorSurface({ session, state }: EditorSurfaceProps) {
         scrollThreshold: { top: 120, bottom: 80, left: 0, right: 0 },
       },
     },
-    [session, editing],
+    [session, editing, world],
   );
   useEffect(() => {
     editor.setEditable(!readOnly, false);
   }, [editor, readOnly]);
+  useBlocksEditor(editor);
   useHistoryWords(session);
 
   const notebook = useMemo<OpenNotebook>(() => ({ session, editor, readOnly }), [session, editor, readOnly]);

@@ -1,5 +1,6 @@
 /** A notebook on the page: opens its shared document, then the editor on it. */
 import { useEffect, useState, useSyncExternalStore } from "react";
+import type { StoredResult } from "#contract/api.ts";
 import type { ServerNotice } from "#contract/collab.ts";
 import type { Role } from "#contract/roles.ts";
 import { SCHEMA_VERSION } from "#schema/version.ts";
@@ -21,6 +22,8 @@ export interface NotebookEditorProps {
   readonly person?: PresenceUser | null;
   /** Version of the stored document, from the API. A newer one is never opened: it would be stripped. */
   readonly schemaVersion?: number;
+  /** Results the server has stored, for the first paint; undefined while they are on their way. */
+  readonly stored?: readonly StoredResult[] | undefined;
   /** What the server says beside the document: results were stored, title or people changed, … */
   readonly onNotice?: (notice: ServerNotice) => void;
 }
@@ -34,10 +37,15 @@ export function NotebookEditor(props: NotebookEditorProps) {
 function OpenedNotebook(props: NotebookEditorProps) {
   const session = useNotebookSession(props);
   if (!session) return <p className="notebook-notice">Opening the notebook…</p>;
-  return <SessionView session={session} />;
+  return <SessionView session={session} stored={props.stored} />;
 }
 
-function SessionView({ session }: { readonly session: NotebookSession }) {
+interface SessionViewProps {
+  readonly session: NotebookSession;
+  readonly stored: readonly StoredResult[] | undefined;
+}
+
+function SessionView({ session, stored }: SessionViewProps) {
   const state = useSyncExternalStore(session.subscribe, session.state);
   useWarningBeforeLeaving(state.unsaved && state.phase !== "scratch");
   switch (state.phase) {
@@ -60,7 +68,7 @@ function SessionView({ session }: { readonly session: NotebookSession }) {
       </p>
     );
   }
-  return <EditorSurface session={session} state={state} />;
+  return <EditorSurface session={session} state={state} stored={stored} />;
 }
 
 const refereeEnded = "This referee link has expired or was revoked. Ask whoever sent it for a new one.";

@@ -25,14 +25,14 @@ export interface TwoPeople {
   leave(): void;
 }
 
-export function onePerson(doc = new Y.Doc()): Person {
-  const history = createHistory(doc);
+export function onePerson(doc = new Y.Doc(), history = createHistory(doc)): Person {
   const session = sessionOn(doc, history);
   const editor = new Editor({
     extensions: editorExtensions({
       session,
       editing: createMathEditing(),
       views: {},
+      others: [],
       openIndex: () => undefined,
     }),
     injectCSS: false,
