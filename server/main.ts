@@ -1,4 +1,5 @@
 /** The server as a process: reads the environment, migrates, serves until it is told to stop. */
+import { seedDemonstration } from "./commands/seed-demonstration.ts";
 import { readConfiguration } from "./configuration.ts";
 import { createServer, type RunningServer } from "./create-server.ts";
 import { openDatabase } from "./data/database.ts";
@@ -14,7 +15,12 @@ async function start(): Promise<RunningServer | null> {
     most: 2,
     name: "subleading migrations",
   });
-  await migrateToLatest(database).finally(() => database.destroy());
+  try {
+    await migrateToLatest(database);
+    if (outcome.configuration.demonstration) await seedDemonstration(database);
+  } finally {
+    await database.destroy();
+  }
   return createServer(outcome.configuration);
 }
 

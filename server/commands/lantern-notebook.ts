@@ -6,7 +6,7 @@ import { block, displayed, heading, paragraph, type DocumentNode } from "./docum
 
 export const LANTERN_TITLE = "Lantern amplitude to one per mille";
 
-/** Makes a pin of one scalar of one block; null until the blocks have been evaluated. */
+/** Makes a pin of one scalar of one block; `format` as in engine/notebook/pin-format.ts. */
 export type PinMaker = (blockId: string, scalar: string, format: string) => DocumentNode;
 
 export const lanternBlocks: readonly DocumentNode[] = [
@@ -112,9 +112,9 @@ export function lanternDocument(pin: PinMaker): DocumentNode {
       ),
       plan,
       paragraph(
-        "Taken from the orders computed so far, the rate carries a truncation error of ±",
-        pin("lantern-error", "conjugate/68", ""),
-        " pb at 68 % degree of belief.",
+        "Taken from the orders computed so far, the rate carries a truncation error of ",
+        pin("lantern-error", "conjugate/68", "sign=both"),
+        " at 68 % degree of belief.",
       ),
       truncation,
       paragraph(

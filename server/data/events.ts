@@ -7,6 +7,7 @@ export interface Happening {
   readonly what:
     | "signed-in"
     | "signed-out"
+    | "demonstration-seeded"
     | "notebook-created"
     | "notebook-renamed"
     | "notebook-archived"

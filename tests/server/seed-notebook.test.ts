@@ -1,0 +1,43 @@
+/** The demonstration notebook is complete and agrees with itself. */
+import { expect, test } from "vitest";
+import { seedDemonstration } from "../../server/commands/seed-demonstration.ts";
+import { openDatabase, rows } from "../../server/data/database.ts";
+import { createTestDatabase } from "./database.ts";
+
+test("the Lantern notebook waits for its authors, with every result stored and every pin holding", async () => {
+  const { url, drop } = await createTestDatabase();
+  const database = openDatabase(url);
+  try {
+    await seedDemonstration(database);
+    await seedDemonstration(database);
+    const notebooks = await rows<{ premises_line: string; pins_moved: number; pins_loose: number }>(
+      database,
+      "select premises_line, pins_moved, pins_loose from notebooks",
+    );
+    expect(notebooks).toEqual([{ premises_line: "d = 4 · 2 fields · 9 terms", pins_moved: 0, pins_loose: 0 }]);
+    const results = await rows<{ block_id: string; problems: unknown[]; has_value: boolean }>(
+      database,
+      `select block_id, value -> 'problems' as problems, value -> 'value' <> 'null'::jsonb as has_value
+         from notebook_results join results using (key) order by block_id`,
+    );
+    expect(results.map(({ block_id }) => block_id)).toEqual([
+      "lantern",
+      "lantern-error",
+      "lantern-graph",
+      "lantern-plan",
+      "lantern-scaling",
+    ]);
+    for (const result of results) expect(result).toMatchObject({ problems: [], has_value: true });
+    const waiting = await rows<{ login: string; role: string }>(
+      database,
+      "select login, role from invitations order by login",
+    );
+    expect(waiting).toEqual([
+      { login: "otto-lantern", role: "author" },
+      { login: "wren-lantern", role: "owner" },
+    ]);
+  } finally {
+    await database.destroy();
+    await drop();
+  }
+});
