@@ -159,9 +159,10 @@ export function countertermsOf(
     const dimension = fields.plus(LinearForm.constant(weight));
     const coefficient = theory.measure.minus(dimension);
     const order = coefficient.asRational();
+    const gradient = theory.spacetime.geometry === "isotropic" ? "\\partial" : "\\nabla";
     const marks = [
       ...(time > 0 ? [time === 1 ? "\\partial_t" : `\\partial_t^{${time}}`] : []),
-      ...(space > 0 ? [space === 1 ? "\\partial" : `\\partial^{${space}}`] : []),
+      ...(space > 0 ? [space === 1 ? gradient : `${gradient}^{${space}}`] : []),
     ];
     const words = [
       time > 0 ? `d_t^${time}` : "",

@@ -17,10 +17,9 @@ export function isSpinor(field: Field): boolean {
   return spinors.includes(field.kind);
 }
 
-/** The conjugate as people write it: a bar over spinors and ghosts, a dagger on Schrödinger fields, a star on scalars. */
+/** The conjugate as people write it: a bar over spinors and ghosts, a dagger elsewhere. */
 function conjugateLatex(field: Field): string {
-  if (isSpinor(field) || field.kind === "ghost") return `\\bar{${field.latex}}`;
-  return field.kind === "Schrödinger field" ? `${field.latex}^{\\dagger}` : `${field.latex}^{*}`;
+  return isSpinor(field) || field.kind === "ghost" ? `\\bar{${field.latex}}` : `${field.latex}^{\\dagger}`;
 }
 function conjugateText(field: Field): string {
   return isSpinor(field) || field.kind === "ghost" ? `${field.symbol}bar` : `${field.symbol}*`;

@@ -147,5 +147,5 @@ export function entryLatex(entry: Entry): string {
   if (entry.role === "interference") return `2\\,\\mathrm{Re}\\;${product(other)}`;
   return entry.factor === 1
     ? `\\bigl|${product(one)}\\bigr|^2`
-    : `2\\,\\mathrm{Re}\\;${product(one)}\\,${product(other)}^{*}`;
+    : `2\\,\\mathrm{Re}\\;${product(one)}\\,\\bigl[${product(other)}\\bigr]^{*}`;
 }
