@@ -87,11 +87,16 @@ export async function createWorld(options: WorldOptions = {}): Promise<World> {
   };
 }
 
-/** Polls until the value is there; the test's own time limit ends it otherwise. */
-export async function eventually<Value>(look: () => Promise<Value | null> | Value | null): Promise<Value> {
+/** Polls until the value is there. */
+export async function eventually<Value>(
+  look: () => Promise<Value | null> | Value | null,
+  patienceMs = 10_000,
+): Promise<Value> {
+  const end = performance.now() + patienceMs;
   for (;;) {
     const value = await look();
     if (value !== null) return value;
-    await new Promise((resolve) => setTimeout(resolve, 20));
+    if (performance.now() > end) throw new Error(`Waited ${patienceMs} ms in vain until ${look.toString()}`);
+    await new Promise((resolve) => setTimeout(resolve, 10));
   }
 }
