@@ -17,7 +17,7 @@ import { describeLegs } from "./legs.ts";
 import { vanishesInVacuum } from "./retarded.ts";
 import { forbiddingSymmetry, isFermionOdd } from "./selection.ts";
 import type { Amplitude, AmplitudeAtOrder, AmplitudeStatus } from "./value.ts";
-import { numberOf, type VertexSet } from "./vertex-sets.ts";
+import { numberOf, type SetIndex, type VertexSet } from "./vertex-sets.ts";
 
 export interface Caps {
   readonly loops: number;
@@ -72,58 +72,46 @@ interface Found {
 }
 
 /** The largest degree at each order in 1/Λ, with the fewest loops that reach it, among graphs that exist. */
-function bestGraphs(
-  legs: HalfEdges,
-  sets: ReadonlyMap<number, readonly VertexSet[]>,
-  caps: Caps,
-  theory: Theory,
-): Found {
+function bestGraphs(legs: HalfEdges, sets: SetIndex, caps: Caps, theory: Theory): Found {
   const bound = numberOf(theory.measure.minus(weigh(legs, theory, (field) => field.weight)));
   const best = new Map<string, Found["atOrders"][number]>();
   let anyGraph = false;
   let anyRetarded = false;
   // The vacuum has one graph without vertices: the free loop.
-  const lone = sets.get(0)?.find(({ vertices }) => vertices.length === 0);
-  if (totalOf(legs) === 0 && lone) {
+  const lone = totalOf(legs) === 0 ? sets.find(1, legs).find(({ vertices }) => vertices.length === 0) : null;
+  if (lone) {
     anyGraph = true;
     best.set("0", { order: Rational.zero, omega: bound, loops: 1, set: lone });
   }
   for (let loops = 1; loops <= caps.loops; loops += 1) {
-    for (const set of sets.get(2 * (loops - 1) + totalOf(legs)) ?? []) {
+    for (const set of sets.find(loops, legs)) {
+      if (set.vertices.length === 0 || !hasEnough(set, legs)) continue;
       const omega = bound.minus(set.coefficients);
-      const before = best.get(set.order.toString());
-      if (
-        set.vertices.length === 0 ||
-        (before && before.omega.compare(omega) >= 0) ||
-        (anyGraph && omega.sign() < 0)
-      )
-        continue;
-      if (!hasGraph(set, legs, theory)) continue;
+      const before = best.get(set.orderKey);
+      if ((before && before.omega.compare(omega) >= 0) || (anyGraph && omega.sign() < 0)) continue;
+      const lines = internalLines(set.vertices, legs, theory);
+      if (graphExists(set.vertices, legs, lines, theory) !== "exists") continue;
       if (vanishesInVacuum(set.vertices, legs, theory)) {
         anyRetarded = true;
         continue;
       }
       anyGraph = true;
-      if (omega.sign() >= 0) best.set(set.order.toString(), { order: set.order, omega, loops, set });
+      if (omega.sign() >= 0) best.set(set.orderKey, { order: set.order, omega, loops, set });
     }
   }
   const atOrders = [...best.values()].sort((a, b) => a.order.compare(b.order));
   return { atOrders, anyGraph, anyRetarded };
 }
 
-function hasGraph(set: VertexSet, legs: HalfEdges, theory: Theory): boolean {
-  const tooMany = theory.fields.some(
-    (_, f) =>
-      countOf(set.edges, f) < countOf(legs, f) || (countOf(set.edges, f) - countOf(legs, f)) % 2 !== 0,
-  );
-  if (tooMany) return false;
-  return graphExists(set.vertices, legs, internalLines(set.vertices, legs, theory), theory) === "exists";
+/** Whether the vertices have the external legs: settled first, being quick. */
+function hasEnough(set: VertexSet, legs: HalfEdges): boolean {
+  return legs.plain.every((_, f) => countOf(set.edges, f) >= countOf(legs, f));
 }
 
 /** @returns null when the legs neither diverge nor would if something did not forbid it. */
 export function amplitudeOf(
   legs: HalfEdges,
-  sets: ReadonlyMap<number, readonly VertexSet[]>,
+  sets: SetIndex,
   caps: Caps,
   theory: Theory,
   useSymmetries: boolean,

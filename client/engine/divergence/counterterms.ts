@@ -3,10 +3,12 @@ import { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
 import { shown } from "../exact/shown.ts";
 import type { Theory } from "../premises/theory.ts";
+import { contracts, legsThat } from "./contraction.ts";
 import {
   conjugated,
   countOf,
   halfEdgesOf,
+  netOf,
   sameHalfEdges,
   totalOf,
   weigh,
@@ -18,16 +20,6 @@ import type { Counterterm } from "./value.ts";
 
 /** Past this degree a list would be longer than anyone reads; the first ones are those of highest derivative. */
 const MOST_DERIVATIVES = 40;
-
-const vectors = ["gauge potential", "massive vector", "massive vector, conserved current"];
-
-function legsThat(
-  edges: HalfEdges,
-  theory: Theory,
-  holds: (field: Theory["fields"][number]) => boolean,
-): number {
-  return theory.fields.reduce((sum, field, f) => sum + (holds(field) ? countOf(edges, f) : 0), 0);
-}
 
 /** Whether the premises hold a mass term that mixes chiralities, so that odd powers of a fermion mass may appear. */
 function breaksChirality(theory: Theory): boolean {
@@ -44,13 +36,6 @@ function breaksChirality(theory: Theory): boolean {
       term.derivativeWeight.equals(LinearForm.zero)
     );
   });
-}
-
-/** Derivatives and vector indices contract in pairs, unless a gamma matrix or a fixed velocity takes one. */
-export function contracts(legs: HalfEdges, derivatives: number, theory: Theory): boolean {
-  const indices = legsThat(legs, theory, ({ kind }) => vectors.includes(kind));
-  if (theory.spacetime.geometry === "anisotropic") return indices > 0 || derivatives % 2 === 0;
-  return legsThat(legs, theory, isSpinor) > 0 || (derivatives + indices) % 2 === 0;
 }
 
 interface Derivatives {
@@ -144,6 +129,13 @@ function writtenAs(legs: HalfEdges, { space, time }: Derivatives, theory: Theory
   return squared?.rowId ?? null;
 }
 
+/** Two legs of one field and a coefficient of dimension 0: the kinetic term that the field's kind supposes. */
+function isKinetic(legs: HalfEdges, coefficient: LinearForm, theory: Theory): boolean {
+  const alone = theory.fields.findIndex((_, f) => countOf(legs, f) === 2);
+  const neutral = netOf(legs, theory).every((net) => net === 0);
+  return totalOf(legs) === 2 && alone >= 0 && neutral && coefficient.equals(LinearForm.zero);
+}
+
 /** @param omega a number; for ω < 0 there are none. Highest derivative first. */
 export function countertermsOf(
   omega: Rational,
@@ -182,6 +174,7 @@ export function countertermsOf(
       dimension: shown(dimension),
       coefficient: shown(coefficient),
       order: shown(order && order.sign() < 0 ? order.negated() : Rational.zero),
+      kinetic: isKinetic(legs, coefficient, theory),
       presentAs: writtenAs(legs, derivatives, theory),
       allowed,
       gauge: gaugeStatus(legs, space, theory),

@@ -42,6 +42,8 @@ export interface Counterterm {
   readonly coefficient: Exact;
   /** Order in 1/Λ at which its coefficient enters naturally: max(0, Δ − measure). */
   readonly order: Exact;
+  /** The field's own kinetic term, which its kind supposes: a field renormalisation, written down or not. */
+  readonly kinetic: boolean;
   /** Row id of the premises' term of the same fields and derivatives; null when nobody wrote it down. */
   readonly presentAs: string | null;
   /** False when a symmetry of the premises forbids it. */

@@ -2,7 +2,7 @@
 import { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
 import type { Term, Theory } from "../premises/theory.ts";
-import { addHalfEdges, halfEdgesOf, noHalfEdges, totalOf, type HalfEdges } from "./half-edges.ts";
+import { addHalfEdges, countOf, halfEdgesOf, noHalfEdges, totalOf, type HalfEdges } from "./half-edges.ts";
 
 export interface Interaction {
   readonly term: Term;
@@ -27,6 +27,8 @@ export interface VertexSet {
   /** Σ V [g]: what the vertices take from the degree. */
   readonly coefficients: Rational;
   readonly order: Rational;
+  /** The order as text, to find sets of equal order by. */
+  readonly orderKey: string;
 }
 
 /** Interactions as they stand, for any dimension: what is neither kinetic nor a source. */
@@ -67,6 +69,7 @@ export function vertexSets(
     surplus: 0,
     coefficients: Rational.zero,
     order: Rational.zero,
+    orderKey: "0",
   };
   let sets: VertexSet[] = [empty];
   for (const interaction of interactions) {
@@ -87,13 +90,42 @@ export function vertexSets(
 /** Terminates above because an interaction costs either legs or order: bilinears with [g] ≥ 0 are not among them. */
 function insert(set: VertexSet, interaction: Interaction, count: number): VertexSet {
   const times = Rational.of(count);
+  const order = set.order.plus(interaction.order.times(times));
   return {
     vertices: [...set.vertices, { interaction, edges: interaction.edges, count }],
     edges: addHalfEdges(set.edges, interaction.edges, count),
     surplus: set.surplus + count * (interaction.legs - 2),
     coefficients: set.coefficients.plus(interaction.coefficient.times(times)),
-    order: set.order.plus(interaction.order.times(times)),
+    order,
+    orderKey: order.toString(),
   };
+}
+
+/** Vertex sets by what a graph fixes about them: Σ V (n − 2), and whether each field has an even number of legs. */
+export interface SetIndex {
+  /** Those from which L loops and the given legs can be made, as far as numbers go; least taken from the degree first. */
+  find(loops: number, legs: HalfEdges): readonly VertexSet[];
+}
+
+export function indexSets(sets: readonly VertexSet[]): SetIndex {
+  const keyOf = (surplus: number, edges: HalfEdges) =>
+    `${surplus}|${edges.plain.map((_, f) => countOf(edges, f) % 2).join("")}`;
+  // Of sets with the same legs and order only the one that takes least from the degree can matter.
+  const strongest = new Map<string, VertexSet>();
+  for (const set of sets) {
+    const key = `${set.edges.plain.join(",")}|${set.edges.conjugate.join(",")}|${set.surplus}|${set.orderKey}`;
+    const rival = strongest.get(key);
+    if (!rival || set.coefficients.compare(rival.coefficients) < 0) strongest.set(key, set);
+  }
+  const groups = new Map<string, VertexSet[]>();
+  for (const set of strongest.values()) {
+    const key = keyOf(set.surplus, set.edges);
+    const group = groups.get(key);
+    if (group) group.push(set);
+    else groups.set(key, [set]);
+  }
+  for (const group of groups.values()) group.sort((a, b) => a.coefficients.compare(b.coefficients));
+  return { find: (loops, legs) => groups.get(keyOf(2 * (loops - 1) + totalOf(legs), legs)) ?? [] };
 }
 
 /** A number as a linear form, for weights that must be numbers here. */

@@ -10,7 +10,7 @@ import { countOf } from "./half-edges.ts";
 import type { DivergenceInputs } from "./inputs.ts";
 import { renormalisability } from "./theory-verdict.ts";
 import type { Amplitude, Counterterm, TheoryDivergence } from "./value.ts";
-import { interactionTerms, interactionsOf, vertexSets, type VertexSet } from "./vertex-sets.ts";
+import { indexSets, interactionTerms, interactionsOf, vertexSets } from "./vertex-sets.ts";
 import { explainTheory } from "./working-theory.ts";
 
 const MOST_LOOPS = 6;
@@ -96,26 +96,24 @@ function listAmplitudes(theory: Theory, caps: Caps, useSymmetries: boolean): Amp
   const interacts = (field: number) => interactions.some(({ edges }) => countOf(edges, field) > 0);
   const choices = legChoices(theory, caps.legs, MOST_LEG_CHOICES, interacts);
   if (!sets || !choices) return "too many";
-  const bySurplus = groupBySurplus(sets);
-  const found = choices.flatMap((legs) => amplitudeOf(legs, bySurplus, caps, theory, useSymmetries) ?? []);
+  const index = indexSets(sets);
+  const found = choices.flatMap((legs) => amplitudeOf(legs, index, caps, theory, useSymmetries) ?? []);
   const rank = ({ status }: Amplitude) => (status === "divergent" ? 0 : 1);
   return found.sort((a, b) => rank(a) - rank(b) || a.legs.total - b.legs.total);
 }
 
-/** By Σ V (n − 2), which legs and loops fix; those that take least from the degree first. */
-function groupBySurplus(sets: readonly VertexSet[]): Map<number, VertexSet[]> {
-  const groups = new Map<number, VertexSet[]>();
-  for (const set of sets) groups.set(set.surplus, [...(groups.get(set.surplus) ?? []), set]);
-  for (const group of groups.values()) group.sort((a, b) => a.coefficients.compare(b.coefficients));
-  return groups;
-}
-
-/** Each operator once, by rising order: not the vacuum energy, and nothing that symmetry or gauge invariance excludes. */
+/**
+ * Each operator once, by rising order: not the vacuum energy or a field renormalisation, and nothing that symmetry or
+ * gauge invariance excludes.
+ */
 function missingFrom(amplitudes: readonly Amplitude[]): Counterterm[] {
   const wanted = amplitudes
     .filter(({ legs }) => legs.total > 0)
     .flatMap(({ counterterms }) => counterterms)
-    .filter(({ presentAs, allowed, gauge }) => presentAs === null && allowed && gauge !== "excluded");
+    .filter(
+      ({ presentAs, allowed, gauge, kinetic }) =>
+        presentAs === null && allowed && !kinetic && gauge !== "excluded",
+    );
   const orderOf = ({ order }: Counterterm) => Rational.parse(order.text) ?? Rational.zero;
   return wanted.sort((a, b) => orderOf(a).compare(orderOf(b)));
 }
@@ -169,7 +167,7 @@ function scalarsOf(value: TheoryDivergence): Scalar[] {
     },
     ...divergent.map(({ legs, omega }): Scalar => ({
       id: `${legs.key}/omega`,
-      label: `degree of divergence of ${legs.latex === "1" ? "the vacuum" : `$${legs.latex}$`}`,
+      label: `largest degree of divergence within the caps of ${legs.latex === "1" ? "the vacuum" : `$${legs.latex}$`}`,
       value: { type: "exact", text: omega.text },
     })),
   ];

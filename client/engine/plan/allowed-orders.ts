@@ -2,7 +2,7 @@
 import { Rational } from "../exact/rational.ts";
 import type { Theory } from "../premises/theory.ts";
 import { legChoices } from "../divergence/amplitudes.ts";
-import { contracts } from "../divergence/counterterms.ts";
+import { contracts } from "../divergence/contraction.ts";
 import { totalOf, weigh } from "../divergence/half-edges.ts";
 import { forbiddingSymmetry, isFermionOdd } from "../divergence/selection.ts";
 
@@ -22,7 +22,8 @@ export function commonStep(a: Rational, b: Rational): Rational {
 /**
  * Greatest step that reaches every order in (0, 4] at which an operator exists that symmetries, fermion parity and
  * contraction of indices allow: 2 for scalars with φ → −φ in d = 4, 1 as soon as spinors can flip chirality.
- * Operators that equations of motion make redundant are counted: at worst the step comes out too small, never too large.
+ * Bilinear operators are not counted, as equations of motion turn them into kinetic and mass terms; other redundant
+ * ones are: at worst the step comes out too small, never too large.
  *
  * @returns null when there are none, or too many fields to look through.
  */
@@ -42,7 +43,7 @@ export function stepOfOrders(theory: Theory): Rational | null {
   if (!choices) return null;
   let step = Rational.zero;
   for (const legs of choices) {
-    if (totalOf(legs) < 2 || isFermionOdd(legs, theory) || forbiddingSymmetry(legs, theory)) continue;
+    if (totalOf(legs) < 3 || isFermionOdd(legs, theory) || forbiddingSymmetry(legs, theory)) continue;
     const fields = weigh(legs, theory, ({ dimension }) => dimension).asRational() ?? highest;
     for (let inTime = 0; inTime === 0 || (time && inTime <= HIGHEST_LOOKED_AT); inTime += 1) {
       for (let space = 0; ; space += 1) {
