@@ -7,7 +7,6 @@ import {
   evaluateNotebook,
   kindDescriptions,
   schemaOf,
-  type BlockInputs,
   type BlockInstance,
   type EvaluateOptions,
 } from "#engine/index.ts";
@@ -57,7 +56,7 @@ export function evaluateFile(
       id: block.id,
       kind: block.kind,
       standsOn: block.standsOn ?? null,
-      inputs: inputs.data as unknown as BlockInputs, // the schema of the kind's shape has just made them so
+      inputs: inputs.data,
       title: "",
       problems: [],
     });

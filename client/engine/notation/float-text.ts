@@ -29,13 +29,11 @@ function plainOf({ digits, exponent }: Decimal): string {
   return part === "" ? whole : `${whole}.${part}`;
 }
 
-const raised = new Map(
-  [..."-0123456789"].map((character, index) => [character, [..."⁻⁰¹²³⁴⁵⁶⁷⁸⁹"][index] ?? ""]),
-);
+const raised = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 
 /** @example superscript("-4") // "⁻⁴" */
 export function superscript(integer: string): string {
-  return [...integer].map((character) => raised.get(character) ?? character).join("");
+  return integer.replace("-", "⁻").replace(/\d/g, (digit) => raised.charAt(Number(digit)));
 }
 
 function powerOfTen(exponent: number, markup: Markup): string {

@@ -85,7 +85,7 @@ function find(at: OrderEstimate, method: Method, omitted: Omitted, degree: strin
 }
 /** "± 0.045 pb", with what the uncertainty of Q does to it. */
 function result(band: Band, unit: string): string {
-  const moves = band.fromQ > 0 ? `\\quad (${"\\pm"} ${measured(band.fromQ, unit)} \\text{ from } Q)` : "";
+  const moves = band.fromQ > 0 ? `\\quad (\\pm ${measured(band.fromQ, unit)} \\text{ from } Q)` : "";
   return `${measured(band.halfWidth, unit)}${moves}`;
 }
 

@@ -13,7 +13,7 @@ export type ByOrder = Readonly<Record<number, string | number | null>>;
 export function blockInputs(orders: ByOrder, fields: Partial<Fields> = {}): TruncationInputs {
   const initial = Object.fromEntries(
     Object.entries(truncationError.shape.fields).map(([name, spec]) => [name, spec.initial]),
-  ) as unknown as Fields;
+  ) as Fields;
   return {
     ...initial,
     ...fields,
@@ -23,7 +23,7 @@ export function blockInputs(orders: ByOrder, fields: Partial<Fields> = {}): Trun
       value: value === null ? "" : String(value),
       name: "",
     })),
-  } as TruncationInputs;
+  };
 }
 
 export function evaluateBlock(
