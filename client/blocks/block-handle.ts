@@ -6,8 +6,7 @@ import { createContext, useContext, useSyncExternalStore } from "react";
 
 /** A single field, or one column of one row. */
 export type FieldPlace =
-  | { readonly field: string }
-  | { readonly table: string; readonly rowId: string; readonly column: string };
+  { readonly field: string } | { readonly table: string; readonly rowId: string; readonly column: string };
 
 export interface Colleague {
   readonly name: string;

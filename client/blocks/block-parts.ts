@@ -22,12 +22,17 @@ export interface BlockParts {
 }
 
 /** The registry holds kinds of different values side by side; each drawer is only ever given its own kind's value. */
-export function forKind<Value>(drawer: ComponentType<ResultProps<Value>>): ComponentType<ResultProps<unknown>> {
+export function forKind<Value>(
+  drawer: ComponentType<ResultProps<Value>>,
+): ComponentType<ResultProps<unknown>> {
   return drawer as ComponentType<ResultProps<unknown>>; // paired with its kind in registry.tsx
 }
 
 /** The value to draw: of the inputs as they are, or the last good one. */
-export function shownEvaluation(block: BlockHandle): { readonly evaluation: Evaluation | null; readonly stale: boolean } {
+export function shownEvaluation(block: BlockHandle): {
+  readonly evaluation: Evaluation | null;
+  readonly stale: boolean;
+} {
   if (block.evaluation?.value != null) return { evaluation: block.evaluation, stale: false };
   return { evaluation: block.lastGood, stale: block.lastGood !== null };
 }

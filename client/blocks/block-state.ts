@@ -7,12 +7,18 @@ export interface BlockState {
 }
 
 /** `late`: the computation has taken long enough to be worth a word. */
-export function stateOf({ evaluation, lastGood }: Pick<BlockHandle, "evaluation" | "lastGood">, late: boolean): BlockState {
+export function stateOf(
+  { evaluation, lastGood }: Pick<BlockHandle, "evaluation" | "lastGood">,
+  late: boolean,
+): BlockState {
   if (late || evaluation === null) return { words: "computing", tone: "computing" };
   const { value, problems } = evaluation;
   if (value === null) {
     return { words: lastGood ? "in error: shows its last good result" : "in error", tone: "error" };
   }
   if (problems.length === 0) return { words: "agrees", tone: "agrees" };
-  return { words: problems.length === 1 ? "agrees but for one entry" : `agrees but for ${problems.length} entries`, tone: "partly" };
+  return {
+    words: problems.length === 1 ? "agrees but for one entry" : `agrees but for ${problems.length} entries`,
+    tone: "partly",
+  };
 }

@@ -1,4 +1,12 @@
-import { Component, Suspense, useEffect, useState, type ErrorInfo, type KeyboardEvent, type ReactNode } from "react";
+import {
+  Component,
+  Suspense,
+  useEffect,
+  useState,
+  type ErrorInfo,
+  type KeyboardEvent,
+  type ReactNode,
+} from "react";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { classes } from "../ui/classes.ts";
 import { shownEvaluation } from "./block-parts.ts";
@@ -38,7 +46,13 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
       <header className="block-head">
         <h3 className="block-kind engraved">{title}</h3>
         <div className="block-title">
-          <TextField place={{ field: parts.titleField }} label={parts.titleHint} placeholder={parts.titleHint} notation={false} size={Math.max(6, Math.min(40, (name || parts.titleHint).length))} />
+          <TextField
+            place={{ field: parts.titleField }}
+            label={parts.titleHint}
+            placeholder={parts.titleHint}
+            notation={false}
+            size={Math.max(6, Math.min(40, (name || parts.titleHint).length))}
+          />
         </div>
         {parts.summary && value !== null && <span className="block-summary">{parts.summary(block)}</span>}
         <StandsOn />
@@ -46,10 +60,20 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
           <span className="block-tools">
             {onMove && (
               <>
-                <button type="button" className="block-link" aria-label={`move ${title} up`} onClick={() => onMove(-1)}>
+                <button
+                  type="button"
+                  className="block-link"
+                  aria-label={`move ${title} up`}
+                  onClick={() => onMove(-1)}
+                >
                   up
                 </button>
-                <button type="button" className="block-link" aria-label={`move ${title} down`} onClick={() => onMove(1)}>
+                <button
+                  type="button"
+                  className="block-link"
+                  aria-label={`move ${title} down`}
+                  onClick={() => onMove(1)}
+                >
                   down
                 </button>
               </>
@@ -70,7 +94,13 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
             <parts.Form />
           </div>
           {value !== null && (parts.Result || parts.Plot) && (
-            <div className={classes("block-outcome", stale && "block-outcome-stale", parts.Plot && "block-outcome-with-plot")}>
+            <div
+              className={classes(
+                "block-outcome",
+                stale && "block-outcome-stale",
+                parts.Plot && "block-outcome-with-plot",
+              )}
+            >
               {parts.Result && (
                 <div className="block-outcome-result">
                   <parts.Result value={value} stale={stale} />
@@ -138,7 +168,8 @@ class Guard extends Component<GuardProps, { readonly failedWith: unknown }> {
     console.error(`The block ${this.props.blockId} could not be drawn.`, error, info.componentStack);
   }
   override componentDidUpdate(before: GuardProps) {
-    if (before.inputs !== this.props.inputs && this.state.failedWith !== null) this.setState({ failedWith: null });
+    if (before.inputs !== this.props.inputs && this.state.failedWith !== null)
+      this.setState({ failedWith: null });
   }
   override render() {
     if (this.state.failedWith === null) return this.props.children;

@@ -10,13 +10,20 @@ export function StandsOn() {
   if (need === "none" || (premisesChoices.length === 0 && need === "optional")) return null;
   const chosen = premisesChoices.find(({ blockId }) => blockId === standsOn);
   if (readOnly || (premisesChoices.length === 1 && chosen)) {
-    return <span className="block-stands">{chosen ? `stands on ${nameOf(chosen)}` : "stands on no premises"}</span>;
+    return (
+      <span className="block-stands">{chosen ? `stands on ${nameOf(chosen)}` : "stands on no premises"}</span>
+    );
   }
   if (premisesChoices.length === 0) return <span className="block-stands">no premises to stand on</span>;
   return (
     <span className="block-stands">
       <label htmlFor={id}>stands on</label>{" "}
-      <select id={id} className="block-choice" value={chosen ? chosen.blockId : ""} onChange={(event) => setStandsOn(event.target.value)}>
+      <select
+        id={id}
+        className="block-choice"
+        value={chosen ? chosen.blockId : ""}
+        onChange={(event) => setStandsOn(event.target.value)}
+      >
         {!chosen && <option value="">{need === "optional" ? "no premises" : "choose premises"}</option>}
         {premisesChoices.map((choice) => (
           <option key={choice.blockId} value={choice.blockId}>

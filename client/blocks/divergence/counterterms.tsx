@@ -3,7 +3,13 @@ import { Formula } from "../../ui/math.tsx";
 import { ResultTable } from "../parts/result-table.tsx";
 
 /** Operators that a divergence demands: whether they stand in the premises, and at which order they enter. */
-export function Counterterms({ caption, counterterms }: { readonly caption: string; readonly counterterms: readonly Counterterm[] }) {
+export function Counterterms({
+  caption,
+  counterterms,
+}: {
+  readonly caption: string;
+  readonly counterterms: readonly Counterterm[];
+}) {
   return (
     <ResultTable<Counterterm>
       caption={caption}
@@ -14,7 +20,7 @@ export function Counterterms({ caption, counterterms }: { readonly caption: stri
       columns={[
         { heading: "operator", show: ({ latex }) => <Formula latex={latex} /> },
         { heading: "dimension", show: ({ dimension }) => <Formula latex={dimension.latex} /> },
-        { heading: "with masses to the", show: ({ massPower }) => <Formula latex={massPower.latex} /> },
+        { heading: "power of masses", show: ({ massPower }) => <Formula latex={massPower.latex} /> },
         { heading: "order in 1/Λ", show: ({ order }) => <Formula latex={order.latex} /> },
         { heading: "in the premises", show: (counterterm) => <Presence counterterm={counterterm} /> },
       ]}
@@ -22,10 +28,18 @@ export function Counterterms({ caption, counterterms }: { readonly caption: stri
   );
 }
 
-function Presence({ counterterm: { presentAs, allowed, analytic, gauge } }: { readonly counterterm: Counterterm }) {
+function Presence({
+  counterterm: { presentAs, allowed, analytic, gauge },
+}: {
+  readonly counterterm: Counterterm;
+}) {
   if (!allowed) return <>forbidden by symmetry</>;
   if (gauge === "excluded") return <>excluded by gauge invariance</>;
   if (!analytic) return <>no pole: a power of the cutoff only</>;
   if (presentAs !== null) return <span className="premises-allowed">present</span>;
-  return <strong className="divergence-missing">missing{gauge === "restricted" ? ", in gauge-invariant form" : ""}</strong>;
+  return (
+    <strong className="divergence-missing">
+      missing{gauge === "restricted" ? ", in gauge-invariant form" : ""}
+    </strong>
+  );
 }

@@ -23,9 +23,9 @@ export function DivergenceForm() {
         />
         {!oneGraph && (
           <>
-            <TextField place={{ field: "loops" }} label="most loops" showLabel size={4} />
-            <TextField place={{ field: "legs" }} label="most legs" showLabel size={4} />
-            <TextField place={{ field: "order" }} label="largest order in 1/Λ" showLabel size={4} />
+            <TextField place={{ field: "maxLoops" }} label="most loops" showLabel size={4} />
+            <TextField place={{ field: "maxLegs" }} label="most legs" showLabel size={4} />
+            <TextField place={{ field: "maxOrder" }} label="largest order in 1/Λ" showLabel size={4} />
           </>
         )}
       </div>
@@ -50,7 +50,11 @@ function GraphTables() {
         invitation="1"
         columns={[
           { column: "count", heading: "how many", size: 4, placeholder: "1" },
-          { column: "term", heading: "of the term", options: terms.map(({ rowId, latex }) => ({ value: rowId, label: plainLatex(latex) })) },
+          {
+            column: "term",
+            heading: "of the term",
+            options: terms.map(({ rowId, latex }) => ({ value: rowId, label: plainLatex(latex) })),
+          },
         ]}
       />
       <RowTable
@@ -64,7 +68,10 @@ function GraphTables() {
           {
             column: "field",
             heading: "of the field",
-            options: (premises?.fields ?? []).map(({ symbol, latex }) => ({ value: symbol, label: plainLatex(latex) })),
+            options: (premises?.fields ?? []).map(({ symbol, latex }) => ({
+              value: symbol,
+              label: plainLatex(latex),
+            })),
           },
           { column: "leg", heading: "as", options: ["field", "conjugate", "pair"] },
         ]}
@@ -74,9 +81,40 @@ function GraphTables() {
 }
 
 const letters: Readonly<Record<string, string>> = {
-  alpha: "α", beta: "β", gamma: "γ", delta: "δ", epsilon: "ε", varepsilon: "ε", zeta: "ζ", eta: "η", theta: "θ", kappa: "κ",
-  lambda: "λ", mu: "μ", nu: "ν", xi: "ξ", pi: "π", rho: "ρ", sigma: "σ", tau: "τ", phi: "φ", varphi: "φ", chi: "χ", psi: "ψ",
-  omega: "ω", Gamma: "Γ", Delta: "Δ", Theta: "Θ", Lambda: "Λ", Xi: "Ξ", Pi: "Π", Sigma: "Σ", Phi: "Φ", Psi: "Ψ", Omega: "Ω", partial: "∂",
+  alpha: "α",
+  beta: "β",
+  gamma: "γ",
+  delta: "δ",
+  epsilon: "ε",
+  varepsilon: "ε",
+  zeta: "ζ",
+  eta: "η",
+  theta: "θ",
+  kappa: "κ",
+  lambda: "λ",
+  mu: "μ",
+  nu: "ν",
+  xi: "ξ",
+  pi: "π",
+  rho: "ρ",
+  sigma: "σ",
+  tau: "τ",
+  phi: "φ",
+  varphi: "φ",
+  chi: "χ",
+  psi: "ψ",
+  omega: "ω",
+  Gamma: "Γ",
+  Delta: "Δ",
+  Theta: "Θ",
+  Lambda: "Λ",
+  Xi: "Ξ",
+  Pi: "Π",
+  Sigma: "Σ",
+  Phi: "Φ",
+  Psi: "Ψ",
+  Omega: "Ω",
+  partial: "∂",
 };
 
 /** A native list shows text only: the LaTeX as plain letters, "c₆/(6! Λ²) χ⁶" at its simplest. */
@@ -85,8 +123,12 @@ export function plainLatex(latex: string): string {
     .replace(/\\frac\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}/g, "$1/($2)")
     .replace(/\\bar\{([^{}]*)\}/g, "$1̄")
     .replace(/\\([A-Za-z]+)/g, (_, name: string) => letters[name] ?? "")
-    .replace(/\^\{?(\d+)\}?/g, (_, digits: string) => [...digits].map((digit) => "⁰¹²³⁴⁵⁶⁷⁸⁹".charAt(Number(digit))).join(""))
-    .replace(/_\{?(\d+)\}?/g, (_, digits: string) => [...digits].map((digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))).join(""))
+    .replace(/\^\{?(\d+)\}?/g, (_, digits: string) =>
+      [...digits].map((digit) => "⁰¹²³⁴⁵⁶⁷⁸⁹".charAt(Number(digit))).join(""),
+    )
+    .replace(/_\{?(\d+)\}?/g, (_, digits: string) =>
+      [...digits].map((digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))).join(""),
+    )
     .replace(/\\[,;!: ]|~/g, " ")
     .replace(/[{}]/g, "")
     .replace(/\s+/g, " ")

@@ -69,7 +69,9 @@ export function GraphResult({ value }: { readonly value: GraphDivergence }) {
           )}
         </dd>
       </dl>
-      {counterterms.length > 0 && <Counterterms caption="Counterterms it demands" counterterms={counterterms} />}
+      {counterterms.length > 0 && (
+        <Counterterms caption="Counterterms it demands" counterterms={counterterms} />
+      )}
     </>
   );
 }
@@ -91,8 +93,12 @@ function verdictWords({ verdict }: GraphDivergence): string {
 
 /** ω = d L − Σ I (d − 2δ) + Σ V k, with this graph's numbers. */
 function byLines({ loops, lines, vertices, omega }: GraphDivergence): string {
-  const inner = lines.filter(({ count }) => count > 0).map(({ count, weight, latex }) => `${count}\\,(d - 2\\cdot ${bracketed(weight.latex)})_{${latex}}`);
-  const derivatives = vertices.filter(({ derivatives: { text } }) => text !== "0").map(({ count, derivatives }) => `${count}\\cdot ${bracketed(derivatives.latex)}`);
+  const inner = lines
+    .filter(({ count }) => count > 0)
+    .map(({ count, weight, latex }) => `${count}\\,(d - 2\\cdot ${bracketed(weight.latex)})_{${latex}}`);
+  const derivatives = vertices
+    .filter(({ derivatives: { text } }) => text !== "0")
+    .map(({ count, derivatives }) => `${count}\\cdot ${bracketed(derivatives.latex)}`);
   const minus = inner.length === 0 ? "" : ` - ${inner.join(" - ")}`;
   const plus = derivatives.length === 0 ? "" : ` + ${derivatives.join(" + ")}`;
   return `\\omega = d\\cdot ${loops}${minus}${plus} = ${omega.latex}`;
@@ -105,7 +111,9 @@ function byVertices({ legs, lines, vertices, omega }: GraphDivergence): string {
     const weight = weightOf.get(fieldRowId);
     return weight === undefined ? [] : [` - ${count + conjugateCount}\\cdot ${bracketed(weight)}`];
   });
-  const couplings = vertices.map(({ count, coefficient }) => ` - ${count}\\cdot ${bracketed(coefficient.latex)}`);
+  const couplings = vertices.map(
+    ({ count, coefficient }) => ` - ${count}\\cdot ${bracketed(coefficient.latex)}`,
+  );
   return `\\omega = d${outer.join("")}${couplings.join("")} = ${omega.latex}`;
 }
 

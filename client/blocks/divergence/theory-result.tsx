@@ -43,7 +43,10 @@ export function TheoryResult({ value }: { readonly value: TheoryDivergence }) {
           keyOf={({ legs }) => legs.key}
           toneOf={({ status }) => (status === "divergent" ? null : "left-out")}
           columns={[
-            { heading: "legs", show: ({ legs }) => (legs.total === 0 ? "vacuum" : <Formula latex={legs.latex} />) },
+            {
+              heading: "legs",
+              show: ({ legs }) => (legs.total === 0 ? "vacuum" : <Formula latex={legs.latex} />),
+            },
             {
               heading: "largest ω",
               show: ({ legs, omega }) => (
@@ -52,10 +55,20 @@ export function TheoryResult({ value }: { readonly value: TheoryDivergence }) {
                 </Figure>
               ),
             },
-            { heading: "", show: ({ status, verdict: kind, forbiddenBy }) => (status === "divergent" ? kind : forbiddenBy ? `forbidden by ${forbiddenBy}` : status) },
+            {
+              heading: "",
+              show: ({ status, verdict: kind, forbiddenBy }) =>
+                status === "divergent" ? kind : forbiddenBy ? `forbidden by ${forbiddenBy}` : status,
+            },
             {
               heading: "at orders in 1/Λ",
-              show: ({ atOrders }) => atOrders.map(({ order, omega, loops }) => `${order.text}: ω = ${omega.text} from ${loops} ${loops === 1 ? "loop" : "loops"}`).join("; "),
+              show: ({ atOrders }) =>
+                atOrders
+                  .map(
+                    ({ order, omega, loops }) =>
+                      `${order.text}: ω = ${omega.text} from ${loops} ${loops === 1 ? "loop" : "loops"}`,
+                  )
+                  .join("; "),
             },
           ]}
         />
@@ -63,7 +76,9 @@ export function TheoryResult({ value }: { readonly value: TheoryDivergence }) {
       {missing.length > 0 ? (
         <Counterterms caption="Counterterms the premises lack" counterterms={missing} />
       ) : (
-        amplitudes.length > 0 && <p className="block-line">Every counterterm within these caps is among the premises.</p>
+        amplitudes.length > 0 && (
+          <p className="block-line">Every counterterm within these caps is among the premises.</p>
+        )
       )}
     </>
   );

@@ -15,8 +15,20 @@ export function OrderPlanForm() {
           { value: "rate without interference", label: "a rate, without interference" },
         ]}
       />
-      <TextField place={{ field: "probe" }} label="probe scale" showLabel size={10} placeholder="as in premises" />
-      <TextField place={{ field: "heavy" }} label="heavy scale" showLabel size={10} placeholder="as in premises" />
+      <TextField
+        place={{ field: "probe" }}
+        label="probe scale"
+        showLabel
+        size={10}
+        placeholder="as in premises"
+      />
+      <TextField
+        place={{ field: "heavy" }}
+        label="heavy scale"
+        showLabel
+        size={10}
+        placeholder="as in premises"
+      />
       <TextField place={{ field: "insertions" }} label="most insertions" showLabel size={4} />
       <TextField place={{ field: "cap" }} label="orders up to" showLabel size={4} />
       <ChoiceField

@@ -2,6 +2,7 @@ import type { OrderPlanValue } from "#engine/plan/value.ts";
 import type { ResultProps } from "../block-parts.ts";
 import { sizeText, withUnit } from "../parts/number-text.ts";
 import { Plot, type Curve } from "../parts/plot.tsx";
+import { plain, powerOf } from "../parts/plot-scales.ts";
 
 /** What is left out against the probe scale, one curve for each order one might stop at; the target is the hairline. */
 export function OrderPlanPlot({ value }: ResultProps<OrderPlanValue>) {
@@ -9,8 +10,10 @@ export function OrderPlanPlot({ value }: ResultProps<OrderPlanValue>) {
   const curves = value.curves
     .map((curve, index): Curve => ({
       key: curve.order.text,
-      label: `to Q^${curve.order.text}`,
-      points: curve.points.filter(({ leftOut }) => leftOut > 0).map(({ probe: at, leftOut }) => [at, leftOut] as const),
+      label: powerOf("Q", curve.order.text),
+      points: curve.points
+        .filter(({ leftOut }) => leftOut > 0)
+        .map(({ probe: at, leftOut }) => [at, leftOut] as const),
       style: index,
       color: curve.order.text === order?.text ? "ink" : "irrelevant",
     }))
@@ -22,13 +25,18 @@ export function OrderPlanPlot({ value }: ResultProps<OrderPlanValue>) {
   const lowest = Math.max(Math.min(...lefts), Math.min(target, probe.value > 0 ? 1 : target) * 1e-4, 1e-12);
   return (
     <Plot
-      name={`What is left out against the probe scale, for each order to stop at; the target is ${sizeText(target, 3)}`}
+      name={`What is left out against the probe scale, for each order to stop at; the target is ${plain(target)}`}
       x={{ kind: "log", label: `probe scale p${unit}`, domain: [Math.min(...scales), Math.max(...scales)] }}
       y={{ kind: "log", label: "left out", domain: [lowest, Math.max(1, Math.min(10, Math.max(...lefts)))] }}
       curves={curves}
       guides={[
         { axis: "y", value: target, label: "target", color: "hairline" },
-        { axis: "x", value: probe.value, label: withUnit(sizeText(probe.value, 3), probe.unit), color: "ink" },
+        {
+          axis: "x",
+          value: probe.value,
+          label: withUnit(sizeText(probe.value, 3), probe.unit),
+          color: "ink",
+        },
       ]}
       table={{ x: `p${unit}` }}
     />

@@ -4,6 +4,7 @@ import type { ResultProps } from "../block-parts.ts";
 import { Decimal, decimalWidths } from "../parts/decimal.tsx";
 import { Figure } from "../parts/figure.tsx";
 import { sizeText, withUnit } from "../parts/number-text.ts";
+import { plain } from "../parts/plot-scales.ts";
 import { ResultTable } from "../parts/result-table.tsx";
 import { Shifts } from "./shifts.tsx";
 
@@ -33,8 +34,16 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
             ),
           },
           { heading: "contains", show: (order) => <Entries order={order} /> },
-          { heading: "sum", numeric: true, show: ({ sum }) => <Decimal text={sizeText(sum)} widths={sums} /> },
-          { heading: "left out beyond", numeric: true, show: ({ leftOut }) => <Decimal text={sizeText(leftOut.used)} widths={lefts} /> },
+          {
+            heading: "sum",
+            numeric: true,
+            show: ({ sum }) => <Decimal text={sizeText(sum)} widths={sums} />,
+          },
+          {
+            heading: "left out beyond",
+            numeric: true,
+            show: ({ leftOut }) => <Decimal text={sizeText(leftOut.used)} widths={lefts} />,
+          },
           { heading: "loops", numeric: true, show: ({ loops }) => loopsWords(loops) },
           {
             heading: (
@@ -43,7 +52,8 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
               </>
             ),
             numeric: true,
-            show: ({ largestProbe, largestProbeIsHeavy }) => `${withUnit(sizeText(largestProbe, 3), probe.unit)}${largestProbeIsHeavy ? " (Λ)" : ""}`,
+            show: ({ largestProbe, largestProbeIsHeavy }) =>
+              `${withUnit(sizeText(largestProbe, 3), probe.unit)}${largestProbeIsHeavy ? " (Λ)" : ""}`,
           },
         ]}
       />
@@ -51,12 +61,14 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
         First left out:{" "}
         {firstOut ? (
           <>
-            <Formula latex={firstOut.latex} />, of order <Formula latex={`Q^{${firstOut.order[0]?.latex ?? ""}}`} />, size{" "}
+            <Formula latex={firstOut.latex} />, of order{" "}
+            <Formula latex={`Q^{${firstOut.order[0]?.latex ?? ""}}`} />, size{" "}
             <Figure scalar="first-out/size">{sizeText(firstOut.size)}</Figure>
           </>
         ) : (
           <>
-            nothing that is listed; unlisted terms begin at <Formula latex={`Q^{${firstUnlisted.order.latex}}`} />, natural size{" "}
+            nothing that is listed; unlisted terms begin at{" "}
+            <Formula latex={`Q^{${firstUnlisted.order.latex}}`} />, natural size{" "}
             <Figure scalar="first-out/size">{sizeText(firstUnlisted.size)}</Figure>
           </>
         )}
@@ -76,12 +88,13 @@ function Decision({ value }: { readonly value: OrderPlanValue }) {
     <>
       {Q && (
         <>
-          With <Formula latex={Q.latex === "Q" ? "Q" : `Q = ${Q.latex}`} /> = <Figure scalar="Q">{sizeText(Q.value, 3)}</Figure>,{" "}
+          With <Formula latex={Q.latex === "Q" ? "Q" : `Q = ${Q.latex}`} /> ={" "}
+          <Figure scalar="Q">{sizeText(Q.value, 3)}</Figure>,{" "}
         </>
       )}
       {order ? (
         <>
-          a target of {sizeText(target, 3)} on the {what} is met at order{" "}
+          a target of {plain(target)} on the {what} is met at order{" "}
           <strong>
             <Figure scalar="order">{order.text}</Figure>
           </strong>
@@ -91,8 +104,9 @@ function Decision({ value }: { readonly value: OrderPlanValue }) {
         </>
       ) : (
         <>
-          a target of {sizeText(target, 3)} on the {what} is <strong className="divergence-missing">not reached</strong> by these
-          terms: {left} is left out at the highest order.
+          a target of {plain(target)} on the {what} is{" "}
+          <strong className="divergence-missing">not reached</strong> by these terms: {left} is left out at
+          the highest order.
         </>
       )}
     </>

@@ -27,7 +27,11 @@ export function Shifts({ value }: { readonly value: OrderPlanValue }) {
               { heading: "at", show: ({ what }) => <Formula latex={names[what]} /> },
               { heading: "Q", numeric: true, show: ({ Q }) => sizeText(Q, 3) },
               { heading: "stop at", show: ({ order }) => order?.text ?? "not reached" },
-              { heading: "left out", numeric: true, show: ({ leftOut }) => (leftOut === null ? "–" : sizeText(leftOut)) },
+              {
+                heading: "left out",
+                numeric: true,
+                show: ({ leftOut }) => (leftOut === null ? "–" : sizeText(leftOut)),
+              },
             ]}
           />
         )}
@@ -38,10 +42,18 @@ export function Shifts({ value }: { readonly value: OrderPlanValue }) {
             rows={probeTable}
             keyOf={({ probe: at }) => String(at)}
             columns={[
-              { heading: <Formula latex={probe.latex} />, numeric: true, show: ({ probe: at }) => withUnit(sizeText(at, 3), probe.unit) },
+              {
+                heading: <Formula latex={probe.latex} />,
+                numeric: true,
+                show: ({ probe: at }) => withUnit(sizeText(at, 3), probe.unit),
+              },
               { heading: "Q", numeric: true, show: ({ Q }) => sizeText(Q, 3) },
               { heading: "stop at", show: ({ order }) => order?.text ?? "not reached" },
-              { heading: "left out", numeric: true, show: ({ leftOut }) => (leftOut === null ? "–" : sizeText(leftOut)) },
+              {
+                heading: "left out",
+                numeric: true,
+                show: ({ leftOut }) => (leftOut === null ? "–" : sizeText(leftOut)),
+              },
             ]}
           />
         )}

@@ -23,7 +23,9 @@ export function ChoiceField({ place, label, showLabel = false, options, hint }: 
   const problems = useProblemsAt(place);
   const id = useId();
   const value = valueAt(block, place);
-  const known = options.map((option) => (typeof option === "string" ? { value: option, label: option } : option));
+  const known = options.map((option) =>
+    typeof option === "string" ? { value: option, label: option } : option,
+  );
   const shown = known.find((option) => option.value === value);
   const described = [hint && `${id}-hint`, problems.length > 0 && `${id}-problems`].filter(Boolean).join(" ");
   return (

@@ -7,7 +7,13 @@ const shapes: Readonly<Record<ScalingClass, string>> = {
 };
 
 /** A class by shape and colour and word, so that none of them is needed to tell the others apart. */
-export function ClassMark({ scalingClass, word = true }: { readonly scalingClass: ScalingClass; readonly word?: boolean }) {
+export function ClassMark({
+  scalingClass,
+  word = true,
+}: {
+  readonly scalingClass: ScalingClass;
+  readonly word?: boolean;
+}) {
   return (
     <span className={`block-class block-class-${scalingClass}`}>
       <svg width="10" height="10" viewBox="0 0 10 10" aria-hidden="true" focusable="false">

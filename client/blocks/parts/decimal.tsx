@@ -10,11 +10,20 @@ export function splitDecimal(text: string): readonly [before: string, after: str
 /** Widths that make a column of numbers stand on its decimal mark, in digits. */
 export function decimalWidths(texts: readonly string[]): readonly [before: number, after: number] {
   const parts = texts.map(splitDecimal);
-  return [Math.max(0, ...parts.map(([before]) => before.length)), Math.max(0, ...parts.map(([, after]) => after.length))];
+  return [
+    Math.max(0, ...parts.map(([before]) => before.length)),
+    Math.max(0, ...parts.map(([, after]) => after.length)),
+  ];
 }
 
 /** One number of a column that stands on its decimal mark. Digits of the face are equally wide. */
-export function Decimal({ text, widths }: { readonly text: string; readonly widths: readonly [number, number] }) {
+export function Decimal({
+  text,
+  widths,
+}: {
+  readonly text: string;
+  readonly widths: readonly [number, number];
+}) {
   const [before, after] = splitDecimal(text);
   // Custom properties are no members of React's type for styles.
   const style = { "--before": `${widths[0]}ch`, "--after": `${widths[1]}ch` } as CSSProperties;

@@ -1,5 +1,6 @@
 import { useState } from "react";
 import type { ColumnSpec } from "./row-table.tsx";
+import { sizeStyle } from "./size-style.ts";
 
 interface Props {
   readonly noun: string;
@@ -18,18 +19,24 @@ export function NewRow({ noun, columns, resultCount, invitation, onBegin, onPast
   return (
     <tr className="block-new-row">
       <td className="block-handle-column" />
-      {columns.map(({ column, heading, options, placeholder, size }, index) => (
+      {columns.map(({ column, heading, options, size }, index) => (
         <td key={column}>
           {!options && (
             <input
               type="text"
               className="block-input block-notation"
               aria-label={`${heading} of a new ${noun}`}
-              placeholder={index === 0 ? (invitation ?? placeholder ?? `new ${noun}`) : undefined}
+              placeholder={
+                index === 0
+                  ? invitation === undefined
+                    ? `new ${noun}`
+                    : `first ${noun}: ${invitation}`
+                  : undefined
+              }
               autoComplete="off"
               autoCapitalize="off"
               spellCheck={false}
-              size={invitation !== undefined && index === 0 ? Math.max(size ?? 8, invitation.length) : (size ?? 8)}
+              style={sizeStyle(size)}
               value={composing}
               onChange={(event) => {
                 const { isComposing } = event.nativeEvent as InputEvent; // React types it as an Event

@@ -12,7 +12,10 @@ export function withUnit(text: string, unit: string): string {
 
 /** As many digits after the mark as make `resolution` two digits: 8.0312 with an error of 0.048 is "8.031". */
 export function textTo(value: number, resolution: number, unit = ""): string {
-  const places = resolution > 0 && Number.isFinite(resolution) ? Math.min(12, Math.max(0, 1 - Math.floor(Math.log10(resolution)))) : 3;
+  const places =
+    resolution > 0 && Number.isFinite(resolution)
+      ? Math.min(12, Math.max(0, 1 - Math.floor(Math.log10(resolution))))
+      : 3;
   const size = Math.abs(value);
   if (size !== 0 && (size < 1e-3 || size >= 1e6)) return withUnit(sizeText(value, 3), unit);
   return withUnit(value.toFixed(places).replace(/^-/, "−"), unit);

@@ -1,5 +1,6 @@
 /** Axes: a position for a number, ticks worth a label, and labels as people write them. */
 import { scaleLinear, scaleLog } from "d3-scale";
+import { superscript } from "#engine/notation/float-text.ts";
 
 export interface AxisSpec {
   readonly label: string;
@@ -42,7 +43,8 @@ function logTicks([low, high]: readonly [number, number], count: number): Axis["
   for (let power = Math.floor(Math.log10(low)); power <= Math.ceil(Math.log10(high)); power++) {
     for (const digit of [1, 2, 3, 5]) {
       const value = digit * 10 ** power;
-      if (value >= low * (1 - 1e-9) && value <= high * (1 + 1e-9)) ticks.push({ value, label: plain(value), major: true });
+      if (value >= low * (1 - 1e-9) && value <= high * (1 + 1e-9))
+        ticks.push({ value, label: plain(value), major: true });
     }
   }
   return thinned(ticks, count);
@@ -53,11 +55,14 @@ function thinned(ticks: Axis["ticks"], count: number): Axis["ticks"] {
   return ticks.map((tick, index) => (index % step === 0 ? tick : { ...tick, label: "" }));
 }
 
-const raised = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 /** "10⁻³". */
 export function tenTo(power: number): string {
-  const digits = [...String(Math.abs(power))].map((digit) => raised.charAt(Number(digit))).join("");
-  return `10${power < 0 ? "⁻" : ""}${digits}`;
+  return `10${superscript(String(power))}`;
+}
+
+/** "Q³", "Q^(3/2)". */
+export function powerOf(symbol: string, exponent: string): string {
+  return /^-?\d+$/.test(exponent) ? symbol + superscript(exponent) : `${symbol}^(${exponent})`;
 }
 
 /** A number as a label: short, with a power of ten where zeros would pile up. */

@@ -61,7 +61,12 @@ export function Plot({ name, x: xSpec, y: ySpec, curves, guides = [], below, tab
         <g clipPath={`url(#${clip})`}>
           {below?.(x, y)}
           {curves.map(({ key, points, style, color }) => (
-            <path key={key} d={draw([...points]) ?? ""} className={`plot-curve plot-${color}`} strokeDasharray={dashOf(style)} />
+            <path
+              key={key}
+              d={draw([...points]) ?? ""}
+              className={`plot-curve plot-${color}`}
+              strokeDasharray={dashOf(style)}
+            />
           ))}
           {guides.map(({ axis, value, color, label }) => (
             <line
@@ -76,11 +81,21 @@ export function Plot({ name, x: xSpec, y: ySpec, curves, guides = [], below, tab
         <EndLabels curves={curves} x={x} y={y} />
         {guides.map(({ axis, value, label, color }) =>
           axis === "x" ? (
-            <text key={label} className={`plot-guide-label plot-text-${color}`} x={x.position(value) + 3} y={top + 8}>
+            <text
+              key={label}
+              className={`plot-guide-label plot-text-${color}`}
+              x={x.position(value) + 3}
+              y={top + 8}
+            >
               {label}
             </text>
           ) : (
-            <text key={label} className={`plot-guide-label plot-text-${color}`} x={left + 4} y={y.position(value) - 3}>
+            <text
+              key={label}
+              className={`plot-guide-label plot-text-${color}`}
+              x={left + 4}
+              y={y.position(value) - 3}
+            >
               {label}
             </text>
           ),
@@ -94,14 +109,32 @@ export function Plot({ name, x: xSpec, y: ySpec, curves, guides = [], below, tab
   );
 }
 
-function Axes({ x, y, xLabel, yLabel }: { readonly x: Axis; readonly y: Axis; readonly xLabel: string; readonly yLabel: string }) {
+function Axes({
+  x,
+  y,
+  xLabel,
+  yLabel,
+}: {
+  readonly x: Axis;
+  readonly y: Axis;
+  readonly xLabel: string;
+  readonly yLabel: string;
+}) {
   const { width, height, left, right, top, bottom } = plotFrame;
   const floor = height - bottom;
   return (
     <g aria-hidden="true">
       {y.ticks.map(({ value, label, major }) => (
         <g key={value}>
-          {major && <line className="plot-grid" x1={left} x2={width - right} y1={y.position(value)} y2={y.position(value)} />}
+          {major && (
+            <line
+              className="plot-grid"
+              x1={left}
+              x2={width - right}
+              y1={y.position(value)}
+              y2={y.position(value)}
+            />
+          )}
           <text className="plot-tick-label" x={left - 6} y={y.position(value) + 3.5} textAnchor="end">
             {label}
           </text>
@@ -110,7 +143,13 @@ function Axes({ x, y, xLabel, yLabel }: { readonly x: Axis; readonly y: Axis; re
       <line className="plot-axis" x1={left} x2={width - right} y1={floor} y2={floor} />
       {x.ticks.map(({ value, label }) => (
         <g key={value}>
-          <line className="plot-axis" x1={x.position(value)} x2={x.position(value)} y1={floor} y2={floor + (label === "" ? 3 : 5)} />
+          <line
+            className="plot-axis"
+            x1={x.position(value)}
+            x2={x.position(value)}
+            y1={floor}
+            y2={floor + (label === "" ? 3 : 5)}
+          />
           <text className="plot-tick-label" x={x.position(value)} y={floor + 16} textAnchor="middle">
             {label}
           </text>
@@ -129,7 +168,15 @@ function Axes({ x, y, xLabel, yLabel }: { readonly x: Axis; readonly y: Axis; re
 }
 
 /** Labels at the right end of the curves, moved apart where they would lie on each other. */
-function EndLabels({ curves, x, y }: { readonly curves: readonly Curve[]; readonly x: Axis; readonly y: Axis }) {
+function EndLabels({
+  curves,
+  x,
+  y,
+}: {
+  readonly curves: readonly Curve[];
+  readonly x: Axis;
+  readonly y: Axis;
+}) {
   const { height, top, bottom, width, right } = plotFrame;
   const wanted = curves
     .flatMap(({ key, label, points, color }) => {
@@ -138,11 +185,21 @@ function EndLabels({ curves, x, y }: { readonly curves: readonly Curve[]; readon
       return last ? [{ key, label, color, at: y.position(last[1]) }] : [];
     })
     .sort((a, b) => a.at - b.at);
-  const placed = spread(wanted.map(({ at }) => at), 11.5, top + 4, height - bottom);
+  const placed = spread(
+    wanted.map(({ at }) => at),
+    11.5,
+    top + 4,
+    height - bottom,
+  );
   return (
     <g aria-hidden="true">
       {wanted.map(({ key, label, color }, index) => (
-        <text key={key} className={`plot-end-label plot-text-${color}`} x={width - right + 5} y={(placed[index] ?? 0) + 3.5}>
+        <text
+          key={key}
+          className={`plot-end-label plot-text-${color}`}
+          x={width - right + 5}
+          y={(placed[index] ?? 0) + 3.5}
+        >
           {label}
         </text>
       ))}
@@ -153,9 +210,13 @@ function EndLabels({ curves, x, y }: { readonly curves: readonly Curve[]; readon
 /** Positions in rising order, at least `gap` apart, moved as little as a sweep down and up can. */
 export function spread(positions: readonly number[], gap: number, low: number, high: number): number[] {
   const placed: number[] = [];
-  for (const at of positions) placed.push(Math.max(at, low, (placed.at(-1) ?? Number.NEGATIVE_INFINITY) + gap));
+  for (const at of positions)
+    placed.push(Math.max(at, low, (placed.at(-1) ?? Number.NEGATIVE_INFINITY) + gap));
   for (let index = placed.length - 1; index >= 0; index--) {
-    placed[index] = Math.min(placed[index] ?? 0, index === placed.length - 1 ? high : (placed[index + 1] ?? high) - gap);
+    placed[index] = Math.min(
+      placed[index] ?? 0,
+      index === placed.length - 1 ? high : (placed[index + 1] ?? high) - gap,
+    );
   }
   return placed;
 }
@@ -166,7 +227,15 @@ function within(value: number, [low, high]: readonly [number, number]): boolean 
 
 const MOST_TABLE_ROWS = 12;
 
-function PointTable({ name, heading, curves }: { readonly name: string; readonly heading: string; readonly curves: readonly Curve[] }) {
+function PointTable({
+  name,
+  heading,
+  curves,
+}: {
+  readonly name: string;
+  readonly heading: string;
+  readonly curves: readonly Curve[];
+}) {
   const all = curves[0]?.points ?? [];
   const step = Math.max(1, Math.ceil(all.length / MOST_TABLE_ROWS));
   const rows = all.map((_, index) => index).filter((index) => index % step === 0 || index === all.length - 1);

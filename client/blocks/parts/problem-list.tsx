@@ -1,5 +1,6 @@
 import type { Problem } from "#engine/evaluation.ts";
 import { wordProblem } from "#contract/problem-words.ts";
+import { TextWithMath } from "../../ui/math.tsx";
 import { placeKey, useBlock, type FieldPlace } from "../block-handle.ts";
 
 const none: readonly Problem[] = [];
@@ -12,12 +13,20 @@ export function useProblemsAt(place: FieldPlace): readonly Problem[] {
 }
 
 /** What is wrong, in words. */
-export function ProblemList({ id, problems }: { readonly id?: string; readonly problems: readonly Problem[] }) {
+export function ProblemList({
+  id,
+  problems,
+}: {
+  readonly id?: string;
+  readonly problems: readonly Problem[];
+}) {
   if (problems.length === 0) return null;
   return (
     <ul id={id} className="block-problems">
       {problems.map((problem) => (
-        <li key={`${problem.code} ${problem.path.join("/")}`}>{wordProblem(problem)}</li>
+        <li key={`${problem.code} ${problem.path.join("/")} ${JSON.stringify(problem.facts)}`}>
+          <TextWithMath text={wordProblem(problem)} />
+        </li>
       ))}
     </ul>
   );
@@ -30,7 +39,10 @@ export function OtherProblems() {
   return <ProblemList problems={problems.filter(({ path }) => !hasField(block, path))} />;
 }
 
-function hasField({ fields, tables }: Pick<ReturnType<typeof useBlock>, "fields" | "tables">, path: readonly string[]): boolean {
+function hasField(
+  { fields, tables }: Pick<ReturnType<typeof useBlock>, "fields" | "tables">,
+  path: readonly string[],
+): boolean {
   const [first = "", rowId, column] = path;
   if (path.length === 1) return first in fields;
   const row = tables[first]?.find(({ id }) => id === rowId);
@@ -44,7 +56,9 @@ export function Notices() {
   return (
     <ul className="block-notices">
       {notices.map((notice) => (
-        <li key={`${notice.code} ${notice.path.join("/")} ${JSON.stringify(notice.facts)}`}>{wordProblem(notice)}</li>
+        <li key={`${notice.code} ${notice.path.join("/")} ${JSON.stringify(notice.facts)}`}>
+          <TextWithMath text={wordProblem(notice)} />
+        </li>
       ))}
     </ul>
   );

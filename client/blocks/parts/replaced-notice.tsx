@@ -1,7 +1,13 @@
 import type { FieldDraft } from "./use-field-draft.ts";
 
 /** Says that a colleague's value has taken the place of one's own, and offers the way back. Read aloud as it comes. */
-export function ReplacedNotice({ draft, onChosen }: { readonly draft: FieldDraft; readonly onChosen: () => void }) {
+export function ReplacedNotice({
+  draft,
+  onChosen,
+}: {
+  readonly draft: FieldDraft;
+  readonly onChosen: () => void;
+}) {
   const { replaced } = draft;
   if (!replaced) return null;
   const { by, from, to, mine, typing } = replaced;

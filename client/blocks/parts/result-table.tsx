@@ -75,14 +75,21 @@ function goByArrows(event: KeyboardEvent<HTMLTableElement>): void {
   next.focus();
 }
 
-function neighbour(figures: readonly HTMLElement[], current: HTMLElement, at: number, key: string): HTMLElement | undefined {
+function neighbour(
+  figures: readonly HTMLElement[],
+  current: HTMLElement,
+  at: number,
+  key: string,
+): HTMLElement | undefined {
   if (key === "ArrowRight") return figures[at + 1];
   if (key === "ArrowLeft") return figures[at - 1];
   const down = key === "ArrowDown";
   if (!down && key !== "ArrowUp") return undefined;
   const column = columnOf(current);
   const others = down ? figures.slice(at + 1) : figures.slice(0, at).reverse();
-  return others.find((figure) => columnOf(figure) === column && figure.closest("tr") !== current.closest("tr"));
+  return others.find(
+    (figure) => columnOf(figure) === column && figure.closest("tr") !== current.closest("tr"),
+  );
 }
 
 function columnOf(figure: HTMLElement): number {

@@ -31,7 +31,13 @@ export function RowHandle({ name, onMove, onRemove, onPointerDown }: Props) {
           <path d="M1 3.5h8M1 7h5M1 10.5h8" stroke="currentColor" fill="none" />
         </svg>
       </button>
-      <button type="button" className="block-row-remove" tabIndex={-1} aria-label={`remove ${name}`} onClick={onRemove}>
+      <button
+        type="button"
+        className="block-row-remove"
+        tabIndex={-1}
+        aria-label={`remove ${name}`}
+        onClick={onRemove}
+      >
         <svg width="10" height="10" viewBox="0 0 10 10" aria-hidden="true" focusable="false">
           <path d="M1.5 1.5l7 7M8.5 1.5l-7 7" stroke="currentColor" fill="none" />
         </svg>

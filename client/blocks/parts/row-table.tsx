@@ -56,7 +56,8 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
     const field = findField(body.current, wanted.rowId, wanted.column);
     if (!field) return;
     field.focus();
-    if (wanted.caretAtEnd && field instanceof HTMLInputElement) field.setSelectionRange(field.value.length, field.value.length);
+    if (wanted.caretAtEnd && field instanceof HTMLInputElement)
+      field.setSelectionRange(field.value.length, field.value.length);
     setWanted(null);
   }, [wanted, rows]);
 
@@ -64,7 +65,8 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
   function goDown(index: number, column: string) {
     const next = rows[index + 1];
     if (next) findField(body.current, next.id, column)?.focus();
-    else if (!block.readOnly) setWanted({ rowId: block.addRow(table), column: firstColumn, caretAtEnd: false });
+    else if (!block.readOnly)
+      setWanted({ rowId: block.addRow(table), column: firstColumn, caretAtEnd: false });
   }
   function pasteAt(rowId: string | null, column: string, text: string): boolean {
     const lines = gridOf(text);
@@ -88,7 +90,10 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
     const [row, neighbour] = [rows[index], rows[index + 1] ?? rows[index - 1]];
     if (!row) return;
     block.removeRow(table, row.id);
-    if (neighbour) body.current?.querySelector<HTMLElement>(`[data-row="${CSS.escape(neighbour.id)}"] .block-row-handle`)?.focus();
+    if (neighbour)
+      body.current
+        ?.querySelector<HTMLElement>(`[data-row="${CSS.escape(neighbour.id)}"] .block-row-handle`)
+        ?.focus();
   }
 
   return (
@@ -115,7 +120,12 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
       </thead>
       <tbody ref={body}>
         {rows.map((row, index) => (
-          <tr key={row.id} data-row={row.id} className={drag.classOf(row.id)} onKeyDown={(event) => moveByKey(event, index)}>
+          <tr
+            key={row.id}
+            data-row={row.id}
+            className={drag.classOf(row.id)}
+            onKeyDown={(event) => moveByKey(event, index)}
+          >
             {!block.readOnly && (
               <td className="block-handle-column">
                 <RowHandle
@@ -151,7 +161,9 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
             columns={columns}
             resultCount={results.length}
             invitation={rows.length === 0 ? invitation : undefined}
-            onBegin={(column, text) => setWanted({ rowId: block.addRow(table, { [column]: text }), column, caretAtEnd: true })}
+            onBegin={(column, text) =>
+              setWanted({ rowId: block.addRow(table, { [column]: text }), column, caretAtEnd: true })
+            }
             onPasteText={(column, text) => pasteAt(null, column, text)}
           />
         )}
@@ -210,6 +222,10 @@ function TableProblems({ table, span }: { readonly table: string; readonly span:
 
 function findField(body: HTMLElement | null, rowId: string, column: string): HTMLElement | null {
   const row = body?.querySelector(`[data-row="${CSS.escape(rowId)}"]`);
-  const place = row && [...row.querySelectorAll<HTMLElement>("[data-place]")].find((field) => field.dataset["place"]?.endsWith(`/${column}`));
+  const place =
+    row &&
+    [...row.querySelectorAll<HTMLElement>("[data-place]")].find((field) =>
+      field.dataset["place"]?.endsWith(`/${column}`),
+    );
   return place?.querySelector<HTMLElement>("input, select") ?? null;
 }

@@ -4,6 +4,7 @@ import { placeKey, useBlock, type FieldPlace } from "../block-handle.ts";
 import { ColleagueMarks } from "./colleague-marks.tsx";
 import { ProblemList, useProblemsAt } from "./problem-list.tsx";
 import { ReplacedNotice } from "./replaced-notice.tsx";
+import { sizeStyle } from "./size-style.ts";
 import { useFieldDraft } from "./use-field-draft.ts";
 
 interface Props {
@@ -24,7 +25,18 @@ interface Props {
 
 /** One value of a block. Undo inside it is the notebook's own, never the browser's. */
 export function TextField(props: Props) {
-  const { place, label, showLabel = false, placeholder, reading, hint, notation = true, size, onEnter, onPasteText } = props;
+  const {
+    place,
+    label,
+    showLabel = false,
+    placeholder,
+    reading,
+    hint,
+    notation = true,
+    size,
+    onEnter,
+    onPasteText,
+  } = props;
   const { readOnly } = useBlock();
   const draft = useFieldDraft(place);
   const problems = useProblemsAt(place);
@@ -70,9 +82,13 @@ export function TextField(props: Props) {
           spellCheck={false}
           readOnly={readOnly}
           placeholder={readOnly ? undefined : placeholder}
-          size={size ?? 8}
+          style={sizeStyle(size)}
           value={draft.text}
-          className={classes("block-input", notation && "block-notation", reading !== undefined && "block-input-read")}
+          className={classes(
+            "block-input",
+            notation && "block-notation",
+            reading !== undefined && "block-input-read",
+          )}
           onChange={(event) => draft.type(event.target.value)}
           onFocus={draft.enter}
           onBlur={draft.leave}

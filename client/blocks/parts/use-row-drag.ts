@@ -7,7 +7,10 @@ interface Drag {
   readonly before: string | null;
 }
 
-export function useRowDrag(body: RefObject<HTMLElement | null>, move: (rowId: string, beforeRowId: string | null) => void) {
+export function useRowDrag(
+  body: RefObject<HTMLElement | null>,
+  move: (rowId: string, beforeRowId: string | null) => void,
+) {
   const [drag, setDrag] = useState<Drag | null>(null);
 
   function start(event: PointerEvent<HTMLElement>, rowId: string) {

@@ -14,7 +14,12 @@ interface Props {
 export function FieldsTable({ value, kinds }: Props) {
   const block = useBlock();
   const fields = new Map(value?.fields.map((field) => [field.rowId, field]));
-  const names = (block.tables["symmetries"] ?? []).map((row) => row["name"] ?? "").filter((name) => name !== "");
+  // The ultraviolet weight is worth a column only where it is another number than the dimension.
+  const weightsDiffer =
+    value?.fields.some(({ weight, dimension }) => weight.text !== dimension.text) ?? false;
+  const names = (block.tables["symmetries"] ?? [])
+    .map((row) => row["name"] ?? "")
+    .filter((name) => name !== "");
   return (
     <RowTable
       table="fields"
@@ -58,20 +63,24 @@ export function FieldsTable({ value, kinds }: Props) {
         },
         { column: "meaning", heading: "meaning", notation: false, size: 10 },
       ]}
-      results={[
-        {
-          heading: "in the ultraviolet",
-          show: (row) => {
-            const field = fields.get(row.id);
-            if (!field) return null;
-            return (
-              <Figure scalar={`${row.id}/weight`}>
-                <Formula latex={field.weight.latex} />
-              </Figure>
-            );
-          },
-        },
-      ]}
+      results={
+        !weightsDiffer
+          ? []
+          : [
+              {
+                heading: "in the ultraviolet",
+                show: (row) => {
+                  const field = fields.get(row.id);
+                  if (!field) return null;
+                  return (
+                    <Figure scalar={`${row.id}/weight`}>
+                      <Formula latex={field.weight.latex} />
+                    </Figure>
+                  );
+                },
+              },
+            ]
+      }
     />
   );
 }

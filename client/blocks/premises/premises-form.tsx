@@ -3,6 +3,7 @@ import type { PremisesValue } from "#engine/premises/value.ts";
 import { shownEvaluation } from "../block-parts.ts";
 import { useBlock } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
+import { Figure } from "../parts/figure.tsx";
 import { RowTable } from "../parts/row-table.tsx";
 import { TextField } from "../parts/text-field.tsx";
 import { Formula } from "../../ui/math.tsx";
@@ -15,6 +16,22 @@ export function PremisesForm() {
   // Premises' value is what the engine's premises folder gives.
   const value = shownEvaluation(block).evaluation?.value as PremisesValue | null | undefined;
   const scales = new Map(value?.scales.map((scale) => [scale.rowId, scale]));
+  // A scale given by others, "p/Lambda", is worth saying in numbers; "3.2(4) TeV" says itself.
+  const derived = new Map(
+    (block.tables["scales"] ?? []).flatMap(({ id, value: typed = "" }) => {
+      const size = scales.get(id)?.size;
+      return size && /[A-Za-z]/.test(typed.replace(size.unit, "").replace(/e(?=[-+0-9])/gi, ""))
+        ? [
+            [
+              id,
+              <Figure key={id} scalar={`${id}/value`}>
+                {size.text}
+              </Figure>,
+            ] as const,
+          ]
+        : [];
+    }),
+  );
   const anisotropic = block.fields["geometry"] === "anisotropic";
   return (
     <div className="premises-form">
@@ -44,38 +61,40 @@ export function PremisesForm() {
       </div>
       <div className="premises-tables">
         <FieldsTable value={value ?? null} kinds={fieldKinds} />
-        <RowTable
-          table="scales"
-          noun="scale"
-          caption="Scales"
-          nameOf={(row) => row["symbol"] ?? ""}
-          invitation="Lambda"
-          columns={[
-            {
-              column: "symbol",
-              heading: "symbol",
-              size: 7,
-              placeholder: "Lambda",
-              reading: (row) => drawn(scales.get(row.id)?.latex),
-            },
-            { column: "value", heading: "value", placeholder: "3.2(4) TeV", size: 12 },
-            { column: "role", heading: "role", options: ["heavy", "probe", "light", "other"] },
-            { column: "meaning", heading: "meaning", notation: false, size: 12 },
-          ]}
-          results={[{ heading: "is", show: (row) => scales.get(row.id)?.size?.text ?? "" }]}
-        />
-        <RowTable
-          table="symmetries"
-          noun="symmetry"
-          caption="Symmetries"
-          nameOf={(row) => row["name"] ?? ""}
-          invitation="reflection"
-          columns={[
-            { column: "name", heading: "name", notation: false, size: 12, placeholder: "reflection" },
-            { column: "group", heading: "group", size: 6, placeholder: "Z2" },
-            { column: "meaning", heading: "meaning", notation: false, size: 14 },
-          ]}
-        />
+        <div className="premises-side">
+          <RowTable
+            table="scales"
+            noun="scale"
+            caption="Scales"
+            nameOf={(row) => row["symbol"] ?? ""}
+            invitation="Lambda"
+            columns={[
+              {
+                column: "symbol",
+                heading: "symbol",
+                size: 7,
+                placeholder: "Lambda",
+                reading: (row) => drawn(scales.get(row.id)?.latex),
+              },
+              { column: "value", heading: "value", placeholder: "3.2(4) TeV", size: 12 },
+              { column: "role", heading: "role", options: ["heavy", "probe", "light", "other"] },
+              { column: "meaning", heading: "meaning", notation: false, size: 12 },
+            ]}
+            results={derived.size === 0 ? [] : [{ heading: "is", show: (row) => derived.get(row.id) }]}
+          />
+          <RowTable
+            table="symmetries"
+            noun="symmetry"
+            caption="Symmetries"
+            nameOf={(row) => row["name"] ?? ""}
+            invitation="reflection"
+            columns={[
+              { column: "name", heading: "name", notation: false, size: 12, placeholder: "reflection" },
+              { column: "group", heading: "group", size: 6, placeholder: "Z2" },
+              { column: "meaning", heading: "meaning", notation: false, size: 14 },
+            ]}
+          />
+        </div>
       </div>
       <TermsTable value={value ?? null} />
     </div>

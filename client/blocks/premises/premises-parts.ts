@@ -7,5 +7,7 @@ export const premisesParts: BlockParts = {
   titleHint: "name of the theory",
   Form: PremisesForm,
   summary: ({ blockId, kind, fields, tables }) =>
-    premisesLine([{ id: blockId, kind, standsOn: null, inputs: { ...fields, ...tables }, title: "", problems: [] }]),
+    premisesLine([
+      { id: blockId, kind, standsOn: null, inputs: { ...fields, ...tables }, title: "", problems: [] },
+    ]),
 };

@@ -20,7 +20,8 @@ export function ClassRanges({ ranges, marginalAt, symbol, rowId }: Props) {
       ))}
       {marginalAt !== null && (
         <span>
-          <ClassMark scalingClass="marginal" word={false} /> {symbol} = <Figure scalar={`${rowId}/marginal-at`}>{marginalAt}</Figure>
+          <ClassMark scalingClass="marginal" word={false} /> {symbol} ={" "}
+          <Figure scalar={`${rowId}/marginal-at`}>{marginalAt}</Figure>
         </span>
       )}
     </span>

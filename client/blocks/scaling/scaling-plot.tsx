@@ -27,25 +27,28 @@ export function ScalingPlot({ value }: ResultProps<ScalingValue>) {
 /** Terms of one dimension and natural coefficient lie on one line: drawn once, named by the dimension. */
 function grouped({ plot, rows }: ScalingValue): Curve[] {
   const rowOf = new Map(rows.map((row) => [row.rowId, row]));
-  const byLine = new Map<string, Curve & { readonly names: string[] }>();
+  const byLine = new Map<string, Omit<Curve, "label"> & { readonly names: Set<string> }>();
   for (const { rowId, points, scalingClass } of plot?.curves ?? []) {
     const row = rowOf.get(rowId);
-    if (!row || row.kinetic) continue;
+    if (!row || row.kinetic || !row.allowed) continue;
     const [first, last] = [points[0], points.at(-1)];
     const key = `${first?.[1]} ${last?.[1]}`;
+    const name = row.sizeFrom === "assigned" ? "assigned" : `Δ = ${row.dimension.text}`;
     const known = byLine.get(key);
     if (known) {
-      known.names.push(row.dimension.text);
+      known.names.add(name);
       continue;
     }
     byLine.set(key, {
       key: rowId,
-      label: row.sizeFrom === "assigned" ? "assigned" : `Δ = ${row.dimension.text}`,
       points: points.filter(([scale, size]) => scale > 0 && size > 0),
       style: byLine.size,
       color: scalingClass ?? "ink",
-      names: [row.dimension.text],
+      names: new Set([name]),
     });
   }
-  return [...byLine.values()];
+  return [...byLine.values()].map(({ names, ...curve }) => ({
+    ...curve,
+    label: [...names].sort().reverse().join(", "),
+  }));
 }

@@ -1,6 +1,8 @@
+import type { PremisesValue } from "#engine/premises/value.ts";
 import type { ScalingRow, ScalingValue } from "#engine/scaling/value.ts";
 import { Formula, TextWithMath } from "../../ui/math.tsx";
 import type { ResultProps } from "../block-parts.ts";
+import { useBlock } from "../block-handle.ts";
 import { ClassMark } from "../parts/class-mark.tsx";
 import { Decimal, decimalWidths } from "../parts/decimal.tsx";
 import { Figure } from "../parts/figure.tsx";
@@ -37,7 +39,10 @@ export function ScalingResult({ value }: ResultProps<ScalingValue>) {
             ),
           },
           { heading: "grows as", show: ({ coefficient }) => <Formula latex={`s^{${coefficient.latex}}`} /> },
-          { heading: value.freeDimension ? "class" : "class here", show: (row) => <ClassOf row={row} symbol={value.freeDimension} /> },
+          {
+            heading: <ClassHeading value={value} />,
+            show: (row) => <ClassOf row={row} symbol={value.freeDimension} />,
+          },
           {
             heading: probe ? (
               <>
@@ -64,6 +69,17 @@ export function ScalingResult({ value }: ResultProps<ScalingValue>) {
   );
 }
 
+function ClassHeading({ value }: { readonly value: ScalingValue }) {
+  // Premises' value is what the engine's premises folder gives.
+  const premises = useBlock().premisesEvaluation?.value as PremisesValue | null | undefined;
+  if (value.freeDimension || !premises) return "class";
+  return (
+    <>
+      class in <Formula latex={premises.spacetimeLatex} />
+    </>
+  );
+}
+
 function ClassOf({ row, symbol }: { readonly row: ScalingRow; readonly symbol: string | null }) {
   if (row.kinetic) return <span className="premises-kinetic">kinetic</span>;
   if (row.scalingClass) {
@@ -73,7 +89,9 @@ function ClassOf({ row, symbol }: { readonly row: ScalingRow; readonly symbol: s
       </Figure>
     );
   }
-  return <ClassRanges ranges={row.ranges} marginalAt={row.marginalAt} symbol={symbol ?? "d"} rowId={row.rowId} />;
+  return (
+    <ClassRanges ranges={row.ranges} marginalAt={row.marginalAt} symbol={symbol ?? "d"} rowId={row.rowId} />
+  );
 }
 
 function Size({ row, widths }: { readonly row: ScalingRow; readonly widths: readonly [number, number] }) {

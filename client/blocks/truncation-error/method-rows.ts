@@ -14,7 +14,11 @@ export function methodRows(bands: readonly Band[], highlighted: Band | null): Me
   const rows = new Map<string, { method: Method; omitted: Omitted; bands: Map<string, Band> }>();
   for (const band of bands) {
     const key = `${band.method} ${band.omitted}`;
-    const row = rows.get(key) ?? { method: band.method, omitted: band.omitted, bands: new Map<string, Band>() };
+    const row = rows.get(key) ?? {
+      method: band.method,
+      omitted: band.omitted,
+      bands: new Map<string, Band>(),
+    };
     row.bands.set(band.degree ?? "", band);
     rows.set(key, row);
   }
@@ -39,7 +43,11 @@ export function bandScalar({ method, omitted, degree }: Band): string {
 }
 
 /** What each method takes for granted, in a few words; LaTeX between dollar signs. */
-export function assumptionOf(method: Method, omitted: Omitted, fields: Readonly<Record<string, string>>): string {
+export function assumptionOf(
+  method: Method,
+  omitted: Omitted,
+  fields: Readonly<Record<string, string>>,
+): string {
   const what = omitted === "all omitted orders" ? "all orders summed" : "first omitted term alone";
   switch (method) {
     case "conjugate prior":

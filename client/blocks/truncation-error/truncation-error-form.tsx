@@ -19,9 +19,22 @@ export function TruncationErrorForm() {
         ]}
       />
       <div className="block-settings">
-        <TextField place={{ field: "quantity" }} label="X is" showLabel size={22} notation={false} placeholder="the rate at 350 GeV" />
+        <TextField
+          place={{ field: "quantity" }}
+          label="X is"
+          showLabel
+          size={22}
+          notation={false}
+          placeholder="the rate at 350 GeV"
+        />
         <TextField place={{ field: "unit" }} label="in units of" showLabel size={5} placeholder="none" />
-        <TextField place={{ field: "q" }} label="expansion parameter Q" showLabel size={14} placeholder="probe over heavy" />
+        <TextField
+          place={{ field: "q" }}
+          label="expansion parameter Q"
+          showLabel
+          size={14}
+          placeholder="probe over heavy"
+        />
         <TextField place={{ field: "reference" }} label="reference X" showLabel size={6} placeholder="LO" />
         <ChoiceField
           place={{ field: "first" }}

@@ -16,16 +16,19 @@ export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
   const resolution = resolutionOf(value);
   const rows = methodRows(last.bands, value.highlighted);
   const name = ({ method, omitted }: MethodRow) =>
-    rows.filter((row) => row.method === method).length > 1 ? `${method}, ${omitted === "all omitted orders" ? "all" : "first only"}` : method;
+    rows.filter((row) => row.method === method).length > 1
+      ? `${method}, ${omitted === "all omitted orders" ? "all" : "first only"}`
+      : method;
   return (
     <>
       <p className="block-line block-verdict">
-        {fields["quantity"] === "" || fields["quantity"] === undefined ? "X" : fields["quantity"]} through order{" "}
+        {sentenceStart(fields["quantity"] ?? "")} through order{" "}
         <Figure scalar="order">{String(last.order)}</Figure> is{" "}
         {value.highlighted ? (
           <strong>
             <Figure scalar="value">
-              {textTo(last.value, value.highlighted.halfWidth)} ± {withUnit(textTo(value.highlighted.halfWidth, value.highlighted.halfWidth), value.unit)}
+              {textTo(last.value, value.highlighted.halfWidth)} ±{" "}
+              {withUnit(textTo(value.highlighted.halfWidth, value.highlighted.halfWidth), value.unit)}
             </Figure>
           </strong>
         ) : (
@@ -43,13 +46,24 @@ export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
         columns={[
           { heading: "method", show: name },
           ...columnsOf(value, resolution),
-          { heading: "assumes", show: ({ method, omitted }) => <TextWithMath text={assumptionOf(method, omitted, fields)} /> },
+          {
+            heading: "assumes",
+            show: ({ method, omitted }) => <TextWithMath text={assumptionOf(method, omitted, fields)} />,
+          },
         ]}
       />
       <Coefficients value={value} />
-      <p className="block-line block-caution">A model of what was left out, not a bound: it takes the coefficients to be of natural size.</p>
+      <p className="block-line block-caution">
+        A model of what was left out, not a bound: it takes the coefficients to be of natural size.
+      </p>
     </>
   );
+}
+
+/** "the rate" begins a sentence as "The rate"; a symbol stays as it is. */
+function sentenceStart(quantity: string): string {
+  if (quantity.trim() === "") return "X";
+  return /^[a-z]{2}/.test(quantity) ? quantity.charAt(0).toUpperCase() + quantity.slice(1) : quantity;
 }
 
 /** One column per degree of belief; a method that states none puts its one number under the first. */

@@ -39,7 +39,8 @@ export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
     const found = identify(blockElements(fragment));
     const next = new Map<string, BlockInstance>();
     for (const [blockId, element] of found) {
-      const known = elements.get(blockId) === element && !changed.has(element) ? inputs.get(blockId) : undefined;
+      const known =
+        elements.get(blockId) === element && !changed.has(element) ? inputs.get(blockId) : undefined;
       next.set(blockId, known ?? readBlock(blockId, element));
     }
     elements = found;
@@ -66,7 +67,9 @@ export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
 
   readAll(new Set());
   // observeDeep hands out events of every type below the fragment; `follow` looks at their targets only.
-  const observer = follow as (events: Y.YEvent<Y.XmlElement | Y.XmlText | Y.XmlFragment | Y.XmlHook>[]) => void;
+  const observer = follow as (
+    events: Y.YEvent<Y.XmlElement | Y.XmlText | Y.XmlFragment | Y.XmlHook>[],
+  ) => void;
   fragment.observeDeep(observer);
   return {
     blocks: () => list,
@@ -84,11 +87,18 @@ export function createBlockDirectory(fragment: Y.XmlFragment): BlockDirectory {
   };
 }
 
-function keepEqual(before: readonly PremisesChoice[], blocks: readonly BlockInstance[]): readonly PremisesChoice[] {
-  const next = blocks.filter(({ kind }) => kind === "premises").map(({ id, title }) => ({ blockId: id, name: title }));
+function keepEqual(
+  before: readonly PremisesChoice[],
+  blocks: readonly BlockInstance[],
+): readonly PremisesChoice[] {
+  const next = blocks
+    .filter(({ kind }) => kind === "premises")
+    .map(({ id, title }) => ({ blockId: id, name: title }));
   const same =
     next.length === before.length &&
-    next.every(({ blockId, name }, index) => blockId === before[index]?.blockId && name === before[index].name);
+    next.every(
+      ({ blockId, name }, index) => blockId === before[index]?.blockId && name === before[index].name,
+    );
   return same ? before : next;
 }
 
@@ -104,7 +114,9 @@ function holdsBlocks(event: Y.YEvent<Y.AbstractType<unknown>>): boolean {
 /** The same names as engine/notebook/read-document.ts gives them: a second block of one id is read apart. */
 function identify(found: readonly Y.XmlElement[]): Map<string, Y.XmlElement> {
   const taken = new Set<string>();
-  return new Map(found.map((element) => [freeId(attributeOf(element, "blockId"), "unnamed", taken), element]));
+  return new Map(
+    found.map((element) => [freeId(attributeOf(element, "blockId"), "unnamed", taken), element]),
+  );
 }
 
 function readBlock(id: string, element: Y.XmlElement): BlockInstance {

@@ -33,7 +33,12 @@ function readAs({ editor, ownId, getPosition }: BlockInEditorProps): string {
   return ownId;
 }
 
-function Block({ blockId, editor, selected, getPosition }: BlockInEditorProps & { readonly blockId: string }) {
+function Block({
+  blockId,
+  editor,
+  selected,
+  getPosition,
+}: BlockInEditorProps & { readonly blockId: string }) {
   const world = useBlockWorld();
   const handle = useBlockHandle(blockId);
   if (!handle) return null;

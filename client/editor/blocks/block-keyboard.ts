@@ -48,7 +48,9 @@ export const BlockKeyboard = Extension.create<BlockKeyboardOptions>({
             const after = position + (node?.nodeSize ?? 0);
             const { tr } = view.state;
             tr.replaceRange(after, after, slice);
-            tr.setSelection(TextSelection.near(tr.doc.resolve(Math.min(after + slice.size, tr.doc.content.size)), -1));
+            tr.setSelection(
+              TextSelection.near(tr.doc.resolve(Math.min(after + slice.size, tr.doc.content.size)), -1),
+            );
             view.dispatch(tr.scrollIntoView());
             return true;
           },

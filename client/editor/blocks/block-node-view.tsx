@@ -11,7 +11,13 @@ export function blockNodeView({ editor, node, getPos }: NodeViewRendererProps): 
     editor,
     as: "div",
     className: "block-view",
-    props: { editor, ownId: String(node.attrs["blockId"]), kind: node.type.name, selected: false, getPosition: getPos },
+    props: {
+      editor,
+      ownId: String(node.attrs["blockId"]),
+      kind: node.type.name,
+      selected: false,
+      getPosition: getPos,
+    },
   });
   const element = renderer.element;
   element.contentEditable = "false";
@@ -41,5 +47,9 @@ export function blockNodeView({ editor, node, getPos }: NodeViewRendererProps): 
 function isOwnEvent(event: Event, element: HTMLElement): boolean {
   if (event.type.startsWith("drag") || event.type === "drop") return false;
   if (!(event.target instanceof Element) || event.target === element) return false;
-  return event.target.closest("input, select, textarea, button, a, summary, label, [data-block-body], [data-block-question]") !== null;
+  return (
+    event.target.closest(
+      "input, select, textarea, button, a, summary, label, [data-block-body], [data-block-question]",
+    ) !== null
+  );
 }

@@ -53,7 +53,12 @@ export const BlockPairing = Extension.create({
           sync.binding.mux(() => {
             sync.doc.transact((transaction) => {
               transaction.meta.set("addToHistory", sync.addToHistory);
-              pairBlocks(sync.type, sync.binding.mapping, view.state.doc, takenKey.getState(view.state) ?? none);
+              pairBlocks(
+                sync.type,
+                sync.binding.mapping,
+                view.state.doc,
+                takenKey.getState(view.state) ?? none,
+              );
             }, ySyncPluginKey);
           });
         },
@@ -114,7 +119,8 @@ function pairBlocks(fragment: Y.XmlFragment, mapping: Mapping, doc: Node, taken:
 
 function depthOf(element: Y.XmlElement, fragment: Y.XmlFragment): number {
   let depth = 0;
-  for (let parent = element.parent; parent && parent !== fragment; parent = parent.parent as typeof parent) depth++;
+  for (let parent = element.parent; parent && parent !== fragment; parent = parent.parent as typeof parent)
+    depth++;
   return depth;
 }
 

@@ -69,12 +69,20 @@ export function deleteBlock(world: BlockWorld, editor: Editor, blockId: string):
   askIfOccupied(world, blockId, "Delete the block", "goes", () => {
     const place = blockPlaces(editor.state.doc).get(blockId);
     if (!place) return;
-    editor.view.dispatch(editor.state.tr.delete(place.position, place.position + place.node.nodeSize).scrollIntoView());
+    editor.view.dispatch(
+      editor.state.tr.delete(place.position, place.position + place.node.nodeSize).scrollIntoView(),
+    );
     editor.view.focus();
   });
 }
 
-function askIfOccupied(world: BlockWorld, blockId: string, action: string, verb: "moves" | "goes", act: () => void): void {
+function askIfOccupied(
+  world: BlockWorld,
+  blockId: string,
+  action: string,
+  verb: "moves" | "goes",
+  act: () => void,
+): void {
   const colleagues = world.presence.inBlock(blockId);
   if (colleagues.length === 0) {
     act();

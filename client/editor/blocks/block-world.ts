@@ -29,7 +29,10 @@ export interface BlockWorld {
   destroy(): void;
 }
 
-export function createBlockWorld(session: NotebookSession, startWorker: () => WorkerLike = startEvaluationWorker): BlockWorld {
+export function createBlockWorld(
+  session: NotebookSession,
+  startWorker: () => WorkerLike = startEvaluationWorker,
+): BlockWorld {
   const directory = createBlockDirectory(session.fragment);
   const results = createResultsStore({ directory, startWorker });
   const presence = createFieldPresence(session.awareness);

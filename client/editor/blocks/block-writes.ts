@@ -25,7 +25,13 @@ export function writeField(block: Y.XmlElement, field: string, value: string): v
   if (block.getAttribute(field) !== value) block.setAttribute(field, value);
 }
 
-export function writeCell(block: Y.XmlElement, table: string, rowId: string, column: string, value: string): void {
+export function writeCell(
+  block: Y.XmlElement,
+  table: string,
+  rowId: string,
+  column: string,
+  value: string,
+): void {
   const row = orderedRows(block, table).find(({ id }) => id === rowId)?.element;
   if (!row) return;
   const cell = cellElement(row, column);
@@ -94,7 +100,10 @@ function newRow(description: BlockDescription, table: string, row: NewRow, order
   element.setAttribute("table", table);
   element.setAttribute("rowId", row.id);
   element.setAttribute("order", order);
-  element.insert(0, Object.entries(columns).map(([column, spec]) => newCell(column, row.values[column] ?? spec.initial)));
+  element.insert(
+    0,
+    Object.entries(columns).map(([column, spec]) => newCell(column, row.values[column] ?? spec.initial)),
+  );
   return element;
 }
 

@@ -92,11 +92,15 @@ function add(map: Map<string, Colleague[]>, key: string, colleague: Colleague): 
   if (!present.some(({ name }) => name === colleague.name)) map.set(key, [...present, colleague]);
 }
 
-function keepEqual(before: Map<string, readonly Colleague[]>, next: Map<string, Colleague[]>): Map<string, readonly Colleague[]> {
+function keepEqual(
+  before: Map<string, readonly Colleague[]>,
+  next: Map<string, Colleague[]>,
+): Map<string, readonly Colleague[]> {
   const merged = new Map<string, readonly Colleague[]>(next);
   for (const [key, people] of next) {
     const old = before.get(key);
-    const same = old?.length === people.length && people.every((person, index) => person.name === old[index]?.name);
+    const same =
+      old?.length === people.length && people.every((person, index) => person.name === old[index]?.name);
     if (old && same) merged.set(key, old);
   }
   return merged;

@@ -6,7 +6,12 @@ import { orderedRows } from "./block-elements.ts";
 import { insertRows, writeCell, type NewRow } from "./block-writes.ts";
 
 /** Fills the rows from the one that was pasted into, then adds rows for what is left. */
-export function pasteInto(block: Y.XmlElement, description: BlockDescription, grid: PastedGrid, makeId: () => string): void {
+export function pasteInto(
+  block: Y.XmlElement,
+  description: BlockDescription,
+  grid: PastedGrid,
+  makeId: () => string,
+): void {
   const { table, rowId, columns, lines } = grid;
   const specs = description.shape.tables[table];
   if (!specs) throw new Error(`${description.kind} has no table ${table}`);

@@ -28,7 +28,8 @@ export function useBlockHandle(blockId: string): BlockHandle | null {
     return choice && "found" in choice ? (choice.found?.id ?? null) : null;
   });
   const premisesResult = useBlockResult(standsOn ?? "");
-  const premisesEvaluation = standsOn === null ? null : (premisesResult.lastGood ?? premisesResult.evaluation);
+  const premisesEvaluation =
+    standsOn === null ? null : (premisesResult.lastGood ?? premisesResult.evaluation);
   return useMemo(() => {
     if (!block) return null;
     const { evaluation, lastGood, pending } = result;
@@ -101,7 +102,9 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
       }),
     addRow(table, values = {}, afterRowId) {
       const id = newId();
-      change((element, { kind }) => insertRows(element, kindDescriptions[kind], table, [{ id, values }], afterRowId ?? null));
+      change((element, { kind }) =>
+        insertRows(element, kindDescriptions[kind], table, [{ id, values }], afterRowId ?? null),
+      );
       return id;
     },
     removeRow: (table, rowId) => change((element) => removeRow(element, table, rowId)),

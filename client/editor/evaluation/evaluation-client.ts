@@ -96,5 +96,8 @@ export function createEvaluationClient(options: EvaluationClientOptions): Evalua
 
 /** The real worker. Vite bundles it apart, so the parser of formulas is never in the page's own code. */
 export function startEvaluationWorker(): WorkerLike {
-  return new Worker(new URL("./evaluation.worker.ts", import.meta.url), { type: "module", name: "evaluation" });
+  return new Worker(new URL("./evaluation.worker.ts", import.meta.url), {
+    type: "module",
+    name: "evaluation",
+  });
 }

@@ -56,7 +56,9 @@ export function createEvaluationCore(): EvaluationCore {
       const blocks = order.flatMap((id) => known.get(id) ?? []);
       const mistakes: string[] = [];
       const onInternalError = (error: unknown, block: BlockInstance) =>
-        mistakes.push(`${block.kind} ${block.id}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`);
+        mistakes.push(
+          `${block.kind} ${block.id}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`,
+        );
       const outcomes = evaluateNotebook(blocks, { memo, onInternalError }).filter((outcome) => {
         const before = answered.get(outcome.blockId);
         answered.set(outcome.blockId, outcome);

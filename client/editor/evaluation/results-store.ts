@@ -30,7 +30,14 @@ export interface BlockResult {
   readonly settled: Settled | null;
 }
 
-const nothingYet: BlockResult = { evaluation: null, key: null, standsOn: null, lastGood: null, pending: true, settled: null };
+const nothingYet: BlockResult = {
+  evaluation: null,
+  key: null,
+  standsOn: null,
+  lastGood: null,
+  pending: true,
+  settled: null,
+};
 
 export interface ResultsStore {
   result(blockId: string): BlockResult;
@@ -50,7 +57,11 @@ export interface ResultsStoreOptions {
   readonly timeLimitMs?: number;
 }
 
-export function createResultsStore({ directory, startWorker, timeLimitMs }: ResultsStoreOptions): ResultsStore {
+export function createResultsStore({
+  directory,
+  startWorker,
+  timeLimitMs,
+}: ResultsStoreOptions): ResultsStore {
   const results = new Map<string, BlockResult>();
   const stored = new Map<string, StoredResult>();
   /** Blocks that the worker has answered at least once; the server's result no longer stands in for them. */
@@ -70,7 +81,10 @@ export function createResultsStore({ directory, startWorker, timeLimitMs }: Resu
     const before = results.get(blockId) ?? nothingYet;
     const merged = { ...before, ...next };
     const settled = settledFor(merged.key, stored.get(blockId));
-    results.set(blockId, { ...merged, settled: sameSettled(before.settled, settled) ? before.settled : settled });
+    results.set(blockId, {
+      ...merged,
+      settled: sameSettled(before.settled, settled) ? before.settled : settled,
+    });
   };
 
   const client = createEvaluationClient({
@@ -115,7 +129,10 @@ export function createResultsStore({ directory, startWorker, timeLimitMs }: Resu
     }
     for (const block of blocks) {
       const choice = changed.has(block.id) ? null : choosePremises(block, blocks);
-      const reached = choice === null || premisesCame || ("found" in choice && choice.found !== null && changed.has(choice.found.id));
+      const reached =
+        choice === null ||
+        premisesCame ||
+        ("found" in choice && choice.found !== null && changed.has(choice.found.id));
       if (!reached) continue;
       awaited.set(block.id, Number.POSITIVE_INFINITY);
       change(block.id, { pending: true });

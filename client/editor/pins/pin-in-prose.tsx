@@ -23,7 +23,10 @@ export function PinInProse({ editor, node, selected, getPosition }: PinInProsePr
   const pin = node.attrs as PinAttributes; // the schema gives a pin these
   const world = useBlockWorld();
   const readOnly = useReadOnly();
-  const exists = useSyncExternalStore(world.directory.subscribe, () => world.directory.block(pin.blockId) !== null);
+  const exists = useSyncExternalStore(
+    world.directory.subscribe,
+    () => world.directory.block(pin.blockId) !== null,
+  );
   const result = useBlockResult(pin.blockId);
   const state = pinStateOf(pin, exists, result);
   const [open, setOpen] = useState(false);
@@ -72,7 +75,13 @@ export function PinInProse({ editor, node, selected, getPosition }: PinInProsePr
       {state.status === "loose" && <span className="pin-note">loose: {state.words}</span>}
       {open && (
         <Suspense fallback={null}>
-          <PinPanel editor={editor} pin={pin} state={state} getPosition={getPosition} onClose={() => setOpen(false)} />
+          <PinPanel
+            editor={editor}
+            pin={pin}
+            state={state}
+            getPosition={getPosition}
+            onClose={() => setOpen(false)}
+          />
         </Suspense>
       )}
     </span>
@@ -95,5 +104,9 @@ function nameOf(pin: PinAttributes, state: PinState): string {
 
 /** LaTeX between dollar signs, as it would be said: without the signs of markup. */
 export function withoutMarkup(label: string): string {
-  return label.replace(/\$([^$]*)\$/g, (_, latex: string) => latex.replace(/\\([A-Za-z]+)/g, "$1").replace(/[{}\\]/g, "")).trim();
+  return label
+    .replace(/\$([^$]*)\$/g, (_, latex: string) =>
+      latex.replace(/\\([A-Za-z]+)/g, "$1").replace(/[{}\\]/g, ""),
+    )
+    .trim();
 }

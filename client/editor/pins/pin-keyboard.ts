@@ -19,10 +19,16 @@ export const PinKeyboard = Extension.create<{ readonly world: BlockWorld | null 
         props: {
           handleKeyDown(view, event) {
             const { selection } = view.state;
-            if (!world || !(selection instanceof NodeSelection) || selection.node.type.name !== pinNode) return false;
-            if (event.key !== "Enter" || event.isComposing || event.ctrlKey || event.metaKey || event.altKey) return false;
+            if (!world || !(selection instanceof NodeSelection) || selection.node.type.name !== pinNode)
+              return false;
+            if (event.key !== "Enter" || event.isComposing || event.ctrlKey || event.metaKey || event.altKey)
+              return false;
             const pin = selection.node.attrs as PinAttributes; // the schema gives a pin these
-            const state = pinStateOf(pin, world.directory.block(pin.blockId) !== null, world.results.result(pin.blockId));
+            const state = pinStateOf(
+              pin,
+              world.directory.block(pin.blockId) !== null,
+              world.results.result(pin.blockId),
+            );
             if (state.status === "moved" && view.editable) acceptPin(world, editor, selection.from);
             else openPin(view.nodeDOM(selection.from));
             return true;

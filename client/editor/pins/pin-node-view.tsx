@@ -23,7 +23,8 @@ export function pinNodeView({ editor, node, getPos }: NodeViewRendererProps): No
     },
     selectNode: () => renderer.updateProps({ selected: true }),
     deselectNode: () => renderer.updateProps({ selected: false }),
-    stopEvent: (event) => event.target instanceof Element && event.target.closest("button, [data-pin-panel]") !== null,
+    stopEvent: (event) =>
+      event.target instanceof Element && event.target.closest("button, [data-pin-panel]") !== null,
     ignoreMutation: () => true,
     destroy: () => renderer.destroy(),
   };

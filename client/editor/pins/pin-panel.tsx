@@ -82,7 +82,12 @@ export function PinPanel({ editor, pin, state, getPosition, onClose }: Props) {
         {state.status === "loose" && `It is loose: ${state.words}.`}
         {state.status === "moved" && `${movedWords(state.settled)}: was ${pin.text}, now ${state.now}.`}
       </p>
-      {!readOnly && <Format pin={pin} onChange={(format, text) => act((position) => reformatPin(editor, position, format, text))} />}
+      {!readOnly && (
+        <Format
+          pin={pin}
+          onChange={(format, text) => act((position) => reformatPin(editor, position, format, text))}
+        />
+      )}
       <div className="pin-panel-tools">
         {state.status === "moved" && !readOnly && (
           <button
@@ -148,7 +153,9 @@ function Format({ pin, onChange }: FormatProps) {
       <select
         id={`${id}-digits`}
         value={format.digits ?? ""}
-        onChange={(event) => change({ digits: event.target.value === "" ? null : Number(event.target.value) })}
+        onChange={(event) =>
+          change({ digits: event.target.value === "" ? null : Number(event.target.value) })
+        }
       >
         <option value="">as the number is</option>
         {Array.from({ length: 12 }, (_, index) => (
@@ -161,7 +168,9 @@ function Format({ pin, onChange }: FormatProps) {
       <select
         id={`${id}-style`}
         value={format.style}
-        onChange={(event) => change({ style: numberStyles.find((style) => style === event.target.value) ?? "auto" })}
+        onChange={(event) =>
+          change({ style: numberStyles.find((style) => style === event.target.value) ?? "auto" })
+        }
       >
         {numberStyles.map((style) => (
           <option key={style} value={style}>
@@ -173,7 +182,9 @@ function Format({ pin, onChange }: FormatProps) {
       <select
         id={`${id}-sign`}
         value={format.sign}
-        onChange={(event) => change({ sign: signStyles.find((sign) => sign === event.target.value) ?? "negative" })}
+        onChange={(event) =>
+          change({ sign: signStyles.find((sign) => sign === event.target.value) ?? "negative" })
+        }
       >
         {signStyles.map((sign) => (
           <option key={sign} value={sign}>
@@ -183,13 +194,21 @@ function Format({ pin, onChange }: FormatProps) {
       </select>
       {hasSigma && (
         <label className="pin-format-tick">
-          <input type="checkbox" checked={format.uncertainty} onChange={(event) => change({ uncertainty: event.target.checked })} />
+          <input
+            type="checkbox"
+            checked={format.uncertainty}
+            onChange={(event) => change({ uncertainty: event.target.checked })}
+          />
           with uncertainty
         </label>
       )}
       {hasUnit && (
         <label className="pin-format-tick">
-          <input type="checkbox" checked={format.unit} onChange={(event) => change({ unit: event.target.checked })} />
+          <input
+            type="checkbox"
+            checked={format.unit}
+            onChange={(event) => change({ unit: event.target.checked })}
+          />
           with unit
         </label>
       )}

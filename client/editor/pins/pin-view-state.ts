@@ -9,7 +9,12 @@ export type PinState =
   /** Its block has not been computed yet on this page: nothing is claimed. */
   | { readonly status: "waiting" }
   | { readonly status: "holds"; readonly label: string }
-  | { readonly status: "moved"; readonly label: string; readonly now: string; readonly settled: Settled | null }
+  | {
+      readonly status: "moved";
+      readonly label: string;
+      readonly now: string;
+      readonly settled: Settled | null;
+    }
   | { readonly status: "loose"; readonly words: string };
 
 const looseWords = {

@@ -3,7 +3,13 @@ import type { Editor } from "@tiptap/core";
 import type { Node } from "@tiptap/pm/model";
 import { NodeSelection, TextSelection } from "@tiptap/pm/state";
 import type { Scalar } from "#engine/evaluation.ts";
-import { defaultPinFormat, formatScalar, parsePinFormat, printPinFormat, type PinFormat } from "#engine/notebook/pin-format.ts";
+import {
+  defaultPinFormat,
+  formatScalar,
+  parsePinFormat,
+  printPinFormat,
+  type PinFormat,
+} from "#engine/notebook/pin-format.ts";
 import { pinNode, type PinAttributes } from "#schema/block-structure.ts";
 import { say } from "../../ui/notices.ts";
 import type { BlockWorld } from "../blocks/block-world.ts";
@@ -11,7 +17,12 @@ import { newId } from "../new-id.ts";
 import { lastProsePosition } from "./prose-caret.ts";
 
 /** A pin's attributes for a scalar as it is now. */
-export function pinAttributes(blockId: string, scalar: Scalar, resultKey: string, format: PinFormat): Omit<PinAttributes, "pinId"> {
+export function pinAttributes(
+  blockId: string,
+  scalar: Scalar,
+  resultKey: string,
+  format: PinFormat,
+): Omit<PinAttributes, "pinId"> {
   return {
     blockId,
     scalar: scalar.id,
@@ -74,7 +85,8 @@ function changePin(editor: Editor, position: number, attributes: Partial<PinAttr
   if (!pin) return;
   const { tr, selection } = editor.state;
   tr.setNodeMarkup(position, null, { ...pin.attrs, ...attributes });
-  if (selection instanceof NodeSelection && selection.from === position) tr.setSelection(NodeSelection.create(tr.doc, position));
+  if (selection instanceof NodeSelection && selection.from === position)
+    tr.setSelection(NodeSelection.create(tr.doc, position));
   editor.view.dispatch(tr);
 }
 

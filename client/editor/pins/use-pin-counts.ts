@@ -73,7 +73,8 @@ export function pinsOf(parent: Node): readonly PlacedPin[] {
   parent.forEach((child, offset) => {
     // The schema gives a pin these attributes.
     if (child.type.name === pinNode) found.push({ offset, pin: child.attrs as PinAttributes });
-    else if (!child.isAtom) for (const below of pinsOf(child)) found.push({ offset: offset + 1 + below.offset, pin: below.pin });
+    else if (!child.isAtom)
+      for (const below of pinsOf(child)) found.push({ offset: offset + 1 + below.offset, pin: below.pin });
   });
   pinsWithin.set(parent, found);
   return found;

@@ -1,6 +1,13 @@
 import { afterEach, describe, expect, it } from "vitest";
 import { readDocument } from "#engine/notebook/read-document.ts";
-import { changeInputs, insertRows, moveRow, removeRow, writeCell, writeField } from "../../../client/editor/blocks/block-writes.ts";
+import {
+  changeInputs,
+  insertRows,
+  moveRow,
+  removeRow,
+  writeCell,
+  writeField,
+} from "../../../client/editor/blocks/block-writes.ts";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { leave, notebookState, paragraph, person, row, type Person } from "./two-editors.ts";
 
@@ -12,8 +19,21 @@ function open() {
     10,
     notebookState([
       paragraph("words"),
-      { type: "premises", attrs: { blockId: "p", name: "Lantern", d: "d" }, content: [row("scales", "r1", "M", { symbol: "p", value: "350 GeV" }), row("scales", "r2", "B", { symbol: "L" })] },
-      { type: "blockquote", content: [paragraph("quoted"), { type: "scaling", attrs: { blockId: "p", standsOn: "p", title: "copy" } }] },
+      {
+        type: "premises",
+        attrs: { blockId: "p", name: "Lantern", d: "d" },
+        content: [
+          row("scales", "r1", "M", { symbol: "p", value: "350 GeV" }),
+          row("scales", "r2", "B", { symbol: "L" }),
+        ],
+      },
+      {
+        type: "blockquote",
+        content: [
+          paragraph("quoted"),
+          { type: "scaling", attrs: { blockId: "p", standsOn: "p", title: "copy" } },
+        ],
+      },
       { type: "scaling", attrs: { blockId: "s" }, content: [] },
     ]),
   );
@@ -34,7 +54,17 @@ describe("the directory of blocks", () => {
       () => writeField(premises(), "d", "6"),
       () => writeCell(premises(), "scales", "r1", "value", "400 GeV"),
       () => writeCell(premises(), "scales", "r2", "meaning", "threshold"),
-      () => insertRows(premises(), kindDescriptions.premises, "scales", [{ id: "a", values: { symbol: "a" } }, { id: "b", values: {} }], "r2"),
+      () =>
+        insertRows(
+          premises(),
+          kindDescriptions.premises,
+          "scales",
+          [
+            { id: "a", values: { symbol: "a" } },
+            { id: "b", values: {} },
+          ],
+          "r2",
+        ),
       () => insertRows(premises(), kindDescriptions.premises, "scales", [{ id: "c", values: {} }], null),
       () => moveRow(premises(), "scales", "c", "r2"),
       () => moveRow(premises(), "scales", "r2", null),

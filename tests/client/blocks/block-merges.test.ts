@@ -3,7 +3,14 @@ import { NodeSelection } from "@tiptap/pm/state";
 import { afterEach, describe, expect, it } from "vitest";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
-import { changeInputs, insertRows, moveRow, removeRow, writeCell, writeField } from "../../../client/editor/blocks/block-writes.ts";
+import {
+  changeInputs,
+  insertRows,
+  moveRow,
+  removeRow,
+  writeCell,
+  writeField,
+} from "../../../client/editor/blocks/block-writes.ts";
 import { leave, meet, notebookState, paragraph, person, row, type Person } from "./two-editors.ts";
 
 /** The table of what two people may do at once to one block; neighbours are of the same kind, which is the hard case. */
@@ -14,7 +21,12 @@ function premises(blockId: string, rowCount: number): JSONContent {
     type: "premises",
     attrs: { blockId, name: `name of ${blockId}`, d: "4" },
     content: Array.from({ length: rowCount }, (_, index) =>
-      row("scales", `${blockId}-r${index}`, `K${index + 1}`, { symbol: `s${index}`, value: `${index} GeV`, role: "other", meaning: "" }),
+      row("scales", `${blockId}-r${index}`, `K${index + 1}`, {
+        symbol: `s${index}`,
+        value: `${index} GeV`,
+        role: "other",
+        meaning: "",
+      }),
     ),
   };
 }
@@ -56,7 +68,10 @@ function typeProse(who: Person, text: string): void {
 }
 
 /** What the first person does. `keepsElement`: a colleague's edit at the same time survives it. */
-const structural: Record<string, { act(who: Person, rows: number): void; keepsElement: boolean; prepare?(who: Person): void } & Surroundings> = {
+const structural: Record<
+  string,
+  { act(who: Person, rows: number): void; keepsElement: boolean; prepare?(who: Person): void } & Surroundings
+> = {
   "insert before": {
     keepsElement: true,
     act: (who) => void who.editor.commands.insertContentAt(place(who, target).from, premises("new", 1)),
@@ -101,7 +116,8 @@ const structural: Record<string, { act(who: Person, rows: number): void; keepsEl
   "delete a row": {
     keepsElement: true,
     act: (who, rows) => {
-      if (rows > 0) changeInputs(element(who), () => removeRow(element(who), "scales", `${target}-r${rows - 1}`));
+      if (rows > 0)
+        changeInputs(element(who), () => removeRow(element(who), "scales", `${target}-r${rows - 1}`));
     },
   },
   "move it": {
@@ -128,7 +144,9 @@ const structural: Record<string, { act(who: Person, rows: number): void; keepsEl
     keepsElement: false,
     act: (who) => {
       const { from } = place(who, target);
-      who.editor.view.dispatch(who.editor.state.tr.setSelection(NodeSelection.create(who.editor.state.doc, from)));
+      who.editor.view.dispatch(
+        who.editor.state.tr.setSelection(NodeSelection.create(who.editor.state.doc, from)),
+      );
       expect(who.editor.commands.setBlockquote()).toBe(true);
     },
   },
@@ -139,19 +157,26 @@ const structural: Record<string, { act(who: Person, rows: number): void; keepsEl
       const end = who.editor.state.doc.content.size;
       const { schema } = who.editor;
       who.editor.view.dispatch(
-        tr.insert(end, schema.node("paragraph", null, schema.text("after"))).insertText("X", 2).insertText("Y", 4),
+        tr
+          .insert(end, schema.node("paragraph", null, schema.text("after")))
+          .insertText("X", 2)
+          .insertText("Y", 4),
       );
     },
   },
   undo: {
     keepsElement: true,
-    prepare: (who) => changeInputs(element(who), () => writeField(element(who), "note", "typed and regretted")),
+    prepare: (who) =>
+      changeInputs(element(who), () => writeField(element(who), "note", "typed and regretted")),
     act: (who) => void who.history.undoOnce(),
   },
 };
 
 /** What the second person does meanwhile. */
-const edits: Record<string, { act(who: Person, rows: number): void; survives(who: Person, rows: number): boolean }> = {
+const edits: Record<
+  string,
+  { act(who: Person, rows: number): void; survives(who: Person, rows: number): boolean }
+> = {
   "edits the field": {
     act: (who) => changeInputs(element(who), () => writeField(element(who), "note", "second's note")),
     survives: (who) => who.directory.block(target)?.inputs["note"] === "second's note",
@@ -162,22 +187,41 @@ const edits: Record<string, { act(who: Person, rows: number): void; survives(who
   },
   "edits a row": {
     act: (who, rows) => {
-      if (rows > 0) changeInputs(element(who), () => writeCell(element(who), "scales", `${target}-r0`, "value", "7 TeV"));
+      if (rows > 0)
+        changeInputs(element(who), () => writeCell(element(who), "scales", `${target}-r0`, "value", "7 TeV"));
     },
     survives: (who, rows) =>
-      rows === 0 || scales(who.directory.block(target)).find((r) => r.id === `${target}-r0`)?.["value"] === "7 TeV",
+      rows === 0 ||
+      scales(who.directory.block(target)).find((r) => r.id === `${target}-r0`)?.["value"] === "7 TeV",
   },
   "adds a row": {
     act: (who) =>
       changeInputs(element(who), () =>
-        insertRows(element(who), kindDescriptions.premises, "scales", [{ id: "added", values: { symbol: "q" } }], null),
+        insertRows(
+          element(who),
+          kindDescriptions.premises,
+          "scales",
+          [{ id: "added", values: { symbol: "q" } }],
+          null,
+        ),
       ),
-    survives: (who) => scales(who.directory.block(target)).some((r) => r.id === "added" && r["symbol"] === "q"),
+    survives: (who) =>
+      scales(who.directory.block(target)).some((r) => r.id === "added" && r["symbol"] === "q"),
   },
 };
 
 const typed = new Set([
-  "", "4", "6", "isotropic", "3", "2", "other", "q", "7 TeV", "typed and regretted", "second's note",
+  "",
+  "4",
+  "6",
+  "isotropic",
+  "3",
+  "2",
+  "other",
+  "q",
+  "7 TeV",
+  "typed and regretted",
+  "second's note",
   ...["first", target, "last", "new"].map((id) => `name of ${id}`),
   ...[0, 1, 2].flatMap((index) => [`s${index}`, `${index} GeV`]),
 ]);
@@ -188,59 +232,80 @@ afterEach(() => {
   people = [];
 });
 
-describe.each(Object.entries(structural))("while one person would %s", (name, { act, keepsElement, prepare, ...surroundings }) => {
-  describe.each(Object.entries(edits))("and another %s", (editName, edit) => {
-    const cases = [0, 1, 2, 3].flatMap((rows) => (["first", "second"] as const).map((later) => ({ rows, later })));
-    it.each(cases)("with $rows rows, first to hear: $later", ({ rows, later }) => {
-      const state = notebookState(notebook(rows, surroundings));
-      const first = person(10, state);
-      const second = person(20, state);
-      people = [first, second];
-      if (prepare) meet(first, second, { first: () => prepare(first), second: () => undefined }, "first");
+describe.each(Object.entries(structural))(
+  "while one person would %s",
+  (name, { act, keepsElement, prepare, ...surroundings }) => {
+    describe.each(Object.entries(edits))("and another %s", (editName, edit) => {
+      const cases = [0, 1, 2, 3].flatMap((rows) =>
+        (["first", "second"] as const).map((later) => ({ rows, later })),
+      );
+      it.each(cases)("with $rows rows, first to hear: $later", ({ rows, later }) => {
+        const state = notebookState(notebook(rows, surroundings));
+        const first = person(10, state);
+        const second = person(20, state);
+        people = [first, second];
+        if (prepare) meet(first, second, { first: () => prepare(first), second: () => undefined }, "first");
 
-      meet(first, second, { first: () => act(first, rows), second: () => edit.act(second, rows) }, later);
+        meet(first, second, { first: () => act(first, rows), second: () => edit.act(second, rows) }, later);
 
-      // All clients equal, in Y, in ProseMirror and as read.
-      expect(second.editor.getJSON()).toEqual(first.editor.getJSON());
-      expect(second.fragment.toJSON()).toBe(first.fragment.toJSON());
-      expect(second.directory.blocks()).toEqual(first.directory.blocks());
+        // All clients equal, in Y, in ProseMirror and as read.
+        expect(second.editor.getJSON()).toEqual(first.editor.getJSON());
+        expect(second.fragment.toJSON()).toBe(first.fragment.toJSON());
+        expect(second.directory.blocks()).toEqual(first.directory.blocks());
 
-      // No row lost or doubled, in any block; none in the wrong one.
-      const deletedRow = name === "delete a row" && rows > 0 ? `${target}-r${rows - 1}` : null;
-      for (const block of first.directory.blocks()) {
-        const ids = scales(block).map(({ id }) => id).filter((id) => id !== "added");
-        const own = Array.from({ length: block.id === "new" ? 1 : rows }, (_, index) => `${block.id}-r${index}`);
-        expect([...ids].sort()).toEqual(own.filter((id) => id !== deletedRow));
-        expect(block.inputs["name"]).toBe(`name of ${block.id}`);
-      }
-      const added = first.directory.blocks().flatMap((block) => scales(block).filter(({ id }) => id === "added"));
-      expect(added.length).toBeLessThanOrEqual(1);
+        // No row lost or doubled, in any block; none in the wrong one.
+        const deletedRow = name === "delete a row" && rows > 0 ? `${target}-r${rows - 1}` : null;
+        for (const block of first.directory.blocks()) {
+          const ids = scales(block)
+            .map(({ id }) => id)
+            .filter((id) => id !== "added");
+          const own = Array.from(
+            { length: block.id === "new" ? 1 : rows },
+            (_, index) => `${block.id}-r${index}`,
+          );
+          expect([...ids].sort()).toEqual(own.filter((id) => id !== deletedRow));
+          expect(block.inputs["name"]).toBe(`name of ${block.id}`);
+        }
+        const added = first.directory
+          .blocks()
+          .flatMap((block) => scales(block).filter(({ id }) => id === "added"));
+        expect(added.length).toBeLessThanOrEqual(1);
 
-      // No value that nobody typed.
-      for (const block of first.directory.blocks()) {
-        const values = [...Object.values(block.inputs).filter((value) => typeof value === "string"), ...scales(block).flatMap(({ id: _, ...cells }) => Object.values(cells))];
-        expect(values.filter((value) => !typed.has(value))).toEqual([]);
-      }
+        // No value that nobody typed.
+        for (const block of first.directory.blocks()) {
+          const values = [
+            ...Object.values(block.inputs).filter((value) => typeof value === "string"),
+            ...scales(block).flatMap(({ id: _, ...cells }) => Object.values(cells)),
+          ];
+          expect(values.filter((value) => !typed.has(value))).toEqual([]);
+        }
 
-      const sameRow = name === "delete a row" && editName === "edits a row" && rows === 1;
-      const sameField = name === "undo" && editName === "edits the field";
-      if (keepsElement && !sameRow && !sameField) expect(edit.survives(first, rows)).toBe(true);
+        const sameRow = name === "delete a row" && editName === "edits a row" && rows === 1;
+        const sameField = name === "undo" && editName === "edits the field";
+        if (keepsElement && !sameRow && !sameField) expect(edit.survives(first, rows)).toBe(true);
 
-      // The next sentence typed by either touches no block.
-      const untouched = first.directory.blocks();
-      meet(first, second, { first: () => typeProse(first, "more "), second: () => typeProse(second, "words ") }, later);
-      expect(first.directory.blocks()).toEqual(untouched);
-      expect(second.directory.blocks()).toEqual(untouched);
+        // The next sentence typed by either touches no block.
+        const untouched = first.directory.blocks();
+        meet(
+          first,
+          second,
+          { first: () => typeProse(first, "more "), second: () => typeProse(second, "words ") },
+          later,
+        );
+        expect(first.directory.blocks()).toEqual(untouched);
+        expect(second.directory.blocks()).toEqual(untouched);
+      });
     });
-  });
-});
+  },
+);
 
 describe("deleting a block", () => {
   it.each([0, 1, 2, 3])("with %i rows is undone with every field and row", (rows) => {
     const who = person(10, notebookState(notebook(rows, { third: true })));
     people = [who];
     changeInputs(element(who), () => writeField(element(who), "d", "6"));
-    if (rows > 0) changeInputs(element(who), () => writeCell(element(who), "scales", `${target}-r0`, "value", "7 TeV"));
+    if (rows > 0)
+      changeInputs(element(who), () => writeCell(element(who), "scales", `${target}-r0`, "value", "7 TeV"));
     const before = who.directory.block(target);
     who.editor.commands.deleteRange(place(who, target));
     expect(who.directory.block(target)).toBeNull();

@@ -27,8 +27,16 @@ describe("order keys", () => {
   });
 
   it.each([
-    ["at the end", (keys: string[], random: () => number) => keys.push(orderKeyBetween(keys.at(-1) ?? null, null, random) ?? "")],
-    ["at the start", (keys: string[], random: () => number) => keys.unshift(orderKeyBetween(null, keys[0] ?? null, random) ?? "")],
+    [
+      "at the end",
+      (keys: string[], random: () => number) =>
+        keys.push(orderKeyBetween(keys.at(-1) ?? null, null, random) ?? ""),
+    ],
+    [
+      "at the start",
+      (keys: string[], random: () => number) =>
+        keys.unshift(orderKeyBetween(null, keys[0] ?? null, random) ?? ""),
+    ],
   ])("stay short when a thousand rows are added %s", (_where, add) => {
     const keys: string[] = [];
     const random = stream(7);

@@ -27,7 +27,11 @@ export function person(clientId: number, state: Uint8Array): Person {
     element: document.body.appendChild(document.createElement("div")),
     extensions: [
       ...documentExtensions,
-      Collaboration.configure({ document: doc, field: FRAGMENT, yUndoOptions: { undoManager: history.manager } as never }),
+      Collaboration.configure({
+        document: doc,
+        field: FRAGMENT,
+        yUndoOptions: { undoManager: history.manager } as never,
+      }),
       BlockPairing,
     ],
   });
@@ -42,7 +46,12 @@ export function notebookState(content: JSONContent[]): Uint8Array {
 }
 
 /** Both act without hearing of each other; then the two messages cross, in the order asked for. */
-export function meet(first: Person, second: Person, act: { first(): void; second(): void }, later: "first" | "second") {
+export function meet(
+  first: Person,
+  second: Person,
+  act: { first(): void; second(): void },
+  later: "first" | "second",
+) {
   const [before1, before2] = [Y.encodeStateVector(first.doc), Y.encodeStateVector(second.doc)];
   act.first();
   act.second();
@@ -75,7 +84,12 @@ export function leave(...people: Person[]) {
 export function paragraph(text: string): JSONContent {
   return { type: "paragraph", content: [{ type: "text", text }] };
 }
-export function row(table: string, rowId: string, order: string, values: Readonly<Record<string, string>>): JSONContent {
+export function row(
+  table: string,
+  rowId: string,
+  order: string,
+  values: Readonly<Record<string, string>>,
+): JSONContent {
   return {
     type: "row",
     attrs: { table, rowId, order },
