@@ -36,7 +36,7 @@ function betaFraction(x: number, a: number, b: number): number {
     d = 1 / kept(1 + odd * d);
     c = kept(1 + odd / c);
     fraction *= d * c;
-    if (Math.abs(d * c - 1) < 2e-16) break;
+    if (Math.abs(d * c - 1) < 5e-16) break;
   }
   return fraction;
 }
@@ -86,10 +86,13 @@ export function studentHalfWidth(probability: number, nu: number): number {
     const miss = upper ? Math.log(tail / outside) : Math.log(inside / probability);
     if (miss > 0) high = w;
     else low = w;
-    const newton = w - miss / (slope / (upper ? outside : inside));
-    const next = newton > low && newton < high ? newton : (low + high) / 2;
-    if (Math.abs(next - w) < 1e-15 * Math.max(1, Math.abs(w))) break;
-    w = next;
+    const step = miss / (slope / (upper ? outside : inside));
+    // Newton's method converges quadratically: after a step this small, what is left is rounding.
+    if (Math.abs(step) < 1e-9) {
+      w -= step;
+      break;
+    }
+    w = w - step > low && w - step < high ? w - step : (low + high) / 2;
   }
   return Math.exp((w + Math.log(nu)) / 2);
 }
