@@ -28,7 +28,7 @@ export async function rows<Row>(
   sql: string,
   bindings: Knex.RawBinding[] = [],
 ): Promise<Row[]> {
-  const answer = (await database.raw(sql, bindings)) as { rows: Row[] }; // knex types raw answers as any
+  const answer = await database.raw<{ rows: Row[] }>(sql, bindings);
   return answer.rows;
 }
 

@@ -76,7 +76,8 @@ export function openSessions(configuration: Configuration, publicUrl: string, lo
         const asRequest = request as Request; // see above
         const response = new ServerResponse(request) as Response; // see above
         void middleware(asRequest, response, (error?: unknown) => {
-          if (error !== undefined) return reject(error instanceof Error ? error : new Error(String(error)));
+          if (error !== undefined)
+            return reject(error instanceof Error ? error : new Error("the session could not be read"));
           const { personId } = asRequest.session;
           resolve(
             personId === undefined ? null : { sessionId: digestOfSession(asRequest.sessionID), personId },

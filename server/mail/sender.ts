@@ -105,18 +105,20 @@ export function startMailSender({ configuration, publicUrl, database, log }: Ser
     host: new URL(publicUrl).hostname,
   };
   let stopped = false;
-  let work: Promise<void> | null = null;
   let isAskedAgain = false;
+  let work: Promise<void> | null = null;
+  const mayGoOn = () => !stopped;
+  const isAsked = () => isAskedAgain && mayGoOn();
 
   async function sendAll(): Promise<void> {
     // Told of another letter while looking: look once more, or it waits for the next round.
-    while (isAskedAgain && !stopped) {
+    while (isAsked()) {
       isAskedAgain = false;
       let result: Awaited<ReturnType<typeof sendOne>>;
       do {
         result = await sendOne(postOffice);
         if (result === "failed") log.warn("a letter could not be sent");
-      } while (result !== "none" && !stopped);
+      } while (result !== "none" && mayGoOn());
     }
   }
   function look(): void {

@@ -1,5 +1,5 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
-import type { Notebook, NotebookList, NotebookRow } from "#contract/api.ts";
+import type { Notebook, NotebookList, NotebookResults, NotebookRow } from "#contract/api.ts";
 import { rows } from "../../server/data/database.ts";
 import type { Browser } from "./http-browser.ts";
 import { createWorld, type World } from "./http-world.ts";
@@ -41,6 +41,28 @@ describe("making a notebook", () => {
 
   it("has a title for who gives none", async () => {
     expect((await wren.post("/api/notebooks", {})).body.title).toBe("Untitled notebook");
+  });
+
+  it("fills it from the template, with results that were computed and pins that hold", async () => {
+    const { id } = (await wren.post("/api/notebooks", { title: "Mine", template: "lantern" })).body;
+    const { results } = (await wren.get<NotebookResults>(`/api/notebooks/${id}/results`)).body;
+    expect(results.length).toBeGreaterThanOrEqual(5);
+    for (const { blockId, evaluation } of results) expect(evaluation.problems, blockId).toEqual([]);
+    const [row] = (await wren.get<NotebookList>("/api/notebooks")).body.notebooks;
+    expect(row).toMatchObject({ title: "Mine", pinsMoved: 0, pinsLoose: 0 });
+    expect(row?.premisesLine).toMatch(/^d = 4 · 2 fields · \d+ terms$/);
+  });
+
+  it("keeps nothing of one that could not be filled", async () => {
+    await rows(world.database, "alter table document_states add constraint full_up check (false) not valid");
+    try {
+      const answer = await wren.post("/api/notebooks", { title: "Half", template: "lantern" });
+      expect([answer.status, answer.body.type]).toEqual([500, "urn:subleading:unexpected"]);
+      expect(answer.text).not.toMatch(/constraint|document_states/);
+    } finally {
+      await rows(world.database, "alter table document_states drop constraint full_up");
+    }
+    expect((await wren.get("/api/notebooks")).body.notebooks).toEqual([]);
   });
 
   it.each([

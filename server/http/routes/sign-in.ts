@@ -1,5 +1,5 @@
 /** GET /auth/github, its callback, and POST /auth/sign-out. */
-import { Router, type Request, type Response } from "express";
+import { Router, type Request, type RequestHandler, type Response } from "express";
 import { Passport } from "passport";
 import { signInPerson, type Account } from "../../commands/sign-in-person.ts";
 import { recordEvent } from "../../data/events.ts";
@@ -15,26 +15,15 @@ const CALLBACK = "/auth/github/callback";
 /** The page says why one is not signed in. */
 type Failure = "refused" | "failed";
 
-function regenerate(request: Request): Promise<void> {
-  return new Promise((resolve, reject) =>
-    request.session.regenerate((error?: Error) =>
-      error === undefined || error === null ? resolve() : reject(error),
-    ),
-  );
-}
-function save(request: Request): Promise<void> {
-  return new Promise((resolve, reject) =>
-    request.session.save((error?: Error) =>
-      error === undefined || error === null ? resolve() : reject(error),
-    ),
-  );
-}
-function destroy(request: Request): Promise<void> {
-  return new Promise((resolve, reject) =>
-    request.session.destroy((error?: Error) =>
-      error === undefined || error === null ? resolve() : reject(error),
-    ),
-  );
+type SessionStep = "regenerate" | "save" | "destroy";
+/** express-session tells by a callback, with an error or with nothing in several spellings. */
+function sessionStep(request: Request, step: SessionStep): Promise<void> {
+  return new Promise((resolve, reject) => {
+    request.session[step]((error: unknown) => {
+      if (error instanceof Error) reject(error);
+      else resolve();
+    });
+  });
 }
 
 function explainFailure(response: Response, failure: Failure, next: string): void {
@@ -58,10 +47,10 @@ async function completeSignIn(services: Services, request: Request, account: Acc
   const personId = await signInPerson(services.database, account);
   const before = { sessionName: request.sessionID, isSignedIn: request.session.personId !== undefined };
   // A new session name: one that was planted in the browser before must not become a signed-in one.
-  await regenerate(request);
+  await sessionStep(request, "regenerate");
   request.session.personId = personId;
   request.session.csrfToken = newCsrfToken();
-  await save(request);
+  await sessionStep(request, "save");
   if (before.isSignedIn) await announceEndOfSession(services, before.sessionName);
   return next;
 }
@@ -69,7 +58,7 @@ async function completeSignIn(services: Services, request: Request, account: Acc
 async function signOut(services: Services, request: Request): Promise<void> {
   const { personId } = request.session;
   const sessionName = request.sessionID;
-  await destroy(request);
+  await sessionStep(request, "destroy");
   if (personId === undefined) return;
   await announceEndOfSession(services, sessionName);
   await recordEvent(services.database, { personId, what: "signed-out" });
@@ -80,11 +69,13 @@ export function signInRoutes(services: Services, limits: RateLimits): Router {
   passport.use("github", githubStrategy(services.configuration.github, `${services.publicUrl}${CALLBACK}`));
   // The strategy would fetch the addresses itself if it knew the scope, and forget which are verified.
   const toConsent = { session: false, scope: ["user:email"] };
+  // passport types what it returns as any.
+  const askConsent = passport.authenticate("github", toConsent) as RequestHandler;
   const router = Router();
 
   router.get("/auth/github", limits.signIn, (request, response, next) => {
     request.session.next = safeNextPath(request.query["next"]);
-    passport.authenticate("github", toConsent)(request, response, next);
+    askConsent(request, response, next);
   });
 
   router.get(CALLBACK, limits.signIn, (request, response, next) => {
@@ -104,7 +95,9 @@ export function signInRoutes(services: Services, limits: RateLimits): Router {
     };
     const done = (error: unknown, account: Account | false | null | undefined) =>
       void finish(error, account).catch(next);
-    passport.authenticate("github", { session: false }, done)(request, response, next);
+    // As above.
+    const takeAnswer = passport.authenticate("github", { session: false }, done) as RequestHandler;
+    takeAnswer(request, response, next);
   });
 
   router.post("/auth/sign-out", async (request, response) => {
