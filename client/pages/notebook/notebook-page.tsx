@@ -6,7 +6,7 @@ import { useMe } from "../../api/me.ts";
 import { notebookKey, shelfKey, useNotebook } from "../../api/notebooks.ts";
 import { peopleKey } from "../../api/people.ts";
 import { isNotFound, sentenceOf } from "../../api/problem.ts";
-import { resultsKey } from "../../api/results.ts";
+import { resultsKey, useStoredResults } from "../../api/results.ts";
 import { Button } from "../../ui/button.tsx";
 import { Loading } from "../../ui/loading.tsx";
 import { PageFrame } from "../../ui/page-frame.tsx";
@@ -27,6 +27,7 @@ const member = { mode: "member" } as const;
 export function NotebookPage() {
   const { id = "" } = useParams();
   const notebook = useNotebook(id);
+  const stored = useStoredResults(id).data?.results;
   const person = useMe().data?.person;
   const heedNotice = useNoticeFromServer(id);
   const returns = useReturnsAfterLapse();
@@ -80,6 +81,7 @@ export function NotebookPage() {
           role={role}
           person={person}
           schemaVersion={schemaVersion}
+          stored={stored}
           onNotice={heedNotice}
         />
       </Suspense>
