@@ -28,6 +28,8 @@ export const planWords: Words = {
     `There would be more than ${said(most)} terms and products of terms. Lower the insertions or the largest order.`,
   "plan-relevant-unassigned": ({ latex }) =>
     `The relevant term ${formula(latex)} has no assigned size and is left out: at its natural size it would outweigh everything. Give it a size in the premises, such as $m^2/p^2$.`,
+  "plan-gap": ({ orders }) =>
+    `Fields and symmetries allow terms of order ${said(orders)}, and none is listed: they are taken as absent. If they exist, list them.`,
   "plan-size-unreadable": ({ latex }) =>
     `The size typed for ${formula(latex)} cannot be read, so the term is left out. Correct it in the premises.`,
   "plan-target-unreached": ({ target, leftOut, next }) =>

@@ -51,31 +51,50 @@ const LONGEST_SEARCH = 20_000;
  * free legs is joined first: it must be joined to something in the end, so trying all its partners is exhaustive.
  */
 function canBeJoined(pieces: readonly HalfEdges[], lines: readonly number[], theory: Theory): boolean {
-  const seen = new Set<string>();
+  const failed = new Set<string>();
   let steps = 0;
   const keyOf = (edges: HalfEdges) => `${edges.plain.join(",")}|${edges.conjugate.join(",")}`;
   const join = (left: readonly HalfEdges[], free: readonly number[]): boolean => {
     if (left.length <= 1 || steps > LONGEST_SEARCH) return true;
     steps += 1;
-    const state = `${left.map(keyOf).sort().join(";")}#${free.join(",")}`;
-    if (seen.has(state)) return false;
-    seen.add(state);
+    // Nearly every search succeeds at once: states are only told apart once one has failed.
+    const stateKey = () => `${left.map(keyOf).sort().join(";")}#${free.join(",")}`;
+    if (failed.size > 0 && failed.has(stateKey())) return false;
     const sizes = left.map((piece) => piece.plain.reduce((sum, _, f) => sum + countOf(piece, f), 0));
     const chosen = sizes.indexOf(Math.min(...sizes));
     const piece = left[chosen];
     if (!piece) return false;
-    const tried = new Set<string>();
+    const tried = new Set<HalfEdges>();
     for (const [index, partner] of left.entries()) {
-      if (index === chosen || tried.has(keyOf(partner))) continue;
-      tried.add(keyOf(partner));
+      if (index === chosen || tried.has(partner)) continue;
+      tried.add(partner);
       for (const joined of joinings(piece, partner, free, theory)) {
         const rest = left.filter((_, other) => other !== chosen && other !== index);
         if (join([...rest, joined.piece], joined.free)) return true;
       }
     }
+    failed.add(stateKey());
     return false;
   };
   return join(pieces, lines);
+}
+
+/** Whether the kinds of vertices hang together by fields that have internal lines: necessary, and quickly settled. */
+function shareFields(vertices: readonly VertexCount[], lines: readonly number[]): boolean {
+  if (vertices.length <= 1) return true;
+  const reached = new Set([vertices[0]]);
+  for (let grew = true; grew;) {
+    grew = false;
+    for (const vertex of vertices) {
+      const meets = (other: VertexCount | undefined) =>
+        other !== undefined &&
+        lines.some((count, f) => count > 0 && countOf(vertex.edges, f) > 0 && countOf(other.edges, f) > 0);
+      if (reached.has(vertex) || ![...reached].some(meets)) continue;
+      reached.add(vertex);
+      grew = true;
+    }
+  }
+  return reached.size === vertices.length;
 }
 
 /** The pieces that one line can make of two, largest supply of lines first. */
@@ -115,10 +134,13 @@ export function graphExists(
 ): Existence {
   const splits = closingSplits(vertices, legs, theory);
   if (splits.length === 0) return "lines do not close";
+  if (!shareFields(vertices, lines)) return "falls apart";
   const exists = splits.some((split) => {
-    const pieces = vertices.flatMap(({ edges, count }, index) =>
-      Array.from({ length: count }, (_, n) => (n < (split[index] ?? 0) ? edges : conjugated(edges, theory))),
-    );
+    const pieces = vertices.flatMap(({ edges, count }, index) => {
+      const plain = split[index] ?? 0;
+      const mirror = plain < count ? conjugated(edges, theory) : edges;
+      return Array.from({ length: count }, (_, n) => (n < plain ? edges : mirror));
+    });
     return canBeJoined(pieces, lines, theory);
   });
   return exists ? "exists" : "falls apart";

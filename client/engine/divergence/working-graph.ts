@@ -76,7 +76,7 @@ function loopFormula({ vertices }: GraphParts, { lines, loops }: Degree): string
 function byMomenta({ vertices }: GraphParts, { lines, loops, omega }: Degree, theory: Theory): string {
   const propagators = theory.fields.flatMap((field, f) => {
     const count = lines[f] ?? 0;
-    return count === 0 ? [] : [`${count}\\,${bracketed(theory.measure.minus(field.weight.times(2)))}`];
+    return count === 0 ? [] : [`${count}\\cdot ${bracketed(theory.measure.minus(field.weight.times(2)))}`];
   });
   const derivatives = vertices
     .filter(({ term }) => !term.derivativeWeight.equals(LinearForm.zero))
@@ -121,10 +121,11 @@ function countertermSteps({ counterterms, omega }: GraphDivergence): WorkingStep
       text: `An overall divergence is a polynomial of degree $\\omega = ${omega.latex}$ in external momenta and masses. Its operators have the external legs as factors; derivatives and vector indices contract in pairs unless a spinor or a fixed velocity takes one.`,
     },
     ...counterterms.map((term): WorkingStep => {
+      const gauge = term.gauge === "excluded" ? ",\\quad \\text{excluded by gauge invariance}" : "";
       const rest = term.massPower.text === "0" ? "" : `,\\quad \\text{rest } [m]^{${term.massPower.latex}}`;
       return {
         step: "formula",
-        latex: `${term.latex}:\\quad \\Delta = ${term.dimension.latex},\\quad [c] = ${term.coefficient.latex}${rest}`,
+        latex: `${term.latex}:\\quad \\Delta = ${term.dimension.latex},\\quad [c] = ${term.coefficient.latex}${rest}${gauge}`,
       };
     }),
   ];

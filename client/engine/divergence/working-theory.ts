@@ -1,5 +1,6 @@
 /** The derivation behind a theory's list of divergent amplitudes and its verdict. */
 import type { WorkingStep } from "../evaluation.ts";
+import type { LinearForm } from "../exact/linear-form.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { TheoryDivergence, TheoryVerdict } from "./value.ts";
 import { bracketed } from "./working-graph.ts";
@@ -16,14 +17,25 @@ const reasons: Record<TheoryVerdict, string> = {
     "A coupling has negative dimension, so its vertices raise the degree: every amplitude diverges at some order, and each order in $1/\\Lambda$ needs new terms.",
 };
 
+/** " - 3/2 E": a product to be subtracted; nothing when it vanishes, no factor when that is 1. */
+function minusTimes(factor: LinearForm, symbol: string): string {
+  const number = factor.asRational();
+  if (number?.sign() === 0) return "";
+  if (number && number.sign() < 0) return ` + ${timesSymbol(factor.times(-1), symbol)}`;
+  return ` - ${timesSymbol(factor, symbol)}`;
+}
+function timesSymbol(factor: LinearForm, symbol: string): string {
+  return factor.toString() === "1" ? symbol : `${bracketed(factor)}\\,${symbol}`;
+}
+
 export function explainTheory(value: TheoryDivergence, theory: Theory): WorkingStep[] {
-  const symbols = theory.fields.map((field) => ` - ${bracketed(field.weight)}\\,E_{${field.latex}}`).join("");
+  const symbols = theory.fields.map((field) => minusTimes(field.weight, `E_{${field.latex}}`)).join("");
   const couplings = value.couplings.map(({ termRowId, latex }, index) => {
     const term = theory.terms.find(({ rowId }) => rowId === termRowId);
     return { latex, coefficient: term?.ultravioletCoefficient, name: `V_{${index + 1}}` };
   });
   const vertices = couplings
-    .map(({ coefficient, name }) => (coefficient ? ` - ${bracketed(coefficient)}\\,${name}` : ""))
+    .map(({ coefficient, name }) => (coefficient ? minusTimes(coefficient, name) : ""))
     .join("");
   return [
     { step: "heading", text: "Degree of every amplitude" },

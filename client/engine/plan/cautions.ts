@@ -3,9 +3,10 @@ import type { Notice } from "../evaluation.ts";
 import type { Rational } from "../exact/rational.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { Entry } from "./entries.ts";
+import { workingPoint } from "./powers.ts";
 import type { PlanScales } from "./read-scales.ts";
 import { leftOutAt, type Expansion } from "./sums.ts";
-import { sizeOf, workingPoint, type PlanTerm } from "./terms.ts";
+import { sizeOf, type PlanTerm } from "./terms.ts";
 
 function caution(code: string, facts: Notice["facts"] = {}): Notice {
   return { code, path: [], facts };
@@ -22,8 +23,9 @@ export function planCautions(
   if (scales.Q > 0.5) found.push(caution("plan-slow", { Q: Number(scales.Q.toPrecision(3)) }));
   if (scales.Q + scales.sigmaQ >= 1)
     found.push(caution("plan-reaches-end", { Q: scales.Q, sigma: scales.sigmaQ }));
+  found.push(...gaps(expansion, terms));
   for (const term of terms) {
-    const size = sizeOf(term, expansion.Q, workingPoint);
+    const size = sizeOf(term, expansion.Q);
     if (term.assigned && term.order.sign() === 0 && size > 1)
       found.push(
         caution("plan-assigned-large", {
@@ -48,6 +50,14 @@ export function planCautions(
     found.push(...rateCautions(expansion, last));
   }
   return found;
+}
+
+/** Orders below the highest listed at which operators may exist and none is listed: absent, or forgotten. */
+function gaps({ highestListed, step }: Expansion, terms: readonly PlanTerm[]): Notice[] {
+  const missing: string[] = [];
+  for (let order = step; order.compare(highestListed) < 0; order = order.plus(step))
+    if (!terms.some((term) => term.order.equals(order))) missing.push(order.toString());
+  return missing.length === 0 ? [] : [caution("plan-gap", { orders: missing.join(", ") })];
 }
 
 /** Squares kept at an order where the interference of a single term of that order is missing, and what leads without it. */

@@ -5,11 +5,15 @@ import { shown } from "../exact/shown.ts";
 import type { Theory } from "../premises/theory.ts";
 import { entryLatex, leading, sizeOfEntry, type Entry } from "./entries.ts";
 import { hasLeadingLoops, loopFactor, loopsForTarget, loopsOfInsertions } from "./loops.ts";
+import { workingPoint } from "./powers.ts";
 import type { PlanScales, PlanScaleRead } from "./read-scales.ts";
 import { curvesOf, probeTable, shiftsOf, sigmaOfLeftOut } from "./scan.ts";
 import { largestProbe, leftOutAt, type Expansion, type LeftOut } from "./sums.ts";
-import { sizeOf, workingPoint, type PlanTerm } from "./terms.ts";
+import { sizeOf, type PlanTerm } from "./terms.ts";
 import type { OrderPlanValue, PlanEntry, PlanOrder, PlanScale } from "./value.ts";
+
+/** Longer lists are cut to their largest entries; sums and counts are always over all. */
+const MOST_LISTED = 40;
 
 export function describePlan(
   expansion: Expansion,
@@ -39,7 +43,9 @@ export function describePlan(
     order: text,
     leftOut: {
       ...(stop?.leftOut ?? { listed: 0, unlisted: 0, used: 0 }),
-      sigma: roundFloat(sigmaOfLeftOut(expansion, order ?? expansion.orders.at(-1) ?? Rational.zero, scales)),
+      sigma: roundFloat(
+        sigmaOfLeftOut(expansion, order ?? expansion.orders.at(-1) ?? Rational.zero, terms, scales),
+      ),
     },
     firstOut: firstLeftOut(orders, order),
     firstUnlisted: { order: shown(firstUnlisted), size: roundFloat(expansion.Q ** firstUnlisted.toFloat()) },
@@ -52,7 +58,7 @@ export function describePlan(
       rowId: term.rowId,
       latex: term.latex,
       order: shown(term.order),
-      size: roundFloat(sizeOf(term, expansion.Q, workingPoint)),
+      size: roundFloat(sizeOf(term, expansion.Q)),
       assigned: term.assigned !== null,
     })),
     shifts: shiftsOf(expansion, scales),
@@ -73,7 +79,7 @@ function describeEntry(entry: Entry, Q: number): PlanEntry {
     id: entry.id,
     latex: entryLatex(entry),
     order: [shown(entry.order)],
-    size: roundFloat(sizeOfEntry(entry, Q, workingPoint)),
+    size: roundFloat(sizeOfEntry(entry, Q)),
     insertions: [...counts].map(([termRowId, count]) => ({ termRowId, count })),
     role: entry.role,
     assigned: entry.insertions.some(({ term }) => term.assigned !== null),
@@ -89,8 +95,9 @@ function describeOrder(
   scales: PlanScales,
 ): PlanOrder {
   const own = at.sign() === 0 ? leading(terms) : expansion.entries.filter(({ order }) => order.equals(at));
-  const entries = own.map((entry) => describeEntry(entry, expansion.Q)).sort((a, b) => b.size - a.size);
-  const sum = entries.reduce((total, { size }) => total + size, 0);
+  const sized = own.map((entry) => ({ entry, size: sizeOfEntry(entry, expansion.Q) }));
+  const largest = [...sized].sort((a, b) => b.size - a.size).slice(0, MOST_LISTED);
+  const sum = sized.reduce((total, { size }) => total + size, 0);
   const probe = largestProbe(expansion, at);
   // At order 0 the leading amplitude itself, of size 1, carries the loops.
   const carried = at.sign() === 0 ? 1 : sum;
@@ -101,7 +108,8 @@ function describeOrder(
       : loopsForTarget(carried, factor, expansion.target);
   return {
     order: [shown(at)],
-    entries,
+    entries: largest.map(({ entry }) => describeEntry(entry, expansion.Q)),
+    count: own.length,
     sum: roundFloat(sum),
     leftOut: rounded(leftOutAt(expansion, at, workingPoint)),
     largestProbe: roundFloat(

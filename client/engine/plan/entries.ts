@@ -1,6 +1,6 @@
 /** What an amplitude or a rate consists of: terms and their products, each with an order and a size. */
 import { Rational } from "../exact/rational.ts";
-import { sizeOf, type PlanTerm, type Point } from "./terms.ts";
+import { sizeOf, type PlanTerm } from "./terms.ts";
 import type { PlanEntry } from "./value.ts";
 
 export interface Insertion {
@@ -19,10 +19,11 @@ export interface Entry {
   readonly sides: readonly (readonly Insertion[])[];
 }
 
-export function sizeOfEntry(entry: Entry, Q: number, point: Point): number {
-  return entry.insertions.reduce(
-    (size, { term, count }) => size * sizeOf(term, Q, point) ** count,
-    entry.factor as number,
+/** At the working point, relative to the leading amplitude or rate. */
+export function sizeOfEntry(entry: Entry, Q: number): number {
+  return entry.insertions.reduce<number>(
+    (size, { term, count }) => size * sizeOf(term, Q) ** count,
+    entry.factor,
   );
 }
 

@@ -8,16 +8,17 @@ import { describePlan } from "./describe.ts";
 import type { OrderPlanInputs } from "./inputs.ts";
 import { readSettings, type PlanSettings } from "./read-inputs.ts";
 import { readScales, type PlanScales } from "./read-scales.ts";
+import { sumPowers, workingPoint } from "./powers.ts";
 import { planScalars } from "./scalars.ts";
 import { stepOfOrders } from "./allowed-orders.ts";
 import { Rational } from "../exact/rational.ts";
 import { distinctOrders, leftOutAt, orderFor, type Expansion } from "./sums.ts";
-import { planTerms, workingPoint, type PlanTerm } from "./terms.ts";
+import { planTerms, type PlanTerm } from "./terms.ts";
 import type { OrderPlanValue } from "./value.ts";
 import { explainPlan } from "./working.ts";
 
-/** More entries than these would be a table nobody reads. */
-const MOST_ENTRIES = 1_500;
+/** Past this many products counting would take seconds: a lower cap is asked for instead. */
+const MOST_ENTRIES = 20_000;
 
 /**
  * The order to stop at for a target accuracy, in one expansion parameter Q = p/Λ. Problems beside a value: a relevant
@@ -92,8 +93,9 @@ function expand(
   const listed = terms.map(({ order }) => order).filter((order) => order.compare(settings.cap) <= 0);
   return {
     Q: scales.Q,
-    amplitude,
+    amplitude: sumPowers(amplitude, scales.Q),
     entries,
+    powers: sumPowers(entries, scales.Q),
     orders: distinctOrders(entries),
     observable,
     sumUsed,

@@ -3,8 +3,9 @@ import { roundFloat } from "../evaluation.ts";
 import { shown } from "../exact/shown.ts";
 import type { Rational } from "../exact/rational.ts";
 import type { PlanScales } from "./read-scales.ts";
-import { leftOutAt, orderFor, type Expansion } from "./sums.ts";
-import { workingPoint, type Point } from "./terms.ts";
+import type { Point } from "./powers.ts";
+import { leftOutAt, orderFor, slopesOfLeftOut, type Expansion } from "./sums.ts";
+import type { PlanTerm } from "./terms.ts";
 import type { LeftOutCurve, ProbeRow, Shift } from "./value.ts";
 
 const probeFactors = [0.25, 0.5, 0.75, 1, 1.25, 1.5, 2, 3, 4, 6];
@@ -63,28 +64,23 @@ export function curvesOf(expansion: Expansion, { probe }: PlanScales): LeftOutCu
  * Standard uncertainty of what is left out, to first order: from every source that p and Λ rest on, and from each size
  * given by hand. A size given by hand does not move with Λ.
  */
-export function sigmaOfLeftOut(expansion: Expansion, order: Rational, { probe, heavy }: PlanScales): number {
-  const step = 1e-5;
-  const used = (point: Point) => leftOutAt(expansion, order, point).used;
-  const slope = (point: (by: number) => Point) => (used(point(step)) - used(point(-step))) / (2 * step);
-  const alongProbe = slope((by) => ({ probe: Math.exp(by), heavy: 1 }));
-  const alongHeavy = slope((by) => ({ probe: 1, heavy: Math.exp(by) }));
+export function sigmaOfLeftOut(
+  expansion: Expansion,
+  order: Rational,
+  terms: readonly PlanTerm[],
+  { probe, heavy }: PlanScales,
+): number {
+  const slopes = slopesOfLeftOut(expansion, order);
   const relative = ({ quantity }: PlanScales["probe"], source: string) =>
     (quantity.spread.get(source) ?? 0) / quantity.value;
   const sources = new Set([...probe.quantity.spread.keys(), ...heavy.quantity.spread.keys()]);
-  const shares = [...sources].map(
-    (source) => alongProbe * relative(probe, source) + alongHeavy * relative(heavy, source),
+  const byScales = [...sources].map(
+    (source) => slopes.probe * relative(probe, source) + slopes.heavy * relative(heavy, source),
   );
-  const byHand = new Map(
-    expansion.entries.flatMap(({ insertions }) => insertions).map(({ term }) => [term.rowId, term.assigned]),
+  const byHand = terms.map(({ rowId, assigned }) =>
+    assigned && assigned.value !== 0
+      ? ((slopes.byHand.get(rowId) ?? 0) * assigned.sigma) / Math.abs(assigned.value)
+      : 0,
   );
-  for (const [rowId, assigned] of byHand) {
-    if (!assigned || assigned.sigma === 0 || assigned.value === 0) continue;
-    const point = (by: number): Point => ({
-      ...workingPoint,
-      assigned: new Map([[rowId, assigned.value * (1 + by)]]),
-    });
-    shares.push(slope(point) * (assigned.sigma / assigned.value));
-  }
-  return Math.hypot(...shares);
+  return Math.hypot(...byScales, ...byHand);
 }

@@ -1,15 +1,16 @@
 /** What is left out when one stops at an order, and the order to stop at. */
 import { Rational } from "../exact/rational.ts";
-import { sizeOfEntry, type Entry } from "./entries.ts";
-import type { Point } from "./terms.ts";
+import type { Entry } from "./entries.ts";
+import { valueAt, workingPoint, type Point, type Power } from "./powers.ts";
 import type { OrderPlanValue } from "./value.ts";
 
 export interface Expansion {
   readonly Q: number;
-  /** Corrections to the amplitude. */
-  readonly amplitude: readonly Entry[];
+  /** Sum of the corrections to the amplitude. */
+  readonly amplitude: readonly Power[];
   /** The observable's entries of positive order: the same, or those of the rate. */
   readonly entries: readonly Entry[];
+  readonly powers: readonly Power[];
   /** Distinct orders of the observable, ascending, 0 first. */
   readonly orders: readonly Rational[];
   readonly observable: OrderPlanValue["observable"];
@@ -35,29 +36,64 @@ export function distinctOrders(entries: readonly Entry[]): Rational[] {
   return [...orders.values()].sort((a, b) => a.compare(b));
 }
 
+/** T = Σ_j Q^(N + j s) = Q^(N+s)/(1 − Q^s): one term of natural size at each allowed order past the last listed. */
+function tailAt({ Q: atWorkingPoint, highestListed, step: distance }: Expansion, point: Point): number {
+  const Q = (atWorkingPoint * point.probe) / point.heavy;
+  if (Q >= 1) return Infinity;
+  const step = distance.toFloat();
+  return Q ** (highestListed.toFloat() + step) / (1 - Q ** step);
+}
+
 /**
- * Terms that nobody listed, one of natural size at each allowed order past the last listed: in an amplitude
- * T = Σ_j Q^(N + j s) = Q^(N+s)/(1 − Q^s). In a rate, with A the sum of the listed corrections,
+ * What unlisted terms would add. In a rate, with A the sum of the listed corrections to the amplitude and T the tail,
  * |1 + A + T|² − |1 + A|² = 2T(1 + A) + T², less 2T when nothing interferes with the leading amplitude. (Own derivation.)
  */
-function unlisted(expansion: Expansion, point: Point): number {
-  const Q = (expansion.Q * point.probe) / point.heavy;
-  if (Q >= 1) return Infinity;
-  const step = expansion.step.toFloat();
-  const tail = Q ** (expansion.highestListed.toFloat() + step) / (1 - Q ** step);
-  if (expansion.observable === "amplitude") return tail;
-  const listed = expansion.amplitude.reduce((sum, entry) => sum + sizeOfEntry(entry, expansion.Q, point), 0);
-  return (expansion.observable === "rate with interference" ? 2 * tail : 0) + 2 * listed * tail + tail ** 2;
+function unlistedAt(expansion: Expansion, point: Point): number {
+  const tail = tailAt(expansion, point);
+  if (expansion.observable === "amplitude" || tail === Infinity) return tail;
+  const leading = expansion.observable === "rate with interference" ? 1 : 0;
+  return 2 * tail * (leading + valueAt(expansion.amplitude, point)) + tail ** 2;
 }
 
 /** Sizes are added, not combined in quadrature: signs are unknown and a bound is wanted. */
 export function leftOutAt(expansion: Expansion, order: Rational, point: Point): LeftOut {
-  const listed = expansion.entries.reduce(
-    (sum, entry) => (entry.order.compare(order) > 0 ? sum + sizeOfEntry(entry, expansion.Q, point) : sum),
-    0,
-  );
-  const beyond = unlisted(expansion, point);
-  return { listed, unlisted: beyond, used: expansion.sumUsed === "natural tail" ? listed + beyond : listed };
+  const listed = valueAt(beyond(expansion, order), point);
+  const unlisted = unlistedAt(expansion, point);
+  return { listed, unlisted, used: expansion.sumUsed === "natural tail" ? listed + unlisted : listed };
+}
+
+function beyond({ powers }: Expansion, order: Rational): readonly Power[] {
+  return powers.filter((power) => power.order.compare(order) > 0);
+}
+
+export interface Slopes {
+  /** d(left out)/d ln p, d ln Λ, and d ln of each size given by hand. */
+  readonly probe: number;
+  readonly heavy: number;
+  readonly byHand: ReadonlyMap<string, number>;
+}
+
+/** Slopes of what is left out and counts, at the working point. */
+export function slopesOfLeftOut(expansion: Expansion, order: Rational): Slopes {
+  const slopes = (powers: readonly Power[], factor: number, before: Slopes): Slopes => {
+    const byHand = new Map(before.byHand);
+    for (const power of powers)
+      for (const [rowId, slope] of power.byHand) byHand.set(rowId, (byHand.get(rowId) ?? 0) + factor * slope);
+    const along = (which: "probe" | "heavy") =>
+      powers.reduce((sum, power) => sum + factor * power[which] * power.size, before[which]);
+    return { probe: along("probe"), heavy: along("heavy"), byHand };
+  };
+  const listed = slopes(beyond(expansion, order), 1, { probe: 0, heavy: 0, byHand: new Map() });
+  if (expansion.sumUsed === "listed terms only") return listed;
+  const tail = tailAt(expansion, workingPoint);
+  const step = expansion.step.toFloat();
+  const Qs = expansion.Q ** step;
+  const tailSlope = tail * (expansion.highestListed.toFloat() + step + (step * Qs) / (1 - Qs));
+  const isAmplitude = expansion.observable === "amplitude";
+  const leading = expansion.observable === "rate with interference" ? 1 : 0;
+  const byTail = isAmplitude ? 1 : 2 * (leading + valueAt(expansion.amplitude, workingPoint)) + 2 * tail;
+  const both = isAmplitude ? listed : slopes(expansion.amplitude, 2 * tail, listed);
+  return { ...both, probe: both.probe + byTail * tailSlope, heavy: both.heavy - byTail * tailSlope };
 }
 
 /** The lowest order that leaves out less than the target; null when no listed order does, or the expansion has ended. */

@@ -3,15 +3,6 @@ import type { Problem } from "../evaluation.ts";
 import { Rational } from "../exact/rational.ts";
 import type { Term, Theory } from "../premises/theory.ts";
 
-/** Where sizes are taken: factors relative to the working point. */
-export interface Point {
-  readonly probe: number;
-  readonly heavy: number;
-  /** Sizes given by hand, by row id, where they differ from what is stated. */
-  readonly assigned?: ReadonlyMap<string, number>;
-}
-export const workingPoint: Point = { probe: 1, heavy: 1 };
-
 export interface PlanTerm {
   readonly rowId: string;
   readonly latex: string;
@@ -47,7 +38,7 @@ export function planTerms(theory: Theory, Q: number): PlanTerms | null {
     const order = excess.sign() < 0 ? Rational.zero : excess;
     const { rowId, latex, assigned } = term;
     const read = { rowId, latex, legs, order, excess, natural: Math.abs(term.natural), assigned };
-    const size = sizeOf(read, Q, workingPoint);
+    const size = sizeOf(read, Q);
     const refuse = (code: string) => problems.push({ code, path: ["standsOn"], facts: { latex, rowId } });
     if (Number.isNaN(size)) refuse("plan-size-unreadable");
     else if (excess.sign() < 0 && !assigned && size >= 1) refuse("plan-relevant-unassigned");
@@ -57,15 +48,18 @@ export function planTerms(theory: Theory, Q: number): PlanTerms | null {
 }
 
 /**
- * Size relative to the leading amplitude. By dimension ĝ (p/Λ)^(Δ−d). A size given by hand is one at the working point;
- * its coefficient being fixed, it follows p with the same power, and does not know Λ.
- * Source: Weinberg 1979, Physica A 96, 327; the dependence of assigned sizes on p is an own derivation.
- *
- * @param Q p/Λ at the working point
+ * Size relative to the leading amplitude at the working point: ĝ Q^(Δ−d) by dimension, or what was given by hand.
+ * Source: Weinberg 1979, Physica A 96, 327.
  */
-export function sizeOf(term: PlanTerm, Q: number, point: Point): number {
-  const power = term.excess.toFloat();
-  const given = point.assigned?.get(term.rowId) ?? term.assigned?.value;
-  if (given !== undefined) return Math.abs(given) * point.probe ** power;
-  return term.natural * ((Q * point.probe) / point.heavy) ** power;
+export function sizeOf(term: PlanTerm, Q: number): number {
+  return term.assigned ? Math.abs(term.assigned.value) : term.natural * Q ** term.excess.toFloat();
+}
+
+/**
+ * How the size follows p and Λ, as powers. A size given by hand is one at the working point: as its coefficient is fixed
+ * it follows p all the same, but does not know Λ. (Own derivation.)
+ */
+export function powersOf({ excess, assigned }: PlanTerm): { readonly probe: number; readonly heavy: number } {
+  const power = excess.toFloat();
+  return { probe: power, heavy: assigned ? 0 : -power };
 }

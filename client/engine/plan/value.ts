@@ -39,8 +39,10 @@ export interface PlanEntry {
 
 export interface PlanOrder {
   readonly order: readonly Exact[];
-  /** Entries of exactly this order, largest first. */
+  /** Entries of exactly this order, largest first; of long lists the largest 40. */
   readonly entries: readonly PlanEntry[];
+  /** How many there are. */
+  readonly count: number;
   /** Sum of the entries' sizes. */
   readonly sum: number;
   /** What is left out when one stops here: listed entries beyond, and the estimate of unlisted ones. */

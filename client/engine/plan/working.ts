@@ -1,5 +1,6 @@
 /** The derivation of an order plan: parameter, sizes, sums, the cut, and what is assumed. */
 import type { WorkingStep } from "../evaluation.ts";
+import { shown } from "../exact/shown.ts";
 import type { PlanTerm } from "./terms.ts";
 import type { OrderPlanValue } from "./value.ts";
 
@@ -28,6 +29,11 @@ export function explainPlan(value: OrderPlanValue, terms: readonly PlanTerm[]): 
   ];
 }
 
+/** "Q^{2}", and "Q" or "1" where the power is not written. */
+function powerOfQ(exponent: { readonly text: string; readonly latex: string }): string {
+  return exponent.text === "0" ? "1" : exponent.text === "1" ? "Q" : `Q^{${exponent.latex}}`;
+}
+
 function parameterSteps({ parameters, probe, heavy }: OrderPlanValue): WorkingStep[] {
   const [Q] = parameters;
   if (!Q) return [];
@@ -49,7 +55,7 @@ function sizeSteps(
   const lines = terms.map((term): WorkingStep => {
     const size = sized.find(({ rowId }) => rowId === term.rowId)?.size ?? 0;
     const natural = term.natural === 1 ? "" : `${floatLatex(term.natural)}\\,`;
-    const by = term.assigned ? "\\text{given by hand}" : `${natural}Q^{${term.excess.toLatex()}}`;
+    const by = term.assigned ? "\\text{given by hand}" : `${natural}${powerOfQ(shown(term.excess))}`;
     return {
       step: "formula",
       latex: `${term.latex}:\\quad \\Delta - d = ${term.excess.toLatex()},\\quad ${by} = ${floatLatex(size)}`,
@@ -63,9 +69,9 @@ function sizeSteps(
     { step: "heading", text: "Orders and sizes" },
     ...lines,
     { step: "prose", text: rate },
-    ...orders.map(({ order, sum, entries }): WorkingStep => ({
+    ...orders.map(({ order, sum, count }): WorkingStep => ({
       step: "formula",
-      latex: `Q^{${order[0]?.latex ?? ""}}:\\quad ${entries.length}\\text{ listed},\\quad \\Sigma = ${floatLatex(sum)}`,
+      latex: `\\text{order }${order[0]?.latex ?? ""}:\\quad ${count}\\text{ listed},\\quad \\Sigma = ${floatLatex(sum)}`,
     })),
   ];
 }
@@ -85,7 +91,7 @@ function sumSteps(value: OrderPlanValue): WorkingStep[] {
       step: "prose",
       text: `Beyond the listed terms, one term of natural size is taken at each order from $${firstUnlisted.order.latex}$ on in steps of $${step.latex}$, the orders that fields and symmetries allow; their amplitude sums to`,
     },
-    { step: "formula", latex: `T = \\frac{Q^{${firstUnlisted.order.latex}}}{1 - Q^{${step.latex}}}` },
+    { step: "formula", latex: `T = \\frac{${powerOfQ(firstUnlisted.order)}}{1 - ${powerOfQ(step)}}` },
     ...orders.map(({ order: at, leftOut }): WorkingStep => ({
       step: "formula",
       latex: `r = ${at[0]?.latex ?? ""}:\\quad ${floatLatex(leftOut.listed)}\\ \\text{listed} + ${floatLatex(leftOut.unlisted)}\\ \\text{unlisted}`,

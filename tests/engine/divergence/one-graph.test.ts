@@ -40,7 +40,7 @@ describe("one graph", () => {
     ]);
     const formulas = working.flatMap((step) => (step.step === "formula" ? [step.latex] : []));
     expect(formulas).toContain("L = 2 - 2 + 1 = 1");
-    expect(formulas.some((latex) => latex.includes("4\\cdot 1 - 2\\,2 = 0"))).toBe(true);
+    expect(formulas.some((latex) => latex.includes("4\\cdot 1 - 2\\cdot 2 = 0"))).toBe(true);
     expect(formulas.some((latex) => latex.includes("4 - 4\\cdot 1 - 2\\cdot 0 = 0"))).toBe(true);
   });
 

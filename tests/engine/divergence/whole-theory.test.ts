@@ -117,6 +117,18 @@ describe("the amplitudes of a theory", () => {
     expect(checked).toBeGreaterThan(10);
   });
 
+  it("count a field's own kinetic term as a renormalisation, not as missing", () => {
+    const { amplitudes, missing } = listOf(
+      theoryOf({ fields: { phi: "real scalar" }, terms: { l: "phi4", m: "phi2" } }),
+    );
+    const self = amplitudes.find(({ legs }) => legs.text === "phi^2")?.counterterms;
+    expect(self?.map(({ text, kinetic, presentAs }) => [text, kinetic, presentAs])).toEqual([
+      ["d^2 phi^2", true, null],
+      ["phi^2", false, "m"],
+    ]);
+    expect(missing).toEqual([]);
+  });
+
   it("leave fields out that do not interact", () => {
     expect(
       divergent(

@@ -86,6 +86,23 @@ describe("what is left out of an amplitude", () => {
     expect(capped.orders[1]?.leftOut.unlisted).toBeCloseTo(1e-4 / 0.99, 12);
   });
 
+  it("asks about orders at which terms may exist and none is listed", () => {
+    const notices = (terms: TheorySketch["terms"]) => askPlan(scalar(terms)).notices;
+    expect(notices({ c8: "phi8" })).toMatchObject([{ code: "plan-gap", facts: { orders: "2" } }]);
+    expect(notices(listed)).toEqual([]);
+  });
+
+  it("lists the largest entries of a long order and counts them all", () => {
+    const many = Object.fromEntries(
+      Array.from({ length: 12 }, (_, n) => [`c${n}`, { fields: "phi6", natural: 1 + n }]),
+    );
+    const order4 = planOf(scalar(many)).orders[2];
+    expect([order4?.count, order4?.entries.length]).toEqual([78, 40]);
+    expect(order4?.entries[0]).toMatchObject({ id: "c11*c11", size: 0.0144 });
+    // Own derivation: Σ over pairs i ≤ j of ĝ_i ĝ_j = (78² + 650)/2 for ĝ = 1 … 12.
+    expect(order4?.sum).toBeCloseTo(((78 ** 2 + 650) / 2) * 1e-4, 10);
+  });
+
   it("takes unlisted terms at every order that fields and symmetries allow", () => {
     const step = (sketch: Omit<TheorySketch, "scales">) =>
       planOf(theoryOf({ ...sketch, scales: [gev("p", "probe", 1), gev("Lambda", "heavy", 100)] })).step.text;
@@ -95,6 +112,18 @@ describe("what is left out of an amplitude", () => {
     ).toBe("2");
     expect(step({ fields: { phi: "real scalar" }, terms: { c: "phi6" } })).toBe("1");
     expect(step({ fields: { psi: "Dirac spinor" }, terms: { c: "psi~2 psi2" } })).toBe("1");
+    // Weyl spinors in d = 4 with a conserved number: ψ†ψ needs a vector index, so all orders are even; without
+    // the numbers l²h² of order 1 exists (Weinberg 1979).
+    const weyl = (number: number) =>
+      step({
+        symmetries: ["U(1)", "U(1)"],
+        fields: {
+          l: { kind: "Weyl spinor", charges: [number, 0] },
+          h: { kind: "complex scalar", charges: [0, number] },
+        },
+        terms: { c: { fields: "l~ l h~ h", derivatives: 1 } },
+      });
+    expect([weyl(1), weyl(0)]).toEqual(["2", "1"]);
     // In d = 3 a scalar weighs ½: φ⁸∂ᵏ is of order 1 + k, with φ → −φ all whole orders occur.
     expect(
       step({
@@ -255,6 +284,32 @@ describe("how the order moves", () => {
     expect(shifts.map(({ order }) => order?.text)).toEqual(["2", "2", "2", "4"]);
     expect(parameters[0]?.sigma).toBeCloseTo(0.1 * Math.hypot(0.2, 1 / 3), 12);
   });
+
+  it.each(["amplitude", "rate with interference", "rate without interference"] as const)(
+    "has the uncertainty of what is left out of an %s that moving p, Λ and sizes by hand gives",
+    (observable) => {
+      const at = (p: number, heavy: number, c6: number, spread = [0, 0, 0]) =>
+        planOf(
+          scalar({ c6: { fields: "phi6", assigned: [c6, c6 * (spread[2] ?? 0)] }, c8: "phi8" }, [
+            gev("p", "probe", p, p * (spread[0] ?? 0)),
+            gev("Lambda", "heavy", heavy, heavy * (spread[1] ?? 0)),
+          ]),
+          { observable, target: "0.5" },
+        ).leftOut;
+      const step = 1e-4;
+      // Central differences of the whole computation, each source at a time; a size by hand follows p as its square.
+      const moved = (p: number, heavy: number, c6: number) =>
+        at(300 * p, 3000 * heavy, 0.02 * c6 * p ** 2).used;
+      const slopes = [
+        (moved(1 + step, 1, 1) - moved(1 - step, 1, 1)) / (2 * step),
+        (moved(1, 1 + step, 1) - moved(1, 1 - step, 1)) / (2 * step),
+        (moved(1, 1, 1 + step) - moved(1, 1, 1 - step)) / (2 * step),
+      ];
+      const spread = [0.05, 0.1, 0.2];
+      const expected = Math.hypot(...slopes.map((slope, n) => slope * (spread[n] ?? 0)));
+      expect(at(300, 3000, 0.02, spread).sigma / expected).toBeCloseTo(1, 5);
+    },
+  );
 
   it("never needs a lower order at a higher probe", () => {
     const orders = planOf(theory, { target: "1e-3" }).probeTable.map(({ order }) =>
