@@ -1,6 +1,7 @@
-import { lazy, Suspense, useEffect, useRef, useState } from "react";
+import { lazy, Suspense, useEffect, useRef, useState, type RefObject } from "react";
 import { Button } from "../../ui/button.tsx";
 import { Loading } from "../../ui/loading.tsx";
+import "./excerpt.css";
 
 const ExcerptLive = lazy(async () => ({ default: (await import("./excerpt-live.tsx")).ExcerptLive }));
 
@@ -30,7 +31,7 @@ export function Excerpt() {
         numbers in the sentence. The sector is invented; what you type stays on this page and is neither kept
         nor sent.
       </p>
-      <div ref={place} className="mt-6 min-h-[40rem]">
+      <div ref={place} className="excerpt mt-6 min-h-[40rem]">
         {near && (
           <Suspense fallback={<Loading what="Opening the excerpt" />}>
             <ExcerptLive key={attempt} />
@@ -42,7 +43,7 @@ export function Excerpt() {
 }
 
 /** True from the first time the element is within a screen of being seen. */
-function useNear(element: React.RefObject<Element | null>): boolean {
+function useNear(element: RefObject<Element | null>): boolean {
   const [near, setNear] = useState(false);
   useEffect(() => {
     if (near || !element.current) return;
