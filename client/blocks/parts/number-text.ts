@@ -1,6 +1,6 @@
 /** Floats of a result as text, where the engine gives only the number. */
 import { floatText } from "#engine/notation/float-text.ts";
-import { unitText } from "#engine/notebook/unit-text.ts";
+import { unitText } from "#engine/notation/unit-text.ts";
 
 export function sizeText(value: number, digits = 2): string {
   return floatText(value, 0, { digits, style: "auto", markup: "unicode" });

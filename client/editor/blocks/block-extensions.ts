@@ -3,6 +3,7 @@ import type { AnyExtension, NodeViewRenderer } from "@tiptap/core";
 import { kindNames } from "#engine/kind.ts";
 import { pinNode } from "#schema/block-structure.ts";
 import { pinNodeView } from "../pins/pin-node-view.tsx";
+import { PinShortcut } from "../pins/open-pin-picker.ts";
 import { PinKeyboard } from "../pins/pin-keyboard.ts";
 import { ProseCaret } from "../pins/prose-caret.ts";
 import { BlockKeyboard } from "./block-keyboard.ts";
@@ -18,5 +19,5 @@ export const blockViews: Readonly<Record<string, NodeViewRenderer>> = {
 
 /** Behaviour that goes with the views. */
 export function blockExtensions(world: BlockWorld): readonly AnyExtension[] {
-  return [BlockPairing, BlockKeyboard.configure({ world }), PinKeyboard.configure({ world }), ProseCaret];
+  return [BlockPairing, BlockKeyboard.configure({ world }), PinKeyboard.configure({ world }), PinShortcut, ProseCaret];
 }

@@ -25,6 +25,10 @@ export interface BlockWorld {
   /** Asks first; one question at a time. */
   ask(question: Question | null): void;
   question(): Question | null;
+  /** Opens and closes the list of numbers that can be pinned. */
+  pick(open: boolean): void;
+  picking(): boolean;
+  /** Told of questions and of the list. */
   onQuestion(listener: () => void): () => void;
   destroy(): void;
 }
@@ -38,6 +42,7 @@ export function createBlockWorld(
   const presence = createFieldPresence(session.awareness);
   const listeners = new Set<() => void>();
   let question: Question | null = null;
+  let picking = false;
   return {
     session,
     directory,
@@ -49,6 +54,11 @@ export function createBlockWorld(
       for (const listener of listeners) listener();
     },
     question: () => question,
+    pick(open) {
+      picking = open;
+      for (const listener of listeners) listener();
+    },
+    picking: () => picking,
     onQuestion(listener) {
       listeners.add(listener);
       return () => listeners.delete(listener);

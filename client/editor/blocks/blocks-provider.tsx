@@ -1,10 +1,11 @@
 import type { StoredResult } from "#contract/api.ts";
 import type { Editor } from "@tiptap/core";
-import { useEffect, useState, useSyncExternalStore, type ReactNode } from "react";
+import { lazy, Suspense, useEffect, useState, useSyncExternalStore, type ReactNode } from "react";
 import { ConfirmDialog } from "../../ui/confirm-dialog.tsx";
 import "../../blocks/blocks.css";
 import { ResultsContext } from "../evaluation/use-results.ts";
 import type { NotebookSession } from "../notebook-session.ts";
+import { offerPinPicker } from "../pins/open-pin-picker.ts";
 import { announcePins } from "../pins/use-pin-counts.ts";
 import { BlockWorldContext, createBlockWorld, useBlockWorld, type BlockWorld } from "./block-world.ts";
 
@@ -35,6 +36,7 @@ export function BlocksProvider({ session, stored, children }: Props) {
       <ResultsContext value={world.results}>
         {children}
         <Asking world={world} />
+        <Picking world={world} />
       </ResultsContext>
     </BlockWorldContext>
   );
@@ -46,11 +48,25 @@ export function useBlocksEditor(editor: Editor): void {
   useEffect(() => {
     world.editor = editor;
     const quiet = announcePins(world, editor);
+    const withdraw = offerPinPicker(editor, () => world.pick(!world.session.state().readOnly));
     return () => {
       quiet();
+      withdraw();
       world.editor = null;
     };
   }, [world, editor]);
+}
+
+const PinPicker = lazy(async () => ({ default: (await import("../pins/pin-picker.tsx")).PinPicker }));
+
+function Picking({ world }: { readonly world: BlockWorld }) {
+  const picking = useSyncExternalStore(world.onQuestion, world.picking);
+  if (!picking) return null;
+  return (
+    <Suspense fallback={null}>
+      <PinPicker onClose={() => world.pick(false)} />
+    </Suspense>
+  );
 }
 
 function Asking({ world }: { readonly world: BlockWorld }) {

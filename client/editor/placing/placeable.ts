@@ -3,11 +3,12 @@ import type { Editor } from "@tiptap/core";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { newId } from "../new-id.ts";
 import { openFormulaAt } from "../mathematics/mathematics.ts";
+import { openPinPicker } from "../pins/open-pin-picker.ts";
 import { placeBlock, placeNode } from "./place.ts";
 
 export interface Placeable {
   readonly id: string;
-  readonly group: "Blocks" | "Mathematics" | "Prose";
+  readonly group: "Blocks" | "Numbers" | "Mathematics" | "Prose";
   readonly title: string;
   readonly purpose: string;
   place(editor: Editor, gap: number): void;
@@ -44,6 +45,13 @@ const row = (type: string) => ({
 
 export const placeables: readonly Placeable[] = [
   ...blocks,
+  {
+    id: "pin",
+    group: "Numbers",
+    title: "Pin",
+    purpose: "A number of a result, put into the sentence where the caret last stood, and watched from then on.",
+    place: openPinPicker,
+  },
   {
     id: "displayMath",
     group: "Mathematics",
