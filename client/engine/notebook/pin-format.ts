@@ -6,7 +6,7 @@ import type { ScalarValue } from "../evaluation.ts";
 import { Rational } from "../exact/rational.ts";
 import { floatText, type Markup, type NumberStyle } from "../notation/float-text.ts";
 import { exactText } from "./exact-text.ts";
-import { unitText } from "./unit-text.ts";
+import { unitText } from "../notation/unit-text.ts";
 
 export const numberStyles: readonly NumberStyle[] = ["auto", "plain", "scientific", "percent"];
 export const signStyles = ["negative", "always", "both"] as const;

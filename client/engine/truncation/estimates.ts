@@ -2,8 +2,6 @@
  * The four estimates as plain formulas. X = X_ref Σ c_n Qⁿ is known through order k;
  * `nextOrder` is the first order after k that exists. All give a half-width h in the unit of X: X ± h.
  */
-import { studentHalfWidth } from "./student-t.ts";
-
 /** X through one order that exists. */
 export interface KnownOrder {
   readonly order: number;
@@ -98,16 +96,9 @@ export function conjugatePosterior(
 }
 
 /**
- * Half-width of the Student-t_ν error of scale² = X_ref² τ² · `squareSum`, which is Q^(2(k+1))/(1 − Q²) for all omitted
- * orders and Q^(2(k+1)) for the first.
+ * Scale of the Student-t_ν error: its square is X_ref² τ² · `squareSum`, which is Q^(2(k+1))/(1 − Q²) for all omitted
+ * orders and Q^(2(k+1)) for the first. The half-width is the quantile times it. Same source.
  */
-export function conjugateHalfWidth(
-  posterior: ConjugatePosterior,
-  reference: number,
-  squareSum: number,
-  probability: number,
-): number {
-  return (
-    studentHalfWidth(probability, posterior.nu) * Math.abs(reference) * Math.sqrt(posterior.tau2 * squareSum)
-  );
+export function conjugateScale({ tau2 }: ConjugatePosterior, reference: number, squareSum: number): number {
+  return Math.abs(reference) * Math.sqrt(tau2 * squareSum);
 }

@@ -8,6 +8,7 @@ import { readOrders } from "./read-orders.ts";
 import { readSettings } from "./read-settings.ts";
 import { describeScalars } from "./scalars.ts";
 import { estimateSeries, type Series } from "./series.ts";
+import { rememberQuantiles } from "./student-t.ts";
 import type { TruncationInputs } from "./shape.ts";
 import type { TruncationValue } from "./value.ts";
 import { describeWorking } from "./working.ts";
@@ -45,6 +46,7 @@ export function evaluateTruncation(
     degrees: settings.degrees,
     nu0: settings.nu0,
     tau0: settings.tau0,
+    quantiles: rememberQuantiles(),
   };
   const { q } = parameter;
   const estimate = estimateSeries(series, q.value);

@@ -1,7 +1,7 @@
 /** Applies the four estimates to a series at one Q: coefficients first, then every method at every order. */
 import {
-  conjugateHalfWidth,
   conjugatePosterior,
+  conjugateScale,
   differencesOfOrders,
   largestSize,
   omittedPowers,
@@ -10,6 +10,7 @@ import {
   type KnownOrder,
 } from "./estimates.ts";
 import type { Method, Omitted } from "./shape.ts";
+import type { Quantiles } from "./student-t.ts";
 import type { Band, Degree } from "./value.ts";
 
 export interface Series {
@@ -24,6 +25,7 @@ export interface Series {
   readonly degrees: readonly Degree[];
   readonly nu0: number;
   readonly tau0: number;
+  readonly quantiles: Quantiles;
 }
 
 export type PlainBand = Omit<Band, "fromQ">;
@@ -85,7 +87,8 @@ function estimateAt(
   const size = Math.abs(reference);
   if (posterior) {
     for (const degree of series.degrees) {
-      const of = (squares: number) => conjugateHalfWidth(posterior, reference, squares, degree.probability);
+      const of = (squares: number) =>
+        series.quantiles(degree.probability, posterior.nu) * conjugateScale(posterior, reference, squares);
       if (powers.square !== null) add("conjugate prior", "all omitted orders", degree, of(powers.square));
       add("conjugate prior", "first omitted term", degree, of(powers.first ** 2));
     }

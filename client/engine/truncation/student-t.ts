@@ -58,6 +58,18 @@ function coverage(w: number, nu: number): { inside: number; outside: number; slo
   return { inside: 1 - outside, outside, slope };
 }
 
+/** Quantiles by probability and ν, each computed once: the same few occur at every order and every Q. */
+export type Quantiles = (probability: number, nu: number) => number;
+export function rememberQuantiles(): Quantiles {
+  const known = new Map<string, number>();
+  return (probability, nu) => {
+    const name = `${probability} ${nu}`;
+    const quantile = known.get(name) ?? studentHalfWidth(probability, nu);
+    known.set(name, quantile);
+    return quantile;
+  };
+}
+
 /** Probability that |T| ≤ t for Student's t with ν > 0 degrees of freedom, t ≥ 0. */
 export function studentCoverage(t: number, nu: number): number {
   return t === 0 ? 0 : coverage(2 * Math.log(t) - Math.log(nu), nu).inside;

@@ -1,8 +1,8 @@
 /** The derivation behind a truncation estimate, with this block's numbers filled in. */
 import type { WorkingStep } from "../evaluation.ts";
 import { floatText } from "../notation/float-text.ts";
+import { unitText } from "../notation/unit-text.ts";
 import type { Series } from "./series.ts";
-import { studentHalfWidth } from "./student-t.ts";
 import { uniformPriorFactor } from "./estimates.ts";
 import type { Method, Omitted } from "./shape.ts";
 import type { Band, OrderEstimate, TruncationValue } from "./value.ts";
@@ -17,7 +17,7 @@ function shown(value: number, sigma = 0): string {
 }
 /** A value of X with its unit. */
 function measured(value: number, unit: string): string {
-  return unit === "" ? shown(value) : `${shown(value)}\\,\\mathrm{${unit.replace(/[\\{}$%#&~]/g, "")}}`;
+  return unit === "" ? shown(value) : shown(value) + unitText(unit, "latex");
 }
 
 export function describeWorking(value: TruncationValue, series: Series): WorkingStep[] {
@@ -98,25 +98,25 @@ function describeConjugate(value: TruncationValue, series: Series, last: OrderEs
       "Each $c_n$ is Gaussian with width $\\bar c$; $\\bar c^2$ has a scaled inverse $\\chi^2$ prior with $\\nu_0$ and $\\tau_0^2$ (Melendez et al. 2019).",
     ),
     formula(
-      `\\nu = \\nu_0 + n_c = ${shown(series.nu0)} + ${last.coefficientCount} = ${shown(posterior.nu)}, \\qquad \\tau^2 = \\frac{\\nu_0\\tau_0^2 + \\sum c_n^2}{\\nu} = ${shown(posterior.tau2)}`,
+      `\\nu = \\nu_0 + n_c = ${series.nu0} + ${last.coefficientCount} = ${posterior.nu}, \\qquad \\tau^2 = \\frac{\\nu_0\\tau_0^2 + \\sum c_n^2}{\\nu} = ${shown(posterior.tau2)}`,
     ),
   ];
   for (const omitted of ["all omitted orders", "first omitted term"] as const) {
-    const sum = omitted === "all omitted orders" ? "\\sum_{n} Q^{2n}" : `Q^{2\\cdot ${last.nextOrder}}`;
+    const sum = omitted === "all omitted orders" ? "\\sum_{n} Q^{2n}" : `Q^{${2 * last.nextOrder}}`;
     for (const degree of value.degrees) {
       const band = find(last, "conjugate prior", omitted, degree.text);
       if (!band) continue;
-      const quantile = shown(studentHalfWidth(degree.probability, posterior.nu));
+      const quantile = series.quantiles(degree.probability, posterior.nu);
       steps.push(
         formula(
-          `t_{${degree.text}\\%} \\, |X_{\\mathrm{ref}}| \\, \\tau \\sqrt{${sum}} = ${quantile} \\cdot ${shown(band.halfWidth / studentHalfWidth(degree.probability, posterior.nu))} = ${result(band, value.unit)}`,
+          `t_{${degree.text}\\%} \\, |X_{\\mathrm{ref}}| \\, \\tau \\sqrt{${sum}} = ${shown(quantile)} \\cdot ${shown(band.halfWidth / quantile)} = ${result(band, value.unit)}`,
         ),
       );
     }
   }
   steps.push(
     prose(
-      `The sum runs over the orders $n \\ge ${last.nextOrder}$ that exist, $Q^{2\\cdot ${last.nextOrder}}/(1-Q^2)$ when all do. The scale of a Student-t is not its 68 % half-width; 68 % means 0.68, one standard deviation of a Gaussian is 0.6827.`,
+      `The sum runs over the orders $n \\ge ${last.nextOrder}$ that exist, $Q^{${2 * last.nextOrder}}/(1-Q^2)$ when all do. The scale of a Student-t is not its 68 % half-width; 68 % means 0.68, one standard deviation of a Gaussian is 0.6827.`,
     ),
   );
   return steps;

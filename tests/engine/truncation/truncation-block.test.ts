@@ -1,8 +1,14 @@
 import fc from "fast-check";
+import katex from "katex";
 import { describe, expect, it } from "vitest";
 import { truncationError } from "#engine/truncation/kind.ts";
 import { blockInputs, evaluateBlock, partialSums, scalar } from "./truncation-block.ts";
 
+/** What stands between dollar signs in prose. */
+function inlineFormulas(text: string): string[] {
+  expect(text.split("$").length % 2).toBe(1);
+  return text.split("$").filter((_, index) => index % 2 === 1);
+}
 const series = { 0: "10", 1: "10.9", 2: "10.63", 3: "10.711" };
 const codes = (list: readonly { code: string }[]) => list.map(({ code }) => code);
 
@@ -247,6 +253,25 @@ describe("what is stated beside the numbers", () => {
     const formulas = working.flatMap((step) => (step.step === "formula" ? [step.latex] : [])).join("\n");
     expect(formulas).toContain("c_{3} = \\frac{X^{(3)} - X^{(2)}}{X_{\\mathrm{ref}}\\, Q^{3}} = 0.30000");
     expect(formulas).toContain("\\mathrm{pb}");
+  });
+
+  it("is typeset without a complaint, whatever the unit and the numbers", () => {
+    const cases = [
+      evaluateBlock(series, { q: "0.30(5)", unit: "fm^-1" }),
+      evaluateBlock(series, { q: "1.3", unit: "\\%_{}$&#~" }),
+      evaluateBlock({ 0: "1e-30", 1: null, 2: "-3e12" }, { q: "1e-9", belief: "0.1, 68.27, 99.9999" }),
+      evaluateBlock({ 0: "4" }, { q: "0.5", nu0: "0.5" }),
+    ];
+    const typesets = (latex: string) =>
+      katex.renderToString(latex, { throwOnError: true, strict: "error", displayMode: true });
+    for (const { working, scalars } of cases) {
+      expect(working.length).toBeGreaterThan(5);
+      for (const step of working) {
+        if (step.step === "formula") expect(typesets(step.latex)).toContain("katex");
+        else expect(inlineFormulas(step.text).map(typesets)).toHaveLength(inlineFormulas(step.text).length);
+      }
+      for (const { label } of scalars) inlineFormulas(label).forEach(typesets);
+    }
   });
 
   it("names the value with the error of the highlighted method as its uncertainty", () => {
