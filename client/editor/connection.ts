@@ -90,10 +90,16 @@ export function connectNotebook(options: ConnectionOptions): Connection {
     options.onPhase(phase);
   }
 
-  const comeBack = () => {
-    // The browser knows before the next attempt is due.
-    if (provider.shouldConnect && !openNow && everOpened) provider.connect();
+  // The browser knows before the socket does, which may take half a minute to notice that nobody answers.
+  const goOffline = () => {
+    if (provider.shouldConnect) options.onPhase("offline");
   };
+  const comeBack = () => {
+    if (!provider.shouldConnect) return;
+    if (openNow && provider.synced) options.onPhase("connected");
+    else if (everOpened && !openNow) provider.connect();
+  };
+  window.addEventListener("offline", goOffline);
   window.addEventListener("online", comeBack);
   provider.connect();
 
@@ -101,6 +107,7 @@ export function connectNotebook(options: ConnectionOptions): Connection {
     isOrigin: (origin) => origin === provider,
     destroy() {
       destroyed = true;
+      window.removeEventListener("offline", goOffline);
       window.removeEventListener("online", comeBack);
       provider.destroy();
     },

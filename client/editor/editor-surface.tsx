@@ -1,6 +1,6 @@
 /** The writing surface: the section scale, the margin tick, the writing bar and the document itself. */
 import { EditorContent, useEditor } from "@tiptap/react";
-import { useEffect, useMemo, useRef, useState, useSyncExternalStore } from "react";
+import { useEffect, useMemo, useState, useSyncExternalStore } from "react";
 import type { StoredResult } from "#contract/api.ts";
 import { say } from "../ui/notices.ts";
 import { blockExtensions, blockViews } from "./blocks/block-extensions.ts";
@@ -37,39 +37,29 @@ function WritingSurface({ session, state }: Omit<EditorSurfaceProps, "stored">) 
   const readOnly = state.readOnly || isFinal(state.phase);
   const editing = useMemo(createMathEditing, []);
   const [indexOpen, setIndexOpen] = useState(false);
-  const openIndex = useRef(() => undefined as void);
-  useEffect(() => {
-    openIndex.current = () => {
-      setIndexOpen(true);
-    };
-  });
-  const editor = useEditor(
-    {
-      extensions: editorExtensions({
+  const extensions = useMemo(
+    () =>
+      editorExtensions({
         session,
         editing,
         views: blockViews,
         others: blockExtensions(world),
         openIndex: () => {
-          openIndex.current();
+          setIndexOpen(true);
         },
       }),
+    [session, editing, world],
+  );
+  const editor = useEditor(
+    {
+      extensions,
       editable: !readOnly,
       // Our own style sheet has these rules; a strict Content-Security-Policy refuses injected ones.
       injectCSS: false,
       shouldRerenderOnTransaction: false,
-      editorProps: {
-        attributes: {
-          class: "prose",
-          "aria-label": "Notebook text",
-          "aria-multiline": "true",
-          spellcheck: "true",
-        },
-        scrollMargin: { top: 120, bottom: 80, left: 0, right: 0 },
-        scrollThreshold: { top: 120, bottom: 80, left: 0, right: 0 },
-      },
+      editorProps: readOnly ? readingProps : writingProps,
     },
-    [session, editing, world],
+    [extensions],
   );
   useEffect(() => {
     editor.setEditable(!readOnly, false);
@@ -98,6 +88,16 @@ function WritingSurface({ session, state }: Omit<EditorSurfaceProps, "stored">) 
     </NotebookContext>
   );
 }
+
+const named = { class: "prose", "aria-label": "Notebook text" };
+// What is scrolled to must not end under the writing bar.
+const room = { top: 120, bottom: 80, left: 0, right: 0 };
+const writingProps = {
+  attributes: { ...named, role: "textbox", "aria-multiline": "true", spellcheck: "true" },
+  scrollMargin: room,
+  scrollThreshold: room,
+};
+const readingProps = { attributes: { ...named, role: "document" } };
 
 /** Says when a step of the history had no effect any more. */
 function useHistoryWords({ history }: NotebookSession): void {

@@ -1,26 +1,29 @@
 /** One colour per person, the same in every editor unless two people's would fall together. */
 
-const colors = 8;
+/** Tokens of app/tokens.css, those that are told apart most easily first. */
+const order = [1, 2, 3, 4, 5, 7, 6, 8] as const;
+const easilyToldApart = 5;
 const given = new Map<string, number>();
 
-/** A token of app/tokens.css, safe in both themes. What a stranger's presence says about colour is not asked. */
+/** A colour that is safe in both themes. What a stranger's presence says about colour is not asked. */
 export function personColor(personId: string): string {
   let slot = given.get(personId);
   if (slot === undefined) {
     const taken = new Set(given.values());
-    slot = spread(personId);
+    const own = spread(personId) % easilyToldApart;
+    const turns = order.map((_, turn) => (turn < easilyToldApart ? (own + turn) % easilyToldApart : turn));
     // Beyond eight people some share a colour; their names still tell them apart.
-    for (let tries = 0; tries < colors && taken.has(slot); tries += 1) slot = (slot + 1) % colors;
+    slot = turns.find((candidate) => !taken.has(candidate)) ?? own;
     given.set(personId, slot);
   }
-  return `var(--person-${String(slot + 1)})`;
+  return `var(--person-${String(order[slot] ?? 1)})`;
 }
 
 /** FNV-1a (Fowler, Noll and Vo, 1991), from memory; any even spread will do. */
 function spread(text: string): number {
   let hash = 0x811c9dc5;
   for (const letter of text) hash = Math.imul(hash ^ (letter.codePointAt(0) ?? 0), 0x01000193);
-  return (hash >>> 0) % colors;
+  return hash >>> 0;
 }
 
 /** Two letters for the header: "Wren Vale" gives "WV", "Otto" gives "Ot". */

@@ -2,6 +2,7 @@
 import { Fragment, useLayoutEffect, useRef, useState } from "react";
 import { katexNow, loadKatex, type LatexFault } from "./katex-loader.ts";
 import { latexFaultWords } from "./latex-fault-words.ts";
+import "./math.css";
 
 export interface FormulaProps {
   readonly latex: string;

@@ -100,6 +100,7 @@ export function SymbolList({ completion }: { readonly completion: ReturnType<typ
           key={symbol.group + symbol.insert}
           id={`${listId}-${String(index)}`}
           role="option"
+          tabIndex={-1}
           aria-selected={index === active}
           className={classes("symbol", index === active && "is-active")}
           onPointerDown={(event) => {

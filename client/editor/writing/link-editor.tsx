@@ -31,9 +31,13 @@ export function LinkEditor({ editor }: { readonly editor: Editor }) {
   return (
     <Popover.Root open={open} onOpenChange={setOpen}>
       <Popover.Trigger asChild>
-        <Toolbar.Button className="bar-mark" aria-label="Link" aria-pressed={active} title="Link (Ctrl K)">
-          <span className="underline">link</span>
-        </Toolbar.Button>
+        <Toolbar.Button
+          className="bar-mark underline"
+          aria-label="Link"
+          aria-pressed={active}
+          title="Link (Ctrl K)"
+          data-sign="link"
+        />
       </Popover.Trigger>
       <Popover.Portal>
         <Popover.Content
@@ -124,6 +128,11 @@ function LinkForm({ editor, onDone }: { readonly editor: Editor; readonly onDone
           Keep link
         </Button>
         {before !== "" && <Button onClick={remove}>Remove link</Button>}
+        {isSafeLink(before) && (
+          <a className="link-open" href={before} target="_blank" rel="noopener noreferrer nofollow">
+            Open
+          </a>
+        )}
       </div>
     </form>
   );

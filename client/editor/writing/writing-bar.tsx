@@ -2,6 +2,7 @@
 import type { ChainedCommands, Editor } from "@tiptap/core";
 import { useEditorState } from "@tiptap/react";
 import { Toolbar } from "radix-ui";
+import { classes } from "../../ui/classes.ts";
 import { insertFormula } from "../mathematics/mathematics.ts";
 import { useHistory } from "../notebook-context.ts";
 import { LinkEditor } from "./link-editor.tsx";
@@ -32,82 +33,68 @@ export function WritingBar({ editor }: { readonly editor: Editor }) {
       <TextKindChoice editor={editor} kind={now.kind} />
       <Mark
         name="Bold"
+        sign="B"
+        face="bar-bold"
         keys="Mod B"
         pressed={now.bold}
-        onPress={() => {
-          run((chain) => chain.toggleBold());
-        }}
-      >
-        <b>B</b>
-      </Mark>
+        onPress={() => run((chain) => chain.toggleBold())}
+      />
       <Mark
         name="Italic"
+        sign="I"
+        face="bar-italic"
         keys="Mod I"
         pressed={now.italic}
-        onPress={() => {
-          run((chain) => chain.toggleItalic());
-        }}
-      >
-        <i>I</i>
-      </Mark>
+        onPress={() => run((chain) => chain.toggleItalic())}
+      />
       <Mark
         name="Code"
+        sign="c"
+        face="bar-code"
         keys="Mod E"
         pressed={now.code}
-        onPress={() => {
-          run((chain) => chain.toggleCode());
-        }}
-      >
-        <span className="font-notation">c</span>
-      </Mark>
+        onPress={() => run((chain) => chain.toggleCode())}
+      />
       <LinkEditor editor={editor} />
-      <Mark
-        name="Formula"
-        onPress={() => {
-          insertFormula(editor, false);
-        }}
-      >
-        <i>x</i>²
-      </Mark>
+      <Mark name="Formula" sign="x²" face="bar-italic" onPress={() => insertFormula(editor, false)} />
       <Toolbar.Separator className="bar-rule" />
       <Mark
         name="List"
+        sign="list"
         keys="Mod Shift 8"
         pressed={now.bulletList}
-        onPress={() => {
-          run((chain) => chain.toggleBulletList());
-        }}
-      >
-        list
-      </Mark>
+        onPress={() => run((chain) => chain.toggleBulletList())}
+      />
       <Mark
         name="Numbered list"
+        sign="1. 2."
         keys="Mod Shift 7"
         pressed={now.orderedList}
-        onPress={() => {
-          run((chain) => chain.toggleOrderedList());
-        }}
-      >
-        1. 2.
-      </Mark>
+        onPress={() => run((chain) => chain.toggleOrderedList())}
+      />
       <Mark
         name="Quotation"
+        sign="“ ”"
         keys="Mod Shift B"
         pressed={now.blockquote}
-        onPress={() => {
-          run((chain) => chain.toggleBlockquote());
-        }}
-      >
-        “ ”
-      </Mark>
+        onPress={() => run((chain) => chain.toggleBlockquote())}
+      />
       {now.table && <TableMarks run={run} />}
       <Toolbar.Separator className="bar-rule" />
-      <Mark name="Undo my last change" keys="Mod Z" disabled={!history.canUndo} onPress={history.undo}>
-        undo
-      </Mark>
-      <Mark name="Make my change again" keys="Mod Shift Z" disabled={!history.canRedo} onPress={history.redo}>
-        redo
-      </Mark>
+      <Mark
+        name="Undo my last change"
+        sign="undo"
+        keys="Mod Z"
+        disabled={!history.canUndo}
+        onPress={history.undo}
+      />
+      <Mark
+        name="Redo my change"
+        sign="redo"
+        keys="Mod Shift Z"
+        disabled={!history.canRedo}
+        onPress={history.redo}
+      />
     </Toolbar.Root>
   );
 }
@@ -147,16 +134,8 @@ function TableMarks({
   return (
     <>
       <Toolbar.Separator className="bar-rule" />
-      {marks.map(([name, words, change]) => (
-        <Mark
-          key={name}
-          name={name}
-          onPress={() => {
-            run(change);
-          }}
-        >
-          {words}
-        </Mark>
+      {marks.map(([name, sign, change]) => (
+        <Mark key={name} name={name} sign={sign} onPress={() => run(change)} />
       ))}
     </>
   );
@@ -164,29 +143,30 @@ function TableMarks({
 
 interface MarkProps {
   readonly name: string;
+  /** What is drawn; it is not read aloud. */
+  readonly sign: string;
+  readonly face?: string;
   readonly keys?: string;
   readonly pressed?: boolean;
   readonly disabled?: boolean;
   readonly onPress: () => void;
-  readonly children: React.ReactNode;
 }
 
-export function Mark({ name, keys, pressed, disabled = false, onPress, children }: MarkProps) {
+function Mark({ name, sign, face, keys, pressed, disabled = false, onPress }: MarkProps) {
   return (
     <Toolbar.Button
-      className="bar-mark"
+      className={classes("bar-mark", face)}
       aria-label={name}
       title={keys ? `${name} (${keyWords(keys)})` : name}
       aria-pressed={pressed}
+      data-sign={sign}
       disabled={disabled}
       onPointerDown={(event) => {
         // The selection in the prose must survive the press.
         event.preventDefault();
       }}
       onClick={onPress}
-    >
-      {children}
-    </Toolbar.Button>
+    />
   );
 }
 
