@@ -42,11 +42,11 @@ export function GraphResult({ value }: { readonly value: GraphDivergence }) {
         </dd>
         <dt>by lines and loops</dt>
         <dd>
-          <Formula latex={byLines(value)} />
+          <Formula latex={value.byMomenta} />
         </dd>
         <dt>by legs and vertices</dt>
         <dd>
-          <Formula latex={byVertices(value)} />
+          <Formula latex={value.byDimensions} />
         </dd>
         {logarithmicAt && (
           <>
@@ -89,34 +89,4 @@ function verdictWords({ verdict }: GraphDivergence): string {
     case "depends":
       return "depends on the dimension";
   }
-}
-
-/** ω = d L − Σ I (d − 2δ) + Σ V k, with this graph's numbers. */
-function byLines({ loops, lines, vertices, omega }: GraphDivergence): string {
-  const inner = lines
-    .filter(({ count }) => count > 0)
-    .map(({ count, weight, latex }) => `${count}\\,(d - 2\\cdot ${bracketed(weight.latex)})_{${latex}}`);
-  const derivatives = vertices
-    .filter(({ derivatives: { text } }) => text !== "0")
-    .map(({ count, derivatives }) => `${count}\\cdot ${bracketed(derivatives.latex)}`);
-  const minus = inner.length === 0 ? "" : ` - ${inner.join(" - ")}`;
-  const plus = derivatives.length === 0 ? "" : ` + ${derivatives.join(" + ")}`;
-  return `\\omega = d\\cdot ${loops}${minus}${plus} = ${omega.latex}`;
-}
-
-/** ω = d − Σ E δ − Σ V [g]. */
-function byVertices({ legs, lines, vertices, omega }: GraphDivergence): string {
-  const weightOf = new Map(lines.map(({ fieldRowId, weight }) => [fieldRowId, weight.latex]));
-  const outer = legs.fields.flatMap(({ fieldRowId, count, conjugateCount }) => {
-    const weight = weightOf.get(fieldRowId);
-    return weight === undefined ? [] : [` - ${count + conjugateCount}\\cdot ${bracketed(weight)}`];
-  });
-  const couplings = vertices.map(
-    ({ count, coefficient }) => ` - ${count}\\cdot ${bracketed(coefficient.latex)}`,
-  );
-  return `\\omega = d${outer.join("")}${couplings.join("")} = ${omega.latex}`;
-}
-
-function bracketed(latex: string): string {
-  return /[+\s-]/.test(latex) ? `\\left(${latex}\\right)` : latex;
 }

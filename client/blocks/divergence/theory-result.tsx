@@ -28,9 +28,9 @@ export function TheoryResult({ value }: { readonly value: TheoryDivergence }) {
       </p>
       {!verdict && (
         <ul className="block-plain-list">
-          {ranges.map(({ from, to, verdict: here }) => (
+          {ranges.map(({ symbol, from, to, verdict: here }) => (
             <li key={`${from?.text ?? ""} ${to?.text ?? ""}`}>
-              <Formula latex={rangeLatex(from?.latex, to?.latex)} />: {verdictWords[here]}
+              <Formula latex={rangeLatex(symbol, from?.latex, to?.latex)} />: {verdictWords[here]}
             </li>
           ))}
         </ul>
@@ -84,8 +84,8 @@ export function TheoryResult({ value }: { readonly value: TheoryDivergence }) {
   );
 }
 
-function rangeLatex(from: string | undefined, to: string | undefined): string {
-  if (from !== undefined && from === to) return `d = ${from}`;
-  if (from === undefined) return to === undefined ? "\\text{any } d" : `d < ${to}`;
-  return to === undefined ? `d > ${from}` : `${from} < d < ${to}`;
+function rangeLatex(symbol: string, from: string | undefined, to: string | undefined): string {
+  if (from !== undefined && from === to) return `${symbol} = ${from}`;
+  if (from === undefined) return to === undefined ? `\\text{any } ${symbol}` : `${symbol} < ${to}`;
+  return to === undefined ? `${symbol} > ${from}` : `${from} < ${symbol} < ${to}`;
 }

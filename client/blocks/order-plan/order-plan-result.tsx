@@ -44,7 +44,7 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
             numeric: true,
             show: ({ leftOut }) => <Decimal text={sizeText(leftOut.used)} widths={lefts} />,
           },
-          { heading: "loops", numeric: true, show: ({ loops }) => loopsWords(loops) },
+          { heading: "loops needed", numeric: true, show: ({ loops }) => loopsWords(loops) },
           {
             heading: (
               <>
@@ -124,12 +124,13 @@ function Entries({ order }: { readonly order: PlanOrder }) {
           {assigned && <span className="plan-note"> by hand</span>}
         </li>
       ))}
+      {order.count > order.entries.length && <li>and {order.count - order.entries.length} smaller ones</li>}
     </ul>
   );
 }
 
-function loopsWords({ insertions, target }: PlanOrder["loops"]): string {
-  return target === null ? String(insertions) : String(Math.max(insertions, target));
+function loopsWords({ insertions, needed }: PlanOrder["loops"]): string {
+  return needed === null ? `up to ${insertions}` : String(needed);
 }
 
 function keyOf({ order }: PlanOrder): string {
