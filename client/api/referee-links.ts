@@ -4,7 +4,7 @@ import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod/mini";
 import { askOrThrow } from "./request.ts";
 
-export const refereeLinksKey = (notebookId: string) => ["referee-links", notebookId] as const;
+const refereeLinksKey = (notebookId: string) => ["referee-links", notebookId] as const;
 
 export function useRefereeLinks(notebookId: string, enabled: boolean) {
   return useQuery({

@@ -5,7 +5,7 @@ import { currentCsrfToken, rememberCsrfToken, setSessionLapsed } from "./session
 
 export type Answer<T> =
   { readonly ok: true; readonly value: T } | { readonly ok: false; readonly problem: Problem };
-export type Method = "GET" | "POST" | "PUT" | "PATCH" | "DELETE";
+type Method = "GET" | "POST" | "PUT" | "PATCH" | "DELETE";
 
 export interface RequestOptions {
   readonly method?: Method;

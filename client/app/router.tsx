@@ -43,7 +43,7 @@ function FirstPage() {
   return me.data?.person ? <ShelfPage /> : <HomePage />;
 }
 
-export function PageLoading() {
+function PageLoading() {
   return (
     <main id="main" tabIndex={-1} className="px-4">
       <Loading what="Opening the page" />

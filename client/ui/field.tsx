@@ -2,7 +2,7 @@ import { useId, type ComponentProps, type ReactNode } from "react";
 import { classes } from "./classes.ts";
 import "./field.css";
 
-export interface FieldWiring {
+interface FieldWiring {
   readonly id: string;
   readonly "aria-describedby": string | undefined;
   readonly "aria-invalid": true | undefined;
@@ -41,7 +41,11 @@ export function Field({ label, hint, error, className, children }: FieldProps) {
 /** In the page before there is an error, so that its coming is read aloud. */
 function FieldError({ id, error }: { readonly id: string; readonly error: string | null | undefined }) {
   return (
-    <p id={id} aria-live="polite" className={error ? "border-l-2 border-hairline pl-2 text-small text-hairline" : "sr-only"}>
+    <p
+      id={id}
+      aria-live="polite"
+      className={error ? "border-l-2 border-hairline pl-2 text-small text-hairline" : "sr-only"}
+    >
       {error}
     </p>
   );

@@ -1,7 +1,7 @@
 /** Reads of a Vite build what a page fetches. */
 import { readdirSync } from "node:fs";
 
-export interface Chunk {
+interface Chunk {
   readonly file: string;
   /** Keys of the chunks it cannot start without. */
   readonly imports?: readonly string[];

@@ -15,6 +15,7 @@ import { TextLink } from "../../ui/text-link.tsx";
 import { ConnectionWords } from "./connection-words.tsx";
 import { NotebookTitle } from "./notebook-title.tsx";
 import { PeopleHere } from "./people-here.tsx";
+import { PinsToLookAt } from "./pins-to-look-at.tsx";
 import { useReturnsAfterLapse } from "./returns-after-lapse.ts";
 
 // Asked for as soon as this page is, beside the notebook's own facts and not after them.
@@ -65,6 +66,7 @@ export function NotebookPage() {
       instruments={
         <>
           {archivedAt && <span className="text-ink-2">archived: reading only</span>}
+          <PinsToLookAt />
           <ConnectionWords />
           <PeopleHere />
           <TextLink look="quiet" className="text-small" to={`/notebooks/${id}/sharing`}>
