@@ -68,18 +68,26 @@ function editDistance(a: string, b: string): number {
   return at(a.length, b.length);
 }
 
+/** How far a slip leads from one symbol to the other; infinite when they are not alike. */
+function slip(typed: string, symbol: string): number {
+  if (symbol.toLowerCase() === typed.toLowerCase()) return 0.5;
+  // "phi2" for phi², "psi_L" where only psi is declared.
+  if (typed.startsWith(`${symbol}_`)) return 0.7;
+  const shorter = Math.min(typed.length, symbol.length);
+  const distance = editDistance(typed, symbol);
+  return (distance === 1 && shorter > 1) || (distance === 2 && shorter > 4) ? distance : Infinity;
+}
+
 /**
- * The declared symbol most like what was typed, or null when none is near: at most two edits, and fewer than the
- * shorter of both has letters. Upper for lower case is the nearest slip of all.
+ * The declared symbol most like what was typed, or null when none is near. Upper for lower case is the nearest slip.
+ * @example nearestSymbol("chy", ["phi", "chi"]) // "chi"
  */
 export function nearestSymbol(typed: string, declared: readonly string[]): string | null {
   const short = typed.slice(0, 40);
   let best: { readonly symbol: string; readonly distance: number } | null = null;
   for (const symbol of declared) {
-    const sameLetters = symbol.toLowerCase() === short.toLowerCase();
-    const distance = sameLetters ? 0.5 : editDistance(short, symbol.slice(0, 40));
-    const near = sameLetters || (distance <= 2 && distance < Math.min(short.length, symbol.length));
-    if (near && distance < (best?.distance ?? Infinity)) best = { symbol, distance };
+    const distance = slip(short, symbol.slice(0, 40));
+    if (distance < (best?.distance ?? Infinity)) best = { symbol, distance };
   }
   return best?.symbol ?? null;
 }

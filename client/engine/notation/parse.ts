@@ -11,7 +11,8 @@ import { Rational } from "../exact/rational.ts";
 import { canonicalName } from "./names.ts";
 import { exactLiteral, measuredLiteral } from "./literals.ts";
 import { unitNamed } from "./units.ts";
-import { FirstFailure, read, type Read } from "./failure.ts";
+import { Cursor } from "./cursor.ts";
+import { read, type Read } from "./failure.ts";
 import type { Factor, Tree } from "./tree.ts";
 import { isIndices, isLiteral, withSubscript } from "./tree-shape.ts";
 import { tokenise, type Token } from "./tokens.ts";
@@ -36,50 +37,25 @@ export function parse(text: string, options: ParseOptions): Read<Tree> {
   return new Parser(text, tokens.value, options).whole();
 }
 
-class Parser {
-  private readonly trouble = new FirstFailure();
-  private next = 0;
+class Parser extends Cursor {
   private depth = 0;
   private insideBars = false;
 
-  private readonly tokens: Token[];
-
   constructor(
-    private readonly text: string,
+    text: string,
     tokens: readonly Token[],
     private readonly options: ParseOptions,
   ) {
-    // A copy of its own: "\\frac12" splits a literal in place.
-    this.tokens = [...tokens];
+    super(text, tokens);
   }
 
   whole(): Read<Tree> {
     if (this.peek().type === "end") this.fail("empty-text", this.peek());
     const tree = this.sum();
     const rest = this.peek();
-    if (rest.type === "close" || (rest.type === "sign" && rest.sign === "|"))
-      this.fail("unbalanced-bracket", rest);
+    if (rest.type === "close" || this.isSign(rest, "|")) this.fail("unbalanced-bracket", rest);
     else if (rest.type !== "end") this.fail("misplaced-mark", rest);
-    return this.trouble.failure ? { ok: false, failure: this.trouble.failure } : read(tree);
-  }
-
-  /** Notes the failure and jumps to the end, so that every caller finishes without reading on. */
-  private fail(code: string, token: Token): Tree {
-    this.trouble.note(code, { text: this.text.slice(token.at, token.to), offset: token.at });
-    this.next = this.tokens.length - 1;
-    return { type: "number", value: Rational.one, text: "1", at: token.at };
-  }
-  private peek(ahead = 0): Token {
-    // The list always ends with an `end` token, so one of the two is there.
-    return (this.tokens[this.next + ahead] ?? this.tokens[this.tokens.length - 1]) as Token;
-  }
-  private take(): Token {
-    const token = this.peek();
-    if (token.type !== "end") this.next += 1;
-    return token;
-  }
-  private isSign(token: Token, ...signs: readonly string[]): boolean {
-    return token.type === "sign" && signs.includes(token.sign);
+    return this.failure ? { ok: false, failure: this.failure } : read(tree);
   }
 
   private sum(): Tree {
@@ -182,11 +158,11 @@ class Parser {
     if (this.options.quantities || !this.isSign(token, "*") || this.text.charAt(token.at) !== "*")
       return false;
     const named = node.type === "name" || node.type === "group" || node.type === "accent";
-    const before = this.tokens[this.next - 1];
+    const before = this.peek(-1);
     const after = this.peek(1);
     return (
       named &&
-      before?.to === token.at &&
+      before.to === token.at &&
       (after.at > token.to || after.type === "end" || after.type === "close" || this.isSign(after, "^"))
     );
   }
@@ -201,7 +177,7 @@ class Parser {
       (inner.type === "name" && /^dag(ger)?$/.test(inner.name.base));
     const closes = token.type === "open" ? this.peek(2).type === "close" : true;
     if (mark && closes) {
-      this.next += token.type === "open" ? 3 : 1;
+      for (let passed = 0; passed < (token.type === "open" ? 3 : 1); passed++) this.take();
       return "conjugate";
     }
     if (this.isSign(token, "-", "+")) {
@@ -261,7 +237,8 @@ class Parser {
       return { type: "number", value, text: token.text, at: token.at };
     const sigma = exactLiteral(spread.text);
     if (!sigma) return this.fail("number-too-large", spread);
-    this.next += 2;
+    this.take();
+    this.take();
     return { type: "measured", value, sigma, text: `${token.text} \\pm ${spread.text}`, at: token.at };
   }
 
@@ -311,7 +288,7 @@ class Parser {
     const [digit = "", ...more] = token.text;
     const rest: Token = { type: "number", text: more.join(""), at: token.at + 1, to: token.to };
     if (!/^\d+$/.test(token.text)) return this.fail("missing-operand", token);
-    this.tokens.splice(this.next, 1, rest);
+    this.replace(rest);
     return { type: "number", value: Rational.of(BigInt(digit)), text: digit, at: token.at };
   }
 }

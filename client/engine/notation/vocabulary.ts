@@ -21,13 +21,14 @@ export interface Vocabulary {
 
 export type Direction = "time" | "space" | "spacetime" | "unsaid";
 
+interface FieldMeaning {
+  readonly means: "field";
+  readonly symbol: string;
+  readonly conjugated: boolean;
+  readonly derivatives: number;
+}
 export type Meaning =
-  | {
-      readonly means: "field";
-      readonly symbol: string;
-      readonly conjugated: boolean;
-      readonly derivatives: number;
-    }
+  | FieldMeaning
   | { readonly means: "derivative"; readonly count: number; readonly direction: Direction }
   | { readonly means: "coefficient"; readonly symbol: string; readonly declared: boolean }
   /** i: a phase, which counting does not see. */
@@ -54,6 +55,8 @@ const tensors = new Set([
   ..."gamma Gamma sigma tau epsilon varepsilon eta delta T t f g lambda P".split(" "),
 ]);
 const traces = new Set(["Tr", "tr", "Str"]);
+/** d's that may be written on to a field: "dddphi". Longer runs are names. */
+const MOST_WRITTEN_DERIVATIVES = 8;
 const latinIndices = /^[abcijklmnrs]$/;
 
 /** Names that no field and no scale may take, because a term reads them otherwise. */
@@ -103,8 +106,21 @@ function isLorentz(pieces: readonly string[]): boolean {
   );
 }
 
-/** Declared fields: as they stand, without indices, conjugated (psibar, phidag), dual (Ftilde), or as dphi. */
+/** Declared fields, bare or differentiated as in dphi and ddchi. */
 function fieldMeaning(name: Name, vocabulary: Vocabulary): Meaning | null {
+  const bare = bareFieldMeaning(name, vocabulary);
+  if (bare) return bare;
+  const signs = /^(?:d+|D+)(?=.)/.exec(name.base)?.[0].length ?? 0;
+  // The shortest run of d's that leaves a declared field: "ddelta" is d·delta where delta is one.
+  for (let count = 1; count <= Math.min(signs, MOST_WRITTEN_DERIVATIVES); count++) {
+    const inner = bareFieldMeaning({ ...name, base: name.base.slice(count) }, vocabulary);
+    if (inner) return { ...inner, derivatives: count };
+  }
+  return null;
+}
+
+/** Declared fields as they stand, without indices, conjugated (psibar, phidag) or dual (Ftilde). */
+function bareFieldMeaning(name: Name, vocabulary: Vocabulary): FieldMeaning | null {
   const plain: Name = name.subscript.every((piece) => isIndex(piece) || piece === ",")
     ? { ...name, subscript: [] }
     : name;
@@ -122,12 +138,6 @@ function fieldMeaning(name: Name, vocabulary: Vocabulary): Meaning | null {
     const strength = dual === undefined ? null : canonicalName({ ...spelled, base: dual });
     if (strength !== null && vocabulary.fields.get(strength)?.strength)
       return { means: "field", symbol: strength, conjugated: false, derivatives: 0 };
-  }
-  const derived = /^(d+|D+)(.+)$/.exec(name.base);
-  // The shortest run of d's that leaves a declared field: "ddelta" is d·delta where delta is one.
-  for (let count = 1; derived && count <= (derived[1]?.length ?? 0); count++) {
-    const inner = fieldMeaning({ ...name, base: name.base.slice(count) }, vocabulary);
-    if (inner?.means === "field" && inner.derivatives === 0) return { ...inner, derivatives: count };
   }
   return null;
 }
