@@ -6,6 +6,7 @@ import type { Theory } from "../premises/theory.ts";
 import { graphCautions } from "./cautions.ts";
 import { countertermsOf } from "./counterterms.ts";
 import type { Degree, GraphParts } from "./degree.ts";
+import { byDimensions, byMomenta } from "./formulas.ts";
 import { totalOf } from "./half-edges.ts";
 import type { DivergenceInputs } from "./inputs.ts";
 import { describeLegs } from "./legs.ts";
@@ -86,6 +87,8 @@ function describeGraph(
     }),
     loops,
     omega: shown(omega),
+    byMomenta: byMomenta(graph, degree, theory),
+    byDimensions: byDimensions(graph, degree, theory),
     verdict,
     logarithmicAt: loops === 0 ? null : logarithmicAt(omega),
     dimensional,

@@ -92,7 +92,7 @@ function rangesIn(symbol: "d" | "D" | "z", all: readonly LinearForm[], forms: Fo
       signsAt((form) => form.at(symbol, value).constant),
       forms,
     );
-  const pieces: { from: Rational | null; to: Rational | null; verdict: TheoryVerdict }[] = [];
+  const pieces: Piece[] = [];
   let below = Rational.zero;
   for (const zero of sorted) {
     pieces.push({ from: below, to: zero, verdict: verdictAt(below.plus(zero).over(Rational.of(2))) });
@@ -100,5 +100,33 @@ function rangesIn(symbol: "d" | "D" | "z", all: readonly LinearForm[], forms: Fo
     below = zero;
   }
   pieces.push({ from: below, to: null, verdict: verdictAt(below.plus(Rational.one)) });
-  return pieces.map(({ from, to, verdict }) => ({ from: from && shown(from), to: to && shown(to), verdict }));
+  return mergeEqual(pieces).map(({ from, to, verdict }) => ({
+    symbol,
+    from: from && shown(from),
+    to: to && shown(to),
+    verdict,
+  }));
+}
+
+interface Piece {
+  readonly from: Rational | null;
+  readonly to: Rational | null;
+  readonly verdict: TheoryVerdict;
+}
+
+/** Two intervals and the point between them become one interval where the verdict is the same throughout. */
+function mergeEqual(pieces: readonly Piece[]): Piece[] {
+  return pieces.reduce<Piece[]>((merged, piece) => {
+    const [before, point] = merged.slice(-2);
+    const isInterval = !(piece.from && piece.to && piece.from.equals(piece.to));
+    if (
+      !isInterval ||
+      !before ||
+      !point ||
+      point.verdict !== piece.verdict ||
+      before.verdict !== piece.verdict
+    )
+      return [...merged, piece];
+    return [...merged.slice(0, -2), { ...piece, from: before.from }];
+  }, []);
 }

@@ -97,6 +97,9 @@ export interface GraphDivergence {
   readonly lines: readonly InternalLine[];
   readonly loops: number;
   readonly omega: Exact;
+  /** The two ways with this graph's numbers, as LaTeX: "\\omega = 4\\cdot 1 - 2\\cdot 2 = 0", "\\omega = 4 - 4\\cdot 1 - 2\\cdot 0 = 0". */
+  readonly byMomenta: string;
+  readonly byDimensions: string;
   readonly verdict: Verdict;
   /** For symbolic d alone: the dimension where ω = 0, and whether ω grows with d. Null otherwise. */
   readonly logarithmicAt: {
@@ -155,6 +158,8 @@ export type TheoryVerdict =
   | "new terms at every order";
 
 export interface VerdictRange {
+  /** What runs: d, or D or z of an anisotropic theory. */
+  readonly symbol: "d" | "D" | "z";
   /** A single dimension (from = to) or an open interval; null is no bound. */
   readonly from: Exact | null;
   readonly to: Exact | null;

@@ -1,5 +1,5 @@
 /** Every multiset of interactions that graphs within the caps can be made of. */
-import { LinearForm } from "../exact/linear-form.ts";
+import type { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
 import type { Term, Theory } from "../premises/theory.ts";
 import { addHalfEdges, countOf, halfEdgesOf, noHalfEdges, totalOf, type HalfEdges } from "./half-edges.ts";

@@ -6,17 +6,6 @@ import type { Degree, GraphParts } from "./degree.ts";
 import { addHalfEdges, countOf, noHalfEdges } from "./half-edges.ts";
 import type { GraphDivergence } from "./value.ts";
 
-/** A form inside a product: sums and negative numbers are bracketed. */
-export function bracketed(form: LinearForm): string {
-  const latex = form.toLatex();
-  return /^[^-].* [+-] |^-/.test(latex) ? `\\left(${latex}\\right)` : latex;
-}
-
-/** "a - b - c" from its subtracted products; a zero sum is left out. */
-function minusEach(products: readonly string[]): string {
-  return products.map((product) => ` - ${product}`).join("");
-}
-
 export function explainGraph(
   graph: GraphParts,
   degree: Degree,
@@ -37,9 +26,18 @@ export function explainGraph(
       step: "prose",
       text: `The measure weighs $${theory.measure.toLatex()}$; a propagator of $f$ falls as $p^{2\\delta_f - ${theory.measure.toLatex()}}$.`,
     },
-    { step: "formula", latex: byMomenta(graph, degree, theory) },
+    {
+      step: "formula",
+      latex: aligned(
+        "[\\text{measure}]\\,L - \\sum_f I_f\\,([\\text{measure}] - 2\\delta_f) + \\sum_i V_i k_i",
+        value.byMomenta,
+      ),
+    },
     { step: "heading", text: "Degree by dimensions" },
-    { step: "formula", latex: byDimensions(graph, degree, theory) },
+    {
+      step: "formula",
+      latex: aligned("[\\text{measure}] - \\sum_f E_f \\delta_f - \\sum_i V_i [g_i]", value.byDimensions),
+    },
     {
       step: "prose",
       text: "Both ways agree (Weinberg 1995, section 12.1; Peskin and Schroeder 1995, section 10.1).",
@@ -47,6 +45,11 @@ export function explainGraph(
     ...symbolicSteps(value),
   ];
   return value.counterterms.length === 0 ? steps : [...steps, ...countertermSteps(value)];
+}
+
+/** The general formula above the one with numbers, which begins with "\\omega =". */
+function aligned(general: string, numbers: string): string {
+  return `\\begin{aligned} \\omega &= ${general} \\\\ &${numbers.replace(/^\\omega /, "")} \\end{aligned}`;
 }
 
 function lineSteps({ vertices, legs }: GraphParts, { lines }: Degree, theory: Theory): WorkingStep[] {
@@ -71,33 +74,6 @@ function lineSteps({ vertices, legs }: GraphParts, { lines }: Degree, theory: Th
 function loopFormula({ vertices }: GraphParts, { lines, loops }: Degree): string {
   const used = lines.filter((count) => count > 0);
   return `L = ${used.length === 0 ? "0" : used.join(" + ")} - ${vertices.map(({ count }) => count).join(" - ")} + 1 = ${loops}`;
-}
-
-function byMomenta({ vertices }: GraphParts, { lines, loops, omega }: Degree, theory: Theory): string {
-  const propagators = theory.fields.flatMap((field, f) => {
-    const count = lines[f] ?? 0;
-    return count === 0 ? [] : [`${count}\\cdot ${bracketed(theory.measure.minus(field.weight.times(2)))}`];
-  });
-  const derivatives = vertices
-    .filter(({ term }) => !term.derivativeWeight.equals(LinearForm.zero))
-    .map(({ term, count }) => ` + ${count}\\cdot ${bracketed(term.derivativeWeight)}`);
-  const general =
-    "\\omega = [\\text{measure}]\\,L - \\sum_f I_f\\,([\\text{measure}] - 2\\delta_f) + \\sum_i V_i k_i";
-  const numbers = `${bracketed(theory.measure)}\\cdot ${loops}${minusEach(propagators)}${derivatives.join("")}`;
-  return `\\begin{aligned} ${general.replace("=", "&=")} \\\\ &= ${numbers} = ${omega.toLatex()} \\end{aligned}`;
-}
-
-function byDimensions({ vertices, legs }: GraphParts, { omega }: Degree, theory: Theory): string {
-  const external = theory.fields.flatMap((field, f) => {
-    const count = countOf(legs, f);
-    return count === 0 ? [] : [`${count}\\cdot ${bracketed(field.weight)}`];
-  });
-  const couplings = vertices.map(
-    ({ term, count }) => `${count}\\cdot ${bracketed(term.ultravioletCoefficient)}`,
-  );
-  const general = "\\omega = [\\text{measure}] - \\sum_f E_f \\delta_f - \\sum_i V_i [g_i]";
-  const numbers = `${theory.measure.toLatex()}${minusEach(external)}${minusEach(couplings)}`;
-  return `\\begin{aligned} ${general.replace("=", "&=")} \\\\ &= ${numbers} = ${omega.toLatex()} \\end{aligned}`;
 }
 
 function symbolicSteps({ logarithmicAt: at }: GraphDivergence): WorkingStep[] {

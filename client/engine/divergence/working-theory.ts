@@ -3,7 +3,7 @@ import type { WorkingStep } from "../evaluation.ts";
 import type { LinearForm } from "../exact/linear-form.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { TheoryDivergence, TheoryVerdict } from "./value.ts";
-import { bracketed } from "./working-graph.ts";
+import { bracketed } from "./formulas.ts";
 
 const reasons: Record<TheoryVerdict, string> = {
   free: "No term has three or more fields: there are no loops beyond the free vacuum energy.",

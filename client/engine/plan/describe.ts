@@ -100,12 +100,9 @@ function describeOrder(
   const sum = sized.reduce((total, { size }) => total + size, 0);
   const probe = largestProbe(expansion, at);
   // At order 0 the leading amplitude itself, of size 1, carries the loops.
-  const carried = at.sign() === 0 ? 1 : sum;
-  const loops = !hasLeadingLoops(terms)
-    ? 0
-    : factor === null
-      ? null
-      : loopsForTarget(carried, factor, expansion.target);
+  const estimate = factor && loopsForTarget(at.sign() === 0 ? 1 : sum, factor, expansion.target);
+  const insertions = at.sign() === 0 ? 0 : loopsOfInsertions(own);
+  const needed = hasLeadingLoops(terms) ? estimate : Math.min(insertions, estimate ?? insertions);
   return {
     order: [shown(at)],
     entries: largest.map(({ entry }) => describeEntry(entry, expansion.Q)),
@@ -116,7 +113,7 @@ function describeOrder(
       probe.isHeavy ? scales.probe.value / scales.Q : probe.probe * scales.probe.value,
     ),
     largestProbeIsHeavy: probe.isHeavy,
-    loops: { insertions: at.sign() === 0 ? 0 : loopsOfInsertions(own), target: loops },
+    loops: { insertions, needed },
     included: stop === null || at.compare(stop) <= 0,
   };
 }

@@ -52,11 +52,11 @@ export interface PlanOrder {
   /** True when the target is met up to Q = 1, the end of the expansion, so that `largestProbe` is Λ. */
   readonly largestProbeIsHeavy: boolean;
   /**
-   * Loops that go with this order. `insertions`: the most that suppressed insertions of this order alone can make.
-   * `target`: the fewest whose next loop falls below the target when each costs `loopFactor`; 0 when no leading
-   * interaction closes loops, null when d is not a whole number.
+   * Loops that go with this order. `insertions`: the most that its suppressed insertions can close by themselves.
+   * `needed`: the fewest after which one loop more, at `loopFactor`, falls below the target; never more than
+   * `insertions` when no leading interaction closes loops; null when leading ones do and d is not a whole number.
    */
-  readonly loops: { readonly insertions: number; readonly target: number | null };
+  readonly loops: { readonly insertions: number; readonly needed: number | null };
   readonly included: boolean;
 }
 

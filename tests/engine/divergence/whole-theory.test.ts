@@ -161,9 +161,7 @@ describe("the verdict on a theory", () => {
     );
     expect(value?.verdict).toBeNull();
     expect(value?.ranges.map(({ from, to, verdict }) => [from?.text, to?.text, verdict])).toEqual([
-      ["0", "2", "super-renormalisable"],
-      ["2", "2", "super-renormalisable"],
-      ["2", "4", "super-renormalisable"],
+      ["0", "4", "super-renormalisable"],
       ["4", "4", "renormalisable"],
       ["4", undefined, "new terms at every order"],
     ]);

@@ -338,7 +338,7 @@ describe("loops", () => {
     const plan = planOf(scalar(listed), { target: "1e-3" });
     expect(plan.loopFactor).toBeCloseTo(1 / (16 * Math.PI ** 2), 12);
     // Order 0: 6.3e-3 needs one loop, 4e-5 no second; order 2: 1e-2 · 6.3e-3 is below the target already.
-    expect(plan.orders.slice(0, 2).map(({ loops }) => loops.target)).toEqual([1, 0]);
+    expect(plan.orders.slice(0, 2).map(({ loops }) => loops.needed)).toEqual([1, 0]);
     // Own derivation: one φ⁶ closes two loops at most, φ⁶ twice four, φ⁸ three.
     expect(plan.orders.map(({ loops }) => loops.insertions)).toEqual([0, 2, 4, 5, 6]);
   });
@@ -352,7 +352,7 @@ describe("loops", () => {
   });
 
   it("has no leading loops where every interaction is suppressed", () => {
-    expect(planOf(scalar({ c6: "phi6" })).orders.map(({ loops }) => loops.target)).toEqual([0, 0, 0]);
+    expect(planOf(scalar({ c6: "phi6" })).orders.map(({ loops }) => loops.needed)).toEqual([0, 0, 0]);
   });
 });
 
