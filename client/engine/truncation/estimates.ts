@@ -20,7 +20,7 @@ export interface OmittedPowers {
   readonly square: number | null;
 }
 
-/** @example omittedPowers(0.3, 3, []).linear // 0.027/(1 − 0.3) = 0.0385714… */
+/** @example omittedPowers(0.3, 3, []).linear // 0.0385714… */
 export function omittedPowers(q: number, nextOrder: number, absent: readonly number[]): OmittedPowers {
   const first = q ** nextOrder;
   if (q >= 1) return { first, linear: null, square: null };
@@ -65,7 +65,7 @@ export function differencesOfOrders(
  *
  * @param count n_c ≥ 1
  * @param probability two-sided degree of belief in (0, 1)
- * @example uniformPriorFactor(3, 0.68) // 0.68 · 4/3
+ * @example uniformPriorFactor(3, 0.68) // 0.906666…
  */
 export function uniformPriorFactor(count: number, probability: number): number {
   return probability <= count / (count + 1)
