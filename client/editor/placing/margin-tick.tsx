@@ -3,6 +3,7 @@ import type { Editor } from "@tiptap/core";
 import { Popover } from "radix-ui";
 import { useEffect, useRef, useState } from "react";
 import { INDEX_SHORTCUT } from "../editor-extensions.ts";
+import { PinPicker } from "../pins/pin-picker.tsx";
 import { PlacementIndex } from "./placement-index.tsx";
 import { gapAtCaret } from "./place.ts";
 
@@ -21,45 +22,60 @@ interface Gap {
 export function MarginTick({ editor, open, onOpenChange }: MarginTickProps) {
   const gap = useGap(editor, open);
   const tick = useRef<HTMLButtonElement>(null);
+  const [picking, setPicking] = useState(false);
   const keys = shortcutWords(INDEX_SHORTCUT);
   return (
-    <Popover.Root open={open} onOpenChange={onOpenChange}>
-      <Popover.Trigger asChild>
-        <button
-          ref={tick}
-          type="button"
-          className="margin-tick"
-          style={{ top: `${String(gap.top)}px` }}
-          aria-label="Place something here"
-          aria-keyshortcuts="Control+."
-          title={`Place a block, an equation, a heading… (${keys})`}
-        />
-      </Popover.Trigger>
-      <Popover.Portal>
-        <Popover.Content
-          className="placement"
-          aria-label="Index of what can be placed"
-          side="bottom"
-          align="start"
-          sideOffset={4}
-          collisionPadding={12}
-          onCloseAutoFocus={(event) => {
-            // What was placed has the focus already; giving up goes back to the prose.
-            event.preventDefault();
-            if (document.activeElement === document.body || document.activeElement === tick.current) {
-              editor.commands.focus();
-            }
-          }}
-        >
-          <PlacementIndex
-            onChoose={(placeable) => {
-              onOpenChange(false);
-              placeable.place(editor, gap.index);
-            }}
+    <>
+      <Popover.Root open={open} onOpenChange={onOpenChange}>
+        <Popover.Trigger asChild>
+          <button
+            ref={tick}
+            type="button"
+            className="margin-tick"
+            style={{ top: `${String(gap.top)}px` }}
+            aria-label="Place something here"
+            aria-keyshortcuts="Control+."
+            title={`Place a block, an equation, a heading… (${keys})`}
           />
-        </Popover.Content>
-      </Popover.Portal>
-    </Popover.Root>
+        </Popover.Trigger>
+        <Popover.Portal>
+          <Popover.Content
+            className="placement"
+            aria-label="Index of what can be placed"
+            side="bottom"
+            align="start"
+            sideOffset={4}
+            collisionPadding={12}
+            onCloseAutoFocus={(event) => {
+              // What was placed has the focus already; giving up goes back to the prose.
+              event.preventDefault();
+              if (document.activeElement === document.body || document.activeElement === tick.current) {
+                editor.commands.focus();
+              }
+            }}
+          >
+            <PlacementIndex
+              onChoose={(placeable) => {
+                onOpenChange(false);
+                placeable.place(editor, gap.index, {
+                  pinPicker: () => {
+                    setPicking(true);
+                  },
+                });
+              }}
+            />
+          </Popover.Content>
+        </Popover.Portal>
+      </Popover.Root>
+      {picking && (
+        <PinPicker
+          onClose={() => {
+            setPicking(false);
+            editor.commands.focus();
+          }}
+        />
+      )}
+    </>
   );
 }
 

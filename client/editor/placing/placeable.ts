@@ -11,7 +11,12 @@ export interface Placeable {
   readonly group: "Blocks" | "Numbers" | "Mathematics" | "Prose";
   readonly title: string;
   readonly purpose: string;
-  place(editor: Editor, gap: number): void;
+  place(editor: Editor, gap: number, open: Openers): void;
+}
+
+/** What a choice may open instead of placing something at once. */
+export interface Openers {
+  pinPicker(): void;
 }
 
 const blocks: readonly Placeable[] = Object.values(kindDescriptions).map(({ kind, title, purpose }) => ({
@@ -49,7 +54,17 @@ export const placeables: readonly Placeable[] = [
     id: "pin",
     group: "Numbers",
     title: "Pin",
-    purpose: "A number of a result, put into the sentence where the caret last stood, and watched from then on.",
+    purpose: "A number of a result, put into the sentence where the caret stands; it says when it has moved.",
+    place: (_editor, _gap, open) => {
+      open.pinPicker();
+    },
+  },
+  {
+    id: "pin",
+    group: "Numbers",
+    title: "Pin",
+    purpose:
+      "A number of a result, put into the sentence where the caret last stood, and watched from then on.",
     place: openPinPicker,
   },
   {
