@@ -5,11 +5,14 @@ import { documentSchema } from "#schema/document-schema.ts";
 import { NotebookEditor } from "../../editor/notebook-editor.tsx";
 import { excerptDocument } from "./excerpt-document.ts";
 
+/** A visitor has no role in a notebook that is nobody's. */
+const nobody = { notebookId: "excerpt", role: null } as const;
+
 /** The editor itself on a document of the reader's own, that is never sent. */
 export function ExcerptLive() {
   const [source] = useState(() => ({
     mode: "scratch" as const,
     ydoc: prosemirrorJSONToYDoc(documentSchema, excerptDocument, FRAGMENT),
   }));
-  return <NotebookEditor notebookId="excerpt" source={source} role={null} />;
+  return <NotebookEditor {...nobody} source={source} />;
 }
