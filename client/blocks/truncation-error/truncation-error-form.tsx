@@ -10,7 +10,7 @@ export function TruncationErrorForm() {
         table="orders"
         noun="order"
         caption="Predictions order by order"
-        nameOf={(row) => row["name"] ?? row["order"] ?? ""}
+        nameOf={(row) => row["name"] || (row["order"] ?? "")}
         invitation="0"
         columns={[
           { column: "order", heading: "order n", size: 5, placeholder: "0" },
