@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { differencesOfOrders } from "#engine/truncation/estimates.ts";
+import { readExpansionParameter } from "#engine/truncation/expansion-parameter.ts";
 import { evaluateBlock, scalar, type ByOrder } from "../engine/truncation/truncation-block.ts";
 
 describe("differences of orders of Epelbaum, Krebs and Meißner (2015)", () => {
@@ -43,6 +44,31 @@ describe("differences of orders of Epelbaum, Krebs and Meißner (2015)", () => {
       const result = evaluateBlock({ ...rows, ...next }, { q: String(q) });
       expect(scalar(result, "differences") / expected).toBeCloseTo(1, 6);
     });
+  });
+
+  // Relative momentum of neutron and proton, p² = m_p² E (E + 2 m_n)/((m_p + m_n)² + 2 m_p E), at the energies of that
+  // paper, with m_p = 938.27208816 and m_n = 939.56542052 MeV; at 10 MeV the pion mass 138.03 MeV sets Q. Own evaluation.
+  it.each([
+    [10, 0.23005, 0.345075],
+    [50, 0.25526017, 0.38289025],
+    [96, 0.35369887, 0.5305483],
+    [143, 0.43168412, 0.64752618],
+    [200, 0.51052035, 0.76578052],
+    [300, 0.62525718, 0.93788577],
+  ])("takes max(p, M_π)/Λ_b for Q at %d MeV, with Λ_b = 600 and 400 MeV", (energy, at600, at400) => {
+    const p =
+      "sqrt(938.27208816^2 E (E + 2 939.56542052) / ((938.27208816 + 939.56542052)^2 + 2 938.27208816 E)) MeV";
+    const expression = (breakdown: number) =>
+      `max(${p.replaceAll("E", String(energy))}, 138.03 MeV)/(${breakdown} MeV)`;
+    const read = (breakdown: number) => readExpansionParameter(expression(breakdown), null);
+    expect([read(600), read(400)]).toMatchObject([{ ok: true }, { ok: true }]);
+    for (const [breakdown, expected] of [
+      [600, at600],
+      [400, at400],
+    ] as const) {
+      const found = read(breakdown);
+      expect(found.ok ? found.q.value / expected : NaN).toBeCloseTo(1, 7);
+    }
   });
 
   it("is written out at the fifth order kept as in the paper", () => {

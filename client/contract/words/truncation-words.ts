@@ -11,6 +11,8 @@ export const truncationWords: Words = {
     `Order ${said(order)} is in the table twice, again in row ${said(row)}. Keep one of them.`,
   "order-value-unreadable": ({ row, order, text }) =>
     `Row ${said(row)}, order ${said(order)}: ${quoted(text)} is not a number. Leave it empty only if this order is absent by symmetry.`,
+  "order-value-uncertain": ({ row, order, text }) =>
+    `Row ${said(row)}, order ${said(order)}: ${quoted(text)} has an uncertainty of its own, which no method here uses. Enter the value alone.`,
   "orders-taken-as-absent": ({ orders }) =>
     `Order ${said(orders)} is not in the table and is taken as absent by symmetry. If it exists, enter it.`,
   "belief-missing": () => "Enter at least one degree of belief in percent, such as 68.",

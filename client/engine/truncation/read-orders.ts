@@ -49,7 +49,7 @@ export function readOrders(rows: TruncationInputs["orders"]): ReadOrders {
     const value = row.value.trim() === "" ? null : readNumber(row.value);
     if (value === null && row.value.trim() !== "") {
       problems.push({
-        code: "order-value-unreadable",
+        code: /\(\d+\)|±|\+-/u.test(row.value) ? "order-value-uncertain" : "order-value-unreadable",
         path: ["orders", row.id, "value"],
         facts: { ...facts, order, text: row.value },
       });

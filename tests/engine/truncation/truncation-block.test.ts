@@ -23,6 +23,13 @@ describe("refusals of a truncation error, each with its place", () => {
       "order-value-unreadable",
       ["orders", "n1", "value"],
     ],
+    [
+      "a value with an uncertainty",
+      { 0: "10", 1: "10.9(2)" },
+      {},
+      "order-value-uncertain",
+      ["orders", "n1", "value"],
+    ],
     ["a zero reference given", series, { reference: "0" }, "reference-zero", ["reference"]],
     ["a leading order of zero", { 0: "0", 1: "1" }, {}, "reference-zero", ["orders", "n0", "value"]],
     ["a reference that is no number", series, { reference: "NLO" }, "reference-unreadable", ["reference"]],
