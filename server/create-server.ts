@@ -68,7 +68,7 @@ export async function createServer(
   }
   // From here to the handlers nothing waits, so no request comes in between.
   const publicUrl = configuration.publicUrl ?? `http://${configuration.host}:${port}`;
-  const database = openDatabase(configuration.databaseUrl);
+  const database = openDatabase(configuration.databaseUrl, { log });
   const sessions = openSessions(configuration, publicUrl, log);
   const services: Services = { configuration, publicUrl, database, log, sessions, accessChanges };
   const compute = openCompute({ database, log });

@@ -1,27 +1,37 @@
 /** The server as a process: reads the environment, migrates, serves until it is told to stop. */
 import { seedDemonstration } from "./commands/seed-demonstration.ts";
-import { readConfiguration } from "./configuration.ts";
+import { readConfiguration, type Configuration } from "./configuration.ts";
 import { createServer, type RunningServer } from "./create-server.ts";
 import { openDatabase } from "./data/database.ts";
 import { migrateToLatest } from "./data/migrate.ts";
+import { wordsForStartupFailure } from "./startup-failures.ts";
 
+async function prepareDatabase({ databaseUrl, demonstration }: Configuration): Promise<void> {
+  const database = openDatabase(databaseUrl, { most: 2, name: "subleading migrations" });
+  try {
+    await migrateToLatest(database);
+    if (demonstration) await seedDemonstration(database);
+  } finally {
+    await database.destroy();
+  }
+}
+
+/** Null when it cannot start; what to do about it has then been said. */
 async function start(): Promise<RunningServer | null> {
   const outcome = readConfiguration(process.env);
   if (!outcome.ok) {
     for (const { words } of outcome.problems) process.stderr.write(`${words}\n`);
     return null;
   }
-  const database = openDatabase(outcome.configuration.databaseUrl, {
-    most: 2,
-    name: "subleading migrations",
-  });
   try {
-    await migrateToLatest(database);
-    if (outcome.configuration.demonstration) await seedDemonstration(database);
-  } finally {
-    await database.destroy();
+    await prepareDatabase(outcome.configuration);
+    return await createServer(outcome.configuration);
+  } catch (error) {
+    const words = wordsForStartupFailure(error, outcome.configuration);
+    if (words === null) throw error;
+    process.stderr.write(`${words}\n`);
+    return null;
   }
-  return createServer(outcome.configuration);
 }
 
 const server = await start();

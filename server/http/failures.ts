@@ -1,6 +1,7 @@
 /** The end of the line: addresses nobody answers, and errors nobody expected. */
 import type { ErrorRequestHandler, RequestHandler } from "express";
 import { refuse, type Refusal } from "../commands/outcome.ts";
+import { isDatabaseAway } from "../data/database-away.ts";
 import { sendProblem } from "./problems.ts";
 
 export const answerUnknownAddress: RequestHandler = (_request, response) =>
@@ -16,13 +17,6 @@ const requestFaults: Readonly<Record<string, Refusal>> = {
   "request.size.invalid": refuse("malformed"),
 };
 
-/** PostgreSQL or the way to it is gone; see its Appendix A for classes 08, 53 and 57. */
-function isDatabaseAway(code: string, name: string): boolean {
-  return (
-    /^(08|53|57P)/.test(code) || ["ECONNREFUSED", "ECONNRESET"].includes(code) || name === "KnexTimeoutError"
-  );
-}
-
 function refusalFor(error: unknown): Refusal {
   if (!(error instanceof Error)) return refuse("unexpected");
   if ("type" in error && typeof error.type === "string") {
@@ -31,8 +25,7 @@ function refusalFor(error: unknown): Refusal {
   }
   // Express says so of an address with a broken percent escape.
   if (error instanceof URIError) return refuse("malformed");
-  const code = "code" in error && typeof error.code === "string" ? error.code : "";
-  return isDatabaseAway(code, error.name) ? refuse("unavailable") : refuse("unexpected");
+  return refuse(isDatabaseAway(error) ? "unavailable" : "unexpected");
 }
 
 export const answerFailure: ErrorRequestHandler = (error: unknown, request, response, next) => {

@@ -33,13 +33,16 @@ async function primaryEmail(emailsUrl: string, accessToken: string): Promise<Ema
   return { email: primary?.email ?? null, emailVerified: primary?.verified ?? false };
 }
 
+/** Characters that would break a line, hide text or turn its direction around. */
+const unfit = /[\p{Cc}\p{Zl}\p{Zp}\u202A-\u202E\u2066-\u2069]/gu;
+
 async function readAccount(
   endpoints: GitHubEndpoints,
   accessToken: string,
   profile: unknown,
 ): Promise<Account> {
   const { id, username, displayName } = profileSchema.parse(profile);
-  const name = displayName?.trim().slice(0, 200);
+  const name = displayName?.replace(unfit, "").trim().slice(0, 200);
   return {
     provider: "github",
     subject: id,

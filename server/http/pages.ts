@@ -3,9 +3,12 @@ import { existsSync } from "node:fs";
 import { join } from "node:path";
 import express, { Router, type RequestHandler } from "express";
 import { refuse } from "../commands/outcome.ts";
+import { serveCompressed } from "./compressed-files.ts";
 import { hideReferrer } from "./security-headers.ts";
 import { sendProblem } from "./problems.ts";
 
+/** The name of a hashed file changes with its content. */
+const FOR_EVER = "public, max-age=31536000, immutable";
 const loopbackNames = new Set(["localhost", "127.0.0.1", "[::1]"]);
 
 /**
@@ -27,13 +30,13 @@ export function servePages(clientFolder: string | null, publicUrl: string): Rout
   router.use("/r", hideReferrer);
   if (clientFolder === null) return router;
   const index = join(clientFolder, "index.html");
+  const assets = join(clientFolder, "assets");
   router.use(
     "/assets",
-    express.static(join(clientFolder, "assets"), {
-      immutable: true,
-      maxAge: "1y",
+    serveCompressed(assets, FOR_EVER),
+    express.static(assets, {
       index: false,
-      fallthrough: true,
+      setHeaders: (response) => response.setHeader("Cache-Control", FOR_EVER),
     }),
     (_request, response) => sendProblem(response, refuse("not-found")),
   );

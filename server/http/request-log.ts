@@ -36,6 +36,14 @@ export function openLog(
   return destination === undefined ? pino(options) : pino(options, destination);
 }
 
+interface LoggedRequest {
+  readonly id: string;
+  readonly method: string;
+  readonly url: string;
+  /** Express shortens `url` inside of routers. */
+  readonly originalUrl?: string;
+}
+
 /** Addresses that are asked every few seconds and say nothing when they work. */
 const quiet = new Set(["/healthz", "/readyz"]);
 
@@ -50,16 +58,16 @@ export function logRequests(log: Logger) {
     autoLogging: { ignore: (request) => quiet.has(request.url ?? "") },
     customLogLevel: (_request, response, error) =>
       error !== undefined || response.statusCode >= 500 ? "error" : "info",
+    // Only what is named here is written: headers hold cookies and tokens.
+    wrapSerializers: false,
     serializers: {
-      // Only what is named here is written: headers hold cookies and tokens.
-      req: (request: { id: string; method: string; url: string }) => ({
+      req: (request: LoggedRequest) => ({
         id: request.id,
         method: request.method,
-        url: withoutSecrets(request.url),
+        url: withoutSecrets(request.originalUrl ?? request.url),
       }),
       res: (response: { statusCode: number }) => ({ status: response.statusCode }),
       err: describeError,
     },
-    wrapSerializers: true,
   });
 }

@@ -146,6 +146,17 @@ describe("pages", () => {
     }
   });
 
+  it("send hashed files compressed to who can read that", async () => {
+    const compressed = await wren.get("/assets/main-1a2b3c.js", { headers: { "accept-encoding": "gzip" } });
+    expect(compressed.headers.get("content-encoding")).toBe("gzip");
+    expect(compressed.headers.get("content-type")).toBe("text/javascript; charset=utf-8");
+    expect(compressed.headers.get("cache-control")).toBe("public, max-age=31536000, immutable");
+    const plain = await wren.get("/assets/main-1a2b3c.js", { headers: { "accept-encoding": "identity" } });
+    expect(plain.headers.get("content-encoding")).toBeNull();
+    expect([compressed.text, plain.text]).toEqual(["export {};", "export {};"]);
+    for (const answer of [compressed, plain]) expect(answer.headers.get("vary")).toMatch(/Accept-Encoding/i);
+  });
+
   it("keep hashed files for ever, and miss what is not there", async () => {
     const file = await wren.get("/assets/main-1a2b3c.js");
     expect(file.headers.get("cache-control")).toBe("public, max-age=31536000, immutable");

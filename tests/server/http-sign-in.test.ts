@@ -212,6 +212,23 @@ describe("where to go after signing in", () => {
   it.each(cases)("%j leads to %j", (wish, path) => expect(safeNextPath(wish)).toBe(path));
 });
 
+describe("a name at the sign-in service", () => {
+  const account = { id: 1, email: "a@example.org", emailVerified: true, remark: "", refusesConsent: false };
+  it.each([
+    ["turns direction", "Ada \u202Eevil\u202C", "Ada evil"],
+    ["breaks lines", "Ada\r\nBcc: x\0", "AdaBcc: x"],
+    ["is missing", "  ", "the-account"],
+    ["goes on for ever", "a".repeat(500), "a".repeat(200)],
+  ])("that %s is made fit to show", async (_how, name, shown) => {
+    const world = await createWorld({ oauth: { accounts: [{ ...account, login: "the-account", name }] } });
+    try {
+      expect((await world.signIn("the-account")).me?.person?.name).toBe(shown);
+    } finally {
+      await world.stop();
+    }
+  });
+});
+
 describe("behind TLS", () => {
   it("keeps the session to TLS and to this very host", async () => {
     const world = await createWorld({

@@ -30,6 +30,8 @@ export interface WorldOptions {
   readonly environment?: Readonly<Record<string, string>>;
   readonly oauth?: OAuthFakeOptions;
   readonly smtp?: SmtpFakeOptions;
+  /** Leads the server to its database by another way than the test's own. */
+  readonly through?: (databaseUrl: string) => string;
 }
 
 export async function createWorld(options: WorldOptions = {}): Promise<World> {
@@ -38,7 +40,7 @@ export async function createWorld(options: WorldOptions = {}): Promise<World> {
   const mailbox = await startSmtpFake(options.smtp);
   const outcome = readConfiguration({
     NODE_ENV: "test",
-    DATABASE_URL: test.url,
+    DATABASE_URL: options.through?.(test.url) ?? test.url,
     PORT: "0",
     SESSION_SECRET: "a secret for tests only, long enough to be accepted",
     GITHUB_CLIENT_ID: oauth.clientId,
