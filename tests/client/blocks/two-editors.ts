@@ -7,6 +7,7 @@ import { FRAGMENT } from "#contract/collab.ts";
 import { documentExtensions, documentSchema } from "#schema/document-schema.ts";
 import { createBlockDirectory, type BlockDirectory } from "../../../client/editor/blocks/block-directory.ts";
 import { BlockPairing } from "../../../client/editor/blocks/block-pairing.ts";
+import { ProseCaret } from "../../../client/editor/pins/prose-caret.ts";
 import { createHistory, type NotebookHistory } from "../../../client/editor/history.ts";
 
 export interface Person {
@@ -33,6 +34,7 @@ export function person(clientId: number, state: Uint8Array): Person {
         yUndoOptions: { undoManager: history.manager } as never,
       }),
       BlockPairing,
+      ProseCaret,
     ],
   });
   return { doc, fragment, editor, history, directory: createBlockDirectory(fragment) };

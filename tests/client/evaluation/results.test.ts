@@ -1,0 +1,194 @@
+import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import * as Y from "yjs";
+import { FRAGMENT } from "#contract/collab.ts";
+import type { StoredResult } from "#contract/api.ts";
+import { ENGINE_VERSION } from "#engine/evaluation.ts";
+import { readDocument } from "#engine/notebook/read-document.ts";
+import { evaluateNotebook } from "#engine/notebook/evaluate-notebook.ts";
+import { createBlockDirectory, type BlockDirectory } from "../../../client/editor/blocks/block-directory.ts";
+import { changeInputs, writeField } from "../../../client/editor/blocks/block-writes.ts";
+import type { WorkerLike } from "../../../client/editor/evaluation/evaluation-client.ts";
+import { createEvaluationCore } from "../../../client/editor/evaluation/evaluation-core.ts";
+import type { EvaluationRequest } from "../../../client/editor/evaluation/evaluation-messages.ts";
+import { createResultsStore, type ResultsStore } from "../../../client/editor/evaluation/results-store.ts";
+import { notebookState, paragraph, row } from "../blocks/two-editors.ts";
+import { workerInProcess } from "./worker-in-process.ts";
+
+const orders = ["8.0", "9.1", "9.32"].map((value, index) => row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }));
+const content = [
+  paragraph("words"),
+  { type: "premises", attrs: { blockId: "premises", d: "4" }, content: [row("fields", "f", "K", { symbol: "phi", kind: "real scalar" }), row("terms", "t", "K", { term: "lambda/4! phi^4" })] },
+  { type: "scaling", attrs: { blockId: "scaling" } },
+  { type: "truncationError", attrs: { blockId: "apart", q: "0.3" }, content: orders },
+];
+
+let doc: Y.Doc;
+let directory: BlockDirectory;
+let store: ResultsStore | null = null;
+beforeEach(() => {
+  doc = new Y.Doc();
+  Y.applyUpdate(doc, notebookState(content));
+  directory = createBlockDirectory(doc.getXmlFragment(FRAGMENT));
+});
+afterEach(() => {
+  store?.destroy();
+  store = null;
+  directory.destroy();
+  vi.useRealTimers();
+});
+
+function open(startWorker: () => WorkerLike = workerInProcess, timeLimitMs?: number): ResultsStore {
+  store = createResultsStore({ directory, startWorker, ...(timeLimitMs === undefined ? {} : { timeLimitMs }) });
+  return store;
+}
+const settled = (results: ResultsStore) =>
+  vi.waitFor(() => {
+    for (const { id } of results.blocks()) expect(results.result(id).pending, id).toBe(false);
+  });
+const edit = (blockId: string, field: string, value: string) => {
+  const element = directory.element(blockId) ?? expect.fail(`no ${blockId}`);
+  changeInputs(element, () => writeField(element, field, value));
+};
+
+describe("results", () => {
+  it("are the engine's own for the same document", async () => {
+    const results = open();
+    await settled(results);
+    const direct = evaluateNotebook(directory.blocks(), { memo: new Map(), onInternalError: (error) => expect.fail(String(error)) });
+    for (const { blockId, key, evaluation } of direct) {
+      expect(results.result(blockId).key).toBe(key);
+      expect(results.result(blockId).evaluation).toEqual(evaluation);
+    }
+  });
+
+  it("of other blocks stay the same objects when one block changes, so that only its readers draw again", async () => {
+    const results = open();
+    await settled(results);
+    const [premises, scaling, apart] = ["premises", "scaling", "apart"].map((id) => results.result(id));
+    edit("apart", "q", "0.2");
+    await settled(results);
+    expect(results.result("premises")).toBe(premises);
+    expect(results.result("scaling")).toBe(scaling);
+    expect(results.result("apart").key).not.toBe(apart?.key);
+  });
+
+  it("follow the premises they stand on", async () => {
+    const results = open();
+    await settled(results);
+    const before = results.result("scaling");
+    edit("premises", "d", "6");
+    expect(results.result("scaling").pending).toBe(true);
+    await settled(results);
+    expect(results.result("scaling").key).not.toBe(before.key);
+  });
+
+  it("send the worker only what changed", async () => {
+    const requests: EvaluationRequest[] = [];
+    const results = open(() => {
+      const worker = workerInProcess();
+      const post = worker.postMessage.bind(worker);
+      worker.postMessage = (request) => {
+        requests.push(request);
+        post(request);
+      };
+      return worker;
+    });
+    await settled(results);
+    edit("scaling", "probe", "1 TeV");
+    await settled(results);
+    expect(requests.map(({ changed }) => changed.map(({ id }) => id))).toEqual([["premises", "scaling", "apart"], ["scaling"]]);
+  });
+
+  it("keep the last good one beside an error", async () => {
+    const results = open();
+    await settled(results);
+    const good = results.result("apart").evaluation;
+    edit("apart", "q", "wide");
+    await settled(results);
+    expect(results.result("apart").evaluation?.value).toBeNull();
+    expect(results.result("apart").lastGood).toBe(good);
+  });
+
+  it("are the server's until the worker has answered, and say who changed them as long as they are the same result", async () => {
+    const { blocks } = readDocument({ type: "doc", content });
+    const stored = evaluateNotebook(blocks, { memo: new Map(), onInternalError: () => undefined }).map(
+      ({ blockId, key, evaluation }): StoredResult => ({ blockId, key, evaluation, engineVersion: ENGINE_VERSION, settledAt: "2026-12-01T14:02:00Z", changedBy: "Otto" }),
+    );
+    const silent: WorkerLike = { onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => undefined };
+    const early = open(() => silent);
+    early.setStored(stored);
+    expect(early.result("apart").evaluation).toEqual(stored.find(({ blockId }) => blockId === "apart")?.evaluation);
+    expect(early.result("apart").settled).toEqual({ by: "Otto", at: "2026-12-01T14:02:00Z" });
+    early.destroy();
+
+    const results = open();
+    results.setStored(stored);
+    await settled(results);
+    expect(results.result("apart").settled?.by).toBe("Otto");
+    edit("apart", "q", "0.2");
+    await settled(results);
+    expect(results.result("apart").settled).toBeNull();
+  });
+
+  it("forget a block that is gone", async () => {
+    const results = open();
+    await settled(results);
+    doc.getXmlFragment(FRAGMENT).delete(3, 1);
+    await settled(results);
+    expect(results.result("apart").evaluation).toBeNull();
+    expect(results.blocks().map(({ id }) => id)).toEqual(["premises", "scaling"]);
+  });
+});
+
+describe("the worker", () => {
+  it("computes only the newest of several states that arrive together", () => {
+    const core = createEvaluationCore();
+    const blocks = directory.blocks();
+    core.hear({ revision: 1, order: blocks.map(({ id }) => id), changed: blocks });
+    edit("apart", "q", "0.2");
+    const newest = directory.block("apart") ?? expect.fail("gone");
+    core.hear({ revision: 2, order: blocks.map(({ id }) => id), changed: [newest] });
+    const answer = core.answer();
+    expect(answer.revision).toBe(2);
+    expect(answer.outcomes).toHaveLength(3);
+    expect(core.answer().outcomes).toEqual([]);
+  });
+
+  it("is started again when it crashes, and told everything anew", async () => {
+    const started: WorkerLike[] = [];
+    const results = open(() => {
+      const worker = started.length === 0 ? { onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => undefined } : workerInProcess();
+      started.push(worker);
+      return worker;
+    });
+    await vi.waitFor(() => expect(started).toHaveLength(1));
+    started[0]?.onerror?.(new ErrorEvent("error", { message: "out of memory", cancelable: true }));
+    await settled(results);
+    expect(started).toHaveLength(2);
+    expect(results.evaluator()).toEqual({ state: "working" });
+  });
+
+  it("is given up after crashing three times in a row, and tried again at the next change", async () => {
+    let starts = 0;
+    let broken = true;
+    const results = open(() => {
+      starts += 1;
+      if (!broken) return workerInProcess();
+      const worker: WorkerLike = { onmessage: null, onerror: null, terminate: () => undefined, postMessage: () => setTimeout(() => worker.onerror?.(new ErrorEvent("error", { message: "no", cancelable: true })), 0) };
+      return worker;
+    });
+    await vi.waitFor(() => expect(results.evaluator()).toEqual({ state: "crashed", reason: "no" }));
+    expect(starts).toBe(3);
+    broken = false;
+    edit("apart", "q", "0.2");
+    await settled(results);
+    expect(results.evaluator()).toEqual({ state: "working" });
+  });
+
+  it("is ended when it does not answer in time", async () => {
+    let ended = 0;
+    const results = open(() => ({ onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => (ended += 1) }), 30);
+    await vi.waitFor(() => expect(results.evaluator()).toEqual({ state: "timed-out", seconds: 0.03 }));
+    expect(ended).toBe(1);
+  });
+});
