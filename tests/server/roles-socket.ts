@@ -14,9 +14,12 @@ const refusals: Readonly<Record<number, Verdict>> = { 401: "signed-out", 403: "f
 export class HandSocket {
   readonly frames: Uint8Array[] = [];
   readonly #socket: WebSocket;
+  /** The code with which the server closed. */
+  closedWith: number | null = null;
 
   private constructor(socket: WebSocket) {
     this.#socket = socket;
+    socket.on("close", (code) => (this.closedWith = code));
     socket.on("message", (data: Buffer) => this.frames.push(new Uint8Array(data)));
   }
 
