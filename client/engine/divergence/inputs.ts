@@ -24,7 +24,7 @@ export const divergenceShape = defineShape({
       count: text("1"),
     },
     legs: {
-      /** Symbol of a field of the premises: "phi", "psi". */
+      /** A field of the premises as terms write it: "phi", "psi"; "psibar" and "phi^\dagger" are conjugates. */
       field: text(),
       /** "pair" is one leg of the field and one of its conjugate; a real field's legs are all "field". */
       leg: choice("field", "conjugate", "pair"),

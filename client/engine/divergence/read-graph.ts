@@ -1,9 +1,19 @@
 /** Reads the typed vertices and legs of one graph, and refuses in words what no connected graph can have. */
 import type { Problem } from "../evaluation.ts";
+import { Rational } from "../exact/rational.ts";
+import { readTerm } from "../notation/read-term.ts";
 import type { Theory } from "../premises/theory.ts";
 import { degreeOf, type Degree, type GraphParts } from "./degree.ts";
 import { graphExists } from "./graph-existence.ts";
-import { addHalfEdges, countOf, halfEdgesOf, noHalfEdges, totalOf, type HalfEdges } from "./half-edges.ts";
+import {
+  addHalfEdges,
+  conjugated,
+  countOf,
+  halfEdgesOf,
+  noHalfEdges,
+  totalOf,
+  type HalfEdges,
+} from "./half-edges.ts";
 import type { DivergenceInputs } from "./inputs.ts";
 
 /** Larger graphs have the same degree formula, but their connectedness would take long to settle. */
@@ -64,21 +74,36 @@ function readLegs(inputs: DivergenceInputs, theory: Theory, problems: Problem[])
   for (const row of inputs.legs) {
     if (row.field.trim() === "") continue;
     const count = readCount(row.count, "legs", row.id, problems);
-    const index = theory.fields.findIndex(({ symbol }) => symbol === row.field.trim());
-    const field = theory.fields[index];
-    if (!field) {
+    const written = readLeg(row.field, theory);
+    if (!written) {
       problems.push({ code: "leg-unknown", path: ["legs", row.id, "field"], facts: { text: row.field } });
       continue;
     }
-    const one = theory.fields.map((_, f) => (f === index ? 1 : 0));
-    const none = theory.fields.map(() => 0);
-    const plain = row.leg !== "conjugate" || field.selfConjugate ? one : none;
-    const conjugate = row.leg === "field" || field.selfConjugate ? none : one;
-    // A pair of a field that is its own conjugate is two of its legs.
-    const times = (count ?? 0) * (row.leg === "pair" && field.selfConjugate ? 2 : 1);
-    legs = addHalfEdges(legs, { plain, conjugate }, times);
+    const other = conjugated(written, theory);
+    if (row.leg !== "conjugate") legs = addHalfEdges(legs, written, count ?? 0);
+    if (row.leg !== "field") legs = addHalfEdges(legs, other, count ?? 0);
   }
   return legs;
+}
+
+/** One field as it is written in a term: "phi", "\psi", "psibar", "phi^\dagger"; null for anything else. */
+function readLeg(text: string, theory: Theory): HalfEdges | null {
+  const fields = theory.fields.map(
+    ({ symbol, selfConjugate }) => [symbol, { selfConjugate, inError: false, strength: false }] as const,
+  );
+  const read = readTerm(text, {
+    geometry: theory.spacetime.geometry,
+    fields: new Map(fields),
+    scales: new Set(),
+  });
+  if (!read.ok) return null;
+  const { monomial } = read.value;
+  const edges = halfEdgesOf(monomial, theory);
+  const isBare =
+    monomial.coefficients.length === 0 &&
+    monomial.prefactor.equals(Rational.one) &&
+    monomial.derivatives + monomial.timeDerivatives === 0;
+  return edges && totalOf(edges) === 1 && isBare ? edges : null;
 }
 
 /** The reason why no connected graph has these vertices and legs; null when one has. */

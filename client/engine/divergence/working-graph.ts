@@ -1,6 +1,5 @@
 /** The derivation of one graph's degree, with this theory's numbers in both formulas. */
 import type { WorkingStep } from "../evaluation.ts";
-import { LinearForm } from "../exact/linear-form.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { Degree, GraphParts } from "./degree.ts";
 import { addHalfEdges, countOf, noHalfEdges } from "./half-edges.ts";

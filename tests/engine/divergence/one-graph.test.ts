@@ -1,4 +1,7 @@
 import { describe, expect, it } from "vitest";
+import { evaluateDivergence } from "#engine/divergence/evaluate.ts";
+import { divergenceShape } from "#engine/divergence/inputs.ts";
+import { schemaOf } from "#engine/shape.ts";
 import { theoryOf } from "../theory-builder.ts";
 import { askGraph, graphOf, refusalOf } from "./ask.ts";
 
@@ -92,6 +95,27 @@ describe("one graph", () => {
     // Yukawa φχχ + h.c. in d = 4: the φ self-energy needs one of each; ω = 4 − 2·1 − 0 = 2.
     expect(graphOf(charged, { y: 2 }, { phi: 1, "phi~": 1 }).omega.text).toBe("2");
     expect(refusalOf(charged, { y: 3 }, { phi: 1, chi: 2, "chi~": 2 })).not.toEqual([]);
+  });
+
+  it("reads legs as terms write them, conjugates and LaTeX included", () => {
+    const legs = (field: string, leg: string) => {
+      const asked = { vertices: [{ id: "v", term: "e", count: 2 }], legs: [{ id: "l", field, leg }] };
+      const { value, problems } = evaluateDivergence(schemaOf(divergenceShape).parse(asked), qed);
+      return value?.mode === "one graph" ? value.legs.text : problems.map(({ code }) => code).join();
+    };
+    expect([legs("psi", "pair"), legs("\\psi", "pair"), legs("psibar", "pair")]).toEqual(
+      Array(3).fill("psibar psi"),
+    );
+    expect([legs("psibar", "field"), legs("psi", "conjugate")]).toEqual([
+      "graph-half-line",
+      "graph-half-line",
+    ]);
+    expect([legs("A", "pair"), legs("2 A", "field"), legs("A^2", "field"), legs("d A", "field")]).toEqual([
+      "A^2",
+      "leg-unknown",
+      "leg-unknown",
+      "leg-unknown",
+    ]);
   });
 
   it("says what is symbolic: where the graph is logarithmic", () => {
