@@ -5,6 +5,7 @@ import type { Duplex } from "node:stream";
 import type { Logger } from "pino";
 import { WebSocketServer } from "ws";
 import { closeCode } from "#contract/collab.ts";
+import type { Configuration } from "../configuration.ts";
 import type { Database } from "../data/database.ts";
 import type { Sessions } from "../http/sessions.ts";
 import type { AccessChanges } from "../policies/access-changes.ts";
@@ -12,7 +13,7 @@ import { AccessWatch } from "./access-watch.ts";
 import { admit, type Admitted } from "./admission.ts";
 import { compactHere, createCompaction, type Compact } from "./compaction.ts";
 import { Connection } from "./connection.ts";
-import { createDocumentStore, type DocumentStore } from "./document-store.ts";
+import { openDocumentStore, type DocumentStore } from "./document-store.ts";
 import {
   CONNECTIONS_PER_NOTEBOOK,
   CONNECTIONS_PER_VISITOR,
@@ -24,6 +25,7 @@ import { RoomNotFound, type Lease, type RoomObserver } from "./room.ts";
 import { Rooms } from "./rooms.ts";
 
 export interface CollabDependencies {
+  readonly configuration: Pick<Configuration, "databaseUrl">;
   readonly database: Database;
   readonly log: Logger;
   readonly sessions: Pick<Sessions, "identify">;
@@ -33,7 +35,7 @@ export interface CollabDependencies {
   readonly observers?: readonly RoomObserver[];
   /** Done in another thread where there is one. */
   readonly compact?: Compact;
-  /** For tests: a store that is slow or fails on purpose. */
+  /** For tests: a store that is slow or fails on purpose. Stopped with the rest. */
   readonly store?: DocumentStore;
   readonly lingerMs?: number;
   readonly retry?: { readonly firstMs: number; readonly longestMs: number };
@@ -50,8 +52,9 @@ const STOP_PATIENCE_MS = 10_000;
 const RECHECK_EVERY_MS = 30_000;
 
 export function attachCollab(server: Server, dependencies: CollabDependencies): Collab {
-  const { database, log, sessions, accessChanges } = dependencies;
-  const store = dependencies.store ?? createDocumentStore(database);
+  const { configuration, database, log, sessions, accessChanges } = dependencies;
+  const store =
+    dependencies.store ?? openDocumentStore({ database, databaseUrl: configuration.databaseUrl, log });
   const rooms = new Rooms({
     store,
     log,
@@ -197,6 +200,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
       await new Promise<void>((resolve, reject) =>
         sockets.close((error) => (error === undefined ? resolve() : reject(error))),
       );
+      await store.stop();
     },
   };
 }

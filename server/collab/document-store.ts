@@ -1,4 +1,6 @@
 /** Documents in PostgreSQL: an append-only log of updates per notebook, and a compacted state beside it. */
+import pg from "pg";
+import type { Logger } from "pino";
 import { roleMay, roles } from "#contract/roles.ts";
 import { firstRow, rows, type Database, type Queryable } from "../data/database.ts";
 import type { BadRow, StoredUpdate } from "./build-document.ts";
@@ -42,38 +44,55 @@ export interface DocumentStore {
   /** False when a newer state is there already. */
   saveState(notebookId: string, seq: number, state: Uint8Array): Promise<boolean>;
   quarantine(notebookId: string, bad: readonly BadRow[]): Promise<void>;
+  stop(): Promise<void>;
 }
+
+const WRITING_CONNECTIONS = 8;
 
 const writingRoles = roles.filter((role) => roleMay(role, "notebook.write"));
 
 /**
  * One statement, one round trip, one commit. The row lock on the notebook orders the writers of all processes, so a
- * seq is never visible before a lower one; a serial number would not promise that.
+ * seq is never visible before a lower one; a serial number would not promise that. Prepared once per connection:
+ * planning it would cost more than running it.
+ *
+ * $1 notebook, $2 writers, $3 roles that write, $4 last known seq, $5 lowest and $6 highest schema, $7 updates
  */
-const appendStatement = `
-  with notebook as materialized (
-    select id, last_seq, schema_version, archived_at is not null as archived, deleted_at is not null as deleted
-      from notebooks where id = :notebookId for update
-  ), denied as (
-    select distinct writer from unnest(cast(:writers as uuid[])) as writer
-     where not exists (select 1 from notebook_people p
-       where p.notebook_id = :notebookId and p.person_id = writer and p.role = any(cast(:writingRoles as text[])))
-  ), fit as (
-    select id, last_seq from notebook
-     where not archived and not deleted and last_seq = :after and schema_version <= :lowest
-       and not exists (select 1 from denied)
-  ), inserted as (
-    insert into document_updates (notebook_id, seq, update, person_id)
-    select fit.id, fit.last_seq + line.number, line.update, line.writer
-      from fit, unnest(cast(:updates as bytea[]), cast(:writers as uuid[])) with ordinality as line (update, writer, number)
-  ), raised as (
-    update notebooks n
-       set last_seq = fit.last_seq + :count, schema_version = greatest(n.schema_version, :highest)
-      from fit where n.id = fit.id
-  )
-  select cast(last_seq as text) as last_seq, schema_version, archived, deleted, exists (select 1 from fit) as stored,
-         coalesce((select array_agg(cast(writer as text)) from denied), '{}') as denied
-    from notebook`;
+const appendStatement = {
+  name: "append-updates",
+  text: `
+    with notebook as materialized (
+      select id, last_seq, schema_version, archived_at is not null as archived, deleted_at is not null as deleted
+        from notebooks where id = $1 for update
+    ), denied as (
+      select distinct writer from unnest($2::uuid[]) as writer
+       where not exists (select 1 from notebook_people p
+         where p.notebook_id = $1 and p.person_id = writer and p.role = any($3::text[]))
+    ), fit as (
+      select id, last_seq from notebook
+       where not archived and not deleted and last_seq = $4 and schema_version <= $5
+         and not exists (select 1 from denied)
+    ), inserted as (
+      insert into document_updates (notebook_id, seq, update, person_id)
+      select fit.id, fit.last_seq + line.number, line.update, line.writer
+        from fit, unnest($7::bytea[], $2::uuid[]) with ordinality as line (update, writer, number)
+    ), raised as (
+      update notebooks n
+         set last_seq = fit.last_seq + cardinality($7::bytea[]), schema_version = greatest(n.schema_version, $6)
+        from fit where n.id = fit.id
+    )
+    select last_seq::text, schema_version, archived, deleted, exists (select 1 from fit) as stored,
+           coalesce((select array_agg(writer::text) from denied), '{}') as denied
+      from notebook`,
+};
+interface AppendRow {
+  readonly last_seq: string;
+  readonly schema_version: number;
+  readonly archived: boolean;
+  readonly deleted: boolean;
+  readonly stored: boolean;
+  readonly denied: readonly string[];
+}
 
 interface UpdateRow {
   readonly seq: string;
@@ -89,15 +108,36 @@ const asStoredUpdate = (row: UpdateRow): StoredUpdate => ({
 async function tailAfter(database: Queryable, notebookId: string, seq: number): Promise<StoredUpdate[]> {
   const found = await rows<UpdateRow>(
     database,
-    `select seq::text, update, person_id from document_updates
-      where notebook_id = ? and seq > ? and quarantined_at is null order by seq`,
+    // "order by seq" alone would mean the text in the select list, and put 10 before 9.
+    `select u.seq::text, u.update, u.person_id from document_updates u
+      where u.notebook_id = ? and u.seq > ? and u.quarantined_at is null order by u.seq`,
     [notebookId, seq],
   );
   return found.map(asStoredUpdate);
 }
 
-export function createDocumentStore(database: Database): DocumentStore {
+export interface DocumentStoreOptions {
+  readonly database: Database;
+  readonly databaseUrl: string;
+  readonly log: Logger;
+}
+
+/** Writing has connections of its own, so that no slow query of a page delays what people type. */
+export function openDocumentStore({ database, databaseUrl, log }: DocumentStoreOptions): DocumentStore {
+  const pool = new pg.Pool({
+    connectionString: databaseUrl,
+    application_name: "subleading documents",
+    max: WRITING_CONNECTIONS,
+    connectionTimeoutMillis: 5_000,
+    statement_timeout: 15_000,
+    // A dead network path answers nothing at all.
+    query_timeout: 20_000,
+  });
+  // Without a listener, a broken idle connection would end the process.
+  pool.on("error", (error) => log.warn({ err: error }, "an idle connection for documents was lost"));
   return {
+    stop: () => pool.end(),
+
     load: (notebookId) =>
       // One snapshot: a compaction between two reads would otherwise leave a gap.
       database.transaction(
@@ -126,23 +166,10 @@ export function createDocumentStore(database: Database): DocumentStore {
       ),
 
     async append({ notebookId, after, updates, schema }) {
-      const answer = (await database.raw(appendStatement, {
-        notebookId,
-        after,
-        lowest: schema.lowest,
-        highest: schema.highest,
-        count: updates.length,
-        // Knex passes arrays on to PostgreSQL as they are; its binding type does not name arrays of buffers.
-        updates: updates.map(({ update }) => asBuffer(update)) as unknown as readonly string[],
-        writers: updates.map(({ personId }) => personId),
-        writingRoles,
-      })) as {
-        rows: (Omit<AppendOutcome, "lastSeq" | "schemaVersion"> & {
-          last_seq: string;
-          schema_version: number;
-        })[];
-      }; // as selected above
-      const [row] = answer.rows;
+      const writers = updates.map(({ personId }) => personId);
+      const bytes = updates.map(({ update }) => asBuffer(update));
+      const values = [notebookId, writers, writingRoles, after, schema.lowest, schema.highest, bytes];
+      const [row] = (await pool.query<AppendRow>({ ...appendStatement, values })).rows;
       if (row === undefined) return null;
       const { stored, archived, deleted, denied } = row;
       return {

@@ -19,11 +19,13 @@ export interface CollabServer {
   stop(): Promise<void>;
 }
 
-export type Parts = Partial<Omit<CollabDependencies, "database" | "sessions" | "accessChanges" | "log">> & {
+export type Parts = Partial<
+  Omit<CollabDependencies, "configuration" | "database" | "sessions" | "accessChanges" | "log">
+> & {
   readonly log?: Logger;
   readonly port?: number;
   /** Made of the database, which exists only once the server starts. */
-  readonly with?: (database: Database) => Partial<CollabDependencies>;
+  readonly with?: (database: Database, databaseUrl: string) => Partial<CollabDependencies>;
 };
 
 function configurationFor(databaseUrl: string): Configuration {
@@ -42,14 +44,16 @@ export async function startCollabServer(databaseUrl: string, parts: Parts = {}):
   const { with: made, port = 0, ...given } = parts;
   const log = given.log ?? pino({ level: process.env["TEST_LOG_LEVEL"] ?? "silent" });
   const database = openDatabase(databaseUrl);
-  const sessions = openSessions(configurationFor(databaseUrl), publicUrl, log);
+  const configuration = configurationFor(databaseUrl);
+  const sessions = openSessions(configuration, publicUrl, log);
   const accessChanges = await listenForAccessChanges(databaseUrl, log);
   const server = createServer((_request, response) => response.writeHead(404).end());
   const collab = attachCollab(server, {
     publicUrl,
     lingerMs: 50,
     ...given,
-    ...made?.(database),
+    ...made?.(database, databaseUrl),
+    configuration,
     database,
     log,
     sessions,

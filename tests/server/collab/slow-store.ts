@@ -1,7 +1,7 @@
 /** A document store that can be made to wait or to fail at each of its doors. */
 import type { DocumentStore } from "../../../server/collab/document-store.ts";
 
-export type Door = keyof DocumentStore;
+export type Door = Exclude<keyof DocumentStore, "stop">;
 export interface SlowStore extends DocumentStore {
   /** From now on calls of this door wait until it is opened. */
   shut(door: Door): void;
@@ -33,6 +33,7 @@ export function makeSlow(store: DocumentStore): SlowStore {
     readAfter: pass("readAfter", store.readAfter.bind(store)),
     saveState: pass("saveState", store.saveState.bind(store)),
     quarantine: pass("quarantine", store.quarantine.bind(store)),
+    stop: () => store.stop(),
     shut(door) {
       let open = () => undefined as void;
       const opened = new Promise<void>((resolve) => (open = resolve));

@@ -1,6 +1,8 @@
 /** A server with Ada (owner), Ben (author), Cleo (reader) and Dora (stranger), and ways to open sockets for them. */
 import { afterAll, afterEach, beforeAll } from "vitest";
+import { pino } from "pino";
 import type { Role } from "../../../client/contract/roles.ts";
+import { openDocumentStore, type DocumentStore } from "../../../server/collab/document-store.ts";
 import { createTestDatabase, type TestDatabase } from "../database.ts";
 import { addNotebook, addPerson, type CastPerson } from "./cast.ts";
 import { startCollabServer, type CollabServer, type Parts } from "./collab-server.ts";
@@ -10,6 +12,8 @@ import { openWriter, type Writer, type WriterOptions } from "./writer.ts";
 export interface Stage {
   readonly testDatabase: TestDatabase;
   server: CollabServer;
+  /** A store beside the server's, as another process would have it. */
+  readonly store: DocumentStore;
   readonly ada: CastPerson;
   readonly ben: CastPerson;
   readonly cleo: CastPerson;
@@ -27,6 +31,11 @@ export function setStage(parts: Parts = {}): Stage {
     stage.testDatabase = await createTestDatabase();
     stage.server = await startCollabServer(stage.testDatabase.url, parts);
     const { database } = stage.server;
+    stage.store = openDocumentStore({
+      database,
+      databaseUrl: stage.testDatabase.url,
+      log: pino({ level: "silent" }),
+    });
     stage.ada = await addPerson(database, "Ada");
     stage.ben = await addPerson(database, "Ben");
     stage.cleo = await addPerson(database, "Cleo");
@@ -56,6 +65,7 @@ export function setStage(parts: Parts = {}): Stage {
     for (const each of opened.splice(0)) each.stop();
   });
   afterAll(async () => {
+    await stage.store.stop();
     await stage.server.stop();
     await stage.testDatabase.drop();
   });

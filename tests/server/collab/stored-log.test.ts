@@ -4,7 +4,6 @@ import { describe, expect, test } from "vitest";
 import * as Y from "yjs";
 import { buildDocument } from "../../../server/collab/build-document.ts";
 import { compactHere, compactNotebook } from "../../../server/collab/compaction.ts";
-import { createDocumentStore } from "../../../server/collab/document-store.ts";
 import { firstRow, rows } from "../../../server/data/database.ts";
 import { pino } from "pino";
 import { closeCode, FRAGMENT } from "../../../client/contract/collab.ts";
@@ -91,11 +90,20 @@ describe("a row that does not apply", () => {
   });
 });
 
+test("rows are read in the order in which they were stored", async () => {
+  const notebookId = await stage.notebook();
+  for (const update of someTyping(3, 120).updates) await putRow(notebookId, update);
+  const { tail, lastSeq } = (await stage.store.load(notebookId))!;
+  const inOrder = Array.from({ length: lastSeq }, (_, index) => index + 1);
+  expect(tail.map(({ seq }) => seq)).toEqual(inOrder);
+  expect((await stage.store.readAfter(notebookId, 8)).map(({ seq }) => seq)).toEqual(inOrder.slice(8));
+});
+
 describe("compaction", () => {
   test.each([11, 12, 13])("gives the same document as the rows (seed %i)", async (seed) => {
     const notebookId = await stage.notebook();
     const { updates, document } = someTyping(seed, 300);
-    const store = createDocumentStore(stage.server.database);
+    const { store } = stage;
     const options = { store, compact: compactHere, log };
     for (const [index, update] of updates.entries()) {
       await putRow(notebookId, update);
@@ -115,7 +123,7 @@ describe("compaction", () => {
 
   test("an older state never replaces a newer one", async () => {
     const notebookId = await stage.notebook();
-    const store = createDocumentStore(stage.server.database);
+    const { store } = stage;
     expect(await store.saveState(notebookId, 5, Uint8Array.of(0, 0))).toBe(true);
     expect(await store.saveState(notebookId, 4, Uint8Array.of(1, 1))).toBe(false);
     expect((await store.load(notebookId))!.state).toEqual(Buffer.from([0, 0]));
@@ -160,7 +168,7 @@ describe("compaction", () => {
       );
       return row !== undefined;
     });
-    const store = createDocumentStore(stage.server.database);
+    const { store } = stage;
     const stored = (await store.load(notebookId))!;
     expect(textOf(buildDocument(stored.state, stored.tail).document)).toBe(typed);
   });

@@ -4,7 +4,7 @@ import { setTimeout as sleep } from "node:timers/promises";
 export async function until(
   what: string,
   holds: () => boolean | Promise<boolean>,
-  patienceMs = 10_000,
+  patienceMs = 20_000,
 ): Promise<void> {
   const end = Date.now() + patienceMs;
   while (!(await holds())) {
