@@ -35,7 +35,7 @@ function Person() {
   if (!person) return null;
   return (
     <>
-      <span className="hidden text-ink-2 md:inline">{person.name}</span>
+      <span className="site-person-name">{person.name}</span>
       {!lapsed && <SignOutButton />}
     </>
   );
