@@ -2,7 +2,10 @@
 import type { NodeViewRenderer } from "@tiptap/core";
 import type { Node } from "@tiptap/pm/model";
 import { drawMath } from "../../ui/math.tsx";
-import type { MathEditing, OpenFormula } from "./math-editing.ts";
+import type { DrawnFormula, MathEditing } from "./math-editing.ts";
+
+/** Sent to a formula's element to open it; `detail` is "new" for one typed just now. */
+export const OPEN_FORMULA = "subleading:open-formula";
 
 export function mathNodeView(editing: MathEditing): NodeViewRenderer {
   return ({ node, getPos, editor }) => {
@@ -12,25 +15,26 @@ export function mathNodeView(editing: MathEditing): NodeViewRenderer {
     const drawing = element.appendChild(document.createElement("span"));
     drawing.className = display ? "math math-display" : "math";
     let shown = node;
+    let gone = false;
     draw(drawing, shown, display);
 
-    const formula = (isNew: boolean): OpenFormula => ({
+    const formula: DrawnFormula = {
       element,
       display,
-      isNew,
-      position: () => getPos() ?? null,
+      position: () => (gone ? null : (getPos() ?? null)),
       latex: () => String(shown.attrs["latex"]),
       label: () => String(shown.attrs["label"] ?? ""),
-    });
+    };
+    editing.appeared(formula);
     const onClick = (event: MouseEvent) => {
       if (!editor.isEditable || event.shiftKey) return;
       event.preventDefault();
-      editing.open(formula(false));
+      editing.open(formula, false);
+    };
+    const onOpen = (event: Event) => {
+      if (editor.isEditable) editing.open(formula, event instanceof CustomEvent && event.detail === "new");
     };
     element.addEventListener("click", onClick);
-    const onOpen = (event: Event) => {
-      if (editor.isEditable) editing.open(formula(event instanceof CustomEvent && event.detail === "new"));
-    };
     element.addEventListener(OPEN_FORMULA, onOpen);
 
     return {
@@ -50,16 +54,14 @@ export function mathNodeView(editing: MathEditing): NodeViewRenderer {
         element.classList.remove("is-selected");
       },
       destroy() {
+        gone = true;
         element.removeEventListener("click", onClick);
         element.removeEventListener(OPEN_FORMULA, onOpen);
-        if (editing.current()?.element === element) editing.close();
+        editing.vanished(formula);
       },
     };
   };
 }
-
-/** Sent to a formula's element to open it; `detail` is "new" for one typed just now. */
-export const OPEN_FORMULA = "subleading:open-formula";
 
 function draw(drawing: HTMLElement, node: Node, display: boolean): void {
   const latex = String(node.attrs["latex"]);

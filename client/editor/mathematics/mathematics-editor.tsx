@@ -6,9 +6,10 @@ import { classes } from "../../ui/classes.ts";
 import { latexFaultWords } from "../../ui/latex-fault-words.ts";
 import { Formula } from "../../ui/math.tsx";
 import type { LatexSymbol } from "./latex-symbols.ts";
-import type { MathEditing, OpenFormula } from "./math-editing.ts";
-import { writeFormula } from "./mathematics.ts";
+import type { MathEditing, Opening } from "./math-editing.ts";
+import { placeFormula, writeFormula } from "./mathematics.ts";
 import { SymbolList, useSymbolCompletion } from "./symbol-completion.tsx";
+import { useSteadyAnchor } from "./use-steady-anchor.ts";
 import { useCheckedSource } from "./use-checked-source.ts";
 
 interface MathematicsEditorProps {
@@ -19,29 +20,21 @@ interface MathematicsEditorProps {
 }
 
 export function MathematicsEditor({ editor, editing, ownSymbols }: MathematicsEditorProps) {
-  const formula = useSyncExternalStore(editing.subscribe, editing.current);
-  if (!formula) return null;
+  const opening = useSyncExternalStore(editing.subscribe, editing.current);
+  if (!opening) return null;
   // One editor per opening: its draft starts from the formula that was opened.
-  return <OpenEditor key={keyOf(formula)} {...{ editor, editing, formula, ownSymbols }} />;
+  return <OpenEditor key={opening.count} {...{ editor, editing, opening, ownSymbols }} />;
 }
 
-const keys = new WeakMap<OpenFormula, number>();
-let lastKey = 0;
-function keyOf(formula: OpenFormula): number {
-  const known = keys.get(formula);
-  if (known !== undefined) return known;
-  lastKey += 1;
-  keys.set(formula, lastKey);
-  return lastKey;
-}
-
-function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenFormula }) {
-  const { editor, editing, formula, ownSymbols } = props;
+function OpenEditor(props: MathematicsEditorProps & { readonly opening: Opening }) {
+  const { editor, editing, opening, ownSymbols } = props;
+  const { formula, isNew } = opening;
   const [before] = useState(() => formula.latex());
   const [source, setSource] = useState(before);
   const [label, setLabel] = useState(() => formula.label());
   const checked = useCheckedSource(trimDollars(source), formula.display);
-  const [replaced, setReplaced] = useState(false);
+  const [warning, setWarning] = useState<"replaced" | "removed" | null>(null);
+  const anchor = useSteadyAnchor(formula.element);
   const field = useRef<HTMLTextAreaElement>(null);
   const [ownNow] = useState(ownSymbols);
   const completion = useSymbolCompletion({ source, setSource, field, ownSymbols: ownNow });
@@ -50,20 +43,22 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
   function leave(latex: string | null, side: "before" | "after" = "after") {
     const position = formula.position();
     editing.close();
-    if (position === null) return;
-    if (latex !== null)
-      writeFormula(editor, position, { latex, ...(formula.display ? { label } : {}) }, side);
-    else if (formula.isNew || before.trim() === "") writeFormula(editor, position, { latex: "" });
+    const attributes = { latex: latex ?? "", ...(formula.display ? { label } : {}) };
+    if (position !== null) {
+      if (latex !== null) writeFormula(editor, position, attributes, side);
+      else if (isNew || before.trim() === "") writeFormula(editor, position, { latex: "" });
+    } else if (latex !== null && latex !== "") {
+      placeFormula(editor, formula.display, attributes);
+    }
     editor.commands.focus();
   }
 
   function keep(side: "before" | "after" = "after") {
-    // Someone else's newer source is not overwritten without a word.
-    if (formula.latex() !== before && !replaced && source !== formula.latex()) {
-      setReplaced(true);
-      return;
-    }
-    leave(trimDollars(source), side);
+    // What a colleague did meanwhile is not undone without a word.
+    const removed = formula.position() === null;
+    const replaced = formula.latex() !== before && source !== formula.latex();
+    if (warning === null && (removed || replaced)) setWarning(removed ? "removed" : "replaced");
+    else leave(trimDollars(source), side);
   }
 
   function onKeyDown(event: KeyboardEvent<HTMLTextAreaElement>) {
@@ -92,7 +87,7 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
         if (!open) leave(null);
       }}
     >
-      <Popover.Anchor virtualRef={{ current: formula.element }} />
+      <Popover.Anchor virtualRef={anchor} />
       <Popover.Portal>
         <Popover.Content
           className="formula-editor"
@@ -153,10 +148,11 @@ function OpenEditor(props: MathematicsEditorProps & { readonly formula: OpenForm
           <p id={names.fault} className="formula-fault" role="status">
             {words ? [words.sentence, words.place].filter(Boolean).join(" — ") : ""}
           </p>
-          {replaced && (
+          {warning !== null && (
             <p className="formula-fault" role="alert">
-              A colleague has changed this formula to <code>{formula.latex()}</code> meanwhile. Enter again
-              replaces it with yours; Escape keeps theirs.
+              {warning === "removed"
+                ? "A colleague has removed this formula meanwhile. Enter again puts yours where the caret stands; Escape lets it go."
+                : `A colleague has changed this formula to ${formula.latex()} meanwhile. Enter again replaces it with yours; Escape keeps theirs.`}
             </p>
           )}
           {formula.display && (

@@ -99,27 +99,21 @@ export function openFormulaAt(editor: Editor, position: number, how: "new" | "ke
 }
 
 /** Puts a formula at the caret and opens it. */
-export function insertFormula(editor: Editor, display: boolean): void {
-  if (!display) {
-    const inserted = editor
-      .chain()
-      .insertContent({ type: "inlineMath", attrs: { latex: "" } })
-      .run();
-    if (inserted) openFormulaAt(editor, editor.state.selection.from - 1, "new");
-    return;
-  }
-  const node = { type: "displayMath", attrs: { latex: "", label: "", id: newId() } };
-  if (!editor.chain().insertContent(node).run()) return;
-  let last = -1;
-  editor.state.doc.nodesBetween(
-    0,
-    Math.min(editor.state.selection.to, editor.state.doc.content.size),
-    (child, at) => {
-      if (child.attrs["id"] === node.attrs.id) last = at;
-      return true;
-    },
-  );
-  if (last !== -1) openFormulaAt(editor, last, "new");
+export function insertFormula(editor: Editor): void {
+  if (!placeFormula(editor, false, { latex: "" })) return;
+  openFormulaAt(editor, editor.state.selection.from - 1, "new");
+}
+
+export function placeFormula(
+  editor: Editor,
+  display: boolean,
+  attributes: Readonly<Record<string, string>>,
+): boolean {
+  const attrs = display ? { ...attributes, id: newId() } : attributes;
+  return editor
+    .chain()
+    .insertContent({ type: display ? "displayMath" : "inlineMath", attrs })
+    .run();
 }
 
 /** Writes what was typed; an empty formula is removed. The caret is left behind (or before) it. */

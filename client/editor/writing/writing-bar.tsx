@@ -56,7 +56,7 @@ export function WritingBar({ editor }: { readonly editor: Editor }) {
         onPress={() => run((chain) => chain.toggleCode())}
       />
       <LinkEditor editor={editor} />
-      <Mark name="Formula" sign="x²" face="bar-italic" onPress={() => insertFormula(editor, false)} />
+      <Mark name="Formula" sign="x²" face="bar-italic" onPress={() => insertFormula(editor)} />
       <Toolbar.Separator className="bar-rule" />
       <Mark
         name="List"

@@ -1,5 +1,5 @@
 /** Two people on one notebook, each with a document, a history and an editor; what one does reaches the other. */
-import { Editor } from "@tiptap/core";
+import { Editor, type NodeViewRenderer } from "@tiptap/core";
 import { Awareness } from "y-protocols/awareness";
 import * as Y from "yjs";
 import { FRAGMENT } from "#contract/collab.ts";
@@ -25,13 +25,15 @@ export interface TwoPeople {
   leave(): void;
 }
 
-export function onePerson(doc = new Y.Doc(), history = createHistory(doc)): Person {
+export type Views = Readonly<Record<string, NodeViewRenderer>>;
+
+export function onePerson(doc = new Y.Doc(), history = createHistory(doc), views: Views = {}): Person {
   const session = sessionOn(doc, history);
   const editor = new Editor({
     extensions: editorExtensions({
       session,
       editing: createMathEditing(),
-      views: {},
+      views,
       others: [],
       openIndex: () => undefined,
     }),
@@ -46,8 +48,8 @@ export function onePerson(doc = new Y.Doc(), history = createHistory(doc)): Pers
   };
 }
 
-export function twoPeople(): TwoPeople {
-  const wren = onePerson();
+export function twoPeople(views: { readonly wren?: Views } = {}): TwoPeople {
+  const wren = onePerson(undefined, undefined, views.wren);
   const otto = onePerson();
   const remote = { from: "a colleague" };
   let connected = true;
