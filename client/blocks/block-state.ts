@@ -18,7 +18,8 @@ export function stateOf(
   }
   if (problems.length === 0) return { words: "agrees", tone: "agrees" };
   return {
-    words: problems.length === 1 ? "agrees, one entry in error" : `agrees, ${problems.length} entries in error`,
+    words:
+      problems.length === 1 ? "agrees, one entry in error" : `agrees, ${problems.length} entries in error`,
     tone: "partly",
   };
 }

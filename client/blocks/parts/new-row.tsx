@@ -20,7 +20,7 @@ export function NewRow({ noun, columns, resultCount, invitation, onBegin, onPast
     <tr className="block-new-row">
       <td className="block-handle-column" />
       {columns.map(({ column, heading, options, size }, index) => (
-        <td key={column}>
+        <td key={column} data-heading={options ? undefined : heading}>
           {!options && (
             <input
               type="text"

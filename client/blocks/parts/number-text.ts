@@ -8,7 +8,9 @@ export function sizeText(value: number, digits = 2): string {
 }
 
 export function withUnit(text: string, unit: string): string {
-  return unit === "" ? text : `${text} ${unit.replace(/\^(-?\d+)/g, (_, power: string) => superscript(power))}`;
+  return unit === ""
+    ? text
+    : `${text} ${unit.replace(/\^(-?\d+)/g, (_, power: string) => superscript(power))}`;
 }
 
 /** As many digits after the mark as make `resolution` two digits: 8.0312 with an error of 0.048 is "8.031". */

@@ -60,14 +60,24 @@ export function Plot({ name, x: xSpec, y: ySpec, curves, guides = [], below, tab
         <Axes x={x} y={y} xLabel={xSpec.label} yLabel={ySpec.label} />
         <g clipPath={`url(#${clip})`}>
           {below?.(x, y)}
-          {curves.map(({ key, points, style, color }) => (
-            <path
-              key={key}
-              d={draw([...points]) ?? ""}
-              className={`plot-curve plot-${color}`}
-              strokeDasharray={dashOf(style)}
-            />
-          ))}
+          {curves.map(({ key, points, style, color }) =>
+            points.length === 1 ? (
+              <circle
+                key={key}
+                cx={x.position(points[0]?.[0] ?? 0)}
+                cy={y.position(points[0]?.[1] ?? 0)}
+                r={3.2}
+                className={`plot-point plot-${color}`}
+              />
+            ) : (
+              <path
+                key={key}
+                d={draw([...points]) ?? ""}
+                className={`plot-curve plot-${color}`}
+                strokeDasharray={dashOf(style)}
+              />
+            ),
+          )}
           {guides.map(({ axis, value, color, label }) => (
             <line
               key={`${axis} ${label}`}

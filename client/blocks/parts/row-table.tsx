@@ -97,81 +97,83 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
   }
 
   return (
-    <table className="block-table block-rows" data-table={table}>
-      <caption className="block-caption">{caption}</caption>
-      <thead>
-        <tr>
-          {!block.readOnly && (
-            <th className="block-handle-column">
-              <span className="sr-only">row</span>
-            </th>
-          )}
-          {columns.map(({ column, heading }) => (
-            <th key={column} scope="col">
-              {heading}
-            </th>
-          ))}
-          {results.map(({ heading }) => (
-            <th key={heading} scope="col">
-              {heading}
-            </th>
-          ))}
-        </tr>
-      </thead>
-      <tbody ref={body}>
-        {rows.map((row, index) => (
-          <tr
-            key={row.id}
-            data-row={row.id}
-            className={drag.classOf(row.id)}
-            onKeyDown={(event) => moveByKey(event, index)}
-          >
+    <div className="block-scroll">
+      <table className="block-table block-rows" data-table={table}>
+        <caption className="block-caption">{caption}</caption>
+        <thead>
+          <tr>
             {!block.readOnly && (
-              <td className="block-handle-column">
-                <RowHandle
-                  name={`${noun} ${index + 1}${nameOf(row) === "" ? "" : `, ${nameOf(row)}`}`}
-                  onMove={(step) => moveBy(index, step)}
-                  onRemove={() => remove(index)}
-                  onPointerDown={(event) => drag.start(event, row.id)}
-                />
-              </td>
+              <th className="block-handle-column">
+                <span className="sr-only">row</span>
+              </th>
             )}
-            {columns.map((spec) => (
-              <td key={spec.column}>
-                <Value
-                  spec={spec}
-                  row={row}
-                  place={{ table, rowId: row.id, column: spec.column }}
-                  label={`${spec.heading} of ${noun} ${index + 1}`}
-                  onEnter={() => goDown(index, spec.column)}
-                  onPasteText={(text) => pasteAt(row.id, spec.column, text)}
-                />
-              </td>
+            {columns.map(({ column, heading }) => (
+              <th key={column} scope="col">
+                {heading}
+              </th>
             ))}
-            {results.map(({ heading, show }) => (
-              <td key={heading} className="block-result-value">
-                {show(row)}
-              </td>
+            {results.map(({ heading }) => (
+              <th key={heading} scope="col">
+                {heading}
+              </th>
             ))}
           </tr>
-        ))}
-        {!block.readOnly && (
-          <NewRow
-            noun={noun}
-            columns={columns}
-            resultCount={results.length}
-            invitation={rows.length === 0 ? invitation : undefined}
-            onBegin={(column, text) =>
-              setWanted({ rowId: block.addRow(table, { [column]: text }), column, caretAtEnd: true })
-            }
-            onPasteText={(column, text) => pasteAt(null, column, text)}
-          />
-        )}
-      </tbody>
-      <tfoot>
-        <TableProblems table={table} span={columns.length + results.length + 1} />
-      </tfoot>
-    </table>
+        </thead>
+        <tbody ref={body}>
+          {rows.map((row, index) => (
+            <tr
+              key={row.id}
+              data-row={row.id}
+              className={drag.classOf(row.id)}
+              onKeyDown={(event) => moveByKey(event, index)}
+            >
+              {!block.readOnly && (
+                <td className="block-handle-column">
+                  <RowHandle
+                    name={`${noun} ${index + 1}${nameOf(row) === "" ? "" : `, ${nameOf(row)}`}`}
+                    onMove={(step) => moveBy(index, step)}
+                    onRemove={() => remove(index)}
+                    onPointerDown={(event) => drag.start(event, row.id)}
+                  />
+                </td>
+              )}
+              {columns.map((spec) => (
+                <td key={spec.column} data-heading={spec.heading}>
+                  <Value
+                    spec={spec}
+                    row={row}
+                    place={{ table, rowId: row.id, column: spec.column }}
+                    label={`${spec.heading} of ${noun} ${index + 1}`}
+                    onEnter={() => goDown(index, spec.column)}
+                    onPasteText={(text) => pasteAt(row.id, spec.column, text)}
+                  />
+                </td>
+              ))}
+              {results.map(({ heading, show }) => (
+                <td key={heading} className="block-result-value" data-heading={heading}>
+                  {show(row)}
+                </td>
+              ))}
+            </tr>
+          ))}
+          {!block.readOnly && (
+            <NewRow
+              noun={noun}
+              columns={columns}
+              resultCount={results.length}
+              invitation={rows.length === 0 ? invitation : undefined}
+              onBegin={(column, text) =>
+                setWanted({ rowId: block.addRow(table, { [column]: text }), column, caretAtEnd: true })
+              }
+              onPasteText={(column, text) => pasteAt(null, column, text)}
+            />
+          )}
+        </tbody>
+        <tfoot>
+          <TableProblems table={table} span={columns.length + results.length + 1} />
+        </tfoot>
+      </table>
+    </div>
   );
 }
 

@@ -32,7 +32,8 @@ function grouped({ plot, rows }: ScalingValue): Curve[] {
     const row = rowOf.get(rowId);
     if (!row || row.kinetic || !row.allowed) continue;
     const [first, last] = [points[0], points.at(-1)];
-    const key = `${first?.[1]} ${last?.[1]}`;
+    // A size given by hand is known at the working point only: a point, never part of a line.
+    const key = `${points.length} ${first?.[1]} ${last?.[1]}`;
     const name = row.sizeFrom === "assigned" ? "assigned" : `Δ = ${row.dimension.text}`;
     const known = byLine.get(key);
     if (known) {

@@ -45,7 +45,12 @@ export function PinPanel({ editor, pin, state, getPosition, onClose }: Props) {
   const panel = useRef<HTMLDivElement>(null);
   const id = useId();
   useLayoutEffect(() => {
-    panel.current?.focus();
+    const element = panel.current;
+    if (!element) return;
+    // Under the pin, but never past the right edge of the page.
+    const past = element.getBoundingClientRect().right - document.documentElement.clientWidth + 12;
+    if (past > 0) element.style.left = `${-past}px`;
+    element.focus();
   }, []);
   const block = world.directory.block(pin.blockId);
   const act = (change: (position: number) => void) => {
@@ -92,7 +97,7 @@ export function PinPanel({ editor, pin, state, getPosition, onClose }: Props) {
         {state.status === "moved" && !readOnly && (
           <button
             type="button"
-            className="block-link pin-panel-accept"
+            className="pin-link pin-panel-accept"
             onClick={() => {
               act((position) => acceptPin(world, editor, position));
               close();
@@ -104,7 +109,7 @@ export function PinPanel({ editor, pin, state, getPosition, onClose }: Props) {
         {block && (
           <button
             type="button"
-            className="block-link"
+            className="pin-link"
             onClick={() => {
               onClose();
               goToBlock(editor, pin.blockId);
@@ -117,7 +122,7 @@ export function PinPanel({ editor, pin, state, getPosition, onClose }: Props) {
         {!readOnly && (
           <button
             type="button"
-            className="block-link"
+            className="pin-link"
             onClick={() => {
               act((position) => removePin(editor, position));
               close();

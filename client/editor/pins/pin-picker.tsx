@@ -59,7 +59,8 @@ function PickerList({ onClose }: { readonly onClose: () => void }) {
     event.preventDefault();
   }
 
-  if (all.length === 0) return <p className="pin-picker-none">There is no result yet to pin a number from.</p>;
+  if (all.length === 0)
+    return <p className="pin-picker-none">There is no result yet to pin a number from.</p>;
   return (
     <div className="pin-picker">
       <input
@@ -81,7 +82,13 @@ function PickerList({ onClose }: { readonly onClose: () => void }) {
         }}
         onKeyDown={onKeyDown}
       />
-      <div id={listId} ref={list} role="listbox" aria-label="Numbers that can be pinned" className="pin-picker-list">
+      <div
+        id={listId}
+        ref={list}
+        role="listbox"
+        aria-label="Numbers that can be pinned"
+        className="pin-picker-list"
+      >
         {found.map((pinnable, index) => (
           <Fragment key={pinnable.key}>
             {pinnable.block !== found[index - 1]?.block && (
