@@ -8,10 +8,26 @@ import type { NotebookSession } from "./notebook-session.ts";
 import { personColor } from "./person-color.ts";
 import { userOf } from "./presence.ts";
 
+declare module "@tiptap/core" {
+  interface Commands<ReturnType> {
+    ownHistory: {
+      /** What follows is a step of the history by itself, even if it comes at once. */
+      startNewStep: () => ReturnType;
+    };
+  }
+}
+
 export function collaborationExtensions(session: NotebookSession): readonly AnyExtension[] {
   const { ydoc, history } = session;
   const shared = Collaboration.extend({
     addCommands: () => ({
+      startNewStep:
+        () =>
+        ({ dispatch, tr }) => {
+          tr.setMeta("preventDispatch", true);
+          if (dispatch) history.startNewStep();
+          return true;
+        },
       undo:
         () =>
         ({ dispatch, tr }) => {

@@ -110,6 +110,7 @@ export function placeFormula(
   attributes: Readonly<Record<string, string>>,
 ): boolean {
   const attrs = display ? { ...attributes, id: newId() } : attributes;
+  editor.commands.startNewStep();
   return editor
     .chain()
     .insertContent({ type: display ? "displayMath" : "inlineMath", attrs })
@@ -126,6 +127,7 @@ export function writeFormula(
   const { state } = editor;
   const node = state.doc.nodeAt(position);
   if (!node || !isFormula(node.type.name)) return;
+  editor.commands.startNewStep();
   const { tr } = state;
   if ((attributes["latex"] ?? "").trim() === "") {
     if (node.isInline) tr.delete(position, position + node.nodeSize);

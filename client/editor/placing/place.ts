@@ -14,6 +14,7 @@ export function gapAtCaret(editor: Editor): number {
 
 /** Puts a node into the gap, in place of an empty paragraph just before it, and selects it. Returns its position. */
 export function placeNode(editor: Editor, node: Node, gap: number): number {
+  editor.commands.startNewStep();
   const { doc, tr } = editor.state;
   const index = Math.min(Math.max(gap, 0), doc.childCount);
   const before = index > 0 ? doc.child(index - 1) : null;

@@ -49,10 +49,10 @@ describe("placing a block", () => {
 
   it("is one step to undo", () => {
     type(person.editor, "words");
-    person.history.startNewStep();
     placeBlock(person.editor, "premises");
     person.history.undoOnce();
     expect(kindsOfNodes()).toEqual(["paragraph"]);
+    expect(person.text()).toBe("words");
   });
 });
 
