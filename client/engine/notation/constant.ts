@@ -66,10 +66,10 @@ export function constantOf(tree: Tree): Rational | null {
       return total;
     }
     case "product": {
-      let total: Rational | null = Rational.one;
+      let total = Rational.one;
       for (const factor of tree.factors) {
         const value = constantOf(factor.node);
-        if (!total || !value || digitsOf(total) > MOST_DIGITS || (factor.join === "/" && value.sign() === 0))
+        if (!value || digitsOf(total) > MOST_DIGITS || (factor.join === "/" && value.sign() === 0))
           return null;
         total = factor.join === "/" ? total.over(value) : total.times(value);
       }

@@ -37,6 +37,11 @@ export function parse(text: string, options: ParseOptions): Read<Tree> {
   return new Parser(text, tokens.value, options).whole();
 }
 
+type SumSign = "+" | "-" | "±";
+function isSumSign(sign: string): sign is SumSign {
+  return sign === "+" || sign === "-" || sign === "±";
+}
+
 class Parser extends Cursor {
   private depth = 0;
   private insideBars = false;
@@ -62,14 +67,12 @@ class Parser extends Cursor {
     const start = this.peek();
     if (this.depth >= DEEPEST) return this.fail("nested-too-deep", start);
     this.depth += 1;
-    const parts: { sign: "+" | "-" | "±"; at: number; node: Tree }[] = [];
+    const parts: { sign: SumSign; at: number; node: Tree }[] = [];
     do {
       const token = this.peek();
-      const signed =
-        token.type === "sign" && (token.sign === "+" || token.sign === "-" || token.sign === "±");
-      if (signed) this.take();
-      const sign = signed ? (token.sign as "+" | "-" | "±") : "+";
-      parts.push({ sign, at: token.at, node: this.product() });
+      const sign = token.type === "sign" && isSumSign(token.sign) ? token.sign : null;
+      if (sign) this.take();
+      parts.push({ sign: sign ?? "+", at: token.at, node: this.product() });
     } while (this.isSign(this.peek(), "+", "-", "±"));
     this.depth -= 1;
     const [only] = parts;

@@ -163,7 +163,7 @@ function shownUnit(quantity: Quantity): { readonly unit: string; readonly size: 
   const suffix = exponent.equals(Rational.one)
     ? ""
     : exponent.isInteger()
-      ? `^${exponent}`
-      : `^(${exponent})`;
+      ? `^${exponent.toString()}`
+      : `^(${exponent.toString()})`;
   return { unit: chosen.name + suffix, size: chosen.size ** exponent.toFloat() };
 }

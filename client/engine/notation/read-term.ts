@@ -87,7 +87,7 @@ class TermReader {
   private settle(result: Reading | Refusal, at: number): Reading {
     return "code" in result ? this.fail(result.code, at, result.facts) : result;
   }
-  private suggestion(symbol: string): { readonly suggestion: string } | Record<never, never> {
+  private suggestion(symbol: string): NotationFailure["facts"] {
     const suggestion = suggestionFor(symbol, this.vocabulary);
     return suggestion === null ? {} : { suggestion };
   }
@@ -285,5 +285,5 @@ function indicesOf(tree: Tree): string[] {
   if (tree.type !== "name") return [];
   const symbol = canonicalName(tree.name);
   // "^{abc}" are three indices, "^{mu nu}" two.
-  return isIndex(symbol) || !/^[a-z]+$/.test(symbol) ? [symbol] : [...symbol];
+  return isIndex(symbol) || !/^[a-z]+$/.test(symbol) ? [symbol] : Array.from(symbol);
 }

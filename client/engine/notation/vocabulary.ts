@@ -147,7 +147,7 @@ function derivativeMeaning(name: Name, raised: readonly string[]): Meaning | nul
     return { means: "derivative", count: 2, direction: "spacetime" };
   if (!firstDerivatives.has(name.base)) return null;
   const pieces = [...name.subscript, ...raised].flatMap((piece) =>
-    isLowerGreek(piece) || !/^[a-z]+$/.test(piece) ? [piece] : [...piece],
+    isLowerGreek(piece) || !/^[a-z]+$/.test(piece) ? [piece] : Array.from(piece),
   );
   const bad = pieces.find((piece) => !isIndex(piece) && !/^[txyz\d]$/.test(piece));
   if (bad !== undefined) return { means: "bad index", text: bad };

@@ -49,7 +49,7 @@ export function fermionLegs(monomial: Monomial, theory: Theory): number {
 function signature(monomial: Monomial) {
   const sorted = (entries: readonly string[]) => [...entries].sort();
   return [
-    sorted(monomial.coefficients.map(({ symbol, power }) => `${symbol}^${power}`)),
+    sorted(monomial.coefficients.map(({ symbol, power }) => `${symbol}^${power.toString()}`)),
     sorted(
       monomial.fields.map(({ symbol, conjugated, count }) => `${symbol}${conjugated ? "*" : ""}^${count}`),
     ),

@@ -1,7 +1,7 @@
 /** Fields: symbol, kind, dimension, charges. */
 import type { Problem } from "../evaluation.ts";
 import { LinearForm } from "../exact/linear-form.ts";
-import { Rational } from "../exact/rational.ts";
+import type { Rational } from "../exact/rational.ts";
 import { readLinearForm } from "../notation/read-linear-form.ts";
 import { readSymbol } from "../notation/read-symbol.ts";
 import { canonicalDimensions, fieldRules } from "./field-rules.ts";

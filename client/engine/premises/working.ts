@@ -1,6 +1,6 @@
 /** The derivation of every dimension, in the notebook's own symbols. */
 import type { WorkingStep } from "../evaluation.ts";
-import { LinearForm } from "../exact/linear-form.ts";
+import type { LinearForm } from "../exact/linear-form.ts";
 import { measuredLatex } from "../notation/measured.ts";
 import { operatorLatex } from "../notation/operator-latex.ts";
 import { canonicalDimensionLatex } from "./field-rules.ts";

@@ -3,7 +3,7 @@
  * (Polchinski 1992, lecture 1; Cardy 1996, chapter 3): a positive exponent grows toward low energy.
  */
 import type { DimensionSymbol, LinearForm } from "../exact/linear-form.ts";
-import { Rational } from "../exact/rational.ts";
+import type { Rational } from "../exact/rational.ts";
 import type { ClassRange, ScalingClass } from "./value.ts";
 
 export interface Classification {

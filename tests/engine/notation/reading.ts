@@ -28,13 +28,13 @@ export const anisotropic: Vocabulary = { ...vocabulary, geometry: "anisotropic" 
 /** "1/2 | g | phi2 chi | 0": number, coefficients, legs (conjugates starred), derivatives (and time derivatives). */
 export function summary({ prefactor, coefficients, fields, derivatives, timeDerivatives }: Monomial): string {
   const powers = coefficients.map(({ symbol, power }) =>
-    power.toString() === "1" ? symbol : `${symbol}^${power}`,
+    power.toString() === "1" ? symbol : `${symbol}^${power.toString()}`,
   );
   const legs = fields.map(
     ({ symbol, conjugated, count }) => `${symbol}${conjugated ? "*" : ""}${count === 1 ? "" : `^${count}`}`,
   );
   const signs = timeDerivatives > 0 ? `${derivatives}, ${timeDerivatives} in time` : String(derivatives);
-  return [prefactor, powers.join(" "), legs.join(" "), signs].join(" | ");
+  return [prefactor.toString(), powers.join(" "), legs.join(" "), signs].join(" | ");
 }
 /** The summary, or the code of the failure and the offset of its place. */
 export function readAs(text: string, symbols: Vocabulary = vocabulary): string {

@@ -257,10 +257,7 @@ describe("plot, scalars and working", () => {
       if (row.kinetic) expect(curve).toBeUndefined();
       else if (row.sizeFrom === "assigned") expect(curve?.points).toEqual([[350, row.size?.value]]);
       else {
-        const [[x1 = 0, y1 = 0] = [], [x2 = 0, y2 = 0] = []] = [
-          curve?.points[0] ?? [],
-          curve?.points.at(-1) ?? [],
-        ];
+        const [[x1, y1], [x2, y2]] = [curve?.points[0] ?? [NaN, NaN], curve?.points.at(-1) ?? [NaN, NaN]];
         const slope = Math.log(y2 / y1) / Math.log(x2 / x1);
         expect(slope).toBeCloseTo(-Number(row.coefficient.text), 8);
         expect(y1 * (350 / x1) ** slope).toBeCloseTo(row.size?.value ?? NaN, 8);
