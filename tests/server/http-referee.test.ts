@@ -95,7 +95,9 @@ describe("a referee link", () => {
   it("says in plain words that it was closed, and is announced at once", async () => {
     const { token, link } = await create();
     const heard: object[] = [];
-    const forget = world.server.services.accessChanges.onAccessChange((change) => heard.push(change));
+    const forget = world.server.services.accessChanges.onAccessChange((change) => {
+      if (change.about === "referee-link") heard.push(change);
+    });
     const revoked = await wren.delete(at(`/referee-links/${link.id}`));
     expect(revoked.body).toMatchObject({ id: link.id, revokedAt: expect.stringMatching(/^\d{4}-/) });
     await eventually(() => (heard.length > 0 ? true : null));
