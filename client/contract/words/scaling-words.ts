@@ -7,6 +7,8 @@ export const scalingWords: Words = {
     "There is no probe scale, so terms have no size. Give a scale of the premises the role probe, or enter one here.",
   "heavy-missing": () =>
     "There is no heavy scale, so terms have no size. Give a scale of the premises the role heavy, or enter one here.",
+  "role-ambiguous": ({ role, symbols }) =>
+    `Several scales have the role ${said(role)}: ${said(symbols)}. Keep one of them, or enter one here.`,
   "scale-not-positive": ({ symbol }) => `The scale ${formula(symbol)} must be above 0.`,
   "probe-above-heavy": ({ ratio }) =>
     `The probe scale is ${said(ratio)} times the heavy scale: higher terms grow, and the expansion says nothing.`,

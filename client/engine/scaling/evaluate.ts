@@ -3,6 +3,7 @@ import type { Evaluation, Scalar } from "../evaluation.ts";
 import type { DimensionSymbol } from "../exact/linear-form.ts";
 import { shown as shownExact } from "../exact/shown.ts";
 import { shown } from "../notation/quantity.ts";
+import { incompletePremises } from "../premises/incomplete.ts";
 import { presentEstimate, presentMeasured } from "../premises/present-measured.ts";
 import { exactValue, numberValue } from "../premises/scalars.ts";
 import type { Term, Theory } from "../premises/theory.ts";
@@ -59,7 +60,11 @@ export function evaluateScaling(inputs: ScalingInputs, theory: Theory | null): E
   return {
     value,
     problems: [...point.problems, ...refusals],
-    notices: [...point.notices, ...scalingCautions(theory, rows, point, inputs)],
+    notices: [
+      ...incompletePremises(theory),
+      ...point.notices,
+      ...scalingCautions(theory, rows, point, inputs),
+    ],
     scalars: scalars(rows, value, free),
     working: scalingWorking(theory, rows, point, value),
   };

@@ -12,7 +12,8 @@ const ROOM_ABOVE = 1.5;
 
 /**
  * Null without p, Λ and at least one sized term that is not kinetic. The axis is in the probe's unit. An assigned size
- * is known at the probe scale only, so its curve is that one point.
+ * is one at p; its coefficient is fixed, so it follows p with the power of its dimension all the same. Where that
+ * dimension is symbolic the size is known at p only.
  */
 export function scalingPlot(point: WorkingPoint, rows: readonly ScalingRow[]): ScalingPlot | null {
   const { probe, heavy, expansion } = point;
@@ -24,11 +25,14 @@ export function scalingPlot(point: WorkingPoint, rows: readonly ScalingRow[]): S
     Math.max(p.value, heavyInUnit) * ROOM_ABOVE,
   ];
   const xs = Array.from({ length: SAMPLES }, (_, i) => from * (to / from) ** (i / (SAMPLES - 1)));
-  const curves = rows.flatMap(({ rowId, latex, scalingClass, size, sizeFrom, kinetic, coefficient }) => {
+  const curves = rows.flatMap(({ rowId, latex, scalingClass, size, kinetic, coefficient }) => {
     if (!size || kinetic) return [];
     const exponent = -ratio(coefficient.text);
-    const at = (x: number) => [roundFloat(x), roundFloat(size.value * (x / p.value) ** exponent)] as const;
-    const points = (sizeFrom === "assigned" ? [p.value] : xs)
+    const at = (x: number) => {
+      const growth = x === p.value ? 1 : (x / p.value) ** exponent;
+      return [roundFloat(x), roundFloat(size.value * growth)] as const;
+    };
+    const points = (Number.isFinite(exponent) ? xs : [p.value])
       .map(at)
       .filter(([, y]) => Number.isFinite(y) && y > 0);
     return [{ rowId, latex, scalingClass, points }];
@@ -43,7 +47,7 @@ export function scalingPlot(point: WorkingPoint, rows: readonly ScalingRow[]): S
   };
 }
 
-/** Canonical text of a rational as a float; sized terms have no symbols left in it. */
+/** Canonical text of a rational as a float; NaN where symbols are left in it. */
 function ratio(text: string): number {
   const [over = "0", under = "1"] = text.split("/");
   return Number(over) / Number(under);

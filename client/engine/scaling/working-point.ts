@@ -23,7 +23,7 @@ export interface WorkingPoint {
 }
 
 /**
- * Problems: those of the notation, `scale-not-positive`, `units-differ`. Notices: `probe-missing`, `heavy-missing`,
+ * Problems: those of the notation, `role-ambiguous`, `scale-not-positive`, `units-differ`. Notices: `probe-missing`, `heavy-missing`,
  * `scale-has-no-number` (by role), `probe-above-heavy`.
  */
 export function readWorkingPoint(
@@ -34,7 +34,7 @@ export function readWorkingPoint(
   const notices: Notice[] = [];
   const readPoint = (role: "probe" | "heavy"): Point | null => {
     const text = typed[role].trim();
-    if (text === "") return byRole(theory, role, notices);
+    if (text === "") return byRole(theory, role, problems, notices);
     const reading = readQuantity(text, declaredScales(theory), role);
     const symbol = readSymbol(text);
     const scale = symbol.ok ? theory.scales.find((one) => one.symbol === symbol.value.symbol) : undefined;
@@ -68,8 +68,18 @@ export function readWorkingPoint(
   return { probe, heavy, expansion, problems, notices };
 }
 
-function byRole(theory: Theory, role: "probe" | "heavy", notices: Notice[]): Point | null {
-  const scale = theory.scales.find((one) => one.role === role);
+function byRole(
+  theory: Theory,
+  role: "probe" | "heavy",
+  problems: Problem[],
+  notices: Notice[],
+): Point | null {
+  const [scale, ...others] = theory.scales.filter((one) => one.role === role);
+  if (scale && others.length > 0) {
+    const symbols = [scale, ...others].map(({ symbol }) => symbol).join(", ");
+    problems.push({ code: "role-ambiguous", path: [role], facts: { role, symbols } });
+    return null;
+  }
   if (!scale) {
     notices.push({ code: role === "probe" ? "probe-missing" : "heavy-missing", path: [role], facts: {} });
     return null;

@@ -146,6 +146,14 @@ describe("sizes", () => {
   });
 });
 
+it("does not choose between two scales of one role", () => {
+  const { problems, value } = scaled({ ...lantern, scales: { ...lantern.scales, M: ["9 TeV", "heavy"] } });
+  expect([codes(problems), value?.expansion]).toEqual([["role-ambiguous"], null]);
+});
+it("says when premises are incomplete", () => {
+  expect(codes(scaled({ ...lantern, terms: ["chi^4", "chi^"] }).notices)).toEqual(["premises-incomplete"]);
+});
+
 describe("cautions", () => {
   it("offer the written size of a relevant term that has none", () => {
     const { notices } = scaled({
@@ -255,7 +263,6 @@ describe("plot, scalars and working", () => {
     for (const row of evaluation.value?.rows ?? []) {
       const curve = plot?.curves.find(({ rowId }) => rowId === row.rowId);
       if (row.kinetic) expect(curve).toBeUndefined();
-      else if (row.sizeFrom === "assigned") expect(curve?.points).toEqual([[350, row.size?.value]]);
       else {
         const [[x1, y1], [x2, y2]] = [curve?.points[0] ?? [NaN, NaN], curve?.points.at(-1) ?? [NaN, NaN]];
         const slope = Math.log(y2 / y1) / Math.log(x2 / x1);
@@ -263,6 +270,10 @@ describe("plot, scalars and working", () => {
         expect(y1 * (350 / x1) ** slope).toBeCloseTo(row.size?.value ?? NaN, 8);
       }
     }
+  });
+  it("shows an assigned size at p only, where its dimension is symbolic", () => {
+    const plot = scaled({ ...lantern, d: "d", terms: [{ term: "chi^4", assigned: "0.2" }] }).value?.plot;
+    expect(plot?.curves.map(({ points }) => points)).toEqual([[[350, 0.2]]]);
   });
   it("lets each number and class be pinned under its row", () => {
     const scalars = new Map(evaluation.scalars.map(({ id, value }) => [id, value]));
