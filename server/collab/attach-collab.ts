@@ -74,17 +74,18 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
   });
   sockets.on("error", (error) => log.error({ err: error }, "the socket server failed"));
   const connections = new Set<Connection>();
-  let stopping = false;
+  const ending = new AbortController();
+  const isStopping = () => ending.signal.aborted;
 
   async function upgrade(request: IncomingMessage, socket: Duplex, head: Buffer): Promise<void> {
-    if (stopping) return refuse(socket, 503);
+    if (isStopping()) return refuse(socket, 503);
     const admission = await admit(request, dependencies);
     if (!admission.admitted) return refuse(socket, admission.status);
     if (admission.editorSchema < admission.storedSchema) return refuseOldSchema(request, socket, head);
     if (isCrowded(admission)) return refuse(socket, 429);
     const lease = await enterRoom(admission.notebookId);
     if (typeof lease === "number") return refuse(socket, lease);
-    if (stopping || socket.destroyed) {
+    if (isStopping() || socket.destroyed) {
       lease.release();
       return refuse(socket, 503);
     }
@@ -188,7 +189,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
   return {
     rooms,
     stop: async () => {
-      stopping = true;
+      ending.abort();
       stopListening();
       clearInterval(beat);
       clearInterval(recheck);

@@ -115,12 +115,16 @@ export class UpdateWriter {
     const { store, document, notebookId } = this.#options;
     const rows = await store.readAfter(notebookId, document.lastSeq);
     for (const { seq, update, personId } of rows) {
-      if (this.#stop.signal.aborted) return;
+      if (this.#isGivenUp()) return;
       if (seq > document.lastSeq) this.#apply(seq, update, new CommittedBy(personId, null));
     }
     // Quarantined rows are passed over, and so leave gaps.
     document.lastSeq = Math.max(document.lastSeq, atLeast);
     this.#reassess();
+  }
+
+  #isGivenUp(): boolean {
+    return this.#stop.signal.aborted;
   }
 
   #hold(entry: QueuedUpdate): void {
@@ -154,7 +158,7 @@ export class UpdateWriter {
   async #run(): Promise<void> {
     // What arrives in the same turn of the event loop shares the first insert.
     await Promise.resolve();
-    while (this.#queue.length > 0 && !this.#stop.signal.aborted) {
+    while (this.#queue.length > 0 && !this.#isGivenUp()) {
       const batch = this.#nextBatch();
       const carrying = batch.filter(({ carries }) => carries);
       if (carrying.length === 0) {
@@ -196,11 +200,11 @@ export class UpdateWriter {
     for (let attempt = 1; ; attempt += 1) {
       try {
         const outcome = await store.append(request);
-        if (this.#stop.signal.aborted) return "given up";
+        if (this.#isGivenUp()) return "given up";
         if (attempt > 1) reports.storeBack();
         return outcome;
       } catch (error) {
-        if (this.#stop.signal.aborted) return "given up";
+        if (this.#isGivenUp()) return "given up";
         log.error({ err: error, attempt }, "updates could not be stored");
         if (!isPassing(error)) hopeless += 1;
         if (hopeless >= ATTEMPTS_WHEN_HOPELESS) {
@@ -210,7 +214,7 @@ export class UpdateWriter {
         if (attempt === 1) reports.storeUnreachable();
       }
       await sleep(delay, undefined, { signal: this.#stop.signal }).catch(() => undefined); // aborted: looked at above
-      if (this.#stop.signal.aborted) return "given up";
+      if (this.#isGivenUp()) return "given up";
       delay = Math.min(delay * 2, longest);
     }
   }

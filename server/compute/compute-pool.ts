@@ -5,15 +5,17 @@ import { pathToFileURL } from "node:url";
 import { Piscina } from "piscina";
 import type { ComputeAnswers, ComputeTask } from "./tasks.ts";
 
-export class ComputeTimeout extends Error {
+/** Not computed, for whatever reason. */
+export class ComputeFailed extends Error {}
+export class ComputeTimeout extends ComputeFailed {
   constructor(readonly limitMs: number) {
     super(`not computed within ${limitMs} ms`);
   }
 }
-export class ComputeBusy extends Error {}
+export class ComputeBusy extends ComputeFailed {}
 
 export interface ComputePool {
-  /** Rejects with `ComputeTimeout` (the thread is then ended), `ComputeBusy`, or the thread's own error. */
+  /** Rejects with `ComputeFailed`; after a `ComputeTimeout` the thread has been ended. */
   run<Task extends ComputeTask>(task: Task, limitMs: number): Promise<ComputeAnswers[Task["task"]]>;
   stop(): Promise<void>;
 }
@@ -45,8 +47,8 @@ export function openComputePool(): ComputePool {
         return (await pool.run(task, { signal: limit.signal })) as ComputeAnswers[(typeof task)["task"]];
       } catch (error) {
         if (limit.signal.aborted) throw new ComputeTimeout(limitMs);
-        if (error instanceof Error && /queue/i.test(error.message)) throw new ComputeBusy(error.message);
-        throw error;
+        if (pool.queueSize >= LONGEST_QUEUE) throw new ComputeBusy("too much waits to be computed");
+        throw new ComputeFailed("the compute thread failed", { cause: error });
       } finally {
         clearTimeout(timer);
       }

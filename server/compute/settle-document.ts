@@ -1,5 +1,4 @@
 /** Document in, results out. Pure but for a memo: runs in a compute thread, and at seeding in the server's own. */
-import { yXmlFragmentToProsemirrorJSON } from "@tiptap/y-tiptap";
 import type * as Y from "yjs";
 import { FRAGMENT } from "#contract/collab.ts";
 import {
@@ -11,10 +10,11 @@ import {
   type Evaluation,
   type Memo,
 } from "#engine/index.ts";
+import { readFragment } from "./read-fragment.ts";
 import type { SettledDocument } from "./tasks.ts";
 
 export function settleDocument(document: Y.Doc, memo: Memo): SettledDocument {
-  return settleJson(yXmlFragmentToProsemirrorJSON(document.getXmlFragment(FRAGMENT)), memo);
+  return settleJson(readFragment(document.getXmlFragment(FRAGMENT)), memo);
 }
 
 /** The same for a document in ProseMirror's JSON. */

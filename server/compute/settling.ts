@@ -3,7 +3,7 @@ import type { Logger } from "pino";
 import type { OpenRoom, RoomObserver } from "../collab/room.ts";
 import { isPassing } from "../collab/store-errors.ts";
 import type { Database } from "../data/database.ts";
-import { ComputeTimeout, type ComputePool } from "./compute-pool.ts";
+import { ComputeFailed, type ComputePool } from "./compute-pool.ts";
 import { storeLastChange, storeSettled } from "./store-settled.ts";
 import { TouchedBlocks, type Touched } from "./touched-blocks.ts";
 
@@ -64,7 +64,7 @@ class RoomSettling {
   }
 
   schedule(): void {
-    if (this.#stopped) return;
+    if (this.#isStopped()) return;
     const now = Date.now();
     this.#firstChangeAt ??= now;
     const latest = this.#firstChangeAt + this.#times.longestMs;
@@ -98,7 +98,7 @@ class RoomSettling {
   }
 
   async #settle(): Promise<void> {
-    if (this.#stopped) return;
+    if (this.#isStopped()) return;
     const { log } = this.options;
     const touched = this.#touched.take();
     const everything = this.#everything;
@@ -109,12 +109,16 @@ class RoomSettling {
       if (touched.anything) await storeLastChange(this.options.database, this.room.notebookId, touched.last);
     } catch (error) {
       log.error({ err: error, notebookId: this.room.notebookId }, "a notebook could not be settled");
-      // What takes too long or is refused as it is would fare no better; the next change is tried afresh.
-      if (error instanceof ComputeTimeout || !isPassing(error) || this.#stopped) return;
+      // What cannot be computed, or is refused as it is, would fare no better; the next change is tried afresh.
+      if (error instanceof ComputeFailed || !isPassing(error)) return;
       this.#touched.giveBack(touched);
       this.#everything ||= everything;
-      if (this.#timer === null) this.#runIn(this.#times.retryMs);
+      if (!this.#isStopped() && this.#timer === null) this.#runIn(this.#times.retryMs);
     }
+  }
+
+  #isStopped(): boolean {
+    return this.#stopped;
   }
 
   async #evaluate(touched: Touched): Promise<void> {

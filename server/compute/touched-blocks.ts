@@ -84,9 +84,15 @@ function enclosingBlock(node: Y.XmlFragment | Y.XmlText): string | null {
   return null;
 }
 
-function* blocksIn(node: unknown): Generator<string> {
-  if (isBlock(node)) yield node.getAttribute("blockId") ?? "";
-  else if (node instanceof Y.XmlFragment) for (const child of node.toArray()) yield* blocksIn(child);
+function blocksIn(node: unknown): readonly string[] {
+  const found: string[] = [];
+  const waiting: unknown[] = [node];
+  while (waiting.length > 0) {
+    const next = waiting.pop();
+    if (isBlock(next)) found.push(next.getAttribute("blockId") ?? "");
+    else if (next instanceof Y.XmlFragment) waiting.push(...next.toArray());
+  }
+  return found;
 }
 
 function isBlock(node: unknown): node is Y.XmlElement<{ blockId: string }> {

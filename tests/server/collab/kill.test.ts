@@ -8,8 +8,10 @@ import { openDatabase, type Database } from "../../../server/data/database.ts";
 import { createTestDatabase, type TestDatabase } from "../database.ts";
 import { addNotebook, addPerson, type CastPerson } from "./cast.ts";
 import { startChild } from "./child.ts";
+import { FRAGMENT } from "../../../client/contract/collab.ts";
+import { until } from "./until.ts";
 import { seededRandom } from "./seeded-random.ts";
-import { openWriter, paragraphOf, type Writer } from "./writer.ts";
+import { openWriter, paragraphOf, textOf, type Writer } from "./writer.ts";
 
 const KEYSTROKES_PER_SECOND = 30;
 const rounds = Number(process.env["KILL_ROUNDS"] ?? "4");
@@ -45,7 +47,7 @@ function typist(writer: Writer, name: string, random: () => number) {
   const frames: { readonly mark: string; readonly socket: number; readonly frame: number }[] = [];
   const timer = setInterval(() => {
     const text = paragraphOf(writer.document);
-    const marks = text.toString().split(";").slice(0, -1);
+    const marks = textOf(writer.document).split(";").slice(0, -1);
     const place = marks.slice(0, Math.floor(random() * (marks.length + 1))).join(";");
     const sentBefore = writer.sent();
     text.insert(place === "" ? 0 : place.length + 1, `${name}${typed};`);
@@ -84,6 +86,10 @@ test(
         .split(";")
         .filter((mark) => mark !== "");
       if (round === 0) first.type("");
+      // One paragraph for all, not one each.
+      await until("all have the paragraph", () =>
+        [first, second, watcher].every(({ document }) => document.getXmlFragment(FRAGMENT).length === 1),
+      );
       const typists = [typist(first, `a${round}.`, random), typist(second, `b${round}.`, random)];
       await sleep(400 + random() * 900); // typing, not waiting for anything
       await child.end(signal);

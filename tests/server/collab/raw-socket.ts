@@ -101,12 +101,12 @@ export async function openRaw(options: RawOptions): Promise<RawSocket> {
   const frames: Frame[] = [];
   const document = new Y.Doc();
   let closed: { code: number; reason: string } | null = null;
-  let failure: Error | null = null;
+  const failures: Error[] = [];
   socket.on("message", (data: Buffer) => frames.push(readFrame(data, document)));
   socket.on("close", (code, reason) => (closed = { code, reason: reason.toString() }));
-  socket.on("error", (error) => (failure = error));
+  socket.on("error", (error) => failures.push(error));
   await until("the socket is open or refused", () => socket.readyState !== WebSocket.CONNECTING);
-  if (failure !== null) throw failure as Error; // assigned in the listener
+  if (failures[0] !== undefined) throw failures[0];
   return {
     socket,
     frames,

@@ -35,7 +35,7 @@ export function makeSlow(store: DocumentStore): SlowStore {
     quarantine: pass("quarantine", store.quarantine.bind(store)),
     stop: () => store.stop(),
     shut(door) {
-      let open = () => undefined as void;
+      let open: () => void = () => undefined;
       const opened = new Promise<void>((resolve) => (open = resolve));
       gates.set(door, { opened, open });
     },
