@@ -46,6 +46,8 @@ export async function startStack({
     : null;
   // The stand-ins answer with the variables that point the server at them; what was given by hand wins.
   const settings = {
+    // Requests are not what someone at a terminal wants to see; say LOG_LEVEL=info to see them.
+    LOG_LEVEL: given.LOG_LEVEL ?? "warn",
     NODE_ENV: testing ? "test" : "production",
     ...(fakes?.ready.env ?? {}),
     DATABASE_URL: cluster ? cluster.url("subleading") : given.DATABASE_URL,

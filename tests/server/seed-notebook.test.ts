@@ -14,7 +14,9 @@ test("the Lantern notebook waits for its authors, with every result stored and e
       database,
       "select premises_line, pins_moved, pins_loose from notebooks",
     );
-    expect(notebooks).toEqual([{ premises_line: "d = 4 · 2 fields · 9 terms", pins_moved: 0, pins_loose: 0 }]);
+    expect(notebooks).toEqual([
+      { premises_line: "d = 4 · 2 fields · 9 terms", pins_moved: 0, pins_loose: 0 },
+    ]);
     const results = await rows<{ block_id: string; problems: unknown[]; has_value: boolean }>(
       database,
       `select block_id, value -> 'problems' as problems, value -> 'value' <> 'null'::jsonb as has_value
