@@ -14,6 +14,9 @@ const NotebookPage = lazy(async () => ({
 const SharingPage = lazy(async () => ({
   default: (await import("../pages/sharing/sharing-page.tsx")).SharingPage,
 }));
+const RefereePage = lazy(async () => ({
+  default: (await import("../pages/referee/referee-page.tsx")).RefereePage,
+}));
 const NotFoundPage = lazy(async () => ({
   default: (await import("../pages/not-found/not-found-page.tsx")).NotFoundPage,
 }));
@@ -29,6 +32,7 @@ export function Router() {
           <Route path="/shelf" element={<SignedInOnly page={<ShelfPage />} />} />
           <Route path="/notebooks/:id" element={<SignedInOnly page={<NotebookPage />} />} />
           <Route path="/notebooks/:id/sharing" element={<SignedInOnly page={<SharingPage />} />} />
+          <Route path="/r/:token" element={<RefereePage />} />
           <Route path="*" element={<NotFoundPage />} />
         </Routes>
       </Suspense>

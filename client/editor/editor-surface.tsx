@@ -1,6 +1,6 @@
 /** The writing surface: the section scale, the margin tick, the writing bar and the document itself. */
 import { EditorContent, useEditor } from "@tiptap/react";
-import { useEffect, useMemo, useState, useSyncExternalStore } from "react";
+import { useEffect, useMemo, useState, useSyncExternalStore, type ReactNode } from "react";
 import type { StoredResult } from "#contract/api.ts";
 import { say } from "../ui/notices.ts";
 import { blockExtensions, blockViews } from "./blocks/block-extensions.ts";
@@ -22,20 +22,24 @@ interface EditorSurfaceProps {
   readonly state: ConnectionState;
   /** What the server has stored; undefined while it is on its way. */
   readonly stored: readonly StoredResult[] | undefined;
+  /** Drawn after the text, inside the open notebook. */
+  readonly children?: ReactNode;
 }
 
-export function EditorSurface({ session, state, stored }: EditorSurfaceProps) {
+export function EditorSurface({ session, state, stored, children }: EditorSurfaceProps) {
   return (
     <BlocksProvider session={session} stored={stored}>
-      <WritingSurface session={session} state={state} />
+      <WritingSurface session={session} state={state}>
+        {children}
+      </WritingSurface>
     </BlocksProvider>
   );
 }
 
-function WritingSurface({ session, state }: Omit<EditorSurfaceProps, "stored">) {
+function WritingSurface({ session, state, children }: Omit<EditorSurfaceProps, "stored">) {
   const world = useBlockWorld();
   const readOnly = state.readOnly || isFinal(state.phase);
-  const editing = useMemo(createMathEditing, []);
+  const editing = useMemo(() => createMathEditing(), []);
   const [indexOpen, setIndexOpen] = useState(false);
   const extensions = useMemo(
     () =>
@@ -85,6 +89,7 @@ function WritingSurface({ session, state }: Omit<EditorSurfaceProps, "stored">) 
           />
         )}
       </div>
+      {children}
     </NotebookContext>
   );
 }

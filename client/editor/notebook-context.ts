@@ -52,7 +52,8 @@ export function announceOpened(session: NotebookSession | null): void {
   for (const listener of openedListeners) listener();
 }
 
-function useOpened(): NotebookSession | null {
+/** The session of the open notebook, for what lies outside the editor; null when none is open. */
+export function useOpenedSession(): NotebookSession | null {
   return useSyncExternalStore(
     (listener) => {
       openedListeners.add(listener);
@@ -68,7 +69,7 @@ export interface ConnectionInWords extends ConnectionState {
 
 /** The connection of the open notebook, for the header; null when none is open. */
 export function useConnection(): ConnectionInWords | null {
-  const session = useOpened();
+  const session = useOpenedSession();
   const subscribe = useCallback(
     (listener: () => void) => session?.subscribe(listener) ?? (() => undefined),
     [session],
@@ -81,7 +82,7 @@ const nobody: readonly PresentPerson[] = [];
 
 /** Who is in the open notebook, oneself first; for the header. */
 export function usePresentPeople(): readonly PresentPerson[] {
-  const session = useOpened();
+  const session = useOpenedSession();
   const store = useMemo(() => peopleStore(session), [session]);
   return useSyncExternalStore(store.subscribe, store.people);
 }

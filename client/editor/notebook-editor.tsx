@@ -1,5 +1,5 @@
 /** A notebook on the page: opens its shared document, then the editor on it. */
-import { useEffect, useState, useSyncExternalStore } from "react";
+import { useEffect, useState, useSyncExternalStore, type ReactNode } from "react";
 import type { StoredResult } from "#contract/api.ts";
 import type { ServerNotice } from "#contract/collab.ts";
 import type { Role } from "#contract/roles.ts";
@@ -26,6 +26,8 @@ export interface NotebookEditorProps {
   readonly stored?: readonly StoredResult[] | undefined;
   /** What the server says beside the document: results were stored, title or people changed, … */
   readonly onNotice?: (notice: ServerNotice) => void;
+  /** Drawn after the text once the notebook is open; may read its editor, blocks and results. */
+  readonly children?: ReactNode;
 }
 
 export function NotebookEditor(props: NotebookEditorProps) {
@@ -37,15 +39,20 @@ export function NotebookEditor(props: NotebookEditorProps) {
 function OpenedNotebook(props: NotebookEditorProps) {
   const session = useNotebookSession(props);
   if (!session) return <p className="notebook-notice">Opening the notebook…</p>;
-  return <SessionView session={session} stored={props.stored} />;
+  return (
+    <SessionView session={session} stored={props.stored}>
+      {props.children}
+    </SessionView>
+  );
 }
 
 interface SessionViewProps {
   readonly session: NotebookSession;
   readonly stored: readonly StoredResult[] | undefined;
+  readonly children: ReactNode;
 }
 
-function SessionView({ session, stored }: SessionViewProps) {
+function SessionView({ session, stored, children }: SessionViewProps) {
   const state = useSyncExternalStore(session.subscribe, session.state);
   useWarningBeforeLeaving(state.unsaved && state.phase !== "scratch");
   switch (state.phase) {
@@ -68,7 +75,11 @@ function SessionView({ session, stored }: SessionViewProps) {
       </p>
     );
   }
-  return <EditorSurface session={session} state={state} stored={stored} />;
+  return (
+    <EditorSurface session={session} state={state} stored={stored}>
+      {children}
+    </EditorSurface>
+  );
 }
 
 const refereeEnded = "This referee link has expired or was revoked. Ask whoever sent it for a new one.";
@@ -127,6 +138,7 @@ function useNotebookSession(props: NotebookEditorProps): NotebookSession | null 
         setGeneration((before) => before + 1);
       },
     });
+    // eslint-disable-next-line react-hooks/set-state-in-effect -- a session is an outside system: opened here, closed below
     setSession(opened);
     announceOpened(opened);
     return () => {

@@ -1,0 +1,2 @@
+/** Places on the page that links lead to. */
+export const CHECK_SHEET = "check-sheet";

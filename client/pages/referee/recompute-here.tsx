@@ -1,0 +1,74 @@
+import type { StoredResult } from "#contract/api.ts";
+import type { BlockInstance } from "#engine/notebook/block-instance.ts";
+import type { PinAttributes } from "#schema/block-structure.ts";
+import { useEffect, useRef, useState } from "react";
+import { useBlocks } from "../../editor/evaluation/use-results.ts";
+import { Button } from "../../ui/button.tsx";
+import { blocksNeeded, recompute, type Recomputation } from "./recompute.ts";
+import { sayVerdict, verdictOf } from "./verdict.ts";
+
+interface Props {
+  readonly pin: PinAttributes;
+  readonly stored: StoredResult | undefined;
+}
+interface Found {
+  readonly recomputation: Recomputation;
+  /** The blocks it was computed from: the same objects for as long as their inputs stay. */
+  readonly from: readonly BlockInstance[];
+}
+
+/** Computes the block anew in a fresh worker and says whether that agrees. Inputs that change take the answer back. */
+export function RecomputeHere({ pin, stored }: Props) {
+  const blocks = useBlocks();
+  const [found, setFound] = useState<Found | null>(null);
+  const [computing, setComputing] = useState(false);
+  const shown = useRef(true);
+  useEffect(() => {
+    shown.current = true;
+    return () => {
+      shown.current = false;
+    };
+  }, []);
+
+  async function compute() {
+    setComputing(true);
+    const from = blocksNeeded(pin.blockId, blocks);
+    const recomputation = await recompute(pin.blockId, blocks);
+    if (!shown.current) return;
+    setComputing(false);
+    setFound({ recomputation, from });
+  }
+  const current = found && isSameList(found.from, blocksNeeded(pin.blockId, blocks)) ? found : null;
+  const words = current && say(current.recomputation, stored, pin);
+
+  return (
+    <>
+      <Button
+        className="check-recompute text-small"
+        busy={computing}
+        busyLabel="computing"
+        aria-label={`recompute ${pin.text} here`}
+        onClick={() => void compute()}
+      >
+        recompute here
+      </Button>
+      <p role="status" className="check-verdict" data-agrees={words?.agrees}>
+        {words?.sentence ?? (found && !computing ? "The inputs have changed since it was recomputed." : "")}
+      </p>
+    </>
+  );
+}
+
+function say(recomputation: Recomputation, stored: StoredResult | undefined, pin: PinAttributes) {
+  if (!recomputation.done)
+    return { sentence: `It could not be recomputed: ${recomputation.words}.`, agrees: false };
+  const verdict = verdictOf(recomputation.outcome, stored, pin);
+  return {
+    sentence: sayVerdict(verdict, pin.text),
+    agrees: verdict.pin === "agrees" && verdict.stored !== "differs",
+  };
+}
+
+function isSameList(a: readonly BlockInstance[], b: readonly BlockInstance[]): boolean {
+  return a.length === b.length && a.every((block, index) => block === b[index]);
+}
