@@ -1,3 +1,4 @@
+import { superscript } from "#engine/notation/float-text.ts";
 import type { PremisesValue } from "#engine/premises/value.ts";
 import { useBlock } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
@@ -123,11 +124,9 @@ export function plainLatex(latex: string): string {
     .replace(/\\frac\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}/g, "$1/($2)")
     .replace(/\\bar\{([^{}]*)\}/g, "$1̄")
     .replace(/\\([A-Za-z]+)/g, (_, name: string) => letters[name] ?? "")
-    .replace(/\^\{?(\d+)\}?/g, (_, digits: string) =>
-      [...digits].map((digit) => "⁰¹²³⁴⁵⁶⁷⁸⁹".charAt(Number(digit))).join(""),
-    )
+    .replace(/\^\{?(\d+)\}?/g, (_, digits: string) => superscript(digits))
     .replace(/_\{?(\d+)\}?/g, (_, digits: string) =>
-      [...digits].map((digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))).join(""),
+      digits.replace(/\d/g, (digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))),
     )
     .replace(/\\[,;!: ]|~/g, " ")
     .replace(/[{}]/g, "")

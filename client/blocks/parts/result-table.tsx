@@ -23,6 +23,8 @@ interface Props<Row> {
 export function ResultTable<Row>({ caption, showCaption = false, columns, rows, keyOf, toneOf }: Props<Row>) {
   return (
     <div className="block-scroll">
+      {/* The keys belong to the figures inside, which are buttons. */}
+      {/* eslint-disable-next-line jsx-a11y-x/no-noninteractive-element-interactions -- see above */}
       <table className="block-table" onKeyDown={goByArrows} ref={oneTabStop}>
         <caption className={showCaption ? "block-caption" : "sr-only"}>{caption}</caption>
         <thead>

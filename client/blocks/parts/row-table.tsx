@@ -25,6 +25,8 @@ export interface ResultColumn {
   readonly show: (row: BlockRow) => ReactNode;
 }
 
+const noRows: readonly BlockRow[] = [];
+
 interface Props {
   readonly table: string;
   /** What a row is, in the singular: "field". */
@@ -45,7 +47,7 @@ interface Props {
  */
 export function RowTable({ table, noun, caption, columns, results = [], nameOf, invitation }: Props) {
   const block = useBlock();
-  const rows = block.tables[table] ?? [];
+  const rows = block.tables[table] ?? noRows;
   const body = useRef<HTMLTableSectionElement>(null);
   const [wanted, setWanted] = useState<{ rowId: string; column: string; caretAtEnd: boolean } | null>(null);
   const drag = useRowDrag(body, (rowId, beforeRowId) => block.moveRow(table, rowId, beforeRowId));

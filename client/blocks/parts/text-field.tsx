@@ -96,7 +96,7 @@ export function TextField(props: Props) {
           onPaste={onPaste}
           onBeforeInput={(event) => {
             // The system's own undo, from a menu or a gesture.
-            const { inputType } = event.nativeEvent as InputEvent; // React types it as an Event
+            const { inputType } = event.nativeEvent;
             if (inputType === "historyUndo" || inputType === "historyRedo") event.preventDefault();
             if (inputType === "historyUndo") draft.undo();
             if (inputType === "historyRedo") draft.redo();

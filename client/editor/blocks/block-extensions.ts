@@ -19,5 +19,11 @@ export const blockViews: Readonly<Record<string, NodeViewRenderer>> = {
 
 /** Behaviour that goes with the views. */
 export function blockExtensions(world: BlockWorld): readonly AnyExtension[] {
-  return [BlockPairing, BlockKeyboard.configure({ world }), PinKeyboard.configure({ world }), PinShortcut, ProseCaret];
+  return [
+    BlockPairing,
+    BlockKeyboard.configure({ world }),
+    PinKeyboard.configure({ world }),
+    PinShortcut,
+    ProseCaret,
+  ];
 }

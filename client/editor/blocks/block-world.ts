@@ -20,8 +20,9 @@ export interface BlockWorld {
   readonly directory: BlockDirectory;
   readonly results: ResultsStore;
   readonly presence: FieldPresence;
-  /** Set while an editor shows the notebook. */
-  editor: Editor | null;
+  /** The editor that shows the notebook, while there is one. */
+  editor(): Editor | null;
+  showIn(editor: Editor | null): void;
   /** Asks first; one question at a time. */
   ask(question: Question | null): void;
   question(): Question | null;
@@ -43,12 +44,16 @@ export function createBlockWorld(
   const listeners = new Set<() => void>();
   let question: Question | null = null;
   let picking = false;
+  let editor: Editor | null = null;
   return {
     session,
     directory,
     results,
     presence,
-    editor: null,
+    editor: () => editor,
+    showIn(next) {
+      editor = next;
+    },
     ask(next) {
       question = next;
       for (const listener of listeners) listener();

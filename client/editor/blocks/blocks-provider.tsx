@@ -21,6 +21,8 @@ export function BlocksProvider({ session, stored, children }: Props) {
   const [world, setWorld] = useState<BlockWorld | null>(null);
   useEffect(() => {
     const opened = createBlockWorld(session);
+    // The world follows Y and owns a worker: an outside system, made and ended with this effect.
+    // eslint-disable-next-line react-hooks/set-state-in-effect -- see above
     setWorld(opened);
     return () => {
       setWorld(null);
@@ -46,13 +48,13 @@ export function BlocksProvider({ session, stored, children }: Props) {
 export function useBlocksEditor(editor: Editor): void {
   const world = useBlockWorld();
   useEffect(() => {
-    world.editor = editor;
+    world.showIn(editor);
     const quiet = announcePins(world, editor);
     const withdraw = offerPinPicker(editor, () => world.pick(!world.session.state().readOnly));
     return () => {
       quiet();
       withdraw();
-      world.editor = null;
+      world.showIn(null);
     };
   }, [world, editor]);
 }

@@ -63,6 +63,8 @@ export function PinPanel({ editor, pin, state, getPosition, onClose }: Props) {
   };
 
   return (
+    // A dialog that can hold the focus itself; its keys close it.
+    // eslint-disable-next-line jsx-a11y-x/no-noninteractive-element-interactions -- see above
     <div
       ref={panel}
       className="pin-panel"

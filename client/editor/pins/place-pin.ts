@@ -35,7 +35,8 @@ export function pinAttributes(
 
 /** Puts a pin where the caret last stood in the prose, with the caret after it, and says so. */
 export function placePinAtCaret(world: BlockWorld, blockId: string, scalarId: string): void {
-  const { editor, results, session } = world;
+  const { results, session } = world;
+  const editor = world.editor();
   const { evaluation, key } = results.result(blockId);
   const scalar = evaluation?.scalars.find(({ id }) => id === scalarId);
   if (!editor || !scalar || key === null || session.state().readOnly) return;

@@ -7,7 +7,7 @@ import {
   ySyncPluginKey,
   type ProsemirrorBinding,
 } from "@tiptap/y-tiptap";
-import * as Y from "yjs";
+import type * as Y from "yjs";
 
 interface Caret {
   readonly position: number;

@@ -3,6 +3,7 @@ import { NodeSelection } from "@tiptap/pm/state";
 import { afterEach, describe, expect, it } from "vitest";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
+import { blockPlaces } from "../../../client/editor/blocks/block-places.ts";
 import {
   changeInputs,
   insertRows,
@@ -42,13 +43,9 @@ function notebook(rowCount: number, { third, alone }: Surroundings = {}): JSONCo
   return third ? [...withProse, premises("last", rowCount)] : withProse;
 }
 
-function place(who: Person, blockId: string): { from: number; to: number; index: number } {
-  let found: { from: number; to: number; index: number } | null = null;
-  who.editor.state.doc.forEach((node, offset, index) => {
-    if (node.attrs["blockId"] === blockId) found = { from: offset, to: offset + node.nodeSize, index };
-  });
-  if (!found) throw new Error(`no block ${blockId}`);
-  return found;
+function place(who: Person, blockId: string): { from: number; to: number } {
+  const found = blockPlaces(who.editor.state.doc).get(blockId) ?? expect.fail(`no block ${blockId}`);
+  return { from: found.position, to: found.position + found.node.nodeSize };
 }
 
 function element(who: Person, blockId = target) {

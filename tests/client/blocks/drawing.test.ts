@@ -31,7 +31,12 @@ describe("numbers in a column", () => {
 describe("axes", () => {
   it("label whole powers of ten over many decades, not more than asked for", () => {
     const { ticks } = axisOf({ kind: "log", label: "", domain: [1e-6, 1] }, [0, 100], 4);
-    expect(ticks.filter(({ label }) => label !== "").map(({ label }) => label)).toEqual(["10⁻⁶", "10⁻⁴", "10⁻²", "10⁰"]);
+    expect(ticks.filter(({ label }) => label !== "").map(({ label }) => label)).toEqual([
+      "10⁻⁶",
+      "10⁻⁴",
+      "10⁻²",
+      "10⁰",
+    ]);
   });
   it("label 1, 2, 3 and 5 over a short range", () => {
     const { ticks } = axisOf({ kind: "log", label: "", domain: [50, 3200] }, [0, 100], 20);
@@ -56,7 +61,12 @@ describe("axes", () => {
   it("keep labels apart, in order and inside", () => {
     fc.assert(
       fc.property(fc.array(fc.double({ min: 0, max: 200, noNaN: true }), { maxLength: 12 }), (positions) => {
-        const placed = spread([...positions].sort((a, b) => a - b), 10, 0, 200);
+        const placed = spread(
+          [...positions].sort((a, b) => a - b),
+          10,
+          0,
+          200,
+        );
         for (const [index, at] of placed.entries()) {
           if (index > 0) expect(at - (placed[index - 1] ?? 0)).toBeGreaterThanOrEqual(10 - 1e-9);
           expect(at).toBeLessThanOrEqual(200 + 1e-9);

@@ -26,7 +26,9 @@ const lantern = {
 
 function places(): string[] {
   return [...document.querySelectorAll<HTMLElement>("[data-kind]")].flatMap((block) =>
-    [...block.querySelectorAll<HTMLElement>("[data-place]")].map((field) => `${block.dataset["kind"] ?? ""}: ${field.dataset["place"] ?? ""}`),
+    [...block.querySelectorAll<HTMLElement>("[data-place]")].map(
+      (field) => `${block.dataset["kind"] ?? ""}: ${field.dataset["place"] ?? ""}`,
+    ),
   );
 }
 
@@ -43,9 +45,19 @@ describe.each(kindNames)("the form of %s", (kind) => {
     const seen = new Set<string>();
     for (const attrs of variants[kind] ?? [{}]) {
       const rows = Object.entries(shape.tables).map(([table, columns]) =>
-        row(table, `${table}-1`, "K", Object.fromEntries(Object.entries(columns).map(([column, spec]) => [column, spec.initial]))),
+        row(
+          table,
+          `${table}-1`,
+          "K",
+          Object.fromEntries(Object.entries(columns).map(([column, spec]) => [column, spec.initial])),
+        ),
       );
-      wren = personAtForms("Wren", 10, documentOf([{ type: kind, attrs: { blockId: "b", ...attrs }, content: rows }]), ["b"]);
+      wren = personAtForms(
+        "Wren",
+        10,
+        documentOf([{ type: kind, attrs: { blockId: "b", ...attrs }, content: rows }]),
+        ["b"],
+      );
       for (const place of places()) seen.add(place.replace(/^.*: /, "").replace(/\/[^/]+\//, "/"));
       wren.leave();
       wren = null;
@@ -53,7 +65,9 @@ describe.each(kindNames)("the form of %s", (kind) => {
     }
     const wanted = [
       ...Object.keys(shape.fields).filter((field) => !withoutControl.has(field)),
-      ...Object.entries(shape.tables).flatMap(([table, columns]) => Object.keys(columns).map((column) => `${table}/${column}`)),
+      ...Object.entries(shape.tables).flatMap(([table, columns]) =>
+        Object.keys(columns).map((column) => `${table}/${column}`),
+      ),
     ];
     expect([...seen].sort()).toEqual([...wanted].sort());
   });
@@ -72,12 +86,21 @@ describe("blocks on premises", () => {
     lantern,
     { type: "scaling", attrs: { blockId: "scaling" } },
     { type: "orderPlan", attrs: { blockId: "plan", target: "10 %" } },
-    { type: "divergence", attrs: { blockId: "graph" }, content: [row("vertices", "v", "K", { term: "t1", count: "2" }), row("legs", "l", "K", { field: "chi", leg: "field", count: "4" })] },
+    {
+      type: "divergence",
+      attrs: { blockId: "graph" },
+      content: [
+        row("vertices", "v", "K", { term: "t1", count: "2" }),
+        row("legs", "l", "K", { field: "chi", leg: "field", count: "4" }),
+      ],
+    },
     { type: "divergence", attrs: { blockId: "theory", mode: "whole theory" } },
     {
       type: "truncationError",
       attrs: { blockId: "truncation", q: "p/Lambda" },
-      content: ["8.0", "9.1", "9.32"].map((value, index) => row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" })),
+      content: ["8.0", "9.1", "9.32"].map((value, index) =>
+        row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }),
+      ),
     },
   ];
   const ids = ["lantern", "scaling", "plan", "graph", "theory", "truncation"];
@@ -93,11 +116,18 @@ describe("blocks on premises", () => {
     const kinds = [...document.querySelectorAll<HTMLElement>("[data-kind]")];
     for (const [index, id] of ids.entries()) {
       const scalars = new Set(world.results.result(id).evaluation?.scalars.map((scalar) => scalar.id));
-      const figures = [...(kinds[index]?.querySelectorAll<HTMLElement>("[data-figure]") ?? [])].map((figure) => figure.dataset["figure"] ?? "");
-      expect(figures.filter((figure) => !scalars.has(figure)), id).toEqual([]);
+      const figures = [...(kinds[index]?.querySelectorAll<HTMLElement>("[data-figure]") ?? [])].map(
+        (figure) => figure.dataset["figure"] ?? "",
+      );
+      expect(
+        figures.filter((figure) => !scalars.has(figure)),
+        id,
+      ).toEqual([]);
       expect(figures.length, id).toBeGreaterThan(0);
     }
-    expect(wren.screen.getAllByRole("img", { name: /against the probe scale|order by order/ })).toHaveLength(3);
+    expect(wren.screen.getAllByRole("img", { name: /against the probe scale|order by order/ })).toHaveLength(
+      3,
+    );
   });
 
   it("keep their inputs and show the last good result while they are in error", async () => {

@@ -9,7 +9,11 @@ import { FRAGMENT } from "#contract/collab.ts";
 import { documentSchema } from "#schema/document-schema.ts";
 import { BlockHandleContext } from "../../../client/blocks/block-handle.ts";
 import { BlockFrame } from "../../../client/blocks/frame.tsx";
-import { BlockWorldContext, createBlockWorld, type BlockWorld } from "../../../client/editor/blocks/block-world.ts";
+import {
+  BlockWorldContext,
+  createBlockWorld,
+  type BlockWorld,
+} from "../../../client/editor/blocks/block-world.ts";
 import { useBlockHandle } from "../../../client/editor/blocks/use-block-handle.ts";
 import { ResultsContext } from "../../../client/editor/evaluation/use-results.ts";
 import { createHistory } from "../../../client/editor/history.ts";
@@ -37,7 +41,12 @@ function Block({ blockId }: { readonly blockId: string }) {
   );
 }
 
-export function personAtForms(name: string, clientId: number, state: Uint8Array, blockIds: readonly string[]): PersonAtForms {
+export function personAtForms(
+  name: string,
+  clientId: number,
+  state: Uint8Array,
+  blockIds: readonly string[],
+): PersonAtForms {
   const doc = new Y.Doc();
   doc.clientID = clientId;
   Y.applyUpdate(doc, state);
@@ -45,7 +54,9 @@ export function personAtForms(name: string, clientId: number, state: Uint8Array,
   awareness.setLocalState({ user: { id: name.toLowerCase(), name } });
   const history = createHistory(doc);
   const listeners = new Set<() => void>();
-  let connection = { phase: "connected", unsaved: false, readOnly: false, loaded: true } as ReturnType<NotebookSession["state"]>;
+  let connection = { phase: "connected", unsaved: false, readOnly: false, loaded: true } as ReturnType<
+    NotebookSession["state"]
+  >;
   const session: NotebookSession = {
     notebookId: "n",
     source: { mode: "member" },

@@ -6,8 +6,15 @@ import { row } from "./two-editors.ts";
 
 let wren: PersonAtForms;
 beforeEach(() => {
-  const orders = ["8.0", "9.1", "9.32"].map((value, index) => row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }));
-  wren = personAtForms("Wren", 10, documentOf([{ type: "truncationError", attrs: { blockId: "t" }, content: orders }]), ["t"]);
+  const orders = ["8.0", "9.1", "9.32"].map((value, index) =>
+    row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }),
+  );
+  wren = personAtForms(
+    "Wren",
+    10,
+    documentOf([{ type: "truncationError", attrs: { blockId: "t" }, content: orders }]),
+    ["t"],
+  );
 });
 afterEach(() => {
   wren.leave();
@@ -19,7 +26,8 @@ const table = () => {
   return typeof rows === "object" ? rows.map(({ order, value, name }) => [order, value, name].join("|")) : [];
 };
 const at = (label: string) => wren.screen.getByLabelText(label);
-const pasteInto = (label: string, text: string) => fireEvent.paste(at(label), { clipboardData: { getData: () => text } });
+const pasteInto = (label: string, text: string) =>
+  fireEvent.paste(at(label), { clipboardData: { getData: () => text } });
 
 describe("a table of rows", () => {
   it("goes down a column with Enter and adds a row at the end", async () => {
@@ -39,7 +47,7 @@ describe("a table of rows", () => {
   });
 
   it("fills rows from lines of a spreadsheet, adding what is missing, as one step", () => {
-    pasteInto("order n of order 3", "2\t9.33\tN2LO\r\n3\t9.26\t\"N3\"\"LO\"\r\n");
+    pasteInto("order n of order 3", '2\t9.33\tN2LO\r\n3\t9.26\t"N3""LO"\r\n');
     expect(table()).toEqual(["0|8.0|", "1|9.1|", "2|9.33|N2LO", '3|9.26|N3"LO']);
     act(() => void wren.world.session.history.undoOnce());
     expect(table()).toEqual(["0|8.0|", "1|9.1|", "2|9.32|"]);

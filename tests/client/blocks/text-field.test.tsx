@@ -35,7 +35,8 @@ const stored = (who: PersonAtForms) => {
   return typeof rows === "object" ? rows[0]?.["value"] : undefined;
 };
 const one = ([who]: PersonAtForms[]) => who ?? expect.fail("nobody is here");
-const two = ([first, second]: PersonAtForms[]) => [first ?? expect.fail("nobody"), second ?? expect.fail("nobody")] as const;
+const two = ([first, second]: PersonAtForms[]) =>
+  [first ?? expect.fail("nobody"), second ?? expect.fail("nobody")] as const;
 
 describe("a field", () => {
   it("writes after a pause and not with every letter", async () => {
@@ -43,7 +44,8 @@ describe("a field", () => {
     let writes = 0;
     wren.doc.on("update", () => (writes += 1));
     await wren.user.click(valueField(wren));
-    for (const typed of ["3.2 Te", "2.8 Te", "2.8 TeV"]) fireEvent.change(valueField(wren), { target: { value: typed } });
+    for (const typed of ["3.2 Te", "2.8 Te", "2.8 TeV"])
+      fireEvent.change(valueField(wren), { target: { value: typed } });
     expect(stored(wren)).toBe("3.2 TeV");
     await waitFor(() => expect(stored(wren)).toBe("2.8 TeV"));
     expect(writes).toBe(1);
@@ -118,9 +120,13 @@ describe("two people in one field", () => {
     act(() => otto.world.presence.enter("elsewhere", "x"));
     act(() => {
       const element = otto.world.directory.element("p");
-      const cell = element?.toArray().find((child) => "getAttribute" in child && child.getAttribute("rowId") === "heavy");
+      const cell = element
+        ?.toArray()
+        .find((child) => "getAttribute" in child && child.getAttribute("rowId") === "heavy");
       if (!cell || !("toArray" in cell)) throw new Error("no row");
-      const value = cell.toArray().find((child) => "getAttribute" in child && child.getAttribute("field") === "value");
+      const value = cell
+        .toArray()
+        .find((child) => "getAttribute" in child && child.getAttribute("field") === "value");
       if (!value || !("setAttribute" in value)) throw new Error("no cell");
       value.setAttribute("value", "3.4 TeV");
       exchange(wren, otto);

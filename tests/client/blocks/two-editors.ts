@@ -31,7 +31,7 @@ export function person(clientId: number, state: Uint8Array): Person {
       Collaboration.configure({
         document: doc,
         field: FRAGMENT,
-        yUndoOptions: { undoManager: history.manager } as never,
+        yUndoOptions: { undoManager: history.manager },
       }),
       BlockPairing,
       ProseCaret,

@@ -14,10 +14,19 @@ import { createResultsStore, type ResultsStore } from "../../../client/editor/ev
 import { notebookState, paragraph, row } from "../blocks/two-editors.ts";
 import { workerInProcess } from "./worker-in-process.ts";
 
-const orders = ["8.0", "9.1", "9.32"].map((value, index) => row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }));
+const orders = ["8.0", "9.1", "9.32"].map((value, index) =>
+  row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }),
+);
 const content = [
   paragraph("words"),
-  { type: "premises", attrs: { blockId: "premises", d: "4" }, content: [row("fields", "f", "K", { symbol: "phi", kind: "real scalar" }), row("terms", "t", "K", { term: "lambda/4! phi^4" })] },
+  {
+    type: "premises",
+    attrs: { blockId: "premises", d: "4" },
+    content: [
+      row("fields", "f", "K", { symbol: "phi", kind: "real scalar" }),
+      row("terms", "t", "K", { term: "lambda/4! phi^4" }),
+    ],
+  },
   { type: "scaling", attrs: { blockId: "scaling" } },
   { type: "truncationError", attrs: { blockId: "apart", q: "0.3" }, content: orders },
 ];
@@ -38,7 +47,11 @@ afterEach(() => {
 });
 
 function open(startWorker: () => WorkerLike = workerInProcess, timeLimitMs?: number): ResultsStore {
-  store = createResultsStore({ directory, startWorker, ...(timeLimitMs === undefined ? {} : { timeLimitMs }) });
+  store = createResultsStore({
+    directory,
+    startWorker,
+    ...(timeLimitMs === undefined ? {} : { timeLimitMs }),
+  });
   return store;
 }
 const settled = (results: ResultsStore) =>
@@ -54,7 +67,10 @@ describe("results", () => {
   it("are the engine's own for the same document", async () => {
     const results = open();
     await settled(results);
-    const direct = evaluateNotebook(directory.blocks(), { memo: new Map(), onInternalError: (error) => expect.fail(String(error)) });
+    const direct = evaluateNotebook(directory.blocks(), {
+      memo: new Map(),
+      onInternalError: (error) => expect.fail(String(error)),
+    });
     for (const { blockId, key, evaluation } of direct) {
       expect(results.result(blockId).key).toBe(key);
       expect(results.result(blockId).evaluation).toEqual(evaluation);
@@ -96,7 +112,10 @@ describe("results", () => {
     await settled(results);
     edit("scaling", "probe", "1 TeV");
     await settled(results);
-    expect(requests.map(({ changed }) => changed.map(({ id }) => id))).toEqual([["premises", "scaling", "apart"], ["scaling"]]);
+    expect(requests.map(({ changed }) => changed.map(({ id }) => id))).toEqual([
+      ["premises", "scaling", "apart"],
+      ["scaling"],
+    ]);
   });
 
   it("keep the last good one beside an error", async () => {
@@ -112,12 +131,26 @@ describe("results", () => {
   it("are the server's until the worker has answered, and say who changed them as long as they are the same result", async () => {
     const { blocks } = readDocument({ type: "doc", content });
     const stored = evaluateNotebook(blocks, { memo: new Map(), onInternalError: () => undefined }).map(
-      ({ blockId, key, evaluation }): StoredResult => ({ blockId, key, evaluation, engineVersion: ENGINE_VERSION, settledAt: "2026-12-01T14:02:00Z", changedBy: "Otto" }),
+      ({ blockId, key, evaluation }): StoredResult => ({
+        blockId,
+        key,
+        evaluation,
+        engineVersion: ENGINE_VERSION,
+        settledAt: "2026-12-01T14:02:00Z",
+        changedBy: "Otto",
+      }),
     );
-    const silent: WorkerLike = { onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => undefined };
+    const silent: WorkerLike = {
+      onmessage: null,
+      onerror: null,
+      postMessage: () => undefined,
+      terminate: () => undefined,
+    };
     const early = open(() => silent);
     early.setStored(stored);
-    expect(early.result("apart").evaluation).toEqual(stored.find(({ blockId }) => blockId === "apart")?.evaluation);
+    expect(early.result("apart").evaluation).toEqual(
+      stored.find(({ blockId }) => blockId === "apart")?.evaluation,
+    );
     expect(early.result("apart").settled).toEqual({ by: "Otto", at: "2026-12-01T14:02:00Z" });
     early.destroy();
 
@@ -157,7 +190,10 @@ describe("the worker", () => {
   it("is started again when it crashes, and told everything anew", async () => {
     const started: WorkerLike[] = [];
     const results = open(() => {
-      const worker = started.length === 0 ? { onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => undefined } : workerInProcess();
+      const worker =
+        started.length === 0
+          ? { onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => undefined }
+          : workerInProcess();
       started.push(worker);
       return worker;
     });
@@ -174,7 +210,13 @@ describe("the worker", () => {
     const results = open(() => {
       starts += 1;
       if (!broken) return workerInProcess();
-      const worker: WorkerLike = { onmessage: null, onerror: null, terminate: () => undefined, postMessage: () => setTimeout(() => worker.onerror?.(new ErrorEvent("error", { message: "no", cancelable: true })), 0) };
+      const worker: WorkerLike = {
+        onmessage: null,
+        onerror: null,
+        terminate: () => undefined,
+        postMessage: () =>
+          setTimeout(() => worker.onerror?.(new ErrorEvent("error", { message: "no", cancelable: true })), 0),
+      };
       return worker;
     });
     await vi.waitFor(() => expect(results.evaluator()).toEqual({ state: "crashed", reason: "no" }));
@@ -187,7 +229,10 @@ describe("the worker", () => {
 
   it("is ended when it does not answer in time", async () => {
     let ended = 0;
-    const results = open(() => ({ onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => (ended += 1) }), 30);
+    const results = open(
+      () => ({ onmessage: null, onerror: null, postMessage: () => undefined, terminate: () => (ended += 1) }),
+      30,
+    );
     await vi.waitFor(() => expect(results.evaluator()).toEqual({ state: "timed-out", seconds: 0.03 }));
     expect(ended).toBe(1);
   });

@@ -15,7 +15,9 @@ import { defaultPinFormat } from "#engine/notebook/pin-format.ts";
 import { leave, notebookState, paragraph, person, row, type Person } from "../blocks/two-editors.ts";
 import { workerInProcess } from "../evaluation/worker-in-process.ts";
 
-const orders = ["8.0", "9.1", "9.32"].map((value, index) => row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }));
+const orders = ["8.0", "9.1", "9.32"].map((value, index) =>
+  row("orders", `o${index}`, `K${index}V`, { order: String(index), value, name: "" }),
+);
 const block = { type: "truncationError", attrs: { blockId: "t", q: "0.3" }, content: orders };
 
 let who: Person;
@@ -27,12 +29,24 @@ async function open() {
   readOnly = false;
   isOpen = true;
   const awareness = new Awareness(who.doc);
-  const state = () => ({ phase: "connected", unsaved: false, readOnly, loaded: true }) as ReturnType<NotebookSession["state"]>;
+  const state = () =>
+    ({ phase: "connected", unsaved: false, readOnly, loaded: true }) as ReturnType<NotebookSession["state"]>;
   world = createBlockWorld(
-    { notebookId: "n", source: { mode: "member" }, ydoc: who.doc, fragment: who.fragment, awareness, history: who.history, person: null, state, subscribe: () => () => undefined, destroy: () => undefined },
+    {
+      notebookId: "n",
+      source: { mode: "member" },
+      ydoc: who.doc,
+      fragment: who.fragment,
+      awareness,
+      history: who.history,
+      person: null,
+      state,
+      subscribe: () => () => undefined,
+      destroy: () => undefined,
+    },
     workerInProcess,
   );
-  world.editor = who.editor;
+  world.showIn(who.editor);
   await computed();
 }
 afterEach(() => {
@@ -66,7 +80,9 @@ describe("pinning", () => {
     await open();
     who.editor.commands.setTextSelection(14);
     const blockAt = who.editor.state.doc.child(0).nodeSize;
-    who.editor.view.dispatch(who.editor.state.tr.setSelection(NodeSelection.create(who.editor.state.doc, blockAt)));
+    who.editor.view.dispatch(
+      who.editor.state.tr.setSelection(NodeSelection.create(who.editor.state.doc, blockAt)),
+    );
     placePinAtCaret(world, "t", "error");
     expect(pin().position).toBe(14);
     expect(state().status).toBe("holds");
@@ -78,7 +94,13 @@ describe("pinning", () => {
     pinError();
     const { attrs } = pin();
     const scalar = world.results.result("t").evaluation?.scalars.find(({ id }) => id === "error");
-    expect(attrs).toMatchObject({ blockId: "t", scalar: "error", resultKey: world.results.result("t").key, value: JSON.stringify(scalar?.value), format: "" });
+    expect(attrs).toMatchObject({
+      blockId: "t",
+      scalar: "error",
+      resultKey: world.results.result("t").key,
+      value: JSON.stringify(scalar?.value),
+      format: "",
+    });
     expect(attrs.text).not.toBe("");
     expect(attrs.pinId).not.toBe("");
   });
@@ -94,7 +116,11 @@ describe("pinning", () => {
   it("keeps the caret's place while it is in a block, though the block's own fields change the whole document", async () => {
     await open();
     who.editor.commands.setTextSelection(14);
-    who.editor.view.dispatch(who.editor.state.tr.setSelection(NodeSelection.create(who.editor.state.doc, who.editor.state.doc.child(0).nodeSize)));
+    who.editor.view.dispatch(
+      who.editor.state.tr.setSelection(
+        NodeSelection.create(who.editor.state.doc, who.editor.state.doc.child(0).nodeSize),
+      ),
+    );
     await setQ("0.2");
     who.doc.transact(() => who.fragment.insert(0, [new Y.XmlElement("paragraph")]), "a colleague");
     expect(lastProsePosition(who.editor.state)).toBe(16);
@@ -167,7 +193,16 @@ describe("a pin", () => {
   it("claims nothing before its block has been computed", async () => {
     await open();
     pinError();
-    expect(pinStateOf(pin().attrs, true, { evaluation: null, key: null, standsOn: null, lastGood: null, pending: true, settled: null })).toEqual({ status: "waiting" });
+    expect(
+      pinStateOf(pin().attrs, true, {
+        evaluation: null,
+        key: null,
+        standsOn: null,
+        lastGood: null,
+        pending: true,
+        settled: null,
+      }),
+    ).toEqual({ status: "waiting" });
   });
 
   it("changes its format without changing its value, and keeps it when accepting", async () => {
@@ -189,7 +224,11 @@ describe("words about a pin", () => {
   it.each([
     ["nothing is known", null, "moved"],
     ["today", { by: "Otto", at: new Date("2026-12-01T09:02:00").toISOString() }, "moved · Otto, 09:02"],
-    ["another day", { by: "Otto", at: new Date("2026-11-30T14:02:00").toISOString() }, "moved · Otto, 30 Nov 14:02"],
+    [
+      "another day",
+      { by: "Otto", at: new Date("2026-11-30T14:02:00").toISOString() },
+      "moved · Otto, 30 Nov 14:02",
+    ],
     ["authors are hidden", { by: null, at: new Date("2026-12-01T09:02:00").toISOString() }, "moved · 09:02"],
   ])("say when and by whom: %s", (_what, settled, words) => {
     expect(movedWords(settled, noon)).toBe(words);
