@@ -40,7 +40,7 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
             show: ({ sum }) => <Decimal text={sizeText(sum)} widths={sums} />,
           },
           {
-            heading: "left out beyond",
+            heading: "left out",
             numeric: true,
             show: ({ leftOut }) => <Decimal text={sizeText(leftOut.used)} widths={lefts} />,
           },

@@ -34,7 +34,7 @@ interface Props {
   readonly table: { readonly x: string };
 }
 
-export const plotFrame = { width: 340, height: 208, left: 46, right: 62, top: 10, bottom: 38 } as const;
+export const plotFrame = { width: 340, height: 208, left: 46, right: 62, top: 22, bottom: 38 } as const;
 const dashes = ["", "7 3", "3 2.5", "1.5 3", "9 3 1.5 3", "5 2 1.5 2 1.5 2"];
 
 export function dashOf(style: number): string {
@@ -169,7 +169,7 @@ function Axes({
         {xLabel}
       </text>
       {yLabel !== "" && (
-        <text className="plot-axis-label" x={2} y={top - 1}>
+        <text className="plot-axis-label" x={2} y={11}>
           {yLabel}
         </text>
       )}

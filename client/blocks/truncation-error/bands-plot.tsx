@@ -75,7 +75,7 @@ export function BandsPlot({ value }: ResultProps<TruncationValue>) {
           );
         })}
         {value.unit !== "" && (
-          <text className="plot-axis-label" x={2} y={top - 1} aria-hidden="true">
+          <text className="plot-axis-label" x={2} y={11} aria-hidden="true">
             {value.unit}
           </text>
         )}
