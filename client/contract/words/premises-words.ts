@@ -39,6 +39,8 @@ export const premisesWords: Words = {
     `The term ${formula(term)} is forbidden by ${said(symmetries)}.`,
   "term-duplicate": ({ term, earlier }) =>
     `The terms ${formula(earlier)} and ${formula(term)} have the same fields and derivatives.`,
+  "odd-indices": ({ term, count }) =>
+    `The term ${formula(term)} has ${said(count)} Lorentz indices in all. An odd number cannot be contracted here, so it is not Lorentz invariant.`,
   "odd-fermions": ({ term, count }) =>
     `The term ${formula(term)} has ${said(count)} fermions. An odd number is not Lorentz invariant.`,
 };

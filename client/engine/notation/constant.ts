@@ -2,8 +2,8 @@
 import { Rational } from "../exact/rational.ts";
 import type { Tree } from "./tree.ts";
 
-/** Digits beyond which an exact number is refused rather than computed. */
-export const MOST_DIGITS = 4000;
+/** Hexadecimal digits beyond which an exact number is refused: the longest text is read, and no sum takes seconds. */
+export const MOST_DIGITS = 1000;
 const LARGEST_FACTORIAL = 300n;
 
 export function digitsOf(value: Rational): number {

@@ -74,6 +74,7 @@ function slip(typed: string, symbol: string): number {
   // "phi2" for phi², "psi_L" where only psi is declared.
   if (typed.startsWith(`${symbol}_`)) return 0.7;
   const shorter = Math.min(typed.length, symbol.length);
+  if (Math.abs(typed.length - symbol.length) > 2) return Infinity;
   const distance = editDistance(typed, symbol);
   return (distance === 1 && shorter > 1) || (distance === 2 && shorter > 4) ? distance : Infinity;
 }
@@ -85,7 +86,8 @@ function slip(typed: string, symbol: string): number {
 export function nearestSymbol(typed: string, declared: readonly string[]): string | null {
   const short = typed.slice(0, 40);
   let best: { readonly symbol: string; readonly distance: number } | null = null;
-  for (const symbol of declared) {
+  // A theory of thousands of symbols gets suggestions from the first few hundred: a slip must not cost seconds.
+  for (const symbol of declared.slice(0, 300)) {
     const distance = slip(short, symbol.slice(0, 40));
     if (distance < (best?.distance ?? Infinity)) best = { symbol, distance };
   }

@@ -1,7 +1,7 @@
 /** Reads exact dimensions: "(d-4)/2", "3/2*d - 3", "(D - z)/2", "(d-2)/2 + 1/40". */
 import { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
-import { constantOf } from "./constant.ts";
+import { constantOf, digitsOf, MOST_DIGITS } from "./constant.ts";
 import { failed, FirstFailure, read, type NotationFailure, type Read } from "./failure.ts";
 import { canonicalName, nearestSymbol } from "./names.ts";
 import { parse } from "./parse.ts";
@@ -9,7 +9,7 @@ import type { Tree } from "./tree.ts";
 
 /**
  * `symbols` says what names stand for: a dimension symbol, its number, or an exact constant such as an anomalous
- * dimension. Fails with those of `parse`, and `empty-text`, `unknown-symbol`, `not-linear`, `division-by-zero`,
+ * dimension. Fails with those of `parse`, and `empty-text`, `unknown-symbol`, `not-linear`, `division-by-zero`, `number-too-large`,
  * `exponent-not-a-number`, `misplaced-mark`; all with `offset`.
  * @example readLinearForm("(d-4)/2", new Map([["d", LinearForm.symbol("d")]])) // 1/2*d - 2
  */
@@ -77,6 +77,7 @@ class FormReader {
   }
 
   private multiply(a: LinearForm, b: LinearForm, at: number): LinearForm {
+    if (isLong(a) || isLong(b)) return this.fail("number-too-large", at);
     const left = a.asRational();
     const right = b.asRational();
     if (left) return b.times(left);
@@ -85,6 +86,12 @@ class FormReader {
   private divide(a: LinearForm, tree: Tree): LinearForm {
     const under = this.read(tree).asRational();
     if (!under) return this.fail("not-linear", tree.at);
+    if (isLong(a)) return this.fail("number-too-large", tree.at);
     return under.sign() === 0 ? this.fail("division-by-zero", tree.at) : a.times(Rational.one.over(under));
   }
+}
+
+function isLong(form: LinearForm): boolean {
+  const parts = [form.constant, ...form.freeSymbols().map((symbol) => form.slope(symbol))];
+  return parts.some((part) => digitsOf(part) > MOST_DIGITS);
 }

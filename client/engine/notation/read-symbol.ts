@@ -12,16 +12,18 @@ export interface Symbol {
 }
 
 /**
+ * `alsoReserved` are names with a meaning in one theory only, such as z under anisotropic scaling.
  * Fails with those of `parse`, and `symbol-unreadable` or `symbol-reserved`; all with `text` or `symbol`.
  * @example readSymbol("\\Lambda_b") // symbol "Lambda_b", latex "\\Lambda_b"
  */
-export function readSymbol(text: string): Read<Symbol> {
+export function readSymbol(text: string, alsoReserved?: ReadonlyMap<string, unknown>): Read<Symbol> {
   const tree = parse(text, { quantities: false });
   if (!tree.ok) return tree;
   const name = declaredName(tree.value);
   if (!name) return failed("symbol-unreadable", { text, offset: 0 });
   const symbol = canonicalName(name);
-  const taken = reservedSymbols.has(symbol) || unitNamed(symbol) !== null;
+  const taken =
+    reservedSymbols.has(symbol) || unitNamed(symbol) !== null || alsoReserved?.has(symbol) === true;
   return taken ? failed("symbol-reserved", { symbol, offset: 0 }) : read({ symbol, latex: nameLatex(name) });
 }
 

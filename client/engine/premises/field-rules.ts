@@ -17,13 +17,11 @@ export interface FieldRule {
   readonly isotropic: { readonly dimension: number; readonly weight: number } | null;
   /** Time derivatives of the kinetic term: 1 gives D/2, 2 gives (D − z)/2; null where the kind has no such meaning. */
   readonly anisotropic: 1 | 2 | null;
-  /** Its conjugate is written with a bar. */
-  readonly barred: boolean;
 }
 
 const same = (k: number) => ({ dimension: k, weight: k });
-const boson = { statistics: "boson", barred: false } as const;
-const fermion = { statistics: "fermion", barred: true } as const;
+const boson = { statistics: "boson" } as const;
+const fermion = { statistics: "fermion" } as const;
 
 export const fieldRules: Readonly<Record<FieldKind, FieldRule>> = {
   "real scalar": { ...boson, conjugation: "self-conjugate", isotropic: same(2), anisotropic: 2 },
@@ -66,7 +64,6 @@ export const fieldRules: Readonly<Record<FieldKind, FieldRule>> = {
   },
   ghost: {
     statistics: "fermion",
-    barred: true,
     conjugation: "distinct conjugate",
     isotropic: same(2),
     anisotropic: null,

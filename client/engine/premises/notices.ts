@@ -1,11 +1,12 @@
 /** Cautions about a theory that computes all the same. */
 import type { Notice } from "../evaluation.ts";
 import type { Monomial } from "../notation/monomial.ts";
+import { uncontractedIndices } from "./lorentz.ts";
 import { forbidding } from "./read-terms.ts";
 import type { Theory } from "./theory.ts";
 
 /**
- * Notices: `term-forbidden` (with the symmetries' names), `odd-fermions`, `term-duplicate`, `roles-shared`,
+ * Notices: `term-forbidden` (with the symmetries' names), `odd-fermions`, `odd-indices`, `term-duplicate`, `roles-shared`,
  * `dimension-overridden`.
  */
 export function premisesNotices(theory: Theory): Notice[] {
@@ -30,6 +31,9 @@ function termNotices(theory: Theory): Notice[] {
         path,
         facts: { term: term.latex, count: fermionLegs(term.monomial, theory) },
       });
+    const indices = uncontractedIndices(term, theory);
+    if (indices !== null)
+      notices.push({ code: "odd-indices", path, facts: { term: term.latex, count: indices } });
     const key = JSON.stringify(signature(term.monomial));
     const earlier = seen.get(key);
     if (earlier !== undefined)

@@ -18,10 +18,13 @@ export interface FieldsReading {
 }
 
 /** Symbols alone, as scales need them: no field may share its symbol with a scale. */
-export function fieldSymbols(rows: readonly FieldRow[]): ReadonlySet<string> {
+export function fieldSymbols(
+  rows: readonly FieldRow[],
+  reserved: ReadonlyMap<string, unknown>,
+): ReadonlySet<string> {
   return new Set(
     rows.flatMap((row) => {
-      const symbol = readSymbol(row.symbol);
+      const symbol = readSymbol(row.symbol, reserved);
       return symbol.ok ? [symbol.value.symbol] : [];
     }),
   );
@@ -36,6 +39,7 @@ export function readFields(
   spacetime: Spacetime,
   symmetries: readonly Symmetry[],
   constants: ReadonlyMap<string, LinearForm>,
+  reserved: ReadonlyMap<string, unknown>,
 ): FieldsReading {
   const problems: Problem[] = [];
   const fields: Field[] = [];
@@ -43,7 +47,7 @@ export function readFields(
   const seen = new Set<string>();
   for (const row of rows) {
     if (row.symbol.trim() === "" && row.dimension.trim() === "" && row.charges.trim() === "") continue;
-    const reading = readSymbol(row.symbol);
+    const reading = readSymbol(row.symbol, reserved);
     if (!reading.ok) {
       problems.push(placed(reading.failure, "fields", row.id, "symbol"));
       continue;

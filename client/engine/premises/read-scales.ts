@@ -26,12 +26,16 @@ interface Entry extends Symbol {
  * Problems: those of the notation, `symbol-duplicate`, `scale-in-error`, `scale-has-no-number`, `scale-circular`.
  * `taken` are the symbols of fields. A scale whose value is in error stays, without a number.
  */
-export function readScales(rows: readonly ScaleRow[], taken: ReadonlySet<string>): ScalesReading {
+export function readScales(
+  rows: readonly ScaleRow[],
+  taken: ReadonlySet<string>,
+  reserved: ReadonlyMap<string, unknown>,
+): ScalesReading {
   const problems: Problem[] = [];
   const entries = new Map<string, Entry>();
   for (const row of rows) {
     if (row.symbol.trim() === "" && row.value.trim() === "") continue;
-    const symbol = readSymbol(row.symbol);
+    const symbol = readSymbol(row.symbol, reserved);
     if (!symbol.ok) problems.push(placed(symbol.failure, "scales", row.id, "symbol"));
     else if (taken.has(symbol.value.symbol) || entries.has(symbol.value.symbol))
       problems.push({

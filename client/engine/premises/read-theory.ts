@@ -23,7 +23,7 @@ export function readPremises(inputs: PremisesInputs): {
 } {
   const { spacetime, measure, symbols, problems: spacetimeProblems } = readSpacetime(inputs);
   const symmetries = readSymmetries(inputs.symmetries);
-  const scales = readScales(inputs.scales, fieldSymbols(inputs.fields));
+  const scales = readScales(inputs.scales, fieldSymbols(inputs.fields, symbols), symbols);
   const numbers = scales.declared.symbols.map((symbol) => {
     const quantity = scales.declared.lookUp(symbol);
     const usable =
@@ -35,6 +35,7 @@ export function readPremises(inputs: PremisesInputs): {
     spacetime,
     symmetries.symmetries,
     exactConstants(numbers, symbols),
+    symbols,
   );
   const vocabulary: Vocabulary = {
     geometry: spacetime.geometry,

@@ -1,5 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
+import { LinearForm } from "#engine/exact/linear-form.ts";
 import { readLinearForm } from "#engine/notation/read-linear-form.ts";
 import { readQuantity } from "#engine/notation/read-quantity.ts";
 import { readSymbol } from "#engine/notation/read-symbol.ts";
@@ -68,6 +69,23 @@ describe("what is no term is refused with its place", () => {
     ["(".repeat(60) + "phi" + ")".repeat(60), "nested-too-deep at 40"],
     ["x".repeat(1001), "text-too-long at 1000"],
   ])("%s", (text, expected) => expect(readAs(text)).toBe(expected));
+});
+
+describe("exact numbers stay within bounds", () => {
+  it.each(["300! ".repeat(100), "d " + "300! ".repeat(100), "(9!)^500", "9".repeat(900) + "^2"])(
+    "%.20s…",
+    (text) => {
+      const began = performance.now();
+      const readings = [
+        readTerm(`${text} phi`, vocabulary),
+        readLinearForm(text, new Map([["d", LinearForm.symbol("d")]])),
+      ];
+      expect(readings.map((reading) => (reading.ok ? "read" : reading.failure.code))).toContain(
+        "number-too-large",
+      );
+      expect(performance.now() - began).toBeLessThan(1000);
+    },
+  );
 });
 
 describe("symbols", () => {

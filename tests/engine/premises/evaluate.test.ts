@@ -51,6 +51,27 @@ describe("evaluating premises", () => {
     ]);
     expect(evaluation.value?.terms[3]?.forbiddenBy).toEqual(["parity"]);
   });
+  it.each([
+    ["phi^2 d phi", "4", 1],
+    ["A phi^2", "4", 1],
+    ["A phi d phi", "4", null],
+    ["F A d phi", "4", null],
+    ["A d A", "4", 3],
+    // The Chern–Simons term: ε takes three indices in d = 3, and only there.
+    ["A d A", "3", null],
+    ["A d A", "5", 3],
+    ["phi^2 d phi", "d", null],
+    ["psibar A psi", "4", null],
+  ])("%s in d = %s leaves indices: %s", (term, d, count) => {
+    const fields = {
+      phi: "real scalar",
+      A: "gauge potential",
+      F: "field strength",
+      psi: "Dirac spinor",
+    } as const;
+    const { notices } = evaluatePremises(premisesOf({ d, fields, terms: [term] }));
+    expect(notices.find(({ code }) => code === "odd-indices")?.facts["count"] ?? null).toBe(count);
+  });
   it("lets scales, dimensions and Q be pinned", () => {
     const scalars = new Map(evaluation.scalars.map(({ id, value }) => [id, value]));
     expect(scalars.get("k3/value")).toEqual({ type: "number", value: 0.109375, sigma: 0.013671875 });

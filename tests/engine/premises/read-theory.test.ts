@@ -229,6 +229,15 @@ describe("scales", () => {
       6400,
     ]);
   });
+  it("may be called z only where z is no exponent", () => {
+    expect(problemsOf({ scales: { z: "2" } })).toEqual([]);
+    expect(problemsOf({ D: "3", z: "2", scales: { z: "2" } })).toEqual([
+      "symbol-reserved at scales/k1/symbol",
+    ]);
+    expect(problemsOf({ D: "3", z: "z", fields: { z: "real scalar" } })).toEqual([
+      "symbol-reserved at fields/f1/symbol",
+    ]);
+  });
   it("without a value have no number, and that is no problem", () => {
     const theory = theoryFrom({ scales: { Lambda: ["", "heavy"] } });
     expect([theory.scales[0]?.value, theory.problems]).toEqual([null, []]);
@@ -241,6 +250,7 @@ describe("scales", () => {
     [{ a: "1/0", b: "2 a" }, ["division-by-zero at scales/k1/value", "scale-in-error at scales/k2/value"]],
     [{ a: "", b: "2 a" }, ["scale-has-no-number at scales/k2/value"]],
     [{ i: "1" }, ["symbol-reserved at scales/k1/symbol"]],
+    [{ d: "1" }, ["symbol-reserved at scales/k1/symbol"]],
     [{ GeV: "1" }, ["symbol-reserved at scales/k1/symbol"]],
   ])("%o", (scales, problems) => expect(problemsOf({ scales })).toEqual(problems));
 });
