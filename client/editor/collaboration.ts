@@ -75,7 +75,6 @@ function carets({ awareness }: NotebookSession): AnyExtension {
     priority: 999,
     addProseMirrorPlugins: () => [
       // The plugin's parameters are untyped; they are narrowed in the functions it is given.
-      // eslint-disable-next-line @typescript-eslint/no-unsafe-type-assertion -- typed any by y-tiptap
       yCursorPlugin(awareness, {
         awarenessStateFilter: (own: number, other: number, state: unknown) =>
           own !== other && userOf(state) !== null && hasReadableCursor(state),

@@ -60,6 +60,9 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
   let current: HistoryState = { canUndo: false, canRedo: false, message: null };
   let lastOrigin: unknown = null;
 
+  // What a reader could see: the whole document with its attributes, as XML.
+  const shown = () => fragment.toJSON();
+
   function publish(text: string | null) {
     const message = text === null ? null : { text, count: (current.message?.count ?? 0) + 1 };
     current = { canUndo: manager.canUndo(), canRedo: manager.canRedo(), message };
@@ -68,7 +71,8 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
 
   // Typing is gathered into steps by time; a field's write is a step of its own on both sides.
   function separateFieldWrites(transaction: Y.Transaction) {
-    const { origin } = transaction;
+    // Yjs types an origin as any: it is whatever the writer passed.
+    const origin: unknown = transaction.origin;
     if (origin !== FIELD_ORIGIN && origin !== ySyncPluginKey) return;
     if (origin === FIELD_ORIGIN || lastOrigin === FIELD_ORIGIN) manager.stopCapturing();
     lastOrigin = origin;
@@ -79,7 +83,7 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
     const newest = manager[stackName].at(-1);
     if (!newest) return "nothing";
     const older = manager[stackName].slice(0, -1);
-    const before = fragment.toString();
+    const before = shown();
     manager[stackName] = [newest];
     let applied: boolean;
     try {
@@ -88,7 +92,7 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
       manager[stackName] = older;
     }
     // Removing the empty husk of a text that a colleague has deleted counts for Yjs, yet nobody can see it.
-    const effective = applied && fragment.toString() !== before;
+    const effective = applied && shown() !== before;
     if (applied && !effective) manager[direction === "undo" ? "redoStack" : "undoStack"].pop();
     manager.stopCapturing();
     publish(effective ? null : overwrittenWords[direction]);

@@ -29,7 +29,15 @@ function spread(text: string): number {
 /** Two letters for the header: "Wren Vale" gives "WV", "Otto" gives "Ot". */
 export function initials(name: string): string {
   const words = name.trim().split(/\s+/);
-  const [first = "", last = ""] = [words[0], words.length > 1 ? words.at(-1) : ""];
-  const letters = last === "" ? [...first].slice(0, 2) : [[...first][0] ?? "", [...last][0] ?? ""];
-  return letters.join("");
+  const [first = ""] = words;
+  const last = words.length > 1 ? (words.at(-1) ?? "") : "";
+  return last === "" ? letters(first, 2) : letters(first, 1) + letters(last, 1);
+}
+
+/** The first letters as a reader counts them, accents included. */
+function letters(word: string, count: number): string {
+  const parts = new Intl.Segmenter(undefined, { granularity: "grapheme" }).segment(word);
+  return Array.from(parts, ({ segment }) => segment)
+    .slice(0, count)
+    .join("");
 }

@@ -1,4 +1,5 @@
 /** KaTeX, fetched once when the first formula is to be drawn. */
+import type katexModule from "katex";
 import type { ParseError } from "katex";
 
 export interface Katex {
@@ -37,7 +38,7 @@ export function katexNow(): Katex | null {
 }
 
 function drawWith(
-  katex: typeof import("katex").default,
+  katex: typeof katexModule,
   latex: string,
   element: HTMLElement,
   display: boolean,

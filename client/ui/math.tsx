@@ -1,5 +1,5 @@
 /** Mathematics in the page: drawn by KaTeX when it has arrived, shown as its source until then. */
-import { Fragment, useLayoutEffect, useRef, useState } from "react";
+import { Fragment, useLayoutEffect, useRef } from "react";
 import { katexNow, loadKatex, type LatexFault } from "./katex-loader.ts";
 import { latexFaultWords } from "./latex-fault-words.ts";
 import "./math.css";

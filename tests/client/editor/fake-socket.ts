@@ -41,8 +41,8 @@ export function serverEnd(): ServerEnd {
     onerror: (() => void) | null = null;
     constructor(address: string) {
       addresses.push(address);
-      current = this;
       content = 0;
+      begin(this);
     }
     send(frame: Uint8Array) {
       if (contentOf(frame) !== null) content += 1;
@@ -57,6 +57,9 @@ export function serverEnd(): ServerEnd {
       this.readyState = 3;
       if (current === this) current = null;
     }
+  }
+  function begin(socket: FakeSocket) {
+    current = socket;
   }
   function deliver(bytes: Uint8Array) {
     current?.onmessage?.({ data: bytes.slice().buffer });
