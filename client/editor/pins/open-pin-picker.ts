@@ -17,6 +17,8 @@ export const PIN_SHORTCUT = "Mod-Shift-.";
 
 export const PinShortcut: AnyExtension = Extension.create({
   name: "pinShortcut",
+  // Before the index's own shortcut, which would take the key with Shift for its own.
+  priority: 1050,
   addKeyboardShortcuts() {
     return {
       [PIN_SHORTCUT]: () => {

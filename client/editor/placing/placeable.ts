@@ -3,7 +3,6 @@ import type { Editor } from "@tiptap/core";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { newId } from "../new-id.ts";
 import { openFormulaAt } from "../mathematics/mathematics.ts";
-import { openPinPicker } from "../pins/open-pin-picker.ts";
 import { placeBlock, placeNode } from "./place.ts";
 
 export interface Placeable {
@@ -58,14 +57,6 @@ export const placeables: readonly Placeable[] = [
     place: (_editor, _gap, open) => {
       open.pinPicker();
     },
-  },
-  {
-    id: "pin",
-    group: "Numbers",
-    title: "Pin",
-    purpose:
-      "A number of a result, put into the sentence where the caret last stood, and watched from then on.",
-    place: openPinPicker,
   },
   {
     id: "displayMath",
