@@ -17,7 +17,7 @@ export interface Reading {
 /** The code of a failure and its facts, to which the reader adds the place. */
 export type Refusal = NotationFailure;
 
-export const LARGEST_FIELD_POWER = 1000;
+const LARGEST_FIELD_POWER = 1000;
 const LARGEST_POWER = Rational.of(1000);
 const half = Rational.of(1, 2);
 

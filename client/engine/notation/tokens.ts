@@ -30,12 +30,11 @@ export type TokenBody =
   | { readonly type: "dagger" }
   | { readonly type: "sign"; readonly sign: "+" | "-" | "±" | "*" | "/" | "." | "^" | "!" | "|" | "," }
   | { readonly type: "end" };
-export type TokenType = TokenBody["type"];
 /** `at` and `to` are offsets into the typed text; the gap between tokens tells "phi* chi" from "phi*chi". */
 export type Token = TokenBody & { readonly at: number; readonly to: number };
 
 /** Longest text that is read at all. */
-export const LONGEST_TEXT = 1000;
+const LONGEST_TEXT = 1000;
 
 const accents: Readonly<Record<string, Accent>> = {
   bar: "bar",

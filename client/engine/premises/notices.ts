@@ -43,7 +43,7 @@ function termNotices(theory: Theory): Notice[] {
   return notices;
 }
 
-export function fermionLegs(monomial: Monomial, theory: Theory): number {
+function fermionLegs(monomial: Monomial, theory: Theory): number {
   return monomial.fields
     .filter(({ symbol }) => theory.fields.find((field) => field.symbol === symbol)?.statistics === "fermion")
     .reduce((sum, { count }) => sum + count, 0);

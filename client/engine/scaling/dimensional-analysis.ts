@@ -53,7 +53,7 @@ export function legsOf(term: Term): number {
  * Power of 4π of a coupling: N − 2 of the first marginal interaction that it multiplies once; null when there is none,
  * and then the symbol is a coefficient that the rule expects to be of order one.
  */
-export function couplingPower(symbol: string, theory: Theory): number | null {
+function couplingPower(symbol: string, theory: Theory): number | null {
   const home = theory.terms.find(
     (term) =>
       !term.kinetic &&
