@@ -13,30 +13,36 @@ export const Pasting: AnyExtension = Extension.create({
   name: "pasting",
   addProseMirrorPlugins() {
     const { editor } = this;
-    // A drag within the document moves the blocks: they stay who they are.
-    let dragging = false;
+    // A drop that moves something within the document leaves it who it is; one that copies does not.
+    let moves = false;
     return [
       new Plugin({
         props: {
           handleDOMEvents: {
-            dragstart: () => {
-              dragging = true;
-              return false;
-            },
-            dragend: () => {
-              dragging = false;
+            drop: (view, event) => {
+              moves = view.dragging !== null && !copies(event);
+              // ProseMirror takes the drop within this event.
+              queueMicrotask(() => {
+                moves = false;
+              });
               return false;
             },
           },
+          dragCopies: copies,
           transformPasted: (slice) => {
             const read = withMathematics(withoutUnsafeLinks(slice), editor.schema);
-            return dragging && editor.view.dragging?.move === true ? read : withFreshIds(read);
+            return moves ? read : withFreshIds(read);
           },
         },
       }),
     ];
   },
 });
+
+/** The system's own key for copying instead of moving. */
+function copies(event: DragEvent): boolean {
+  return /Mac|iPhone|iPad/.test(navigator.userAgent) ? event.altKey : event.ctrlKey;
+}
 
 /**
  * Blocks, rows, pins and equations of the slice under new ids. What points at a block within the slice points at its

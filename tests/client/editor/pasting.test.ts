@@ -118,3 +118,30 @@ describe("pasting HTML into an editor", () => {
     copied.editor.destroy();
   });
 });
+
+describe("dropping a block within its notebook", () => {
+  /** What is dropped after the drag is over goes through the same transformation as a paste. */
+  function dropped(event: { readonly ctrlKey: boolean }): string {
+    const { editor } = onePerson();
+    const { view } = editor;
+    const block = slice(premises("p", row("r1")));
+    view.dragging = { slice: block, move: true };
+    view.someProp("handleDOMEvents", (handlers) => {
+      // Only these members of a DragEvent are looked at.
+      handlers.drop?.(view, event as unknown as DragEvent);
+    });
+    let result = block;
+    view.someProp("transformPasted", (transform) => {
+      result = transform(result, view, false);
+    });
+    editor.destroy();
+    return String(result.content.firstChild?.attrs["blockId"]);
+  }
+
+  it("moves it under its id", () => {
+    expect(dropped({ ctrlKey: false })).toBe("p");
+  });
+  it("copies it under a new one when the copy key is held", () => {
+    expect(dropped({ ctrlKey: true })).not.toBe("p");
+  });
+});
