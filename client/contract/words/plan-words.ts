@@ -22,6 +22,8 @@ export const planWords: Words = {
     `The probe scale is in ${said(probe)} and the heavy scale in ${said(heavy)}: their ratio is no pure number.`,
   "plan-q-not-below-one": ({ Q }) =>
     `p/Λ is ${said(Q)}, not below 1: higher orders are not smaller than lower ones, and no order can be chosen.`,
+  "plan-q-too-small": ({ Q, least }) =>
+    `p/Λ is ${said(Q)}, below ${said(least)}: nothing but the leading order could ever matter, and no plan is made.`,
   "plan-dimension-symbolic": () =>
     "The dimension is a symbol, so orders are no numbers. Choose a number in the premises.",
   "plan-too-large": ({ most }) =>

@@ -19,6 +19,8 @@ import { explainPlan } from "./working.ts";
 
 /** Past this many products counting would take seconds: a lower cap is asked for instead. */
 const MOST_ENTRIES = 20_000;
+/** Below this 1/Q, the end of every curve, leaves the range of a double. */
+const SMALLEST_Q = 1e-300;
 
 /**
  * The order to stop at for a target accuracy, in one expansion parameter Q = p/Λ. Problems beside a value: a relevant
@@ -48,6 +50,8 @@ export function evaluateOrderPlan(
   if (!read) problems.push(problem("plan-dimension-symbolic"));
   if (scales && scales.Q >= 1)
     problems.push(problem("plan-q-not-below-one", ["probe"], { Q: Number(scales.Q.toPrecision(4)) }));
+  if (scales && scales.Q < SMALLEST_Q)
+    problems.push(problem("plan-q-too-small", ["probe"], { Q: scales.Q, least: SMALLEST_Q }));
   if (!scales || !read || problems.length > 0) return refuse(problems);
 
   const expansion = expand(inputs, settings, scales, read.terms, theory);
@@ -69,7 +73,7 @@ export function evaluateOrderPlan(
     problems: [...read.problems, ...unreached],
     notices: [...incompletePremises(theory), ...planCautions(expansion, order, read.terms, scales, theory)],
     scalars: planScalars(value),
-    working: explainPlan(value, read.terms),
+    working: explainPlan(value, read.terms, theory),
   };
 }
 

@@ -20,6 +20,8 @@ export interface Power {
   readonly size: number;
   readonly probe: number;
   readonly heavy: number;
+  /** size without its power of Q = p/Λ: at tiny Q the power leaves the range of a double, at larger p it need not. */
+  readonly prefactor: number;
   /** Σ count · size over the entries, by the row whose size was given by hand: the slope in the logarithm of that size. */
   readonly byHand: ReadonlyMap<string, number>;
 }
@@ -28,6 +30,7 @@ export function sumPowers(entries: readonly Entry[], Q: number): Power[] {
   const sums = new Map<string, Power>();
   for (const entry of entries) {
     const size = sizeOfEntry(entry, Q);
+    const prefactor = sizeOfEntry(entry, 1);
     let [probe, heavy] = [0, 0];
     const byHand = new Map<string, number>();
     for (const { term, count } of entry.insertions) {
@@ -39,11 +42,24 @@ export function sumPowers(entries: readonly Entry[], Q: number): Power[] {
     const key = `${entry.order.toString()}|${probe}|${heavy}`;
     const had = sums.get(key);
     for (const [rowId, slope] of had?.byHand ?? []) byHand.set(rowId, (byHand.get(rowId) ?? 0) + slope);
-    sums.set(key, { order: entry.order, size: size + (had?.size ?? 0), probe, heavy, byHand });
+    sums.set(key, {
+      order: entry.order,
+      size: size + (had?.size ?? 0),
+      prefactor: prefactor + (had?.prefactor ?? 0),
+      probe,
+      heavy,
+      byHand,
+    });
   }
   return [...sums.values()];
 }
 
-export function valueAt(powers: readonly Power[], { probe, heavy }: Point): number {
-  return powers.reduce((sum, power) => sum + power.size * probe ** power.probe * heavy ** power.heavy, 0);
+/** The sum at a point; `Q` is the expansion parameter at the working point. */
+export function valueAt(powers: readonly Power[], { probe, heavy }: Point, Q: number): number {
+  const moved = (Q * probe) / heavy;
+  // Of `power.probe` the part that Λ goes with comes from sizes by dimension, the rest from sizes given by hand.
+  return powers.reduce(
+    (sum, power) => sum + power.prefactor * moved ** -power.heavy * probe ** (power.probe + power.heavy),
+    0,
+  );
 }

@@ -52,12 +52,12 @@ function unlistedAt(expansion: Expansion, point: Point): number {
   const tail = tailAt(expansion, point);
   if (expansion.observable === "amplitude" || tail === Infinity) return tail;
   const leading = expansion.observable === "rate with interference" ? 1 : 0;
-  return 2 * tail * (leading + valueAt(expansion.amplitude, point)) + tail ** 2;
+  return 2 * tail * (leading + valueAt(expansion.amplitude, point, expansion.Q)) + tail ** 2;
 }
 
 /** Sizes are added, not combined in quadrature: signs are unknown and a bound is wanted. */
 export function leftOutAt(expansion: Expansion, order: Rational, point: Point): LeftOut {
-  const listed = valueAt(beyond(expansion, order), point);
+  const listed = valueAt(beyond(expansion, order), point, expansion.Q);
   const unlisted = unlistedAt(expansion, point);
   return { listed, unlisted, used: expansion.sumUsed === "natural tail" ? listed + unlisted : listed };
 }
@@ -91,7 +91,7 @@ export function slopesOfLeftOut(expansion: Expansion, order: Rational): Slopes {
   const tailSlope = tail * (expansion.highestListed.toFloat() + step + (step * Qs) / (1 - Qs));
   const isAmplitude = expansion.observable === "amplitude";
   const leading = expansion.observable === "rate with interference" ? 1 : 0;
-  const byTail = isAmplitude ? 1 : 2 * (leading + valueAt(expansion.amplitude, workingPoint)) + 2 * tail;
+  const byTail = isAmplitude ? 1 : 2 * (leading + valueAt(expansion.amplitude, workingPoint, expansion.Q)) + 2 * tail;
   const both = isAmplitude ? listed : slopes(expansion.amplitude, 2 * tail, listed);
   return { ...both, probe: both.probe + byTail * tailSlope, heavy: both.heavy - byTail * tailSlope };
 }

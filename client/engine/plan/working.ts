@@ -1,6 +1,7 @@
 /** The derivation of an order plan: parameter, sizes, sums, the cut, and what is assumed. */
 import type { WorkingStep } from "../evaluation.ts";
 import { shown } from "../exact/shown.ts";
+import type { Theory } from "../premises/theory.ts";
 import type { PlanTerm } from "./terms.ts";
 import type { OrderPlanValue } from "./value.ts";
 
@@ -15,10 +16,14 @@ export function floatLatex(value: number): string {
     : `${mantissa}\\times 10^{${power}}`;
 }
 
-export function explainPlan(value: OrderPlanValue, terms: readonly PlanTerm[]): WorkingStep[] {
+export function explainPlan(
+  value: OrderPlanValue,
+  terms: readonly PlanTerm[],
+  { spacetime }: Pick<Theory, "spacetime">,
+): WorkingStep[] {
   return [
     ...parameterSteps(value),
-    ...sizeSteps(value, terms),
+    ...sizeSteps(value, terms, spacetime.geometry === "isotropic" ? "d" : "D - z"),
     ...sumSteps(value),
     ...loopSteps(value),
     { step: "heading", text: "Assumptions" },
@@ -51,6 +56,7 @@ function parameterSteps({ parameters, probe, heavy }: OrderPlanValue): WorkingSt
 function sizeSteps(
   { terms: sized, orders, observable }: OrderPlanValue,
   terms: readonly PlanTerm[],
+  measure: string,
 ): WorkingStep[] {
   const lines = terms.map((term): WorkingStep => {
     const size = sized.find(({ rowId }) => rowId === term.rowId)?.size ?? 0;
@@ -58,7 +64,7 @@ function sizeSteps(
     const by = term.assigned ? "\\text{given by hand}" : `${natural}${powerOfQ(shown(term.excess))}`;
     return {
       step: "formula",
-      latex: `${term.latex}:\\quad \\Delta - d = ${term.excess.toLatex()},\\quad ${by} = ${floatLatex(size)}`,
+      latex: `${term.latex}:\\quad \\Delta - ${measure} = ${term.excess.toLatex()},\\quad ${by} = ${floatLatex(size)}`,
     };
   });
   const rate =

@@ -439,3 +439,30 @@ describe("what can be pinned", () => {
     ).toBe(true);
   });
 });
+
+describe("scales that lie very far apart", () => {
+  const far = (probe: number) => scalar(listed, [gev("p", "probe", probe), gev("Lambda", "heavy", 1e19)]);
+  it("finds the largest probe where powers of Q at the working point leave the range of a double", () => {
+    // Own derivation: the largest probe is a property of the terms and of Λ; where p stands now does not enter.
+    const near = planOf(far(1e18), { target: "1 %" });
+    const tiny = planOf(far(1e-60), { target: "1 %" });
+    expect((tiny.orders[0]?.largestProbe ?? 0) / (near.orders[0]?.largestProbe ?? 1)).toBeCloseTo(1, 9);
+    expect(tiny.orders[0]?.largestProbeIsHeavy).toBe(false);
+  });
+  it("refuses in words a ratio whose inverse is no double, instead of searching forever", () => {
+    expect(codesOf(scalar(listed, [gev("p", "probe", 1e-14), gev("Lambda", "heavy", 1e300)]))).toEqual([
+      "plan-q-too-small",
+    ]);
+  });
+});
+
+it("subtracts the measure's own symbols in the working of an anisotropic theory", () => {
+  const theory = theoryOf({
+    D: 3,
+    z: 2,
+    fields: { psi: "Schrödinger field" },
+    terms: { c: "psi~2 psi2" },
+    scales: [gev("p", "probe", 300), gev("Lambda", "heavy", 3000)],
+  });
+  expect(JSON.stringify(askPlan(theory).working)).toContain("Delta - D - z = 1");
+});
