@@ -91,7 +91,9 @@ export function slopesOfLeftOut(expansion: Expansion, order: Rational): Slopes {
   const tailSlope = tail * (expansion.highestListed.toFloat() + step + (step * Qs) / (1 - Qs));
   const isAmplitude = expansion.observable === "amplitude";
   const leading = expansion.observable === "rate with interference" ? 1 : 0;
-  const byTail = isAmplitude ? 1 : 2 * (leading + valueAt(expansion.amplitude, workingPoint, expansion.Q)) + 2 * tail;
+  const byTail = isAmplitude
+    ? 1
+    : 2 * (leading + valueAt(expansion.amplitude, workingPoint, expansion.Q)) + 2 * tail;
   const both = isAmplitude ? listed : slopes(expansion.amplitude, 2 * tail, listed);
   return { ...both, probe: both.probe + byTail * tailSlope, heavy: both.heavy - byTail * tailSlope };
 }
