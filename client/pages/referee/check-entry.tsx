@@ -4,10 +4,11 @@ import { Working } from "../../blocks/parts/working.tsx";
 import { useBlockResult, useResultsStore } from "../../editor/evaluation/use-results.ts";
 import { useNotebook } from "../../editor/notebook-context.ts";
 import { movedWords } from "../../editor/pins/pin-view-state.ts";
+import { Button } from "../../ui/button.tsx";
 import { Formula, TextWithMath } from "../../ui/math.tsx";
 import type { CheckState } from "./check-state.ts";
 import { showBlock, showSentence } from "./go-to.ts";
-import { inputsInShort } from "./inputs-in-short.ts";
+import { inputsInShort, premisesInShort } from "./inputs-in-short.ts";
 import type { PlacedPin } from "./placed-pins.ts";
 import { RecomputeHere } from "./recompute-here.tsx";
 import type { ExcerptPart } from "./sentence-excerpt.ts";
@@ -61,30 +62,30 @@ export function CheckEntry({ placed, check, stored }: Props) {
               <dt>stands on</dt>
               <dd>
                 {premises.title !== "" && <i className="check-name">{premises.title}</i>}
-                <Phrases phrases={inputsInShort(premises, null)} />
+                <Phrases phrases={premisesInShort(premises)} />
               </dd>
             </>
           )}
         </dl>
         {evaluation && <Working steps={evaluation.working} />}
         <div className="check-tools">
-          <button
-            type="button"
-            className="block-link"
+          <Button
+            look="quiet"
+            className="text-small"
             aria-label={`to the sentence of ${pin.text}`}
             onClick={() => showSentence(editor, placed.position)}
           >
             to the sentence
-          </button>
+          </Button>
           {block && (
-            <button
-              type="button"
-              className="block-link"
+            <Button
+              look="quiet"
+              className="text-small"
               aria-label={`to the block of ${pin.text}`}
               onClick={() => showBlock(editor, pin.blockId)}
             >
               to its block
-            </button>
+            </Button>
           )}
           {block && <RecomputeHere pin={pin} stored={stored} />}
         </div>

@@ -1,6 +1,7 @@
 /** The inputs of a block in a few phrases: what is filled in, and long tables by their first rows. */
 import { kindDescriptions } from "#engine/descriptions.ts";
 import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
+import { premisesLine } from "#engine/notebook/summary.ts";
 import type { Columns } from "#engine/shape.ts";
 
 const MOST_ROWS = 4;
@@ -16,6 +17,20 @@ const names: Readonly<Record<string, string>> = {
   maxOrder: "order at most",
   cap: "orders looked at",
 };
+
+/** What comes before the value of a column, where the value alone would be a riddle. */
+const signs: Readonly<Record<string, string>> = {
+  count: "× ",
+  natural: "ĝ = ",
+  assigned: "size ",
+  dimension: "dimension ",
+};
+
+/** The premises that a block stands on: their line, and the scales that its numbers are made of. */
+export function premisesInShort(premises: BlockInstance): readonly string[] {
+  const scales = inputsInShort(premises, null).filter((phrase) => phrase.startsWith("scales:"));
+  return [premisesLine([premises]), ...scales];
+}
 
 /** @param premises what the block stands on, whose terms some tables name by row */
 export function inputsInShort(block: BlockInstance, premises: BlockInstance | null): readonly string[] {
@@ -53,9 +68,9 @@ function rowInShort(row: BlockRow, columns: Columns, premises: BlockInstance | n
     .flatMap(([column, spec]) => {
       const value = (row[column] ?? "").trim();
       if (!spec.keyed || value === "" || (spec.choices && value === spec.initial)) return [];
-      return [column === "term" ? (termOf(premises, value) ?? value) : value];
+      return [(signs[column] ?? "") + (column === "term" ? (termOf(premises, value) ?? value) : value)];
     })
-    .join(" ");
+    .join("order" in columns ? ": " : " ");
 }
 
 /** Graphs name a term of the premises by its row. */
