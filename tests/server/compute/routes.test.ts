@@ -1,0 +1,83 @@
+/** GET /api/notebooks/:id/results and POST /api/evaluate over HTTP. */
+import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import { EVALUATE_FORMAT, RESULTS_FORMAT } from "../../../client/contract/evaluate-file.ts";
+import { createWorld, type World } from "../http-world.ts";
+
+let world: World;
+beforeAll(async () => {
+  world = await createWorld();
+});
+afterAll(() => world.stop());
+
+const file = (inputs: unknown = { d: 4 }) => ({
+  format: EVALUATE_FORMAT,
+  blocks: [{ id: "p", kind: "premises", inputs }],
+});
+
+describe("POST /api/evaluate", () => {
+  test("computes for someone signed out", async () => {
+    const answer = await world.stranger().post("/api/evaluate", file());
+    expect(answer.status).toBe(200);
+    expect(answer.body).toMatchObject({
+      format: RESULTS_FORMAT,
+      results: [{ id: "p", kind: "premises", evaluation: { problems: [] } }],
+    });
+  });
+
+  test("asks no token of someone signed in, for it changes nothing", async () => {
+    const browser = await world.signIn("wren-lantern");
+    expect(browser.id).not.toBe("");
+    expect((await browser.post("/api/evaluate", file(), { withoutToken: true })).status).toBe(200);
+  });
+
+  test.each([
+    ["what is no file", { blocks: [] }, 422, /“?format/],
+    ["inputs that the kind does not know", file({ nonsense: 1 }), 422, /blocks\[0\]\.inputs.*nonsense/],
+    [
+      "more blocks than allowed",
+      { format: EVALUATE_FORMAT, blocks: Array(501).fill(file().blocks[0]) },
+      422,
+      /500/,
+    ],
+    ["more bytes than allowed", file({ note: "x".repeat(600_000) }), 413, /larger/],
+  ])("refuses %s", async (_what, body, status, words) => {
+    const answer = await world.stranger().post("/api/evaluate", body);
+    expect([answer.status, answer.headers.get("content-type")]).toEqual([
+      status,
+      expect.stringContaining("application/problem+json"),
+    ]);
+    expect(answer.body.detail).toMatch(words);
+  });
+
+  test("refuses what is not JSON", async () => {
+    const answer = await world.stranger().post("/api/evaluate", undefined, { rawBody: "{" });
+    expect(answer.status).toBe(400);
+  });
+
+  test("says wait to someone who asks too often", async () => {
+    const slow = await createWorld({ environment: { RATE_LIMIT_FACTOR: "0.0125" } }); // 3 a minute
+    try {
+      const statuses: number[] = [];
+      for (let count = 0; count < 5; count += 1)
+        statuses.push((await slow.stranger().post("/api/evaluate", file())).status);
+      expect(statuses).toEqual([200, 200, 200, 429, 429]);
+    } finally {
+      await slow.stop();
+    }
+  });
+});
+
+describe("GET /api/notebooks/:id/results", () => {
+  test("gives the results of a template at once, and of a blank notebook none", async () => {
+    const browser = await world.signIn("wren-lantern");
+    const made = await browser.post("/api/notebooks", { title: "Lantern", template: "lantern" });
+    const { body } = await browser.get(`/api/notebooks/${made.body.id}/results`);
+    expect(body.results.length).toBeGreaterThan(3);
+    for (const result of body.results) {
+      expect(result).toMatchObject({ changedBy: null, evaluation: { problems: [] } });
+      expect(result.key).toMatch(/^[0-9a-f]{64}$/);
+    }
+    const blank = await browser.post("/api/notebooks", { title: "Blank" });
+    expect((await browser.get(`/api/notebooks/${blank.body.id}/results`)).body).toEqual({ results: [] });
+  });
+});
