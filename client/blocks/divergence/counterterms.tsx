@@ -29,7 +29,7 @@ export function Counterterms({
 }
 
 function Presence({
-  counterterm: { presentAs, allowed, analytic, gauge, kinetic },
+  counterterm: { presentAs, allowed, analytic, gauge, kinetic, derivatives, timeDerivatives },
 }: {
   readonly counterterm: Counterterm;
 }) {
@@ -37,7 +37,7 @@ function Presence({
   if (gauge === "excluded") return <>excluded by gauge invariance</>;
   if (!analytic) return <>no pole: a power of the cutoff only</>;
   if (presentAs !== null) return <span className="premises-allowed">present</span>;
-  if (kinetic) return <>the field’s own kinetic term</>;
+  if (kinetic) return <>the field’s own {derivatives + timeDerivatives > 0 ? "kinetic" : "mass"} term</>;
   return (
     <strong className="divergence-missing">
       missing{gauge === "restricted" ? ", in gauge-invariant form" : ""}

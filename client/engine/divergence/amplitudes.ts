@@ -14,7 +14,7 @@ import {
   type HalfEdges,
 } from "./half-edges.ts";
 import { describeLegs } from "./legs.ts";
-import { vanishesInVacuum } from "./retarded.ts";
+import { isRetarded, vanishesInVacuum } from "./retarded.ts";
 import { forbiddingSymmetry, isFermionOdd } from "./selection.ts";
 import type { Amplitude, AmplitudeAtOrder, AmplitudeStatus } from "./value.ts";
 import { numberOf, type SetIndex, type VertexSet } from "./vertex-sets.ts";
@@ -79,7 +79,9 @@ function bestGraphs(legs: HalfEdges, sets: SetIndex, caps: Caps, theory: Theory)
   let anyRetarded = false;
   // The vacuum has one graph without vertices: the free loop.
   const lone = totalOf(legs) === 0 ? sets.find(1, legs).find(({ vertices }) => vertices.length === 0) : null;
-  if (lone) {
+  // A line that only runs forward in time does not close on itself: some other field must.
+  if (lone && theory.fields.every(isRetarded)) anyRetarded = true;
+  else if (lone) {
     anyGraph = true;
     best.set("0", { order: Rational.zero, omega: bound, loops: 1, set: lone });
   }

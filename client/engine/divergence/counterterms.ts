@@ -88,6 +88,11 @@ function isAnalytic(
   return oddMasses || rest.over(Rational.of(2)).isInteger();
 }
 
+/** A massive vector that meets only conserved currents keeps the Ward identities of a photon. */
+function hasWardIdentity({ kind }: Theory["fields"][number]): boolean {
+  return kind === "gauge potential" || kind === "massive vector, conserved current";
+}
+
 /** Whether gauge potentials meet themselves in some term: then the theory is not abelian. */
 function gaugeSelfInteracts(theory: Theory): boolean {
   return theory.terms.some((term) => {
@@ -97,11 +102,11 @@ function gaugeSelfInteracts(theory: Theory): boolean {
 }
 
 /**
- * "excluded": only legs of gauge potentials, with too few derivatives for a field strength on each leg (abelian) or for
- * two field strengths in all. "restricted": gauge or ghost legs among others.
+ * "excluded": only legs of gauge potentials, or of massive vectors with a conserved current, with too few derivatives for
+ * a field strength on each leg (abelian) or for two field strengths in all. "restricted": such or ghost legs among others.
  */
 function gaugeStatus(legs: HalfEdges, derivatives: number, theory: Theory): Counterterm["gauge"] {
-  const potentials = legsThat(legs, theory, ({ kind }) => kind === "gauge potential");
+  const potentials = legsThat(legs, theory, hasWardIdentity);
   const ghosts = legsThat(legs, theory, ({ kind }) => kind === "ghost");
   if (potentials + ghosts === 0) return "none";
   if (potentials < totalOf(legs)) return "restricted";
@@ -129,11 +134,19 @@ function writtenAs(legs: HalfEdges, { space, time }: Derivatives, theory: Theory
   return squared?.rowId ?? null;
 }
 
-/** Two legs of one field and a coefficient of dimension 0: the kinetic term that the field's kind supposes. */
-function isKinetic(legs: HalfEdges, coefficient: LinearForm, theory: Theory): boolean {
+const massive: readonly Theory["fields"][number]["kind"][] = [
+  "massive vector",
+  "massive vector, conserved current",
+  "massive spin 3/2",
+];
+
+/** Two legs of one field and a coefficient of dimension 0, or the mass of a massive kind: what the kind supposes. */
+function isKinetic(legs: HalfEdges, coefficient: LinearForm, derivatives: number, theory: Theory): boolean {
   const alone = theory.fields.findIndex((_, f) => countOf(legs, f) === 2);
+  const kind = theory.fields[alone]?.kind;
   const neutral = netOf(legs, theory).every((net) => net === 0);
-  return totalOf(legs) === 2 && alone >= 0 && neutral && coefficient.equals(LinearForm.zero);
+  const isMass = derivatives === 0 && kind !== undefined && massive.includes(kind);
+  return totalOf(legs) === 2 && alone >= 0 && neutral && (isMass || coefficient.equals(LinearForm.zero));
 }
 
 /** @param omega a number; for ω < 0 there are none. Highest derivative first. */
@@ -174,7 +187,7 @@ export function countertermsOf(
       dimension: shown(dimension),
       coefficient: shown(coefficient),
       order: shown(order && order.sign() < 0 ? order.negated() : Rational.zero),
-      kinetic: isKinetic(legs, coefficient, theory),
+      kinetic: isKinetic(legs, coefficient, space + time, theory),
       presentAs: writtenAs(legs, derivatives, theory),
       allowed,
       gauge: gaugeStatus(legs, space, theory),

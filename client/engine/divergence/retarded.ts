@@ -5,7 +5,8 @@
 import type { Theory } from "../premises/theory.ts";
 import type { HalfEdges } from "./half-edges.ts";
 
-function isRetarded(field: Theory["fields"][number]): boolean {
+/** Whether the field's propagator runs forward in time only. */
+export function isRetarded(field: Theory["fields"][number]): boolean {
   return !field.selfConjugate && (field.kind === "Schrödinger field" || field.kind === "static heavy field");
 }
 

@@ -42,7 +42,7 @@ export interface Counterterm {
   readonly coefficient: Exact;
   /** Order in 1/Λ at which its coefficient enters naturally: max(0, Δ − measure). */
   readonly order: Exact;
-  /** The field's own kinetic term, which its kind supposes: a field renormalisation, written down or not. */
+  /** The field's own kinetic term, or the mass of a massive kind: its kind supposes it, written down or not. */
   readonly kinetic: boolean;
   /** Row id of the premises' term of the same fields and derivatives; null when nobody wrote it down. */
   readonly presentAs: string | null;

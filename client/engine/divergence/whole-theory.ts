@@ -6,7 +6,9 @@ import { LinearForm } from "../exact/linear-form.ts";
 import type { Theory } from "../premises/theory.ts";
 import { incompletePremises } from "../premises/incomplete.ts";
 import { amplitudeOf, legChoices, type Caps } from "./amplitudes.ts";
-import { countOf } from "./half-edges.ts";
+import { symmetryCautions } from "./cautions.ts";
+import { legsThat } from "./contraction.ts";
+import { countOf, noHalfEdges, type HalfEdges } from "./half-edges.ts";
 import type { DivergenceInputs } from "./inputs.ts";
 import { renormalisability } from "./theory-verdict.ts";
 import type { Amplitude, Counterterm, TheoryDivergence } from "./value.ts";
@@ -56,7 +58,7 @@ export function evaluateTheory(inputs: DivergenceInputs, theory: Theory): Evalua
   return {
     value,
     problems: [],
-    notices: [...incompletePremises(theory), ...noticesOf(value, listed === null)],
+    notices: [...incompletePremises(theory), ...noticesOf(value, theory, listed === null)],
     scalars: scalarsOf(value),
     working: explainTheory(value, theory),
   };
@@ -133,18 +135,33 @@ function boundsOf(theory: Theory, amplitudes: readonly Amplitude[]): TheoryDiver
     }));
 }
 
-function noticesOf(value: TheoryDivergence, isSymbolic: boolean): Notice[] {
+function noticesOf(value: TheoryDivergence, theory: Theory, isSymbolic: boolean): Notice[] {
   const notice = (code: string): Notice => ({ code, path: [], facts: {} });
   if (isSymbolic) return [notice("amplitudes-need-numbers")];
   const divergent = value.amplitudes.filter(({ status }) => status === "divergent");
-  const touchesGauge = divergent.some(({ counterterms }) =>
-    counterterms.some(({ gauge }) => gauge !== "none"),
-  );
   return [
     ...(divergent.length > 0 ? [notice("omega-not-sufficient")] : []),
-    ...(touchesGauge ? [notice("omega-gauge")] : []),
+    ...symmetryCautions(legsTogether(divergent, theory), theory).filter(
+      ({ code }) => code !== "omega-shift" || scalarsAreDifferentiated(theory),
+    ),
     ...(value.missing.length > 0 ? [notice("theory-not-closed")] : []),
   ];
+}
+
+/** One leg of every field that some of the amplitudes have. */
+function legsTogether(amplitudes: readonly Amplitude[], theory: Theory): HalfEdges {
+  const rowIds = new Set(amplitudes.flatMap(({ legs }) => legs.fields.map(({ fieldRowId }) => fieldRowId)));
+  return { ...noHalfEdges(theory), plain: theory.fields.map(({ rowId }) => (rowIds.has(rowId) ? 1 : 0)) };
+}
+
+/** Only where every interaction of scalars has derivatives can a shift symmetry be meant. */
+function scalarsAreDifferentiated(theory: Theory): boolean {
+  const isScalar = ({ kind }: Theory["fields"][number]) =>
+    kind === "real scalar" || kind === "complex scalar";
+  return interactionTerms(theory).every(
+    ({ term, edges }) =>
+      legsThat(edges, theory, isScalar) === 0 || !term.derivativeWeight.equals(LinearForm.zero),
+  );
 }
 
 function scalarsOf(value: TheoryDivergence): Scalar[] {

@@ -54,8 +54,37 @@ describe("the amplitudes of a theory", () => {
       fields: { psi: "Schrödinger field" },
       terms: { c: "psi~2 psi2" },
     });
-    expect(divergent(contact)).toEqual({ vacuum: "4", "psi*^2 psi^2": "0" });
-    expect(forbidden(contact)).toMatchObject({ "psi* psi": "vanishes in vacuum" });
+    expect(divergent(contact)).toEqual({ "psi*^2 psi^2": "0" });
+    // The free loop closes on itself just as little (own derivation: ∫dE/(E − k²/2 + i0) has its pole on one side).
+    expect(forbidden(contact)).toMatchObject({
+      "psi* psi": "vanishes in vacuum",
+      vacuum: "vanishes in vacuum",
+    });
+  });
+
+  // Boulware 1970, Ann. Phys. 56, 140: the neutral vector theory with a conserved current renormalises as electrodynamics.
+  it("of a massive vector with a conserved current need no more than a photon's and the vector's own mass", () => {
+    const vector = (kind: "massive vector" | "massive vector, conserved current") =>
+      theoryOf({ fields: { psi: "Dirac spinor", V: kind }, terms: { g: "psi~ psi V", m: "psi~ psi" } });
+    expect(listOf(vector("massive vector, conserved current")).missing).toEqual([]);
+    const proca = listOf(vector("massive vector"), { maxOrder: "2" }).missing.map(({ text }) => text);
+    expect(proca).not.toContain("V^2");
+    expect(proca).toContain("d^3 psibar psi");
+  });
+
+  it("come with what symmetries may take away, for every field that has divergent legs", () => {
+    const codes = (theory: Parameters<typeof listOf>[0]) =>
+      askTheory(theory, { maxLegs: "4" }).notices.map(({ code }) => code);
+    const gravity = theoryOf({
+      fields: { h: "metric fluctuation" },
+      terms: { k: { fields: "h3", derivatives: 2 } },
+    });
+    expect(codes(gravity)).toContain("omega-gauge");
+    const pions = { fields: "phi4", derivatives: 2 };
+    expect(codes(theoryOf({ fields: { phi: "real scalar" }, terms: { pions } }))).toContain("omega-shift");
+    expect(codes(theoryOf({ fields: { phi: "real scalar" }, terms: { pions, l: "phi4" } }))).not.toContain(
+      "omega-shift",
+    );
   });
 
   it("take the degree from the vertices that raise it most, order by order", () => {
