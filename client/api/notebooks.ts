@@ -31,6 +31,8 @@ export function useShelf(view: ShelfView, enabled = true) {
     initialPageParam: null as string | null, // The first page has no cursor.
     getNextPageParam: (last) => last.nextCursor,
     placeholderData: keepPreviousData,
+    // Colleagues share notebooks and move pins meanwhile: whoever comes back to the shelf sees it as it is now.
+    refetchOnMount: "always",
     enabled,
   });
 }
