@@ -36,6 +36,8 @@ export interface BlockHandle {
   readonly lastGood: Evaluation | null;
   /** True while the worker is at a newer state than shown. */
   readonly pending: boolean;
+  /** True when what computes has been stopped: the next change is tried afresh. */
+  readonly stopped: boolean;
   /** The Premises blocks one may stand on, and the one chosen (null: none or ambiguous). */
   readonly premisesChoices: readonly { readonly blockId: string; readonly name: string }[];
   readonly standsOn: string | null;

@@ -1,19 +1,25 @@
-/** One word about a block, at the right of its heading. */
+/** A word about a block, at the right of its heading. */
+import { kindDescriptions } from "#engine/descriptions.ts";
 import type { BlockHandle } from "./block-handle.ts";
 
 export interface BlockState {
   readonly words: string;
-  readonly tone: "agrees" | "computing" | "partly" | "error";
+  readonly tone: "agrees" | "computing" | "waiting" | "partly" | "error";
 }
 
+type Seen = Pick<
+  BlockHandle,
+  "kind" | "fields" | "tables" | "evaluation" | "lastGood" | "pending" | "stopped"
+>;
+
 /** `late`: the computation has taken long enough to be worth a word. */
-export function stateOf(
-  { evaluation, lastGood }: Pick<BlockHandle, "evaluation" | "lastGood">,
-  late: boolean,
-): BlockState {
+export function stateOf(block: Seen, late: boolean): BlockState {
+  const { evaluation, lastGood, pending, stopped } = block;
+  if (pending && stopped) return { words: "not computed: it took too long or failed", tone: "error" };
   if (late || evaluation === null) return { words: "computing", tone: "computing" };
   const { value, problems } = evaluation;
   if (value === null) {
+    if (isUntouched(block)) return { words: "waits for its inputs", tone: "waiting" };
     return { words: lastGood ? "in error: shows its last good result" : "in error", tone: "error" };
   }
   if (problems.length === 0) return { words: "agrees", tone: "agrees" };
@@ -22,4 +28,17 @@ export function stateOf(
       problems.length === 1 ? "agrees, one entry in error" : `agrees, ${problems.length} entries in error`,
     tone: "partly",
   };
+}
+
+/** As it was placed: nothing typed that a result depends on. What is missing is then an invitation, not an error. */
+export function isUntouched({
+  kind,
+  fields,
+  tables,
+}: Pick<BlockHandle, "kind" | "fields" | "tables">): boolean {
+  const { shape } = kindDescriptions[kind];
+  return (
+    Object.entries(shape.fields).every(([name, spec]) => !spec.keyed || fields[name] === spec.initial) &&
+    Object.values(tables).every((rows) => rows.length === 0)
+  );
 }

@@ -16,7 +16,7 @@ import { TextField } from "./parts/text-field.tsx";
 import { Working } from "./parts/working.tsx";
 import { blockParts } from "./registry.tsx";
 import { StandsOn } from "./stands-on.tsx";
-import { stateOf } from "./block-state.ts";
+import { isUntouched, stateOf } from "./block-state.ts";
 
 interface Props {
   readonly selected: boolean;
@@ -89,7 +89,9 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
       </header>
       <Guard blockId={block.blockId} inputs={block.fields}>
         <div className="block-body" data-block-body="">
-          <OtherProblems />
+          <div className={isUntouched(block) ? "block-invitation" : undefined}>
+            <OtherProblems />
+          </div>
           <div className="block-form">
             <parts.Form />
           </div>
@@ -117,9 +119,27 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
           )}
           <Notices />
           {evaluation && <Working steps={evaluation.working} />}
+          <Note />
         </div>
       </Guard>
     </section>
+  );
+}
+
+/** Words of the writers about the block. The empty line shows itself only to who might write in it. */
+function Note() {
+  const { fields, readOnly } = useBlock();
+  if (!("note" in fields) || (readOnly && fields["note"] === "")) return null;
+  return (
+    <div className="block-note">
+      <TextField
+        place={{ field: "note" }}
+        label="note"
+        placeholder="a note on this block"
+        notation={false}
+        size={24}
+      />
+    </div>
   );
 }
 

@@ -1,4 +1,12 @@
-import { useId, useRef, type ClipboardEvent, type KeyboardEvent, type ReactNode } from "react";
+import {
+  useEffect,
+  useEffectEvent,
+  useId,
+  useRef,
+  type ClipboardEvent,
+  type KeyboardEvent,
+  type ReactNode,
+} from "react";
 import { classes } from "../../ui/classes.ts";
 import { placeKey, useBlock, type FieldPlace } from "../block-handle.ts";
 import { ColleagueMarks } from "./colleague-marks.tsx";
@@ -42,6 +50,20 @@ export function TextField(props: Props) {
   const problems = useProblemsAt(place);
   const id = useId();
   const input = useRef<HTMLInputElement>(null);
+
+  // The system's own undo, from a menu or a gesture. React's event of this name is another one.
+  const onBeforeInput = useEffectEvent((event: InputEvent) => {
+    if (event.inputType !== "historyUndo" && event.inputType !== "historyRedo") return;
+    event.preventDefault();
+    if (event.inputType === "historyUndo") draft.undo();
+    else draft.redo();
+  });
+  useEffect(() => {
+    const element = input.current;
+    const listen = (event: InputEvent) => onBeforeInput(event);
+    element?.addEventListener("beforeinput", listen);
+    return () => element?.removeEventListener("beforeinput", listen);
+  }, []);
 
   function onKeyDown(event: KeyboardEvent<HTMLInputElement>) {
     const undo = undoKey(event);
@@ -94,13 +116,6 @@ export function TextField(props: Props) {
           onBlur={draft.leave}
           onKeyDown={onKeyDown}
           onPaste={onPaste}
-          onBeforeInput={(event) => {
-            // The system's own undo, from a menu or a gesture.
-            const { inputType } = event.nativeEvent;
-            if (inputType === "historyUndo" || inputType === "historyRedo") event.preventDefault();
-            if (inputType === "historyUndo") draft.undo();
-            if (inputType === "historyRedo") draft.redo();
-          }}
         />
         {reading !== undefined && (
           <span className="block-reading" aria-hidden="true">

@@ -6,6 +6,7 @@ import { pinNodeView } from "../pins/pin-node-view.tsx";
 import { PinShortcut } from "../pins/open-pin-picker.ts";
 import { PinKeyboard } from "../pins/pin-keyboard.ts";
 import { ProseCaret } from "../pins/prose-caret.ts";
+import { BlockCare } from "./block-care.ts";
 import { BlockKeyboard } from "./block-keyboard.ts";
 import { blockNodeView } from "./block-node-view.tsx";
 import { BlockPairing } from "./block-pairing.ts";
@@ -21,6 +22,7 @@ export const blockViews: Readonly<Record<string, NodeViewRenderer>> = {
 export function blockExtensions(world: BlockWorld): readonly AnyExtension[] {
   return [
     BlockPairing,
+    BlockCare.configure({ world }),
     BlockKeyboard.configure({ world }),
     PinKeyboard.configure({ world }),
     PinShortcut,

@@ -9,16 +9,11 @@
  */
 import { Extension } from "@tiptap/core";
 import type { Node } from "@tiptap/pm/model";
-import { Plugin, PluginKey, type Transaction } from "@tiptap/pm/state";
+import { Plugin, PluginKey } from "@tiptap/pm/state";
 import { ySyncPluginKey, type ProsemirrorBinding } from "@tiptap/y-tiptap";
 import * as Y from "yjs";
 import { blockElements, isKindName } from "./block-elements.ts";
-
-interface PlacedBlock {
-  readonly node: Node;
-  /** Nesting depth: a block that is wrapped or lifted is another element in Y. */
-  readonly depth: number;
-}
+import { placedBlocks, sameBlocks, takenFrom } from "./placed-blocks.ts";
 
 interface SyncState {
   readonly binding: ProsemirrorBinding;
@@ -66,38 +61,6 @@ export const BlockPairing = Extension.create({
     }),
   ],
 });
-
-function takenFrom(transaction: Transaction): ReadonlySet<Node> {
-  const taken = new Set<Node>();
-  transaction.before.forEach((child, offset) => {
-    if (isKindName(child.type.name) && transaction.mapping.mapResult(offset).deletedAfter) taken.add(child);
-  });
-  return taken.size === 0 ? none : taken;
-}
-
-const blocksWithin = new WeakMap<Node, readonly PlacedBlock[]>();
-
-/** The blocks below a node in order; remembered per node, so a keystroke looks only at the paragraph it changed. */
-function placedBlocks(parent: Node): readonly PlacedBlock[] {
-  const known = blocksWithin.get(parent);
-  if (known) return known;
-  const found: PlacedBlock[] = [];
-  if (!parent.isTextblock) {
-    parent.forEach((child) => {
-      if (isKindName(child.type.name)) found.push({ node: child, depth: 0 });
-      else for (const { node, depth } of placedBlocks(child)) found.push({ node, depth: depth + 1 });
-    });
-  }
-  blocksWithin.set(parent, found);
-  return found;
-}
-
-function sameBlocks(before: readonly PlacedBlock[], after: readonly PlacedBlock[]): boolean {
-  return (
-    before.length === after.length &&
-    before.every((block, index) => block.node === after[index]?.node && block.depth === after[index].depth)
-  );
-}
 
 type Mapping = ProsemirrorBinding["mapping"];
 

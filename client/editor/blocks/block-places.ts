@@ -4,6 +4,7 @@ import type { Node } from "@tiptap/pm/model";
 import { NodeSelection } from "@tiptap/pm/state";
 import { isKindName } from "./block-elements.ts";
 import type { BlockWorld } from "./block-world.ts";
+import { agreed, occupiedQuestion } from "./occupied.ts";
 
 export interface BlockPlace {
   readonly position: number;
@@ -60,7 +61,7 @@ export function moveBlock(world: BlockWorld, editor: Editor, blockId: string, st
     const target = step === -1 ? position - neighbour.nodeSize : position + neighbour.nodeSize;
     tr.delete(position, position + node.nodeSize).insert(target, node);
     tr.setSelection(NodeSelection.create(tr.doc, target));
-    editor.view.dispatch(tr.scrollIntoView());
+    editor.view.dispatch(agreed(tr.scrollIntoView()));
     editor.view.focus();
   });
 }
@@ -69,8 +70,9 @@ export function deleteBlock(world: BlockWorld, editor: Editor, blockId: string):
   askIfOccupied(world, blockId, "Delete the block", "goes", () => {
     const place = blockPlaces(editor.state.doc).get(blockId);
     if (!place) return;
+    const { tr } = editor.state;
     editor.view.dispatch(
-      editor.state.tr.delete(place.position, place.position + place.node.nodeSize).scrollIntoView(),
+      agreed(tr.delete(place.position, place.position + place.node.nodeSize).scrollIntoView()),
     );
     editor.view.focus();
   });
@@ -79,21 +81,11 @@ export function deleteBlock(world: BlockWorld, editor: Editor, blockId: string):
 function askIfOccupied(
   world: BlockWorld,
   blockId: string,
-  action: string,
-  verb: "moves" | "goes",
+  yes: string,
+  happening: "moves" | "goes",
   act: () => void,
 ): void {
-  const colleagues = world.presence.inBlock(blockId);
-  if (colleagues.length === 0) {
-    act();
-    return;
-  }
-  const names = colleagues.map(({ name }) => name).join(" and ");
-  const are = colleagues.length > 1 ? "are" : "is";
-  world.ask({
-    title: `${names} ${are} in this block`,
-    sentence: `What ${names} ${are} typing there at this moment may be lost when the block ${verb}.`,
-    yes: action,
-    act,
-  });
+  const question = occupiedQuestion(world, [blockId], happening);
+  if (question) world.ask({ ...question, yes, act });
+  else act();
 }

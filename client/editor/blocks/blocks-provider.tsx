@@ -2,8 +2,9 @@ import type { StoredResult } from "#contract/api.ts";
 import type { Editor } from "@tiptap/core";
 import { lazy, Suspense, useEffect, useState, useSyncExternalStore, type ReactNode } from "react";
 import { ConfirmDialog } from "../../ui/confirm-dialog.tsx";
+import { say } from "../../ui/notices.ts";
 import "../../blocks/blocks.css";
-import { ResultsContext } from "../evaluation/use-results.ts";
+import { ResultsContext, useEvaluatorState } from "../evaluation/use-results.ts";
 import type { NotebookSession } from "../notebook-session.ts";
 import { offerPinPicker } from "../pins/open-pin-picker.ts";
 import { announcePins } from "../pins/use-pin-counts.ts";
@@ -37,6 +38,7 @@ export function BlocksProvider({ session, stored, children }: Props) {
     <BlockWorldContext value={world}>
       <ResultsContext value={world.results}>
         {children}
+        <Stopping />
         <Asking world={world} />
         <Picking world={world} />
       </ResultsContext>
@@ -69,6 +71,25 @@ function Picking({ world }: { readonly world: BlockWorld }) {
       <PinPicker onClose={() => world.pick(false)} />
     </Suspense>
   );
+}
+
+/** Says that computing has been stopped, and what to do about it. */
+function Stopping() {
+  const evaluator = useEvaluatorState();
+  useEffect(() => {
+    if (evaluator.state === "timed-out") {
+      say(
+        `Computing took longer than ${evaluator.seconds} seconds and was stopped. It starts again with the next change of a block.`,
+        "refused",
+      );
+    } else if (evaluator.state === "crashed") {
+      say(
+        "Computing failed several times and was stopped. It starts again with the next change of a block.",
+        "refused",
+      );
+    }
+  }, [evaluator]);
+  return null;
 }
 
 function Asking({ world }: { readonly world: BlockWorld }) {

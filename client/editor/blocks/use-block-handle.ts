@@ -5,7 +5,7 @@ import { kindDescriptions } from "#engine/descriptions.ts";
 import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
 import { choosePremises } from "#engine/notebook/choose-premises.ts";
 import { placeKey, type BlockHandle, type FieldPlace } from "../../blocks/block-handle.ts";
-import { useBlockResult } from "../evaluation/use-results.ts";
+import { useBlockResult, useEvaluatorState } from "../evaluation/use-results.ts";
 import { newId } from "../new-id.ts";
 import { placePinAtCaret } from "../pins/place-pin.ts";
 import { cellElement, orderedRows } from "./block-elements.ts";
@@ -20,6 +20,7 @@ export function useBlockHandle(blockId: string): BlockHandle | null {
   const block = useSyncExternalStore(directory.subscribe, () => directory.block(blockId));
   const premises = useSyncExternalStore(directory.subscribe, directory.premises);
   const result = useBlockResult(blockId);
+  const stopped = useEvaluatorState().state !== "working";
   const readOnly = useReadOnly();
   const changes = useMemo(() => changesOf(world, blockId), [world, blockId]);
   const standsOn = useSyncExternalStore(directory.subscribe, () => {
@@ -42,11 +43,12 @@ export function useBlockHandle(blockId: string): BlockHandle | null {
       evaluation,
       lastGood: evaluation?.value == null ? lastGood : null,
       pending,
+      stopped,
       premisesChoices: premises,
       standsOn,
       premisesEvaluation,
     };
-  }, [block, result, readOnly, changes, premises, standsOn, premisesEvaluation, blockId]);
+  }, [block, result, stopped, readOnly, changes, premises, standsOn, premisesEvaluation, blockId]);
 }
 
 function valuesOf({ kind, inputs }: BlockInstance): Pick<BlockHandle, "fields" | "tables"> {

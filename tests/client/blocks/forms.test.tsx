@@ -38,9 +38,6 @@ describe.each(kindNames)("the form of %s", (kind) => {
     premises: [{ geometry: "isotropic" }, { geometry: "anisotropic" }],
     divergence: [{ mode: "one graph" }, { mode: "whole theory" }],
   };
-  // Fields that need no control of their own: a private note has none yet.
-  const withoutControl = new Set(["note"]);
-
   it("has a control for every field and column of its shape, and for nothing else", () => {
     const seen = new Set<string>();
     for (const attrs of variants[kind] ?? [{}]) {
@@ -64,7 +61,7 @@ describe.each(kindNames)("the form of %s", (kind) => {
       cleanup();
     }
     const wanted = [
-      ...Object.keys(shape.fields).filter((field) => !withoutControl.has(field)),
+      ...Object.keys(shape.fields),
       ...Object.entries(shape.tables).flatMap(([table, columns]) =>
         Object.keys(columns).map((column) => `${table}/${column}`),
       ),
