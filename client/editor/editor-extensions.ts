@@ -4,7 +4,7 @@ import { documentExtensions } from "#schema/document-schema.ts";
 import { collaborationExtensions } from "./collaboration.ts";
 import { mathNodeView } from "./mathematics/math-node-view.ts";
 import type { MathEditing } from "./mathematics/math-editing.ts";
-import { mathematicsTyping } from "./mathematics/mathematics.ts";
+import { mathematicsTyping } from "./mathematics/mathematics-typing.ts";
 import type { NotebookSession } from "./notebook-session.ts";
 import { NumberingExtension } from "./numbering.ts";
 import { Pasting } from "./pasting.ts";

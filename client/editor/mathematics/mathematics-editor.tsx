@@ -7,7 +7,7 @@ import { latexFaultWords } from "../../ui/latex-fault-words.ts";
 import { Formula } from "../../ui/math.tsx";
 import type { LatexSymbol } from "./latex-symbols.ts";
 import type { MathEditing, Opening } from "./math-editing.ts";
-import { placeFormula, writeFormula } from "./mathematics.ts";
+import { placeFormula, writeFormula } from "./formula-changes.ts";
 import { SymbolList, useSymbolCompletion } from "./symbol-completion.tsx";
 import { useSteadyAnchor } from "./use-steady-anchor.ts";
 import { useCheckedSource } from "./use-checked-source.ts";

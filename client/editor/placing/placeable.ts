@@ -2,7 +2,7 @@
 import type { Editor } from "@tiptap/core";
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { newId } from "../new-id.ts";
-import { openFormulaAt } from "../mathematics/mathematics.ts";
+import { openFormulaAt } from "../mathematics/formula-changes.ts";
 import { placeBlock, placeNode } from "./place.ts";
 
 export interface Placeable {

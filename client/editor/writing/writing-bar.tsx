@@ -3,7 +3,7 @@ import type { ChainedCommands, Editor } from "@tiptap/core";
 import { useEditorState } from "@tiptap/react";
 import { Toolbar } from "radix-ui";
 import { classes } from "../../ui/classes.ts";
-import { insertFormula } from "../mathematics/mathematics.ts";
+import { insertFormula } from "../mathematics/formula-changes.ts";
 import { useHistory } from "../notebook-context.ts";
 import { LinkEditor } from "./link-editor.tsx";
 import { textKinds, type TextKind } from "./text-kind.ts";

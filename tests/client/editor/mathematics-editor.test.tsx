@@ -3,7 +3,7 @@ import userEvent from "@testing-library/user-event";
 import { afterEach, describe, expect, it } from "vitest";
 import { mathNodeView } from "../../../client/editor/mathematics/math-node-view.ts";
 import { createMathEditing, type MathEditing } from "../../../client/editor/mathematics/math-editing.ts";
-import { writeFormula } from "../../../client/editor/mathematics/mathematics.ts";
+import { writeFormula } from "../../../client/editor/mathematics/formula-changes.ts";
 import { MathematicsEditor } from "../../../client/editor/mathematics/mathematics-editor.tsx";
 import { premisesSymbols } from "../../../client/editor/mathematics/premises-symbols.ts";
 import { twoPeople, type, type Person, type TwoPeople } from "./two-people.ts";
@@ -101,6 +101,19 @@ describe("the editor of a formula", () => {
     const wren = stage("$$");
     await userEvent.type(await screen.findByRole("textbox", { name: "LaTeX" }), "E=mc^2$${Enter}");
     expect(latexOf(wren)).toBe("E=mc^2");
+  });
+
+  it("leaves the caret where one goes on writing after a displayed equation", async () => {
+    const wren = stage("$$");
+    await userEvent.type(await screen.findByRole("textbox", { name: "LaTeX" }), "x{Enter}");
+    act(() => {
+      type(wren.editor, "so");
+    });
+    expect(wren.editor.state.doc.content.content.map((node) => node.type.name)).toEqual([
+      "displayMath",
+      "paragraph",
+    ]);
+    expect(wren.text()).toContain("so");
   });
 
   it("completes symbols by keyboard", async () => {

@@ -51,6 +51,20 @@ describe("dollar signs typed in a sentence", () => {
   });
 });
 
+describe("a letter typed on a selected formula", () => {
+  it("goes after it", () => {
+    type(person.editor, "a $x$ b");
+    person.editor.commands.setNodeSelection(3);
+    type(person.editor, "!");
+    expect(line(person)).toBe("a ‹x›! b");
+  });
+  it("begins a paragraph after a displayed one", () => {
+    type(person.editor, "$$");
+    type(person.editor, "so");
+    expect(line(person)).toBe("«»¶so");
+  });
+});
+
 describe("two dollars", () => {
   it("turn an empty paragraph into a displayed equation, selected, with an id", () => {
     type(person.editor, "$$");

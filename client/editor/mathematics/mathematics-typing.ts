@@ -1,9 +1,9 @@
 /** Typing mathematics: `$…$` in a sentence, `$$` for a displayed equation; Enter on a formula opens it. */
 import { Extension, InputRule, type AnyExtension, type Editor } from "@tiptap/core";
-import { NodeSelection, TextSelection } from "@tiptap/pm/state";
+import { NodeSelection, Plugin, Selection, TextSelection } from "@tiptap/pm/state";
 import type { NotebookHistory } from "../history.ts";
 import { newId } from "../new-id.ts";
-import { OPEN_FORMULA } from "./math-node-view.ts";
+import { goBeside, isFormula, openFormulaAt } from "./formula-changes.ts";
 
 /**
  * The closing dollar of `$…$`: no white space just inside, so that "between $5 and $7" stays as typed, as in the
@@ -41,7 +41,22 @@ export function mathematicsTyping(history: NotebookHistory): AnyExtension {
       ];
     },
     addKeyboardShortcuts() {
-      return { Enter: () => openSelectedFormula(this.editor) };
+      return {
+        Enter: () => openSelectedFormula(this.editor),
+        // From a selected formula or a gap the browser has no caret to move.
+        "Ctrl-Home": () => goToEdge(this.editor, "start"),
+        "Ctrl-End": () => goToEdge(this.editor, "end"),
+      };
+    },
+    addProseMirrorPlugins() {
+      const { editor } = this;
+      return [
+        new Plugin({
+          props: {
+            handleTextInput: (_view, _from, _to, text) => typeBesideFormula(editor, text),
+          },
+        }),
+      ];
     },
   });
 }
@@ -84,70 +99,27 @@ function openSelectedFormula(editor: Editor): boolean {
   return openFormulaAt(editor, selection.from, "kept");
 }
 
+/** A letter typed on a selected formula goes after it: arrow keys select formulas in passing. */
+function typeBesideFormula(editor: Editor, text: string): boolean {
+  const { selection, tr } = editor.state;
+  if (!(selection instanceof NodeSelection) || !isFormula(selection.node.type.name)) return false;
+  if (selection.node.isInline) tr.setSelection(TextSelection.create(tr.doc, selection.to));
+  else goBeside(tr, selection.from, selection.node, "after");
+  editor.view.dispatch(tr.insertText(text).scrollIntoView());
+  return true;
+}
+
+function goToEdge(editor: Editor, edge: "start" | "end"): boolean {
+  const { selection, tr, doc } = editor.state;
+  if (selection instanceof TextSelection) return false;
+  tr.setSelection(edge === "start" ? Selection.atStart(doc) : Selection.atEnd(doc));
+  editor.view.dispatch(tr.scrollIntoView());
+  return true;
+}
+
 function openSoon(editor: Editor): void {
   // The node's view exists once the transaction of the input rule has been drawn.
   queueMicrotask(() => {
     if (!editor.isDestroyed) openFormulaAt(editor, editor.state.selection.from, "new");
   });
-}
-
-export function openFormulaAt(editor: Editor, position: number, how: "new" | "kept"): boolean {
-  const element = editor.view.nodeDOM(position);
-  if (!(element instanceof HTMLElement)) return false;
-  element.dispatchEvent(new CustomEvent(OPEN_FORMULA, { detail: how }));
-  return true;
-}
-
-/** Puts a formula at the caret and opens it. */
-export function insertFormula(editor: Editor): void {
-  if (!placeFormula(editor, false, { latex: "" })) return;
-  openFormulaAt(editor, editor.state.selection.from - 1, "new");
-}
-
-export function placeFormula(
-  editor: Editor,
-  display: boolean,
-  attributes: Readonly<Record<string, string>>,
-): boolean {
-  const attrs = display ? { ...attributes, id: newId() } : attributes;
-  editor.commands.startNewStep();
-  return editor
-    .chain()
-    .insertContent({ type: display ? "displayMath" : "inlineMath", attrs })
-    .run();
-}
-
-/** Writes what was typed; an empty formula is removed. The caret is left behind (or before) it. */
-export function writeFormula(
-  editor: Editor,
-  position: number,
-  attributes: Readonly<Record<string, string>>,
-  leave: "before" | "after" = "after",
-): void {
-  const { state } = editor;
-  const node = state.doc.nodeAt(position);
-  if (!node || !isFormula(node.type.name)) return;
-  editor.commands.startNewStep();
-  const { tr } = state;
-  if ((attributes["latex"] ?? "").trim() === "") {
-    if (node.isInline) tr.delete(position, position + node.nodeSize);
-    else tr.replaceWith(position, position + node.nodeSize, state.schema.nodes["paragraph"]?.create() ?? []);
-    tr.setSelection(
-      TextSelection.near(tr.doc.resolve(Math.min(position + (node.isInline ? 0 : 1), tr.doc.content.size))),
-    );
-  } else {
-    for (const [name, value] of Object.entries(attributes)) {
-      if (node.attrs[name] !== value) tr.setNodeAttribute(position, name, value);
-    }
-    if (node.isInline) {
-      tr.setSelection(TextSelection.create(tr.doc, leave === "after" ? position + node.nodeSize : position));
-    } else {
-      tr.setSelection(NodeSelection.create(tr.doc, position));
-    }
-  }
-  editor.view.dispatch(tr.scrollIntoView());
-}
-
-function isFormula(name: string): boolean {
-  return name === "inlineMath" || name === "displayMath";
 }
