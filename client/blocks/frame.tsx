@@ -44,7 +44,8 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
       onKeyDown={onKeyDown}
     >
       <header className="block-head">
-        <h3 className="block-kind engraved">{title}</h3>
+        {/* A named region and not a heading: it stands in sections of any level. */}
+        <p className="block-kind engraved">{title}</p>
         <div className="block-title">
           <TextField
             place={{ field: parts.titleField }}

@@ -56,7 +56,7 @@ export function TheoryResult({ value }: { readonly value: TheoryDivergence }) {
               ),
             },
             {
-              heading: "",
+              heading: "verdict",
               show: ({ status, verdict: kind, forbiddenBy }) =>
                 status === "divergent" ? kind : forbiddenBy ? `forbidden by ${forbiddenBy}` : status,
             },

@@ -43,7 +43,12 @@ export function Shifts({ value }: { readonly value: OrderPlanValue }) {
             keyOf={({ probe: at }) => String(at)}
             columns={[
               {
-                heading: <Formula latex={probe.latex} />,
+                heading: (
+                  <>
+                    <span className="sr-only">probe scale </span>
+                    <Formula latex={probe.latex} />
+                  </>
+                ),
                 numeric: true,
                 show: ({ probe: at }) => withUnit(sizeText(at, 3), probe.unit),
               },
