@@ -180,8 +180,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
   const stopListening = accessChanges.onAccessChange((change) => watch.heed(change));
   const beat = setInterval(() => {
     const now = Date.now();
-    for (const connection of connections)
-      connection.keepAlive(now, HEARTBEAT.silentForMs, HEARTBEAT.deadAfterMs);
+    for (const connection of connections) connection.keepAlive(now, HEARTBEAT);
     for (const room of rooms.all()) room.tick(now);
   }, HEARTBEAT.checkEveryMs);
   const recheck = setInterval(() => watch.recheckAll(), RECHECK_EVERY_MS);

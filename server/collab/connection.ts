@@ -16,6 +16,11 @@ export interface ConnectionOptions {
   readonly log: Logger;
 }
 
+export interface KeepAlive {
+  readonly silentForMs: number;
+  readonly deadAfterMs: number;
+}
+
 export class Connection {
   readonly notebookId: string;
   readonly visitor: Visitor;
@@ -104,13 +109,14 @@ export class Connection {
     this.send(writeSaved(this.#savedSent));
   }
 
-  keepAlive(now: number, silentForMs: number, deadAfterMs: number): void {
+  keepAlive(now: number, { silentForMs, deadAfterMs }: KeepAlive): void {
     if (!this.isOpen) return;
     // A socket that we do not read from cannot answer; its silence is ours.
-    if (!this.#held && now - this.lastHeardAt > deadAfterMs) return this.#socket.terminate();
-    if (now - this.#lastSentAt < silentForMs) return;
-    this.send(heartbeatFrame);
-    this.#socket.ping();
+    const unheardForMs = this.#held ? 0 : now - this.lastHeardAt;
+    if (unheardForMs > deadAfterMs) return this.#socket.terminate();
+    // Someone who only reads never speaks by themselves, however much they are told.
+    if (unheardForMs > silentForMs) this.#socket.ping();
+    if (now - this.#lastSentAt > silentForMs) this.send(heartbeatFrame);
   }
 
   /** Slows the writer down: what it sends stays in the network until its earlier frames are stored. */

@@ -8,6 +8,7 @@
  * A room stays as long as someone holds a lease on it (from before its load until their socket ends) or as long as
  * something is not stored. Draining turns back to open when someone comes.
  */
+import { setTimeout as sleep } from "node:timers/promises";
 import type { Logger } from "pino";
 import { closeCode, type ServerNotice } from "#contract/collab.ts";
 import { CommittedDocument, type CommittedBy } from "./committed-document.ts";
@@ -170,7 +171,11 @@ export class Room {
   /** Takes no more frames, stores what is queued, closes the sockets and ends. */
   async stop(patienceMs: number): Promise<void> {
     this.#stopping = true;
-    if (this.#state === "loading") await this.#loaded.catch(() => undefined); // a failed load has ended the room
+    if (this.#state === "loading") {
+      const loading = this.#loaded.catch(() => undefined); // a failed load has ended the room
+      await Promise.race([loading, sleep(patienceMs, undefined, { ref: false })]);
+      if (this.state === "loading") return this.fail(new Error("the load did not end"));
+    }
     const content = this.#content;
     if (content !== null) {
       const timer = setTimeout(() => {
@@ -222,7 +227,7 @@ export class Room {
       return content;
     } catch (error) {
       this.#options.log.warn({ err: error }, "a notebook could not be loaded");
-      this.#end("failed");
+      if (this.state === "loading") this.#end("failed");
       throw error instanceof RoomNotFound
         ? error
         : new RoomFailed("the notebook could not be loaded", { cause: error });

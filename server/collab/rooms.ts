@@ -10,7 +10,7 @@ export class Rooms {
 
   enter(notebookId: string): Promise<Lease> {
     let room = this.#rooms.get(notebookId);
-    if (room === undefined) {
+    if (room === undefined || room.state === "closed" || room.state === "failed") {
       const made = new Room({
         ...this.options,
         notebookId,

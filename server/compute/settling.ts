@@ -54,7 +54,9 @@ class RoomSettling {
     private readonly room: OpenRoom,
     private readonly options: SettlingOptions,
   ) {
-    this.#touched = new TouchedBlocks(room.content.document);
+    this.#touched = new TouchedBlocks(room.content.document, (error) =>
+      options.log.error({ err: error, notebookId: room.notebookId }, "a change could not be looked at"),
+    );
     this.#times = { ...usualTimes, ...options.times };
   }
 

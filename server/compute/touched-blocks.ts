@@ -25,11 +25,18 @@ export class TouchedBlocks {
   #mayChangeResults = false;
   #anything = false;
 
-  constructor(document: Y.Doc) {
+  /** `onMistake` is told of an exception of ours; thrown, it would look as if the change could not be applied. */
+  constructor(document: Y.Doc, onMistake: (error: unknown) => void) {
     document
       .getXmlFragment(FRAGMENT)
       .observeDeep((events: readonly Y.YEvent<Y.XmlFragment | Y.XmlText>[], transaction) => {
-        if (transaction.origin instanceof CommittedBy) this.#note(events, transaction.origin.personId);
+        if (!(transaction.origin instanceof CommittedBy)) return;
+        try {
+          this.#note(events, transaction.origin.personId);
+        } catch (error) {
+          this.#mayChangeResults = true;
+          onMistake(error);
+        }
       });
   }
 
