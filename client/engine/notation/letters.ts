@@ -12,7 +12,7 @@ const lower = [
 ];
 const upper = "Gamma Delta Theta Lambda Xi Pi Sigma Upsilon Phi Psi Omega".split(" ");
 /** Other single-letter symbols that LaTeX has a command for. */
-const others = ["ell", "imath", "jmath"];
+const others = ["ell", "imath", "jmath", "perp", "parallel"];
 
 const lowerGreek = new Set(lower);
 const commanded = new Set([...lower, ...upper, ...others]);

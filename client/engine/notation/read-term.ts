@@ -3,9 +3,12 @@ import { Rational } from "../exact/rational.ts";
 import { constantOf } from "./constant.ts";
 import { failed, FirstFailure, read, type NotationFailure, type Read } from "./failure.ts";
 import type { Monomial } from "./monomial.ts";
+import { hasCommand } from "./letters.ts";
 import { canonicalName, type Name } from "./names.ts";
+import { couplingsLikeDerivatives } from "./leading-coupling.ts";
 import { parse } from "./parse.ts";
-import { isIndices } from "./tree-shape.ts";
+import { withoutEnding } from "./term-ending.ts";
+import { isIndices, nameInside } from "./tree-shape.ts";
 import {
   conjugate,
   hasLegs,
@@ -20,8 +23,8 @@ import type { Accent } from "./tokens.ts";
 import type { Tree } from "./tree.ts";
 import { typeset } from "./typeset.ts";
 import {
+  areRaisedIndices,
   isIndex,
-  isRaisedIndex,
   meaningOf,
   suggestionFor,
   type Direction,
@@ -35,8 +38,8 @@ export interface TermReading {
   readonly latex: string;
 }
 
-/** "+ h.c." at the end counts as the term itself and is dropped. */
-const hermitianConjugate = /\+\s*(?:\\(?:text|mathrm|textrm|rm)\s*\{?\s*)?[hH]\s*\.\s*[cC]\s*\.?\s*\}?\s*$/;
+/** A name before a bracket is a factor, but nobody calls a coupling by one of these. */
+const functionNames = /^(?:sin|cos|tan|sinh|cosh|tanh|exp|log|ln)$/;
 
 /**
  * Reads a term such as `lambda/4! phi^4`, `\frac{c}{\Lambda^2} (\partial\phi)^2 \phi^2` or `y (psibar psi) phi`.
@@ -50,12 +53,12 @@ const hermitianConjugate = /\+\s*(?:\\(?:text|mathrm|textrm|rm)\s*\{?\s*)?[hH]\s
  * @example readTerm("g/2 phi^2 chi", vocabulary) // prefactor 1/2, coefficients g, fields phi² chi
  */
 export function readTerm(text: string, vocabulary: Vocabulary): Read<TermReading> {
-  const body = text.replace(hermitianConjugate, "");
+  const { body, hasConjugate } = withoutEnding(text);
   if (body.trim() === "") return failed("empty-term", { text, offset: 0 });
   const tree = parse(body, { quantities: false });
   if (!tree.ok) return tree;
   const reading = new TermReader(vocabulary).whole(tree.value);
-  if (!reading.ok || body === text) return reading;
+  if (!reading.ok || !hasConjugate) return reading;
   return read({ ...reading.value, latex: `${reading.value.latex} + \\text{h.c.}` });
 }
 
@@ -63,11 +66,14 @@ class TermReader {
   private readonly trouble = new FirstFailure();
   /** True once a field or derivative was read: from there on only declared symbols may stand. */
   private opened = false;
+  /** D_0 and the like, where they are couplings. */
+  private couplings: ReadonlySet<string> = new Set();
   private unknown: { readonly symbol: string; readonly at: number } | null = null;
 
   constructor(private readonly vocabulary: Vocabulary) {}
 
   whole(tree: Tree): Read<TermReading> {
+    this.couplings = couplingsLikeDerivatives(tree, this.vocabulary);
     const reading = this.read(tree);
     if (!this.trouble.failure && reading.prefactor.sign() === 0)
       this.trouble.note("zero-term", { offset: tree.at });
@@ -184,10 +190,10 @@ class TermReader {
     if (!value) {
       const raised = isIndices(exponent) ? indicesOf(exponent) : [];
       const name = nameInside(base);
-      if (name && raised.length > 0 && raised.every(isRaisedIndex))
-        return this.indexed(base, name, raised, exponent.at);
+      if (name && areRaisedIndices(raised)) return this.indexed(base, name, raised, exponent.at);
       return this.fail("exponent-not-a-number", exponent.at);
     }
+    if (this.isMatrix(base, value)) return unit;
     if (base.type !== "modulus") return this.settle(raise(this.read(base), value), at);
     const inside = this.read(base.body);
     if (!hasLegs(inside)) return this.settle(raise(inside, value), at);
@@ -197,6 +203,14 @@ class TermReader {
       raise(this.settle(multiply(conjugate(inside, this.selfConjugate), inside), at), pairs),
       at,
     );
+  }
+
+  /** \gamma^5 and \gamma^0 between fields, where no coupling can stand. */
+  private isMatrix(base: Tree, exponent: Rational): boolean {
+    const name = nameInside(base);
+    if (!this.opened || !name || canonicalName(name) !== "gamma") return false;
+    const meaning = this.meaning(name, []);
+    return meaning.means === "coefficient" && !meaning.declared && /^[05]$/.test(exponent.toString());
   }
 
   private indexed(base: Tree, name: Name, raised: readonly string[], exponentAt: number): Reading {
@@ -222,6 +236,8 @@ class TermReader {
   }
 
   private meaning(name: Name, raised: readonly string[]): Meaning {
+    const symbol = canonicalName(name);
+    if (!this.opened && this.couplings.has(symbol)) return { means: "coefficient", symbol, declared: false };
     return meaningOf(name, raised, this.vocabulary);
   }
 
@@ -255,6 +271,7 @@ class TermReader {
       case "coefficient": {
         const { symbol } = meaning;
         if (!meaning.declared) {
+          if (functionNames.test(symbol)) return this.fail("function-in-term", at, { text: symbol });
           if (this.opened) return this.fail("unknown-symbol", at, { symbol, ...this.suggestion(symbol) });
           this.unknown = { symbol, at };
         }
@@ -272,18 +289,11 @@ class TermReader {
   }
 }
 
-/** The name under groups, styles and accents; null when there is none or more than one. */
-function nameInside(tree: Tree): Name | null {
-  if (tree.type === "name") return tree.name;
-  if (tree.type === "group") return nameInside(tree.body);
-  return tree.type === "accent" ? nameInside(tree.body) : null;
-}
-
 function indicesOf(tree: Tree): string[] {
   if (tree.type === "group") return indicesOf(tree.body);
   if (tree.type === "product") return tree.factors.flatMap((factor) => indicesOf(factor.node));
   if (tree.type !== "name") return [];
   const symbol = canonicalName(tree.name);
   // "^{abc}" are three indices, "^{mu nu}" two.
-  return isIndex(symbol) || !/^[a-z]+$/.test(symbol) ? [symbol] : Array.from(symbol);
+  return isIndex(symbol) || hasCommand(symbol) || !/^[A-Za-z]+$/.test(symbol) ? [symbol] : Array.from(symbol);
 }

@@ -99,6 +99,16 @@ const characterSigns: Readonly<Record<string, Sign>> = {
   ",": ",",
 };
 
+const vulgarFractions: Readonly<Record<string, string>> = {
+  "½": "1/2",
+  "⅓": "1/3",
+  "⅔": "2/3",
+  "¼": "1/4",
+  "¾": "3/4",
+  "⅙": "1/6",
+  "⅛": "1/8",
+};
+
 const literal = /^(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?/;
 const measured = /^(\d+(?:\.\d*)?|\.\d+)\((\d+(?:\.\d+)?)\)(?:[eE]([+-]?\d+))?/;
 const command = /^\\([A-Za-z]+)/;
@@ -126,7 +136,17 @@ export function tokenise(
     // A combining macron or overline, as in ψ̄, is a bar.
     const barred = text.charAt(at + length) === "\u0304" || text.charAt(at + length) === "\u0305";
     if (barred) return pushName(`${base}bar`, length + 1, digits);
-    const tail = readNameTail(text, at + length, digits === "" ? [] : [digits], trouble);
+    // In A^a_\mu the subscript is the base's, for a superscript without braces is one symbol.
+    const before = tokens.at(-1);
+    const isSuperscript = before?.type === "sign" && before.sign === "^" && digits === "";
+    if (isSuperscript) return push({ type: "name", name: { base, subscript: [], primes: 0 } }, length);
+    const tail = readNameTail(
+      text,
+      at + length,
+      digits === "" ? [] : [digits],
+      trouble,
+      !options.measuredLiterals,
+    );
     push({ type: "name", name: { base, subscript: tail.subscript, primes: tail.primes } }, tail.to - at);
   };
   while (at < text.length && !trouble.failure) {
@@ -151,6 +171,8 @@ export function tokenise(
     else if (rest.startsWith("\\|")) push({ type: "sign", sign: "|" }, 2);
     else if (run) pushName(run[1] ?? "", run[0].length, run[2]);
     else if (unicode !== null) pushName(unicode, 1);
+    else if (Object.hasOwn(vulgarFractions, first))
+      push({ type: "number", text: vulgarFractions[first] ?? "" }, 1);
     else if (raised !== null) {
       const length = raised.length;
       push({ type: "sign", sign: "^" }, 0);
@@ -210,9 +232,22 @@ function superscriptRun(text: string): string | null {
   return run === "" || run === "-" ? null : run;
 }
 
+/** C^{(3)}_{Hq} is C_{Hq,3}: a bracketed superscript tells couplings apart and is no power. */
+function withLabel(subscript: readonly string[], label: string | null): readonly string[] {
+  if (label === null) return subscript;
+  return subscript.length === 0 ? [label] : [...subscript, ",", label];
+}
+
 /** Subscripts and primes right after a name; `taken` are digits that were written on to it, "c6". */
-function readNameTail(text: string, start: number, taken: readonly string[], trouble: FirstFailure) {
+function readNameTail(
+  text: string,
+  start: number,
+  taken: readonly string[],
+  trouble: FirstFailure,
+  mayBeLabelled: boolean,
+) {
   let to = start;
+  let label: string | null = null;
   let subscript: readonly string[] = taken;
   let primes = 0;
   for (;;) {
@@ -220,6 +255,8 @@ function readNameTail(text: string, start: number, taken: readonly string[], tro
     const lowered = subscriptDigit(next);
     const prime = /^(?:'|′|\^\s*\{?\s*\\prime\s*\}?)/.exec(text.slice(to));
     const underscore = /^\s*_/.exec(text.slice(to));
+    const labelled: RegExpExecArray | null =
+      mayBeLabelled && label === null ? /^\s*\^\s*\{\s*\((\d{1,2})\)\s*\}/.exec(text.slice(to)) : null;
     if (prime) {
       primes += 1;
       to += prime[0].length;
@@ -239,6 +276,9 @@ function readNameTail(text: string, start: number, taken: readonly string[], tro
       const found = readSubscript(text, to + underscore[0].length, trouble);
       subscript = found.pieces;
       to = found.to;
-    } else return { subscript, primes, to };
+    } else if (labelled) {
+      label = labelled[1] ?? "";
+      to += labelled[0].length;
+    } else return { subscript: withLabel(subscript, label), primes, to };
   }
 }

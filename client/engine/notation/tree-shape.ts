@@ -1,4 +1,5 @@
 /** Questions about the shape of a tree, before anything is resolved. */
+import type { Name } from "./names.ts";
 import type { Factor, Tree } from "./tree.ts";
 
 /** A bare number, without a unit. */
@@ -30,4 +31,11 @@ export function withSubscript(tree: Tree, pieces: readonly string[]): Tree | nul
     return base && { ...tree, base };
   }
   return null;
+}
+
+/** The name under groups, styles and accents; null when there is none or more than one. */
+export function nameInside(tree: Tree): Name | null {
+  if (tree.type === "name") return tree.name;
+  if (tree.type === "group") return nameInside(tree.body);
+  return tree.type === "accent" ? nameInside(tree.body) : null;
 }

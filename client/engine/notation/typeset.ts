@@ -163,5 +163,5 @@ function nameIn(name: Name, vocabulary: Vocabulary): string {
 }
 
 function literalLatex(text: string): string {
-  return text.replace(/[eE]\+?(-?\d+)$/, "\\times 10^{$1}");
+  return text.replace(/^(\d)\/(\d)$/, "\\frac{$1}{$2}").replace(/[eE]\+?(-?\d+)$/, "\\times 10^{$1}");
 }

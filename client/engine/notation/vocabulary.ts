@@ -57,6 +57,8 @@ const tensors = new Set([
 const traces = new Set(["Tr", "tr", "Str"]);
 /** d's that may be written on to a field: "dddphi". Longer runs are names. */
 const MOST_WRITTEN_DERIVATIVES = 8;
+/** Directions: D_\perp. */
+const transverse = new Set(["perp", "parallel"]);
 const latinIndices = /^[abcijklmnrs]$/;
 
 /** Names that no field and no scale may take, because a term reads them otherwise. */
@@ -72,8 +74,10 @@ export function isIndex(piece: string): boolean {
   return isLowerGreek(piece) || latinIndices.test(piece);
 }
 
-export function isRaisedIndex(piece: string): boolean {
-  return isLowerGreek(piece) || /^[abcijkl]$/.test(piece);
+/** W^I, f^{abe}, G^{A\nu}: among several any letter but n is an index, as nobody raises to a product of letters. */
+export function areRaisedIndices(pieces: readonly string[]): boolean {
+  const letter = pieces.length > 1 ? /^[A-Za-mo-z]$/ : /^[abcijklABCIJK]$/;
+  return pieces.length > 0 && pieces.every((piece) => isLowerGreek(piece) || letter.test(piece));
 }
 
 /** The meaning of a name; `raised` are the indices of its superscript. */
@@ -85,16 +89,13 @@ export function meaningOf(name: Name, raised: readonly string[], vocabulary: Voc
   if (symbol === "pi") return { means: "coefficient", symbol, declared: true };
   if (symbol === "i") return { means: "imaginary unit" };
   if (traces.has(name.base)) return { means: "structure" };
+  // The symmetric structure constants d^{abc}.
+  if (name.base === "d" && raised.length === 3 && !raised.some(isLowerGreek)) return { means: "structure" };
   const derivative = derivativeMeaning(name, raised);
   if (derivative) return derivative;
   const matrix = /^(gamma_[05]|P_[LR])$/.test(symbol);
-  const indexed = [...raised, ...name.subscript].some((piece) => isIndex(piece));
-  if (
-    matrix ||
-    (tensors.has(name.base.replace(/(bar|tilde)$/, "")) &&
-      indexed &&
-      (raised.length > 0 || isLorentz(name.subscript)))
-  )
+  const pointed = raised.length > 0 || isLorentz(name.subscript);
+  if (matrix || (pointed && tensors.has(name.base.replace(/(bar|tilde)$/, ""))))
     return { means: "structure" };
   return { means: "coefficient", symbol, declared: false };
 }
@@ -147,9 +148,9 @@ function derivativeMeaning(name: Name, raised: readonly string[]): Meaning | nul
     return { means: "derivative", count: 2, direction: "spacetime" };
   if (!firstDerivatives.has(name.base)) return null;
   const pieces = [...name.subscript, ...raised].flatMap((piece) =>
-    isLowerGreek(piece) || !/^[a-z]+$/.test(piece) ? [piece] : Array.from(piece),
+    isLowerGreek(piece) || transverse.has(piece) || !/^[a-z]+$/.test(piece) ? [piece] : Array.from(piece),
   );
-  const bad = pieces.find((piece) => !isIndex(piece) && !/^[txyz\d]$/.test(piece));
+  const bad = pieces.find((piece) => !isIndex(piece) && !transverse.has(piece) && !/^[txyz\d]$/.test(piece));
   if (bad !== undefined) return { means: "bad index", text: bad };
   const timely = pieces.filter((piece) => piece === "t" || piece === "0").length;
   const count = Math.max(1, pieces.length);
