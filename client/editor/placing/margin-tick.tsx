@@ -22,6 +22,7 @@ interface Gap {
 export function MarginTick({ editor, open, onOpenChange }: MarginTickProps) {
   const gap = useGap(editor, open);
   const tick = useRef<HTMLButtonElement>(null);
+  const chosen = useRef(false);
   const [picking, setPicking] = useState(false);
   const keys = shortcutWords(INDEX_SHORTCUT);
   return (
@@ -47,8 +48,11 @@ export function MarginTick({ editor, open, onOpenChange }: MarginTickProps) {
             sideOffset={4}
             collisionPadding={12}
             onCloseAutoFocus={(event) => {
-              // What was placed has the focus already; giving up goes back to the prose.
+              // What was placed takes the focus itself, maybe some frames later; giving up goes back to the prose.
               event.preventDefault();
+              const placing = chosen.current;
+              chosen.current = false;
+              if (placing) return;
               if (document.activeElement === document.body || document.activeElement === tick.current) {
                 editor.commands.focus();
               }
@@ -56,6 +60,7 @@ export function MarginTick({ editor, open, onOpenChange }: MarginTickProps) {
           >
             <PlacementIndex
               onChoose={(placeable) => {
+                chosen.current = true;
                 onOpenChange(false);
                 placeable.place(editor, gap.index, {
                   pinPicker: () => {

@@ -50,18 +50,38 @@ export function placeBlock(editor: Editor, kind: KindName, gap = gapAtCaret(edit
   const type = editor.schema.nodes[kind];
   if (!type) throw new Error(`the schema has no node for ${kind}`);
   const blockId = newId();
-  const position = placeNode(editor, type.create({ blockId, standsOn }), gap);
-  focusInside(editor, position);
+  placeNode(editor, type.create({ blockId, standsOn }), gap);
+  focusInside(editor, blockId);
   return blockId;
 }
 
-/** A form's first field takes the focus once the block is drawn. */
-function focusInside(editor: Editor, position: number): void {
+/** Two seconds at the usual rate: a block that is not drawn by then is left alone. */
+const MOST_FRAMES = 120;
+
+/** A form's first field takes the focus once the block is drawn: React takes its frames, most in a long notebook. */
+function focusInside(editor: Editor, blockId: string, framesLeft = MOST_FRAMES): void {
   requestAnimationFrame(() => {
     if (editor.isDestroyed) return;
-    const element = editor.view.nodeDOM(position);
-    if (!(element instanceof HTMLElement)) return;
-    element.scrollIntoView({ block: "nearest" });
-    element.querySelector<HTMLElement>("input, textarea, select, [contenteditable=true], button")?.focus();
+    const element = elementOfBlock(editor, blockId);
+    const field = element?.querySelector<HTMLElement>(
+      "input, textarea, select, [contenteditable=true], button",
+    );
+    if (element && field) {
+      element.scrollIntoView({ block: "nearest" });
+      field.focus();
+    } else if (framesLeft > 0) {
+      focusInside(editor, blockId, framesLeft - 1);
+    }
   });
+}
+
+/** Looked for by its id: a colleague may have written above it since. */
+function elementOfBlock(editor: Editor, blockId: string): HTMLElement | null {
+  let found: HTMLElement | null = null;
+  editor.state.doc.forEach((node, offset) => {
+    if (node.attrs["blockId"] !== blockId) return;
+    const element = editor.view.nodeDOM(offset);
+    if (element instanceof HTMLElement) found = element;
+  });
+  return found;
 }
