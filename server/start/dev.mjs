@@ -22,7 +22,9 @@ try {
       port: pagePort,
       strictPort: true,
       proxy: {
-        "^/(api|auth|healthz|readyz)": { target },
+        // The page's own modules under client/api/ are Vite's to serve.
+        "^/api/(?!.*\\.tsx?($|\\?))": { target },
+        "^/(auth|healthz|readyz)": { target },
         "/collab": { target, ws: true },
       },
     },
