@@ -1,8 +1,25 @@
 /** Prose: paragraphs, headings, lists, quotations, code, links and tables. */
-import { Node, type AnyExtension } from "@tiptap/core";
+import type { AnyExtension } from "@tiptap/core";
+import { Blockquote } from "@tiptap/extension-blockquote";
+import { Bold } from "@tiptap/extension-bold";
+import { Code } from "@tiptap/extension-code";
+import { CodeBlock } from "@tiptap/extension-code-block";
+import { Document } from "@tiptap/extension-document";
+import { HardBreak } from "@tiptap/extension-hard-break";
+import { Heading } from "@tiptap/extension-heading";
+import { HorizontalRule } from "@tiptap/extension-horizontal-rule";
+import { Italic } from "@tiptap/extension-italic";
+import { BulletList } from "@tiptap/extension-list/bullet-list";
+import { ListItem } from "@tiptap/extension-list/item";
+import { ListKeymap } from "@tiptap/extension-list/keymap";
+import { OrderedList } from "@tiptap/extension-list/ordered-list";
+import { Paragraph } from "@tiptap/extension-paragraph";
+import { Strike } from "@tiptap/extension-strike";
 import { Table, TableCell, TableHeader, TableRow } from "@tiptap/extension-table";
-import StarterKit from "@tiptap/starter-kit";
-import { isSafeLink } from "./safe-link.ts";
+import { Text } from "@tiptap/extension-text";
+import { Dropcursor } from "@tiptap/extensions/drop-cursor";
+import { Gapcursor } from "@tiptap/extensions/gap-cursor";
+import { Link } from "./link-mark.ts";
 
 /**
  * A list item may begin with any block. The usual "paragraph first" is a fixed sequence: when one person deletes the
@@ -10,38 +27,27 @@ import { isSafeLink } from "./safe-link.ts";
  */
 const listItemContent = "block+";
 
-const Prose = StarterKit.extend({
-  addExtensions() {
-    const parts: AnyExtension[] = this.parent?.() ?? [];
-    return parts.map((part) => {
-      if (part.name === "listItem" && part instanceof Node) return part.extend({ content: listItemContent });
-      if (part.name === "link") {
-        // Only the address is stored: target, rel and class of a link are ours to choose, not a writer's.
-        return part.extend({ addAttributes: () => ({ href: { default: null } }) });
-      }
-      return part;
-    });
-  },
-}).configure({
-  // Yjs keeps the history, per person.
-  undoRedo: false,
-  heading: { levels: [1, 2, 3] },
-  underline: false,
-  link: {
-    openOnClick: false,
-    autolink: true,
-    linkOnPaste: true,
-    defaultProtocol: "https",
-    isAllowedUri: isSafeLink,
-    shouldAutoLink: isSafeLink,
-    HTMLAttributes: { rel: "noopener noreferrer nofollow", target: "_blank" },
-  },
-  // Its view adds an empty paragraph at the end by itself, which would be an edit nobody made.
-  trailingNode: false,
-});
-
+// One by one: a bundle of them all would bring a second history, which Yjs keeps per person, and more that is not used.
 export const proseExtensions: readonly AnyExtension[] = [
-  Prose,
+  Bold,
+  Blockquote,
+  BulletList,
+  Code,
+  CodeBlock,
+  Document,
+  Dropcursor,
+  Gapcursor,
+  HardBreak,
+  Heading.configure({ levels: [1, 2, 3] }),
+  HorizontalRule,
+  Italic,
+  ListItem.extend({ content: listItemContent }),
+  ListKeymap,
+  Link,
+  OrderedList,
+  Paragraph,
+  Strike,
+  Text,
   Table.configure({ resizable: false, allowTableNodeSelection: true }),
   TableRow,
   TableHeader,
