@@ -52,7 +52,7 @@ export const Link = Mark.create({
         find: /(\S+)\s$/,
         handler({ state, range, match }) {
           const address = addressBefore(match[1] ?? "");
-          const space = (match[0] ?? "").slice(-1);
+          const space = match[0].slice(-1);
           const type = state.schema.marks["link"];
           // The end of a paragraph is no space to insert; Enter is seen to below.
           if (!address || !type || space === "\n") return null;
