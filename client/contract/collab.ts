@@ -5,7 +5,10 @@ export const messageType = {
   sync: 0,
   awareness: 1,
   queryAwareness: 3,
-  /** Server to client: varUint, how many sync frames with content (step 2 or update) of this connection are committed. */
+  /**
+   * Server to client: varUint, how many sync frames with content (step 2 or update) of this connection are committed,
+   * counted from the first without a gap. A frame that was rejected is never counted, nor is any after it.
+   */
   saved: 100,
   /** Server to client: varString, JSON of a `ServerNotice`. */
   notice: 101,

@@ -10,6 +10,7 @@ import type { Database } from "../data/database.ts";
 import type { Sessions } from "../http/sessions.ts";
 import type { AccessChanges } from "../policies/access-changes.ts";
 import { AccessWatch } from "./access-watch.ts";
+import type { RetryTimes } from "./append-until-answered.ts";
 import { admit, type Admitted } from "./admission.ts";
 import { compactHere, createCompaction, type Compact } from "./compaction.ts";
 import { Connection } from "./connection.ts";
@@ -21,7 +22,8 @@ import {
   LARGEST_PAYLOAD_BYTES,
 } from "./limits.ts";
 import { receiveFrames } from "./receive-frames.ts";
-import { RoomNotFound, type Lease, type RoomObserver } from "./room.ts";
+import { RoomNotFound, type RoomObserver } from "./room-state.ts";
+import type { Lease } from "./room.ts";
 import { Rooms } from "./rooms.ts";
 
 export interface CollabDependencies {
@@ -38,7 +40,7 @@ export interface CollabDependencies {
   /** For tests: a store that is slow or fails on purpose. Stopped with the rest. */
   readonly store?: DocumentStore;
   readonly lingerMs?: number;
-  readonly retry?: { readonly firstMs: number; readonly longestMs: number };
+  readonly retry?: RetryTimes;
 }
 export interface Collab {
   readonly rooms: Rooms;

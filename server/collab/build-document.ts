@@ -17,7 +17,7 @@ export interface BuiltDocument {
 }
 
 /** The origin of what comes from the store while a document is being made. */
-export const loadingOrigin = Symbol("loading");
+const loadingOrigin = Symbol("loading");
 
 /**
  * After a failure the document may hold half a row, so it is thrown away and made again without that row.

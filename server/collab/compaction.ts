@@ -3,7 +3,7 @@ import type { Logger } from "pino";
 import * as Y from "yjs";
 import { buildDocument, type BadRow, type StoredUpdate } from "./build-document.ts";
 import type { DocumentStore } from "./document-store.ts";
-import type { OpenRoom, RoomObserver } from "./room.ts";
+import type { OpenRoom, RoomObserver } from "./room-state.ts";
 
 export interface Compacted {
   readonly state: Uint8Array;

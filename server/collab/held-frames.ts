@@ -1,7 +1,7 @@
 /** Frames that build on something not seen yet: kept back, in order and bounded, never stored. */
 import type { Connection } from "./connection.ts";
 import { HELD_PER_CONNECTION } from "./limits.ts";
-import type { QueuedUpdate } from "./update-writer.ts";
+import type { QueuedUpdate } from "./writer-reports.ts";
 
 interface Held {
   readonly entry: QueuedUpdate;

@@ -11,38 +11,23 @@
 import { setTimeout as sleep } from "node:timers/promises";
 import type { Logger } from "pino";
 import { closeCode, type ServerNotice } from "#contract/collab.ts";
+import type { RetryTimes } from "./append-until-answered.ts";
 import { CommittedDocument, type CommittedBy } from "./committed-document.ts";
 import type { Connection } from "./connection.ts";
 import type { DocumentStore } from "./document-store.ts";
 import { writeStep1, writeUpdate } from "./frames.ts";
 import { Presence } from "./presence.ts";
-import { UpdateWriter, type QueuedUpdate, type WriterReports } from "./update-writer.ts";
-
-export type RoomState = "loading" | "open" | "draining" | "closed" | "failed";
-
-const ways: Readonly<Record<RoomState, readonly RoomState[]>> = {
-  loading: ["open", "failed"],
-  open: ["draining", "failed"],
-  draining: ["open", "closed", "failed"],
-  closed: [],
-  failed: [],
-};
-
-/** What others may see of an open room. */
-export interface OpenRoom {
-  readonly notebookId: string;
-  readonly content: CommittedDocument;
-  notify(notice: ServerNotice): void;
-}
-/** Told of what happens in rooms: evaluation and compaction listen. Must not throw. */
-export interface RoomObserver {
-  opened?(room: OpenRoom): void;
-  committed?(room: OpenRoom): void;
-  /** Before a room closes; it waits for this, and turns back if someone comes meanwhile. */
-  draining?(room: OpenRoom): Promise<void>;
-  /** Also after a failure. */
-  ended?(room: OpenRoom): void;
-}
+import {
+  RoomFailed,
+  RoomNotFound,
+  ways,
+  type OpenRoom,
+  type RoomObserver,
+  type RoomState,
+} from "./room-state.ts";
+import { reportsTo } from "./room-reports.ts";
+import { UpdateWriter } from "./update-writer.ts";
+import type { QueuedUpdate } from "./writer-reports.ts";
 
 export interface RoomOptions {
   readonly notebookId: string;
@@ -51,11 +36,8 @@ export interface RoomOptions {
   readonly observers: readonly RoomObserver[];
   /** How long an empty room is kept for those who reload their page. */
   readonly lingerMs: number;
-  readonly retry?: { readonly firstMs: number; readonly longestMs: number };
+  readonly retry?: RetryTimes;
 }
-
-export class RoomNotFound extends Error {}
-export class RoomFailed extends Error {}
 
 export interface Lease {
   readonly room: Room;
@@ -242,7 +224,7 @@ export class Room {
       store,
       document,
       log,
-      reports: this.#reports(),
+      reports: reportsTo(this, document, (batch) => this.#committed(batch)),
       ...(retry === undefined ? {} : { retry }),
     });
     const open = { notebookId, content: document, notify: (notice: ServerNotice) => this.notify(notice) };
@@ -257,34 +239,6 @@ export class Room {
   #broadcast(update: Uint8Array, origin: CommittedBy): void {
     const frame = writeUpdate(update);
     for (const member of this.members) if (member.joined && member !== origin.connection) member.send(frame);
-  }
-
-  #reports(): WriterReports {
-    return {
-      committed: (batch) => this.#committed(batch),
-      refused: ({ connection }, reason) => connection.notify({ about: "rejected", reason }),
-      malformed: (connection, reason) => connection.close(closeCode.malformed, reason.slice(0, 100)),
-      lostRight: (people) => {
-        for (const member of this.members) {
-          const { visitor, rights } = member;
-          if (visitor.as !== "member" || !rights.mayWrite) continue;
-          if (people !== "everyone" && !people.includes(visitor.personId)) continue;
-          member.rights = { ...rights, mayWrite: false };
-          this.rightsChanged(member, rights);
-        }
-      },
-      schemaRaised: () => {
-        const version = this.#content?.document.schemaVersion ?? 0;
-        for (const member of this.members)
-          if (member.schemaVersion < version)
-            member.close(closeCode.schemaTooOld, "the notebook needs a newer page");
-      },
-      storeUnreachable: () => this.notify({ about: "store-unreachable" }),
-      storeBack: () => this.notify({ about: "store-back" }),
-      notebookGone: () =>
-        this.fail(new RoomNotFound("deleted"), closeCode.notFound, "the notebook was deleted"),
-      broken: (error) => this.fail(error),
-    };
   }
 
   #committed(batch: readonly QueuedUpdate[]): void {

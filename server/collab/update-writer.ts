@@ -7,36 +7,12 @@ import type { Logger } from "pino";
 import { CommittedBy, type CommittedDocument } from "./committed-document.ts";
 import type { Connection } from "./connection.ts";
 import type { AppendOutcome, DocumentStore } from "./document-store.ts";
+import { appendUntilAnswered, usualRetry, type RetryTimes } from "./append-until-answered.ts";
 import { BackPressure } from "./back-pressure.ts";
 import { HeldFrames } from "./held-frames.ts";
+import type { QueuedUpdate, WriterReports } from "./writer-reports.ts";
 import { BATCH } from "./limits.ts";
-import { isPassing } from "./store-errors.ts";
 import { assessUpdate, isDeletedIn, type Assessment, type KnownContent } from "./update-check.ts";
-
-export interface QueuedUpdate {
-  readonly connection: Connection;
-  readonly frame: number;
-  readonly personId: string;
-  readonly update: Uint8Array;
-  /** False when there is nothing new in it: it is acknowledged in its turn and not stored. */
-  carries: boolean;
-}
-
-/** What the writer has to say; the room acts on it. */
-export interface WriterReports {
-  committed(batch: readonly QueuedUpdate[]): void;
-  /** This update will never be stored. */
-  refused(update: QueuedUpdate, reason: string): void;
-  malformed(connection: Connection, reason: string): void;
-  /** These people may not write, or nobody may. */
-  lostRight(personIds: readonly string[] | "everyone"): void;
-  schemaRaised(): void;
-  storeUnreachable(): void;
-  storeBack(): void;
-  notebookGone(): void;
-  /** The room cannot go on and must be loaded afresh; nothing that was acknowledged is lost by that. */
-  broken(error: unknown): void;
-}
 
 export interface WriterOptions {
   readonly notebookId: string;
@@ -44,10 +20,8 @@ export interface WriterOptions {
   readonly document: CommittedDocument;
   readonly reports: WriterReports;
   readonly log: Logger;
-  readonly retry?: { readonly firstMs: number; readonly longestMs: number };
+  readonly retry?: RetryTimes;
 }
-
-const ATTEMPTS_WHEN_HOPELESS = 3;
 
 export class UpdateWriter {
   readonly #options: WriterOptions;
@@ -58,10 +32,12 @@ export class UpdateWriter {
   readonly #held = new HeldFrames();
   readonly #known: KnownContent;
   readonly #stop = new AbortController();
+  readonly #retry: RetryTimes;
   #running: Promise<void> | null = null;
 
   constructor(options: WriterOptions) {
     this.#options = options;
+    this.#retry = options.retry ?? usualRetry;
     const { document } = options;
     this.#known = {
       clockOf: (client) => Math.max(this.#reaches.get(client) ?? 0, document.clockOf(client)),
@@ -184,9 +160,8 @@ export class UpdateWriter {
     return this.#queue.slice(0, count);
   }
 
-  /** Tries until the store answers; only errors that cannot pass by themselves end it. */
   async #append(carrying: readonly QueuedUpdate[]): Promise<AppendOutcome | null | "given up"> {
-    const { store, document, notebookId, reports, log, retry } = this.#options;
+    const { store, document, notebookId, reports, log } = this.#options;
     const versions = carrying.map(({ connection }) => connection.schemaVersion);
     const request = {
       notebookId,
@@ -194,29 +169,18 @@ export class UpdateWriter {
       updates: carrying,
       schema: { lowest: Math.min(...versions), highest: Math.max(...versions) },
     };
-    const longest = retry?.longestMs ?? 2_000;
-    let delay = retry?.firstMs ?? 100;
-    let hopeless = 0;
-    for (let attempt = 1; ; attempt += 1) {
-      try {
-        const outcome = await store.append(request);
-        if (this.#isGivenUp()) return "given up";
-        if (attempt > 1) reports.storeBack();
-        return outcome;
-      } catch (error) {
-        if (this.#isGivenUp()) return "given up";
-        log.error({ err: error, attempt }, "updates could not be stored");
-        if (!isPassing(error)) hopeless += 1;
-        if (hopeless >= ATTEMPTS_WHEN_HOPELESS) {
-          reports.broken(error);
-          return "given up";
-        }
-        if (attempt === 1) reports.storeUnreachable();
-      }
-      await sleep(delay, undefined, { signal: this.#stop.signal }).catch(() => undefined); // aborted: looked at above
-      if (this.#isGivenUp()) return "given up";
-      delay = Math.min(delay * 2, longest);
+    const outcome = await appendUntilAnswered(store, request, {
+      log,
+      signal: this.#stop.signal,
+      retry: this.#retry,
+      onUnreachable: () => reports.storeUnreachable(),
+      onBack: () => reports.storeBack(),
+    });
+    if (outcome !== null && "hopeless" in outcome) {
+      reports.broken(outcome.hopeless);
+      return "given up";
     }
+    return outcome !== null && "abandoned" in outcome ? "given up" : outcome;
   }
 
   #commit(batch: readonly QueuedUpdate[], carrying: readonly QueuedUpdate[], outcome: AppendOutcome): void {
@@ -289,7 +253,7 @@ export class UpdateWriter {
     } catch (error) {
       // The next append meets the same store and says what there is to say about it.
       this.#options.log.error({ err: error }, "rows of another process could not be read");
-      await sleep(this.#options.retry?.firstMs ?? 100);
+      await sleep(this.#retry.firstMs);
     }
   }
 

@@ -1,7 +1,7 @@
 /** All that computes on the server, opened together and stopped together. */
 import type { Logger } from "pino";
 import type { Compacted } from "../collab/compaction.ts";
-import type { RoomObserver } from "../collab/room.ts";
+import type { RoomObserver } from "../collab/room-state.ts";
 import type { Database } from "../data/database.ts";
 import { openComputePool } from "./compute-pool.ts";
 import { createSettling, type SettlingTimes } from "./settling.ts";

@@ -1,6 +1,6 @@
 /** Evaluates a notebook once its document has settled, and stores what is new. */
 import type { Logger } from "pino";
-import type { OpenRoom, RoomObserver } from "../collab/room.ts";
+import type { OpenRoom, RoomObserver } from "../collab/room-state.ts";
 import { isPassing } from "../collab/store-errors.ts";
 import type { Database } from "../data/database.ts";
 import { ComputeFailed, type ComputePool } from "./compute-pool.ts";

@@ -43,7 +43,7 @@ function configurationFor(databaseUrl: string): Configuration {
 export async function startCollabServer(databaseUrl: string, parts: Parts = {}): Promise<CollabServer> {
   const { with: made, port = 0, ...given } = parts;
   const log = given.log ?? pino({ level: process.env["TEST_LOG_LEVEL"] ?? "silent" });
-  const database = openDatabase(databaseUrl);
+  const database = openDatabase(databaseUrl, { log });
   const configuration = configurationFor(databaseUrl);
   const sessions = openSessions(configuration, publicUrl, log);
   const accessChanges = await listenForAccessChanges(databaseUrl, log);
