@@ -17,7 +17,7 @@ function raised(body: string, power: number): string {
 /**
  * Derivatives first, then the fields in the order of the theory: "\partial^{2}\phi^{4}".
  * A conjugate wears a bar when the field is fermionic, a dagger otherwise.
- * @example operatorLatex({ fields: [{ symbol: "phi", conjugated: false, count: 4 }], derivatives: 2, timeDerivatives: 0 }, fields) // "\\partial^{2}\\phi^{4}"
+ * @example operatorLatex({ fields: [{ symbol: "phi", conjugated: false, count: 4 }], derivatives: 2, timeDerivatives: 0 }, fields, "isotropic") // "\\partial^{2}\\phi^{4}"
  */
 export function operatorLatex(
   operator: {
@@ -26,6 +26,7 @@ export function operatorLatex(
     readonly timeDerivatives: number;
   },
   fields: readonly DrawnField[],
+  geometry: "isotropic" | "anisotropic",
 ): string {
   const legs = fields.flatMap(({ symbol, latex, kind }) => {
     const count = (conjugated: boolean) =>
@@ -44,7 +45,7 @@ export function operatorLatex(
   const signs = [
     ...(operator.timeDerivatives > 0 ? [raised("\\partial_t", operator.timeDerivatives)] : []),
     ...(operator.derivatives > 0
-      ? [raised(operator.timeDerivatives > 0 ? "\\nabla" : "\\partial", operator.derivatives)]
+      ? [raised(geometry === "anisotropic" ? "\\nabla" : "\\partial", operator.derivatives)]
       : []),
   ];
   return [...signs, ...legs].join(" ");

@@ -174,10 +174,11 @@ class TermReader {
     const symbol = canonicalName(name);
     if (this.vocabulary.scales.has(symbol)) return false;
     if (symbol === "sigma" || symbol === "gamma" || symbol === "tau") return this.opened;
-    const differentiated = nameInside(partner);
-    return (
-      symbol === "v" && differentiated !== null && this.meaning(differentiated, []).means === "derivative"
-    );
+    const other = nameInside(partner);
+    if (symbol !== "v" || !other) return false;
+    // Before the fields v·φ³ has a coupling; among them, as in h̄ v·A h, only a velocity can stand.
+    const { means } = this.meaning(other, []);
+    return means === "derivative" || (means === "field" && this.opened);
   }
 
   private divide(over: Reading, tree: Tree): Reading {

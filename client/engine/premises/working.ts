@@ -86,7 +86,7 @@ export function dimensionLatex(term: Term, theory: Theory): string {
     ...(timeDerivatives > 0 ? [timeDerivatives === 1 ? "z" : `${timeDerivatives}z`] : []),
   ];
   const rest = measure === "d" ? "d - \\Delta" : "D + z - \\Delta";
-  return `\\Delta\\!\\left(${operatorLatex(term.monomial, theory.fields)}\\right) = ${parts.join(" + ")} = ${term.dimension.toLatex()},\\qquad ${rest} = ${term.coefficient.toLatex()}`;
+  return `\\Delta\\!\\left(${operatorLatex(term.monomial, theory.fields, theory.spacetime.geometry)}\\right) = ${parts.join(" + ")} = ${term.dimension.toLatex()},\\qquad ${rest} = ${term.coefficient.toLatex()}`;
 }
 
 function scaleSteps(theory: Theory, expressions: ReadonlyMap<string, string>): WorkingStep[] {

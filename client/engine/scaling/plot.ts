@@ -20,6 +20,8 @@ export function scalingPlot(point: WorkingPoint, rows: readonly ScalingRow[]): S
   if (!probe?.quantity || !heavy?.quantity || !expansion) return null;
   const p = shown(probe.quantity);
   const heavyInUnit = p.value / expansion.value;
+  // Scales so far apart that their ratio leaves the range of a double have no common axis.
+  if (!Number.isFinite(heavyInUnit * ROOM_ABOVE) || !(p.value / ROOM_BELOW > 0)) return null;
   const [from, to] = [
     Math.min(p.value, heavyInUnit) / ROOM_BELOW,
     Math.max(p.value, heavyInUnit) * ROOM_ABOVE,

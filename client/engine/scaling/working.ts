@@ -41,7 +41,7 @@ export function scalingWorking(
 }
 
 function termSteps({ term, row }: WorkedRow, theory: Theory, free: string | null): WorkingStep[] {
-  const operator = operatorLatex(term.monomial, theory.fields);
+  const operator = operatorLatex(term.monomial, theory.fields, theory.spacetime.geometry);
   const coefficient = coefficientLatex(term.monomial);
   const measure = theory.spacetime.geometry === "isotropic" ? "d" : "D + z";
   const bare = coefficient === "1" ? "\\text{coefficient}" : coefficient;

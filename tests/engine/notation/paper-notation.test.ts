@@ -15,6 +15,8 @@ describe("terms read as papers write them", () => {
     ["g \\bar\\psi \\gamma^\\mu \\gamma^5 \\psi \\partial_\\mu \\phi", "1 | g | psi* psi phi | 1"],
     ["\\gamma^5 phi^2", "1 | gamma^5 | phi^2 | 0"],
     ["\\frac{1}{2 M} \\bar h_v D_\\perp^2 h_v", "1/2 | M^-1 | h_v* h_v | 2"],
+    ["g \\bar h_v v\\cdot A h_v", "1 | g | h_v* h_v A | 0"],
+    ["v\\cdot \\phi^3", "1 | v | phi^3 | 0"],
     ["½ (∂φ)²", "1/2 |  | phi^2 | 2"],
     ["g/½ φ", "2 | g | phi | 0"],
     ["y (\\bar\\psi \\psi \\phi + h.c.)", "1 | y | psi* psi phi | 0"],

@@ -82,7 +82,7 @@ describe("operators and coefficients", () => {
       { fields: [legs("Phi", true, 2), legs("Phi", false, 2)], derivatives: 0, timeDerivatives: 1 },
       "\\partial_t (\\Phi^\\dagger)^{2} \\Phi^{2}",
     ],
-  ])("%#", (operator, latex) => expect(operatorLatex(operator, fields)).toBe(latex));
+  ])("%#", (operator, latex) => expect(operatorLatex(operator, fields, "isotropic")).toBe(latex));
   it("show couplings over scales", () => {
     const coefficients = [
       { symbol: "c_6", power: Rational.one },

@@ -271,6 +271,26 @@ describe("plot, scalars and working", () => {
       }
     }
   });
+  it("draws nothing between scales whose ratio is no double", () => {
+    const far: Sketch = {
+      fields: { chi: "real scalar" },
+      scales: { Lambda: ["1e300 GeV", "heavy"], p: ["1e-20 eV", "probe"] },
+      terms: ["lambda chi^4"],
+    };
+    expect(scaled(far).value?.plot).toBeNull();
+    expect(JSON.stringify(scaled(far).scalars)).not.toContain("null");
+  });
+  it("writes derivatives in space as such under anisotropic scaling", () => {
+    const contact: Sketch = {
+      D: "3",
+      z: "2",
+      fields: { psi: "Schrödinger field" },
+      terms: ["C_2 psi^dagger psi^dagger psi \\nabla^2 psi"],
+    };
+    const text = JSON.stringify(scaled(contact).working);
+    expect(text).toContain("nabla^{2} (\\\\psi^\\\\dagger)^{2}");
+    expect(text).not.toContain("partial^{2}");
+  });
   it("shows an assigned size at p only, where its dimension is symbolic", () => {
     const plot = scaled({ ...lantern, d: "d", terms: [{ term: "chi^4", assigned: "0.2" }] }).value?.plot;
     expect(plot?.curves.map(({ points }) => points)).toEqual([[[350, 0.2]]]);
