@@ -34,16 +34,17 @@ export interface BlockHandle {
   readonly evaluation: Evaluation | null;
   /** The newest evaluation that had a value, when `evaluation` has none: shown as "last good". */
   readonly lastGood: Evaluation | null;
-  /** True while the worker is at a newer state than shown. */
-  readonly pending: boolean;
+  /** Whether the worker is at a newer state than shown. Read by `usePending`: the form need not be drawn for it. */
+  isPending(): boolean;
   /** True when what computes has been stopped: the next change is tried afresh. */
   readonly stopped: boolean;
   /** The Premises blocks one may stand on, and the one chosen (null: none or ambiguous). */
   readonly premisesChoices: readonly { readonly blockId: string; readonly name: string }[];
   readonly standsOn: string | null;
   setStandsOn(blockId: string): void;
-  /** The result of the premises it stands on, for choices such as "which term"; null without. */
-  readonly premisesEvaluation: Evaluation | null;
+  /** The result of the premises it stands on, read by `usePremisesEvaluation`; null without. */
+  premisesEvaluation(): Evaluation | null;
+  onResults(listener: () => void): () => void;
   setValue(place: FieldPlace, value: string): void;
   /** Adds a row after another, or at the end; gives its id. */
   addRow(table: string, values?: Readonly<Record<string, string>>, afterRowId?: string): string;
@@ -78,6 +79,17 @@ export function useBlock(): BlockHandle {
 export function useColleaguesIn(place: FieldPlace): readonly Colleague[] {
   const { onColleagues, colleaguesIn } = useBlock();
   return useSyncExternalStore(onColleagues, () => colleaguesIn(place));
+}
+
+export function usePending(): boolean {
+  const { onResults, isPending } = useBlock();
+  return useSyncExternalStore(onResults, isPending);
+}
+
+/** For choices such as "which term of the premises". */
+export function usePremisesEvaluation(): Evaluation | null {
+  const { onResults, premisesEvaluation } = useBlock();
+  return useSyncExternalStore(onResults, premisesEvaluation);
 }
 
 /** A place as text: an attribute of its element, a key of maps, and what presence says. */

@@ -7,14 +7,11 @@ export interface BlockState {
   readonly tone: "agrees" | "computing" | "waiting" | "partly" | "error";
 }
 
-type Seen = Pick<
-  BlockHandle,
-  "kind" | "fields" | "tables" | "evaluation" | "lastGood" | "pending" | "stopped"
->;
+type Seen = Pick<BlockHandle, "kind" | "fields" | "tables" | "evaluation" | "lastGood" | "stopped">;
 
 /** `late`: the computation has taken long enough to be worth a word. */
-export function stateOf(block: Seen, late: boolean): BlockState {
-  const { evaluation, lastGood, pending, stopped } = block;
+export function stateOf(block: Seen, pending: boolean, late: boolean): BlockState {
+  const { evaluation, lastGood, stopped } = block;
   if (pending && stopped) return { words: "not computed: it took too long or failed", tone: "error" };
   if (late || evaluation === null) return { words: "computing", tone: "computing" };
   const { value, problems } = evaluation;

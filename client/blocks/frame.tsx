@@ -10,7 +10,7 @@ import {
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { classes } from "../ui/classes.ts";
 import { shownEvaluation } from "./block-parts.ts";
-import { useBlock } from "./block-handle.ts";
+import { useBlock, usePending } from "./block-handle.ts";
 import { Notices, OtherProblems } from "./parts/problem-list.tsx";
 import { TextField } from "./parts/text-field.tsx";
 import { Working } from "./parts/working.tsx";
@@ -149,8 +149,8 @@ const QUIET_MS = 250;
 
 function StateWord() {
   const block = useBlock();
-  const late = useLate(block.pending);
-  const state = stateOf(block, late);
+  const pending = usePending();
+  const state = stateOf(block, pending, useLate(pending));
   return (
     <span className={`block-state block-state-${state.tone}`} role="status">
       <span className="block-state-mark" aria-hidden="true" />

@@ -1,6 +1,6 @@
 import { superscript } from "#engine/notation/float-text.ts";
 import type { PremisesValue } from "#engine/premises/value.ts";
-import { useBlock } from "../block-handle.ts";
+import { useBlock, usePremisesEvaluation } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
 import { RowTable } from "../parts/row-table.tsx";
 import { TextField } from "../parts/text-field.tsx";
@@ -38,7 +38,7 @@ export function DivergenceForm() {
 function GraphTables() {
   const block = useBlock();
   // Premises' value is what the engine's premises folder gives.
-  const premises = block.premisesEvaluation?.value as PremisesValue | null | undefined;
+  const premises = usePremisesEvaluation()?.value as PremisesValue | null | undefined;
   const terms = (premises?.terms ?? []).filter(({ kinetic }) => !kinetic);
   const typed = new Map(terms.map(({ rowId, latex }) => [rowId, plainLatex(latex)]));
   return (

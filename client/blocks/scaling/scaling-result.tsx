@@ -2,7 +2,7 @@ import type { PremisesValue } from "#engine/premises/value.ts";
 import type { ScalingRow, ScalingValue } from "#engine/scaling/value.ts";
 import { Formula, TextWithMath } from "../../ui/math.tsx";
 import type { ResultProps } from "../block-parts.ts";
-import { useBlock } from "../block-handle.ts";
+import { usePremisesEvaluation } from "../block-handle.ts";
 import { ClassMark } from "../parts/class-mark.tsx";
 import { Decimal, decimalWidths } from "../parts/decimal.tsx";
 import { Figure } from "../parts/figure.tsx";
@@ -71,7 +71,7 @@ export function ScalingResult({ value }: ResultProps<ScalingValue>) {
 
 function ClassHeading({ value }: { readonly value: ScalingValue }) {
   // Premises' value is what the engine's premises folder gives.
-  const premises = useBlock().premisesEvaluation?.value as PremisesValue | null | undefined;
+  const premises = usePremisesEvaluation()?.value as PremisesValue | null | undefined;
   if (value.freeDimension || !premises) return "class";
   return (
     <>

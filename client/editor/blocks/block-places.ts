@@ -2,6 +2,7 @@
 import type { Editor } from "@tiptap/core";
 import type { Node } from "@tiptap/pm/model";
 import { NodeSelection } from "@tiptap/pm/state";
+import { freeId } from "#engine/notebook/free-id.ts";
 import { isKindName } from "./block-elements.ts";
 import type { BlockWorld } from "./block-world.ts";
 import { agreed, occupiedQuestion } from "./occupied.ts";
@@ -11,17 +12,20 @@ export interface BlockPlace {
   readonly node: Node;
 }
 
+const known = new WeakMap<Node, ReadonlyMap<string, BlockPlace>>();
+
 /** Blocks in document order under the ids they are read by: a second block of one id is "id~2". */
 export function blockPlaces(doc: Node): ReadonlyMap<string, BlockPlace> {
+  const before = known.get(doc);
+  if (before) return before;
   const places = new Map<string, BlockPlace>();
+  const taken = new Set<string>();
   doc.descendants((node, position) => {
     if (!isKindName(node.type.name)) return !node.isTextblock;
-    const own = String(node.attrs["blockId"]);
-    let blockId = own === "" ? "unnamed~1" : own;
-    for (let copy = 2; places.has(blockId); copy++) blockId = `${own === "" ? "unnamed" : own}~${copy}`;
-    places.set(blockId, { position, node });
+    places.set(freeId(String(node.attrs["blockId"]), "unnamed", taken), { position, node });
     return false;
   });
+  known.set(doc, places);
   return places;
 }
 

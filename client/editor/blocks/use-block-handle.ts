@@ -23,17 +23,10 @@ export function useBlockHandle(blockId: string): BlockHandle | null {
   const stopped = useEvaluatorState().state !== "working";
   const readOnly = useReadOnly();
   const changes = useMemo(() => changesOf(world, blockId), [world, blockId]);
-  const standsOn = useSyncExternalStore(directory.subscribe, () => {
-    const current = directory.block(blockId);
-    const choice = current && choosePremises(current, directory.blocks());
-    return choice && "found" in choice ? (choice.found?.id ?? null) : null;
-  });
-  const premisesResult = useBlockResult(standsOn ?? "");
-  const premisesEvaluation =
-    standsOn === null ? null : (premisesResult.lastGood ?? premisesResult.evaluation);
+  const standsOn = useSyncExternalStore(directory.subscribe, () => standsOnOf(world, blockId));
+  const { evaluation, lastGood } = result;
   return useMemo(() => {
     if (!block) return null;
-    const { evaluation, lastGood, pending } = result;
     return {
       ...changes,
       ...valuesOf(block),
@@ -42,13 +35,17 @@ export function useBlockHandle(blockId: string): BlockHandle | null {
       readOnly,
       evaluation,
       lastGood: evaluation?.value == null ? lastGood : null,
-      pending,
       stopped,
       premisesChoices: premises,
       standsOn,
-      premisesEvaluation,
     };
-  }, [block, result, stopped, readOnly, changes, premises, standsOn, premisesEvaluation, blockId]);
+  }, [block, evaluation, lastGood, stopped, readOnly, changes, premises, standsOn, blockId]);
+}
+
+function standsOnOf({ directory }: BlockWorld, blockId: string): string | null {
+  const block = directory.block(blockId);
+  const choice = block && choosePremises(block, directory.blocks());
+  return choice && "found" in choice ? (choice.found?.id ?? null) : null;
 }
 
 function valuesOf({ kind, inputs }: BlockInstance): Pick<BlockHandle, "fields" | "tables"> {
@@ -81,11 +78,14 @@ type Changes = Pick<
   | "onColleagues"
   | "writerOf"
   | "pin"
+  | "isPending"
+  | "premisesEvaluation"
+  | "onResults"
 >;
 
 /** Everything a block's form may do. None of it changes while the block stays the same. */
 function changesOf(world: BlockWorld, blockId: string): Changes {
-  const { directory, presence, session } = world;
+  const { directory, presence, results, session } = world;
 
   function change(act: (element: Y.XmlElement, block: BlockInstance) => void): void {
     const element = directory.element(blockId);
@@ -118,6 +118,13 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
       if (place) presence.enter(blockId, placeKey(place));
       else presence.leave(blockId);
     },
+    isPending: () => results.isPending(blockId),
+    premisesEvaluation() {
+      const standsOn = standsOnOf(world, blockId);
+      const result = standsOn === null ? null : results.result(standsOn);
+      return result && (result.lastGood ?? result.evaluation);
+    },
+    onResults: results.subscribe,
     colleaguesIn: (place) => presence.inField(blockId, placeKey(place)),
     onColleagues: presence.subscribe,
     writerOf(place) {

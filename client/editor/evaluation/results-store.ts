@@ -5,10 +5,12 @@
 import type { StoredResult } from "#contract/api.ts";
 import type { Evaluation } from "#engine/evaluation.ts";
 import { choosePremises } from "#engine/notebook/choose-premises.ts";
+import type { NotebookOutcome } from "#engine/notebook/evaluate-notebook.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
 import type { BlockDirectory } from "../blocks/block-directory.ts";
 import { createEvaluationClient, type EvaluatorState, type WorkerLike } from "./evaluation-client.ts";
 import type { EvaluationAnswer } from "./evaluation-messages.ts";
+import { inTurns } from "./in-turns.ts";
 
 export interface Settled {
   /** Null when unknown, or when authors are hidden. */
@@ -24,24 +26,17 @@ export interface BlockResult {
   readonly standsOn: string | null;
   /** The newest evaluation that had a value. */
   readonly lastGood: Evaluation | null;
-  /** The inputs, or those it stands on, are newer than the evaluation. */
-  readonly pending: boolean;
-  /** Who changed what led to this very result, once the server has stored it. */
-  readonly settled: Settled | null;
 }
 
-const nothingYet: BlockResult = {
-  evaluation: null,
-  key: null,
-  standsOn: null,
-  lastGood: null,
-  pending: true,
-  settled: null,
-};
+const nothingYet: BlockResult = { evaluation: null, key: null, standsOn: null, lastGood: null };
 
 export interface ResultsStore {
   result(blockId: string): BlockResult;
-  /** Ids of all blocks, in document order. */
+  /** Whether the inputs, or those they stand on, are newer than the evaluation. */
+  isPending(blockId: string): boolean;
+  /** Who changed what led to this very result, once the server has stored it. */
+  settled(blockId: string): Settled | null;
+  /** All blocks, in document order. */
   blocks(): readonly BlockInstance[];
   evaluator(): EvaluatorState;
   /** Rises with every change of any result or block. */
@@ -70,22 +65,35 @@ export function createResultsStore({
   const listeners = new Set<() => void>();
   let blocks: readonly BlockInstance[] = [];
   let state: EvaluatorState = { state: "working" };
-  let version = 0;
+  const settled = new Map<string, Settled>();
+  let revisionShown = 0;
   let waiting: ReturnType<typeof setTimeout> | null = null;
 
+  let version = 0;
   const publish = () => {
     version += 1;
     for (const listener of listeners) listener();
   };
   const change = (blockId: string, next: Partial<BlockResult>) => {
-    const before = results.get(blockId) ?? nothingYet;
-    const merged = { ...before, ...next };
-    const settled = settledFor(merged.key, stored.get(blockId));
-    results.set(blockId, {
-      ...merged,
-      settled: sameSettled(before.settled, settled) ? before.settled : settled,
-    });
+    results.set(blockId, { ...(results.get(blockId) ?? nothingYet), ...next });
+    settle(blockId);
   };
+  /** Keeps the object as long as it says the same. */
+  const settle = (blockId: string) => {
+    const known = stored.get(blockId);
+    if (!known || known.key !== results.get(blockId)?.key) {
+      settled.delete(blockId);
+      return;
+    }
+    const before = settled.get(blockId);
+    if (before?.by === known.changedBy && before.at === known.settledAt) return;
+    settled.set(blockId, { by: known.changedBy, at: known.settledAt });
+  };
+  // Each outcome is drawn in a task of its own: a block may take some milliseconds, and there may be a hundred.
+  const turns = inTurns<NotebookOutcome>(show, () => {
+    for (const [blockId, since] of awaited) if (since <= revisionShown) awaited.delete(blockId);
+    publish();
+  });
 
   const client = createEvaluationClient({
     startWorker,
@@ -100,17 +108,20 @@ export function createResultsStore({
 
   function hearAnswer({ revision, outcomes, mistakes }: EvaluationAnswer) {
     for (const mistake of mistakes) console.error(`A block could not be computed: ${mistake}`);
-    for (const { blockId, key, standsOn, evaluation } of outcomes) {
-      if (!awaited.has(blockId) && !results.has(blockId)) continue;
-      answered.add(blockId);
-      const good = evaluation.value === null ? {} : { lastGood: evaluation };
-      change(blockId, { evaluation, key, standsOn, ...good });
-    }
-    for (const [blockId, since] of awaited) {
-      if (since > revision) continue;
-      awaited.delete(blockId);
-      if (results.get(blockId)?.pending) change(blockId, { pending: false });
-    }
+    revisionShown = revision;
+    turns.add(outcomes.map((outcome) => [outcome.blockId, outcome]));
+  }
+
+  function show({ blockId, key, standsOn, evaluation }: NotebookOutcome) {
+    // The block may have gone since.
+    if (!directory.block(blockId)) return;
+    answered.add(blockId);
+    change(blockId, {
+      evaluation,
+      key,
+      standsOn,
+      ...(evaluation.value === null ? {} : { lastGood: evaluation }),
+    });
     publish();
   }
 
@@ -126,6 +137,7 @@ export function createResultsStore({
       results.delete(id);
       answered.delete(id);
       awaited.delete(id);
+      settled.delete(id);
     }
     for (const block of blocks) {
       const choice = changed.has(block.id) ? null : choosePremises(block, blocks);
@@ -135,7 +147,6 @@ export function createResultsStore({
         ("found" in choice && choice.found !== null && changed.has(choice.found.id));
       if (!reached) continue;
       awaited.set(block.id, Number.POSITIVE_INFINITY);
-      change(block.id, { pending: true });
       useStored(block.id);
     }
     // Several updates of one moment, as when a colleague's paste arrives, are one request.
@@ -151,6 +162,7 @@ export function createResultsStore({
     const known = stored.get(blockId);
     if (!known || answered.has(blockId)) return;
     const { evaluation, key } = known;
+    if (results.get(blockId)?.key === key) return;
     change(blockId, { evaluation, key, ...(evaluation.value === null ? {} : { lastGood: evaluation }) });
   }
 
@@ -158,6 +170,8 @@ export function createResultsStore({
   const unfollow = directory.subscribe(follow);
   return {
     result: (blockId) => results.get(blockId) ?? nothingYet,
+    isPending: (blockId) => awaited.has(blockId),
+    settled: (blockId) => settled.get(blockId) ?? null,
     blocks: () => blocks,
     evaluator: () => state,
     version: () => version,
@@ -166,7 +180,7 @@ export function createResultsStore({
       for (const result of fresh) stored.set(result.blockId, result);
       for (const { id } of blocks) {
         useStored(id);
-        if (results.has(id)) change(id, {});
+        settle(id);
       }
       publish();
     },
@@ -178,16 +192,10 @@ export function createResultsStore({
       unfollow();
       if (waiting !== null) clearTimeout(waiting);
       client.destroy();
+      turns.destroy();
       listeners.clear();
     },
   };
 }
 
 const isPremises = ({ kind }: BlockInstance) => kind === "premises";
-
-function settledFor(key: string | null, stored: StoredResult | undefined): Settled | null {
-  return stored && stored.key === key ? { by: stored.changedBy, at: stored.settledAt } : null;
-}
-function sameSettled(a: Settled | null, b: Settled | null): boolean {
-  return a === b || (a !== null && b !== null && a.by === b.by && a.at === b.at);
-}

@@ -2,7 +2,7 @@
 import { createContext, useContext, useSyncExternalStore } from "react";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
 import type { EvaluatorState } from "./evaluation-client.ts";
-import type { BlockResult, ResultsStore } from "./results-store.ts";
+import type { BlockResult, ResultsStore, Settled } from "./results-store.ts";
 
 export const ResultsContext = createContext<ResultsStore | null>(null);
 
@@ -15,6 +15,11 @@ export function useResultsStore(): ResultsStore {
 export function useBlockResult(blockId: string): BlockResult {
   const store = useResultsStore();
   return useSyncExternalStore(store.subscribe, () => store.result(blockId));
+}
+
+export function useSettled(blockId: string): Settled | null {
+  const store = useResultsStore();
+  return useSyncExternalStore(store.subscribe, () => store.settled(blockId));
 }
 
 export function useBlocks(): readonly BlockInstance[] {

@@ -4,7 +4,7 @@ import { lazy, Suspense, useState, useSyncExternalStore } from "react";
 import type { PinAttributes } from "#schema/block-structure.ts";
 import { classes } from "../../ui/classes.ts";
 import { useBlockWorld, useReadOnly } from "../blocks/block-world.ts";
-import { useBlockResult } from "../evaluation/use-results.ts";
+import { useBlockResult, useSettled } from "../evaluation/use-results.ts";
 import { acceptPin } from "./place-pin.ts";
 import { movedWords, pinStateOf, type PinState } from "./pin-view-state.ts";
 import "./pins.css";
@@ -28,7 +28,7 @@ export function PinInProse({ editor, node, selected, getPosition }: PinInProsePr
     () => world.directory.block(pin.blockId) !== null,
   );
   const result = useBlockResult(pin.blockId);
-  const state = pinStateOf(pin, exists, result);
+  const state = pinStateOf(pin, exists, result, useSettled(pin.blockId));
   const [open, setOpen] = useState(false);
   const position = getPosition();
 

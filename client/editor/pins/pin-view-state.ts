@@ -23,7 +23,12 @@ const looseWords = {
   "scalar-gone": "its block no longer gives this number",
 } as const;
 
-export function pinStateOf(pin: PinAttributes, blockExists: boolean, result: BlockResult): PinState {
+export function pinStateOf(
+  pin: PinAttributes,
+  blockExists: boolean,
+  result: BlockResult,
+  settled: Settled | null = null,
+): PinState {
   if (blockExists && result.evaluation === null) return { status: "waiting" };
   const status = statusOf(pin, blockExists ? result.evaluation : null);
   switch (status.status) {
@@ -34,7 +39,7 @@ export function pinStateOf(pin: PinAttributes, blockExists: boolean, result: Blo
         status: "moved",
         label: status.now.label,
         now: formatScalar(status.now.value, parsePinFormat(pin.format)),
-        settled: result.settled,
+        settled,
       };
     case "loose":
       return { status: "loose", words: looseWords[status.why] };

@@ -56,7 +56,7 @@ function open(startWorker: () => WorkerLike = workerInProcess, timeLimitMs?: num
 }
 const settled = (results: ResultsStore) =>
   vi.waitFor(() => {
-    for (const { id } of results.blocks()) expect(results.result(id).pending, id).toBe(false);
+    for (const { id } of results.blocks()) expect(results.isPending(id), id).toBe(false);
   });
 const edit = (blockId: string, field: string, value: string) => {
   const element = directory.element(blockId) ?? expect.fail(`no ${blockId}`);
@@ -93,7 +93,7 @@ describe("results", () => {
     await settled(results);
     const before = results.result("scaling");
     edit("premises", "d", "6");
-    expect(results.result("scaling").pending).toBe(true);
+    expect(results.isPending("scaling")).toBe(true);
     await settled(results);
     expect(results.result("scaling").key).not.toBe(before.key);
   });
@@ -151,16 +151,16 @@ describe("results", () => {
     expect(early.result("apart").evaluation).toEqual(
       stored.find(({ blockId }) => blockId === "apart")?.evaluation,
     );
-    expect(early.result("apart").settled).toEqual({ by: "Otto", at: "2026-12-01T14:02:00Z" });
+    expect(early.settled("apart")).toEqual({ by: "Otto", at: "2026-12-01T14:02:00Z" });
     early.destroy();
 
     const results = open();
     results.setStored(stored);
     await settled(results);
-    expect(results.result("apart").settled?.by).toBe("Otto");
+    expect(results.settled("apart")?.by).toBe("Otto");
     edit("apart", "q", "0.2");
     await settled(results);
-    expect(results.result("apart").settled).toBeNull();
+    expect(results.settled("apart")).toBeNull();
   });
 
   it("forget a block that is gone", async () => {

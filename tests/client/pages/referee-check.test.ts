@@ -35,7 +35,7 @@ function evaluationOf(value: ScalarValue, more: Partial<Evaluation> = {}): Evalu
   };
 }
 function resultOf(evaluation: Evaluation | null, key = "key-1"): BlockResult {
-  return { evaluation, key, standsOn: null, lastGood: evaluation, pending: false, settled: null };
+  return { evaluation, key, standsOn: null, lastGood: evaluation };
 }
 const moved: ScalarValue = { type: "number", value: 0.14, sigma: 0.02 };
 

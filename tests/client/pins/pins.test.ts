@@ -57,7 +57,7 @@ afterEach(() => {
   leave(who);
 });
 
-const computed = () => vi.waitFor(() => expect(world.results.result("t").pending).toBe(false));
+const computed = () => vi.waitFor(() => expect(world.results.isPending("t")).toBe(false));
 async function setQ(q: string) {
   const element = who.directory.element("t") ?? expect.fail("the block is gone");
   changeInputs(element, () => writeField(element, "q", q));
@@ -199,8 +199,6 @@ describe("a pin", () => {
         key: null,
         standsOn: null,
         lastGood: null,
-        pending: true,
-        settled: null,
       }),
     ).toEqual({ status: "waiting" });
   });
