@@ -1,7 +1,8 @@
 /** What a reader of an order plan should know beside the order. */
 import type { Notice } from "../evaluation.ts";
-import type { Rational } from "../exact/rational.ts";
+import { Rational } from "../exact/rational.ts";
 import type { Theory } from "../premises/theory.ts";
+import { HIGHEST_LOOKED_AT } from "./allowed-orders.ts";
 import type { Entry } from "./entries.ts";
 import { workingPoint } from "./powers.ts";
 import type { PlanScales } from "./read-scales.ts";
@@ -52,11 +53,18 @@ export function planCautions(
   return found;
 }
 
+/** Beyond the orders looked at every step is taken to have terms. */
+function mayExist(order: Rational, allowed: readonly Rational[]): boolean {
+  const known = allowed.length > 0 && order.compare(Rational.of(HIGHEST_LOOKED_AT)) <= 0;
+  return !known || allowed.some((one) => one.equals(order));
+}
+
 /** Orders below the highest listed at which operators may exist and none is listed: absent, or forgotten. */
-function gaps({ highestListed, step }: Expansion, terms: readonly PlanTerm[]): Notice[] {
+function gaps({ highestListed, step, allowed }: Expansion, terms: readonly PlanTerm[]): Notice[] {
   const missing: string[] = [];
   for (let order = step; order.compare(highestListed) < 0; order = order.plus(step))
-    if (!terms.some((term) => term.order.equals(order))) missing.push(order.toString());
+    if (mayExist(order, allowed) && !terms.some((term) => term.order.equals(order)))
+      missing.push(order.toString());
   return missing.length === 0 ? [] : [caution("plan-gap", { orders: missing.join(", ") })];
 }
 

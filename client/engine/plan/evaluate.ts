@@ -10,7 +10,7 @@ import { readSettings, type PlanSettings } from "./read-inputs.ts";
 import { readScales, type PlanScales } from "./read-scales.ts";
 import { sumPowers, workingPoint } from "./powers.ts";
 import { planScalars } from "./scalars.ts";
-import { stepOfOrders } from "./allowed-orders.ts";
+import { allowedOrders, stepOfOrders } from "./allowed-orders.ts";
 import { Rational } from "../exact/rational.ts";
 import { distinctOrders, leftOutAt, orderFor, type Expansion } from "./sums.ts";
 import { planTerms, type PlanTerm } from "./terms.ts";
@@ -94,6 +94,7 @@ function expand(
       ? amplitude
       : rateEntries(amplitude, observable === "rate with interference", settings.cap, MOST_ENTRIES);
   if (!entries) return null;
+  const allowed = allowedOrders(theory) ?? [];
   const listed = terms.map(({ order }) => order).filter((order) => order.compare(settings.cap) <= 0);
   return {
     Q: scales.Q,
@@ -107,7 +108,8 @@ function expand(
       (highest, order) => (order.compare(highest) > 0 ? order : highest),
       Rational.zero,
     ),
-    step: stepOfOrders(theory) ?? Rational.one,
+    allowed,
+    step: stepOfOrders(allowed) ?? Rational.one,
     target: settings.target,
   };
 }

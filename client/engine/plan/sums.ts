@@ -17,6 +17,8 @@ export interface Expansion {
   readonly sumUsed: OrderPlanValue["sumUsed"];
   /** Highest order of a single listed term: terms of higher order are not listed. */
   readonly highestListed: Rational;
+  /** Orders up to 4 at which terms may exist; empty when that is not known. */
+  readonly allowed: readonly Rational[];
   /** Orders at which unlisted terms exist: highestListed + step, + 2 step, … */
   readonly step: Rational;
   readonly target: number;

@@ -466,3 +466,20 @@ it("subtracts the measure's own symbols in the working of an anisotropic theory"
   });
   expect(JSON.stringify(askPlan(theory).working)).toContain("Delta - D - z = 1");
 });
+
+it("counts on no terms that change the number of particles, and misses no order at which none exists", () => {
+  // Own derivation, D = 3, z = 2: legs of ψ†ⁿψⁿ with 2m gradients are of order 3n + 2m − 5: 1, 3, 4, …; never 1/2 or 2.
+  const contact = theoryOf({
+    D: 3,
+    z: 2,
+    fields: { psi: "Schrödinger field" },
+    terms: { c0: "psi~2 psi2", c2: { fields: "psi~2 psi2", derivatives: 2 } },
+    scales: [gev("p", "probe", 300), gev("Lambda", "heavy", 3000)],
+  });
+  expect(planOf(contact).step.text).toBe("1");
+  expect(askPlan(contact).notices.map(({ code }) => code)).not.toContain("plan-gap");
+  const bare = { ...contact, terms: contact.terms.filter(({ rowId }) => rowId === "c2") };
+  expect(askPlan(bare).notices).toContainEqual(
+    expect.objectContaining({ code: "plan-gap", facts: { orders: "1" } }),
+  );
+});
