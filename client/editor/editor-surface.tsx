@@ -10,9 +10,9 @@ import { isFinal, type ConnectionState } from "./connection-words.ts";
 import { editorExtensions } from "./editor-extensions.ts";
 import { createMathEditing } from "./mathematics/math-editing.ts";
 import { MathematicsEditor } from "./mathematics/mathematics-editor.tsx";
-import { premisesSymbols } from "./mathematics/premises-symbols.ts";
 import { NotebookContext, type OpenNotebook } from "./notebook-context.ts";
 import type { NotebookSession } from "./notebook-session.ts";
+import { prepareInstruments } from "./prepare-instruments.ts";
 import { MarginTick } from "./placing/margin-tick.tsx";
 import { SectionScale } from "./section-scale.tsx";
 import { WritingBar } from "./writing/writing-bar.tsx";
@@ -70,6 +70,7 @@ function WritingSurface({ session, state, children }: Omit<EditorSurfaceProps, "
   }, [editor, readOnly]);
   useBlocksEditor(editor);
   useHistoryWords(session);
+  useEffect(() => (readOnly ? undefined : prepareInstruments()), [readOnly]);
 
   const notebook = useMemo<OpenNotebook>(() => ({ session, editor, readOnly }), [session, editor, readOnly]);
   return (
@@ -81,13 +82,7 @@ function WritingSurface({ session, state, children }: Omit<EditorSurfaceProps, "
           {!readOnly && <MarginTick editor={editor} open={indexOpen} onOpenChange={setIndexOpen} />}
           <EditorContent editor={editor} />
         </div>
-        {!readOnly && (
-          <MathematicsEditor
-            editor={editor}
-            editing={editing}
-            ownSymbols={() => premisesSymbols(editor.state.doc)}
-          />
-        )}
+        {!readOnly && <MathematicsEditor editor={editor} editing={editing} />}
       </div>
       {children}
     </NotebookContext>

@@ -1,11 +1,14 @@
 /** The tick in the margin: at the gap nearest the pointer or, without one, after the paragraph with the caret. */
 import type { Editor } from "@tiptap/core";
-import { Popover } from "radix-ui";
 import { useEffect, useRef, useState } from "react";
+import { fetched } from "../../ui/fetched.tsx";
 import { INDEX_SHORTCUT } from "../editor-extensions.ts";
-import { PinPicker } from "../pins/pin-picker.tsx";
-import { PlacementIndex } from "./placement-index.tsx";
 import { gapAtCaret } from "./place.ts";
+import type { PlacementPanelProps } from "./placement-panel.tsx";
+
+export const placementPanel = fetched<PlacementPanelProps>(
+  async () => (await import("./placement-panel.tsx")).PlacementPanel,
+);
 
 interface MarginTickProps {
   readonly editor: Editor;
@@ -22,63 +25,29 @@ interface Gap {
 export function MarginTick({ editor, open, onOpenChange }: MarginTickProps) {
   const gap = useGap(editor, open);
   const tick = useRef<HTMLButtonElement>(null);
-  const chosen = useRef(false);
-  const [picking, setPicking] = useState(false);
   const keys = shortcutWords(INDEX_SHORTCUT);
+  const close = () => {
+    onOpenChange(false);
+  };
   return (
     <>
-      <Popover.Root open={open} onOpenChange={onOpenChange}>
-        <Popover.Trigger asChild>
-          <button
-            ref={tick}
-            type="button"
-            className="margin-tick"
-            style={{ top: `${String(gap.top)}px` }}
-            aria-label="Place something here"
-            aria-keyshortcuts="Control+."
-            title={`Place a block, an equation, a heading… (${keys})`}
-          />
-        </Popover.Trigger>
-        <Popover.Portal>
-          <Popover.Content
-            className="placement"
-            aria-label="Index of what can be placed"
-            side="bottom"
-            align="start"
-            sideOffset={4}
-            collisionPadding={12}
-            onCloseAutoFocus={(event) => {
-              // What was placed takes the focus itself, maybe some frames later; giving up goes back to the prose.
-              event.preventDefault();
-              const placing = chosen.current;
-              chosen.current = false;
-              if (placing) return;
-              if (document.activeElement === document.body || document.activeElement === tick.current) {
-                editor.commands.focus();
-              }
-            }}
-          >
-            <PlacementIndex
-              onChoose={(placeable) => {
-                chosen.current = true;
-                onOpenChange(false);
-                placeable.place(editor, gap.index, {
-                  pinPicker: () => {
-                    setPicking(true);
-                  },
-                });
-              }}
-            />
-          </Popover.Content>
-        </Popover.Portal>
-      </Popover.Root>
-      {picking && (
-        <PinPicker
-          onClose={() => {
-            setPicking(false);
-            editor.commands.focus();
-          }}
-        />
+      <button
+        ref={tick}
+        type="button"
+        className="margin-tick"
+        style={{ top: `${String(gap.top)}px` }}
+        aria-label="Place something here"
+        aria-keyshortcuts="Control+."
+        aria-haspopup="dialog"
+        aria-expanded={open}
+        data-state={open ? "open" : "closed"}
+        title={`Place a block, an equation, a heading… (${keys})`}
+        onClick={() => {
+          onOpenChange(!open);
+        }}
+      />
+      {open && (
+        <placementPanel.Part editor={editor} gap={gap.index} tick={tick} onClose={close} onMissing={close} />
       )}
     </>
   );

@@ -1,8 +1,8 @@
 /** A slim bar over the prose: the form of what is selected. One tab stop; the arrow keys move within it. */
 import type { ChainedCommands, Editor } from "@tiptap/core";
 import { useEditorState } from "@tiptap/react";
-import { Toolbar } from "radix-ui";
 import { classes } from "../../ui/classes.ts";
+import { Toolbar } from "../../ui/toolbar.tsx";
 import { insertFormula } from "../mathematics/formula-changes.ts";
 import { useHistory } from "../notebook-context.ts";
 import { LinkEditor } from "./link-editor.tsx";
@@ -29,7 +29,7 @@ export function WritingBar({ editor }: { readonly editor: Editor }) {
   };
 
   return (
-    <Toolbar.Root className="writing-bar" aria-label="Form of the text">
+    <Toolbar className="writing-bar" label="Form of the text">
       <TextKindChoice editor={editor} kind={now.kind} />
       <Mark
         name="Bold"
@@ -57,7 +57,7 @@ export function WritingBar({ editor }: { readonly editor: Editor }) {
       />
       <LinkEditor editor={editor} />
       <Mark name="Formula" sign="x²" face="bar-italic" onPress={() => insertFormula(editor)} />
-      <Toolbar.Separator className="bar-rule" />
+      <Rule />
       <Mark
         name="List"
         sign="list"
@@ -80,7 +80,7 @@ export function WritingBar({ editor }: { readonly editor: Editor }) {
         onPress={() => run((chain) => chain.toggleBlockquote())}
       />
       {now.table && <TableMarks run={run} />}
-      <Toolbar.Separator className="bar-rule" />
+      <Rule />
       <Mark
         name="Undo my last change"
         sign="undo"
@@ -95,8 +95,12 @@ export function WritingBar({ editor }: { readonly editor: Editor }) {
         disabled={!history.canRedo}
         onPress={history.redo}
       />
-    </Toolbar.Root>
+    </Toolbar>
   );
+}
+
+function Rule() {
+  return <span className="bar-rule" role="separator" aria-orientation="vertical" />;
 }
 
 function TextKindChoice({ editor, kind }: { readonly editor: Editor; readonly kind: TextKind["id"] }) {
@@ -133,7 +137,7 @@ function TableMarks({
   ];
   return (
     <>
-      <Toolbar.Separator className="bar-rule" />
+      <Rule />
       {marks.map(([name, sign, change]) => (
         <Mark key={name} name={name} sign={sign} onPress={() => run(change)} />
       ))}
@@ -154,7 +158,8 @@ interface MarkProps {
 
 function Mark({ name, sign, face, keys, pressed, disabled = false, onPress }: MarkProps) {
   return (
-    <Toolbar.Button
+    <button
+      type="button"
       className={classes("bar-mark", face)}
       aria-label={name}
       title={keys ? `${name} (${keyWords(keys)})` : name}

@@ -1,6 +1,6 @@
 import { act, cleanup, fireEvent, render, screen } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { afterEach, describe, expect, it } from "vitest";
+import { afterEach, beforeAll, describe, expect, it } from "vitest";
 import { mathNodeView } from "../../../client/editor/mathematics/math-node-view.ts";
 import { createMathEditing, type MathEditing } from "../../../client/editor/mathematics/math-editing.ts";
 import { writeFormula } from "../../../client/editor/mathematics/formula-changes.ts";
@@ -10,6 +10,10 @@ import { twoPeople, type, type Person, type TwoPeople } from "./two-people.ts";
 
 let people: TwoPeople;
 let editing: MathEditing;
+// On a page it is fetched once the page is quiet.
+beforeAll(async () => {
+  await import("../../../client/editor/mathematics/formula-editor.tsx");
+});
 afterEach(() => {
   cleanup();
   people.leave();
@@ -21,13 +25,7 @@ function stage(text: string): Person {
   people = twoPeople({ wren: { inlineMath: mathNodeView(editing), displayMath: mathNodeView(editing) } });
   const { wren } = people;
   document.body.append(wren.editor.view.dom);
-  render(
-    <MathematicsEditor
-      editor={wren.editor}
-      editing={editing}
-      ownSymbols={() => premisesSymbols(wren.editor.state.doc)}
-    />,
-  );
+  render(<MathematicsEditor editor={wren.editor} editing={editing} />);
   act(() => {
     type(wren.editor, text);
   });
