@@ -40,13 +40,16 @@ export function PinInProse({ editor, node, selected, getPosition }: PinInProsePr
         tabIndex={-1}
         aria-haspopup="dialog"
         aria-expanded={open}
-        aria-label={nameOf(pin, state)}
+        // A name that skips what is shown between its words is no use to who speaks what they see.
+        aria-label={state.status === "moved" ? undefined : nameOf(pin, state)}
         onMouseDown={(event) => event.preventDefault()}
         onClick={() => setOpen(true)}
       >
         {state.status === "moved" ? (
           <>
-            <s className="pin-was">{pin.text}</s> <ins className="pin-now">{state.now}</ins>
+            <s className="pin-was">{pin.text}</s>
+            <span className="sr-only">, pinned: {withoutMarkup(state.label)}; it has moved to</span>{" "}
+            <ins className="pin-now">{state.now}</ins>
           </>
         ) : (
           <>
@@ -61,15 +64,15 @@ export function PinInProse({ editor, node, selected, getPosition }: PinInProsePr
         ) : (
           <button
             type="button"
-            className="pin-note pin-accept"
+            className="pin-note pin-accept inline-flex"
             tabIndex={-1}
-            aria-label={`accept ${state.now}, ${movedWords(state.settled)}`}
             title="accept the new value"
             onMouseDown={(event) => event.preventDefault()}
             onClick={() => position !== undefined && acceptPin(world, editor, position)}
           >
+            <span className="pin-accept-word order-1">accept</span>
+            <span className="sr-only"> {state.now}, </span>
             {movedWords(state.settled)}
-            <span className="pin-accept-word">accept</span>
           </button>
         ))}
       {state.status === "loose" && <span className="pin-note">loose: {state.words}</span>}
@@ -88,15 +91,13 @@ export function PinInProse({ editor, node, selected, getPosition }: PinInProsePr
   );
 }
 
-/** What a screen reader says for the pin. */
-function nameOf(pin: PinAttributes, state: PinState): string {
+/** What a screen reader says for the pin; one that has moved says it in its content. */
+function nameOf(pin: PinAttributes, state: Exclude<PinState, { status: "moved" }>): string {
   switch (state.status) {
     case "waiting":
       return `${pin.text}, pinned number`;
     case "holds":
       return `${pin.text}, pinned: ${withoutMarkup(state.label)}; it holds`;
-    case "moved":
-      return `${pin.text}, pinned: ${withoutMarkup(state.label)}; it has moved to ${state.now}`;
     case "loose":
       return `${pin.text}, pinned number, loose: ${state.words}`;
   }

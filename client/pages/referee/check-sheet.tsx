@@ -17,7 +17,12 @@ export function CheckSheet({ stored }: { readonly stored: readonly StoredResult[
   const results = useResultsStore();
   // Any result may be the one that a pin names.
   useSyncExternalStore(results.subscribe, results.version);
-  const doc = useEditorState({ editor, selector: ({ editor: now }) => now.state.doc });
+  // A document is the same object until it changes; compared by its contents it would be walked whole, schema and all.
+  const doc = useEditorState({
+    editor,
+    selector: ({ editor: now }) => now.state.doc,
+    equalityFn: Object.is,
+  });
   const pins = useMemo(() => placedPins(doc), [doc]);
 
   const known = new Map<string, Evaluation>(stored.map(({ key, evaluation }) => [key, evaluation]));
@@ -31,6 +36,7 @@ export function CheckSheet({ stored }: { readonly stored: readonly StoredResult[
       placed.pin,
       directory.block(placed.pin.blockId) !== null,
       results.result(placed.pin.blockId),
+      results.settled(placed.pin.blockId),
       (key) => known.get(key) ?? null,
     ),
   }));

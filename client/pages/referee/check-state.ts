@@ -28,9 +28,10 @@ export function checkPin(
   pin: PinAttributes,
   blockExists: boolean,
   result: BlockResult,
+  settled: Settled | null,
   resultOf: (key: string) => Evaluation | null,
 ): CheckState {
-  const state = pinStateOf(pin, blockExists, result);
+  const state = pinStateOf(pin, blockExists, result, settled);
   if (state.status === "waiting") return { state: "waiting" };
   if (state.status === "loose") return { state: "loose", words: state.words };
   const now = state.status === "moved" ? state.now : null;

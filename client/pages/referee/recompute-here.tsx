@@ -47,7 +47,7 @@ export function RecomputeHere({ pin, stored }: Props) {
         className="check-recompute text-small"
         busy={computing}
         busyLabel="computing"
-        aria-label={`recompute ${pin.text} here`}
+        aria-label={`recompute here: ${pin.text}`}
         onClick={() => void compute()}
       >
         recompute here

@@ -37,6 +37,7 @@ function evaluationOf(value: ScalarValue, more: Partial<Evaluation> = {}): Evalu
 function resultOf(evaluation: Evaluation | null, key = "key-1"): BlockResult {
   return { evaluation, key, standsOn: null, lastGood: evaluation };
 }
+const settled = { by: "Otto Marsh", at: "2026-12-01T14:02:00Z" };
 const moved: ScalarValue = { type: "number", value: 0.14, sigma: 0.02 };
 
 describe("what can be said of a pin", () => {
@@ -46,8 +47,8 @@ describe("what can be said of a pin", () => {
     return (key: string) => results.get(key) ?? null;
   };
   it("it holds when its block says the same, also under a new key", () => {
-    expect(checkPin(attrs, true, resultOf(holds), known(["key-1", holds]))).toEqual({ state: "holds" });
-    expect(checkPin(attrs, true, resultOf(holds, "key-2"), known(["key-2", holds]))).toEqual({
+    expect(checkPin(attrs, true, resultOf(holds), null, known(["key-1", holds]))).toEqual({ state: "holds" });
+    expect(checkPin(attrs, true, resultOf(holds, "key-2"), null, known(["key-2", holds]))).toEqual({
       state: "holds",
     });
   });
@@ -55,10 +56,10 @@ describe("what can be said of a pin", () => {
     ["checked", known(["key-1", holds]), true],
     ["not at hand", known(), false],
   ])("it has moved, its old value %s", (_what, lookUp, wasChecked) => {
-    expect(checkPin(attrs, true, resultOf(evaluationOf(moved), "key-2"), lookUp)).toEqual({
+    expect(checkPin(attrs, true, resultOf(evaluationOf(moved), "key-2"), settled, lookUp)).toEqual({
       state: "moved",
       now: "0.140(20)",
-      settled: null,
+      settled,
       wasChecked,
     });
   });
@@ -67,29 +68,31 @@ describe("what can be said of a pin", () => {
     ["its block is in error", true, evaluationOf(ratio, { value: null })],
     ["its block no longer gives this number", true, evaluationOf(ratio, { scalars: [] })],
   ])("it is loose because %s", (words, exists, evaluation) => {
-    expect(checkPin(attrs, exists, resultOf(evaluation), known())).toEqual({ state: "loose", words });
+    expect(checkPin(attrs, exists, resultOf(evaluation), null, known())).toEqual({ state: "loose", words });
   });
   it("nothing is claimed before its block was computed", () => {
-    expect(checkPin(attrs, true, resultOf(null), known())).toEqual({ state: "waiting" });
+    expect(checkPin(attrs, true, resultOf(null), null, known())).toEqual({ state: "waiting" });
   });
 
   it("it is unchecked when the result it names gives another value", () => {
     const forged = { ...attrs, value: '{"type":"number","value":0.01}', text: "0.0100" };
-    expect(checkPin(forged, true, resultOf(holds), known(["key-1", holds]))).toEqual({
+    expect(checkPin(forged, true, resultOf(holds), null, known(["key-1", holds]))).toEqual({
       state: "unchecked",
       words: "the result it names does not give this value",
       now: "0.109(14)",
     });
   });
   it("it is unchecked when it shows something else than its value", () => {
-    expect(checkPin({ ...attrs, text: "0.011" }, true, resultOf(holds), known(["key-1", holds]))).toEqual({
+    expect(
+      checkPin({ ...attrs, text: "0.011" }, true, resultOf(holds), null, known(["key-1", holds])),
+    ).toEqual({
       state: "unchecked",
       words: "the text shows “0.011”, but the value behind it reads “0.109(14)”",
       now: null,
     });
   });
   it("it is unchecked when its value cannot be read", () => {
-    expect(checkPin({ ...attrs, value: "{" }, true, resultOf(holds), known())).toMatchObject({
+    expect(checkPin({ ...attrs, value: "{" }, true, resultOf(holds), null, known())).toMatchObject({
       state: "unchecked",
       words: "the pin carries no value that can be read",
     });
