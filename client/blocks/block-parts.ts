@@ -1,6 +1,6 @@
 /** What one block kind gives the page. One folder per kind makes it; `registry.tsx` lists them. */
 import type { Evaluation } from "#engine/evaluation.ts";
-import type { ComponentType } from "react";
+import type { ComponentType, LazyExoticComponent } from "react";
 import type { BlockHandle } from "./block-handle.ts";
 
 /** `stale`: the value is the last good one, since the inputs are in error now. */
@@ -16,6 +16,7 @@ export interface BlockParts {
   readonly titleHint: string;
   readonly Form: ComponentType;
   readonly Result?: ComponentType<ResultProps<unknown>>;
+  /** Loaded when the first one is drawn, with the axes it needs. */
   readonly Plot?: ComponentType<ResultProps<unknown>>;
   /** A few words after the title: "d = 4 · 2 fields · 11 terms". */
   readonly summary?: (block: BlockHandle) => string;

@@ -18,7 +18,7 @@ import { blockParts } from "./registry.tsx";
 import { StandsOn } from "./stands-on.tsx";
 import { isUntouched, stateOf } from "./block-state.ts";
 
-interface Props {
+export interface BlockFrameProps {
   readonly selected: boolean;
   readonly onKeyDown: (event: KeyboardEvent) => void;
   /** Absent where the block cannot be moved or deleted. */
@@ -27,7 +27,7 @@ interface Props {
 }
 
 /** A block on the page: a ticked rule above, a hairline below, no box. */
-export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: Props) {
+export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: BlockFrameProps) {
   const block = useBlock();
   const parts = blockParts[block.kind];
   const { title } = kindDescriptions[block.kind];

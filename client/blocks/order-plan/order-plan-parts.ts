@@ -1,6 +1,6 @@
+import { lazy } from "react";
 import { forKind, type BlockParts } from "../block-parts.ts";
 import { OrderPlanForm } from "./order-plan-form.tsx";
-import { OrderPlanPlot } from "./order-plan-plot.tsx";
 import { OrderPlanResult } from "./order-plan-result.tsx";
 
 export const orderPlanParts: BlockParts = {
@@ -8,5 +8,5 @@ export const orderPlanParts: BlockParts = {
   titleHint: "title",
   Form: OrderPlanForm,
   Result: forKind(OrderPlanResult),
-  Plot: forKind(OrderPlanPlot),
+  Plot: forKind(lazy(async () => ({ default: (await import("./order-plan-plot.tsx")).OrderPlanPlot }))),
 };

@@ -1,9 +1,18 @@
 import type { Problem } from "#engine/evaluation.ts";
-import { wordProblem } from "#contract/problem-words.ts";
-import { TextWithMath } from "../../ui/math.tsx";
+import { lazy, Suspense } from "react";
 import { placeKey, useBlock, type FieldPlace } from "../block-handle.ts";
 
+const Worded = lazy(async () => ({ default: (await import("./worded.tsx")).Worded }));
+
 const none: readonly Problem[] = [];
+
+function Sentence({ problem }: { readonly problem: Problem }) {
+  return (
+    <Suspense fallback="…">
+      <Worded problem={problem} />
+    </Suspense>
+  );
+}
 
 /** The problems of the block that concern one field, said beside it. */
 export function useProblemsAt(place: FieldPlace): readonly Problem[] {
@@ -25,7 +34,7 @@ export function ProblemList({
     <ul id={id} className="block-problems">
       {problems.map((problem) => (
         <li key={`${problem.code} ${problem.path.join("/")} ${JSON.stringify(problem.facts)}`}>
-          <TextWithMath text={wordProblem(problem)} />
+          <Sentence problem={problem} />
         </li>
       ))}
     </ul>
@@ -44,7 +53,8 @@ function hasField(
   path: readonly string[],
 ): boolean {
   const [first = "", rowId, column] = path;
-  if (path.length === 1) return first in fields;
+  // A table says its own below itself.
+  if (path.length === 1) return first in fields || first in tables;
   const row = tables[first]?.find(({ id }) => id === rowId);
   return row !== undefined && (column === undefined || column in row);
 }
@@ -57,7 +67,7 @@ export function Notices() {
     <ul className="block-notices">
       {notices.map((notice) => (
         <li key={`${notice.code} ${notice.path.join("/")} ${JSON.stringify(notice.facts)}`}>
-          <TextWithMath text={wordProblem(notice)} />
+          <Sentence problem={notice} />
         </li>
       ))}
     </ul>

@@ -1,6 +1,6 @@
+import { lazy } from "react";
 import { forKind, type BlockParts } from "../block-parts.ts";
 import { ScalingForm } from "./scaling-form.tsx";
-import { ScalingPlot } from "./scaling-plot.tsx";
 import { ScalingResult } from "./scaling-result.tsx";
 
 export const scalingParts: BlockParts = {
@@ -8,5 +8,5 @@ export const scalingParts: BlockParts = {
   titleHint: "title",
   Form: ScalingForm,
   Result: forKind(ScalingResult),
-  Plot: forKind(ScalingPlot),
+  Plot: forKind(lazy(async () => ({ default: (await import("./scaling-plot.tsx")).ScalingPlot }))),
 };

@@ -1,5 +1,5 @@
+import { lazy } from "react";
 import { forKind, type BlockParts } from "../block-parts.ts";
-import { BandsPlot } from "./bands-plot.tsx";
 import { TruncationErrorForm } from "./truncation-error-form.tsx";
 import { TruncationErrorResult } from "./truncation-error-result.tsx";
 
@@ -8,5 +8,5 @@ export const truncationErrorParts: BlockParts = {
   titleHint: "title",
   Form: TruncationErrorForm,
   Result: forKind(TruncationErrorResult),
-  Plot: forKind(BandsPlot),
+  Plot: forKind(lazy(async () => ({ default: (await import("./bands-plot.tsx")).BandsPlot }))),
 };

@@ -122,8 +122,15 @@ describe("blocks on premises", () => {
       ).toEqual([]);
       expect(figures.length, id).toBeGreaterThan(0);
     }
-    expect(wren.screen.getAllByRole("img", { name: /against the probe scale|order by order/ })).toHaveLength(
-      3,
+    const { screen } = wren;
+    await waitFor(
+      () =>
+        expect(screen.getAllByRole("img", { name: /against the probe scale|order by order/ })).toHaveLength(
+          3,
+        ),
+      {
+        timeout: 10_000,
+      },
     );
   });
 
@@ -137,7 +144,9 @@ describe("blocks on premises", () => {
     await user.type(q, "wide");
     await user.tab();
     await screen.findByText("in error: shows its last good result");
-    expect(document.querySelector(".block-problems")?.textContent).toMatch(/“wide” .* is declared nowhere/);
+    await waitFor(() =>
+      expect(document.querySelector(".block-problems")?.textContent).toMatch(/“wide” .* is declared nowhere/),
+    );
     expect(document.querySelector(".block-outcome-stale")).not.toBeNull();
     await user.clear(q);
     await user.type(q, "0.2");
