@@ -1,5 +1,12 @@
 /** Parts of a page whose code is fetched when it is first wanted, or made ready before. */
-import { createElement, useEffect, useState, type ComponentType, type ReactNode } from "react";
+import {
+  createElement,
+  useEffect,
+  useEffectEvent,
+  useState,
+  type ComponentType,
+  type ReactNode,
+} from "react";
 import { say } from "./notices.ts";
 
 export interface Fetched<Props extends object> {
@@ -11,7 +18,7 @@ export interface Fetched<Props extends object> {
 interface FetchedProps {
   /** Stands in the part's place until it is there. */
   readonly meanwhile?: ReactNode;
-  /** Told when the code could not be fetched; the next drawing tries again. */
+  /** Told when the code could not be fetched; it is tried again when the part is next wanted, or the network is back. */
   readonly onMissing?: () => void;
 }
 
@@ -40,21 +47,26 @@ export function fetched<Props extends object>(load: () => Promise<ComponentType<
 
   function Part({ meanwhile = null, onMissing, ...props }: Props & FetchedProps) {
     const [shown, setShown] = useState(component !== null);
+    const tellMissing = useEffectEvent(() => onMissing?.());
     useEffect(() => {
       if (shown) return;
       let wanted = true;
-      void fetchOnce().then((there) => {
-        if (!wanted) return;
-        if (there) setShown(true);
-        else {
-          say(missingWords, "refused");
-          onMissing?.();
-        }
-      });
+      const fetchNow = () =>
+        void fetchOnce().then((there) => {
+          if (!wanted) return;
+          if (there) setShown(true);
+          else {
+            say(missingWords, "refused");
+            tellMissing();
+          }
+        });
+      fetchNow();
+      window.addEventListener("online", fetchNow);
       return () => {
         wanted = false;
+        window.removeEventListener("online", fetchNow);
       };
-    });
+    }, [shown]);
     if (!shown || component === null) return meanwhile;
     // Without the two members of FetchedProps these are the part's own properties.
     return createElement(component, props as unknown as Props);

@@ -1,10 +1,17 @@
 import type { Editor } from "@tiptap/core";
 import { useSyncExternalStore, type KeyboardEvent } from "react";
-import { BlockFrame } from "../../blocks/frame.tsx";
+import type { BlockFrameProps } from "../../blocks/frame.tsx";
 import { BlockHandleContext } from "../../blocks/block-handle.ts";
+import { fetched } from "../../ui/fetched.tsx";
+import { AwaitedBlock } from "./awaited-block.tsx";
 import { blockPlaces, deleteBlock, moveBlock, selectBlock } from "./block-places.ts";
 import { useBlockWorld } from "./block-world.ts";
 import { useBlockHandle } from "./use-block-handle.ts";
+
+/** Forms, results and the words of their problems: fetched when a notebook has blocks, while its prose is read. */
+export const blockFrame = fetched<BlockFrameProps>(
+  async () => (await import("../../blocks/frame.tsx")).BlockFrame,
+);
 
 export interface BlockInEditorProps {
   readonly editor: Editor;
@@ -61,7 +68,8 @@ function Block({
 
   return (
     <BlockHandleContext value={handle}>
-      <BlockFrame
+      <blockFrame.Part
+        meanwhile={<AwaitedBlock />}
         selected={selected}
         onKeyDown={onKeyDown}
         onMove={(step) => moveBlock(world, editor, blockId, step)}
