@@ -67,12 +67,11 @@ export function CheckEntry({ placed, check, stored }: Props) {
             </>
           )}
         </dl>
-        {evaluation && <Working steps={evaluation.working} />}
         <div className="check-tools">
           <Button
             look="quiet"
             className="text-small"
-            aria-label={`to the sentence of ${pin.text}`}
+            aria-label={`to the sentence: ${pin.text}`}
             onClick={() => showSentence(editor, placed.position)}
           >
             to the sentence
@@ -81,7 +80,7 @@ export function CheckEntry({ placed, check, stored }: Props) {
             <Button
               look="quiet"
               className="text-small"
-              aria-label={`to the block of ${pin.text}`}
+              aria-label={`to its block: ${pin.text}`}
               onClick={() => showBlock(editor, pin.blockId)}
             >
               to its block
@@ -89,6 +88,7 @@ export function CheckEntry({ placed, check, stored }: Props) {
           )}
           {block && <RecomputeHere pin={pin} stored={stored} />}
         </div>
+        {evaluation && <Working steps={evaluation.working} />}
       </div>
     </li>
   );

@@ -14,6 +14,9 @@ interface Props {
   readonly onNotice: (notice: ServerNotice) => void;
 }
 
+/** Whoever holds a link has no role in the notebook. */
+const visitor = { role: null } as const;
+
 /** The notebook as it is, read-only, or the reader's copy of it; and below either its check sheet. */
 export function RefereeNotebook({ token, view, scratch, onNotice }: Props) {
   const source = useMemo<Source>(
@@ -24,7 +27,7 @@ export function RefereeNotebook({ token, view, scratch, onNotice }: Props) {
     <NotebookEditor
       notebookId={view.notebookId}
       source={source}
-      role={null}
+      {...visitor}
       schemaVersion={view.schemaVersion}
       stored={view.results}
       onNotice={onNotice}

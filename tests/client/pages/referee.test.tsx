@@ -37,7 +37,6 @@ vi.mock("../../../client/editor/notebook-editor.tsx", async () => {
           announceOpened(null);
           session.destroy();
         };
-        // eslint-disable-next-line react-hooks/exhaustive-deps -- as the editor does
       }, [props.source]);
       return <p>the editor</p>;
     },
