@@ -54,5 +54,7 @@ export interface Evaluation<Value = unknown> {
 
 /** Rounds to 12 significant digits; leaves non-finite values alone. The engine's only way out for floats. */
 export function roundFloat(value: number): number {
+  // Whole numbers of at most 12 digits are what they are; writing and reading them costs the most here.
+  if (Number.isInteger(value) && Math.abs(value) < 1e12) return value;
   return Number.isFinite(value) ? Number(value.toPrecision(12)) : value;
 }

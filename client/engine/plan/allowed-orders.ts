@@ -29,7 +29,18 @@ export function commonStep(a: Rational, b: Rational): Rational {
  *
  * @returns null when a dimension is no number above 0, or there are too many fields to look through.
  */
-export function allowedOrders(theory: Theory): Rational[] | null {
+export function allowedOrders(theory: Theory): readonly Rational[] | null {
+  const known = knownOrders.get(theory);
+  if (known !== undefined) return known;
+  const found = findAllowedOrders(theory);
+  knownOrders.set(theory, found);
+  return found;
+}
+
+/** Theories never change, and every plan of a notebook asks for the same one. */
+const knownOrders = new WeakMap<Theory, readonly Rational[] | null>();
+
+function findAllowedOrders(theory: Theory): Rational[] | null {
   const measure = theory.measure.asRational();
   const weights = theory.fields.map(({ dimension }) => dimension.asRational());
   const time = theory.spacetime.geometry === "anisotropic" ? theory.spacetime.z.asRational() : null;

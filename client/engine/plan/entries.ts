@@ -27,26 +27,27 @@ export function sizeOfEntry(entry: Entry, Q: number): number {
   );
 }
 
-function orderOf(insertions: readonly Insertion[]): Rational {
-  return insertions.reduce(
-    (sum, { term, count }) => sum.plus(term.order.times(Rational.of(count))),
-    Rational.zero,
-  );
-}
-
 function idOf(insertions: readonly Insertion[]): string {
   return insertions.flatMap(({ term, count }) => Array.from({ length: count }, () => term.rowId)).join("*");
 }
 
-function single(insertions: readonly Insertion[]): Entry {
+function single(insertions: readonly Insertion[], order: Rational): Entry {
   return {
     id: idOf(insertions),
-    order: orderOf(insertions),
+    order,
     role: "insertion",
     insertions,
     factor: 1,
     sides: [insertions],
   };
+}
+
+interface Product {
+  readonly insertions: readonly Insertion[];
+  /** Σ count · order, kept along: most products are made by adding one term to a smaller one. */
+  readonly order: Rational;
+  /** The place of each factor among the suppressed terms. */
+  readonly places: readonly number[];
 }
 
 /**
@@ -60,26 +61,26 @@ export function corrections(
   limit: number,
 ): Entry[] | null {
   const suppressed = terms.filter(({ order }) => order.sign() > 0);
-  let products: Insertion[][] = [[]];
-  for (const term of suppressed) {
-    const grown: Insertion[][] = [];
+  let products: Product[] = [{ insertions: [], order: Rational.zero, places: [] }];
+  for (const [place, term] of suppressed.entries()) {
+    const grown: Product[] = [];
     for (const product of products) {
-      const used = product.reduce((sum, { count }) => sum + count, 0);
-      for (let count = 0; count <= most - used; count += 1) {
-        const next = count === 0 ? product : [...product, { term, count }];
-        if (orderOf(next).compare(cap) > 0) break;
-        grown.push(next);
+      grown.push(product);
+      let { order, places } = product;
+      for (let count = 1; product.places.length + count <= most; count += 1) {
+        order = order.plus(term.order);
+        if (order.compare(cap) > 0) break;
+        places = [...places, place];
+        grown.push({ insertions: [...product.insertions, { term, count }], order, places });
       }
       if (grown.length > limit) return null;
     }
     products = grown;
   }
-  const places = (product: Insertion[]) =>
-    product.flatMap(({ term, count }) => Array.from({ length: count }, () => suppressed.indexOf(term)));
   return products
-    .filter((product) => product.length > 0)
-    .sort((a, b) => inOrderOf(places(a), places(b)))
-    .map(single);
+    .filter(({ places }) => places.length > 0)
+    .sort((a, b) => inOrderOf(a.places, b.places))
+    .map(({ insertions, order }) => single(insertions, order));
 }
 
 /** Fewer insertions first, then in the order of the premises. */
@@ -90,7 +91,9 @@ function inOrderOf(a: readonly number[], b: readonly number[]): number {
 
 /** Terms of order 0: they come with the leading amplitude and are never what is left out. */
 export function leading(terms: readonly PlanTerm[]): Entry[] {
-  return terms.filter(({ order }) => order.sign() === 0).map((term) => single([{ term, count: 1 }]));
+  return terms
+    .filter(({ order }) => order.sign() === 0)
+    .map((term) => single([{ term, count: 1 }], term.order));
 }
 
 /**

@@ -54,12 +54,16 @@ export function sumPowers(entries: readonly Entry[], Q: number): Power[] {
   return [...sums.values()];
 }
 
-/** The sum at a point; `Q` is the expansion parameter at the working point. */
-export function valueAt(powers: readonly Power[], { probe, heavy }: Point, Q: number): number {
+/** One power at a point; `Q` is the expansion parameter at the working point. */
+export function sizeAt(power: Power, { probe, heavy }: Point, Q: number): number {
   const moved = (Q * probe) / heavy;
   // Of `power.probe` the part that Λ goes with comes from sizes by dimension, the rest from sizes given by hand.
-  return powers.reduce(
-    (sum, power) => sum + power.prefactor * moved ** -power.heavy * probe ** (power.probe + power.heavy),
-    0,
-  );
+  return power.prefactor * moved ** -power.heavy * probe ** (power.probe + power.heavy);
+}
+
+/** The sum at a point. */
+export function valueAt(powers: readonly Power[], point: Point, Q: number): number {
+  let sum = 0;
+  for (const power of powers) sum += sizeAt(power, point, Q);
+  return sum;
 }

@@ -4,7 +4,7 @@ import { shown } from "../exact/shown.ts";
 import type { Rational } from "../exact/rational.ts";
 import type { PlanScales } from "./read-scales.ts";
 import type { Point } from "./powers.ts";
-import { leftOutAt, orderFor, slopesOfLeftOut, type Expansion } from "./sums.ts";
+import { leftOutAt, leftOutByOrder, orderFor, slopesOfLeftOut, type Expansion } from "./sums.ts";
 import type { PlanTerm } from "./terms.ts";
 import type { LeftOutCurve, ProbeRow, Shift } from "./value.ts";
 
@@ -51,11 +51,15 @@ export function curvesOf(expansion: Expansion, { probe }: PlanScales): LeftOutCu
   const factors = Array.from({ length: CURVE_POINTS }, (_, n) =>
     Math.exp(first + ((last - first) * n) / (CURVE_POINTS - 1)),
   );
+  const points = factors.map((factor) => ({
+    probe: roundFloat(factor * probe.value),
+    leftOutAt: leftOutByOrder(expansion, { probe: factor, heavy: 1 }),
+  }));
   return expansion.orders.slice(0, MOST_CURVES).map((order) => ({
     order: shown(order),
-    points: factors.map((factor) => ({
-      probe: roundFloat(factor * probe.value),
-      leftOut: roundFloat(leftOutAt(expansion, order, { probe: factor, heavy: 1 }).used),
+    points: points.map((point) => ({
+      probe: point.probe,
+      leftOut: roundFloat(point.leftOutAt(order).used),
     })),
   }));
 }

@@ -1,7 +1,7 @@
 /** What is left out when one stops at an order, and the order to stop at. */
 import { Rational } from "../exact/rational.ts";
 import type { Entry } from "./entries.ts";
-import { valueAt, workingPoint, type Point, type Power } from "./powers.ts";
+import { sizeAt, valueAt, workingPoint, type Point, type Power } from "./powers.ts";
 import type { OrderPlanValue } from "./value.ts";
 
 export interface Expansion {
@@ -60,8 +60,24 @@ function unlistedAt(expansion: Expansion, point: Point): number {
 /** Sizes are added, not combined in quadrature: signs are unknown and a bound is wanted. */
 export function leftOutAt(expansion: Expansion, order: Rational, point: Point): LeftOut {
   const listed = valueAt(beyond(expansion, order), point, expansion.Q);
+  return leftOut(expansion, listed, unlistedAt(expansion, point));
+}
+
+/** What is left out at one point as a function of the order: each power is taken once for all orders. */
+export function leftOutByOrder(expansion: Expansion, point: Point): (order: Rational) => LeftOut {
   const unlisted = unlistedAt(expansion, point);
-  return { listed, unlisted, used: expansion.sumUsed === "natural tail" ? listed + unlisted : listed };
+  const sized = expansion.powers.map((power) => ({ power, size: sizeAt(power, point, expansion.Q) }));
+  return (order) => {
+    const listed = sized.reduce(
+      (sum, { power, size }) => (power.order.compare(order) > 0 ? sum + size : sum),
+      0,
+    );
+    return leftOut(expansion, listed, unlisted);
+  };
+}
+
+function leftOut({ sumUsed }: Expansion, listed: number, unlisted: number): LeftOut {
+  return { listed, unlisted, used: sumUsed === "natural tail" ? listed + unlisted : listed };
 }
 
 function beyond({ powers }: Expansion, order: Rational): readonly Power[] {
@@ -103,7 +119,8 @@ export function slopesOfLeftOut(expansion: Expansion, order: Rational): Slopes {
 /** The lowest order that leaves out less than the target; null when no listed order does, or the expansion has ended. */
 export function orderFor(expansion: Expansion, point: Point): Rational | null {
   if ((expansion.Q * point.probe) / point.heavy >= 1) return null;
-  return expansion.orders.find((order) => leftOutAt(expansion, order, point).used < expansion.target) ?? null;
+  const at = leftOutByOrder(expansion, point);
+  return expansion.orders.find((order) => at(order).used < expansion.target) ?? null;
 }
 
 export interface LargestProbe {
@@ -119,7 +136,12 @@ export interface LargestProbe {
  */
 export function largestProbe(expansion: Expansion, order: Rational): LargestProbe {
   const end = 1 / expansion.Q;
-  const excess = (probe: number) => leftOutAt(expansion, order, { probe, heavy: 1 }).used - expansion.target;
+  const powers = beyond(expansion, order);
+  const excess = (probe: number) => {
+    const point = { probe, heavy: 1 };
+    const listed = valueAt(powers, point, expansion.Q);
+    return leftOut(expansion, listed, unlistedAt(expansion, point)).used - expansion.target;
+  };
   if (!(excess(end * (1 - 1e-12)) >= 0)) return { probe: end, isHeavy: true };
   let low = Math.log(end) - 1;
   while (excess(Math.exp(low)) >= 0) low -= 10;

@@ -35,12 +35,26 @@ export function scalingWorking(
     prose(
       `Put $x = s\\,x'$${time} with the primed coordinates fixed, and rescale the fields so that their kinetic terms keep their form. The coefficient of an operator of dimension $\\Delta$ then picks up $s^{${measure} - \\Delta}$: toward low energy ($s \\to \\infty$) it grows if the exponent is positive (relevant), stays if it is zero (marginal) and fades if it is negative (irrelevant).`,
     ),
-    ...rows.flatMap((worked) => termSteps(worked, theory, value.freeDimension)),
+    ...termSteps(theory, rows, value.freeDimension),
     ...sizeSteps(rows, point, value, theory.spacetime.geometry === "isotropic" ? "d" : "D - z"),
   ];
 }
 
-function termSteps({ term, row }: WorkedRow, theory: Theory, free: string | null): WorkingStep[] {
+/** Theories never change, and every Scaling block of a notebook derives the same steps from its own. */
+const knownSteps = new WeakMap<Theory, readonly WorkingStep[]>();
+
+/** The part of the derivation that no input of the block enters: it follows from the premises alone. */
+function termSteps(
+  theory: Theory,
+  rows: readonly WorkedRow[],
+  free: ScalingValue["freeDimension"],
+): readonly WorkingStep[] {
+  const steps = knownSteps.get(theory) ?? rows.flatMap((worked) => deriveTerm(worked, theory, free));
+  knownSteps.set(theory, steps);
+  return steps;
+}
+
+function deriveTerm({ term, row }: WorkedRow, theory: Theory, free: string | null): WorkingStep[] {
   const operator = operatorLatex(term.monomial, theory.fields, theory.spacetime.geometry);
   const coefficient = coefficientLatex(term.monomial);
   const measure = theory.spacetime.geometry === "isotropic" ? "d" : "D + z";
