@@ -19,7 +19,8 @@ function digestOfSources() {
 export function ensureClientBuild() {
   const mark = join(root, "dist", "client.built-from");
   const digest = digestOfSources();
-  if (existsSync(mark) && readFileSync(mark, "utf8") === digest) return;
+  const page = join(root, "dist", "client", "index.html");
+  if (existsSync(page) && existsSync(mark) && readFileSync(mark, "utf8") === digest) return;
   say("building the client");
   const { status } = spawnSync(
     process.execPath,
