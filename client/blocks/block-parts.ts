@@ -1,6 +1,6 @@
 /** What one block kind gives the page. One folder per kind makes it; `registry.tsx` lists them. */
 import type { Evaluation } from "#engine/evaluation.ts";
-import type { ComponentType, LazyExoticComponent } from "react";
+import type { ComponentType } from "react";
 import type { BlockHandle } from "./block-handle.ts";
 
 /** `stale`: the value is the last good one, since the inputs are in error now. */

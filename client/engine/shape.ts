@@ -14,14 +14,19 @@ export interface FieldSpec {
 }
 export type Columns = Readonly<Record<string, FieldSpec>>;
 
-export interface Shape<F extends Columns = Columns, T extends Readonly<Record<string, Columns>> = Readonly<Record<string, Columns>>> {
+export interface Shape<
+  F extends Columns = Columns,
+  T extends Readonly<Record<string, Columns>> = Readonly<Record<string, Columns>>,
+> {
   readonly fields: F;
   readonly tables: T;
 }
 
 /** The inputs that a shape describes: text by field name, rows with ids by table name. */
 export type InputsOf<S extends Shape> = { readonly [K in keyof S["fields"]]: string } & {
-  readonly [K in keyof S["tables"]]: readonly ({ readonly id: string } & { readonly [C in keyof S["tables"][K]]: string })[];
+  readonly [K in keyof S["tables"]]: readonly ({ readonly id: string } & {
+    readonly [C in keyof S["tables"][K]]: string;
+  })[];
 };
 
 export function text(initial = ""): FieldSpec {
@@ -33,7 +38,9 @@ export function note(initial = ""): FieldSpec {
 export function choice(first: string, ...others: string[]): FieldSpec {
   return { initial: first, choices: [first, ...others], keyed: true };
 }
-export function defineShape<F extends Columns, T extends Readonly<Record<string, Columns>>>(shape: Shape<F, T>): Shape<F, T> {
+export function defineShape<F extends Columns, T extends Readonly<Record<string, Columns>>>(
+  shape: Shape<F, T>,
+): Shape<F, T> {
   return shape;
 }
 
@@ -43,7 +50,11 @@ const typedText = z.pipe(z.union([z.string().check(z.maxLength(4000)), z.number(
 function fieldSchema(spec: FieldSpec) {
   const allowed = spec.choices;
   const base = allowed
-    ? typedText.check(z.refine((value: string) => allowed.includes(value), { error: `must be one of: ${allowed.join(", ")}` }))
+    ? typedText.check(
+        z.refine((value: string) => allowed.includes(value), {
+          error: `must be one of: ${allowed.join(", ")}`,
+        }),
+      )
     : typedText;
   return z._default(base, spec.initial);
 }

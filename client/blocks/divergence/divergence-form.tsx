@@ -36,7 +36,6 @@ export function DivergenceForm() {
 }
 
 function GraphTables() {
-  const block = useBlock();
   // Premises' value is what the engine's premises folder gives.
   const premises = usePremisesEvaluation()?.value as PremisesValue | null | undefined;
   const terms = (premises?.terms ?? []).filter(({ kinetic }) => !kinetic);

@@ -130,7 +130,7 @@ function Axes({
   readonly xLabel: string;
   readonly yLabel: string;
 }) {
-  const { width, height, left, right, top, bottom } = plotFrame;
+  const { width, height, left, right, bottom } = plotFrame;
   const floor = height - bottom;
   return (
     <g aria-hidden="true">

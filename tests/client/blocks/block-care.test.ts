@@ -36,9 +36,7 @@ beforeEach(() => {
       history: who.history,
       person: null,
       state: () =>
-        ({ phase: "connected", unsaved: false, readOnly: false, loaded: true }) as ReturnType<
-          NotebookSession["state"]
-        >,
+        ({ phase: "connected", unsaved: false, readOnly: false, loaded: true }),
       subscribe: () => () => undefined,
       destroy: () => undefined,
     },
