@@ -6,7 +6,6 @@ import { carePlugin } from "../../../client/editor/blocks/block-care.ts";
 import { deleteBlock, moveBlock } from "../../../client/editor/blocks/block-places.ts";
 import { createBlockWorld, type BlockWorld } from "../../../client/editor/blocks/block-world.ts";
 import { createFieldPresence } from "../../../client/editor/blocks/field-presence.ts";
-import type { NotebookSession } from "../../../client/editor/notebook-session.ts";
 import { workerInProcess } from "../evaluation/worker-in-process.ts";
 import { leave, notebookState, paragraph, person, type Person } from "./two-editors.ts";
 
