@@ -1,7 +1,7 @@
-import { superscript } from "#engine/notation/float-text.ts";
 import type { PremisesValue } from "#engine/premises/value.ts";
 import { useBlock, usePremisesEvaluation } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
+import { plainLatex } from "../parts/plain-latex.ts";
 import { RowTable } from "../parts/row-table.tsx";
 import { TextField } from "../parts/text-field.tsx";
 
@@ -78,57 +78,4 @@ function GraphTables() {
       />
     </div>
   );
-}
-
-const letters: Readonly<Record<string, string>> = {
-  alpha: "α",
-  beta: "β",
-  gamma: "γ",
-  delta: "δ",
-  epsilon: "ε",
-  varepsilon: "ε",
-  zeta: "ζ",
-  eta: "η",
-  theta: "θ",
-  kappa: "κ",
-  lambda: "λ",
-  mu: "μ",
-  nu: "ν",
-  xi: "ξ",
-  pi: "π",
-  rho: "ρ",
-  sigma: "σ",
-  tau: "τ",
-  phi: "φ",
-  varphi: "φ",
-  chi: "χ",
-  psi: "ψ",
-  omega: "ω",
-  Gamma: "Γ",
-  Delta: "Δ",
-  Theta: "Θ",
-  Lambda: "Λ",
-  Xi: "Ξ",
-  Pi: "Π",
-  Sigma: "Σ",
-  Phi: "Φ",
-  Psi: "Ψ",
-  Omega: "Ω",
-  partial: "∂",
-};
-
-/** A native list shows text only: the LaTeX as plain letters, "c₆/(6! Λ²) χ⁶" at its simplest. */
-export function plainLatex(latex: string): string {
-  return latex
-    .replace(/\\frac\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}/g, "$1/($2)")
-    .replace(/\\bar\{([^{}]*)\}/g, "$1̄")
-    .replace(/\\([A-Za-z]+)/g, (_, name: string) => letters[name] ?? "")
-    .replace(/\^\{?(\d+)\}?/g, (_, digits: string) => superscript(digits))
-    .replace(/_\{?(\d+)\}?/g, (_, digits: string) =>
-      digits.replace(/\d/g, (digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))),
-    )
-    .replace(/\\[,;!: ]|~/g, " ")
-    .replace(/[{}]/g, "")
-    .replace(/\s+/g, " ")
-    .trim();
 }

@@ -2,6 +2,7 @@ import type { Editor } from "@tiptap/core";
 import type { Node } from "@tiptap/pm/model";
 import { lazy, Suspense, useState, useSyncExternalStore } from "react";
 import type { PinAttributes } from "#schema/block-structure.ts";
+import { plainLatex } from "../../blocks/parts/plain-latex.ts";
 import { classes } from "../../ui/classes.ts";
 import { useBlockWorld, useReadOnly } from "../blocks/block-world.ts";
 import { useBlockResult, useSettled } from "../evaluation/use-results.ts";
@@ -103,11 +104,7 @@ function nameOf(pin: PinAttributes, state: Exclude<PinState, { status: "moved" }
   }
 }
 
-/** LaTeX between dollar signs, as it would be said: without the signs of markup. */
+/** LaTeX between dollar signs as plain letters. */
 export function withoutMarkup(label: string): string {
-  return label
-    .replace(/\$([^$]*)\$/g, (_, latex: string) =>
-      latex.replace(/\\([A-Za-z]+)/g, "$1").replace(/[{}\\]/g, ""),
-    )
-    .trim();
+  return label.replace(/\$([^$]*)\$/g, (_, latex: string) => plainLatex(latex));
 }

@@ -145,7 +145,8 @@ export function findPinnables(typed: string, all: readonly Pinnable[]): readonly
   const words = typed.toLowerCase().split(/\s+/).filter(Boolean);
   if (words.length === 0) return all;
   return all.filter(({ block, scalar, text }) => {
-    const where = `${withoutMarkup(scalar.label)} ${text} ${nameOf(block)} ${scalar.id}`.toLowerCase();
+    const where =
+      `${withoutMarkup(scalar.label)} ${scalar.label} ${text} ${nameOf(block)} ${scalar.id}`.toLowerCase();
     return words.every((word) => where.includes(word));
   });
 }

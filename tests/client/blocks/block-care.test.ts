@@ -34,8 +34,7 @@ beforeEach(() => {
       awareness,
       history: who.history,
       person: null,
-      state: () =>
-        ({ phase: "connected", unsaved: false, readOnly: false, loaded: true }),
+      state: () => ({ phase: "connected", unsaved: false, readOnly: false, loaded: true }),
       subscribe: () => () => undefined,
       destroy: () => undefined,
     },

@@ -5,7 +5,7 @@ import { textTo } from "../../../client/blocks/parts/number-text.ts";
 import { axisOf, plain, powerOf } from "../../../client/blocks/parts/plot-scales.ts";
 import { spread } from "../../../client/blocks/parts/plot.tsx";
 import { workingAsLatex } from "../../../client/blocks/parts/working.tsx";
-import { plainLatex } from "../../../client/blocks/divergence/divergence-form.tsx";
+import { plainLatex } from "../../../client/blocks/parts/plain-latex.ts";
 
 describe("numbers in a column", () => {
   it.each([

@@ -232,6 +232,8 @@ describe("words about a pin", () => {
     expect(movedWords(settled, noon)).toBe(words);
   });
   it("are said without markup", () => {
-    expect(withoutMarkup("size of $\\lambda\\,\\chi^{4}$ at $p$")).toBe("size of lambda,chi^4 at p");
+    expect(withoutMarkup("size of $\\frac{c_{6}}{6!\\,\\Lambda^{2}}\\,\\chi^{6}$ at $p$")).toBe(
+      "size of c₆/(6! Λ²) χ⁶ at p",
+    );
   });
 });
