@@ -1,7 +1,7 @@
 import { defineConfig } from "playwright/test";
 
 /** Debian's Chromium; the switches keep it from calling out and let it run as root. */
-const launchOptions = {
+export const launchOptions = {
   executablePath: process.env["CHROMIUM_PATH"] ?? "/usr/bin/chromium",
   args: [
     "--no-sandbox",
