@@ -3,6 +3,7 @@ import { mkdtempSync, chmodSync, rmSync } from "node:fs";
 import { join } from "node:path";
 import { test as base, type Browser, type BrowserContext, type Page } from "playwright/test";
 import { startStack, type Stack } from "../server/start/stack.mjs";
+import { layLine, type Line } from "./line.ts";
 
 export interface Player {
   readonly login: string;
@@ -11,10 +12,12 @@ export interface Player {
 }
 
 interface Fixtures {
-  /** Opens a browser of its own for someone and signs them in. */
-  readonly enter: (login: string) => Promise<Player>;
+  /** Opens a browser of its own for someone and signs them in; on a line of their own when they need one to be cut. */
+  readonly enter: (login: string, line?: Line) => Promise<Player>;
   /** A browser of its own for someone who is not signed in. */
-  readonly visit: () => Promise<Page>;
+  readonly visit: (line?: Line) => Promise<Page>;
+  /** A way to the server that can be cut. */
+  readonly line: Line;
 }
 interface Stage {
   readonly stack: Stack;
@@ -41,24 +44,36 @@ export const test = base.extend<Fixtures, Stage>({
   ],
   visit: async ({ browser }, use) => {
     const contexts: BrowserContext[] = [];
-    await use(async () => {
-      const context = await newContext(browser);
+    await use(async (line) => {
+      const context = await newContext(browser, line);
       contexts.push(context);
       return context.newPage();
     });
     for (const context of contexts) await context.close();
   },
+  // Playwright reads the fixture's dependencies from this pattern, empty or not.
+  // eslint-disable-next-line no-empty-pattern
+  line: async ({}, use) => {
+    const line = await layLine();
+    await use(line);
+    await line.remove();
+  },
   enter: async ({ visit, stack }, use) => {
-    await use(async (login) => {
-      const page = await visit();
+    await use(async (login, line) => {
+      const page = await visit(line);
       await signIn(page, stack.url, login);
       return { login, page, context: page.context() };
     });
   },
 });
 
-function newContext(browser: Browser): Promise<BrowserContext> {
-  return browser.newContext({ viewport: { width: 1440, height: 900 }, reducedMotion: "reduce" });
+function newContext(browser: Browser, line?: Line): Promise<BrowserContext> {
+  return browser.newContext({
+    viewport: { width: 1440, height: 900 },
+    reducedMotion: "reduce",
+    // By itself Chromium goes past a proxy to its own machine.
+    ...(line ? { proxy: { server: line.address, bypass: "<-loopback>" } } : {}),
+  });
 }
 
 /** Through the real sign-in: the start page, the stand-in's consent page, and back to the shelf. */

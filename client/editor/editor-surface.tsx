@@ -65,8 +65,9 @@ function WritingSurface({ session, state, children }: Omit<EditorSurfaceProps, "
     },
     [extensions],
   );
+  // A role that changes while the page is open changes what the text is to assistive technology, too.
   useEffect(() => {
-    editor.setEditable(!readOnly, false);
+    editor.setOptions({ editable: !readOnly, editorProps: readOnly ? readingProps : writingProps });
   }, [editor, readOnly]);
   useBlocksEditor(editor);
   useHistoryWords(session);
