@@ -1,5 +1,6 @@
 /** Makes a document of its stored parts. A row that does not apply is left out and named, never in the way. */
 import * as Y from "yjs";
+import { metered, noLimits, rowLimits } from "./integration-meter.ts";
 
 export interface StoredUpdate {
   readonly seq: number;
@@ -14,6 +15,8 @@ export interface BuiltDocument {
   readonly document: Y.Doc;
   /** Rows left out. */
   readonly bad: readonly BadRow[];
+  /** Steps that finding the place of everything took. */
+  readonly walked: number;
 }
 
 /** The origin of what comes from the store while a document is being made. */
@@ -28,11 +31,11 @@ export function buildDocument(state: Uint8Array | null, rows: readonly StoredUpd
   let good = rows;
   for (;;) {
     const document = new Y.Doc({ gc: true });
-    const failure = applyInOrder(document, state, good);
-    if (failure === null) return { document, bad };
+    const outcome = applyInOrder(document, state, good);
+    if (typeof outcome === "number") return { document, bad, walked: outcome };
     // Those that cannot even be read are found in one go, so that many bad rows do not mean many rounds.
     const unreadable = good.flatMap((row) => failureOf(row, () => Y.decodeUpdate(row.update)));
-    const found = unreadable.some(({ seq }) => seq === failure.seq) ? unreadable : [...unreadable, failure];
+    const found = unreadable.some(({ seq }) => seq === outcome.seq) ? unreadable : [...unreadable, outcome];
     bad.push(...found);
     good = good.filter(({ seq }) => !found.some((row) => row.seq === seq));
   }
@@ -43,20 +46,24 @@ function applyInOrder(
   document: Y.Doc,
   state: Uint8Array | null,
   rows: readonly StoredUpdate[],
-): BadRow | null {
-  if (state !== null) Y.applyUpdate(document, state, loadingOrigin);
+): BadRow | number {
+  let walked = 0;
+  if (state !== null)
+    walked += metered(document, noLimits, () => Y.applyUpdate(document, state, loadingOrigin)).walked;
   const [first] = rows;
-  if (first === undefined) return null;
+  if (first === undefined) return walked;
   let current = first;
   const failures = failureOf({ seq: -1 }, () =>
     document.transact(() => {
       for (const row of rows) {
         current = row;
-        Y.applyUpdate(document, row.update, loadingOrigin);
+        walked += metered(document, rowLimits, () =>
+          Y.applyUpdate(document, row.update, loadingOrigin),
+        ).walked;
       }
     }, loadingOrigin),
   );
-  return failures.map(({ reason }) => ({ seq: current.seq, reason }))[0] ?? null;
+  return failures.map(({ reason }) => ({ seq: current.seq, reason }))[0] ?? walked;
 }
 
 function failureOf({ seq }: { readonly seq: number }, work: () => unknown): readonly BadRow[] {

@@ -5,6 +5,14 @@ import type { Connection } from "./connection.ts";
 import type { StoredDocument } from "./document-store.ts";
 import { EncodingCache } from "./encoding-cache.ts";
 import type { StateVector } from "./frames.ts";
+import {
+  metered,
+  rowLimits,
+  STEPS_PER_DOCUMENT,
+  STEPS_PER_ROW_THEN,
+  type Effort,
+  type Limits,
+} from "./integration-meter.ts";
 
 /** Origin of every transaction after loading: whose committed update it was. */
 export class CommittedBy {
@@ -16,7 +24,11 @@ export class CommittedBy {
   ) {}
 }
 
-export type Application = { readonly ok: true } | { readonly ok: false; readonly reason: string };
+export type Application =
+  { readonly ok: true; readonly steps: number } | { readonly ok: false; readonly reason: string };
+
+/** A row that took so many steps more counts as another row when compaction is considered. */
+const STEPS_LIKE_A_ROW = 10_000;
 
 export class CommittedDocument {
   readonly document: Y.Doc;
@@ -24,42 +36,64 @@ export class CommittedDocument {
   readonly bad: readonly BadRow[];
   lastSeq: number;
   schemaVersion: number;
-  /** Rows since the stored state; compaction looks at it. */
+  /** Rows since the stored state, laborious ones counted more than once; compaction looks at it. */
   rowsSinceState: number;
+  /** A row did not apply and may have left half of itself: nothing of it is for anyone, and the room is made anew. */
+  isSpoilt = false;
 
   readonly #cache: EncodingCache;
+  readonly #listeners: ((update: Uint8Array, origin: CommittedBy) => void)[] = [];
+  /** Told of only once a row has been taken in whole. */
+  #untold: Uint8Array[] = [];
+  #walked: number;
 
   constructor(stored: StoredDocument) {
-    const { document, bad } = buildDocument(stored.state, stored.tail);
+    const { document, bad, walked } = buildDocument(stored.state, stored.tail);
     this.document = document;
+    this.#walked = walked;
     this.bad = bad;
     this.lastSeq = stored.lastSeq;
     this.schemaVersion = stored.schemaVersion;
     this.rowsSinceState = stored.tail.length;
     this.#cache = new EncodingCache(document);
-    document.on("update", (update) => this.#cache.note(update));
+    document.on("update", (update, origin) => {
+      this.#cache.note(update);
+      // Yjs tidies formatting marks in transactions of its own; every client does the same for itself.
+      if (origin instanceof CommittedBy) this.#untold.push(update);
+    });
   }
 
   /** `listener` gets what was new in the update, for those who have everything before it. */
   onUpdate(listener: (update: Uint8Array, origin: CommittedBy) => void): void {
-    this.document.on("update", (update: Uint8Array, origin: unknown) => {
-      // Yjs tidies formatting marks in transactions of its own; every client does the same for itself.
-      if (origin instanceof CommittedBy) listener(update, origin);
-    });
+    this.#listeners.push(listener);
   }
 
   apply(seq: number, update: Uint8Array, origin: CommittedBy): Application {
     const pendingBefore = this.document.store.pendingStructs !== null;
+    this.#untold = [];
+    let effort: Effort;
     try {
-      Y.applyUpdate(this.document, update, origin);
+      effort = metered(this.document, this.#limits(), () => Y.applyUpdate(this.document, update, origin));
     } catch (error) {
-      return { ok: false, reason: error instanceof Error ? error.message : String(error) };
+      return this.#spoilt(error instanceof Error ? error.message : String(error));
     }
     this.lastSeq = Math.max(this.lastSeq, seq);
-    this.rowsSinceState += 1;
     if (!pendingBefore && this.document.store.pendingStructs !== null)
-      return { ok: false, reason: "it builds on something that is not there" };
-    return { ok: true };
+      return this.#spoilt("it builds on something that is not there");
+    const steps = effort.walked + effort.moved;
+    this.#walked += effort.walked;
+    this.rowsSinceState += 1 + Math.floor(steps / STEPS_LIKE_A_ROW);
+    for (const whole of this.#untold) for (const listener of this.#listeners) listener(whole, origin);
+    return { ok: true, steps };
+  }
+
+  #limits(): Limits {
+    return this.#walked < STEPS_PER_DOCUMENT ? rowLimits : { ...rowLimits, walked: STEPS_PER_ROW_THEN };
+  }
+
+  #spoilt(reason: string): Application {
+    this.isSpoilt = true;
+    return { ok: false, reason };
   }
 
   clockOf(client: number): number {

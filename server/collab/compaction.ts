@@ -57,9 +57,10 @@ export function createCompaction(options: CompactionOptions): RoomObserver {
   const running = new Map<OpenRoom, Promise<void>>();
   const resting = new Map<OpenRoom, number>();
   const start = (room: OpenRoom): Promise<void> => {
+    const due = room.content.rowsSinceState;
     const work = compactNotebook(room.notebookId, options)
-      .then((rows) => {
-        room.content.rowsSinceState = Math.max(0, room.content.rowsSinceState - rows);
+      .then(() => {
+        room.content.rowsSinceState = Math.max(0, room.content.rowsSinceState - due);
       })
       .catch((error: unknown) => {
         // Nothing is lost by it: the log is whole, and a later change tries again.

@@ -124,7 +124,8 @@ export class Room {
 
   /** Null unless frames may be taken at the moment. */
   get taking(): { readonly document: CommittedDocument; readonly writer: UpdateWriter } | null {
-    return this.#stopping || this.#state !== "open" ? null : this.#opened();
+    if (this.#stopping || this.#state !== "open" || this.#content?.document.isSpoilt === true) return null;
+    return this.#opened();
   }
 
   get presence(): Presence {

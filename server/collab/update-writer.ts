@@ -2,7 +2,7 @@
  * The one ordered writer of a room. What arrives while one insert commits is gathered for the next (group commit);
  * only what is committed is applied, broadcast and acknowledged. A store that cannot be reached is waited for.
  */
-import { setTimeout as sleep } from "node:timers/promises";
+import { setImmediate as nextTurn, setTimeout as sleep } from "node:timers/promises";
 import type { Logger } from "pino";
 import { CommittedBy, type CommittedDocument } from "./committed-document.ts";
 import type { Connection } from "./connection.ts";
@@ -11,7 +11,9 @@ import { appendUntilAnswered, usualRetry, type RetryTimes } from "./append-until
 import { BackPressure } from "./back-pressure.ts";
 import { HeldFrames } from "./held-frames.ts";
 import type { QueuedUpdate, WriterReports } from "./writer-reports.ts";
+import { STEPS_PER_TURN } from "./integration-meter.ts";
 import { BATCH } from "./limits.ts";
+import { rowsSetAside } from "./rows-set-aside.ts";
 import { assessUpdate, isDeletedIn, type Assessment, type KnownContent } from "./update-check.ts";
 
 export interface WriterOptions {
@@ -69,10 +71,6 @@ export class UpdateWriter {
       this.#options.reports.refused(entry, "it builds on something that never arrived");
   }
 
-  get isIdle(): boolean {
-    return this.#running === null;
-  }
-
   /** Resolves when everything queued is stored (or the writer was abandoned). */
   async drained(): Promise<void> {
     while (this.#running !== null) await this.#running;
@@ -92,7 +90,9 @@ export class UpdateWriter {
     const rows = await store.readAfter(notebookId, document.lastSeq);
     for (const { seq, update, personId } of rows) {
       if (this.#isGivenUp()) return;
-      if (seq > document.lastSeq) this.#apply(seq, update, new CommittedBy(personId, null));
+      if (seq <= document.lastSeq) continue;
+      const applied = document.apply(seq, update, new CommittedBy(personId, null));
+      if (!applied.ok) return this.#setAside(seq, applied.reason, []);
     }
     // Quarantined rows are passed over, and so leave gaps.
     document.lastSeq = Math.max(document.lastSeq, atLeast);
@@ -144,7 +144,7 @@ export class UpdateWriter {
       const outcome = await this.#append(carrying);
       if (outcome === "given up") return;
       if (outcome === null) return this.#options.reports.notebookGone();
-      if (outcome.stored) this.#commit(batch, carrying, outcome);
+      if (outcome.stored) await this.#commit(batch, carrying, outcome);
       else await this.#resolve(outcome);
     }
   }
@@ -183,12 +183,24 @@ export class UpdateWriter {
     return outcome !== null && "abandoned" in outcome ? "given up" : outcome;
   }
 
-  #commit(batch: readonly QueuedUpdate[], carrying: readonly QueuedUpdate[], outcome: AppendOutcome): void {
+  async #commit(
+    batch: readonly QueuedUpdate[],
+    carrying: readonly QueuedUpdate[],
+    outcome: AppendOutcome,
+  ): Promise<void> {
     const { document, reports } = this.#options;
     let seq = outcome.lastSeq - carrying.length;
-    for (const { update, personId, connection } of carrying) {
+    let stepsInTurn = 0;
+    for (const [index, { update, personId, connection }] of carrying.entries()) {
       seq += 1;
-      if (!this.#apply(seq, update, new CommittedBy(personId, connection))) return;
+      const applied = document.apply(seq, update, new CommittedBy(personId, connection));
+      if (!applied.ok) return this.#setAside(seq, applied.reason, carrying.slice(index));
+      stepsInTurn += applied.steps;
+      if (stepsInTurn < STEPS_PER_TURN) continue;
+      stepsInTurn = 0;
+      // Other notebooks get their turn between laborious rows.
+      await nextTurn();
+      if (this.#isGivenUp()) return;
     }
     this.#settle(batch);
     if (outcome.schemaVersion > document.schemaVersion) {
@@ -207,18 +219,19 @@ export class UpdateWriter {
     this.#options.reports.committed(batch);
   }
 
-  /** Checked before it was stored, so this failing is our own mistake: the row is set aside and the room made anew. */
-  #apply(seq: number, update: Uint8Array, origin: CommittedBy): boolean {
-    const { document, store, notebookId, reports, log } = this.#options;
-    const applied = document.apply(seq, update, origin);
-    if (applied.ok) return true;
-    log.error({ seq, reason: applied.reason }, "a stored update does not apply");
-    store
-      .quarantine(notebookId, [{ seq, reason: applied.reason }])
-      .catch((error: unknown) => log.error({ err: error, seq }, "a row could not be set aside"))
-      .finally(() => reports.broken(new Error(`row ${seq} does not apply: ${applied.reason}`)));
+  /**
+   * A row that is whole and yet does not apply: our own mistake, or made to take too long. It is set aside with what
+   * its sender sent after it, which may build on it; the sender is closed, and the room is made anew without it.
+   */
+  #setAside(seq: number, reason: string, rest: readonly QueuedUpdate[]): void {
+    const { store, notebookId, reports, log } = this.#options;
+    log.error({ seq, reason }, "a stored update does not apply");
+    if (rest[0] !== undefined) reports.malformed(rest[0].connection, reason);
     this.#stop.abort();
-    return false;
+    store
+      .quarantine(notebookId, rowsSetAside(seq, reason, rest))
+      .catch((error: unknown) => log.error({ err: error, seq }, "a row could not be set aside"))
+      .finally(() => reports.broken(new Error(`row ${seq} does not apply: ${reason}`)));
   }
 
   /** Nothing was stored: sees to each reason, so that the next attempt differs from this one. */

@@ -27,17 +27,18 @@ export class TouchedBlocks {
 
   /** `onMistake` is told of an exception of ours; thrown, it would look as if the change could not be applied. */
   constructor(document: Y.Doc, onMistake: (error: unknown) => void) {
-    document
-      .getXmlFragment(FRAGMENT)
-      .observeDeep((events: readonly Y.YEvent<Y.XmlFragment | Y.XmlText>[], transaction) => {
-        if (!(transaction.origin instanceof CommittedBy)) return;
-        try {
-          this.#note(events, transaction.origin.personId);
-        } catch (error) {
-          this.#mayChangeResults = true;
-          onMistake(error);
-        }
-      });
+    // Makes the root what it is; until then Yjs holds it as a type without a kind.
+    document.getXmlFragment(FRAGMENT);
+    // Not `observeDeep`: it sorts events by their paths, and counts all earlier siblings anew for each of them.
+    document.on("afterTransaction", (transaction) => {
+      if (!(transaction.origin instanceof CommittedBy) || transaction.changed.size === 0) return;
+      try {
+        this.#note(transaction, transaction.origin.personId);
+      } catch (error) {
+        this.#mayChangeResults = true;
+        onMistake(error);
+      }
+    });
   }
 
   /** What was touched since this was asked last. */
@@ -65,23 +66,34 @@ export class TouchedBlocks {
     this.#anything ||= touched.anything;
   }
 
-  #note(events: readonly Y.YEvent<Y.XmlFragment | Y.XmlText>[], personId: string | null): void {
+  #note(transaction: Y.Transaction, personId: string | null): void {
     this.#anything = true;
     this.#last = personId;
-    for (const event of events) {
-      if (event.target instanceof Y.XmlText) continue;
+    for (const [node, what] of transaction.changed) {
+      if (!(node instanceof Y.XmlFragment) || node._item?.deleted === true) continue;
       this.#mayChangeResults = true;
-      const within = enclosingBlock(event.target);
+      const within = enclosingBlock(node);
       if (within !== null) {
         this.#blocks.set(within, personId);
         continue;
       }
       this.#structure = personId;
-      for (const item of event.changes.added)
-        if (item.content instanceof Y.ContentType)
-          for (const blockId of blocksIn(item.content.type)) this.#blocks.set(blockId, personId);
+      // Null stands for the list of children, texts for attributes.
+      if (!what.has(null)) continue;
+      for (const child of addedTo(node, transaction))
+        for (const blockId of blocksIn(child)) this.#blocks.set(blockId, personId);
     }
   }
+}
+
+function addedTo(node: Y.XmlFragment, { beforeState }: Y.Transaction): readonly unknown[] {
+  const added: unknown[] = [];
+  for (let item = node._start; item !== null; item = item.right) {
+    const { client, clock } = item.id;
+    const isNew = clock >= (beforeState.get(client) ?? 0);
+    if (isNew && !item.deleted && item.content instanceof Y.ContentType) added.push(item.content.type);
+  }
+  return added;
 }
 
 /** The id of the block that a node is or lies in; null in prose. */
