@@ -14,32 +14,56 @@ export class ComputeTimeout extends ComputeFailed {
 }
 export class ComputeBusy extends ComputeFailed {}
 
+export interface ComputePoolOptions {
+  readonly threads: number;
+  /** What is above is `ComputeBusy`. */
+  readonly longestQueue: number;
+}
 export interface ComputePool {
-  /** Rejects with `ComputeFailed`; after a `ComputeTimeout` the thread has been ended. */
+  /**
+   * Rejects with `ComputeFailed`; after a `ComputeTimeout` the thread has been ended. The limit counts from when the
+   * task has a thread: whoever waits behind a long one must not pay for it.
+   */
   run<Task extends ComputeTask>(task: Task, limitMs: number): Promise<ComputeAnswers[Task["task"]]>;
   stop(): Promise<void>;
 }
 
-const THREADS = 2;
-const LONGEST_QUEUE = 1_000;
 const MEMORY_MB = 512;
 
-export function openComputePool(): ComputePool {
+export function openComputePool({
+  threads = 2,
+  longestQueue = 1_000,
+}: Partial<ComputePoolOptions> = {}): ComputePool {
   const extension = extname(import.meta.filename);
   const pool = new Piscina({
     filename: join(import.meta.dirname, `compute-worker${extension}`),
     minThreads: 1,
-    maxThreads: THREADS,
+    maxThreads: threads,
     idleTimeout: 30_000,
-    maxQueue: LONGEST_QUEUE,
     resourceLimits: { maxOldGenerationSizeMb: MEMORY_MB },
     // Threads run from the same sources as the server does.
     execArgv: extension === ".ts" ? ["--import", loaderOfTypeScript()] : [],
   });
   // Each task's own promise carries its error; without a listener this event would end the process.
   pool.on("error", () => undefined);
+  const waiting: (() => void)[] = [];
+  let free = threads;
+  async function takeTurn(): Promise<void> {
+    if (free > 0) {
+      free -= 1;
+      return;
+    }
+    if (waiting.length >= longestQueue) throw new ComputeBusy("too much waits to be computed");
+    await new Promise<void>((resolve) => waiting.push(resolve));
+  }
+  function giveTurn(): void {
+    const next = waiting.shift();
+    if (next === undefined) free += 1;
+    else next();
+  }
   return {
     async run(task, limitMs) {
+      await takeTurn();
       const limit = new AbortController();
       const timer = setTimeout(() => limit.abort(), limitMs);
       try {
@@ -47,10 +71,10 @@ export function openComputePool(): ComputePool {
         return (await pool.run(task, { signal: limit.signal })) as ComputeAnswers[(typeof task)["task"]];
       } catch (error) {
         if (limit.signal.aborted) throw new ComputeTimeout(limitMs);
-        if (pool.queueSize >= LONGEST_QUEUE) throw new ComputeBusy("too much waits to be computed");
         throw new ComputeFailed("the compute thread failed", { cause: error });
       } finally {
         clearTimeout(timer);
+        giveTurn();
       }
     },
     stop: () => pool.destroy(),

@@ -26,10 +26,14 @@ export function openCompute(options: {
   readonly times?: Partial<SettlingTimes>;
 }): Compute {
   const pool = openComputePool();
+  // Anyone may send a file, signed in or not: however many they send, notebooks keep their threads.
+  const filePool = openComputePool({ threads: 1, longestQueue: 50 });
   return {
     observer: createSettling({ ...options, pool }),
     compact: (task) => pool.run({ task: "compact", ...task }, COMPACT_LIMIT_MS),
-    evaluateFile: (body) => pool.run({ task: "file", body }, FILE_LIMIT_MS),
-    stop: () => pool.stop(),
+    evaluateFile: (body) => filePool.run({ task: "file", body }, FILE_LIMIT_MS),
+    stop: async () => {
+      await Promise.all([pool.stop(), filePool.stop()]);
+    },
   };
 }

@@ -3,7 +3,8 @@ import type { Logger } from "pino";
 import type { OpenRoom, RoomObserver } from "../collab/room-state.ts";
 import { isPassing } from "../collab/store-errors.ts";
 import type { Database } from "../data/database.ts";
-import { ComputeFailed, type ComputePool } from "./compute-pool.ts";
+import { ComputeFailed, ComputeTimeout, type ComputePool } from "./compute-pool.ts";
+import { Rest } from "./rest.ts";
 import { storeLastChange, storeSettled } from "./store-settled.ts";
 import { TouchedBlocks, type Touched } from "./touched-blocks.ts";
 
@@ -25,9 +26,10 @@ const usualTimes: SettlingTimes = { quietMs: 300, longestMs: 2_000, limitMs: 10_
 
 export function createSettling(options: SettlingOptions): RoomObserver {
   const rooms = new Map<OpenRoom, RoomSettling>();
+  const rest = new Rest();
   return {
     opened(room) {
-      const settling = new RoomSettling(room, options);
+      const settling = new RoomSettling(room, options, rest);
       rooms.set(room, settling);
       // Results may be missing: the engine has a new version, or the last process ended before it stored them.
       settling.checkAll();
@@ -53,6 +55,7 @@ class RoomSettling {
   constructor(
     private readonly room: OpenRoom,
     private readonly options: SettlingOptions,
+    private readonly rest: Rest,
   ) {
     this.#touched = new TouchedBlocks(room.content.document, (error) =>
       options.log.error({ err: error, notebookId: room.notebookId }, "a change could not be looked at"),
@@ -70,12 +73,13 @@ class RoomSettling {
     const now = Date.now();
     this.#firstChangeAt ??= now;
     const latest = this.#firstChangeAt + this.#times.longestMs;
-    this.#runIn(Math.max(0, Math.min(this.#times.quietMs, latest - now)));
+    const wait = Math.max(0, Math.min(this.#times.quietMs, latest - now));
+    this.#runIn(Math.max(wait, this.rest.remaining(this.room.notebookId)));
   }
 
   /** Before the room closes: what waits is done now. */
   async finish(): Promise<void> {
-    if (this.#timer !== null) this.#runIn(null);
+    if (this.#timer !== null && this.rest.remaining(this.room.notebookId) === 0) this.#runIn(null);
     await this.#running;
   }
 
@@ -111,6 +115,7 @@ class RoomSettling {
       if (touched.anything) await storeLastChange(this.options.database, this.room.notebookId, touched.last);
     } catch (error) {
       log.error({ err: error, notebookId: this.room.notebookId }, "a notebook could not be settled");
+      if (error instanceof ComputeTimeout) this.rest.begin(this.room.notebookId);
       // What cannot be computed, or is refused as it is, would fare no better; the next change is tried afresh.
       if (error instanceof ComputeFailed || !isPassing(error)) return;
       this.#touched.giveBack(touched);
@@ -127,6 +132,7 @@ class RoomSettling {
     const { database, pool, log } = this.options;
     const { notebookId, content } = this.room;
     const settled = await pool.run({ task: "settle", document: content.encoded() }, this.#times.limitMs);
+    this.rest.end(notebookId);
     for (const mistake of settled.mistakes) log.error({ notebookId, mistake }, "a block kind threw");
     const changed = await database.transaction((transaction) =>
       storeSettled(transaction, notebookId, settled, touched),

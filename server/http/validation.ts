@@ -32,15 +32,29 @@ function sentenceOf(issue: $ZodIssue): string {
   return `${where} ${wordsOf(issue)}.`;
 }
 
-/** PostgreSQL stores no NUL, and nobody types one. */
-function holdsNul(value: unknown): boolean {
-  if (typeof value === "string") return value.includes("\0");
-  return typeof value === "object" && value !== null && Object.values(value).some(holdsNul);
+/** The deepest body of ours has seven levels. */
+const DEEPEST = 40;
+
+/**
+ * What no schema should have to look at. PostgreSQL stores no NUL, and nobody types one. Without recursion:
+ * a few hundred kilobytes of brackets nest deeper than any call stack.
+ */
+function faultOf(value: unknown): string | null {
+  const waiting: (readonly [part: unknown, depth: number])[] = [[value, 0]];
+  for (let next = waiting.pop(); next !== undefined; next = waiting.pop()) {
+    const [part, depth] = next;
+    if (typeof part === "string" && part.includes("\0"))
+      return "The request holds a character that cannot be stored (U+0000).";
+    if (typeof part !== "object" || part === null) continue;
+    if (depth >= DEEPEST) return "The request nests too deeply.";
+    for (const inner of Object.values(part)) waiting.push([inner, depth + 1]);
+  }
+  return null;
 }
 
 export function check<Schema extends $ZodType>(schema: Schema, value: unknown): Outcome<output<Schema>> {
-  if (holdsNul(value))
-    return refuse("invalid", "The request holds a character that cannot be stored (U+0000).");
+  const fault = faultOf(value);
+  if (fault !== null) return refuse("invalid", fault);
   const parsed = safeParse(schema, value);
   if (parsed.success) return succeed(parsed.data);
   return refuse("invalid", parsed.error.issues.slice(0, 5).map(sentenceOf).join(" "));

@@ -49,6 +49,41 @@ describe("POST /api/evaluate", () => {
     expect(answer.body.detail).toMatch(words);
   });
 
+  test.each([
+    ["brackets", `${"[".repeat(200_000)}${"]".repeat(200_000)}`],
+    [
+      "inputs",
+      `{"format":"${EVALUATE_FORMAT}","blocks":[{"id":"p","kind":"premises","inputs":{"d":${'{"a":'.repeat(50_000)}1${"}".repeat(50_000)}}}]}`,
+    ],
+  ])("refuses %s nested deeper than any call stack", async (_name, rawBody) => {
+    const answer = await world.stranger().post("/api/evaluate", {}, { rawBody });
+    expect(answer.status).toBe(422);
+    expect(answer.body.detail).toMatch(/deep/);
+  });
+
+  test("refuses a small file whose answer would be enormous", async () => {
+    const terms = Array.from({ length: 40 }, (_, index) => ({
+      term: `c${index}/Lambda^${index % 9} phi^${4 + (index % 9)}`,
+    }));
+    const premises = {
+      fields: [{ symbol: "phi", kind: "real scalar" }],
+      scales: [
+        { symbol: "Lambda", value: "3 TeV", role: "heavy" },
+        { symbol: "p", value: "350 GeV", role: "probe" },
+      ],
+      terms,
+    };
+    const plans = Array.from({ length: 400 }, (_, index) => ({
+      id: `plan${index}`,
+      kind: "orderPlan",
+      inputs: { target: "1e-9" },
+    }));
+    const blocks = [{ id: "p", kind: "premises", inputs: premises }, ...plans];
+    const answer = await world.stranger().post("/api/evaluate", { format: EVALUATE_FORMAT, blocks });
+    expect(answer.status).toBe(422);
+    expect(answer.body.detail).toMatch(/fewer blocks/);
+  });
+
   test("refuses what is not JSON", async () => {
     const answer = await world.stranger().post("/api/evaluate", undefined, { rawBody: "{" });
     expect(answer.status).toBe(400);

@@ -4,7 +4,13 @@ import * as Y from "yjs";
 import { FRAGMENT } from "../../../client/contract/collab.ts";
 import { block, paragraph, type DocumentNode } from "../../../server/commands/document-builder.ts";
 import { openCompute, type Compute } from "../../../server/compute/open-compute.ts";
-import { ComputeFailed, ComputeTimeout, openComputePool } from "../../../server/compute/compute-pool.ts";
+import {
+  ComputeBusy,
+  ComputeFailed,
+  ComputeTimeout,
+  openComputePool,
+} from "../../../server/compute/compute-pool.ts";
+import { Rest } from "../../../server/compute/rest.ts";
 import { settleJson } from "../../../server/compute/settle-document.ts";
 import { seedDocument } from "../../../server/compute/seed-document.ts";
 import { firstRow, rows } from "../../../server/data/database.ts";
@@ -251,13 +257,11 @@ test("text that PostgreSQL cannot keep, and names that it cannot index, harm not
 });
 
 test("a document nested deeper than any call stack settles like another", async () => {
-  const notebookId = await seeded(document(premises("4")));
-  const writer = await open(ada, notebookId);
-  const levels = 30_000;
+  const deep = new Y.Doc();
   let innermost = new Y.XmlElement("blockquote");
-  writer.document.getXmlFragment(FRAGMENT).push([innermost]);
-  writer.document.transact(() => {
-    for (let level = 0; level < levels; level += 1) {
+  deep.getXmlFragment(FRAGMENT).push([innermost]);
+  deep.transact(() => {
+    for (let level = 0; level < 30_000; level += 1) {
       const next = new Y.XmlElement("blockquote");
       innermost.insert(0, [next]);
       innermost = next;
@@ -266,9 +270,48 @@ test("a document nested deeper than any call stack settles like another", async 
     scaling.setAttribute("blockId", "deep");
     innermost.insert(0, [scaling]);
   });
-  await writer.allSaved();
-  await until("the block inside is evaluated", async () => (await keysOf(notebookId)).has("deep"));
-  expect(writer.closes).toEqual([]);
+  const pool = openComputePool();
+  try {
+    const settled = await pool.run({ task: "settle", document: Y.encodeStateAsUpdate(deep) }, 20_000);
+    expect(settled.blocks.map(({ blockId }) => blockId)).toEqual(["deep"]);
+  } finally {
+    await pool.stop();
+  }
+});
+
+test("a task waits for its turn without using up its time", async () => {
+  const pool = openComputePool({ threads: 1, longestQueue: 1 });
+  const empty = { task: "settle", document: Y.encodeStateAsUpdate(new Y.Doc()) } as const;
+  const blocks = Array.from({ length: 400 }, (_, index) =>
+    block("scaling", `s${index}`, "p1", { fields: { title: String(index) } }),
+  );
+  const long = { task: "file", body: { format: "none", blocks } } as const;
+  try {
+    await pool.run(empty, 20_000);
+    const first = pool.run(long, 20_000);
+    const second = pool.run(empty, 20_000);
+    await expect(pool.run(empty, 20_000)).rejects.toThrow(ComputeBusy);
+    await first;
+    expect((await second).blocks).toEqual([]);
+  } finally {
+    await pool.stop();
+  }
+});
+
+test("a notebook that takes too long rests, however often it is changed or opened, and others do not", () => {
+  let now = 1_000;
+  const rest = new Rest(() => now);
+  expect(rest.remaining("slow")).toBe(0);
+  rest.begin("slow");
+  expect(rest.remaining("slow")).toBe(30_000);
+  expect(rest.remaining("other")).toBe(0);
+  now += 30_000;
+  expect(rest.remaining("slow")).toBe(0);
+  rest.begin("slow");
+  expect(rest.remaining("slow")).toBe(60_000);
+  rest.end("slow");
+  rest.begin("slow");
+  expect(rest.remaining("slow")).toBe(30_000);
 });
 
 test("what takes too long is ended, and the next is computed", async () => {
