@@ -3,6 +3,7 @@ import * as Y from "yjs";
 import { buildDocument, type BadRow } from "./build-document.ts";
 import type { Connection } from "./connection.ts";
 import type { StoredDocument } from "./document-store.ts";
+import { DocumentSize } from "./document-size.ts";
 import { EncodingCache } from "./encoding-cache.ts";
 import type { StateVector } from "./frames.ts";
 import {
@@ -41,6 +42,8 @@ export class CommittedDocument {
   /** A row did not apply and may have left half of itself: nothing of it is for anyone, and the room is made anew. */
   isSpoilt = false;
 
+  readonly size: DocumentSize;
+
   readonly #cache: EncodingCache;
   readonly #listeners: ((update: Uint8Array, origin: CommittedBy) => void)[] = [];
   /** Told of only once a row has been taken in whole. */
@@ -56,6 +59,8 @@ export class CommittedDocument {
     this.schemaVersion = stored.schemaVersion;
     this.rowsSinceState = stored.tail.length;
     this.#cache = new EncodingCache(document);
+    const bytes = stored.tail.reduce((sum, { update }) => sum + update.length, stored.state?.length ?? 0);
+    this.size = new DocumentSize(bytes, () => this.encoded().length);
     document.on("update", (update, origin) => {
       this.#cache.note(update);
       // Yjs tidies formatting marks in transactions of its own; every client does the same for itself.
@@ -82,6 +87,7 @@ export class CommittedDocument {
       return this.#spoilt("it builds on something that is not there");
     const steps = effort.walked + effort.moved;
     this.#walked += effort.walked;
+    this.size.add(update.length);
     this.rowsSinceState += 1 + Math.floor(steps / STEPS_LIKE_A_ROW);
     for (const whole of this.#untold) for (const listener of this.#listeners) listener(whole, origin);
     return { ok: true, steps };

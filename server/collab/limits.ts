@@ -9,6 +9,11 @@ export const LARGEST_BACKLOG_BYTES = 16 * 1024 * 1024;
 /** Presence is not worth queueing behind this much. */
 export const PRESENCE_BACKLOG_BYTES = 256 * 1024;
 
+/** Of a whole notebook as stored: a thousand times what a long paper takes. Above it only deletions are taken. */
+export const LARGEST_DOCUMENT_BYTES = 32 * 1024 * 1024;
+/** Measuring a large document takes a tenth of a second. */
+export const MEASURE_AGAIN_AFTER_MS = 10_000;
+
 /** A connection with more than this in the writer's queue is not read from until it is stored. */
 export const QUEUED_PER_CONNECTION = { frames: 256, bytes: 4 * 1024 * 1024 };
 /** The same for all connections of a notebook together. */

@@ -55,6 +55,9 @@ export class UpdateWriter {
     if (assessment.verdict === "malformed")
       return this.#options.reports.malformed(connection, assessment.reason);
     if (assessment.verdict === "waiting") return this.#hold(entry);
+    const grows = assessment.verdict === "new" && assessment.reaches.size > 0;
+    if (grows && !this.#options.document.size.hasRoomFor(update.length))
+      return this.#options.reports.refused(entry, "the notebook is full: delete something first");
     this.#enqueue(entry, assessment);
     if (entry.carries) this.#retryHeld(connection);
   }
@@ -132,7 +135,7 @@ export class UpdateWriter {
   }
 
   async #run(): Promise<void> {
-    // What arrives in the same turn of the event loop shares the first insert.
+    // What arrives in the same turn shares the first insert.
     await Promise.resolve();
     while (this.#queue.length > 0 && !this.#isGivenUp()) {
       const batch = this.#nextBatch();
@@ -219,10 +222,7 @@ export class UpdateWriter {
     this.#options.reports.committed(batch);
   }
 
-  /**
-   * A row that is whole and yet does not apply: our own mistake, or made to take too long. It is set aside with what
-   * its sender sent after it, which may build on it; the sender is closed, and the room is made anew without it.
-   */
+  /** Our own mistake, or made to take too long: set aside, its sender closed, and the room made anew without it. */
   #setAside(seq: number, reason: string, rest: readonly QueuedUpdate[]): void {
     const { store, notebookId, reports, log } = this.#options;
     log.error({ seq, reason }, "a stored update does not apply");
