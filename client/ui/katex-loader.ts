@@ -37,12 +37,16 @@ export function katexNow(): Katex | null {
   return loaded;
 }
 
+/** Formulas come from colleagues too: one of a megabyte would hold every reader's page for minutes. */
+export const LONGEST_FORMULA = 12_000;
+
 function drawWith(
   katex: typeof katexModule,
   latex: string,
   element: HTMLElement,
   display: boolean,
 ): LatexFault | null {
+  if (latex.length > LONGEST_FORMULA) return { message: "Too long", position: LONGEST_FORMULA };
   try {
     // Drawn as nodes, not as a string: a strict Content-Security-Policy refuses style attributes in markup.
     katex.render(latex, element, {
@@ -58,6 +62,8 @@ function drawWith(
     });
     return null;
   } catch (error) {
+    // KaTeX reads and builds by recursion, and gives up in no other way. Thrown on, it would take the page along.
+    if (error instanceof RangeError) return { message: "Too deep", position: null };
     if (!(error instanceof katex.ParseError)) throw error;
     return faultOf(error);
   }

@@ -43,6 +43,8 @@ const sentences: readonly (readonly [RegExp, string])[] = [
     /^Unexpected character: '(.+)'$/,
     "The character $1 cannot be drawn. Use a command for it, or put it inside \\text{…}.",
   ],
+  [/^Too long$/, "The formula is too long to be drawn: divide it into several."],
+  [/^Too deep$/, "The formula nests too deeply to be drawn."],
   [/^Too many expansions/, "The formula keeps expanding its own macros and was stopped."],
   [/^Expected '(.+)', got 'EOF'$/, "The formula ends where $1 was expected."],
   [/^Expected '(.+)', got '(.+)'$/, "$1 was expected, but here is $2."],
