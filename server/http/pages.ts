@@ -21,7 +21,10 @@ function leadToPublicName(publicUrl: string): RequestHandler {
     const asked = request.get("Host");
     if (asked === undefined || asked === host || !loopbackNames.has(hostname)) return next();
     if (!loopbackNames.has(asked.replace(/:\d+$/, ""))) return next();
-    response.redirect(307, new URL(request.originalUrl, origin).href);
+    // Joined as text: read against a base, the path "//elsewhere" would be another host.
+    const goal = `${origin}${request.originalUrl}`;
+    if (!URL.canParse(goal) || new URL(goal).origin !== origin) return next();
+    response.redirect(307, new URL(goal).href);
   };
 }
 

@@ -8,7 +8,7 @@ import type { Configuration } from "../configuration.ts";
 /** Referee tokens in paths; tokens, OAuth codes and states in queries. */
 export function withoutSecrets(address: string): string {
   return address
-    .replace(/(\/r\/|\/api\/referee\/)[^/?#]+/g, "$1[hidden]")
+    .replace(/(\/r\/|\/api\/referee\/)[^/?#]+/gi, "$1[hidden]")
     .replace(/([?&](?:referee|code|state|token|access_token)=)[^&#]*/gi, "$1[hidden]");
 }
 

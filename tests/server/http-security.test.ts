@@ -146,6 +146,23 @@ describe("pages", () => {
     }
   });
 
+  it.each(["//elsewhere.example/x", "/\\elsewhere.example/x", "///elsewhere.example"])(
+    "lead nobody from another loopback name to %s",
+    async (path) => {
+      const { port } = new URL(wren.home);
+      const options = { host: "127.0.0.1", port, path, headers: { host: "[::1]:1", accept: "text/html" } };
+      const location = await new Promise<string | undefined>((resolve, reject) => {
+        rawRequest(options, (response) => {
+          response.resume();
+          resolve(response.headers.location);
+        })
+          .on("error", reject)
+          .end();
+      });
+      expect(location).toMatch(new RegExp(`^http://[a-z0-9.]+:${port}/`));
+    },
+  );
+
   it("send hashed files compressed to who can read that", async () => {
     const compressed = await wren.get("/assets/main-1a2b3c.js", { headers: { "accept-encoding": "gzip" } });
     expect(compressed.headers.get("content-encoding")).toBe("gzip");
@@ -241,6 +258,8 @@ describe("the log", () => {
     const created = await wren.post(`/api/notebooks/${id}/referee-links`, { name: "Journal" });
     const { token } = created.body;
     await wren.get(`/api/referee/${token}`);
+    await wren.get(`/API/Referee/${token}`);
+    await wren.get(`/R/${token}`, { headers: { accept: "text/html" } });
     await wren.get(`/r/${token}?x=1`, { headers: { accept: "text/html" } });
     await wren.get(`/collab/${id}?referee=${token}`);
     await wren.get(`/auth/github/callback?code=very-secret-code&state=very-secret-state`);
