@@ -1,6 +1,7 @@
 import { curveMonotoneX, line as lineShape } from "d3-shape";
 import { useId, type ReactNode } from "react";
 import { axisOf, plain, type Axis, type AxisSpec } from "./plot-scales.ts";
+import { ScrollBox } from "./scroll-box.tsx";
 
 export interface Curve {
   readonly key: string;
@@ -250,7 +251,7 @@ function PointTable({
   const step = Math.max(1, Math.ceil(all.length / MOST_TABLE_ROWS));
   const rows = all.map((_, index) => index).filter((index) => index % step === 0 || index === all.length - 1);
   return (
-    <div className="block-scroll">
+    <ScrollBox what="table of the plot">
       <table className="block-table">
         <caption className="sr-only">{name}</caption>
         <thead>
@@ -276,6 +277,6 @@ function PointTable({
           ))}
         </tbody>
       </table>
-    </div>
+    </ScrollBox>
   );
 }

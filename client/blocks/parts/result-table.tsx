@@ -1,5 +1,6 @@
 import type { KeyboardEvent, ReactNode } from "react";
 import { classes } from "../../ui/classes.ts";
+import { ScrollBox } from "./scroll-box.tsx";
 
 export interface ResultColumnSpec<Row> {
   readonly heading: ReactNode;
@@ -22,7 +23,7 @@ interface Props<Row> {
 /** A table of results. Arrow keys go from figure to figure, so that the table is one stop of the Tab key. */
 export function ResultTable<Row>({ caption, showCaption = false, columns, rows, keyOf, toneOf }: Props<Row>) {
   return (
-    <div className="block-scroll">
+    <ScrollBox what="table of results">
       {/* The keys belong to the figures inside, which are buttons. */}
       {/* eslint-disable-next-line jsx-a11y-x/no-noninteractive-element-interactions -- see above */}
       <table className="block-table" onKeyDown={goByArrows} ref={oneTabStop}>
@@ -52,7 +53,7 @@ export function ResultTable<Row>({ caption, showCaption = false, columns, rows, 
           })}
         </tbody>
       </table>
-    </div>
+    </ScrollBox>
   );
 }
 

@@ -7,6 +7,7 @@ import { plotFrame } from "../parts/plot.tsx";
 import { plain } from "../parts/plot-scales.ts";
 import { textTo } from "../parts/number-text.ts";
 import { resolutionOf } from "./method-rows.ts";
+import { ScrollBox } from "../parts/scroll-box.tsx";
 
 /** X order by order with the band of the chosen method around each: narrow and dark, wide and pale. */
 export function BandsPlot({ value }: ResultProps<TruncationValue>) {
@@ -82,7 +83,7 @@ export function BandsPlot({ value }: ResultProps<TruncationValue>) {
       </svg>
       <details className="plot-table">
         <summary>as a table</summary>
-        <div className="block-scroll">
+        <ScrollBox what="table of the plot">
           <table className="block-table">
             <caption className="sr-only">The quantity order by order with its truncation error</caption>
             <thead>
@@ -112,7 +113,7 @@ export function BandsPlot({ value }: ResultProps<TruncationValue>) {
               ))}
             </tbody>
           </table>
-        </div>
+        </ScrollBox>
       </details>
     </figure>
   );
