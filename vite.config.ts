@@ -25,12 +25,18 @@ export default defineConfig({
           name: "unit",
           include: ["tests/engine/**/*.test.ts", "tests/published/**/*.test.ts"],
           environment: "node",
+          testTimeout: 30_000,
         },
       },
       {
         root,
         plugins: [react()],
-        test: { name: "client", include: ["tests/client/**/*.test.{ts,tsx}"], environment: "happy-dom" },
+        test: {
+          name: "client",
+          include: ["tests/client/**/*.test.{ts,tsx}"],
+          environment: "happy-dom",
+          testTimeout: 30_000,
+        },
       },
       {
         root,
