@@ -7,6 +7,7 @@ import type { MathEditing } from "./mathematics/math-editing.ts";
 import { mathematicsTyping } from "./mathematics/mathematics-typing.ts";
 import type { NotebookSession } from "./notebook-session.ts";
 import { NumberingExtension } from "./numbering.ts";
+import { OwnSelection } from "./own-selection.ts";
 import { Pasting } from "./pasting.ts";
 
 export interface EditorWiring {
@@ -34,6 +35,7 @@ export function editorExtensions({
     mathematicsTyping(session.history),
     NumberingExtension,
     Pasting,
+    OwnSelection,
     ...others,
     Extension.create({
       name: "indexShortcut",

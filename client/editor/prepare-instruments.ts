@@ -9,7 +9,7 @@ const LATEST_MS = 4_000;
 /** Returns the way to give it up. */
 export function prepareInstruments(): () => void {
   const fetchAll = () => {
-    for (const { prepare } of [blockFrame, formulaEditor, placementPanel, linkPanel]) prepare();
+    for (const { prepare } of [blockFrame, formulaEditor, placementPanel, linkPanel]) void prepare();
   };
   // Safari has no idle callback.
   if (typeof requestIdleCallback === "undefined") {

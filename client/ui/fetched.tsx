@@ -10,8 +10,9 @@ import {
 import { say } from "./notices.ts";
 
 export interface Fetched<Props extends object> {
-  /** Fetches the code ahead of its use. A failure is said only when the part is wanted. */
-  prepare(): void;
+  /** Fetches the code ahead of its use; false when it could not be. A failure is said only when the part is wanted. */
+  prepare(): Promise<boolean>;
+  isReady(): boolean;
   /** Draws the part as soon as its code is there; at once when it was made ready. */
   readonly Part: ComponentType<Props & FetchedProps>;
 }
@@ -72,7 +73,7 @@ export function fetched<Props extends object>(load: () => Promise<ComponentType<
     return createElement(component, props as unknown as Props);
   }
 
-  return { prepare: () => void fetchOnce(), Part };
+  return { prepare: fetchOnce, isReady: () => component !== null, Part };
 }
 
 const missingWords =

@@ -72,16 +72,15 @@ const QUIET_MS = 1_200;
 /** Does something, waits until nothing changes on the page any more, and reads what was seen. */
 export async function measure(page: Page, act: () => Promise<void>): Promise<Watched> {
   await page.evaluate(() => {
-    watched = {
-      begin: performance.now(),
-      asked: [],
-      answers: [],
-      changed: performance.now(),
-      tasks: [],
-      inputs: [],
-    };
+    const now = performance.now();
+    watched = { begin: now, asked: [], answers: [], changed: now, tasks: [], inputs: [] };
   });
   await act();
+  return read(page);
+}
+
+/** The same from the beginning of the page on. */
+export async function read(page: Page): Promise<Watched> {
   await stillness(page);
   return page.evaluate(() => {
     const { begin, asked, answers, changed, tasks, inputs } = watched;
@@ -101,7 +100,7 @@ export async function measure(page: Page, act: () => Promise<void>): Promise<Wat
   });
 }
 
-export async function stillness(page: Page): Promise<void> {
+async function stillness(page: Page): Promise<void> {
   await page.waitForFunction((quiet) => performance.now() - watched.changed > quiet, QUIET_MS, {
     polling: 200,
     timeout: 60_000,

@@ -6,6 +6,7 @@ import { fetched } from "../../ui/fetched.tsx";
 import { AwaitedBlock } from "./awaited-block.tsx";
 import { blockPlaces, deleteBlock, moveBlock, selectBlock } from "./block-places.ts";
 import { useBlockWorld } from "./block-world.ts";
+import { useTurn } from "./drawing-turns.ts";
 import { useBlockHandle } from "./use-block-handle.ts";
 
 /** Forms, results and the words of their problems: fetched when a notebook has blocks, while its prose is read. */
@@ -48,6 +49,7 @@ function Block({
 }: BlockInEditorProps & { readonly blockId: string }) {
   const world = useBlockWorld();
   const handle = useBlockHandle(blockId);
+  const due = useTurn(world.drawing, blockFrame.isReady, blockFrame.prepare);
   if (!handle) return null;
 
   function onKeyDown(event: KeyboardEvent) {
@@ -68,13 +70,17 @@ function Block({
 
   return (
     <BlockHandleContext value={handle}>
-      <blockFrame.Part
-        meanwhile={<AwaitedBlock />}
-        selected={selected}
-        onKeyDown={onKeyDown}
-        onMove={(step) => moveBlock(world, editor, blockId, step)}
-        onDelete={() => deleteBlock(world, editor, blockId)}
-      />
+      {due ? (
+        <blockFrame.Part
+          meanwhile={<AwaitedBlock />}
+          selected={selected}
+          onKeyDown={onKeyDown}
+          onMove={(step) => moveBlock(world, editor, blockId, step)}
+          onDelete={() => deleteBlock(world, editor, blockId)}
+        />
+      ) : (
+        <AwaitedBlock />
+      )}
     </BlockHandleContext>
   );
 }

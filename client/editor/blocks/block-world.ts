@@ -5,6 +5,7 @@ import type { NotebookSession } from "../notebook-session.ts";
 import { startEvaluationWorker, type WorkerLike } from "../evaluation/evaluation-client.ts";
 import { createResultsStore, type ResultsStore } from "../evaluation/results-store.ts";
 import { createBlockDirectory, type BlockDirectory } from "./block-directory.ts";
+import { createDrawingTurns, type DrawingTurns } from "./drawing-turns.ts";
 import { createFieldPresence, type FieldPresence } from "./field-presence.ts";
 
 /** Something to be agreed to before it is done, because a colleague is at work there. */
@@ -20,6 +21,7 @@ export interface BlockWorld {
   readonly directory: BlockDirectory;
   readonly results: ResultsStore;
   readonly presence: FieldPresence;
+  readonly drawing: DrawingTurns;
   /** The editor that shows the notebook, while there is one. */
   editor(): Editor | null;
   showIn(editor: Editor | null): void;
@@ -41,6 +43,7 @@ export function createBlockWorld(
   const directory = createBlockDirectory(session.fragment);
   const results = createResultsStore({ directory, startWorker });
   const presence = createFieldPresence(session.awareness);
+  const drawing = createDrawingTurns();
   const listeners = new Set<() => void>();
   let question: Question | null = null;
   let picking = false;
@@ -50,6 +53,7 @@ export function createBlockWorld(
     directory,
     results,
     presence,
+    drawing,
     editor: () => editor,
     showIn(next) {
       editor = next;
@@ -72,6 +76,7 @@ export function createBlockWorld(
       results.destroy();
       directory.destroy();
       presence.destroy();
+      drawing.destroy();
       listeners.clear();
     },
   };

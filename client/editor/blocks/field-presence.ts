@@ -44,8 +44,11 @@ export function createFieldPresence(awareness: Awareness): FieldPresence {
       add(nextFields, `${place.blockId}/${place.key}`, colleague);
       add(nextBlocks, place.blockId, colleague);
     }
+    const before = [fields, blocks] as const;
     fields = keepEqual(fields, nextFields);
     blocks = keepEqual(blocks, nextBlocks);
+    // Carets move with every letter, and a long notebook has a thousand fields that would look each time.
+    if (isSame(before[0], fields) && isSame(before[1], blocks)) return;
     for (const listener of listeners) listener();
   }
 
@@ -104,4 +107,8 @@ function keepEqual(
     if (old && same) merged.set(key, old);
   }
   return merged;
+}
+
+function isSame(a: ReadonlyMap<string, unknown>, b: ReadonlyMap<string, unknown>): boolean {
+  return a.size === b.size && [...a].every(([key, value]) => b.get(key) === value);
 }

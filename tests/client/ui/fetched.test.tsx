@@ -22,7 +22,7 @@ describe("a part of the page that is fetched", () => {
   it("is drawn at once when it was made ready, and fetched only once", async () => {
     const load = vi.fn(() => Promise.resolve(Greeting));
     const { prepare, Part } = fetched(load);
-    prepare();
+    void prepare();
     await act(() => Promise.resolve());
     render(<Part name="Otto" />);
     expect(screen.getByText("Good evening, Otto")).toBeTruthy();
