@@ -7,11 +7,14 @@ import type { ComputeAnswers, ComputeTask } from "./tasks.ts";
 
 /** Not computed, for whatever reason. */
 export class ComputeFailed extends Error {}
-export class ComputeTimeout extends ComputeFailed {
+/** It would take more than any task may: the thread has been ended. */
+export class ComputeTooLarge extends ComputeFailed {}
+export class ComputeTimeout extends ComputeTooLarge {
   constructor(readonly limitMs: number) {
     super(`not computed within ${limitMs} ms`);
   }
 }
+export class ComputeOutOfMemory extends ComputeTooLarge {}
 export class ComputeBusy extends ComputeFailed {}
 
 export interface ComputePoolOptions {
@@ -71,6 +74,8 @@ export function openComputePool({
         return (await pool.run(task, { signal: limit.signal })) as ComputeAnswers[(typeof task)["task"]];
       } catch (error) {
         if (limit.signal.aborted) throw new ComputeTimeout(limitMs);
+        if (isOutOfMemory(error))
+          throw new ComputeOutOfMemory(`not computed within ${MEMORY_MB} MB`, { cause: error });
         throw new ComputeFailed("the compute thread failed", { cause: error });
       } finally {
         clearTimeout(timer);
@@ -79,6 +84,10 @@ export function openComputePool({
     },
     stop: () => pool.destroy(),
   };
+}
+
+function isOutOfMemory(error: unknown): boolean {
+  return error instanceof Error && "code" in error && error.code === "ERR_WORKER_OUT_OF_MEMORY";
 }
 
 function loaderOfTypeScript(): string {

@@ -12,7 +12,7 @@ export interface Compute {
   readonly observer: RoomObserver;
   /** To be handed to `attachCollab`. */
   compact(task: Omit<CompactTask, "task">): Promise<Compacted>;
-  /** Rejects with `ComputeTimeout` or `ComputeBusy`. */
+  /** Rejects with `ComputeTooLarge` or `ComputeBusy`. */
   evaluateFile(body: unknown): Promise<FileAnswer>;
   stop(): Promise<void>;
 }

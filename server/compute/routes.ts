@@ -6,7 +6,7 @@ import { refuse } from "../commands/outcome.ts";
 import { storedResults } from "../data/stored-results.ts";
 import { forEveryone, inNotebook, present } from "../http/route.ts";
 import type { Services } from "../services.ts";
-import { ComputeBusy, ComputeTimeout } from "./compute-pool.ts";
+import { ComputeBusy, ComputeTooLarge } from "./compute-pool.ts";
 import type { Compute } from "./open-compute.ts";
 
 const LARGEST_FILE = "512kb";
@@ -41,8 +41,8 @@ export function evaluateRoutes(services: Services, compute: Compute, limit: Requ
         const sentences = outcome.complaints.map(({ place, message }) => `${place} ${message}`);
         return refuse("invalid", `The file cannot be read: ${sentences.join("; ")}.`);
       } catch (error) {
-        if (error instanceof ComputeTimeout)
-          return refuse("too-large", "This takes too long to compute. Send fewer or smaller blocks.");
+        if (error instanceof ComputeTooLarge)
+          return refuse("too-large", "This takes too much to compute. Send fewer or smaller blocks.");
         if (error instanceof ComputeBusy) return refuse("too-many", "Too much is being computed. Try again.");
         throw error;
       }

@@ -3,7 +3,7 @@ import type { Logger } from "pino";
 import type { OpenRoom, RoomObserver } from "../collab/room-state.ts";
 import { isPassing } from "../collab/store-errors.ts";
 import type { Database } from "../data/database.ts";
-import { ComputeFailed, ComputeTimeout, type ComputePool } from "./compute-pool.ts";
+import { ComputeFailed, ComputeTooLarge, type ComputePool } from "./compute-pool.ts";
 import { Rest } from "./rest.ts";
 import { storeLastChange, storeSettled } from "./store-settled.ts";
 import { TouchedBlocks, type Touched } from "./touched-blocks.ts";
@@ -115,7 +115,7 @@ class RoomSettling {
       if (touched.anything) await storeLastChange(this.options.database, this.room.notebookId, touched.last);
     } catch (error) {
       log.error({ err: error, notebookId: this.room.notebookId }, "a notebook could not be settled");
-      if (error instanceof ComputeTimeout) this.rest.begin(this.room.notebookId);
+      if (error instanceof ComputeTooLarge) this.rest.begin(this.room.notebookId);
       // What cannot be computed, or is refused as it is, would fare no better; the next change is tried afresh.
       if (error instanceof ComputeFailed || !isPassing(error)) return;
       this.#touched.giveBack(touched);

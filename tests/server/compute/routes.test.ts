@@ -84,6 +84,20 @@ describe("POST /api/evaluate", () => {
     expect(answer.body.detail).toMatch(/fewer blocks/);
   });
 
+  test("says that a file asks for too much when it takes all memory of its thread, and goes on", async () => {
+    const terms = Array.from({ length: 2000 }, (_, index) => ({
+      term: `c${index}/Lambda^${index % 9} phi^${4 + (index % 9)}`,
+    }));
+    const fields = [{ symbol: "phi", kind: "real scalar" }];
+    const premises = { id: "p", kind: "premises", inputs: { fields, terms } };
+    const scalings = Array.from({ length: 499 }, (_, index) => ({ id: `s${index}`, kind: "scaling" }));
+    const blocks = [premises, ...scalings];
+    const answer = await world.stranger().post("/api/evaluate", { format: EVALUATE_FORMAT, blocks });
+    expect(answer.status).toBe(413);
+    expect(answer.body.detail).toMatch(/fewer or smaller blocks/);
+    expect((await world.stranger().post("/api/evaluate", file())).status).toBe(200);
+  }, 40_000);
+
   test("refuses what is not JSON", async () => {
     const answer = await world.stranger().post("/api/evaluate", undefined, { rawBody: "{" });
     expect(answer.status).toBe(400);
