@@ -25,23 +25,27 @@ export function sha256(text: string): string {
 
 /** UTF-8 by hand, since the engine has no API of a browser or of Node.js. A lone surrogate becomes U+FFFD. */
 function utf8(text: string): Uint8Array {
-  const bytes: number[] = [];
+  // A code unit takes at most three bytes; the two of a pair take four together.
+  const bytes = new Uint8Array(text.length * 3);
+  let end = 0;
+  const put = (...values: readonly number[]) => {
+    for (const value of values) bytes[end++] = value;
+  };
   for (const character of text) {
     const point = character.codePointAt(0) ?? 0;
     const code = point >= 0xd800 && point < 0xe000 ? 0xfffd : point;
-    if (code < 0x80) bytes.push(code);
-    else if (code < 0x800) bytes.push(0xc0 | (code >> 6), 0x80 | (code & 0x3f));
-    else if (code < 0x10000)
-      bytes.push(0xe0 | (code >> 12), 0x80 | ((code >> 6) & 0x3f), 0x80 | (code & 0x3f));
+    if (code < 0x80) bytes[end++] = code;
+    else if (code < 0x800) put(0xc0 | (code >> 6), 0x80 | (code & 0x3f));
+    else if (code < 0x10000) put(0xe0 | (code >> 12), 0x80 | ((code >> 6) & 0x3f), 0x80 | (code & 0x3f));
     else
-      bytes.push(
+      put(
         0xf0 | (code >> 18),
         0x80 | ((code >> 12) & 0x3f),
         0x80 | ((code >> 6) & 0x3f),
         0x80 | (code & 0x3f),
       );
   }
-  return Uint8Array.from(bytes);
+  return bytes.subarray(0, end);
 }
 
 /** Only what a result may depend on: fields that are keyed, and rows in order with their ids, since scalars name them. */
@@ -68,5 +72,11 @@ function keyedInputs(kind: KindName, inputs: BlockInputs): Json {
  * Titles and notes never enter, nor does the order in which fields were written.
  */
 export function resultKey(kind: KindName, inputs: BlockInputs, standsOn: readonly string[]): string {
-  return sha256(canonicalJson({ engine: ENGINE_VERSION, kind, inputs: keyedInputs(kind, inputs), standsOn }));
+  // Canonical JSON of { engine, kind, inputs, standsOn }: inputs never change, and are written once for all premises.
+  const known = written.get(inputs);
+  const text = known?.kind === kind ? known.text : canonicalJson(keyedInputs(kind, inputs));
+  written.set(inputs, { kind, text });
+  const [engine, what, below] = [ENGINE_VERSION, kind, standsOn].map(canonicalJson);
+  return sha256(`{"engine":${engine},"inputs":${text},"kind":${what},"standsOn":${below}}`);
 }
+const written = new WeakMap<BlockInputs, { readonly kind: KindName; readonly text: string }>();
