@@ -27,6 +27,8 @@ export const HELD_PER_CONNECTION = { frames: 128, bytes: 1024 * 1024, millisecon
 export const PRESENCE = {
   stateCharacters: 4_096,
   statesPerRoom: 400,
+  /** An honest client sends its own state, and at worst all that it has seen. */
+  statesPerMessage: 1_000,
   /** Clients renew every 15 s and give up after 30 s. */
   expiresAfterMs: 35_000,
   /** Changes are gathered this long and sent together. */

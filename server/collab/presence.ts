@@ -153,6 +153,7 @@ function readEntries(bytes: Uint8Array): readonly Entry[] | null {
   try {
     const decoder = decoding.createDecoder(bytes);
     const count = decoding.readVarUint(decoder);
+    if (count > PRESENCE.statesPerMessage) return null;
     const entries: Entry[] = [];
     for (let index = 0; index < count; index += 1) {
       const client = decoding.readVarUint(decoder);

@@ -94,6 +94,11 @@ const hostile: readonly (readonly [string, () => Uint8Array, number])[] = [
     closeCode.malformed,
   ],
   ["presence of noise", () => Uint8Array.of(1, 5, 9, 9, 9, 9, 9), closeCode.malformed],
+  [
+    "presence of thousands at once",
+    () => presence(...Array.from({ length: 5_000 }, (_, clock) => [5, clock, {}] as const)),
+    closeCode.malformed,
+  ],
   ["a change of 5 MB", () => update(sentence("x".repeat(5_000_000))), closeCode.tooLarge],
   ["more than the socket takes", () => update(sentence("x".repeat(9_000_000))), 1009],
 ];
