@@ -6,6 +6,10 @@ import { ensureDependencies } from "./dependencies.mjs";
 import { root } from "./place.mjs";
 import { endWith, say } from "./say.mjs";
 
+// Ctrl-C reaches the bench that runs, which ends; we then clean up.
+let interrupted = false;
+process.on("SIGINT", () => (interrupted = true));
+
 try {
   ensureDependencies();
   const { ensureChromium } = await import("./debian.mjs");
@@ -20,17 +24,20 @@ try {
     ...process.env,
     SUBLEADING_TEST_DATABASE_URL: cluster.url("postgres"),
     CHROMIUM_PATH: ensureChromium(),
+    // What a bench or its browser puts aside goes with everything else.
+    TMPDIR: folder,
   };
   let failed = false;
   try {
     for (const bench of ["delivery", "evaluation", "bundle"]) {
       say(`tests/bench/${bench}.ts`);
-      const { status } = spawnSync(process.execPath, ["--import", "tsx", `tests/bench/${bench}.ts`], {
+      const { status, signal } = spawnSync(process.execPath, ["--import", "tsx", `tests/bench/${bench}.ts`], {
         cwd: root,
         stdio: "inherit",
         env,
       });
       failed ||= status !== 0;
+      if (signal || interrupted) break;
     }
   } finally {
     cluster.remove();

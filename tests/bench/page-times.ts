@@ -1,5 +1,6 @@
 /** How long the page of a notebook with a hundred blocks takes: opening, a premise that changes, typing in its prose. */
 import { mkdtempSync, rmSync } from "node:fs";
+import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { chromium, type Page } from "playwright";
 import { openDatabase } from "../../server/data/database.ts";
@@ -17,7 +18,7 @@ const TYPED = "a sentence of forty letters is typed now";
 
 export async function printPageTimes(): Promise<void> {
   const testDatabase = await createTestDatabase();
-  const folder = mkdtempSync("/var/tmp/subleading-bench-page-");
+  const folder = mkdtempSync(join(tmpdir(), "subleading-page-"));
   const stack = await startStack({
     folder: join(folder, "data"),
     output: "ignore",
