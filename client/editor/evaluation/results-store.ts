@@ -74,10 +74,12 @@ export function createResultsStore({
     version += 1;
     for (const listener of listeners) listener();
   };
-  const change = (blockId: string, next: Partial<BlockResult>) => {
-    results.set(blockId, { ...(results.get(blockId) ?? nothingYet), ...next });
+  const change = (blockId: string, next: BlockResult) => {
+    const before = results.get(blockId);
+    if (!before || !isSame(before, next)) results.set(blockId, next);
     settle(blockId);
   };
+  const lastGood = (blockId: string) => results.get(blockId)?.lastGood ?? null;
   /** Keeps the object as long as it says the same. */
   const settle = (blockId: string) => {
     const known = stored.get(blockId);
@@ -116,11 +118,14 @@ export function createResultsStore({
     // The block may have gone since.
     if (!directory.block(blockId)) return;
     answered.add(blockId);
+    // The same key is the same result: what the server had stored stays as it is, and so does its drawing.
+    const known = results.get(blockId);
+    const same = known?.key === key && known.evaluation?.value != null ? known.evaluation : evaluation;
     change(blockId, {
-      evaluation,
+      evaluation: same,
       key,
       standsOn,
-      ...(evaluation.value === null ? {} : { lastGood: evaluation }),
+      lastGood: same.value === null ? lastGood(blockId) : same,
     });
     publish();
   }
@@ -160,10 +165,18 @@ export function createResultsStore({
 
   function useStored(blockId: string) {
     const known = stored.get(blockId);
-    if (!known || answered.has(blockId)) return;
+    const block = directory.block(blockId);
+    if (!known || !block || answered.has(blockId)) return;
     const { evaluation, key } = known;
     if (results.get(blockId)?.key === key) return;
-    change(blockId, { evaluation, key, ...(evaluation.value === null ? {} : { lastGood: evaluation }) });
+    const choice = choosePremises(block, blocks);
+    const standsOn = "found" in choice ? (choice.found?.id ?? null) : null;
+    change(blockId, {
+      evaluation,
+      key,
+      standsOn,
+      lastGood: evaluation.value === null ? lastGood(blockId) : evaluation,
+    });
   }
 
   follow();
@@ -199,3 +212,9 @@ export function createResultsStore({
 }
 
 const isPremises = ({ kind }: BlockInstance) => kind === "premises";
+
+function isSame(a: BlockResult, b: BlockResult): boolean {
+  return (
+    a.evaluation === b.evaluation && a.key === b.key && a.standsOn === b.standsOn && a.lastGood === b.lastGood
+  );
+}

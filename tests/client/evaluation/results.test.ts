@@ -156,7 +156,10 @@ describe("results", () => {
 
     const results = open();
     results.setStored(stored);
+    const shown = results.result("scaling");
     await settled(results);
+    // The same key is the same result: nothing is drawn again when the worker agrees.
+    expect(results.result("scaling")).toBe(shown);
     expect(results.settled("apart")?.by).toBe("Otto");
     edit("apart", "q", "0.2");
     await settled(results);
