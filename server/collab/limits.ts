@@ -22,7 +22,7 @@ export const QUEUED_PER_ROOM = { frames: 2_048, bytes: 16 * 1024 * 1024 };
 export const BATCH = { frames: 512, bytes: 2 * 1024 * 1024 };
 
 /** Frames kept back until what they build on arrives. */
-export const HELD_PER_CONNECTION = { frames: 128, bytes: 1024 * 1024, milliseconds: 10_000 };
+export const HELD_PER_CONNECTION = { frames: 128, bytes: 1024 * 1024, milliseconds: 10_000, looks: 20 };
 
 export const PRESENCE = {
   stateCharacters: 4_096,

@@ -12,8 +12,16 @@ export type Assessment =
   /** Holds nothing that is not known already. */
   | { readonly verdict: "known" }
   /** Builds on something not seen yet. Typing before the answer to our step 1 does that, for a moment. */
-  | { readonly verdict: "waiting" }
+  | { readonly verdict: "waiting"; readonly missing: readonly Missing[] }
   | { readonly verdict: "malformed"; readonly reason: string };
+
+/** Looking at the update again is of no use before one of these is there. */
+export interface Missing {
+  readonly client: number;
+  readonly clock: number;
+}
+/** Honest updates miss one thing or two. */
+const MOST_MISSING = 64;
 
 export interface KnownContent {
   /** The clock up to which everything of this client is known (stored or queued). */
@@ -39,12 +47,14 @@ export function assessUpdate(update: Uint8Array, known: KnownContent): Assessmen
   }
   try {
     const integration = new Integration(structsByClient(decoded.structs), known);
-    if (!integration.completes()) return { verdict: "waiting" };
+    const missing = integration.missing();
+    if (missing.length > 0) return { verdict: "waiting", missing };
     let deletesSomething = false;
     for (const [client, ranges] of decoded.ds.clients) {
       for (const { clock, len } of ranges) {
         if (len <= 0 || clock + len > HIGHEST_CLOCK) throw new Malformed("a deletion of nothing");
-        if (clock + len > integration.clockOf(client)) return { verdict: "waiting" };
+        if (clock + len > integration.clockOf(client))
+          return { verdict: "waiting", missing: [{ client, clock: clock + len - 1 }] };
         deletesSomething ||= !known.isDeleted(client, clock, len);
       }
     }
@@ -114,8 +124,8 @@ class Integration {
     return this.reaches.get(client) ?? this.known.clockOf(client);
   }
 
-  /** False when something is missing, or when structs wait for each other in a circle. */
-  completes(): boolean {
+  /** What keeps the integration from completing; of structs that wait for each other in a circle, each other. */
+  missing(): readonly Missing[] {
     const ready = [...this.lists.keys()];
     for (let client = ready.pop(); client !== undefined; client = ready.pop()) {
       if (!this.#advance(client)) continue;
@@ -123,8 +133,21 @@ class Integration {
       this.#waiting.delete(client);
       if (waiting !== undefined) ready.push(...waiting);
     }
-    for (const [client, list] of this.lists) if ((this.#next.get(client) ?? 0) < list.length) return false;
-    return true;
+    const missing: Missing[] = [];
+    for (const [client, list] of this.lists) {
+      const struct = list[this.#next.get(client) ?? 0];
+      if (struct === undefined) continue;
+      const before = { client, clock: struct.id.clock - 1 };
+      missing.push(struct.id.clock > this.clockOf(client) ? before : (this.#missingFor(struct) ?? before));
+      if (missing.length >= MOST_MISSING) break;
+    }
+    return missing;
+  }
+
+  #missingFor(struct: Struct): Missing | undefined {
+    return dependenciesOf(struct).find(
+      (id) => id.client !== struct.id.client && id.clock >= this.clockOf(id.client),
+    );
   }
 
   /** Integrates as many structs of this client as can be; true when there was one at least. */
@@ -135,9 +158,7 @@ class Integration {
     for (let struct = list[next]; struct !== undefined; struct = list[next]) {
       const clock = this.clockOf(client);
       if (struct.id.clock > clock) break;
-      const missing = dependenciesOf(struct).find(
-        (id) => id.client !== client && id.clock >= this.clockOf(id.client),
-      );
+      const missing = this.#missingFor(struct);
       if (missing !== undefined) {
         if (this.lists.has(missing.client)) this.#waitFor(missing.client, client);
         break;

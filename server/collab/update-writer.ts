@@ -12,9 +12,15 @@ import { BackPressure } from "./back-pressure.ts";
 import { HeldFrames } from "./held-frames.ts";
 import type { QueuedUpdate, WriterReports } from "./writer-reports.ts";
 import { STEPS_PER_TURN } from "./integration-meter.ts";
-import { BATCH } from "./limits.ts";
+import { nextBatch } from "./next-batch.ts";
 import { rowsSetAside } from "./rows-set-aside.ts";
-import { assessUpdate, isDeletedIn, type Assessment, type KnownContent } from "./update-check.ts";
+import {
+  assessUpdate,
+  isDeletedIn,
+  type Assessment,
+  type KnownContent,
+  type Missing,
+} from "./update-check.ts";
 
 export interface WriterOptions {
   readonly notebookId: string;
@@ -40,24 +46,23 @@ export class UpdateWriter {
   constructor(options: WriterOptions) {
     this.#options = options;
     this.#retry = options.retry ?? usualRetry;
-    const { document } = options;
     this.#known = {
-      clockOf: (client) => Math.max(this.#reaches.get(client) ?? 0, document.clockOf(client)),
-      isDeleted: (client, clock, length) => isDeletedIn(document.document, client, clock, length),
+      clockOf: (client) => Math.max(this.#reaches.get(client) ?? 0, options.document.clockOf(client)),
+      isDeleted: (client, clock, length) => isDeletedIn(options.document.document, client, clock, length),
     };
   }
 
   /** Takes a content frame of someone who may write. */
   offer(connection: Connection, personId: string, update: Uint8Array): void {
+    const { reports, document } = this.#options;
     const frame = connection.saved.take();
     const assessment = assessUpdate(update, this.#known);
     const entry = { connection, frame, personId, update, carries: assessment.verdict === "new" };
-    if (assessment.verdict === "malformed")
-      return this.#options.reports.malformed(connection, assessment.reason);
-    if (assessment.verdict === "waiting") return this.#hold(entry);
+    if (assessment.verdict === "malformed") return reports.malformed(connection, assessment.reason);
+    if (assessment.verdict === "waiting") return this.#hold(entry, assessment.missing);
     const grows = assessment.verdict === "new" && assessment.reaches.size > 0;
-    if (grows && !this.#options.document.size.hasRoomFor(update.length))
-      return this.#options.reports.refused(entry, "the notebook is full: delete something first");
+    if (grows && !document.size.hasRoomFor(update.length))
+      return reports.refused(entry, "the notebook is full: delete something first");
     this.#enqueue(entry, assessment);
     if (entry.carries) this.#retryHeld(connection);
   }
@@ -106,15 +111,22 @@ export class UpdateWriter {
     return this.#stop.signal.aborted;
   }
 
-  #hold(entry: QueuedUpdate): void {
-    if (this.#held.add(entry, Date.now())) return;
-    this.#options.reports.malformed(entry.connection, "too much builds on something that is not there");
+  #hold(entry: QueuedUpdate, missing: readonly Missing[]): void {
+    if (!this.#held.add(entry, missing, Date.now())) this.#waitsTooMuch(entry.connection);
+  }
+
+  #waitsTooMuch(connection: Connection): void {
+    this.#options.reports.malformed(connection, "too much builds on something that is not there");
   }
 
   #retryHeld(connection: Connection): void {
-    for (let entry = this.#held.first(connection); entry !== null; entry = this.#held.first(connection)) {
+    const next = () => this.#held.first(connection, this.#known);
+    for (let entry = next(); entry !== null; entry = next()) {
       const assessment = assessUpdate(entry.update, this.#known);
-      if (assessment.verdict === "waiting") return;
+      if (assessment.verdict === "waiting") {
+        if (!this.#held.waitOn(connection, assessment.missing)) this.#waitsTooMuch(connection);
+        return;
+      }
       this.#held.takeFirst(connection);
       if (assessment.verdict === "malformed")
         return this.#options.reports.malformed(connection, assessment.reason);
@@ -138,7 +150,7 @@ export class UpdateWriter {
     // What arrives in the same turn shares the first insert.
     await Promise.resolve();
     while (this.#queue.length > 0 && !this.#isGivenUp()) {
-      const batch = this.#nextBatch();
+      const batch = nextBatch(this.#queue);
       const carrying = batch.filter(({ carries }) => carries);
       if (carrying.length === 0) {
         this.#settle(batch);
@@ -150,17 +162,6 @@ export class UpdateWriter {
       if (outcome.stored) await this.#commit(batch, carrying, outcome);
       else await this.#resolve(outcome);
     }
-  }
-
-  #nextBatch(): readonly QueuedUpdate[] {
-    let bytes = 0;
-    let count = 0;
-    for (const { update } of this.#queue) {
-      if (count > 0 && (count >= BATCH.frames || bytes + update.length > BATCH.bytes)) break;
-      bytes += update.length;
-      count += 1;
-    }
-    return this.#queue.slice(0, count);
   }
 
   async #append(carrying: readonly QueuedUpdate[]): Promise<AppendOutcome | null | "given up"> {
@@ -264,7 +265,7 @@ export class UpdateWriter {
     try {
       await this.#catchUp(lastSeq);
     } catch (error) {
-      // The next append meets the same store and says what there is to say about it.
+      // The next append meets the same store, and says so.
       this.#options.log.error({ err: error }, "rows of another process could not be read");
       await sleep(this.#retry.firstMs);
     }
@@ -289,12 +290,11 @@ export class UpdateWriter {
       const assessment = assessUpdate(entry.update, this.#known);
       if (assessment.verdict === "new") this.#note(assessment.reaches);
       entry.carries = assessment.verdict === "new";
-      if (assessment.verdict === "new" || assessment.verdict === "known") {
-        this.#queue.push(entry);
-        continue;
+      if (assessment.verdict === "new" || assessment.verdict === "known") this.#queue.push(entry);
+      else {
+        this.#pressure.remove(entry.connection, entry.update.length);
+        this.#options.reports.refused(entry, "it builds on something that was not accepted");
       }
-      this.#pressure.remove(entry.connection, entry.update.length);
-      this.#options.reports.refused(entry, "it builds on something that was not accepted");
     }
   }
 }

@@ -164,6 +164,66 @@ test("three thousand updates that name an unknown client stall nobody", async ()
   expect(await socket.closedWith()).toBe(closeCode.malformed);
 });
 
+describe("a large update that waits", () => {
+  /** Sixty thousand structs of client 99, from its clock 5 on. */
+  const large = handmade((encoder) => {
+    for (const value of [1, 60_000, 99, 5]) encoding.writeVarUint(encoder, value);
+    for (let count = 0; count < 60_000; count += 1)
+      for (const value of [0, 1]) encoding.writeVarUint(encoder, value);
+    encoding.writeVarUint(encoder, 0);
+  });
+  const typing = () => {
+    const document = new Y.Doc();
+    const updates: Uint8Array[] = [];
+    document.on("update", (bytes) => updates.push(bytes));
+    const text = paragraphOf(document);
+    for (let letter = 0; letter < 1_000; letter += 1) text.insert(0, "x");
+    return updates;
+  };
+
+  test("is not looked at again with every letter that has nothing to do with it", async () => {
+    const notebookId = await stage.notebook();
+    const elsewhere = await stage.write(stage.ada, await stage.notebook());
+    const socket = await stage.raw(stage.ben, notebookId);
+    const updates = typing();
+    socket.send(update(large));
+    for (const bytes of updates) socket.send(update(bytes));
+    const start = performance.now();
+    elsewhere.type("meanwhile");
+    await elsewhere.allSaved();
+    expect(performance.now() - start).toBeLessThan(1_000);
+    const { rooms } = stage.server.collab;
+    await until(
+      "the letters are stored",
+      () => (rooms.find(notebookId)?.taking?.document.lastSeq ?? 0) === updates.length,
+    );
+  });
+
+  test("is taken as soon as what it waits for is there", async () => {
+    const socket = await stage.raw(stage.ben, await stage.notebook());
+    socket.send(update(large));
+    socket.send(update(numbers(1, 1, 99, 0, 0, 5, 0)));
+    await until("both are saved", () => socket.saved() === 2);
+  });
+
+  test("closes its sender when it waits for one thing after another", async () => {
+    const socket = await stage.raw(stage.ben, await stage.notebook());
+    const clients = Array.from({ length: 40 }, (_, index) => 200 + index);
+    const builds = handmade((encoder) => {
+      for (const value of [1, clients.length, 99, 0]) encoding.writeVarUint(encoder, value);
+      for (const client of clients) {
+        encoding.writeUint8(encoder, 0x84); // a string with an origin
+        for (const value of [client, 0]) encoding.writeVarUint(encoder, value);
+        encoding.writeVarString(encoder, "x");
+      }
+      encoding.writeVarUint(encoder, 0);
+    });
+    socket.send(update(builds));
+    for (const client of clients) socket.send(update(numbers(1, 1, client, 0, 0, 1, 0)));
+    expect(await socket.closedWith()).toBe(closeCode.malformed);
+  });
+});
+
 test("asking for the whole document again and again is too fast", async () => {
   const socket = await stage.raw(stage.cleo, await stage.notebook());
   for (let count = 0; count < 30; count += 1) socket.send(step1());
