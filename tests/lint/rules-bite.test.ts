@@ -8,6 +8,7 @@ const root = resolve(import.meta.dirname, "../..");
 const breaches = [
   ["engine-stays-pure", "client/engine/breach-of-rules/a.ts", 'import "react";\n'],
   ["engine-only-parses-with-mathjs", "client/engine/breach-of-rules/b.ts", 'import "mathjs";\n'],
+  ["mathjs-has-one-door", "client/engine/breach-of-rules/k.ts", 'import "mathjs/number";\n'],
   ["mathjs-stays-in-the-engine", "client/ui/breach-of-rules/c.ts", 'import "mathjs/number";\n'],
   [
     "server-takes-only-shared-code",
@@ -95,6 +96,11 @@ describe("lint in the engine", () => {
       "a swallowed error",
       "export function f(g: () => void): void {\n  try {\n    g();\n  } catch {}\n}\n",
       "no-empty",
+    ],
+    [
+      "mathjs beyond its parser",
+      'import { evaluate } from "mathjs/number";\nexport const two: unknown = evaluate("1 + 1");\n',
+      "no-restricted-imports",
     ],
   ] as const;
 

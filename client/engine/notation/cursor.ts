@@ -1,8 +1,6 @@
 /** A place in a list of tokens, and the first failure met there. */
-import { Rational } from "../exact/rational.ts";
 import { FirstFailure, type NotationFailure } from "./failure.ts";
 import type { Token } from "./tokens.ts";
-import type { Tree } from "./tree.ts";
 
 export class Cursor {
   private readonly trouble = new FirstFailure();
@@ -21,10 +19,9 @@ export class Cursor {
     return this.trouble.failure;
   }
   /** Notes the failure and jumps to the end, so that every caller finishes without reading on. */
-  protected fail(code: string, token: Token): Tree {
+  protected fail(code: string, token: Token): void {
     this.trouble.note(code, { text: this.text.slice(token.at, token.to), offset: token.at });
     this.next = this.tokens.length - 1;
-    return { type: "number", value: Rational.one, text: "1", at: token.at };
   }
   protected peek(ahead = 0): Token {
     // The list always ends with an `end` token, so one of the two is there.

@@ -9,6 +9,15 @@ export interface Factor {
   readonly node: Tree;
 }
 
+/** One part of a sum; `at` is the offset of its sign, or of its first character where it has none. */
+export interface Term {
+  readonly sign: "+" | "-" | "±";
+  readonly at: number;
+  readonly node: Tree;
+}
+
+export type Bracket = "(" | "[" | "{" | "⟨";
+
 export type Tree = { readonly at: number } & (
   | { readonly type: "number"; readonly value: Rational; readonly text: string }
   | { readonly type: "measured"; readonly value: Rational; readonly sigma: Rational; readonly text: string }
@@ -16,14 +25,11 @@ export type Tree = { readonly at: number } & (
   | { readonly type: "accent"; readonly accent: Accent; readonly body: Tree }
   | { readonly type: "product"; readonly factors: readonly Factor[] }
   | { readonly type: "quotient"; readonly over: Tree; readonly under: Tree }
-  | {
-      readonly type: "sum";
-      readonly parts: readonly { readonly sign: "+" | "-" | "±"; readonly at: number; readonly node: Tree }[];
-    }
+  | { readonly type: "sum"; readonly parts: readonly Term[] }
   | { readonly type: "power"; readonly base: Tree; readonly exponent: Tree }
   | { readonly type: "conjugate"; readonly body: Tree }
   | { readonly type: "factorial"; readonly body: Tree }
-  | { readonly type: "group"; readonly bracket: "(" | "[" | "{" | "⟨"; readonly body: Tree }
+  | { readonly type: "group"; readonly bracket: Bracket; readonly body: Tree }
   | { readonly type: "modulus"; readonly body: Tree }
   | { readonly type: "call"; readonly callee: "sqrt" | "max" | "min"; readonly parts: readonly Tree[] }
 );
