@@ -127,6 +127,8 @@ export function startMailSender({ configuration, publicUrl, database, log }: Ser
       .catch((error: unknown) => log.error({ err: error }, "the mail queue cannot be read"))
       .finally(() => {
         work = null;
+        // Told of a letter between the last look and this moment.
+        if (isAsked()) look();
       });
   }
   const timer = setInterval(look, LOOK_EVERY_MS);
@@ -134,8 +136,9 @@ export function startMailSender({ configuration, publicUrl, database, log }: Ser
   const { databaseUrl } = configuration;
   const channels = [MAIL_CHANNEL];
   const listening = listenForNotifications({ databaseUrl, channels, log, onNotification: look, onGap: look });
-  // Without the listener a letter waits for the next round, which is late but not lost.
-  listening.catch((error: unknown) => log.error({ err: error }, "new letters are not announced"));
+  // A letter queued before the listener was there was not announced to it. Without the listener a letter waits for the
+  // next round, which is late but not lost.
+  listening.then(look, (error: unknown) => log.error({ err: error }, "new letters are not announced"));
   look();
   return {
     stop: async () => {
