@@ -178,7 +178,10 @@ function Axes({
   );
 }
 
-/** Labels at the right end of the curves, moved apart where they would lie on each other. */
+/**
+ * Labels at the right end of the curves, moved apart where they would lie on each other. They stand in the order of the
+ * curves halfway along, where these are apart: sizes meet at the heavy scale, and their order there says nothing.
+ */
 function EndLabels({
   curves,
   x,
@@ -193,11 +196,14 @@ function EndLabels({
     .flatMap(({ key, label, points, color }) => {
       const inside = points.filter(([at, value]) => within(at, x.domain) && within(value, y.domain));
       const last = inside.at(-1);
-      return last ? [{ key, label, color, at: y.position(last[1]) }] : [];
+      const halfway = points[Math.floor(points.length / 2)];
+      return last && halfway
+        ? [{ key, label, color, at: y.position(last[1]), rank: y.position(halfway[1]) }]
+        : [];
     })
-    .sort((a, b) => a.at - b.at);
+    .sort((a, b) => a.rank - b.rank);
   const placed = spread(
-    wanted.map(({ at }) => at),
+    wanted.map(({ at }) => at).sort((a, b) => a - b),
     11.5,
     top + 4,
     height - bottom,
