@@ -44,7 +44,8 @@ export const BlockPairing = Extension.create({
           // The plugin's state is not typed by the package; these are the members it documents and we read.
           const sync = ySyncPluginKey.getState(view.state) as SyncState | undefined;
           if (!sync || sync.isChangeOrigin) return;
-          if (sameBlocks(placedBlocks(before.doc), placedBlocks(view.state.doc))) return;
+          const same = sameBlocks(placedBlocks(before.doc), placedBlocks(view.state.doc));
+          if (same && differsInOnePlace(before.doc, view.state.doc)) return;
           sync.binding.mux(() => {
             sync.doc.transact((transaction) => {
               transaction.meta.set("addToHistory", sync.addToHistory);
@@ -77,6 +78,7 @@ function pairBlocks(fragment: Y.XmlFragment, mapping: Mapping, doc: Node, taken:
     remove(element, mapping);
   }
   removeOutOfOrder(fragment, mapping, doc);
+  removeCrossing(fragment, mapping, doc);
   insertMissing(fragment, mapping, doc);
 }
 
@@ -107,6 +109,35 @@ function removeOutOfOrder(fragment: Y.XmlFragment, mapping: Mapping, doc: Node):
   });
   const kept = new Set(longestRising(present.map(({ place }) => place)));
   for (const [index, { element }] of present.entries()) if (!kept.has(index)) remove(element, mapping);
+}
+
+/** True for what typing does: at most one child of the document is another, and none has another place. */
+function differsInOnePlace(before: Node, after: Node): boolean {
+  if (before.childCount !== after.childCount) return false;
+  let differing = 0;
+  after.forEach((child, _offset, index) => {
+    if (child !== before.child(index)) differing++;
+  });
+  return differing <= 1;
+}
+
+/** Prose that was moved past a block goes out, for the binding to write in its new place: it would else move the block. */
+function removeCrossing(fragment: Y.XmlFragment, mapping: Mapping, doc: Node): void {
+  const places = new Map<unknown, number>();
+  doc.forEach((child, _offset, index) => places.set(child, index));
+  const present = fragment.toArray().flatMap((element) => {
+    if (!(element instanceof Y.XmlElement)) return [];
+    const place = places.get(mapping.get(element));
+    return place === undefined ? [] : [{ element, place }];
+  });
+  const isBlock = ({ element }: { readonly element: Y.XmlElement }) => isKindName(element.nodeName);
+  for (const [index, entry] of present.entries()) {
+    if (isBlock(entry)) continue;
+    const crosses = present.some(
+      (other, at) => isBlock(other) && (at < index ? other.place > entry.place : other.place < entry.place),
+    );
+    if (crosses) remove(entry.element, mapping);
+  }
 }
 
 /** Indices of a longest rising subsequence. Lists here are short, so the quadratic way will do. */

@@ -90,7 +90,20 @@ describe("blocks in an edited document", () => {
           leave(who);
         },
       ),
-      { numRuns: 60 },
+      {
+        numRuns: 60,
+        examples: [
+          // Found by a random run: prose moved past a block took the block with it.
+          [
+            [false, false, false, false, true],
+            [
+              { what: "insert prose", at: 0, to: 0 },
+              { what: "delete", at: 18, to: 0 },
+              { what: "move", at: 0, to: 11 },
+            ],
+          ],
+        ],
+      },
     );
   });
 
