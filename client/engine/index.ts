@@ -9,8 +9,8 @@ export type {
   ScalarValue,
   WorkingStep,
 } from "./evaluation.ts";
-export { kindNames } from "./kind.ts";
-export type { BlockDescription, BlockKind, KindName } from "./kind.ts";
+export { aloneContext, kindNames } from "./kind.ts";
+export type { BlockDescription, BlockKind, EvaluationContext, KindName, Progress, Source } from "./kind.ts";
 export { kindDescriptions } from "./descriptions.ts";
 export { kinds } from "./kinds.ts";
 export { schemaOf } from "./shape.ts";
@@ -19,7 +19,7 @@ export type { BlockInputs, BlockInstance, BlockRow, PinInstance } from "./notebo
 export { choosePremises } from "./notebook/choose-premises.ts";
 export type { PremisesChoice } from "./notebook/choose-premises.ts";
 export { evaluateNotebook } from "./notebook/evaluate-notebook.ts";
-export type { EvaluateOptions, Memo, NotebookOutcome } from "./notebook/evaluate-notebook.ts";
+export type { EvaluateOptions, Memo, NotebookOutcome, Postponed } from "./notebook/evaluate-notebook.ts";
 export { canonicalJson, resultKey } from "./notebook/keys.ts";
 export type { Json } from "./notebook/keys.ts";
 export {

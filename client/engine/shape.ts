@@ -11,6 +11,8 @@ export interface FieldSpec {
   readonly choices?: readonly string[];
   /** False for titles and notes: they never enter the key of a result. */
   readonly keyed: boolean;
+  /** For a reference: the value is the id of a block of one of these kinds, or of any kind; "" means none. */
+  readonly refersTo?: readonly string[] | "any";
 }
 export type Columns = Readonly<Record<string, FieldSpec>>;
 
@@ -37,6 +39,10 @@ export function note(initial = ""): FieldSpec {
 }
 export function choice(first: string, ...others: string[]): FieldSpec {
   return { initial: first, choices: [first, ...others], keyed: true };
+}
+/** The id of another block whose result this one uses. */
+export function reference(refersTo: readonly string[] | "any"): FieldSpec {
+  return { initial: "", keyed: true, refersTo };
 }
 export function defineShape<F extends Columns, T extends Readonly<Record<string, Columns>>>(
   shape: Shape<F, T>,

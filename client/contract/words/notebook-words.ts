@@ -15,4 +15,10 @@ export const notebookWords: Words = {
     "The premises this block stood on are no longer there. Choose others, or bring them back.",
   "premises-other-kind": () => "What this block is to stand on is not a Premises block. Choose one that is.",
   "premises-broken": () => "The premises this block stands on cannot be read. Correct them first.",
+  "reference-deleted": () =>
+    "The block this is taken from is no longer there. Choose another, or bring it back.",
+  "reference-other-kind": () => "This cannot be taken from a block of that kind. Choose another.",
+  "reference-circle": () =>
+    "This block and the one it is taken from depend on each other. Break the circle in one of them.",
+  "reference-broken": () => "The block this is taken from is in error. Correct it first.",
 };

@@ -1,6 +1,7 @@
 import fc from "fast-check";
 import katex from "katex";
 import { describe, expect, it } from "vitest";
+import { aloneContext } from "#engine/kind.ts";
 import { truncationError } from "#engine/truncation/kind.ts";
 import { blockInputs, evaluateBlock, partialSums, scalar } from "./truncation-block.ts";
 
@@ -58,7 +59,7 @@ describe("refusals of a truncation error, each with its place", () => {
   ])("the order %j in the second row", (order, code) => {
     const inputs = blockInputs({ 0: "10" }, { q: "0.3" });
     const rows = [...inputs.orders, { id: "again", order, value: "11", name: "" }];
-    const { problems, value } = truncationError.evaluate({ ...inputs, orders: rows }, null);
+    const { problems, value } = truncationError.evaluate({ ...inputs, orders: rows }, null, aloneContext);
     expect(value).toBeNull();
     expect(problems).toEqual([expect.objectContaining({ code, path: ["orders", "again", "order"] })]);
     expect(problems[0]?.facts["row"]).toBe(2);
@@ -234,7 +235,7 @@ describe("laws", () => {
         (order, value, q, belief, nu0, tau0, reference) => {
           const inputs = { ...blockInputs({ 0: "1" }, { q, belief, nu0, tau0, reference }) };
           const rows = [...inputs.orders, { id: "x", order, value, name: "" }];
-          const result = truncationError.evaluate({ ...inputs, orders: rows }, null);
+          const result = truncationError.evaluate({ ...inputs, orders: rows }, null, aloneContext);
           expect(result.value === null).toBe(result.scalars.length === 0);
           expect(JSON.parse(JSON.stringify(result))).toEqual(result);
         },

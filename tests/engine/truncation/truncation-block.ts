@@ -1,6 +1,7 @@
 /** A small vocabulary for tests of Truncation error: a block by what matters to the case, and its answers by name. */
 import type { Evaluation } from "#engine/evaluation.ts";
 import type { Theory } from "#engine/premises/theory.ts";
+import { aloneContext } from "#engine/kind.ts";
 import { truncationError } from "#engine/truncation/kind.ts";
 import type { TruncationInputs } from "#engine/truncation/shape.ts";
 import type { TruncationValue } from "#engine/truncation/value.ts";
@@ -31,7 +32,7 @@ export function evaluateBlock(
   fields: Partial<Fields> = {},
   theory: Theory | null = null,
 ): Evaluation<TruncationValue> {
-  return truncationError.evaluate(blockInputs(orders, fields), theory);
+  return truncationError.evaluate(blockInputs(orders, fields), theory, aloneContext);
 }
 
 /** The number behind a scalar; throws when the block has no such scalar, so that a test cannot pass without it. */
