@@ -1,7 +1,7 @@
 /** What a block's form and result see of their block: its inputs, its evaluation, and the ways to change it. */
 import type { Evaluation } from "#engine/evaluation.ts";
 import type { KindName } from "#engine/kind.ts";
-import type { BlockRow } from "#engine/notebook/block-instance.ts";
+import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
 import { createContext, useContext, useSyncExternalStore } from "react";
 
 /** A single field, or one column of one row. */
@@ -44,6 +44,10 @@ export interface BlockHandle {
   setStandsOn(blockId: string): void;
   /** The result of the premises it stands on, read by `usePremisesEvaluation`; null without. */
   premisesEvaluation(): Evaluation | null;
+  /** All blocks of the notebook in document order, read by `useOtherBlocks`; the same array until one changes. */
+  allBlocks(): readonly BlockInstance[];
+  /** The result of any block, by its id; null while there is none. */
+  evaluationOf(blockId: string): Evaluation | null;
   onResults(listener: () => void): () => void;
   setValue(place: FieldPlace, value: string): void;
   /** Adds a row after another, or at the end; gives its id. */
@@ -90,6 +94,18 @@ export function usePending(): boolean {
 export function usePremisesEvaluation(): Evaluation | null {
   const { onResults, premisesEvaluation } = useBlock();
   return useSyncExternalStore(onResults, premisesEvaluation);
+}
+
+/** The blocks a reference field may name: all but the block itself. */
+export function useOtherBlocks(): readonly BlockInstance[] {
+  const { onResults, allBlocks, blockId } = useBlock();
+  return useSyncExternalStore(onResults, allBlocks).filter(({ id }) => id !== blockId);
+}
+
+/** The result of the block that a reference field names; null for "" and while there is none. */
+export function useEvaluationOf(blockId: string): Evaluation | null {
+  const { onResults, evaluationOf } = useBlock();
+  return useSyncExternalStore(onResults, () => evaluationOf(blockId));
 }
 
 /** A place as text: an attribute of its element, a key of maps, and what presence says. */

@@ -20,6 +20,7 @@ export { choosePremises } from "./notebook/choose-premises.ts";
 export type { PremisesChoice } from "./notebook/choose-premises.ts";
 export { evaluateNotebook } from "./notebook/evaluate-notebook.ts";
 export type { EvaluateOptions, Memo, NotebookOutcome, Postponed } from "./notebook/evaluate-notebook.ts";
+export { isLong, neededFor } from "./notebook/references.ts";
 export { canonicalJson, resultKey } from "./notebook/keys.ts";
 export type { Json } from "./notebook/keys.ts";
 export {

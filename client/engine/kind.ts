@@ -16,8 +16,11 @@ export interface BlockDescription<S extends Shape = Shape> {
   readonly shape: S;
   /** Whether the block computes from premises: it must, it may, or it never does. */
   readonly premises: "required" | "optional" | "none";
-  /** True when it may take seconds: it is then computed apart from the others, with progress and a way to stop it. */
-  readonly long?: true;
+  /**
+   * Whether it may take seconds, always or with some inputs: it is then computed apart from the others, with progress
+   * and a way to stop it.
+   */
+  readonly long?: true | ((inputs: Readonly<Record<string, unknown>>) => boolean);
 }
 
 /** The result of a block that a reference field names. */

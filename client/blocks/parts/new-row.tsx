@@ -19,9 +19,9 @@ export function NewRow({ noun, columns, resultCount, invitation, onBegin, onPast
   return (
     <tr className="block-new-row">
       <td className="block-handle-column" />
-      {columns.map(({ column, heading, options, size }, index) => (
+      {columns.map(({ column, heading, options, refers, scalarOf, size }, index) => (
         <td key={column} data-heading={options ? undefined : heading}>
-          {!options && (
+          {!options && !refers && !scalarOf && (
             <input
               type="text"
               className="block-input block-notation"

@@ -5,6 +5,7 @@ import { ChoiceField, type Option } from "./choice-field.tsx";
 import { NewRow } from "./new-row.tsx";
 import { gridOf } from "./pasted-grid.ts";
 import { ProblemList } from "./problem-list.tsx";
+import { ReferenceField, ScalarField } from "./reference-field.tsx";
 import { RowHandle } from "./row-handle.tsx";
 import { TextField } from "./text-field.tsx";
 import { useRowDrag } from "./use-row-drag.ts";
@@ -14,6 +15,10 @@ export interface ColumnSpec {
   readonly heading: string;
   /** The values of a choice; absent for text. */
   readonly options?: readonly (Option | string)[];
+  /** True for a column that names another block. */
+  readonly refers?: true;
+  /** For a column that names a number of another block: the column that names the block. */
+  readonly scalarOf?: string;
   readonly placeholder?: string;
   readonly size?: number;
   /** How the value of a row is understood, drawn while nobody is in the field. */
@@ -190,6 +195,8 @@ interface ValueProps {
 
 function Value({ spec, row, place, label, onEnter, onPasteText }: ValueProps) {
   const { options, reading, placeholder, size, notation } = spec;
+  if (spec.refers) return <ReferenceField place={place} label={label} />;
+  if (spec.scalarOf) return <ScalarField place={place} label={label} blockId={row[spec.scalarOf] ?? ""} />;
   if (options) return <ChoiceField place={place} label={label} options={options} />;
   const drawn = reading?.(row);
   return (

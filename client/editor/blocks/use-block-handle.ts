@@ -80,6 +80,8 @@ type Changes = Pick<
   | "pin"
   | "isPending"
   | "premisesEvaluation"
+  | "allBlocks"
+  | "evaluationOf"
   | "onResults"
 >;
 
@@ -123,6 +125,11 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
       const standsOn = standsOnOf(world, blockId);
       const result = standsOn === null ? null : results.result(standsOn);
       return result && (result.lastGood ?? result.evaluation);
+    },
+    allBlocks: results.blocks,
+    evaluationOf(otherId) {
+      const result = results.result(otherId);
+      return result.lastGood ?? result.evaluation;
     },
     onResults: results.subscribe,
     colleaguesIn: (place) => presence.inField(blockId, placeKey(place)),

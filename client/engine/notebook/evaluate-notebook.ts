@@ -1,16 +1,14 @@
 /** Evaluates the blocks of a notebook, each after what it stands on, and only those whose key has no result yet. */
 import type { Evaluation, Problem } from "../evaluation.ts";
-import { kindDescriptions } from "../descriptions.ts";
 import type { EvaluationContext, KindName, Progress, Source } from "../kind.ts";
 import { kinds } from "../kinds.ts";
 import type { PremisesInputs } from "../premises/inputs.ts";
 import { readTheory } from "../premises/read-theory.ts";
 import type { Theory } from "../premises/theory.ts";
-import type { InputsOf, Shape } from "../shape.ts";
-import type { BlockInputs, BlockInstance } from "./block-instance.ts";
+import type { BlockInstance } from "./block-instance.ts";
 import { choosePremises } from "./choose-premises.ts";
 import { resultKey } from "./keys.ts";
-import { allows, referencesOf, type Reference } from "./references.ts";
+import { allows, fittedTo, isLong, referencesOf, type Reference } from "./references.ts";
 
 export interface NotebookOutcome {
   readonly blockId: string;
@@ -105,7 +103,7 @@ class Run {
             ...[...problems, ...used.problems].map(digestOf),
           ]);
     const remembered = problems.length > 0 ? refused(problems) : this.options.memo.get(key);
-    if (!remembered && kindDescriptions[block.kind].long && this.options.onPostponed) {
+    if (!remembered && isLong(block) && this.options.onPostponed) {
       this.options.onPostponed({ blockId: block.id, key });
       return null;
     }
@@ -121,7 +119,7 @@ class Run {
     };
     try {
       const theory = premises ? this.#theoryOf(premises) : null;
-      const evaluation = kinds[block.kind].evaluate(fitted(block.inputs), theory, context);
+      const evaluation = kinds[block.kind].evaluate(fittedTo(block.inputs), theory, context);
       if (used.problems.length === 0) return evaluation;
       return { ...evaluation, problems: [...used.problems, ...evaluation.problems] };
     } catch (error) {
@@ -194,11 +192,6 @@ interface UsedSources {
 
 function problemAt({ path, blockId }: Reference, code: string): Problem {
   return { code, path, facts: { id: blockId } };
-}
-
-/** Inputs of a block instance have been fitted to the shape of its kind, which the type cannot say for all kinds at once. */
-function fitted(inputs: BlockInputs): InputsOf<Shape> {
-  return inputs as unknown as InputsOf<Shape>;
 }
 
 function refused(problems: readonly Problem[]): Evaluation {
