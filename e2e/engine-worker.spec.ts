@@ -3,7 +3,11 @@ import { readdirSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import type { Page } from "playwright/test";
 import { safeParse } from "zod/v4/core";
-import type { EvaluationAnswer, EvaluationRequest } from "../client/editor/evaluation/evaluation-messages.ts";
+import type {
+  EvaluationAnswer,
+  EvaluationRequest,
+  WorkerMessage,
+} from "../client/editor/evaluation/evaluation-messages.ts";
 import { kindDescriptions, schemaOf, type BlockInstance } from "../client/engine/index.ts";
 import { evaluateFile } from "../server/compute/evaluate-file.ts";
 import { test, expect } from "./stage.ts";
@@ -69,12 +73,19 @@ function evaluateInBrowser(
   address: string,
   blocks: readonly BlockInstance[],
 ): Promise<EvaluationAnswer> {
-  const request: EvaluationRequest = { revision: 1, order: blocks.map(({ id }) => id), changed: blocks };
+  const request: EvaluationRequest = {
+    revision: 1,
+    order: blocks.map(({ id }) => id),
+    changed: blocks,
+    known: [],
+    everything: true,
+  };
   return page.evaluate(
     ([url, message]) =>
       new Promise<EvaluationAnswer>((resolve, reject) => {
         const worker = new Worker(url, { type: "module" });
-        worker.onmessage = ({ data }: MessageEvent<EvaluationAnswer>) => {
+        worker.onmessage = ({ data }: MessageEvent<WorkerMessage>) => {
+          if (data.about !== "answer") return;
           worker.terminate();
           resolve(data);
         };

@@ -1,12 +1,20 @@
 /** What a block's form and result see of their block: its inputs, its evaluation, and the ways to change it. */
 import type { Evaluation } from "#engine/evaluation.ts";
-import type { KindName } from "#engine/kind.ts";
+import type { KindName, Progress } from "#engine/kind.ts";
 import type { BlockInstance, BlockRow } from "#engine/notebook/block-instance.ts";
 import { createContext, useContext, useSyncExternalStore } from "react";
 
 /** A single field, or one column of one row. */
 export type FieldPlace =
   { readonly field: string } | { readonly table: string; readonly rowId: string; readonly column: string };
+
+/** Work that takes seconds, computed apart from the other blocks. */
+export type LongWorkState =
+  | { readonly state: "waiting" }
+  /** Null until the engine has said how far it is. */
+  | { readonly state: "computing"; readonly progress: Progress | null }
+  | { readonly state: "stopped" }
+  | { readonly state: "failed"; readonly reason: string };
 
 export interface Colleague {
   readonly name: string;
@@ -36,6 +44,10 @@ export interface BlockHandle {
   readonly lastGood: Evaluation | null;
   /** Whether the worker is at a newer state than shown. Read by `usePending`: the form need not be drawn for it. */
   isPending(): boolean;
+  /** How long work on this block stands, read by `useLongWork`; null where there is none. */
+  longWork(): LongWorkState | null;
+  stopLongWork(): void;
+  resumeLongWork(): void;
   /** True when what computes has been stopped: the next change is tried afresh. */
   readonly stopped: boolean;
   /** The Premises blocks one may stand on, and the one chosen (null: none or ambiguous). */
@@ -88,6 +100,11 @@ export function useColleaguesIn(place: FieldPlace): readonly Colleague[] {
 export function usePending(): boolean {
   const { onResults, isPending } = useBlock();
   return useSyncExternalStore(onResults, isPending);
+}
+
+export function useLongWork(): LongWorkState | null {
+  const { onResults, longWork } = useBlock();
+  return useSyncExternalStore(onResults, longWork);
 }
 
 /** For choices such as "which term of the premises". */

@@ -1,6 +1,7 @@
 /** A word about a block, at the right of its heading. */
 import { kindDescriptions } from "#engine/descriptions.ts";
-import type { BlockHandle } from "./block-handle.ts";
+import type { Progress } from "#engine/kind.ts";
+import type { BlockHandle, LongWorkState } from "./block-handle.ts";
 
 export interface BlockState {
   readonly words: string;
@@ -25,6 +26,28 @@ export function stateOf(block: Seen, pending: boolean, late: boolean): BlockStat
       problems.length === 1 ? "agrees, one entry in error" : `agrees, ${problems.length} entries in error`,
     tone: "partly",
   };
+}
+
+/** Of long work; null where there is none. */
+export function stateOfWork(work: LongWorkState | null): BlockState | null {
+  switch (work?.state) {
+    case undefined:
+      return null;
+    case "waiting":
+      return { words: "waits for its turn to be computed", tone: "computing" };
+    case "computing":
+      return { words: "computing", tone: "computing" };
+    case "stopped":
+      return { words: "stopped", tone: "waiting" };
+    case "failed":
+      return { words: "not computed: this browser gave up", tone: "error" };
+  }
+}
+
+/** @example sayProgress({ done: 340, of: 812, part: "dimension 12" }) // "computing dimension 12: 340 of 812" */
+export function sayProgress({ done, of, part }: Progress): string {
+  const what = part === "" ? "computing" : `computing ${part}`;
+  return of === null ? `${what}: ${done} so far` : `${what}: ${done} of ${of}`;
 }
 
 /** As it was placed: nothing typed that a result depends on. What is missing is then an invitation, not an error. */

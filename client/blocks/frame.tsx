@@ -10,13 +10,13 @@ import {
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { classes } from "../ui/classes.ts";
 import { shownEvaluation } from "./block-parts.ts";
-import { useBlock, usePending } from "./block-handle.ts";
+import { useBlock, useLongWork, usePending, type LongWorkState } from "./block-handle.ts";
 import { Notices, OtherProblems } from "./parts/problem-list.tsx";
 import { TextField } from "./parts/text-field.tsx";
 import { Working } from "./parts/working.tsx";
 import { blockParts } from "./registry.tsx";
 import { StandsOn } from "./stands-on.tsx";
-import { isUntouched, stateOf } from "./block-state.ts";
+import { isUntouched, sayProgress, stateOf, stateOfWork } from "./block-state.ts";
 
 export interface BlockFrameProps {
   readonly selected: boolean;
@@ -150,12 +150,41 @@ const QUIET_MS = 250;
 function StateWord() {
   const block = useBlock();
   const pending = usePending();
-  const state = stateOf(block, pending, useLate(pending));
+  const late = useLate(pending);
+  const work = useLongWork();
+  const state = (late ? stateOfWork(work) : null) ?? stateOf(block, pending, late);
   return (
-    <span className={`block-state block-state-${state.tone}`} role="status">
-      <span className="block-state-mark" aria-hidden="true" />
-      {state.words}
-    </span>
+    <>
+      <span className={`block-state block-state-${state.tone}`} role="status">
+        <span className="block-state-mark" aria-hidden="true" />
+        {state.words}
+      </span>
+      {late && work && <WorkControl work={work} />}
+    </>
+  );
+}
+
+/** How far long work is, and the way to stop it or to go on. */
+function WorkControl({ work }: { readonly work: LongWorkState }) {
+  const { stopLongWork, resumeLongWork } = useBlock();
+  const isHeld = work.state === "stopped" || work.state === "failed";
+  const progress = work.state === "computing" ? work.progress : null;
+  return (
+    <>
+      {/* The words would be read aloud ten times a second; the bar says the same when asked. */}
+      {progress !== null && (
+        <span className="block-progress">
+          <progress
+            aria-label={progress.part === "" ? "progress" : progress.part}
+            {...(progress.of === null ? {} : { value: progress.done, max: progress.of })}
+          />{" "}
+          <span aria-hidden="true">{sayProgress(progress)}</span>
+        </span>
+      )}
+      <button type="button" className="block-link" onClick={isHeld ? resumeLongWork : stopLongWork}>
+        {isHeld ? "go on" : "stop"}
+      </button>
+    </>
   );
 }
 

@@ -80,6 +80,9 @@ type Changes = Pick<
   | "pin"
   | "isPending"
   | "premisesEvaluation"
+  | "longWork"
+  | "stopLongWork"
+  | "resumeLongWork"
   | "allBlocks"
   | "evaluationOf"
   | "onResults"
@@ -126,6 +129,9 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
       const result = standsOn === null ? null : results.result(standsOn);
       return result && (result.lastGood ?? result.evaluation);
     },
+    longWork: () => results.longWork(blockId),
+    stopLongWork: () => results.stopLongWork(blockId),
+    resumeLongWork: () => results.resumeLongWork(blockId),
     allBlocks: results.blocks,
     evaluationOf(otherId) {
       const result = results.result(otherId);

@@ -1,12 +1,13 @@
 /** Keeps a worker at the state of the notebook: sends what changed, starts it again when it crashes, ends it when it hangs. */
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
-import type { EvaluationAnswer, EvaluationRequest } from "./evaluation-messages.ts";
+import type { Evaluation } from "#engine/evaluation.ts";
+import type { EvaluationAnswer, EvaluationRequest, WorkerMessage } from "./evaluation-messages.ts";
 
 /** The part of a Worker used here, so that a test can stand in for one. */
 export interface WorkerLike {
   postMessage(message: EvaluationRequest): void;
   terminate(): void;
-  onmessage: ((event: MessageEvent<EvaluationAnswer>) => void) | null;
+  onmessage: ((event: MessageEvent<WorkerMessage>) => void) | null;
   onerror: ((event: ErrorEvent) => void) | null;
 }
 
@@ -26,10 +27,14 @@ export interface EvaluationClientOptions {
 
 const TIME_LIMIT_MS = 20_000;
 const CRASHES_IN_A_ROW = 3;
+/** Results of long work: more than a notebook has blocks of such kinds. */
+const MOST_REMEMBERED = 200;
 
 export interface EvaluationClient {
   /** Sends the difference to what was sent last; gives the revision that an answer to it will have reached. */
   send(blocks: readonly BlockInstance[]): number;
+  /** A result of long work that need not be computed again; goes with what is sent next. */
+  remember(key: string, evaluation: Evaluation): void;
   destroy(): void;
 }
 
@@ -37,6 +42,8 @@ export function createEvaluationClient(options: EvaluationClientOptions): Evalua
   const { startWorker, onAnswer, onState, timeLimitMs = TIME_LIMIT_MS } = options;
   let worker: WorkerLike | null = null;
   let sent = new Map<string, BlockInstance>();
+  const remembered = new Map<string, Evaluation>();
+  let known = new Set<string>();
   let latest: readonly BlockInstance[] = [];
   let revision = 0;
   let deadline: ReturnType<typeof setTimeout> | null = null;
@@ -48,11 +55,14 @@ export function createEvaluationClient(options: EvaluationClientOptions): Evalua
     worker?.terminate();
     worker = null;
     sent = new Map();
+    known = new Set();
   }
 
   function start(): WorkerLike {
     const started = startWorker();
     started.onmessage = ({ data }) => {
+      // This worker postpones what takes long, so it has nothing to say of progress.
+      if (data.about !== "answer") return;
       crashes = 0;
       if (data.revision === revision && deadline !== null) {
         clearTimeout(deadline);
@@ -75,7 +85,9 @@ export function createEvaluationClient(options: EvaluationClientOptions): Evalua
     worker ??= start();
     const changed = latest.filter((block) => sent.get(block.id) !== block);
     sent = new Map(latest.map((block) => [block.id, block]));
-    worker.postMessage({ revision, order: latest.map(({ id }) => id), changed });
+    const fresh = [...remembered].filter(([key]) => !known.has(key));
+    known = new Set(remembered.keys());
+    worker.postMessage({ revision, order: latest.map(({ id }) => id), changed, known: fresh });
     deadline ??= setTimeout(() => {
       end();
       onState({ state: "timed-out", seconds: timeLimitMs / 1000 });
@@ -89,6 +101,12 @@ export function createEvaluationClient(options: EvaluationClientOptions): Evalua
       revision += 1;
       post();
       return revision;
+    },
+    remember(key, evaluation) {
+      remembered.delete(key);
+      remembered.set(key, evaluation);
+      const [oldest] = remembered.keys();
+      if (remembered.size > MOST_REMEMBERED && oldest !== undefined) remembered.delete(oldest);
     },
     destroy: end,
   };

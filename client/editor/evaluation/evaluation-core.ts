@@ -1,8 +1,12 @@
 /** What the worker does, without the worker: keeps the blocks it was told of and answers what is new. */
 import type { Evaluation } from "#engine/evaluation.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
-import { evaluateNotebook, type NotebookOutcome } from "#engine/notebook/evaluate-notebook.ts";
-import type { EvaluationAnswer, EvaluationRequest } from "./evaluation-messages.ts";
+import {
+  evaluateNotebook,
+  type NotebookOutcome,
+  type Postponed,
+} from "#engine/notebook/evaluate-notebook.ts";
+import type { EvaluationAnswer, EvaluationRequest, ProgressReport } from "./evaluation-messages.ts";
 
 const MOST_REMEMBERED = 2000;
 
@@ -34,14 +38,17 @@ export interface EvaluationCore {
   answer(): EvaluationAnswer;
 }
 
-export function createEvaluationCore(): EvaluationCore {
+/** @param onProgress told how far long work is, as often as the engine says it */
+export function createEvaluationCore(onProgress: (report: ProgressReport) => void): EvaluationCore {
   const memo = createMemo();
   const known = new Map<string, BlockInstance>();
   const answered = new Map<string, NotebookOutcome>();
   let order: readonly string[] = [];
   let revision = 0;
+  let everything = false;
   return {
     hear(request) {
+      for (const [key, evaluation] of request.known) memo.set(key, evaluation);
       for (const block of request.changed) known.set(block.id, block);
       const present = new Set(request.order);
       for (const id of [...known.keys()]) {
@@ -51,20 +58,29 @@ export function createEvaluationCore(): EvaluationCore {
       }
       order = request.order;
       revision = request.revision;
+      everything = request.everything === true;
     },
     answer() {
       const blocks = order.flatMap((id) => known.get(id) ?? []);
       const mistakes: string[] = [];
-      const onInternalError = (error: unknown, block: BlockInstance) =>
-        mistakes.push(
-          `${block.kind} ${block.id}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`,
-        );
-      const outcomes = evaluateNotebook(blocks, { memo, onInternalError }).filter((outcome) => {
+      const postponed: Postponed[] = [];
+      const outcomes = evaluateNotebook(blocks, {
+        memo,
+        onInternalError: (error, block) =>
+          mistakes.push(
+            `${block.kind} ${block.id}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`,
+          ),
+        onProgress: (progress, block) => onProgress({ about: "progress", blockId: block.id, progress }),
+        ...(everything ? {} : { onPostponed: (later: Postponed) => postponed.push(later) }),
+      }).filter((outcome) => {
+        if (everything) return true;
         const before = answered.get(outcome.blockId);
         answered.set(outcome.blockId, outcome);
         return before?.key !== outcome.key || before.standsOn !== outcome.standsOn;
       });
-      return { revision, outcomes, mistakes };
+      // What will be computed elsewhere must be told again once it is known here.
+      for (const { blockId } of postponed) answered.delete(blockId);
+      return { about: "answer", revision, outcomes, postponed, mistakes };
     },
   };
 }

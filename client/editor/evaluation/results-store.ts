@@ -5,12 +5,15 @@
 import type { StoredResult } from "#contract/api.ts";
 import type { Evaluation } from "#engine/evaluation.ts";
 import { choosePremises } from "#engine/notebook/choose-premises.ts";
-import type { NotebookOutcome } from "#engine/notebook/evaluate-notebook.ts";
+import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-notebook.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
+import { isLong, referencesOf } from "#engine/notebook/references.ts";
+import type { LongWorkState } from "../../blocks/block-handle.ts";
 import type { BlockDirectory } from "../blocks/block-directory.ts";
 import { createEvaluationClient, type EvaluatorState, type WorkerLike } from "./evaluation-client.ts";
 import type { EvaluationAnswer } from "./evaluation-messages.ts";
 import { inTurns } from "./in-turns.ts";
+import { createLongWork } from "./long-work.ts";
 
 export interface Settled {
   /** Null when unknown, or when authors are hidden. */
@@ -39,6 +42,10 @@ export interface ResultsStore {
   /** All blocks, in document order. */
   blocks(): readonly BlockInstance[];
   evaluator(): EvaluatorState;
+  /** How long work on a block stands; null for a block that is not long, or has its result. */
+  longWork(blockId: string): LongWorkState | null;
+  stopLongWork(blockId: string): void;
+  resumeLongWork(blockId: string): void;
   /** Rises with every change of any result or block. */
   version(): number;
   setStored(results: readonly StoredResult[]): void;
@@ -66,6 +73,8 @@ export function createResultsStore({
   let blocks: readonly BlockInstance[] = [];
   let state: EvaluatorState = { state: "working" };
   const settled = new Map<string, Settled>();
+  /** Blocks whose results come later: long work, and what uses it. */
+  let postponed: readonly Postponed[] = [];
   let revisionShown = 0;
   let waiting: ReturnType<typeof setTimeout> | null = null;
 
@@ -108,9 +117,42 @@ export function createResultsStore({
     },
   });
 
-  function hearAnswer({ revision, outcomes, mistakes }: EvaluationAnswer) {
-    for (const mistake of mistakes) console.error(`A block could not be computed: ${mistake}`);
+  const work = createLongWork({
+    startWorker,
+    onMistake: sayMistake,
+    onChange: publish,
+    onOutcome(outcome) {
+      show(outcome);
+      // The other worker has waited for it with whatever uses it.
+      remember(outcome.key, outcome.evaluation);
+    },
+  });
+
+  /** Lets the worker take a result of long work as computed. */
+  function remember(key: string, evaluation: Evaluation) {
+    client.remember(key, evaluation);
+    if (postponed.some((later) => later.key === key)) send();
+  }
+  function sayMistake(mistake: string) {
+    console.error(`A block could not be computed: ${mistake}`);
+  }
+  /** Several updates of one moment, as when a colleague's paste arrives, are one request. */
+  function send() {
+    waiting ??= setTimeout(() => {
+      waiting = null;
+      const revision = client.send(blocks);
+      for (const [id, since] of awaited) if (since === Number.POSITIVE_INFINITY) awaited.set(id, revision);
+    }, 0);
+  }
+
+  function hearAnswer({ revision, outcomes, postponed: later, mistakes }: EvaluationAnswer) {
+    mistakes.forEach(sayMistake);
     revisionShown = revision;
+    postponed = later;
+    const known = [...results.values()].flatMap(({ key, evaluation }) =>
+      key !== null && evaluation ? [[key, evaluation] as const] : [],
+    );
+    work.want(later, blocks, later.length > 0 ? known : []);
     turns.add(outcomes.map((outcome) => [outcome.blockId, outcome]));
   }
 
@@ -130,7 +172,7 @@ export function createResultsStore({
     publish();
   }
 
-  /** Marks what a change reaches: the blocks that changed and those that stand on them. */
+  /** Marks what a change reaches: the blocks that changed, those that stand on them, and those that use either's result. */
   function follow() {
     const before = new Map(blocks.map((block) => [block.id, block]));
     const next = directory.blocks();
@@ -144,22 +186,20 @@ export function createResultsStore({
       awaited.delete(id);
       settled.delete(id);
     }
+    const gone = [...before.keys()].filter((id) => !directory.block(id));
+    const reached = new Set([...changed, ...gone]);
     for (const block of blocks) {
-      const choice = changed.has(block.id) ? null : choosePremises(block, blocks);
-      const reached =
-        choice === null ||
-        premisesCame ||
-        ("found" in choice && choice.found !== null && changed.has(choice.found.id));
-      if (!reached) continue;
-      awaited.set(block.id, Number.POSITIVE_INFINITY);
-      useStored(block.id);
+      const choice = choosePremises(block, blocks);
+      const standsOnChanged = "found" in choice && choice.found !== null && changed.has(choice.found.id);
+      if (premisesCame || standsOnChanged) reached.add(block.id);
     }
-    // Several updates of one moment, as when a colleague's paste arrives, are one request.
-    waiting ??= setTimeout(() => {
-      waiting = null;
-      const revision = client.send(blocks);
-      for (const [id, since] of awaited) if (since === Number.POSITIVE_INFINITY) awaited.set(id, revision);
-    }, 0);
+    spreadThroughReferences(reached, blocks);
+    for (const { id } of blocks) {
+      if (!reached.has(id)) continue;
+      awaited.set(id, Number.POSITIVE_INFINITY);
+      useStored(id);
+    }
+    send();
     publish();
   }
 
@@ -183,14 +223,21 @@ export function createResultsStore({
   const unfollow = directory.subscribe(follow);
   return {
     result: (blockId) => results.get(blockId) ?? nothingYet,
-    isPending: (blockId) => awaited.has(blockId),
+    isPending: (blockId) => awaited.has(blockId) || postponed.some((later) => later.blockId === blockId),
     settled: (blockId) => settled.get(blockId) ?? null,
     blocks: () => blocks,
     evaluator: () => state,
+    longWork: work.stateOf,
+    stopLongWork: work.stop,
+    resumeLongWork: work.resume,
     version: () => version,
     setStored(fresh) {
       stored.clear();
-      for (const result of fresh) stored.set(result.blockId, result);
+      for (const result of fresh) {
+        stored.set(result.blockId, result);
+        const block = directory.block(result.blockId);
+        if (block && isLong(block)) remember(result.key, result.evaluation);
+      }
       for (const { id } of blocks) {
         useStored(id);
         settle(id);
@@ -205,10 +252,21 @@ export function createResultsStore({
       unfollow();
       if (waiting !== null) clearTimeout(waiting);
       client.destroy();
+      work.destroy();
       turns.destroy();
       listeners.clear();
     },
   };
+}
+
+/** Adds every block that uses the result of one in the set, however many blocks lie between. */
+function spreadThroughReferences(reached: Set<string>, blocks: readonly BlockInstance[]): void {
+  let size = -1;
+  while (size !== reached.size) {
+    size = reached.size;
+    for (const block of blocks)
+      if (referencesOf(block).some(({ blockId }) => reached.has(blockId))) reached.add(block.id);
+  }
 }
 
 const isPremises = ({ kind }: BlockInstance) => kind === "premises";

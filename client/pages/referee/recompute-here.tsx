@@ -1,10 +1,13 @@
 import type { StoredResult } from "#contract/api.ts";
+import type { Progress } from "#engine/kind.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
+import { neededFor } from "#engine/notebook/references.ts";
 import type { PinAttributes } from "#schema/block-structure.ts";
 import { useEffect, useRef, useState } from "react";
 import { useBlocks } from "../../editor/evaluation/use-results.ts";
 import { Button } from "../../ui/button.tsx";
-import { blocksNeeded, recompute, type Recomputation } from "./recompute.ts";
+import { sayProgress } from "../../blocks/block-state.ts";
+import { recompute, type Recomputation } from "./recompute.ts";
 import { sayVerdict, verdictOf } from "./verdict.ts";
 
 interface Props {
@@ -21,24 +24,27 @@ interface Found {
 export function RecomputeHere({ pin, stored }: Props) {
   const blocks = useBlocks();
   const [found, setFound] = useState<Found | null>(null);
-  const [computing, setComputing] = useState(false);
-  const shown = useRef(true);
-  useEffect(() => {
-    shown.current = true;
-    return () => {
-      shown.current = false;
-    };
-  }, []);
+  const [progress, setProgress] = useState<Progress | "starting" | null>(null);
+  const running = useRef<AbortController | null>(null);
+  useEffect(() => () => running.current?.abort(), []);
 
   async function compute() {
-    setComputing(true);
-    const from = blocksNeeded(pin.blockId, blocks);
-    const recomputation = await recompute(pin.blockId, blocks);
-    if (!shown.current) return;
-    setComputing(false);
+    const stop = new AbortController();
+    running.current = stop;
+    setProgress("starting");
+    const from = neededFor(pin.blockId, blocks);
+    const recomputation = await recompute(pin.blockId, blocks, {
+      onProgress: setProgress,
+      signal: stop.signal,
+    });
+    // Gone from the page, or begun again since.
+    if (running.current !== stop) return;
+    running.current = null;
+    setProgress(null);
     setFound({ recomputation, from });
   }
-  const current = found && isSameList(found.from, blocksNeeded(pin.blockId, blocks)) ? found : null;
+  const computing = progress !== null;
+  const current = found && isSameList(found.from, neededFor(pin.blockId, blocks)) ? found : null;
   const words = current && say(current.recomputation, stored, pin);
 
   return (
@@ -46,12 +52,17 @@ export function RecomputeHere({ pin, stored }: Props) {
       <Button
         className="check-recompute text-small"
         busy={computing}
-        busyLabel="computing"
+        busyLabel={progress === null || progress === "starting" ? "computing" : sayProgress(progress)}
         aria-label={`recompute here: ${pin.text}`}
         onClick={() => void compute()}
       >
         recompute here
       </Button>
+      {computing && (
+        <button type="button" className="text-small underline" onClick={() => running.current?.abort()}>
+          stop
+        </button>
+      )}
       <p role="status" className="check-verdict" data-agrees={words?.agrees}>
         {words?.sentence ?? (found && !computing ? "The inputs have changed since it was recomputed." : "")}
       </p>

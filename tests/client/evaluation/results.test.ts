@@ -178,12 +178,12 @@ describe("results", () => {
 
 describe("the worker", () => {
   it("computes only the newest of several states that arrive together", () => {
-    const core = createEvaluationCore();
+    const core = createEvaluationCore(() => undefined);
     const blocks = directory.blocks();
-    core.hear({ revision: 1, order: blocks.map(({ id }) => id), changed: blocks });
+    core.hear({ revision: 1, order: blocks.map(({ id }) => id), changed: blocks, known: [] });
     edit("apart", "q", "0.2");
     const newest = directory.block("apart") ?? expect.fail("gone");
-    core.hear({ revision: 2, order: blocks.map(({ id }) => id), changed: [newest] });
+    core.hear({ revision: 2, order: blocks.map(({ id }) => id), changed: [newest], known: [] });
     const answer = core.answer();
     expect(answer.revision).toBe(2);
     expect(answer.outcomes).toHaveLength(3);

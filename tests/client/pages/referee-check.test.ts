@@ -8,7 +8,8 @@ import { sayChecks } from "../../../client/pages/referee/check-sheet.tsx";
 import { inputsInShort, premisesInShort } from "../../../client/pages/referee/inputs-in-short.ts";
 import { placedPins } from "../../../client/pages/referee/placed-pins.ts";
 import { sayNames } from "../../../client/pages/referee/reading-strip.tsx";
-import { blocksNeeded, recompute } from "../../../client/pages/referee/recompute.ts";
+import { neededFor } from "#engine/notebook/references.ts";
+import { recompute } from "../../../client/pages/referee/recompute.ts";
 import type { Excerpt } from "../../../client/pages/referee/sentence-excerpt.ts";
 import { isSameResult, sayVerdict, verdictOf } from "../../../client/pages/referee/verdict.ts";
 import { block, documentOf, premisesBlock, row, truncationBlock } from "../../engine/notebook/documents.ts";
@@ -219,8 +220,8 @@ describe("recomputing one block", () => {
     truncationBlock("t"),
   );
   it("takes along only what the choice of premises looks at", () => {
-    expect(blocksNeeded("s", blocks).map(({ id }) => id)).toEqual(["p", "s"]);
-    expect(blocksNeeded("odd", blocks).map(({ id }) => id)).toEqual(["p", "odd", "t"]);
+    expect(neededFor("s", blocks).map(({ id }) => id)).toEqual(["p", "s"]);
+    expect(neededFor("odd", blocks).map(({ id }) => id)).toEqual(["p", "odd", "t"]);
   });
   it("gives the same key and scalars as the whole notebook does, and starts a worker of its own", async () => {
     let started = 0;
@@ -228,8 +229,8 @@ describe("recomputing one block", () => {
       started += 1;
       return workerInProcess();
     };
-    const whole = await recompute("s", blocks, start);
-    const alone = await recompute("s", blocksNeeded("s", blocks), start);
+    const whole = await recompute("s", blocks, { startWorker: start });
+    const alone = await recompute("s", neededFor("s", blocks), { startWorker: start });
     expect(started).toBe(2);
     if (!whole.done || !alone.done) throw new Error("both compute");
     expect(alone.outcome.key).toBe(whole.outcome.key);
@@ -241,7 +242,7 @@ describe("recomputing one block", () => {
     });
   });
   it("says why when the block is gone", async () => {
-    expect(await recompute("nowhere", blocks, workerInProcess)).toEqual({
+    expect(await recompute("nowhere", blocks, { startWorker: workerInProcess })).toEqual({
       done: false,
       words: "the block is gone",
     });
@@ -257,7 +258,7 @@ describe("recomputing one block", () => {
       };
       return worker;
     };
-    expect(await recompute("s", blocks, failing)).toEqual({
+    expect(await recompute("s", blocks, { startWorker: failing })).toEqual({
       done: false,
       words: "this browser could not compute it",
     });
