@@ -19,6 +19,8 @@ export class ComputeBusy extends ComputeFailed {}
 
 export interface ComputePoolOptions {
   readonly threads: number;
+  /** Threads kept while nothing is asked of them. */
+  readonly idleThreads: number;
   /** What is above is `ComputeBusy`. */
   readonly longestQueue: number;
 }
@@ -35,12 +37,13 @@ const MEMORY_MB = 512;
 
 export function openComputePool({
   threads = 2,
+  idleThreads = 1,
   longestQueue = 1_000,
 }: Partial<ComputePoolOptions> = {}): ComputePool {
   const extension = extname(import.meta.filename);
   const pool = new Piscina({
     filename: join(import.meta.dirname, `compute-worker${extension}`),
-    minThreads: 1,
+    minThreads: idleThreads,
     maxThreads: threads,
     idleTimeout: 30_000,
     resourceLimits: { maxOldGenerationSizeMb: MEMORY_MB },

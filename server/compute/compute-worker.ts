@@ -3,8 +3,8 @@ import { buildDocument } from "../collab/build-document.ts";
 import { compactHere, type Compacted } from "../collab/compaction.ts";
 import { evaluateFile, type FileOutcome } from "./evaluate-file.ts";
 import { createMemo } from "./memo.ts";
-import { settleDocument } from "./settle-document.ts";
-import type { ComputeTask, FileAnswer, SettledDocument } from "./tasks.ts";
+import { computeLong, settleDocument } from "./settle-document.ts";
+import type { ComputeTask, FileAnswer, LongAnswer, SettledDocument } from "./tasks.ts";
 
 const memo = createMemo(2_000);
 /** A file of some kilobytes can ask for a thousand times as much. */
@@ -16,13 +16,23 @@ function withinReason(outcome: FileOutcome): FileOutcome {
   return { ok: false, complaints: [{ place: "the file", message }] };
 }
 
-export default function perform(task: ComputeTask): SettledDocument | FileAnswer | Promise<Compacted> {
+export default function perform(
+  task: ComputeTask,
+): SettledDocument | LongAnswer | FileAnswer | Promise<Compacted> {
   switch (task.task) {
     case "settle": {
+      for (const [key, evaluation] of task.known ?? []) memo.set(key, evaluation);
       const { document } = buildDocument(task.document, []);
       const settled = settleDocument(document, memo);
       document.destroy();
       return settled;
+    }
+    case "long": {
+      for (const [key, evaluation] of task.known) memo.set(key, evaluation);
+      const { document } = buildDocument(task.document, []);
+      const answer = computeLong(document, task.blockId, memo);
+      document.destroy();
+      return answer;
     }
     case "file": {
       const mistakes: string[] = [];

@@ -4,6 +4,7 @@ import type { Compacted } from "../collab/compaction.ts";
 import type { RoomObserver } from "../collab/room-state.ts";
 import type { Database } from "../data/database.ts";
 import { openComputePool } from "./compute-pool.ts";
+import { LongResults } from "./long-results.ts";
 import { createSettling, type SettlingTimes } from "./settling.ts";
 import type { CompactTask, FileAnswer } from "./tasks.ts";
 
@@ -28,12 +29,14 @@ export function openCompute(options: {
   const pool = openComputePool();
   // Anyone may send a file, signed in or not: however many they send, notebooks keep their threads.
   const filePool = openComputePool({ threads: 1, longestQueue: 50 });
+  const longPool = openComputePool({ threads: 1, idleThreads: 0 });
+  const long = new LongResults({ database: options.database, log: options.log, pool: longPool });
   return {
-    observer: createSettling({ ...options, pool }),
+    observer: createSettling({ ...options, pool, long }),
     compact: (task) => pool.run({ task: "compact", ...task }, COMPACT_LIMIT_MS),
     evaluateFile: (body) => filePool.run({ task: "file", body }, FILE_LIMIT_MS),
     stop: async () => {
-      await Promise.all([pool.stop(), filePool.stop()]);
+      await Promise.all([pool.stop(), filePool.stop(), longPool.stop()]);
     },
   };
 }

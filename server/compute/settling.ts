@@ -2,8 +2,10 @@
 import type { Logger } from "pino";
 import type { OpenRoom, RoomObserver } from "../collab/room-state.ts";
 import { isPassing } from "../collab/store-errors.ts";
+import type { Evaluation } from "#engine/index.ts";
 import type { Database } from "../data/database.ts";
 import { ComputeFailed, ComputeTooLarge, type ComputePool } from "./compute-pool.ts";
+import type { LongResults } from "./long-results.ts";
 import { Rest } from "./rest.ts";
 import { storeLastChange, storeSettled } from "./store-settled.ts";
 import { TouchedBlocks, type Touched } from "./touched-blocks.ts";
@@ -11,6 +13,7 @@ import { TouchedBlocks, type Touched } from "./touched-blocks.ts";
 export interface SettlingOptions {
   readonly database: Database;
   readonly pool: ComputePool;
+  readonly long: LongResults;
   readonly log: Logger;
   readonly times?: Partial<SettlingTimes>;
 }
@@ -37,6 +40,7 @@ export function createSettling(options: SettlingOptions): RoomObserver {
     committed: (room) => rooms.get(room)?.schedule(),
     draining: async (room) => rooms.get(room)?.finish(),
     ended(room) {
+      options.long.forget(room.notebookId);
       rooms.get(room)?.stop();
       rooms.delete(room);
     },
@@ -49,6 +53,7 @@ class RoomSettling {
   #timer: NodeJS.Timeout | null = null;
   #firstChangeAt: number | null = null;
   #everything = false;
+  #owed: ReadonlyMap<string, string | null> = new Map();
   #running: Promise<void> | null = null;
   #stopped = false;
 
@@ -129,14 +134,32 @@ class RoomSettling {
   }
 
   async #evaluate(touched: Touched): Promise<void> {
-    const { database, pool, log } = this.options;
-    const { notebookId, content } = this.room;
-    const settled = await pool.run({ task: "settle", document: content.encoded() }, this.#times.limitMs);
+    const { database, log, long } = this.options;
+    const { notebookId } = this.room;
+    const document = this.room.content.encoded();
+    const { settled, known } = await this.#settleDocument(document);
     this.rest.end(notebookId);
     for (const mistake of settled.mistakes) log.error({ notebookId, mistake }, "a block kind threw");
+    // Whose edit asked for long work is named when its result comes.
+    const blocks = new Map([...this.#owed, ...touched.blocks]);
+    this.#owed = settled.postponed.length > 0 ? blocks : new Map();
     const changed = await database.transaction((transaction) =>
-      storeSettled(transaction, notebookId, settled, touched),
+      storeSettled(transaction, notebookId, settled, { blocks, structure: touched.structure }),
     );
     if (changed) this.room.notify({ about: "results" });
+    // Another pass takes the result in, with whatever uses it.
+    long.want(notebookId, settled.postponed, { document, known, onStored: () => this.checkAll() });
+  }
+
+  /** Long work that is stored already counts as computed; what stands on it may be long work that is stored too. */
+  async #settleDocument(document: Uint8Array) {
+    const { pool, long } = this.options;
+    const known = new Map<string, Evaluation>();
+    for (;;) {
+      const settled = await pool.run({ task: "settle", document, known: [...known] }, this.#times.limitMs);
+      const before = known.size;
+      for (const [key, evaluation] of await long.stored(settled.postponed)) known.set(key, evaluation);
+      if (known.size === before) return { settled, known: [...known] };
+    }
   }
 }

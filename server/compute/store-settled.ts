@@ -1,7 +1,7 @@
 /** Writes what was evaluated: results by key (once and for all), and which block has which result now. */
 import { ENGINE_VERSION } from "#engine/index.ts";
 import { rows, type Database, type Queryable } from "../data/database.ts";
-import type { SettledDocument } from "./tasks.ts";
+import type { SettledBlock, SettledDocument } from "./tasks.ts";
 import type { Touched } from "./touched-blocks.ts";
 
 /** A name for a block longer than this is nobody's; PostgreSQL could not index it. */
@@ -15,25 +15,13 @@ export async function storeSettled(
   touched: Pick<Touched, "blocks" | "structure">,
 ): Promise<boolean> {
   const blocks = settled.blocks.filter(({ blockId }) => blockId.length <= LONGEST_BLOCK_ID);
-  // In order of key, so that two processes storing the same results never wait for each other in a circle.
-  const byKey = new Map(blocks.map((block) => [block.key, block]));
-  const distinct = [...byKey.values()].sort((a, b) => (a.key < b.key ? -1 : 1));
-  await transaction.raw(
-    `insert into results (key, engine_version, inputs, value)
-     select line.key, ?, line.inputs, line.value
-       from unnest(?::text[], ?::jsonb[], ?::jsonb[]) as line (key, inputs, value)
-     on conflict (key) do nothing`,
-    [
-      ENGINE_VERSION,
-      distinct.map(({ key }) => key),
-      distinct.map(({ inputs }) => jsonOf(inputs)),
-      distinct.map(({ evaluation }) => jsonOf(evaluation)),
-    ],
-  );
+  await storeResults(transaction, blocks);
+  const here = [...blocks, ...settled.postponed].map(({ blockId }) => storable(blockId));
   const gone = await rows(
     transaction,
     "delete from notebook_results where notebook_id = ? and block_id <> all(?::text[]) returning 1",
-    [notebookId, blocks.map(({ blockId }) => storable(blockId))],
+    // What is being computed keeps its last result.
+    [notebookId, here],
   );
   const changed = await rows(
     transaction,
@@ -60,6 +48,25 @@ export async function storeSettled(
     [...summaryOf(settled), notebookId, ...summaryOf(settled)],
   );
   return gone.length > 0 || changed.length > 0 || counted.length > 0;
+}
+
+/** Results are right for their key for ever, so those that are there stay. */
+export async function storeResults(database: Queryable, blocks: readonly SettledBlock[]): Promise<void> {
+  // In order of key, so that two processes storing the same results never wait for each other in a circle.
+  const byKey = new Map(blocks.map((block) => [block.key, block]));
+  const distinct = [...byKey.values()].sort((a, b) => (a.key < b.key ? -1 : 1));
+  await database.raw(
+    `insert into results (key, engine_version, inputs, value)
+     select line.key, ?, line.inputs, line.value
+       from unnest(?::text[], ?::jsonb[], ?::jsonb[]) as line (key, inputs, value)
+     on conflict (key) do nothing`,
+    [
+      ENGINE_VERSION,
+      distinct.map(({ key }) => key),
+      distinct.map(({ inputs }) => jsonOf(inputs)),
+      distinct.map(({ evaluation }) => jsonOf(evaluation)),
+    ],
+  );
 }
 
 /** For the shelf: who changed the notebook last, and when. */

@@ -1,13 +1,29 @@
 /** What the compute threads can do: messages in, messages out, all plain data. */
-import type { Evaluation, KindName, PinCounts } from "#engine/index.ts";
+import type { Evaluation, KindName, PinCounts, Postponed } from "#engine/index.ts";
 import type { StoredUpdate } from "../collab/build-document.ts";
 import type { Compacted } from "../collab/compaction.ts";
 import type { FileOutcome } from "./evaluate-file.ts";
 
-/** Evaluates the blocks of a document given as one Yjs update. */
+/** A result that need not be computed again. */
+export type KnownResult = readonly [key: string, evaluation: Evaluation];
+
+/** Evaluates the blocks of a document given as one Yjs update; long work is left out and named. */
 export interface SettleTask {
   readonly task: "settle";
   readonly document: Uint8Array;
+  readonly known?: readonly KnownResult[];
+}
+/** Evaluates one block of a document, however long it takes. */
+export interface LongTask {
+  readonly task: "long";
+  readonly document: Uint8Array;
+  readonly blockId: string;
+  readonly known: readonly KnownResult[];
+}
+export interface LongAnswer {
+  /** Null when the document has no such block. */
+  readonly block: SettledBlock | null;
+  readonly mistakes: readonly string[];
 }
 export interface SettledBlock {
   readonly blockId: string;
@@ -23,6 +39,7 @@ export interface SettledDocument {
   readonly blocks: readonly SettledBlock[];
   readonly premisesLine: string;
   readonly pins: PinCounts;
+  readonly postponed: readonly Postponed[];
   /** Mistakes of ours inside a kind, for the log. */
   readonly mistakes: readonly string[];
 }
@@ -43,9 +60,10 @@ export interface CompactTask {
   readonly state: Uint8Array | null;
   readonly rows: readonly StoredUpdate[];
 }
-export type ComputeTask = SettleTask | FileTask | CompactTask;
+export type ComputeTask = SettleTask | LongTask | FileTask | CompactTask;
 export interface ComputeAnswers {
   readonly settle: SettledDocument;
+  readonly long: LongAnswer;
   readonly file: FileAnswer;
   readonly compact: Compacted;
 }
