@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
 import type { Notebook, NotebookList, NotebookResults, NotebookRow } from "#contract/api.ts";
+import { SCHEMA_VERSION } from "#schema/version.ts";
 import { rows } from "../../server/data/database.ts";
 import type { Browser } from "./http-browser.ts";
 import { createWorld, type World } from "./http-world.ts";
@@ -32,7 +33,7 @@ describe("making a notebook", () => {
       id: notebook.id,
       title: "Counting the Lantern",
       role: "owner",
-      schemaVersion: 1,
+      schemaVersion: SCHEMA_VERSION,
       people: [{ id: wren.id, login: "wren-lantern", name: "Wren Lantern" }],
       archivedAt: null,
     });

@@ -1,6 +1,7 @@
 import { createHash } from "node:crypto";
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
 import type { RefereeLinkCreated, RefereeView } from "#contract/api.ts";
+import { SCHEMA_VERSION } from "#schema/version.ts";
 import { rows } from "../../server/data/database.ts";
 import type { Browser } from "./http-browser.ts";
 import { createWorld, eventually, type World } from "./http-world.ts";
@@ -55,7 +56,7 @@ describe("a referee link", () => {
       notebookId,
       title: "Lantern",
       authors: ["Wren Lantern", "Otto Lantern"],
-      schemaVersion: 1,
+      schemaVersion: SCHEMA_VERSION,
       expiresAt: null,
       results: [],
     });
