@@ -8,6 +8,17 @@ import { createContext, useContext, useSyncExternalStore } from "react";
 export type FieldPlace =
   { readonly field: string } | { readonly table: string; readonly rowId: string; readonly column: string };
 
+/** What becomes of typed notation and of LaTeX when a symbol is renamed; the same text where it is not used. */
+export interface UseRewriting {
+  readonly term: (text: string) => string;
+  readonly latex: (latex: string) => string;
+}
+export interface UseCounts {
+  /** Entries of blocks. */
+  readonly entries: number;
+  readonly formulas: number;
+}
+
 /** Work that takes seconds, computed apart from the other blocks. */
 export type LongWorkState =
   | { readonly state: "waiting" }
@@ -79,6 +90,8 @@ export interface BlockHandle {
   onColleagues(listener: () => void): () => void;
   /** Who wrote the value that is stored now: a name, "someone" when not known, null for oneself. */
   writerOf(place: FieldPlace): string | null;
+  /** For Premises: counts, or with `apply` makes, what a rewriting changes in its blocks and in the prose's formulas. */
+  rewriteUses(rewriting: UseRewriting, apply: boolean): UseCounts;
   /** Puts a pin of this scalar at the caret's last place in the prose; absent where there is no prose to pin into. */
   pin?(scalarId: string): void;
 }

@@ -1,3 +1,4 @@
+import { lazy, Suspense } from "react";
 import { fieldKinds } from "#engine/premises/theory.ts";
 import type { PremisesValue } from "#engine/premises/value.ts";
 import { shownEvaluation } from "../block-parts.ts";
@@ -9,6 +10,9 @@ import { TextField } from "../parts/text-field.tsx";
 import { Formula } from "../../ui/math.tsx";
 import { FieldsTable } from "./fields-table.tsx";
 import { TermsTable } from "./terms-table.tsx";
+import { useRenamedSymbol } from "./use-renamed-symbol.ts";
+
+const RenameOffer = lazy(async () => ({ default: (await import("./rename-offer.tsx")).RenameOffer }));
 
 /** The premises of a theory: what stands here, everything else computes from. Readings stand beside what is typed. */
 export function PremisesForm() {
@@ -32,6 +36,7 @@ export function PremisesForm() {
         : [];
     }),
   );
+  const { watching, renamed, forget } = useRenamedSymbol();
   const anisotropic = block.fields["geometry"] === "anisotropic";
   return (
     <div className="premises-form">
@@ -59,7 +64,8 @@ export function PremisesForm() {
           </span>
         )}
       </div>
-      <div className="premises-tables">
+      {/* The keys belong to the fields inside. */}
+      <div className="premises-tables" {...watching}>
         <FieldsTable value={value ?? null} kinds={fieldKinds} />
         <div className="premises-side">
           <RowTable
@@ -96,6 +102,11 @@ export function PremisesForm() {
           />
         </div>
       </div>
+      {renamed && (
+        <Suspense fallback={null}>
+          <RenameOffer {...renamed} onClose={forget} />
+        </Suspense>
+      )}
       <TermsTable value={value ?? null} />
     </div>
   );

@@ -12,6 +12,7 @@ import { cellElement, orderedRows } from "./block-elements.ts";
 import { useBlockWorld, useReadOnly, type BlockWorld } from "./block-world.ts";
 import { changeInputs, insertRows, moveRow, removeRow, writeCell, writeField } from "./block-writes.ts";
 import { pasteInto } from "./paste-rows.ts";
+import { rewriteUses } from "./rename-uses.ts";
 
 /** Null once the block is gone. */
 export function useBlockHandle(blockId: string): BlockHandle | null {
@@ -78,6 +79,7 @@ type Changes = Pick<
   | "onColleagues"
   | "writerOf"
   | "pin"
+  | "rewriteUses"
   | "isPending"
   | "premisesEvaluation"
   | "longWork"
@@ -144,6 +146,7 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
       const clientId = writerOf(directory.element(blockId), place);
       return clientId === null ? "someone" : presence.nameOf(clientId);
     },
+    rewriteUses: (rewriting, apply) => rewriteUses(world, blockId, rewriting, apply),
     pin: (scalarId) => placePinAtCaret(world, blockId, scalarId),
   };
 }
