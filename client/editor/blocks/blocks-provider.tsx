@@ -6,6 +6,7 @@ import { say } from "../../ui/notices.ts";
 import "../../blocks/blocks.css";
 import { ResultsContext, useEvaluatorState } from "../evaluation/use-results.ts";
 import type { NotebookSession } from "../notebook-session.ts";
+import { announceTools } from "../notebook-tools.ts";
 import { offerPinPicker } from "../pins/open-pin-picker.ts";
 import { announcePins } from "../pins/use-pin-counts.ts";
 import { BlockWorldContext, createBlockWorld, useBlockWorld, type BlockWorld } from "./block-world.ts";
@@ -51,11 +52,13 @@ export function useBlocksEditor(editor: Editor): void {
   const world = useBlockWorld();
   useEffect(() => {
     world.showIn(editor);
+    announceTools({ editor, world });
     const quiet = announcePins(world, editor);
     const withdraw = offerPinPicker(editor, () => world.pick(!world.session.state().readOnly));
     return () => {
       quiet();
       withdraw();
+      announceTools(null);
       world.showIn(null);
     };
   }, [world, editor]);

@@ -40,7 +40,7 @@ function entry(label: RegExp): HTMLElement {
 }
 const typed = (person: PersonAtForms, blockId: string, table: string, column: string) =>
   (person.world.directory.block(blockId)?.inputs[table] as readonly BlockRow[]).map((line) => line[column]);
-const formula = (person: PersonAtForms) => person.world.session.fragment.toString();
+const formula = (person: PersonAtForms) => person.world.session.fragment.toJSON();
 
 async function rename(person: PersonAtForms, to: string) {
   const field = entry(/^symbol of field 1/);
