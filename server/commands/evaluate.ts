@@ -10,7 +10,7 @@ import { pathToFileURL } from "node:url";
 import { text as readAll } from "node:stream/consumers";
 import type { ResultsFile } from "#contract/evaluate-file.ts";
 import { evaluateFile } from "../compute/evaluate-file.ts";
-import { locateJsonError } from "../compute/locate-json-error.ts";
+import { locateJsonError } from "#contract/locate-json-error.ts";
 
 export interface Streams {
   readonly stdin: NodeJS.ReadableStream;

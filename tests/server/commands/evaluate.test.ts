@@ -6,7 +6,7 @@ import { Readable } from "node:stream";
 import fc from "fast-check";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { runEvaluate } from "../../../server/commands/evaluate.ts";
-import { locateJsonError } from "../../../server/compute/locate-json-error.ts";
+import { locateJsonError } from "#contract/locate-json-error.ts";
 
 let folder: string;
 beforeAll(async () => {

@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import { kindNames } from "#engine/kind.ts";
 import { evaluateFile, type FileOutcome } from "../../../server/compute/evaluate-file.ts";
 
 function throwing(error: unknown): never {
@@ -32,9 +33,7 @@ describe("a file of blocks that cannot be read", () => {
     [file(3), ["blocks[0] must be an object"]],
     [
       file({ id: "a", kind: "budget" }),
-      [
-        "blocks[0].kind is “budget” but must be one of “premises”, “scaling”, “divergence”, “orderPlan”, “truncationError”",
-      ],
+      [`blocks[0].kind is “budget” but must be one of ${kindNames.map((kind) => `“${kind}”`).join(", ")}`],
     ],
     [file({ ...rate(), id: "" }), ["blocks[0].id must not be empty"]],
     [file({ ...rate(), mood: 1 }), ["blocks[0] has what is not known here: “mood”"]],
