@@ -81,3 +81,21 @@ export function useDeleteNotebook() {
     },
   });
 }
+
+/** A copy of one's own. */
+export function useDuplicateNotebook() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (id: string) => askOrThrow<Notebook>(`/api/notebooks/${id}/copies`, { method: "POST" }),
+    onSuccess: () => client.invalidateQueries({ queryKey: shelfKey }),
+  });
+}
+
+/** Brings back a deleted notebook. */
+export function useRestoreNotebook() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (id: string) => askOrThrow<Notebook>(`/api/notebooks/${id}/restoration`, { method: "POST" }),
+    onSuccess: () => client.invalidateQueries({ queryKey: shelfKey }),
+  });
+}

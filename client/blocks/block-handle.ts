@@ -92,6 +92,11 @@ export interface BlockHandle {
   writerOf(place: FieldPlace): string | null;
   /** For Premises: counts, or with `apply` makes, what a rewriting changes in its blocks and in the prose's formulas. */
   rewriteUses(rewriting: UseRewriting, apply: boolean): UseCounts;
+  /** How many pins in the prose show a number of this block, read by `usePinCount`. */
+  pinCount(): number;
+  onPinCounts(listener: () => void): () => void;
+  /** Selects the next of them. */
+  goToNextPin(): void;
   /** Puts a pin of this scalar at the caret's last place in the prose; absent where there is no prose to pin into. */
   pin?(scalarId: string): void;
 }
@@ -118,6 +123,11 @@ export function usePending(): boolean {
 export function useLongWork(): LongWorkState | null {
   const { onResults, longWork } = useBlock();
   return useSyncExternalStore(onResults, longWork);
+}
+
+export function usePinCount(): number {
+  const { onPinCounts, pinCount } = useBlock();
+  return useSyncExternalStore(onPinCounts, pinCount);
 }
 
 /** For choices such as "which term of the premises". */

@@ -10,7 +10,7 @@ import {
 import { kindDescriptions } from "#engine/descriptions.ts";
 import { classes } from "../ui/classes.ts";
 import { shownEvaluation } from "./block-parts.ts";
-import { useBlock, useLongWork, usePending, type LongWorkState } from "./block-handle.ts";
+import { useBlock, useLongWork, usePending, usePinCount, type LongWorkState } from "./block-handle.ts";
 import { Notices, OtherProblems } from "./parts/problem-list.tsx";
 import { TextField } from "./parts/text-field.tsx";
 import { Working } from "./parts/working.tsx";
@@ -57,6 +57,7 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: BlockFrame
         </div>
         {parts.summary && value !== null && <span className="block-summary">{parts.summary(block)}</span>}
         <StandsOn />
+        <Pinned />
         {!block.readOnly && (
           <span className="block-tools">
             {onMove && (
@@ -124,6 +125,18 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: BlockFrame
         </div>
       </Guard>
     </section>
+  );
+}
+
+/** The way to the sentences that rely on this block. */
+function Pinned() {
+  const { goToNextPin } = useBlock();
+  const count = usePinCount();
+  if (count === 0) return null;
+  return (
+    <button type="button" className="block-link" title="Go to the next sentence" onClick={goToNextPin}>
+      {count === 1 ? "pinned once" : `pinned ${count} times`}
+    </button>
   );
 }
 

@@ -32,6 +32,10 @@ export interface NotebookRow {
   readonly pinsMoved: number;
   readonly pinsLoose: number;
   readonly archivedAt: string | null;
+  /** When it was deleted; it can be brought back for 30 days. */
+  readonly deletedAt: string | null;
+  /** What stands around the searched text in the notebook, when it was found there. */
+  readonly excerpt: string | null;
 }
 export interface NotebookList {
   readonly notebooks: readonly NotebookRow[];
@@ -39,7 +43,8 @@ export interface NotebookList {
 }
 export const notebookListQuery = z.object({
   search: z._default(z.string().check(z.maxLength(200)), ""),
-  show: z._default(z.enum(["current", "archived"]), "current"),
+  /** "deleted": those one owned, for as long as they can be brought back. */
+  show: z._default(z.enum(["current", "archived", "deleted"]), "current"),
   /** Only notebooks with pins that moved or are loose. */
   attention: z._default(z.enum(["any", "moved"]), "any"),
   sort: z._default(z.enum(["changed", "title"]), "changed"),

@@ -116,6 +116,35 @@ async function tailAfter(database: Queryable, notebookId: string, seq: number): 
   return found.map(asStoredUpdate);
 }
 
+/** What is stored of a document; null when there is no such notebook (or it was deleted). */
+export function loadStored(database: Database, notebookId: string): Promise<StoredDocument | null> {
+  // One snapshot: a compaction between two reads would otherwise leave a gap.
+  return database.transaction(
+    async (transaction) => {
+      const notebook = await firstRow<{
+        last_seq: string;
+        schema_version: number;
+        seq: string | null;
+        state: Buffer | null;
+      }>(
+        transaction,
+        `select n.last_seq::text, n.schema_version, s.seq::text, s.state
+               from notebooks n left join document_states s on s.notebook_id = n.id
+              where n.id = ? and n.deleted_at is null`,
+        [notebookId],
+      );
+      if (notebook === undefined) return null;
+      return {
+        state: notebook.state,
+        tail: await tailAfter(transaction, notebookId, Number(notebook.seq ?? 0)),
+        lastSeq: Number(notebook.last_seq),
+        schemaVersion: notebook.schema_version,
+      };
+    },
+    { isolationLevel: "repeatable read", readOnly: true },
+  );
+}
+
 export interface DocumentStoreOptions {
   readonly database: Database;
   readonly databaseUrl: string;
@@ -138,32 +167,7 @@ export function openDocumentStore({ database, databaseUrl, log }: DocumentStoreO
   return {
     stop: () => pool.end(),
 
-    load: (notebookId) =>
-      // One snapshot: a compaction between two reads would otherwise leave a gap.
-      database.transaction(
-        async (transaction) => {
-          const notebook = await firstRow<{
-            last_seq: string;
-            schema_version: number;
-            seq: string | null;
-            state: Buffer | null;
-          }>(
-            transaction,
-            `select n.last_seq::text, n.schema_version, s.seq::text, s.state
-               from notebooks n left join document_states s on s.notebook_id = n.id
-              where n.id = ? and n.deleted_at is null`,
-            [notebookId],
-          );
-          if (notebook === undefined) return null;
-          return {
-            state: notebook.state,
-            tail: await tailAfter(transaction, notebookId, Number(notebook.seq ?? 0)),
-            lastSeq: Number(notebook.last_seq),
-            schemaVersion: notebook.schema_version,
-          };
-        },
-        { isolationLevel: "repeatable read", readOnly: true },
-      ),
+    load: (notebookId) => loadStored(database, notebookId),
 
     async append({ notebookId, after, updates, schema }) {
       const writers = updates.map(({ personId }) => personId);

@@ -7,6 +7,7 @@ import type { Queryable } from "../data/database.ts";
 import { createMemo } from "./memo.ts";
 import { settleJson } from "./settle-document.ts";
 import { storeSettled } from "./store-settled.ts";
+import { wordsOf } from "./words-of.ts";
 
 /**
  * To be called in the transaction that makes the notebook, before anyone can open it. It is the state that the log of
@@ -19,7 +20,8 @@ export async function seedDocument(transaction: Queryable, notebookId: string, j
     notebookId,
     Buffer.from(Y.encodeStateAsUpdate(document)),
   ]);
+  const words = wordsOf(document.getXmlFragment(FRAGMENT));
   document.destroy();
   const nobody = { blocks: new Map<string, string | null>(), structure: null };
-  await storeSettled(transaction, notebookId, settleJson(json, createMemo(100)), nobody);
+  await storeSettled(transaction, notebookId, { ...settleJson(json, createMemo(100)), words }, nobody);
 }

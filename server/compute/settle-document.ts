@@ -14,6 +14,7 @@ import {
   type Postponed,
 } from "#engine/index.ts";
 import { readFragment } from "./read-fragment.ts";
+import { wordsOf } from "./words-of.ts";
 import type { LongAnswer, SettledBlock, SettledDocument } from "./tasks.ts";
 
 /** Long work whose result is not in the memo is named as postponed. */
@@ -22,7 +23,7 @@ export function settleDocument(document: Y.Doc, memo: Memo): SettledDocument {
   const settled = settleJson(readFragment(document.getXmlFragment(FRAGMENT)), memo, (later) =>
     postponed.push(later),
   );
-  return { ...settled, postponed };
+  return { ...settled, postponed, words: wordsOf(document.getXmlFragment(FRAGMENT)) };
 }
 
 /** The same for a document in ProseMirror's JSON; without `onPostponed` everything is evaluated, however long it takes. */
@@ -55,6 +56,7 @@ export function settleJson(
       pins.filter(({ blockId }) => !waiting.has(blockId)),
       evaluations,
     ),
+    words: null,
     postponed: [],
     mistakes,
   };

@@ -23,9 +23,17 @@ export interface SettlingTimes {
   /** After the first change, however long the typing goes on. */
   readonly longestMs: number;
   readonly limitMs: number;
+  /** Between two readings of the prose. */
+  readonly wordsMs: number;
   readonly retryMs: number;
 }
-const usualTimes: SettlingTimes = { quietMs: 300, longestMs: 2_000, limitMs: 10_000, retryMs: 2_000 };
+const usualTimes: SettlingTimes = {
+  quietMs: 300,
+  longestMs: 2_000,
+  limitMs: 10_000,
+  wordsMs: 20_000,
+  retryMs: 2_000,
+};
 
 export function createSettling(options: SettlingOptions): RoomObserver {
   const rooms = new Map<OpenRoom, RoomSettling>();
@@ -51,6 +59,7 @@ class RoomSettling {
   readonly #touched: TouchedBlocks;
   readonly #times: SettlingTimes;
   #timer: NodeJS.Timeout | null = null;
+  #wordsTimer: NodeJS.Timeout | null = null;
   #firstChangeAt: number | null = null;
   #everything = false;
   #owed: ReadonlyMap<string, string | null> = new Map();
@@ -84,12 +93,18 @@ class RoomSettling {
 
   /** Before the room closes: what waits is done now. */
   async finish(): Promise<void> {
+    if (this.#wordsTimer !== null) {
+      clearTimeout(this.#wordsTimer);
+      this.#wordsTimer = null;
+      this.checkAll();
+    }
     if (this.#timer !== null && this.rest.remaining(this.room.notebookId) === 0) this.#runIn(null);
     await this.#running;
   }
 
   stop(): void {
     this.#stopped = true;
+    if (this.#wordsTimer !== null) clearTimeout(this.#wordsTimer);
     if (this.#timer !== null) clearTimeout(this.#timer);
     this.#timer = null;
   }
@@ -117,6 +132,7 @@ class RoomSettling {
     this.#firstChangeAt = null;
     try {
       if (everything || touched.mayChangeResults) await this.#evaluate(touched);
+      else if (touched.anything) this.#readWordsLater();
       if (touched.anything) await storeLastChange(this.options.database, this.room.notebookId, touched.last);
     } catch (error) {
       log.error({ err: error, notebookId: this.room.notebookId }, "a notebook could not be settled");
@@ -127,6 +143,14 @@ class RoomSettling {
       this.#everything ||= everything;
       if (!this.#isStopped() && this.#timer === null) this.#runIn(this.#times.retryMs);
     }
+  }
+
+  /** Prose alone changes no result; for the search of the shelf it is read now and then, and before the room closes. */
+  #readWordsLater(): void {
+    this.#wordsTimer ??= setTimeout(() => {
+      this.#wordsTimer = null;
+      this.checkAll();
+    }, this.#times.wordsMs);
   }
 
   #isStopped(): boolean {

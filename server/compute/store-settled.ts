@@ -47,6 +47,14 @@ export async function storeSettled(
      returning 1`,
     [...summaryOf(settled), notebookId, ...summaryOf(settled)],
   );
+  if (settled.words !== null) {
+    const words = storable(settled.words);
+    await transaction.raw("update notebooks set search_text = ? where id = ? and search_text <> ?", [
+      words,
+      notebookId,
+      words,
+    ]);
+  }
   return gone.length > 0 || changed.length > 0 || counted.length > 0;
 }
 

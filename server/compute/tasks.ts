@@ -38,6 +38,8 @@ export interface SettledBlock {
 export interface SettledDocument {
   readonly blocks: readonly SettledBlock[];
   readonly premisesLine: string;
+  /** For the search of the shelf; null where there was no shared document to read it from. */
+  readonly words: string | null;
   readonly pins: PinCounts;
   readonly postponed: readonly Postponed[];
   /** Mistakes of ours inside a kind, for the log. */

@@ -13,6 +13,7 @@ export interface Happening {
     | "notebook-archived"
     | "notebook-restored"
     | "notebook-deleted"
+    | "notebook-undeleted"
     | "role-changed"
     | "person-removed"
     | "person-left"

@@ -3,6 +3,7 @@ import { readConfiguration } from "../configuration.ts";
 import { openDatabase, type Database } from "./database.ts";
 import type { Knex } from "knex";
 import * as foundation from "../../migrations/20261201000001_foundation.ts";
+import * as searchText from "../../migrations/20261201000010_search_text.ts";
 
 type Migration = { readonly up: (knex: Knex) => Promise<void>; readonly down: (knex: Knex) => Promise<void> };
 
@@ -12,6 +13,7 @@ type Migration = { readonly up: (knex: Knex) => Promise<void>; readonly down: (k
  */
 export const migrations: Readonly<Record<string, Migration>> = {
   "20261201000001_foundation.ts": foundation,
+  "20261201000010_search_text.ts": searchText,
 };
 
 const migrationSource: Knex.MigrationSource<string> = {

@@ -3,12 +3,13 @@ import * as z from "zod";
 import type { Notebook, NotebookList, NotebookRow, Person } from "#contract/api.ts";
 import type { Role } from "#contract/roles.ts";
 import { refuse, succeed, type Outcome } from "../commands/outcome.ts";
+import { KEPT_DAYS } from "../commands/deleted-notebooks.ts";
 import type { NotebookAccess } from "../policies/access.ts";
 import { firstRow, rows, type Queryable } from "./database.ts";
 
 export interface ShelfQuery {
   readonly search: string;
-  readonly show: "current" | "archived";
+  readonly show: "current" | "archived" | "deleted";
   readonly attention: "any" | "moved";
   readonly sort: "changed" | "title";
   readonly cursor?: string | undefined;
@@ -48,9 +49,10 @@ function likePattern(search: string): string {
   return `%${search.trim().replace(/[\\%_]/g, "\\$&")}%`;
 }
 
-interface ShelfRow extends Omit<NotebookRow, "lastChangedAt" | "archivedAt"> {
+interface ShelfRow extends Omit<NotebookRow, "lastChangedAt" | "archivedAt" | "deletedAt"> {
   readonly lastChangedAt: Date;
   readonly archivedAt: Date | null;
+  readonly deletedAt: Date | null;
   readonly sortedBy: string;
 }
 
@@ -68,6 +70,16 @@ const orders = {
   },
 } as const;
 
+const shown = {
+  current: "n.deleted_at is null and n.archived_at is null",
+  archived: "n.deleted_at is null and n.archived_at is not null",
+  deleted: `m.role = 'owner' and n.deleted_at > now() - make_interval(days => ${KEPT_DAYS})`,
+} as const;
+
+/** Some words before what was found, and some after it. */
+const excerpt = `case when position(lower(?) in lower(n.search_text)) > 0 then
+  substring(n.search_text from greatest(1, position(lower(?) in lower(n.search_text)) - 50) for 140) end`;
+
 const someoneMatches = `exists (
   select 1 from notebook_people o join people p on p.id = o.person_id
    where o.notebook_id = n.id and (p.name ilike ? or p.login ilike ?)
@@ -83,24 +95,25 @@ export async function listNotebooks(
   if (cursor === null)
     return refuse("invalid", "This page of the list is not known. Begin again at the first.");
   const pattern = likePattern(query.search);
-  const isSearch = query.search.trim() !== "";
+  const searched = query.search.trim();
+  const isSearch = searched !== "";
   const found = await rows<ShelfRow>(
     database,
     `with page as (
        select n.*, m.role
          from notebook_people m join notebooks n on n.id = m.notebook_id
         where m.person_id = ?
-          and n.deleted_at is null
-          and (n.archived_at is not null) = ?
+          and ${shown[query.show]}
           ${query.attention === "moved" ? "and (n.pins_moved > 0 or n.pins_loose > 0)" : ""}
-          ${isSearch ? `and (n.title ilike ? or n.premises_line ilike ? or ${someoneMatches})` : ""}
+          ${isSearch ? `and (n.title ilike ? or n.premises_line ilike ? or n.search_text ilike ? or ${someoneMatches})` : ""}
           ${cursor === undefined ? "" : `and ${order.after}`}
         order by ${order.orderBy}
         limit ?
      )
      select n.id, n.title, n.role, n.changed_at as "lastChangedAt", changer.name as "lastChangedBy",
             everyone.names as people, n.premises_line as "premisesLine", n.pins_moved as "pinsMoved",
-            n.pins_loose as "pinsLoose", n.archived_at as "archivedAt", ${order.sortedBy} as "sortedBy"
+            n.pins_loose as "pinsLoose", n.archived_at as "archivedAt", n.deleted_at as "deletedAt",
+            ${isSearch ? excerpt : "null"} as excerpt, ${order.sortedBy} as "sortedBy"
        from page n
        left join people changer on changer.id = n.changed_by
        cross join lateral (
@@ -111,10 +124,10 @@ export async function listNotebooks(
       order by ${order.orderBy}`,
     [
       personId,
-      query.show === "archived",
-      ...(isSearch ? [pattern, pattern, pattern, pattern] : []),
+      ...(isSearch ? [pattern, pattern, pattern, pattern, pattern] : []),
       ...(cursor ?? []),
       PAGE + 1,
+      ...(isSearch ? [searched, searched] : []),
     ],
   );
   const page = found.slice(0, PAGE);
@@ -124,6 +137,7 @@ export async function listNotebooks(
       ...row,
       lastChangedAt: row.lastChangedAt.toISOString(),
       archivedAt: row.archivedAt?.toISOString() ?? null,
+      deletedAt: row.deletedAt?.toISOString() ?? null,
     })),
     nextCursor: found.length > PAGE && last !== undefined ? writeCursor([last.sortedBy, last.id]) : null,
   });

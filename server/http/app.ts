@@ -42,7 +42,7 @@ export function createApp(services: Services, compute: Compute): Express {
   app.use("/api", express.json({ limit: "64kb" }));
   app.use(signInRoutes(services, limits));
   app.use(meRoutes(services));
-  app.use(notebookRoutes(services));
+  app.use(notebookRoutes(services, compute));
   app.use(resultRoutes(services));
   app.use(peopleRoutes(services, limits));
   app.use(refereeLinkRoutes(services, limits));

@@ -37,6 +37,19 @@ const otherLines: readonly Line[] = [
   line("delete it", true, ownerOnly, (browser, path, actor) =>
     browser.delete(`${path}?referee=${actor.token}`, withToken(actor)),
   ),
+  line("copy it", false, everyMember, (browser, path, actor) =>
+    browser.post(`${path}/copies?referee=${actor.token}`, {}, withToken(actor)),
+  ),
+  {
+    ...line(
+      "bring it back once deleted",
+      true,
+      verdicts(["done", "not-found", "not-found", "not-found"]),
+      (browser, path) => browser.post(`${path}/restoration`, {}),
+    ),
+    prepare: ({ world, notebookId }) =>
+      world.database.raw("update notebooks set deleted_at = now() where id = ?", [notebookId]),
+  },
   line("change someone's role", true, ownerOnly, (browser, path, _actor, { bystanderId }) =>
     browser.put(`${path}/people/${bystanderId}`, { role: "author" }),
   ),

@@ -81,7 +81,7 @@ export function createFieldPresence(awareness: Awareness): FieldPresence {
 }
 
 /** Presence is data from strangers: anything but two short texts is no place. */
-function placeOf(state: unknown): { blockId: string; key: string } | null {
+export function placeOf(state: unknown): { blockId: string; key: string } | null {
   if (typeof state !== "object" || state === null || !(member in state)) return null;
   const place = state[member];
   if (typeof place !== "object" || place === null || !("blockId" in place) || !("key" in place)) return null;

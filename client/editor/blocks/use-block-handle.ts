@@ -8,6 +8,7 @@ import { placeKey, type BlockHandle, type FieldPlace } from "../../blocks/block-
 import { useBlockResult, useEvaluatorState } from "../evaluation/use-results.ts";
 import { newId } from "../new-id.ts";
 import { placePinAtCaret } from "../pins/place-pin.ts";
+import { goToNextPinOf, onPinCounts, pinCountOf } from "../pins/use-pin-counts.ts";
 import { cellElement, orderedRows } from "./block-elements.ts";
 import { useBlockWorld, useReadOnly, type BlockWorld } from "./block-world.ts";
 import { changeInputs, insertRows, moveRow, removeRow, writeCell, writeField } from "./block-writes.ts";
@@ -79,6 +80,9 @@ type Changes = Pick<
   | "onColleagues"
   | "writerOf"
   | "pin"
+  | "pinCount"
+  | "onPinCounts"
+  | "goToNextPin"
   | "rewriteUses"
   | "isPending"
   | "premisesEvaluation"
@@ -147,6 +151,12 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
       return clientId === null ? "someone" : presence.nameOf(clientId);
     },
     rewriteUses: (rewriting, apply) => rewriteUses(world, blockId, rewriting, apply),
+    pinCount: () => pinCountOf(blockId),
+    onPinCounts,
+    goToNextPin() {
+      const editor = world.editor();
+      if (editor) goToNextPinOf(editor, blockId);
+    },
     pin: (scalarId) => placePinAtCaret(world, blockId, scalarId),
   };
 }

@@ -1,4 +1,4 @@
-import { useCallback, useEffect, useLayoutEffect, useMemo, useRef, useState } from "react";
+import { useCallback, useEffect, useLayoutEffect, useRef, useState, useSyncExternalStore } from "react";
 import type { Node } from "@tiptap/pm/model";
 import { TextSelection } from "@tiptap/pm/state";
 import type { NotebookTools } from "../notebook-tools.ts";
@@ -13,10 +13,6 @@ interface Props extends NotebookTools {
 /** Finds text in the notebook. Enter goes on, with Shift back; Escape closes and leaves the caret at what was found. */
 export function FindStrip({ editor, world, onClose }: Props) {
   const [typed, setTyped] = useState(() => selectedText(editor));
-  const [at, setAt] = useState<{ readonly count: number; readonly current: number }>({
-    count: 0,
-    current: -1,
-  });
   const field = useRef<HTMLInputElement>(null);
   const wanted = useRef(typed);
 
@@ -25,26 +21,27 @@ export function FindStrip({ editor, world, onClose }: Props) {
       findMatches(doc, new Map(world.directory.blocks().map((block) => [block.id, block])), wanted.current),
     [world],
   );
-  const show = useMemo(
-    () => (matches: readonly Match[], current: number) => {
+  const show = useCallback(
+    (matches: readonly Match[], current: number) => {
       const { tr } = editor.state;
       editor.view.dispatch(tr.setMeta(foundKey, { matches, current }).setMeta("addToHistory", false));
-      setAt({ count: matches.length, current });
       const match = matches[current];
       if (match) bringIntoView(editor, match);
     },
     [editor],
   );
+  const found = useSyncExternalStore(
+    (listener) => {
+      editor.on("transaction", listener);
+      return () => editor.off("transaction", listener);
+    },
+    () => foundKey.getState(editor.state) ?? null,
+  );
+  const at = { count: found?.matches.length ?? 0, current: found?.current ?? -1 };
   // The marks are the editor's while this strip is there.
   useEffect(() => {
     editor.registerPlugin(foundMarks(find));
-    const follow = () => {
-      const state = foundKey.getState(editor.state);
-      if (state) setAt({ count: state.matches.length, current: state.current });
-    };
-    editor.on("update", follow);
     return () => {
-      editor.off("update", follow);
       if (!editor.isDestroyed) editor.unregisterPlugin(foundKey);
     };
   }, [editor, find]);

@@ -15,8 +15,10 @@ const none: PinCounts = { moved: 0, loose: 0, all: 0 };
 
 // The header lies outside the editor. One notebook is open at a time, so its counts are found here.
 let counts: PinCounts = none;
+let ofBlocks: ReadonlyMap<string, number> = new Map();
 let jump: (() => void) | null = null;
 const listeners = new Set<() => void>();
+const blockListeners = new Set<() => void>();
 
 function publish(next: PinCounts) {
   if (next.moved === counts.moved && next.loose === counts.loose && next.all === counts.all) return;
@@ -24,12 +26,32 @@ function publish(next: PinCounts) {
   for (const listener of listeners) listener();
 }
 
+function publishOfBlocks(doc: Node) {
+  const next = new Map<string, number>();
+  for (const { pin } of pinsOf(doc)) next.set(pin.blockId, (next.get(pin.blockId) ?? 0) + 1);
+  const same = next.size === ofBlocks.size && [...next].every(([id, count]) => ofBlocks.get(id) === count);
+  if (same) return;
+  ofBlocks = next;
+  for (const listener of blockListeners) listener();
+}
+
+/** How many sentences use a number of this block. */
+export function pinCountOf(blockId: string): number {
+  return ofBlocks.get(blockId) ?? 0;
+}
+export function onPinCounts(listener: () => void): () => void {
+  blockListeners.add(listener);
+  return () => blockListeners.delete(listener);
+}
+
 /** Counts as prose and results change, once per frame at most. Returns the way to stop. */
 export function announcePins(world: BlockWorld, editor: Editor): () => void {
   let waiting: number | null = null;
   const count = () => {
     waiting = null;
-    if (!editor.isDestroyed) publish(countPins(world, editor.state.doc));
+    if (editor.isDestroyed) return;
+    publish(countPins(world, editor.state.doc));
+    publishOfBlocks(editor.state.doc);
   };
   const soon = () => {
     waiting ??= requestAnimationFrame(count);
@@ -99,8 +121,17 @@ export function countPins(world: BlockWorld, doc: Node): PinCounts {
 }
 
 function goToNextPin(world: BlockWorld, editor: Editor): void {
+  goToNext(editor, (pin) => needsAttention(world, pin) !== null);
+}
+
+/** Selects the next pin of a block after the caret, from the last one on to the first. */
+export function goToNextPinOf(editor: Editor, blockId: string): void {
+  goToNext(editor, (pin) => pin.blockId === blockId);
+}
+
+function goToNext(editor: Editor, isWanted: (pin: PinAttributes) => boolean): void {
   const { doc, selection } = editor.state;
-  const places = pinsOf(doc).filter(({ pin }) => needsAttention(world, pin) !== null);
+  const places = pinsOf(doc).filter(({ pin }) => isWanted(pin));
   const next = places.find(({ offset }) => offset > selection.from) ?? places[0];
   if (!next) return;
   editor.chain().setNodeSelection(next.offset).scrollIntoView().focus().run();

@@ -13,6 +13,7 @@ import { PageFrame } from "../../ui/page-frame.tsx";
 import { Refusal } from "../../ui/refusal.tsx";
 import { TextLink } from "../../ui/text-link.tsx";
 import { ConnectionWords } from "./connection-words.tsx";
+import { NotebookMenu } from "./notebook-menu.tsx";
 import { NotebookTitle } from "./notebook-title.tsx";
 import { PeopleHere } from "./people-here.tsx";
 import { PinsToLookAt } from "./pins-to-look-at.tsx";
@@ -72,6 +73,7 @@ export function NotebookPage() {
           <TextLink look="quiet" className="text-small" to={`/notebooks/${id}/sharing`}>
             Sharing
           </TextLink>
+          <NotebookMenu notebook={notebook.data} />
         </>
       }
     >

@@ -38,6 +38,13 @@ export function EmptyShelf({ view, onChange, onNew }: Props) {
       </EmptyState>
     );
   }
+  if (view.show === "deleted") {
+    return (
+      <EmptyState title="Nothing was deleted">
+        <p>A notebook that you delete stands here for 30 days and can be brought back.</p>
+      </EmptyState>
+    );
+  }
   if (view.show === "archived") {
     return (
       <EmptyState title="Nothing is archived">

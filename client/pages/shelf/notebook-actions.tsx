@@ -2,8 +2,14 @@ import type { NotebookRow } from "#contract/api.ts";
 import { roleMay } from "#contract/roles.ts";
 import { useState } from "react";
 import { useNavigate } from "react-router-dom";
-import { useChangeNotebook, useDeleteNotebook } from "../../api/notebooks.ts";
+import {
+  useChangeNotebook,
+  useDeleteNotebook,
+  useDuplicateNotebook,
+  useRestoreNotebook,
+} from "../../api/notebooks.ts";
 import { sentenceOf } from "../../api/problem.ts";
+import { Button } from "../../ui/button.tsx";
 import { ConfirmDialog } from "../../ui/confirm-dialog.tsx";
 import { Menu, type MenuItem } from "../../ui/menu.tsx";
 import { say } from "../../ui/notices.ts";
@@ -11,10 +17,40 @@ import { RenameDialog } from "./rename-dialog.tsx";
 
 /** What this person may do with a notebook from the shelf; only that is offered. */
 export function NotebookActions({ notebook }: { readonly notebook: NotebookRow }) {
+  return notebook.deletedAt === null ? (
+    <ActionsOnShelf notebook={notebook} />
+  ) : (
+    <BringBack notebook={notebook} />
+  );
+}
+
+/** What was deleted can be brought back, and nothing else. */
+function BringBack({ notebook: { id, title } }: { readonly notebook: NotebookRow }) {
+  const restore = useRestoreNotebook();
+  return (
+    <Button
+      look="quiet"
+      className="text-small"
+      aria-label={`Bring back “${title}”`}
+      busy={restore.isPending}
+      onClick={() =>
+        restore.mutate(id, {
+          onSuccess: () => say(`“${title}” is back on the shelf, with the people it was shared with.`),
+          onError: (error) => say(sentenceOf(error), "refused"),
+        })
+      }
+    >
+      Bring back
+    </Button>
+  );
+}
+
+function ActionsOnShelf({ notebook }: { readonly notebook: NotebookRow }) {
   const { id, title, role, archivedAt } = notebook;
   const [asking, setAsking] = useState<"rename" | "delete" | null>(null);
   const change = useChangeNotebook();
   const remove = useDeleteNotebook();
+  const duplicate = useDuplicateNotebook();
   const navigate = useNavigate();
   const close = () => {
     setAsking(null);
@@ -38,6 +74,15 @@ export function NotebookActions({ notebook }: { readonly notebook: NotebookRow }
   };
 
   const items: MenuItem[] = [{ name: "Sharing", onSelect: () => void navigate(`/notebooks/${id}/sharing`) }];
+  items.push({
+    name: "Duplicate",
+    onSelect: () => {
+      duplicate.mutate(id, {
+        onSuccess: (copy) => say(`“${copy.title}” is on your shelf, shared with nobody.`),
+        onError: (error) => say(sentenceOf(error), "refused"),
+      });
+    },
+  });
   if (roleMay(role, "notebook.rename") && !archivedAt) {
     items.push({
       name: "Rename",
@@ -80,7 +125,7 @@ export function NotebookActions({ notebook }: { readonly notebook: NotebookRow }
         onConfirm={() => {
           remove.mutate(id, {
             onSuccess: () => {
-              say(`“${title}” is deleted.`);
+              say(`“${title}” is deleted. For 30 days it can be brought back: show “Deleted” on the shelf.`);
               close();
             },
           });
@@ -89,7 +134,8 @@ export function NotebookActions({ notebook }: { readonly notebook: NotebookRow }
         <p>
           It disappears for everyone it is shared with (
           {notebook.people.length === 1 ? "only you" : `${notebook.people.length} people`}), and its referee
-          links stop working. This cannot be undone. To keep it readable, archive it instead.
+          links stop working. You can bring it back for 30 days; then it goes for good. To keep it readable,
+          archive it instead.
         </p>
       </ConfirmDialog>
     </>

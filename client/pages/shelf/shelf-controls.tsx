@@ -24,6 +24,7 @@ export function ShelfControls({ view, onChange }: Props) {
         options={[
           ["current", "Current"],
           ["archived", "Archived"],
+          ["deleted", "Deleted"],
         ]}
         onValue={(show) => {
           onChange({ show });
@@ -88,7 +89,7 @@ function SearchField({ view, onChange }: Props) {
   }, [typed, sent, search]);
   return (
     <TextField
-      label="Search titles, people, premises"
+      label="Search titles, people and texts"
       type="search"
       maxLength={200}
       className="col-span-2 sm:min-w-64 sm:flex-1"

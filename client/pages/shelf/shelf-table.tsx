@@ -47,12 +47,17 @@ function ShelfRow({ notebook }: { readonly notebook: NotebookRow }) {
   return (
     <tr role="row">
       <th role="rowheader" scope="row" className="shelf-title">
-        <Link to={`/notebooks/${notebook.id}`} className="shelf-link" onKeyDown={moveBetweenRows}>
-          {notebook.title}
-        </Link>
+        {notebook.deletedAt === null ? (
+          <Link to={`/notebooks/${notebook.id}`} className="shelf-link" onKeyDown={moveBetweenRows}>
+            {notebook.title}
+          </Link>
+        ) : (
+          <span>{notebook.title}</span>
+        )}
         <span className="shelf-premises">
           {notebook.premisesLine === "" ? "no premises yet" : notebook.premisesLine}
         </span>
+        {notebook.excerpt !== null && <span className="shelf-excerpt">… {notebook.excerpt} …</span>}
       </th>
       <td role="cell" className="shelf-change">
         <Moment at={notebook.lastChangedAt} />

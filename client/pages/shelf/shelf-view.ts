@@ -5,10 +5,12 @@ import type { ShelfView } from "../../api/notebooks.ts";
 
 export const wholeShelf: ShelfView = { search: "", show: "current", attention: "any", sort: "changed" };
 
+const shows = ["current", "archived", "deleted"] as const satisfies readonly ShelfView["show"][];
+
 export function readShelfView(parameters: URLSearchParams): ShelfView {
   return {
     search: (parameters.get("search") ?? "").slice(0, 200),
-    show: parameters.get("show") === "archived" ? "archived" : "current",
+    show: shows.find((show) => show === parameters.get("show")) ?? "current",
     attention: parameters.get("attention") === "moved" ? "moved" : "any",
     sort: parameters.get("sort") === "title" ? "title" : "changed",
   };

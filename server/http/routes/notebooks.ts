@@ -1,16 +1,19 @@
 /** /api/notebooks and /api/notebooks/:id */
 import { Router } from "express";
-import { notebookCreate, notebookListQuery, notebookPatch } from "#contract/api.ts";
+import { idParameter, notebookCreate, notebookListQuery, notebookPatch } from "#contract/api.ts";
 import { changeNotebook, deleteNotebook } from "../../commands/change-notebook.ts";
 import { createNotebook } from "../../commands/create-notebook.ts";
+import { restoreNotebook } from "../../commands/deleted-notebooks.ts";
+import { duplicateNotebook } from "../../commands/duplicate-notebook.ts";
 import { refuse } from "../../commands/outcome.ts";
 import { seedNotebook } from "../../commands/seed-notebook.ts";
+import type { Compute } from "../../compute/open-compute.ts";
 import { findNotebook, listNotebooks } from "../../data/notebooks.ts";
 import { accessTo } from "../../policies/access.ts";
 import type { Services } from "../../services.ts";
 import { forPeople, inNotebook, present, presentNothing } from "../route.ts";
 
-export function notebookRoutes(services: Services): Router {
+export function notebookRoutes(services: Services, { compact }: Pick<Compute, "compact">): Router {
   const { database } = services;
   const router = Router();
 
@@ -61,6 +64,26 @@ export function notebookRoutes(services: Services): Router {
     inNotebook(services, ["notebook.delete"], {}, async ({ person, access }) => {
       const deleted = await deleteNotebook(database, person.id, access.notebookId);
       return deleted.ok ? presentNothing() : deleted;
+    }),
+  );
+
+  router.post(
+    "/api/notebooks/:id/copies",
+    inNotebook(services, ["notebook.read"], {}, async ({ person, access }) => {
+      const copy = await duplicateNotebook(database, compact, {
+        notebookId: access.notebookId,
+        personId: person.id,
+      });
+      return copy.ok ? presentNotebook(person.id, copy.value, 201) : copy;
+    }),
+  );
+
+  // Outside `inNotebook`, for which a deleted notebook does not exist.
+  router.post(
+    "/api/notebooks/:id/restoration",
+    forPeople(services, { parameters: idParameter }, async ({ person, parameters }) => {
+      const restored = await restoreNotebook(database, person.id, parameters.id);
+      return restored.ok ? presentNotebook(person.id, parameters.id) : restored;
     }),
   );
   return router;

@@ -29,6 +29,8 @@ function row(part: Partial<NotebookRow> = {}): NotebookRow {
     pinsMoved: 2,
     pinsLoose: 1,
     archivedAt: null,
+    deletedAt: null,
+    excerpt: null,
     ...part,
   };
 }
@@ -167,11 +169,11 @@ describe("the shelf", () => {
 
 describe("what may be done from the shelf", () => {
   it.each<[Role, string | null, readonly string[]]>([
-    ["owner", null, ["Sharing", "Rename", "Archive", "Delete"]],
-    ["owner", "2026-11-20T09:00:00Z", ["Sharing", "Restore", "Delete"]],
-    ["author", null, ["Sharing", "Rename"]],
-    ["reviewer", null, ["Sharing"]],
-    ["reader", null, ["Sharing"]],
+    ["owner", null, ["Sharing", "Duplicate", "Rename", "Archive", "Delete"]],
+    ["owner", "2026-11-20T09:00:00Z", ["Sharing", "Duplicate", "Restore", "Delete"]],
+    ["author", null, ["Sharing", "Duplicate", "Rename"]],
+    ["reviewer", null, ["Sharing", "Duplicate"]],
+    ["reader", null, ["Sharing", "Duplicate"]],
   ])("by the %s of a notebook archived at %s: %j", async (role, archivedAt, actions) => {
     shelfOf([row({ role, archivedAt })]);
     const { user } = openSite("/shelf");
@@ -229,7 +231,7 @@ describe("what may be done from the shelf", () => {
     const { user } = openSite("/shelf");
     await chooseAction(user, "Delete");
     const dialog = await screen.findByRole("dialog", { name: "Delete “Lantern amplitude”?" });
-    expect(dialog.textContent).toContain("cannot be undone");
+    expect(dialog.textContent).toContain("bring it back for 30 days");
     expect(document.activeElement?.textContent).toBe("Keep it as it is");
     expect(requests.some(({ method }) => method === "DELETE")).toBe(false);
     await user.click(within(dialog).getByRole("button", { name: "Delete the notebook" }));
