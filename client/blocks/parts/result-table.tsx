@@ -1,5 +1,6 @@
-import type { KeyboardEvent, ReactNode } from "react";
+import { useRef, type KeyboardEvent, type ReactNode } from "react";
 import { classes } from "../../ui/classes.ts";
+import { TableCopies } from "./table-copies.tsx";
 import { ScrollBox } from "./scroll-box.tsx";
 
 export interface ResultColumnSpec<Row> {
@@ -22,38 +23,49 @@ interface Props<Row> {
 
 /** A table of results. Arrow keys go from figure to figure, so that the table is one stop of the Tab key. */
 export function ResultTable<Row>({ caption, showCaption = false, columns, rows, keyOf, toneOf }: Props<Row>) {
+  const table = useRef<HTMLTableElement>(null);
   return (
-    <ScrollBox what="table of results">
-      {/* The keys belong to the figures inside, which are buttons. */}
-      {/* eslint-disable-next-line jsx-a11y-x/no-noninteractive-element-interactions -- see above */}
-      <table className="block-table" onKeyDown={goByArrows} ref={oneTabStop}>
-        <caption className={showCaption ? "block-caption" : "sr-only"}>{caption}</caption>
-        <thead>
-          <tr>
-            {columns.map(({ heading, numeric }, index) => (
-              // Columns are fixed; their place is their identity.
-              <th key={index} scope="col" className={classes(numeric && "block-numeric")}>
-                {heading}
-              </th>
-            ))}
-          </tr>
-        </thead>
-        <tbody>
-          {rows.map((row) => {
-            const tone = toneOf?.(row);
-            return (
-              <tr key={keyOf(row)} className={tone ? `block-row-${tone}` : undefined}>
-                {columns.map(({ show, numeric }, index) => (
-                  <td key={index} className={classes(numeric && "block-numeric")}>
-                    {show(row)}
-                  </td>
-                ))}
-              </tr>
-            );
-          })}
-        </tbody>
-      </table>
-    </ScrollBox>
+    <>
+      <ScrollBox what="table of results">
+        {/* The keys belong to the figures inside, which are buttons. */}
+        {/* eslint-disable-next-line jsx-a11y-x/no-noninteractive-element-interactions -- see above */}
+        <table
+          className="block-table"
+          onKeyDown={goByArrows}
+          ref={(element) => {
+            table.current = element;
+            oneTabStop(element);
+          }}
+        >
+          <caption className={showCaption ? "block-caption" : "sr-only"}>{caption}</caption>
+          <thead>
+            <tr>
+              {columns.map(({ heading, numeric }, index) => (
+                // Columns are fixed; their place is their identity.
+                <th key={index} scope="col" className={classes(numeric && "block-numeric")}>
+                  {heading}
+                </th>
+              ))}
+            </tr>
+          </thead>
+          <tbody>
+            {rows.map((row) => {
+              const tone = toneOf?.(row);
+              return (
+                <tr key={keyOf(row)} className={tone ? `block-row-${tone}` : undefined}>
+                  {columns.map(({ show, numeric }, index) => (
+                    <td key={index} className={classes(numeric && "block-numeric")}>
+                      {show(row)}
+                    </td>
+                  ))}
+                </tr>
+              );
+            })}
+          </tbody>
+        </table>
+      </ScrollBox>
+      <TableCopies table={table} />
+    </>
   );
 }
 
