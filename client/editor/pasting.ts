@@ -2,7 +2,9 @@
 import { Extension, type AnyExtension } from "@tiptap/core";
 import { Fragment, Slice, type Node, type Schema } from "@tiptap/pm/model";
 import { Plugin } from "@tiptap/pm/state";
-import { kindNames } from "#engine/kind.ts";
+import { kindDescriptions } from "#engine/descriptions.ts";
+import { kindNames, type KindName } from "#engine/kind.ts";
+import type { Columns } from "#engine/shape.ts";
 import { pinNode, rowNode } from "#schema/block-structure.ts";
 import { isSafeLink } from "#schema/safe-link.ts";
 import { newId } from "./new-id.ts";
@@ -15,10 +17,20 @@ export const Pasting: AnyExtension = Extension.create({
     const { editor } = this;
     // A drop that moves something within the document leaves it who it is; one that copies does not.
     let moves = false;
+    // What was cut comes back as itself, so that pins and references still know it; a second time it is a copy.
+    let cut: ReadonlySet<string> = new Set();
     return [
       new Plugin({
         props: {
           handleDOMEvents: {
+            cut: (view) => {
+              cut = identitiesIn(view.state.selection.content().content);
+              return false;
+            },
+            copy: () => {
+              cut = new Set();
+              return false;
+            },
             drop: (view, event) => {
               moves = view.dragging !== null && !copies(event);
               // ProseMirror takes the drop within this event.
@@ -29,9 +41,11 @@ export const Pasting: AnyExtension = Extension.create({
             },
           },
           dragCopies: copies,
-          transformPasted: (slice) => {
+          transformPasted: (slice, view) => {
             const read = withMathematics(withoutUnsafeLinks(slice), editor.schema);
-            return moves ? read : withFreshIds(read);
+            if (moves) return read;
+            const here = cut.size === 0 ? cut : identitiesIn(view.state.doc.content);
+            return withFreshIds(read, newId, (id) => cut.has(id) && !here.has(id));
           },
         },
       }),
@@ -44,11 +58,27 @@ function copies(event: DragEvent): boolean {
   return /Mac|iPhone|iPad/.test(navigator.userAgent) ? event.altKey : event.ctrlKey;
 }
 
+/** Ids by which others know blocks and equations. */
+function identitiesIn(content: Fragment): ReadonlySet<string> {
+  const found = new Set<string>();
+  content.descendants((node) => {
+    if (kinds.has(node.type.name)) found.add(textOf(node, "blockId"));
+    else if (node.type.name === "displayMath") found.add(textOf(node, "id"));
+    return !kinds.has(node.type.name);
+  });
+  found.delete("");
+  return found;
+}
+
 /**
- * Blocks, rows, pins and equations of the slice under new ids. What points at a block within the slice points at its
+ * Blocks, rows, pins and equations of the slice under new ids, but for blocks and equations to be kept. What points at a block within the slice points at its
  * copy; what points outside keeps pointing there. Row ids also occur in pins, as the first part of a scalar's name.
  */
-export function withFreshIds(slice: Slice, makeId: () => string = newId): Slice {
+export function withFreshIds(
+  slice: Slice,
+  makeId: () => string = newId,
+  isKept: (id: string) => boolean = () => false,
+): Slice {
   const blocks = new Map<string, string>();
   const rows = new Map<string, ReadonlyMap<string, string>>();
   slice.content.descendants((node) => {
@@ -56,8 +86,9 @@ export function withFreshIds(slice: Slice, makeId: () => string = newId): Slice 
     const blockId = textOf(node, "blockId");
     // Of two blocks with one id in the slice, pins can mean only one: the first.
     if (!blocks.has(blockId)) {
-      blocks.set(blockId, makeId());
-      rows.set(blockId, freshRows(node, makeId));
+      const kept = isKept(blockId);
+      blocks.set(blockId, kept ? blockId : makeId());
+      rows.set(blockId, kept ? sameRows(node) : freshRows(node, makeId));
     }
     return false;
   });
@@ -69,8 +100,9 @@ export function withFreshIds(slice: Slice, makeId: () => string = newId): Slice 
     taken.add(blockId);
     const rowIds = first ? rows.get(blockId) : freshRows(node, makeId);
     const standsOn = textOf(node, "standsOn");
+    const { shape } = kindDescriptions[node.type.name as KindName]; // only nodes of kinds come here
     const attributes = {
-      ...node.attrs,
+      ...referring(node.attrs, shape.fields, blocks),
       blockId: first ? blocks.get(blockId) : makeId(),
       standsOn: blocks.get(standsOn) ?? standsOn,
     };
@@ -78,12 +110,18 @@ export function withFreshIds(slice: Slice, makeId: () => string = newId): Slice 
       row.type.name === rowNode
         ? row.type.create(
             { ...row.attrs, rowId: rowIds?.get(textOf(row, "rowId")) ?? makeId() },
-            row.content,
+            mapChildren(row.content, (cell) => freshCell(cell, shape.tables[textOf(row, "table")] ?? {})),
             row.marks,
           )
         : row,
     );
     return node.type.create(attributes, content, node.marks);
+  }
+
+  function freshCell(cell: Node, columns: Columns): Node {
+    const value = textOf(cell, "value");
+    const copy = columns[textOf(cell, "field")]?.refersTo ? blocks.get(value) : undefined;
+    return copy === undefined ? cell : cell.type.create({ ...cell.attrs, value: copy }, null, cell.marks);
   }
 
   function fresh(node: Node): Node {
@@ -95,7 +133,8 @@ export function withFreshIds(slice: Slice, makeId: () => string = newId): Slice 
       const attributes = { ...node.attrs, pinId: makeId(), blockId: blocks.get(blockId) ?? blockId, scalar };
       return node.type.create(attributes, null, node.marks);
     }
-    if (name === "displayMath") return node.type.create({ ...node.attrs, id: makeId() }, null, node.marks);
+    if (name === "displayMath" && !isKept(textOf(node, "id")))
+      return node.type.create({ ...node.attrs, id: makeId() }, null, node.marks);
     return node.content.size === 0 ? node : node.copy(mapChildren(node.content, fresh));
   }
   return new Slice(mapChildren(slice.content, fresh), slice.openStart, slice.openEnd);
@@ -106,6 +145,24 @@ function scalarIn(scalar: string, rowIds: ReadonlyMap<string, string> | undefine
   const [first = "", ...others] = scalar.split("/");
   const fresh = rowIds?.get(first);
   return fresh === undefined ? scalar : [fresh, ...others].join("/");
+}
+
+/** Fields that name another block name its copy, when it is copied along. */
+function referring(
+  attrs: Node["attrs"],
+  fields: Columns,
+  blocks: ReadonlyMap<string, string>,
+): Readonly<Record<string, unknown>> {
+  return Object.fromEntries(
+    Object.entries(attrs as Readonly<Record<string, unknown>>).map(([name, value]) => [
+      name,
+      fields[name]?.refersTo && typeof value === "string" ? (blocks.get(value) ?? value) : value,
+    ]),
+  );
+}
+
+function sameRows(block: Node): ReadonlyMap<string, string> {
+  return new Map(block.children.map((row) => [textOf(row, "rowId"), textOf(row, "rowId")]));
 }
 
 function freshRows(block: Node, makeId: () => string): ReadonlyMap<string, string> {

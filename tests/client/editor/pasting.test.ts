@@ -71,6 +71,23 @@ describe("what is pasted", () => {
     expect(new Set(ids).size).toBe(4);
   });
 
+  it("keeps the identity of what was cut and is nowhere else, with its rows, so that pins hold", () => {
+    const pasted = withFreshIds(
+      slice(
+        premises("p", row("r1", cell("symbol", "Λ"))),
+        scaling("s", "p"),
+        schema.node("displayMath", { latex: "x", id: "e" }),
+        schema.node("displayMath", { latex: "y", id: "f" }),
+      ),
+      counting(),
+      (id) => id === "p" || id === "e",
+    );
+    expect(attributes(pasted, "premises")[0]?.["blockId"]).toBe("p");
+    expect(attributes(pasted, "row")[0]?.["rowId"]).toBe("r1");
+    expect(attributes(pasted, "scaling")[0]).toMatchObject({ blockId: "new-1", standsOn: "p" });
+    expect(attributes(pasted, "displayMath").map(({ id }) => id)).toEqual(["e", "new-2"]);
+  });
+
   it("loses links that are not safe and keeps their words", () => {
     const link = (href: string) => [schema.marks["link"]?.create({ href }) ?? schema.mark("bold")];
     const pasted = withoutUnsafeLinks(
@@ -95,6 +112,39 @@ describe("what is pasted", () => {
     expect(attributes(pasted, "inlineMath")).toEqual([{ latex: "a_1" }]);
     expect(attributes(pasted, "displayMath")).toMatchObject([{ latex: "E=mc^2" }]);
     expect(pasted.content.textBetween(0, pasted.content.size)).toBe("as , $5 or $7$x$");
+  });
+});
+
+describe("cutting and pasting in an editor", () => {
+  it("moves a block as itself once, and copies it from then on", () => {
+    const { editor } = onePerson();
+    editor.commands.setContent({
+      type: "doc",
+      content: [
+        { type: "scaling", attrs: { blockId: "s", title: "moved" } },
+        { type: "paragraph", content: [{ type: "text", text: "words" }] },
+      ],
+    });
+    editor.commands.setNodeSelection(0);
+    const html = editor.view.serializeForClipboard(editor.state.selection.content()).dom.innerHTML;
+    editor.view.dom.dispatchEvent(new Event("cut", { bubbles: true, cancelable: true }));
+    editor.commands.deleteSelection();
+    const ids = () => {
+      const found: unknown[] = [];
+      editor.state.doc.descendants((node) => {
+        if (node.type.name === "scaling") found.push(node.attrs["blockId"]);
+      });
+      return found;
+    };
+    expect(ids()).toEqual([]);
+    editor.commands.focus("end");
+    editor.view.pasteHTML(html);
+    expect(ids()).toEqual(["s"]);
+    editor.commands.setTextSelection(2);
+    editor.view.pasteHTML(html);
+    expect(ids()).toHaveLength(2);
+    expect(new Set(ids()).size).toBe(2);
+    editor.destroy();
   });
 });
 
