@@ -3,6 +3,7 @@ import { createServer as createHttpServer, type Server } from "node:http";
 import type { AddressInfo } from "node:net";
 import type { DestinationStream } from "pino";
 import { attachCollab } from "./collab/attach-collab.ts";
+import { startHousekeeping } from "./commands/keep-house.ts";
 import { openCompute } from "./compute/open-compute.ts";
 import type { Configuration } from "./configuration.ts";
 import { openDatabase } from "./data/database.ts";
@@ -79,6 +80,7 @@ export async function createServer(
     compact: compute.compact,
   });
   const mail = startMailSender(services);
+  const housekeeping = startHousekeeping(services);
 
   const stop = async () => {
     const closed = closeHttp(httpServer);
@@ -86,6 +88,7 @@ export async function createServer(
     await collab.stop();
     await closed;
     await compute.stop();
+    await housekeeping.stop();
     await mail.stop();
     await accessChanges.stop();
     await sessions.stop();
