@@ -27,6 +27,7 @@ export function FindStrip({ editor, world, onClose }: Props) {
       editor.view.dispatch(tr.setMeta(foundKey, { matches, current }).setMeta("addToHistory", false));
       const match = matches[current];
       if (match) bringIntoView(editor, match);
+      else unmarkEntry(editor);
     },
     [editor],
   );
@@ -42,7 +43,9 @@ export function FindStrip({ editor, world, onClose }: Props) {
   useEffect(() => {
     editor.registerPlugin(foundMarks(find));
     return () => {
-      if (!editor.isDestroyed) editor.unregisterPlugin(foundKey);
+      if (editor.isDestroyed) return;
+      unmarkEntry(editor);
+      editor.unregisterPlugin(foundKey);
     };
   }, [editor, find]);
   useLayoutEffect(() => {
@@ -129,7 +132,17 @@ function elementOf(editor: NotebookTools["editor"], match: Match): HTMLElement |
 }
 
 function bringIntoView(editor: NotebookTools["editor"], match: Match): void {
-  elementOf(editor, match)?.scrollIntoView({ block: "center" });
+  const element = elementOf(editor, match);
+  element?.scrollIntoView({ block: "center" });
+  unmarkEntry(editor);
+  if (match.in === "block") element?.setAttribute(FOUND_HERE, "");
+}
+
+/** On the entry of a block that one is at; React, which draws it, knows nothing of it. */
+const FOUND_HERE = "data-found-here";
+
+function unmarkEntry(editor: NotebookTools["editor"]): void {
+  for (const marked of editor.view.dom.querySelectorAll(`[${FOUND_HERE}]`)) marked.removeAttribute(FOUND_HERE);
 }
 
 /** Puts the caret there: on the text, or in the entry of the block. */

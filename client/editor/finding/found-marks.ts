@@ -31,11 +31,11 @@ export function foundMarks(refind: (doc: Node) => readonly Match[]): Plugin<Foun
         const { matches, current } = foundKey.getState(state) ?? nothing;
         return DecorationSet.create(
           state.doc,
-          matches.map((match, index) => {
+          matches.flatMap((match, index) => {
             const attributes = { class: index === current ? "found is-current" : "found" };
-            return match.in === "text"
-              ? Decoration.inline(match.from, match.to, attributes)
-              : Decoration.node(match.from, match.to, attributes);
+            if (match.in === "text") return [Decoration.inline(match.from, match.to, attributes)];
+            // A block is far more than the entry that was found in it; the entry itself is marked by who goes there.
+            return match.in === "atom" ? [Decoration.node(match.from, match.to, attributes)] : [];
           }),
         );
       },
