@@ -142,7 +142,8 @@ function bringIntoView(editor: NotebookTools["editor"], match: Match): void {
 const FOUND_HERE = "data-found-here";
 
 function unmarkEntry(editor: NotebookTools["editor"]): void {
-  for (const marked of editor.view.dom.querySelectorAll(`[${FOUND_HERE}]`)) marked.removeAttribute(FOUND_HERE);
+  for (const marked of editor.view.dom.querySelectorAll(`[${FOUND_HERE}]`))
+    marked.removeAttribute(FOUND_HERE);
 }
 
 /** Puts the caret there: on the text, or in the entry of the block. */
