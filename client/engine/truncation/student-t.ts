@@ -2,6 +2,7 @@
  * Two-sided quantiles of Student's t distribution for any real number of degrees of freedom.
  * Everything is done in w = ln(t²/ν), so that neither heavy tails nor small t lose digits.
  */
+import { betaFraction } from "./incomplete-beta.ts";
 
 /**
  * ln of Γ(a + ½)/Γ(a) for a > 0: the recurrence r(a) = r(a + 1)·a/(a + ½) up to a ≥ 20, then the asymptotic series,
@@ -18,27 +19,6 @@ function logGammaStep(a: number): number {
     0.5 * Math.log(x) -
     u * (1 / 8 - u2 * (1 / 192 - u2 * (1 / 640 - u2 * (17 / 14336 - (u2 * 31) / 18432))))
   );
-}
-
-/** Continued fraction of the incomplete beta function by Lentz's method (Abramowitz & Stegun 1964, 26.5.8). */
-function betaFraction(x: number, a: number, b: number): number {
-  const tiny = 1e-300;
-  const kept = (value: number) => (Math.abs(value) < tiny ? tiny : value);
-  let c = 1;
-  let d = 1 / kept(1 - ((a + b) * x) / (a + 1));
-  let fraction = d;
-  for (let m = 1; m < 20_000; m += 1) {
-    const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
-    d = 1 / kept(1 + even * d);
-    c = kept(1 + even / c);
-    fraction *= d * c;
-    const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
-    d = 1 / kept(1 + odd * d);
-    c = kept(1 + odd / c);
-    fraction *= d * c;
-    if (Math.abs(d * c - 1) < 5e-16) break;
-  }
-  return fraction;
 }
 
 /** Probability inside and outside ±t, each with its own relative accuracy; w = ln(t²/ν). */
