@@ -8,6 +8,8 @@
 import { defaultDeleteFilter, defaultProtectedNodes, ySyncPluginKey } from "@tiptap/y-tiptap";
 import * as Y from "yjs";
 import { FRAGMENT } from "#contract/collab.ts";
+import { cellNode, rowNode } from "#schema/block-structure.ts";
+import { isKindName } from "./blocks/block-elements.ts";
 
 /** Origin of a transaction that writes a block's field or rows: it becomes a step of its own in the history. */
 export const FIELD_ORIGIN = Object.freeze({ origin: "field" });
@@ -44,12 +46,21 @@ const overwrittenWords = {
   redo: "A colleague has changed this since, so your change was not made again. It has left your history.",
 } as const;
 
+const keptWords =
+  "A colleague has written in what you had placed, so it stays. Delete it by hand if you both mean to.";
+
 export function createHistory(doc: Y.Doc): NotebookHistory {
   const fragment = doc.getXmlFragment(FRAGMENT);
+  let hasKept = false;
   const manager = new Y.UndoManager(fragment, {
     trackedOrigins: new Set<unknown>([ySyncPluginKey, FIELD_ORIGIN]),
-    // A paragraph that a colleague has meanwhile written in stays.
-    deleteFilter: (item) => defaultDeleteFilter(item, defaultProtectedNodes),
+    // A paragraph, block or row that a colleague has meanwhile written in stays.
+    deleteFilter(item) {
+      if (!defaultDeleteFilter(item, defaultProtectedNodes)) return false;
+      if (!holdsWorkOfOthers(item, doc.clientID)) return true;
+      hasKept = true;
+      return false;
+    },
     captureTransaction: (transaction) => transaction.meta.get("addToHistory") !== false,
   });
   // An editor's plugin destroys the manager when its view goes, also one that was never shown (React builds some twice).
@@ -84,6 +95,7 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
     if (!newest) return "nothing";
     const older = manager[stackName].slice(0, -1);
     const before = shown();
+    hasKept = false;
     manager[stackName] = [newest];
     let applied: boolean;
     try {
@@ -95,7 +107,9 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
     const effective = applied && shown() !== before;
     if (applied && !effective) manager[direction === "undo" ? "redoStack" : "undoStack"].pop();
     manager.stopCapturing();
-    publish(effective ? null : overwrittenWords[direction]);
+    // The deletion filter, called by the manager, has set it meanwhile.
+    const kept = hasKept as boolean;
+    publish(kept ? keptWords : effective ? null : overwrittenWords[direction]);
     return effective ? "done" : "overwritten";
   }
 
@@ -124,4 +138,29 @@ export function createHistory(doc: Y.Doc): NotebookHistory {
       listeners.clear();
     },
   };
+}
+
+/** Whether an item is a block, a row or a value in which something was written by anyone but this client. */
+function holdsWorkOfOthers(item: Y.Item, own: number): boolean {
+  const element = elementIn(item);
+  if (!element) return false;
+  const { nodeName } = element;
+  const isInput = isKindName(nodeName) || nodeName === rowNode || nodeName === cellNode;
+  return isInput && isWrittenByOthers(element, own);
+}
+
+function isWrittenByOthers(element: Y.XmlElement, own: number): boolean {
+  const items = [...element._map.values()];
+  for (let item = element._start; item !== null; item = item.right) items.push(item);
+  return items.some((item) => {
+    if (item.deleted) return false;
+    const below = elementIn(item);
+    return item.id.client !== own || (below !== null && isWrittenByOthers(below, own));
+  });
+}
+
+function elementIn({ content }: Y.Item): Y.XmlElement | null {
+  if (!(content instanceof Y.ContentType)) return null;
+  const { type } = content;
+  return type instanceof Y.XmlElement ? (type as Y.XmlElement) : null; // Yjs types its attributes as any
 }

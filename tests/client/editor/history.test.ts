@@ -148,6 +148,36 @@ describe("the history of one person", () => {
     expect(otto.editor.getJSON()).toEqual(before);
   });
 
+  it("leaves a block that a colleague has written in, and says so", () => {
+    placeBlock(wren.editor, "premises");
+    otto.doc.transact(() => {
+      blockOf(otto).setAttribute("name", "Otto's");
+    }, FIELD_ORIGIN);
+    wren.history.undoOnce();
+    expect(wren.history.state().message?.text).toContain("so it stays");
+    expect(field(wren, "name")).toBe("Otto's");
+    expect(field(otto, "name")).toBe("Otto's");
+  });
+
+  it("leaves a row that a colleague has written in, with the block it is in", () => {
+    placeBlock(wren.editor, "premises");
+    const row = new Y.XmlElement("row");
+    wren.doc.transact(() => {
+      blockOf(wren).push([row]);
+      row.push([new Y.XmlElement("cell")]);
+    }, FIELD_ORIGIN);
+    otto.doc.transact(() => {
+      const theirs = blockOf(otto).get(0);
+      if (theirs instanceof Y.XmlElement) theirs.get(0).setAttribute("value", "chi");
+    }, FIELD_ORIGIN);
+    wren.history.undoOnce();
+    expect(wren.history.state().message?.text).toContain("so it stays");
+    wren.history.undoOnce();
+    expect(wren.history.state().message?.text).toContain("so it stays");
+    expect(blockOf(otto).toJSON()).toContain('value="chi"');
+    expect(blockOf(wren).toJSON()).toBe(blockOf(otto).toJSON());
+  });
+
   it("outlives the view of an editor", () => {
     const spare = onePerson(wren.doc, wren.history);
     spare.editor.destroy();
