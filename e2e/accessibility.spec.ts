@@ -98,8 +98,8 @@ test("a notebook is made, written in and given a block with the keyboard alone",
   await page.keyboard.type("By keyboard");
   await page.keyboard.press("Enter");
   await page.waitForURL("**/notebooks/*");
-  await expect(prose(page)).toBeVisible();
-  await tabTo(page, prose(page));
+  // A blank page waits for its first words.
+  await expect(prose(page)).toBeFocused();
   await page.keyboard.type("Written without a mouse.");
   await page.keyboard.press("Control+.");
   await page.keyboard.type("premises");

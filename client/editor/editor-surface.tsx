@@ -1,4 +1,5 @@
 /** The writing surface: the section scale, the margin tick, the writing bar and the document itself. */
+import type { Editor } from "@tiptap/core";
 import { EditorContent, useEditor } from "@tiptap/react";
 import { useEffect, useMemo, useState, useSyncExternalStore, type ReactNode } from "react";
 import type { StoredResult } from "#contract/api.ts";
@@ -71,6 +72,7 @@ function WritingSurface({ session, state, children }: Omit<EditorSurfaceProps, "
   }, [editor, readOnly]);
   useBlocksEditor(editor);
   useHistoryWords(session);
+  useCaretOnBlankPage(editor, readOnly);
   useEffect(() => (readOnly ? undefined : prepareInstruments()), [readOnly]);
 
   const notebook = useMemo<OpenNotebook>(() => ({ session, editor, readOnly }), [session, editor, readOnly]);
@@ -99,6 +101,17 @@ const writingProps = {
   scrollThreshold: room,
 };
 const readingProps = { attributes: { ...named, role: "document" } };
+
+/** Whoever opens a blank page means to write: the caret is there, unless the focus has gone somewhere by then. */
+function useCaretOnBlankPage(editor: Editor, readOnly: boolean): void {
+  useEffect(() => {
+    const { activeElement, body } = document;
+    const isFree = activeElement === null || activeElement === body || activeElement.id === "main";
+    if (!readOnly && editor.isEmpty && isFree) editor.commands.focus("start");
+    // Only when the page opens: a text that is emptied later asks for nothing.
+    // eslint-disable-next-line react-hooks/exhaustive-deps -- see above
+  }, [editor]);
+}
 
 /** Says when a step of the history had no effect any more. */
 function useHistoryWords({ history }: NotebookSession): void {
