@@ -24,6 +24,8 @@ export interface ColumnSpec {
   /** How the value of a row is understood, drawn while nobody is in the field. */
   readonly reading?: (row: BlockRow) => ReactNode;
   readonly notation?: boolean;
+  /** Takes pasted text apart into rows of this column, where it is more than one value; null leaves it as it is. */
+  readonly linesOf?: (text: string) => readonly string[] | null;
 }
 export interface ResultColumn {
   readonly heading: string;
@@ -76,9 +78,9 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
       setWanted({ rowId: block.addRow(table), column: firstColumn, caretAtEnd: false });
   }
   function pasteAt(rowId: string | null, column: string, text: string): boolean {
-    const lines = gridOf(text);
-    if (!lines || block.readOnly) return false;
     const from = columns.findIndex((spec) => spec.column === column);
+    const lines = columns[from]?.linesOf?.(text)?.map((line) => [line]) ?? gridOf(text);
+    if (!lines || block.readOnly) return false;
     block.paste({ table, rowId, columns: columns.slice(from).map((spec) => spec.column), lines });
     return true;
   }

@@ -2,6 +2,7 @@ import type { BlockRow } from "#engine/notebook/block-instance.ts";
 import type { PremisesValue } from "#engine/premises/value.ts";
 import { Formula } from "../../ui/math.tsx";
 import { Figure } from "../parts/figure.tsx";
+import { termsOf } from "./lagrangian-terms.ts";
 import { RowTable } from "../parts/row-table.tsx";
 
 type Term = PremisesValue["terms"][number];
@@ -21,7 +22,14 @@ export function TermsTable({ value }: { readonly value: PremisesValue | null }) 
       nameOf={(row) => row["term"] ?? ""}
       invitation="lambda/4! phi^4"
       columns={[
-        { column: "term", heading: "term, as typed", size: 24, placeholder: "lambda/4! phi^4" },
+        {
+          column: "term",
+          heading: "term, as typed",
+          size: 24,
+          placeholder: "lambda/4! phi^4",
+          // A table copied from a spreadsheet is one, whatever signs stand in it.
+          linesOf: (text) => (text.includes("\t") ? null : termsOf(text)),
+        },
         { column: "natural", heading: "ĝ", size: 5, placeholder: "1" },
         { column: "assigned", heading: "size by hand", size: 9, placeholder: "by dimension" },
         { column: "meaning", heading: "meaning", notation: false, size: 12 },
