@@ -1,11 +1,13 @@
 /** What the worker does, without the worker: keeps the blocks it was told of and answers what is new. */
 import type { Evaluation } from "#engine/evaluation.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
+import type { KindName } from "#engine/kind.ts";
 import {
-  evaluateNotebook,
+  evaluateBlocks,
+  type KindOf,
   type NotebookOutcome,
   type Postponed,
-} from "#engine/notebook/evaluate-notebook.ts";
+} from "#engine/notebook/evaluate-blocks.ts";
 import type { EvaluationAnswer, EvaluationRequest, ProgressReport } from "./evaluation-messages.ts";
 
 const MOST_REMEMBERED = 2000;
@@ -34,12 +36,19 @@ export function createMemo(most = MOST_REMEMBERED) {
 export interface EvaluationCore {
   /** Takes note of changes; computes nothing yet, so that a newer request supersedes an older one. */
   hear(request: EvaluationRequest): void;
+  /** The kinds of the blocks as last heard, for whoever has to fetch them first. */
+  kindsNeeded(): ReadonlySet<KindName>;
   /** Evaluates the state as last heard. */
   answer(): EvaluationAnswer;
 }
 
-/** @param onProgress told how far long work is, as often as the engine says it */
-export function createEvaluationCore(onProgress: (report: ProgressReport) => void): EvaluationCore {
+export interface EvaluationCoreOptions {
+  readonly kindOf: KindOf;
+  /** Told how far long work is, as often as the engine says it. */
+  readonly onProgress: (report: ProgressReport) => void;
+}
+
+export function createEvaluationCore({ kindOf, onProgress }: EvaluationCoreOptions): EvaluationCore {
   const memo = createMemo();
   const known = new Map<string, BlockInstance>();
   const answered = new Map<string, NotebookOutcome>();
@@ -60,11 +69,12 @@ export function createEvaluationCore(onProgress: (report: ProgressReport) => voi
       revision = request.revision;
       everything = request.everything === true;
     },
+    kindsNeeded: () => new Set([...known.values()].map(({ kind }) => kind)),
     answer() {
       const blocks = order.flatMap((id) => known.get(id) ?? []);
       const mistakes: string[] = [];
       const postponed: Postponed[] = [];
-      const outcomes = evaluateNotebook(blocks, {
+      const outcomes = evaluateBlocks(blocks, kindOf, {
         memo,
         onInternalError: (error, block) =>
           mistakes.push(

@@ -2,7 +2,7 @@
 import type { Evaluation } from "#engine/evaluation.ts";
 import type { Progress } from "#engine/kind.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
-import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-notebook.ts";
+import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-blocks.ts";
 
 export type KnownResult = readonly [key: string, evaluation: Evaluation];
 

@@ -3,7 +3,7 @@
  * Stopping ends the worker: the engine computes without looking up.
  */
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
-import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-notebook.ts";
+import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-blocks.ts";
 import { neededFor } from "#engine/notebook/references.ts";
 import type { LongWorkState } from "../../blocks/block-handle.ts";
 import type { WorkerLike } from "./evaluation-client.ts";

@@ -5,7 +5,7 @@
 import type { StoredResult } from "#contract/api.ts";
 import type { Evaluation } from "#engine/evaluation.ts";
 import { choosePremises } from "#engine/notebook/choose-premises.ts";
-import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-notebook.ts";
+import type { NotebookOutcome, Postponed } from "#engine/notebook/evaluate-blocks.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
 import { isLong, referencesOf } from "#engine/notebook/references.ts";
 import type { LongWorkState } from "../../blocks/block-handle.ts";

@@ -20,8 +20,8 @@ export function readPlainName(typed: string): Name | null {
 /**
  * A term with one symbol renamed, in whichever spelling it was written; the same text when it is not used or cannot be
  * read. Conjugates (psibar), derivatives written in one word (dphi) and indices go along.
- * @example renameInTerm("lambda/4! phi^4", phi, chi) // "lambda/4! chi^4"
- * @example renameInTerm("\\bar{\\psi}\\psi", psi, chi) // "\\bar{\\chi}\\chi"
+ * @example renameInTerm("lambda/4! phi^4", readPlainName("phi"), readPlainName("chi")) // "lambda/4! chi^4"
+ * @example renameInTerm("\\bar{\\psi}\\psi", readPlainName("psi"), readPlainName("chi")) // "\\bar{\\chi}\\chi"
  */
 export function renameInTerm(text: string, from: Name, to: Name): string {
   const tokens = tokenise(text, { measuredLiterals: false });
@@ -79,7 +79,7 @@ function spaced(replacement: string, next: string): string {
 /**
  * The LaTeX of prose with one symbol renamed: wherever its own spelling stands by itself. A name with another subscript
  * is another name; indices go along.
- * @example renameInLatex("\\phi^4 + \\phi_0 + \\varphi", phi, chi) // "\\chi^4 + \\phi_0 + \\varphi"
+ * @example renameInLatex("\\phi^4 + \\phi_0 + \\varphi", readPlainName("phi"), readPlainName("chi")) // "\\chi^4 + \\phi_0 + \\varphi"
  */
 export function renameInLatex(latex: string, from: Name, to: Name): string {
   const spellings = [nameLatex(from), ...lettersOf(from)].map((text) => {

@@ -1,7 +1,7 @@
 /** Evaluates one block afresh: in a worker of its own that has never seen a result, from the typed inputs alone. */
 import type { Progress } from "#engine/kind.ts";
 import type { BlockInstance } from "#engine/notebook/block-instance.ts";
-import type { NotebookOutcome } from "#engine/notebook/evaluate-notebook.ts";
+import type { NotebookOutcome } from "#engine/notebook/evaluate-blocks.ts";
 import { startEvaluationWorker, type WorkerLike } from "../../editor/evaluation/evaluation-client.ts";
 import { createLongWork } from "../../editor/evaluation/long-work.ts";
 

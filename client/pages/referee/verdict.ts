@@ -1,7 +1,7 @@
 /** Whether a block that was computed afresh says what is stored, and what the pin says. */
 import type { StoredResult } from "#contract/api.ts";
 import { roundFloat, type Evaluation } from "#engine/evaluation.ts";
-import type { NotebookOutcome } from "#engine/notebook/evaluate-notebook.ts";
+import type { NotebookOutcome } from "#engine/notebook/evaluate-blocks.ts";
 import { formatScalar, parsePinFormat } from "#engine/notebook/pin-format.ts";
 import type { PinAttributes } from "#schema/block-structure.ts";
 import { statusOf } from "../../editor/pins/pin-view-state.ts";

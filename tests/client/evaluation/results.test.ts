@@ -3,6 +3,7 @@ import * as Y from "yjs";
 import { FRAGMENT } from "#contract/collab.ts";
 import type { StoredResult } from "#contract/api.ts";
 import { ENGINE_VERSION } from "#engine/evaluation.ts";
+import { kinds } from "#engine/kinds.ts";
 import { readDocument } from "#engine/notebook/read-document.ts";
 import { evaluateNotebook } from "#engine/notebook/evaluate-notebook.ts";
 import { createBlockDirectory, type BlockDirectory } from "../../../client/editor/blocks/block-directory.ts";
@@ -178,7 +179,7 @@ describe("results", () => {
 
 describe("the worker", () => {
   it("computes only the newest of several states that arrive together", () => {
-    const core = createEvaluationCore(() => undefined);
+    const core = createEvaluationCore({ kindOf: (kind) => kinds[kind], onProgress: () => undefined });
     const blocks = directory.blocks();
     core.hear({ revision: 1, order: blocks.map(({ id }) => id), changed: blocks, known: [] });
     edit("apart", "q", "0.2");

@@ -1,4 +1,5 @@
 /** Does what the worker does, in the test's own thread, and answers later as a worker would. */
+import { kinds } from "#engine/kinds.ts";
 import { createEvaluationCore } from "../../../client/editor/evaluation/evaluation-core.ts";
 import type { WorkerLike } from "../../../client/editor/evaluation/evaluation-client.ts";
 import type { WorkerMessage } from "../../../client/editor/evaluation/evaluation-messages.ts";
@@ -8,7 +9,7 @@ export function workerInProcess(): WorkerLike {
   const say = (message: WorkerMessage) => {
     if (!ended) worker.onmessage?.(new MessageEvent("message", { data: structuredClone(message) }));
   };
-  const core = createEvaluationCore(say);
+  const core = createEvaluationCore({ kindOf: (kind) => kinds[kind], onProgress: say });
   const worker: WorkerLike = {
     onmessage: null,
     onerror: null,

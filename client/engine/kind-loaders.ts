@@ -1,0 +1,10 @@
+/** The block kinds of this version, each fetched when it is first needed: for the page's workers. See `kinds.ts`. */
+import type { BlockKind, KindName } from "./kind.ts";
+
+export const kindLoaders: Readonly<Record<KindName, () => Promise<BlockKind>>> = {
+  premises: async () => (await import("./premises/kind.ts")).premises,
+  scaling: async () => (await import("./scaling/kind.ts")).scaling,
+  divergence: async () => (await import("./divergence/kind.ts")).divergence,
+  orderPlan: async () => (await import("./plan/kind.ts")).orderPlan,
+  truncationError: async () => (await import("./truncation/kind.ts")).truncationError,
+};
