@@ -2,6 +2,7 @@
 import { describe, expect, test } from "vitest";
 import * as Y from "yjs";
 import { closeCode, FRAGMENT } from "../../../client/contract/collab.ts";
+import { SCHEMA_VERSION } from "#schema/version.ts";
 import { openDatabase, rows } from "../../../server/data/database.ts";
 import { connectionLost, setSlowStage } from "./slow-stage.ts";
 import { until } from "./until.ts";
@@ -110,7 +111,7 @@ describe("another process writes too", () => {
       notebookId,
       after: await last(),
       updates: [{ update: Y.encodeStateAsUpdate(elsewhere, before), personId: stage.ben.id }],
-      schema: { lowest: 1, highest: 1 },
+      schema: { lowest: SCHEMA_VERSION, highest: SCHEMA_VERSION },
     });
     expect(outcome!.stored).toBe(true);
     const third = await stage.write(stage.cleo, notebookId);
@@ -132,7 +133,7 @@ describe("another process writes too", () => {
           notebookId,
           after,
           updates: [{ update: Y.encodeStateAsUpdate(document), personId: stage.ada.id }],
-          schema: { lowest: 1, highest: 1 },
+          schema: { lowest: SCHEMA_VERSION, highest: SCHEMA_VERSION },
         });
         after = outcome!.lastSeq;
         if (outcome!.stored) count += 1;
