@@ -16,7 +16,18 @@ export default defineConfig({
     target: "es2022",
     chunkSizeWarningLimit: 900,
   },
-  worker: { format: "es" },
+  // A kind's computation is a chunk of its own, by whose name the budgets know it.
+  worker: {
+    format: "es",
+    rolldownOptions: {
+      output: {
+        chunkFileNames({ facadeModuleId, name }) {
+          const kind = /engine\/(\w+)\/kind\.ts$/.exec(facadeModuleId ?? "")?.[1];
+          return `assets/worker-${kind === undefined ? name : `kind-${kind}`}-[hash].js`;
+        },
+      },
+    },
+  },
   test: {
     projects: [
       {

@@ -1,5 +1,6 @@
 /** Reads of a Vite build what a page fetches. */
-import { readdirSync } from "node:fs";
+import { readdirSync, readFileSync } from "node:fs";
+import { join } from "node:path";
 
 interface Chunk {
   readonly file: string;
@@ -34,4 +35,17 @@ export function loadsOf(manifest: Manifest, module: RegExp): ReadonlySet<string>
 
 export function filesNamed(folder: string, name: RegExp): readonly string[] {
   return readdirSync(folder).filter((file) => name.test(file));
+}
+
+/** A worker's chunks are in no manifest: the files in a folder that some need to start, by what they import at once. */
+export function startOf(folder: string, files: readonly string[]): ReadonlySet<string> {
+  const seen = new Set<string>();
+  const visit = (file: string) => {
+    if (seen.has(file)) return;
+    seen.add(file);
+    const source = readFileSync(join(folder, file), "utf8");
+    for (const [, next = ""] of source.matchAll(/(?:\bfrom|\bimport)\s*"\.\/([^"]+\.js)"/g)) visit(next);
+  };
+  files.forEach(visit);
+  return seen;
 }
