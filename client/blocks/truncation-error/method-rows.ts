@@ -31,13 +31,19 @@ export function methodRows(bands: readonly Band[], highlighted: Band | null): Me
 const shortNames: Readonly<Record<Method, string>> = {
   "conjugate prior": "conjugate",
   "uniform prior": "uniform",
+  "prior set A": "setA",
+  "prior set B": "setB",
+  "prior set C": "setC",
   "first omitted term": "first-omitted",
   "differences of orders": "differences",
+  "correlated along x": "correlated",
 };
 
 /** `Scalar.id` of a band of the last order, as engine/truncation/scalars.ts names it. */
 export function bandScalar({ method, omitted, degree }: Band): string {
-  const first = method === "conjugate prior" && omitted === "first omitted term" ? "-first" : "";
+  const hasUsual =
+    method !== "first omitted term" && method !== "uniform prior" && method !== "differences of orders";
+  const first = hasUsual && omitted === "first omitted term" ? "-first" : "";
   const all = method === "first omitted term" && omitted === "all omitted orders" ? "-all" : "";
   return `${shortNames[method]}${first}${all}${degree === null ? "" : `/${degree}`}`;
 }
@@ -54,11 +60,24 @@ export function assumptionOf(
       return `coefficients normal about 0, $\\nu_0 = ${numberIn(fields["nu0"])}$, $\\tau_0 = ${numberIn(fields["tau0"])}$; ${what}`;
     case "uniform prior":
       return `coefficients bounded, their scale unknown; ${what}`;
+    case "prior set A":
+      return `coefficients bounded by $\\bar c$ from ${numberIn(fields["cbarLow"])} to ${numberIn(fields["cbarHigh"])}; ${several(fields, what)}`;
+    case "prior set B":
+      return `coefficients bounded by $\\bar c$ near 1, $\\sigma = ${numberIn(fields["cbarWidth"])}$; ${several(fields, what)}`;
+    case "prior set C":
+      return `coefficients normal, $\\bar c$ from ${numberIn(fields["cbarLow"])} to ${numberIn(fields["cbarHigh"])}; ${several(fields, what)}`;
+    case "correlated along x":
+      return `coefficients normal and alike over a length in $x$; ${what}`;
     case "first omitted term":
       return `the largest coefficient so far repeats; ${what}`;
     case "differences of orders":
       return "shifts between orders shrink by $Q$";
   }
+}
+
+function several(fields: Readonly<Record<string, string>>, what: string): string {
+  const terms = (fields["terms"] ?? "").trim();
+  return terms === "" || terms === "1" ? what : `${terms} orders summed`;
 }
 
 function numberIn(text: string | undefined): string {

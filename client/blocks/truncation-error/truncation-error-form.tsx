@@ -1,5 +1,8 @@
 import { methods, omittedChoices } from "#engine/truncation/shape.ts";
+import { AlongForm } from "./along-form.tsx";
+import { SetsForm } from "./sets-form.tsx";
 import { ChoiceField } from "../parts/choice-field.tsx";
+import { ReferenceField } from "../parts/reference-field.tsx";
 import { RowTable } from "../parts/row-table.tsx";
 import { TextField } from "../parts/text-field.tsx";
 
@@ -19,6 +22,12 @@ export function TruncationErrorForm() {
         ]}
       />
       <div className="block-settings">
+        <ReferenceField
+          place={{ field: "data" }}
+          label="predictions along x from"
+          showLabel
+          none="the orders typed here"
+        />
         <TextField
           place={{ field: "quantity" }}
           label="X is"
@@ -50,6 +59,8 @@ export function TruncationErrorForm() {
         <ChoiceField place={{ field: "omitted" }} label="estimates" showLabel options={omittedChoices} />
         <TextField place={{ field: "nu0" }} label="prior ν₀" showLabel size={4} />
         <TextField place={{ field: "tau0" }} label="prior τ₀" showLabel size={4} />
+        <SetsForm />
+        <AlongForm />
       </div>
     </div>
   );

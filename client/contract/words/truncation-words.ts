@@ -59,4 +59,70 @@ export const truncationWords: Words = {
     "All coefficients used are zero, so some methods find nothing left out. That is rarely true.",
   "variance-infinite": ({ nu }) =>
     `With ν = ${said(nu)} the distribution of the error has no finite variance: its tails are heavy, so quote an interval, not a standard deviation.`,
+  "cbar-unreadable": ({ text }) =>
+    `${quoted(text)} is not a limit or width of the prior sets: enter a number above 0.`,
+  "cbar-limits-reversed": ({ text, low }) =>
+    `The upper limit of c̄ is ${quoted(text)}, but must lie above the lower one, ${said(low)}.`,
+  "terms-unreadable": ({ text, most }) =>
+    `${quoted(text)} is not a number of omitted terms. Enter a whole number from 1 to ${said(most)}, or nothing for what is estimated.`,
+  "cbar-excluded": ({ largest, high }) =>
+    `A coefficient is ${said(largest)}, which a c̄ of at most ${said(high)} does not allow. Raise the upper limit of c̄.`,
+  "correlated-needs-data": () =>
+    "The correlated model needs predictions along x. Choose a Data block, or another method.",
+  "curve-empty": () =>
+    "The data have no points, or no column of predictions with an order. Give one column the role x, and others the role of an order.",
+  "orders-beside-data": () =>
+    "The orders typed here are not used: the predictions come from the Data block. Remove one of the two.",
+  "variable-unreadable": ({ text }) =>
+    `${quoted(text)} cannot be the name of x in Q. Use one symbol that is no unit, such as p.`,
+  "x-unit-unreadable": ({ text }) =>
+    `${quoted(text)}, the unit of x, is not a unit that Q can be computed with. Use MeV, GeV, fm or another known one, or none.`,
+  "q-needs-heavy": () =>
+    "Q is left empty, so it is x over the heavy scale; the premises need exactly one heavy scale. Or enter Q.",
+  "q-not-positive-at": ({ value, x }) =>
+    `Q is ${said(value)} at x = ${said(x)}. An expansion parameter must be above 0 at every point.`,
+  "breakdown-unknown": ({ text }) =>
+    `${quoted(text)} is not a scale of the premises with a value, so it cannot be estimated.`,
+  "breakdown-not-in-q": () =>
+    "Q does not depend on a heavy scale, so no breakdown scale is estimated. Write Q with it, as in p/Lambda.",
+  "breakdown-limit-unreadable": ({ text, unit }) =>
+    `${quoted(text)} is not a limit for the breakdown scale. Enter a number above 0 in ${said(unit)}, or a value with its unit.`,
+  "breakdown-limits-reversed": ({ from }) =>
+    `The upper limit of the breakdown scale must lie above the lower one, ${said(from)}.`,
+  "breakdown-width-unreadable": ({ text }) =>
+    `${quoted(text)} is not the width of a normal prior in the logarithm. Enter a number above 0, such as 0.5.`,
+  "breakdown-at-limit": ({ end }) =>
+    `The posterior of the breakdown scale is cut off by its prior (${said(end)} end): it says where the prior ends, not where the theory does. Widen the limits, or read it as a bound.`,
+  "at-unreadable": ({ text, least, most }) =>
+    `${quoted(text)} is not an x of the data. Enter a number from ${said(least)} to ${said(most)}.`,
+  "point-incomplete": ({ x }) =>
+    `At x = ${said(x)} an order between known ones is missing, or the reference is missing or 0. Choose another x for the comparison.`,
+  "points-incomplete": ({ points, count }) =>
+    `${said(points)} of ${said(count)} points lack an order or a reference. There the bands stop at the orders known, and the correlated model leaves them out.`,
+  "reference-vanishes": ({ points, count }) =>
+    `The reference is 0 at ${said(points)} of ${said(count)} points, where no coefficient exists. They are left out; a reference column, or a number, avoids it.`,
+  "q-beyond-one-along": ({ points, count, from, to }) =>
+    `Q is not below 1 at ${said(points)} of ${said(count)} points, from x = ${said(from)} to ${said(to)}. Sums over omitted orders do not exist there, and the correlated model leaves these points out.`,
+  "observable-twice": () =>
+    "This observable is the block's own data: each may count once in the joint posterior.",
+  "correlated-without-coefficients": () =>
+    "No order gives a coefficient along x, so there is nothing to correlate. Add an order to the data.",
+  "correlated-few-points": ({ points, fewest }) =>
+    `Only ${said(points)} points have all orders and Q below 1; a length scale needs at least ${said(fewest)}.`,
+  "correlated-all-zero": () =>
+    "All coefficients are zero at every point, so they have neither size nor length scale.",
+  "length-unreadable": ({ text }) =>
+    `${quoted(text)} is not a length scale. Enter a number above 0 in the unit of x, or nothing to estimate it.`,
+  "nugget-unreadable": ({ text, largest }) =>
+    `${quoted(text)} is not a nugget. Enter a number above 0 and at most ${said(largest)}, or nothing to take it from the digits of the data.`,
+  "points-thinned": ({ points, count, length }) =>
+    `The correlated model is fitted to ${said(points)} of ${said(count)} points. With ℓ near ${said(length)} the others lie too close to them to say more than rounding does; the bands use all.`,
+  "length-not-resolved": ({ length, spacing }) =>
+    `The length scale comes out at ${said(length)}, no larger than the distance of the points, ${said(spacing)}: they are too few to resolve it, and count as independent.`,
+  "length-beyond-range": () =>
+    "The length scale may exceed the range of x: the coefficients look the same at all points, which then say little more than one.",
+  "kernel-regularised": ({ asked, nugget, condition }) =>
+    `The correlation matrix was too ill-conditioned for a nugget of ${said(asked)}; ${said(nugget)} was added to its diagonal instead, for a condition number of ${said(condition)}.`,
+  "values-rounded": ({ nugget }) =>
+    `Rounding of the data is seen in their coefficients: an independent part of ${said(nugget)} of their variance is allowed for. More digits in the data would help.`,
 };

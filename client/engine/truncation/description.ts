@@ -1,6 +1,6 @@
 /** What the Truncation error block is and takes, without its computation: forms and documents need no more. */
 import type { BlockDescription } from "../kind.ts";
-import { truncationShape } from "./shape.ts";
+import { isPriorSet, setChoices, truncationShape } from "./shape.ts";
 
 export const truncationErrorDescription: BlockDescription<typeof truncationShape> = {
   kind: "truncationError",
@@ -8,4 +8,7 @@ export const truncationErrorDescription: BlockDescription<typeof truncationShape
   purpose: "Estimate what the omitted orders may amount to, from predictions order by order.",
   shape: truncationShape,
   premises: "optional",
+  // One point is quick; fits along x, and numerical integrals at each x, are not.
+  long: ({ data, method, sets }) =>
+    data !== "" && (method === "correlated along x" || sets === setChoices[1] || isPriorSet(method)),
 };

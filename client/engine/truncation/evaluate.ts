@@ -1,14 +1,21 @@
 /** Evaluates a Truncation error block: coefficients, the four estimates at every order, scalars and working. */
 import type { Evaluation, Notice, Problem } from "../evaluation.ts";
+import type { EvaluationContext } from "../kind.ts";
 import type { Theory } from "../premises/theory.ts";
+import { readCurve } from "./curve.ts";
+import type { CurveSource } from "./curve-data.ts";
+import { curveDataOf } from "./curve-source.ts";
 import { readExpansionParameter } from "./expansion-parameter.ts";
 import { judge } from "./judge.ts";
 import { presentValue } from "./present.ts";
+import { presentCurve } from "./present-curve.ts";
 import { readOrders } from "./read-orders.ts";
 import { readSettings } from "./read-settings.ts";
 import { describeScalars } from "./scalars.ts";
+import { describeCurveScalars } from "./scalars-curve.ts";
 import { estimateSeries, type Series } from "./series.ts";
 import { rememberQuantiles } from "./student-t.ts";
+import { rememberSums } from "./uniform-sum.ts";
 import type { TruncationInputs } from "./shape.ts";
 import type { TruncationValue } from "./value.ts";
 import { describeWorking } from "./working.ts";
@@ -22,7 +29,12 @@ import { describeWorking } from "./working.ts";
 export function evaluateTruncation(
   inputs: TruncationInputs,
   theory: Theory | null,
+  context: EvaluationContext,
 ): Evaluation<TruncationValue> {
+  return inputs.data === "" ? evaluatePoint(inputs, theory) : evaluateCurve(inputs, theory, context);
+}
+
+function evaluatePoint(inputs: TruncationInputs, theory: Theory | null): Evaluation<TruncationValue> {
   const orders = readOrders(inputs.orders);
   const settings = readSettings(inputs);
   const parameter = readExpansionParameter(inputs.q, theory);
@@ -41,12 +53,15 @@ export function evaluateTruncation(
   const series: Series = {
     known: orders.known,
     absent: orders.absent.map(({ order }) => order),
+    absentRows: orders.absent,
     reference: settings.reference,
     includeOrderZero: inputs.first === "from c_0",
     degrees: settings.degrees,
     nu0: settings.nu0,
     tau0: settings.tau0,
     quantiles: rememberQuantiles(),
+    sets: settings.sets && { ...settings.sets, sums: rememberSums() },
+    spreadAlong: null,
   };
   const { q } = parameter;
   const estimate = estimateSeries(series, q.value);
@@ -60,8 +75,48 @@ export function evaluateTruncation(
     problems: verdict.problems,
     notices: [...notices, ...verdict.notices],
     scalars: describeScalars(value),
-    working: describeWorking(value, series),
+    working: describeWorking(value, series, inputs),
   };
+}
+
+function evaluateCurve(
+  inputs: TruncationInputs,
+  theory: Theory | null,
+  context: EvaluationContext,
+): Evaluation<TruncationValue> {
+  const settings = readSettings(inputs);
+  const sources = sourcesOf(inputs, context);
+  if (settings.problems.length > 0) return empty(settings.problems, settings.notices);
+  const read = readCurve(inputs, settings, theory, sources, context.tell);
+  const before = [...settings.notices, ...read.notices];
+  if (!read.curve) return empty(read.problems, before);
+  const { curve } = read;
+  const point = presentValue(inputs, curve.series, curve.at, curve.estimate);
+  const along = presentCurve(inputs, curve);
+  const value: TruncationValue = {
+    ...point,
+    unit: point.unit === "" ? curve.data.unit : point.unit,
+    curve: along,
+  };
+  const verdict = judge(inputs, curve.series, curve.at, value);
+  return {
+    value,
+    problems: [...read.problems, ...verdict.problems],
+    notices: [...before, ...verdict.notices],
+    scalars: [...describeScalars(value), ...describeCurveScalars(along)],
+    working: describeWorking(value, curve.series, inputs),
+  };
+}
+
+/** Blocks that cannot be used are left out: the evaluator has said why. */
+function sourcesOf(inputs: TruncationInputs, context: EvaluationContext): ReadonlyMap<string, CurveSource> {
+  const sources = new Map<string, CurveSource>();
+  for (const id of [inputs.data, ...inputs.observables.map(({ data }) => data)]) {
+    const source = id === "" ? null : context.source(id);
+    const data = source && curveDataOf(source);
+    if (source && data) sources.set(id, { name: source.title, data });
+  }
+  return sources;
 }
 
 function empty(problems: readonly Problem[], notices: readonly Notice[]): Evaluation<TruncationValue> {

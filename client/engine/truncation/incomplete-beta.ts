@@ -36,7 +36,7 @@ export function betaFraction(x: number, a: number, b: number): number {
 
 /**
  * I_x(a, b) and 1 − I_x(a, b), the smaller of them with its own relative accuracy; 0 ≤ x ≤ 1, a, b > 0.
- * @example incompleteBeta(0.5, 2, 3).below // 0.6875
+ * @example incompleteBeta(0.4, 2.5, 1.5).below // 0.17392…
  */
 export function incompleteBeta(x: number, a: number, b: number): { below: number; above: number } {
   if (x <= 0) return { below: 0, above: 1 };
@@ -55,7 +55,7 @@ export function incompleteBeta(x: number, a: number, b: number): { below: number
  * squared Mahalanobis distance of N values of a Student-t process. For ν → ∞ it is χ² with N degrees of freedom.
  * Source: Bastos, O'Hagan 2009, Technometrics 51, 425, equation 16.
  *
- * @example mahalanobisTail(6.3886, 1, 4) // 0.06486…
+ * @example mahalanobisTail(6.3886, 1, 4) // 0.06483…
  */
 export function mahalanobisTail(squared: number, count: number, nu: number): number {
   return incompleteBeta(squared / (nu + squared), count / 2, nu / 2).above;

@@ -8,7 +8,7 @@ import {
   type Series,
   type SeriesEstimate,
 } from "./series.ts";
-import type { Method, Omitted, TruncationInputs } from "./shape.ts";
+import { isPriorSet, type Method, type Omitted, type TruncationInputs } from "./shape.ts";
 import type { Band, Coefficient, OrderEstimate, TruncationValue } from "./value.ts";
 
 export function presentValue(
@@ -19,7 +19,9 @@ export function presentValue(
 ): TruncationValue {
   const moved =
     q.sigma > 0
-      ? [q.value - q.sigma, q.value + q.sigma].filter((at) => at > 0).map((at) => estimateSeries(series, at))
+      ? [q.value - q.sigma, q.value + q.sigma]
+          .filter((at) => at > 0)
+          .map((at) => estimateSeries({ ...series, spreadAlong: null }, at))
       : [];
   const orders = estimate.orders.map((at, index) =>
     presentOrder(
@@ -27,18 +29,25 @@ export function presentValue(
       moved.flatMap((other) => other?.orders[index] ?? []),
     ),
   );
-  const squared = estimateSeries(series, q.value ** 2)?.orders.at(-1);
+  const squared = estimateSeries({ ...series, spreadAlong: null }, q.value ** 2)?.orders.at(-1);
   return {
     unit: inputs.unit.trim(),
     reference: roundFloat(estimate.reference),
     q: { value: roundFloat(q.value), sigma: roundFloat(q.sigma), latex: q.latex },
     degrees: series.degrees,
-    coefficients: presentCoefficients(inputs, estimate),
+    coefficients: presentCoefficients(series, estimate),
     orders,
     highlighted: highlightedBand(inputs, orders.at(-1)),
     rescaled: squared
       ? { q: roundFloat(q.value ** 2), bands: squared.bands.map((band) => presentBand(band, [])) }
       : null,
+    sets: series.sets && {
+      low: series.sets.low,
+      high: series.sets.high,
+      sigma: series.sets.sigma,
+      terms: series.sets.terms,
+    },
+    curve: null,
   };
 }
 
@@ -66,15 +75,15 @@ function isSame(a: PlainBand, b: PlainBand): boolean {
   return a.method === b.method && a.omitted === b.omitted && a.degree === b.degree;
 }
 
-/** In the order of the table's rows by rising n; orders absent by symmetry carry null. */
-function presentCoefficients(inputs: TruncationInputs, estimate: SeriesEstimate): Coefficient[] {
+/** By rising n; orders absent by symmetry carry null. */
+function presentCoefficients(series: Series, estimate: SeriesEstimate): Coefficient[] {
   const byOrder = new Map(estimate.coefficients.map((coefficient) => [coefficient.order, coefficient]));
-  return inputs.orders
-    .map(({ id, order }) => {
-      const found = byOrder.get(Number(order));
+  return [...series.known, ...series.absentRows]
+    .map(({ rowId, order }) => {
+      const found = byOrder.get(order);
       return {
-        rowId: id,
-        order: Number(order),
+        rowId,
+        order,
         value: found ? roundFloat(found.value) : null,
         used: found?.used ?? false,
       };
@@ -82,14 +91,16 @@ function presentCoefficients(inputs: TruncationInputs, estimate: SeriesEstimate)
     .sort((a, b) => a.order - b.order);
 }
 
-/** What the methods can estimate in closed form; the others only estimate the first omitted term. */
-export function omittedOf(method: Method, wanted: Omitted): Omitted {
-  return method === "conjugate prior" || method === "first omitted term" ? wanted : "first omitted term";
+/** What a method can estimate; some only estimate the first omitted term. */
+export function omittedOf(method: Method, inputs: Pick<TruncationInputs, "omitted" | "terms">): Omitted {
+  const wanted = inputs.omitted as Omitted; // a choice of the shape
+  if (method === "uniform prior" || method === "differences of orders") return "first omitted term";
+  if (!isPriorSet(method) || inputs.terms.trim() === "") return wanted;
+  return inputs.terms.trim() === "1" ? "first omitted term" : "all omitted orders";
 }
 
 function highlightedBand(inputs: TruncationInputs, last: OrderEstimate | undefined): Band | null {
-  // `method` and `omitted` are choices of the shape, so their text is one of these.
-  const method = inputs.method as Method;
-  const omitted = omittedOf(method, inputs.omitted as Omitted);
+  const method = inputs.method as Method; // a choice of the shape
+  const omitted = omittedOf(method, inputs);
   return last?.bands.find((band) => band.method === method && band.omitted === omitted) ?? null;
 }

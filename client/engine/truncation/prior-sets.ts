@@ -5,7 +5,7 @@
  *   C: c_n normal with width c̄, ln c̄ uniform between limits
  */
 import { normalCoverage } from "./incomplete-beta.ts";
-import { panelNodes, type Node } from "./panels.ts";
+import { integrate } from "./panels.ts";
 import type { UniformSum } from "./uniform-sum.ts";
 
 export type PriorSet = "A" | "B" | "C";
@@ -36,7 +36,7 @@ export interface OmittedSum {
 }
 
 /** Beyond this many e-folds below its largest value the posterior of c̄ adds nothing. */
-const DEPTH = 36;
+const DEPTH = 32;
 
 /**
  * Half-width of the central interval in units of |X_ref|. Null when the data exclude the prior: set A with a
@@ -55,56 +55,50 @@ export function priorSetHalfWidth(
   const posterior = scalePosterior(set, evidence, limits);
   if (!posterior) return null;
   const { width, uniform } = omitted;
-  if (set !== "C") {
-    const given = (d: number) => (scale: number) => uniform.coverage(d / scale);
-    // The coverage of a bounded sum bends where c̄ times the bound is d, and the panels end there.
-    const bends = (d: number) => uniform.bends.map((bend) => Math.log(d / bend));
-    return solve((d) => posterior.mean(given(d), bends(d)), probability, posterior.typical * uniform.reach);
-  }
-  const nodes = posterior.nodes([]);
-  const believed = (d: number) => {
-    let sum = 0;
-    for (const { at, weight } of nodes) sum += weight * normalCoverage(d / (at * width));
-    return sum;
-  };
-  return solve(believed, probability, posterior.typical * width);
+  const believed =
+    set === "C"
+      ? (d: number) => posterior.mean((scale) => normalCoverage(d / (scale * width)), [])
+      : // The coverage of a bounded sum bends where c̄ times the bound is d, and the panels end there.
+        (d: number) =>
+          posterior.mean(
+            (scale) => uniform.coverage(d / scale),
+            uniform.bends.map((bend) => d / bend),
+          );
+  return solve(believed, probability, posterior.typical * (set === "C" ? width : uniform.reach));
 }
 
-/** The posterior of c̄, to be integrated with. */
+/** The posterior of c̄, to be averaged over. */
 interface ScalePosterior {
   /** About its middle. */
   readonly typical: number;
-  /** Nodes in c̄, their weights adding up to 1; panels end at the given values of ln c̄. */
-  nodes(bends: readonly number[]): readonly Node[];
+  /** The mean of a function of c̄ that is smooth but at the given values. */
   mean(given: (scale: number) => number, bends: readonly number[]): number;
 }
 
+/** No panel in ln c̄ is wider. */
+const PANEL = 1.8;
+
 function scalePosterior(set: PriorSet, evidence: Evidence, limits: ScaleLimits): ScalePosterior | null {
-  const { count, squares } = evidence;
+  const { count, largest, squares } = evidence;
   const logDensity = (u: number) =>
     -count * u -
     (set === "C" ? (squares / 2) * Math.exp(-2 * u) : 0) -
     (set === "B" ? (u * u) / (2 * limits.sigma ** 2) : 0);
   const [from, to] = range(set, evidence, limits);
-  if (!(to > from)) return null;
+  if (!(to > from) || (set !== "C" && to <= Math.log(largest))) return null;
   const peak = peakOf(set, count, squares, limits.sigma, from, to);
   const top = logDensity(peak);
   const low = edge(logDensity, top, peak, from);
   const high = edge(logDensity, top, peak, to);
-  const unnormalised = (bends: readonly number[]) => {
-    const cuts = [low, peak, high, ...bends.filter((bend) => bend > low && bend < high)].sort(
-      (a, b) => a - b,
-    );
-    return cuts
-      .flatMap((cut, index) => panelNodes(cut, cuts[index + 1] ?? cut, 1))
-      .map(({ at, weight }) => ({ at: Math.exp(at), weight: weight * Math.exp(logDensity(at) - top) }));
+  const over = (given: (scale: number) => number, bends: readonly number[]) => {
+    const inside = bends.map(Math.log).filter((bend) => bend > low && bend < high);
+    const cuts = [low, peak, high, ...inside].sort((a, b) => a - b);
+    const weighted = (u: number) => Math.exp(logDensity(u) - top) * given(Math.exp(u));
+    return cuts.reduce((sum, cut, index) => sum + integrate(weighted, cuts[index - 1] ?? cut, cut, PANEL), 0);
   };
-  const total = unnormalised([]).reduce((sum, { weight }) => sum + weight, 0);
-  const nodes = (bends: readonly number[]) =>
-    unnormalised(bends).map(({ at, weight }) => ({ at, weight: weight / total }));
-  const mean = (given: (scale: number) => number, bends: readonly number[]) =>
-    nodes(bends).reduce((sum, { at, weight }) => sum + weight * given(at), 0);
-  return { typical: Math.exp(mean(Math.log, [])), nodes, mean };
+  const total = over(() => 1, []);
+  const mean = (given: (scale: number) => number, bends: readonly number[]) => over(given, bends) / total;
+  return { typical: Math.exp(mean(Math.log, [])), mean };
 }
 
 /** Where ln c̄ may lie: a uniform c_n needs c̄ ≥ |c_n|. */

@@ -1,8 +1,8 @@
 /** Reads the single fields of the block other than the expansion parameter. */
 import type { Notice, Problem } from "../evaluation.ts";
 import { readNumber } from "./read-orders.ts";
-import type { TruncationInputs } from "./shape.ts";
-import type { Degree } from "./value.ts";
+import { isPriorSet, setChoices, type TruncationInputs } from "./shape.ts";
+import type { Degree, PriorSettings } from "./value.ts";
 
 const MOST_DEGREES = 6;
 /** Larger priors would only repeat the normal distribution, and the quantile is tested up to here. */
@@ -14,9 +14,13 @@ export interface Settings {
   readonly tau0: number;
   /** X_ref as given; null stands for the value of the lowest order. */
   readonly reference: number | null;
+  /** Null when no prior set is asked for. */
+  readonly sets: PriorSettings | null;
   readonly problems: readonly Problem[];
   readonly notices: readonly Notice[];
 }
+
+const MOST_TERMS = 60;
 
 export function readSettings(inputs: TruncationInputs): Settings {
   const problems: Problem[] = [];
@@ -48,5 +52,27 @@ export function readSettings(inputs: TruncationInputs): Settings {
   if (reference !== null && Number.isNaN(reference))
     wrong("reference-unreadable", "reference", inputs.reference);
   if (reference === 0) wrong("reference-zero", "reference", inputs.reference);
-  return { degrees, nu0, tau0, reference, problems, notices };
+  const sets = wantsSets(inputs) ? readSets(inputs, wrong) : null;
+  return { degrees, nu0, tau0, reference, sets, problems, notices };
+}
+
+function wantsSets({ sets, method }: TruncationInputs): boolean {
+  return sets === setChoices[1] || isPriorSet(method);
+}
+
+type Wrong = (code: string, field: string, text: string, facts?: Record<string, string | number>) => unknown;
+
+function readSets(inputs: TruncationInputs, wrong: Wrong): PriorSettings {
+  const positive = (field: "cbarLow" | "cbarHigh" | "cbarWidth") => {
+    const value = readNumber(inputs[field])?.toFloat() ?? NaN;
+    if (!(value > 0)) wrong("cbar-unreadable", field, inputs[field]);
+    return value;
+  };
+  const [low, high, sigma] = [positive("cbarLow"), positive("cbarHigh"), positive("cbarWidth")];
+  if (low >= high) wrong("cbar-limits-reversed", "cbarHigh", inputs.cbarHigh, { low });
+  const typed = inputs.terms.trim();
+  const terms = typed === "" ? null : /^\d{1,3}$/.test(typed) ? Number(typed) : 0;
+  if (terms !== null && (terms < 1 || terms > MOST_TERMS))
+    wrong("terms-unreadable", "terms", inputs.terms, { most: MOST_TERMS });
+  return { low, high, sigma, terms };
 }

@@ -6,8 +6,12 @@ import type { Band, OrderEstimate, TruncationValue } from "./value.ts";
 const shortNames: Readonly<Record<Method, string>> = {
   "conjugate prior": "conjugate",
   "uniform prior": "uniform",
+  "prior set A": "setA",
+  "prior set B": "setB",
+  "prior set C": "setC",
   "first omitted term": "first-omitted",
   "differences of orders": "differences",
+  "correlated along x": "correlated",
 };
 
 /**
@@ -79,9 +83,12 @@ function bandScalars(prefix: string, at: OrderEstimate, unit: string): Scalar[] 
   }));
 }
 
+/** Where a method estimates two things, the one that is not its usual says so. */
 function variant({ method, omitted }: Band): string {
-  if (method === "conjugate prior" && omitted === "first omitted term") return "-first";
-  return method === "first omitted term" && omitted === "all omitted orders" ? "-all" : "";
+  if (method === "first omitted term") return omitted === "all omitted orders" ? "-all" : "";
+  return method !== "uniform prior" && method !== "differences of orders" && omitted === "first omitted term"
+    ? "-first"
+    : "";
 }
 
 function nameOf({ method, omitted, degree }: Band): string {

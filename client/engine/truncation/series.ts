@@ -9,15 +9,20 @@ import {
   type ConjugatePosterior,
   type KnownOrder,
 } from "./estimates.ts";
+import type { Spread } from "./checks.ts";
+import { priorSetHalfWidth, type PriorSet } from "./prior-sets.ts";
 import type { Method, Omitted } from "./shape.ts";
 import type { Quantiles } from "./student-t.ts";
-import type { Band, Degree } from "./value.ts";
+import type { UniformSums } from "./uniform-sum.ts";
+import type { Band, Degree, PriorSettings } from "./value.ts";
 
 export interface Series {
   /** Orders that exist, rising; at least one. */
   readonly known: readonly (KnownOrder & { readonly rowId: string })[];
   /** Orders stated to be absent by symmetry, below or beyond the last known one. */
   readonly absent: readonly number[];
+  /** The same where the table has a row for them. */
+  readonly absentRows: readonly { readonly rowId: string; readonly order: number }[];
   /** X_ref; null takes it from the lowest order n₀ as X^(n₀)/Q^n₀, which is X⁽⁰⁾ when the series starts at order 0. */
   readonly reference: number | null;
   /** Whether c_0 counts among the coefficients; it never does when X_ref is made from it. */
@@ -26,6 +31,10 @@ export interface Series {
   readonly nu0: number;
   readonly tau0: number;
   readonly quantiles: Quantiles;
+  /** Null leaves the prior sets out. */
+  readonly sets: (PriorSettings & { readonly sums: UniformSums }) | null;
+  /** What the coefficients up to each order say along the whole of x; null without the correlated model. */
+  readonly spreadAlong: ((order: number) => Spread | null) | null;
 }
 
 export type PlainBand = Omit<Band, "fromQ">;
@@ -93,6 +102,18 @@ function estimateAt(
       add("conjugate prior", "first omitted term", degree, of(powers.first ** 2));
     }
   }
+  const spread = series.spreadAlong?.(order) ?? null;
+  if (spread) {
+    for (const degree of series.degrees) {
+      const of = (squares: number) =>
+        series.quantiles(degree.probability, spread.nu) * conjugateScale(spread, reference, squares);
+      if (powers.square !== null) add("correlated along x", "all omitted orders", degree, of(powers.square));
+      add("correlated along x", "first omitted term", degree, of(powers.first ** 2));
+    }
+  }
+  if (series.sets)
+    for (const band of setBands(series, series.sets, q, nextOrder, used))
+      bands.push({ ...band, halfWidth: size * band.halfWidth });
   if (largest !== null) {
     for (const degree of series.degrees) {
       const factor = uniformPriorFactor(used.length, degree.probability);
@@ -109,6 +130,59 @@ function estimateAt(
     differencesOfOrders(series.known, index, nextOrder, q),
   );
   return { rowId, order, value, nextOrder, coefficientCount: used.length, largest, posterior, bands };
+}
+
+/** Prior sets A, B and C, in units of |X_ref|; with `only`, just that of the two sums. */
+export function setBands(
+  series: Series,
+  sets: NonNullable<Series["sets"]>,
+  q: number,
+  nextOrder: number,
+  used: readonly number[],
+  only: Omitted | null = null,
+): PlainBand[] {
+  const evidence = {
+    count: used.length,
+    largest: largestSize(used) ?? 0,
+    squares: used.reduce((sum, c) => sum + c * c, 0),
+  };
+  const wanted: readonly (readonly [Omitted, number | null])[] =
+    sets.terms === null
+      ? [
+          ["all omitted orders", null],
+          ["first omitted term", 1],
+        ]
+      : [[sets.terms === 1 ? "first omitted term" : "all omitted orders", sets.terms]];
+  return wanted.flatMap(([omitted, terms]) => {
+    if ((terms === null && q >= 1) || (only !== null && only !== omitted)) return [];
+    const widths = omittedWidths(series, q, nextOrder, terms);
+    const sum = { uniform: sets.sums(widths), width: Math.hypot(...widths) };
+    return series.degrees.flatMap(({ text, probability }) =>
+      (["A", "B", "C"] satisfies PriorSet[]).flatMap((set) => {
+        const halfWidth = priorSetHalfWidth(set, evidence, sets, sum, probability);
+        return halfWidth === null || !Number.isFinite(halfWidth)
+          ? []
+          : [{ method: `prior set ${set}` as const, omitted, degree: text, halfWidth }];
+      }),
+    );
+  });
+}
+
+/** Omitted terms below this share of the first change no digit that is shown. */
+const NEGLIGIBLE_TERM = 1e-8;
+const MOST_TERMS = 400;
+
+/** Qⁿ for so many omitted orders that exist; all that count when `terms` is null. */
+function omittedWidths(series: Series, q: number, nextOrder: number, terms: number | null): number[] {
+  const absent = new Set(absentBeyond(nextOrder - 1, series));
+  const widths: number[] = [];
+  for (let n = nextOrder; widths.length < (terms ?? MOST_TERMS); n += 1) {
+    if (absent.has(n)) continue;
+    const width = q ** n;
+    if (terms === null && width < NEGLIGIBLE_TERM * q ** nextOrder) break;
+    widths.push(width);
+  }
+  return widths;
 }
 
 /** The first order above `order` that exists: a known one, or beyond the table the next that is not stated absent. */

@@ -1,18 +1,33 @@
 /** What a Truncation error block is given. */
-import { choice, defineShape, note, text, type InputsOf } from "../shape.ts";
+import { choice, defineShape, note, reference, text, type InputsOf } from "../shape.ts";
 
-/** The methods of this version, side by side on the same data; the chosen one is highlighted. */
+/** Side by side on the same data; the chosen one is highlighted. The last needs data along x. */
 export const methods = [
   "conjugate prior",
   "uniform prior",
+  "prior set A",
+  "prior set B",
+  "prior set C",
   "first omitted term",
   "differences of orders",
+  "correlated along x",
 ] as const;
 export type Method = (typeof methods)[number];
+
+export function isPriorSet(method: unknown): boolean {
+  return method === "prior set A" || method === "prior set B" || method === "prior set C";
+}
 
 /** What is estimated: the first term left out, or the sum of all that are left out. */
 export const omittedChoices = ["all omitted orders", "first omitted term"] as const;
 export type Omitted = (typeof omittedChoices)[number];
+
+/** Prior sets are integrated numerically, so they are shown on request, or when one of them is the chosen method. */
+export const setChoices = ["without sets A, B, C", "with sets A, B, C"] as const;
+
+/** What is believed of the breakdown scale before the data. */
+export const breakdownPriors = ["uniform in its logarithm", "uniform", "normal in its logarithm"] as const;
+export type BreakdownPrior = (typeof breakdownPriors)[number];
 
 export const truncationShape = defineShape({
   fields: {
@@ -35,6 +50,32 @@ export const truncationShape = defineShape({
     tau0: text("1"),
     method: choice(...methods),
     omitted: choice(...omittedChoices),
+    sets: choice(...setChoices),
+    /** Limits of c̄ in sets A and C. */
+    cbarLow: text("0.001"),
+    cbarHigh: text("1000"),
+    /** Width of ln c̄ in set B. */
+    cbarWidth: text("1"),
+    /** How many omitted terms the prior sets sum; "" follows `omitted`. */
+    terms: text(),
+    /** A table of predictions along x, in place of the orders typed here. */
+    data: reference(["data"]),
+    /** What x is called in Q; "" is the name of its column. */
+    variable: text(),
+    /** The x at which the methods stand side by side; "" is the middle point. */
+    at: text(),
+    /** Length over which coefficients stay alike, in the unit of x; "" is estimated. */
+    length: text(),
+    /** Independent part of each coefficient, as a variance in units of c̄²; "" follows the digits of the data. */
+    nugget: text(),
+    /** The scale in Q that is estimated; "" is the one heavy scale. */
+    breakdown: text(),
+    breakdownPrior: choice(...breakdownPriors),
+    /** Limits of that prior, such as "300 MeV"; "" is a quarter of, and four times, the stated value. */
+    breakdownFrom: text(),
+    breakdownTo: text(),
+    /** Width of the normal prior in ln Λ_b, about the stated value. */
+    breakdownWidth: text("0.5"),
     note: note(),
   },
   tables: {
@@ -45,6 +86,12 @@ export const truncationShape = defineShape({
       value: text(),
       /** "LO", "NLO", …: for the reader only. */
       name: note(),
+    },
+    /** Further observables with the same breakdown scale. */
+    observables: {
+      data: reference(["data"]),
+      /** Their Q; "" is the same expression. */
+      q: text(),
     },
   },
 });

@@ -19,7 +19,7 @@ const NEGLIGIBLE = 1e-6;
  * over its window, C(s) → (1/2a) ∫ C over [s − a, s + a], on a grid of 1500 steps.
  *
  * @param widths a_j > 0, at least one
- * @example uniformSum([0.09, 0.027]).coverage(0.063) // 0.7
+ * @example uniformSum([0.09, 0.027]).coverage(0.045) // 0.5
  */
 export function uniformSum(widths: readonly number[]): UniformSum {
   const sorted = [...widths].sort((a, b) => b - a);
@@ -73,7 +73,21 @@ function integrated(values: Float64Array, step: number): (s: number) => number {
 function cubic(values: Float64Array, at: number): number {
   const index = Math.floor(at);
   const t = at - index;
-  const value = (i: number) => (i < 0 ? -(values[-i] ?? 0) : (values[i] ?? 1));
-  const [a, b, c, d] = [value(index - 1), value(index), value(index + 1), value(index + 2)];
+  const a = index === 0 ? -(values[1] ?? 0) : (values[index - 1] ?? 1);
+  const b = values[index] ?? 1;
+  const c = values[index + 1] ?? 1;
+  const d = values[index + 2] ?? 1;
   return b + 0.5 * t * (c - a + t * (2 * a - 5 * b + 4 * c - d + t * (3 * (b - c) + d - a)));
+}
+
+/** Sums by their widths, each computed once: they depend on Q alone, and two degrees of belief and two sets share them. */
+export type UniformSums = (widths: readonly number[]) => UniformSum;
+export function rememberSums(): UniformSums {
+  const known = new Map<string, UniformSum>();
+  return (widths) => {
+    const name = widths.join(" ");
+    const sum = known.get(name) ?? uniformSum(widths);
+    known.set(name, sum);
+    return sum;
+  };
 }

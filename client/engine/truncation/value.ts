@@ -1,4 +1,5 @@
 /** What a Truncation error block gives; all numbers are floats of 12 digits. */
+import type { CurveValue } from "./curve-value.ts";
 import type { Method, Omitted } from "./shape.ts";
 
 export interface Degree {
@@ -57,4 +58,15 @@ export interface TruncationValue {
   readonly highlighted: Band | null;
   /** The last order's estimates if Q² were the expansion parameter of the same numbers; null when it underflows. */
   readonly rescaled: { readonly q: number; readonly bands: readonly Band[] } | null;
+  /** What the prior sets were integrated with, when they are shown; `terms` null sums what `Band.omitted` says. */
+  readonly sets: PriorSettings | null;
+  /** Along x; null when the orders are typed for one point. Everything above is then at `curve.at`. */
+  readonly curve: CurveValue | null;
+}
+
+export interface PriorSettings {
+  readonly low: number;
+  readonly high: number;
+  readonly sigma: number;
+  readonly terms: number | null;
 }

@@ -4,7 +4,8 @@ import { floatText } from "../notation/float-text.ts";
 import { unitText } from "../notation/unit-text.ts";
 import type { Series } from "./series.ts";
 import { uniformPriorFactor } from "./estimates.ts";
-import type { Method, Omitted } from "./shape.ts";
+import type { Method, Omitted, TruncationInputs } from "./shape.ts";
+import { describeAlong, describeSets } from "./working-curve.ts";
 import type { Band, OrderEstimate, TruncationValue } from "./value.ts";
 
 const heading = (text: string): WorkingStep => ({ step: "heading", text });
@@ -20,16 +21,22 @@ function measured(value: number, unit: string): string {
   return unit === "" ? shown(value) : shown(value) + unitText(unit, "latex");
 }
 
-export function describeWorking(value: TruncationValue, series: Series): WorkingStep[] {
+export function describeWorking(
+  value: TruncationValue,
+  series: Series,
+  inputs: TruncationInputs,
+): WorkingStep[] {
   const last = value.orders.at(-1);
   if (!last) return [];
   return [
     ...describeExpansion(value, series),
     ...describeConjugate(value, series, last),
     ...describeUniform(value, last),
+    ...(value.sets ? [...describeSets(value.sets), ...describeSetResults(value, last)] : []),
     ...describeFirstOmitted(value, last),
     ...describeDifferences(value, series, last),
     ...describeRescaling(value, last),
+    ...(value.curve ? describeAlong(value.curve, inputs) : []),
     ...describeAssumptions(),
   ];
 }
@@ -141,6 +148,16 @@ function describeUniform(value: TruncationValue, last: OrderEstimate): WorkingSt
     );
   }
   return steps;
+}
+
+function describeSetResults(value: TruncationValue, last: OrderEstimate): WorkingStep[] {
+  return last.bands
+    .filter(({ method }) => method.startsWith("prior set"))
+    .map((band) =>
+      formula(
+        `\\text{${band.method.slice("prior ".length)}, ${band.omitted}, ${band.degree ?? ""}\\%}:\\quad ${result(band, value.unit)}`,
+      ),
+    );
 }
 
 function describeFirstOmitted(value: TruncationValue, last: OrderEstimate): WorkingStep[] {

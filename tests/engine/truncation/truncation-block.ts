@@ -6,7 +6,7 @@ import { truncationError } from "#engine/truncation/kind.ts";
 import type { TruncationInputs } from "#engine/truncation/shape.ts";
 import type { TruncationValue } from "#engine/truncation/value.ts";
 
-type Fields = Omit<TruncationInputs, "orders">;
+type Fields = Omit<TruncationInputs, "orders" | "observables">;
 
 /** X by order: null is absent by symmetry. Row ids are "n0", "n1", … */
 export type ByOrder = Readonly<Record<number, string | number | null>>;
@@ -14,10 +14,11 @@ export type ByOrder = Readonly<Record<number, string | number | null>>;
 export function blockInputs(orders: ByOrder, fields: Partial<Fields> = {}): TruncationInputs {
   const initial = Object.fromEntries(
     Object.entries(truncationError.shape.fields).map(([name, spec]) => [name, spec.initial]),
-  ) as Fields;
+  ) as unknown as Fields; // one text for each field of the shape
   return {
     ...initial,
     ...fields,
+    observables: [],
     orders: Object.entries(orders).map(([order, value]) => ({
       id: `n${order}`,
       order,
