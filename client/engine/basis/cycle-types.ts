@@ -1,0 +1,50 @@
+/** Cycle types of the symmetric group: what becomes of a power of one field when identical quanta are exchanged. */
+
+export interface CycleType {
+  /** Lengths, longest first: [2, 1, 1]. */
+  readonly cycles: readonly number[];
+  /** Permutations of this type: n! / z, an integer. */
+  readonly permutations: number;
+}
+
+const known = new Map<number, readonly CycleType[]>();
+
+/**
+ * All cycle types of n objects with their sizes, which add up to n!. Exact for n ≤ 18, where n! is below 2⁵³.
+ * @example cycleTypes(3).length // 3
+ */
+export function cycleTypes(n: number): readonly CycleType[] {
+  const found = known.get(n);
+  if (found) return found;
+  const types = partitions(n, n).map((cycles) => ({
+    cycles,
+    permutations: factorial(n) / centralizer(cycles),
+  }));
+  known.set(n, types);
+  return types;
+}
+
+function partitions(n: number, largest: number): number[][] {
+  if (n === 0) return [[]];
+  const found: number[][] = [];
+  for (let first = Math.min(n, largest); first >= 1; first--)
+    for (const rest of partitions(n - first, first)) found.push([first, ...rest]);
+  return found;
+}
+
+/** z = Π_j j^{m_j} m_j!, with m_j cycles of length j. */
+function centralizer(cycles: readonly number[]): number {
+  let z = 1;
+  for (const length of new Set(cycles)) {
+    const multiplicity = cycles.filter((other) => other === length).length;
+    z *= length ** multiplicity * factorial(multiplicity);
+  }
+  return z;
+}
+
+/** @example factorial(5) // 120 */
+export function factorial(n: number): number {
+  let product = 1;
+  for (let factor = 2; factor <= n; factor++) product *= factor;
+  return product;
+}
