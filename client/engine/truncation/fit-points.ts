@@ -4,24 +4,29 @@
  * of ℓ apart carry all that the kernel says the others do, and their number is the number of data.
  */
 import { coefficientsAt } from "./coefficients-along.ts";
-import { evenly } from "./curve-data.ts";
 import { lengthRange, searchLengths } from "./length-search.ts";
 import { likelihoodOf, type Observable, type Prior } from "./likelihood.ts";
 
-const FIRST_POINTS = 16;
-const FEWEST = 5;
+/** Distances tried first, and at most, as parts of the whole range. */
+const FIRST_PARTS = 15;
+const FEWEST_PARTS = 4;
 const ROUNDS = 6;
+/** Points this much nearer than wanted are taken all the same: the next may be much too far. */
+const SHORT = 0.85;
+
+/** Real coefficients are no exact draws of a Gaussian process: what they do in directions fainter than this is not its business. */
+const FAINTEST = 1e-4;
 
 /**
  * How far apart, in units of ℓ, points must be for the smallest eigenvalue of R to stay above the nugget: it is about
  * exp(−π²ℓ²/2h²) for points h apart, from the spectrum of the kernel at the highest frequency they resolve. (Own derivation.)
- * @example apartFor(1e-8) // 0.51758…
+ * @example apartFor(1e-8) // 0.73197…
  */
 export function apartFor(nugget: number): number {
-  return Math.PI / Math.sqrt(2 * Math.log(1 / Math.min(Math.max(nugget, 1e-12), 0.1)));
+  return Math.PI / Math.sqrt(2 * Math.log(1 / Math.min(Math.max(nugget, FAINTEST), 0.1)));
 }
 
-/** @param length as given; null is estimated, with the number of points, in turns */
+/** @param length as given; null is estimated, in turns with the distance of the points */
 export function fitPoints(
   observable: Observable,
   length: number | null,
@@ -31,16 +36,15 @@ export function fitPoints(
   const all = observable.coefficients;
   const whole = (all.x.at(-1) ?? 0) - (all.x[0] ?? 0);
   const apart = apartFor(observable.nugget);
-  const countFor = (scale: number) =>
-    Math.min(all.x.length, Math.max(FEWEST, 1 + Math.floor(whole / (apart * scale))));
-  const at = (count: number) => ({
+  const gapFor = (scale: number) => Math.min(apart * scale, whole / FEWEST_PARTS);
+  const at = (gap: number) => ({
     ...observable,
-    coefficients: coefficientsAt(all, evenly(all.x.length, count)),
+    coefficients: coefficientsAt(all, placesApart(all.x, gap)),
   });
-  if (length !== null) return at(countFor(length));
-  let count = Math.min(all.x.length, FIRST_POINTS);
+  if (length !== null) return at(gapFor(length));
+  let gap = whole / FIRST_PARTS;
   for (let round = 0; round < ROUNDS; round += 1) {
-    const tried = at(count);
+    const tried = at(gap);
     const fits = searchLengths(
       likelihoodOf(tried, prior, [0, 0]),
       lengthRange(tried.coefficients.x),
@@ -49,11 +53,24 @@ export function fitPoints(
       1,
     );
     const best = fits.reduce((one, other) => (other.logLikelihood(0) > one.logLikelihood(0) ? other : one));
-    const wanted = countFor(best.length);
-    // Fewer than a quarter more or less changes nothing that a reader would see.
-    if (wanted === count || Math.abs(wanted - count) < count / 4) break;
-    // Too sparse a grid finds lengths at random: never more than three times as many at once.
-    count = Math.min(wanted, 3 * count);
+    const wanted = gapFor(best.length);
+    // A quarter more or less changes nothing that a reader would see; and more points than there are cannot be had.
+    const isAll = tried.coefficients.x.length === all.x.length;
+    if (Math.abs(wanted / gap - 1) < 0.25 || (isAll && wanted < gap)) break;
+    // Too sparse a grid finds lengths at random: never more than three times as many points at once.
+    gap = Math.max(wanted, gap / 3);
   }
-  return at(count);
+  return at(gap);
+}
+
+/** Places of points that are at least so far apart, from the first on. */
+function placesApart(x: readonly number[], gap: number): number[] {
+  const places: number[] = [];
+  let last = -Infinity;
+  x.forEach((at, place) => {
+    if (at - last < SHORT * gap) return;
+    places.push(place);
+    last = at;
+  });
+  return places;
 }

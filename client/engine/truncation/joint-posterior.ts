@@ -112,18 +112,24 @@ function grid(log: (s: number) => number, coarse: readonly number[]): number[] {
   return [...points];
 }
 
-/** From a density in s to one in the scale itself, whose density is dP/ds divided by the scale. */
+/** From a density in s = ln(Λ/stated), where it is smoother, to one in the scale Λ: dP/dΛ = (dP/ds)/Λ. */
 function densityInScale(
   s: readonly number[],
   logs: readonly number[],
   stated: number,
   degrees: readonly Degree[],
 ): Density {
-  return densityOf(
-    s.map((at) => stated * Math.exp(at)),
-    logs.map((log, index) => log - (s[index] ?? 0)),
-    degrees,
-  );
+  const scale = (at: number) => stated * Math.exp(at);
+  const { density, median, intervals, cutAt } = densityOf(s, logs, degrees);
+  const inScale = logs.map((log, index) => log - (s[index] ?? 0));
+  return {
+    grid: s.map(scale),
+    density: density.map((one, index) => one / scale(s[index] ?? 0)),
+    mode: scale(densityOf(s, inScale, []).mode),
+    median: scale(median),
+    intervals: intervals.map(({ degree, low, high }) => ({ degree, low: scale(low), high: scale(high) })),
+    cutAt,
+  };
 }
 
 /** ln ∫ e^log d ln ℓ by the trapezium rule; the one fit of a given ℓ stands for itself. */
