@@ -36,7 +36,7 @@ export async function appendUntilAnswered(
   let hopeless = 0;
   for (let attempt = 1; ; attempt += 1) {
     try {
-      const outcome = await store.append(request);
+      const outcome = await store.append(attempt === 1 ? request : { ...request, evenIfBehind: false });
       if (isAbandoned()) return { abandoned: true };
       if (attempt > 1) onBack();
       return outcome;

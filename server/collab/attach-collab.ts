@@ -15,15 +15,17 @@ import { admit, type Admitted } from "./admission.ts";
 import { compactHere, createCompaction, type Compact } from "./compaction.ts";
 import { Connection } from "./connection.ts";
 import { openDocumentStore, type DocumentStore } from "./document-store.ts";
+import { hearNeighbour } from "./hear-neighbour.ts";
 import {
   CONNECTIONS_PER_NOTEBOOK,
   CONNECTIONS_PER_VISITOR,
   HEARTBEAT,
   LARGEST_PAYLOAD_BYTES,
 } from "./limits.ts";
+import { Neighbours } from "./neighbours.ts";
 import { receiveFrames } from "./receive-frames.ts";
 import { RoomNotFound, type RoomObserver } from "./room-state.ts";
-import type { Lease } from "./room.ts";
+import type { Lease } from "./room-parts.ts";
 import { Rooms } from "./rooms.ts";
 
 export interface CollabDependencies {
@@ -57,9 +59,24 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
   const { configuration, database, log, sessions, accessChanges } = dependencies;
   const store =
     dependencies.store ?? openDocumentStore({ database, databaseUrl: configuration.databaseUrl, log });
-  const rooms = new Rooms({
+  const neighbours = new Neighbours({
+    database,
+    databaseUrl: configuration.databaseUrl,
+    log,
+    processId: store.processId,
+    onRows: (notebookId) => rooms.find(notebookId)?.lookForMore(),
+    onMessage(message, from) {
+      const room = rooms.find(message.notebookId);
+      if (room !== undefined) hearNeighbour(room, message, from, neighbours);
+    },
+    onGap: () => {
+      for (const room of rooms.all()) room.lookForMore();
+    },
+  });
+  const rooms: Rooms = new Rooms({
     store,
     log,
+    neighbours,
     observers: [
       ...(dependencies.observers ?? []),
       createCompaction({ store, log, compact: dependencies.compact ?? compactHere }),
@@ -202,6 +219,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
       await new Promise<void>((resolve, reject) =>
         sockets.close((error) => (error === undefined ? resolve() : reject(error))),
       );
+      await neighbours.stop();
       await store.stop();
     },
   };

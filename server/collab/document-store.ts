@@ -1,4 +1,5 @@
 /** Documents in PostgreSQL: an append-only log of updates per notebook, and a compacted state beside it. */
+import { randomUUID } from "node:crypto";
 import pg from "pg";
 import type { Logger } from "pino";
 import { roleMay, roles } from "#contract/roles.ts";
@@ -20,6 +21,8 @@ export interface AppendRequest {
   readonly notebookId: string;
   /** The last row this process knows; nothing is stored when there are others. */
   readonly after: number;
+  /** Stores all the same when another process has added rows meanwhile; they then lie before these. */
+  readonly evenIfBehind?: boolean;
   readonly updates: readonly NewUpdate[];
   /** Schema versions of the editors that wrote them. */
   readonly schema: { readonly lowest: number; readonly highest: number };
@@ -27,6 +30,8 @@ export interface AppendRequest {
 /** All updates are stored, or none and at least one of the reasons holds. */
 export interface AppendOutcome {
   readonly stored: boolean;
+  /** Another process holds the notebook too, and was told. */
+  readonly announced: boolean;
   readonly lastSeq: number;
   readonly schemaVersion: number;
   readonly archived: boolean;
@@ -35,11 +40,20 @@ export interface AppendOutcome {
   readonly denied: readonly string[];
 }
 
+export interface Newest {
+  readonly lastSeq: number;
+  readonly schemaVersion: number;
+}
+
 export interface DocumentStore {
+  /** Names this process in what it announces. */
+  readonly processId: string;
   /** Null when there is no such notebook (or it was deleted). */
   load(notebookId: string): Promise<StoredDocument | null>;
   /** Null when there is no such notebook. Committed durably when it resolves with `stored`. */
   append(request: AppendRequest): Promise<AppendOutcome | null>;
+  /** Null when there is no such notebook (or it was deleted). */
+  newest(notebookId: string): Promise<Newest | null>;
   readAfter(notebookId: string, seq: number): Promise<readonly StoredUpdate[]>;
   /** False when a newer state is there already. */
   saveState(notebookId: string, seq: number, state: Uint8Array): Promise<boolean>;
@@ -56,7 +70,8 @@ const writingRoles = roles.filter((role) => roleMay(role, "notebook.write"));
  * seq is never visible before a lower one; a serial number would not promise that. Prepared once per connection:
  * planning it would cost more than running it.
  *
- * $1 notebook, $2 writers, $3 roles that write, $4 last known seq, $5 lowest and $6 highest schema, $7 updates
+ * $1 notebook, $2 writers, $3 roles that write, $4 last known seq, $5 lowest and $6 highest schema, $7 updates, $8 whether also
+ * after rows of others, $9 this process
  */
 const appendStatement = {
   name: "append-updates",
@@ -70,7 +85,7 @@ const appendStatement = {
          where p.notebook_id = $1 and p.person_id = writer and p.role = any($3::text[]))
     ), fit as (
       select id, last_seq from notebook
-       where not archived and not deleted and last_seq = $4 and schema_version <= $5
+       where not archived and not deleted and (last_seq = $4 or $8) and schema_version <= $5
          and not exists (select 1 from denied)
     ), inserted as (
       insert into document_updates (notebook_id, seq, update, person_id)
@@ -82,6 +97,8 @@ const appendStatement = {
         from fit where n.id = fit.id
     )
     select last_seq::text, schema_version, archived, deleted, exists (select 1 from fit) as stored,
+           coalesce((select announce_rows(fit.id, $9, fit.last_seq + cardinality($7::bytea[])) from fit), false)
+             as announced,
            coalesce((select array_agg(writer::text) from denied), '{}') as denied
       from notebook`,
 };
@@ -91,6 +108,7 @@ interface AppendRow {
   readonly archived: boolean;
   readonly deleted: boolean;
   readonly stored: boolean;
+  readonly announced: boolean;
   readonly denied: readonly string[];
 }
 
@@ -164,26 +182,41 @@ export function openDocumentStore({ database, databaseUrl, log }: DocumentStoreO
   });
   // Without a listener, a broken idle connection would end the process.
   pool.on("error", (error) => log.warn({ err: error }, "an idle connection for documents was lost"));
+  const processId = randomUUID();
   return {
+    processId,
     stop: () => pool.end(),
 
     load: (notebookId) => loadStored(database, notebookId),
 
-    async append({ notebookId, after, updates, schema }) {
+    async append({ notebookId, after, evenIfBehind = false, updates, schema }) {
       const writers = updates.map(({ personId }) => personId);
       const bytes = updates.map(({ update }) => asBuffer(update));
-      const values = [notebookId, writers, writingRoles, after, schema.lowest, schema.highest, bytes];
+      const values = [
+        ...[notebookId, writers, writingRoles, after, schema.lowest, schema.highest, bytes],
+        ...[evenIfBehind, processId],
+      ];
       const [row] = (await pool.query<AppendRow>({ ...appendStatement, values })).rows;
       if (row === undefined) return null;
-      const { stored, archived, deleted, denied } = row;
+      const { stored, announced, archived, deleted, denied } = row;
       return {
         stored,
+        announced,
         lastSeq: Number(row.last_seq) + (stored ? updates.length : 0),
         schemaVersion: stored ? Math.max(row.schema_version, schema.highest) : row.schema_version,
         archived,
         deleted,
         denied,
       };
+    },
+
+    async newest(notebookId) {
+      const row = await firstRow<{ last_seq: string; schema_version: number }>(
+        database,
+        "select last_seq::text, schema_version from notebooks where id = ? and deleted_at is null",
+        [notebookId],
+      );
+      return row === undefined ? null : { lastSeq: Number(row.last_seq), schemaVersion: row.schema_version };
     },
 
     readAfter: (notebookId, seq) => tailAfter(database, notebookId, seq),

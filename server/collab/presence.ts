@@ -8,6 +8,7 @@ import * as encoding from "lib0/encoding";
 import type { Connection } from "./connection.ts";
 import { writePresence } from "./frames.ts";
 import { PRESENCE, PRESENCE_BACKLOG_BYTES } from "./limits.ts";
+import type { NeighbourState } from "./neighbour-messages.ts";
 
 interface State {
   readonly client: number;
@@ -15,6 +16,8 @@ interface State {
   /** JSON; null once the person has left. */
   json: string | null;
   owner: Connection | null;
+  /** The other process that it comes from; null when it is from here. */
+  process: string | null;
   personId: string;
   renewedAt: number;
 }
@@ -22,6 +25,8 @@ interface State {
 export interface PresenceOptions {
   /** Who is to be told of changes. */
   readonly audience: () => Iterable<Connection>;
+  /** Hears of those that are from here, for other processes. */
+  readonly onChange?: (state: NeighbourState) => void;
   readonly now?: () => number;
 }
 
@@ -45,9 +50,35 @@ export class Presence {
       const stamped = stamp(json, connection.visitor);
       if (stamped === undefined) continue;
       if (stamped === null) this.#remove(client);
-      else this.#put(connection, client, connection.visitor.personId, stamped);
+      else this.#put(client, connection.visitor.personId, stamped, { owner: connection, process: null });
     }
     return true;
+  }
+
+  /** A state that another process shows; it has checked and stamped it. */
+  receiveFrom(process: string, { client, personId, json }: NeighbourState): void {
+    const state = this.#states.get(client);
+    const isHere = state !== undefined && state.process === null && state.owner?.isOpen === true;
+    if (isHere || (json !== null && json.length > PRESENCE.stateCharacters * 2)) return;
+    if (json === null) {
+      if (state?.process === process) this.#remove(client);
+      return;
+    }
+    if (state === undefined ? this.#states.size >= PRESENCE.statesPerRoom : state.personId !== personId)
+      return;
+    this.#put(client, personId, json, { owner: null, process });
+  }
+
+  /** The other process has closed the notebook. */
+  leaveAllOf(process: string): void {
+    for (const state of this.#states.values()) if (state.process === process) this.#remove(state.client);
+  }
+
+  /** For a process that has just opened the notebook. */
+  statesFromHere(): readonly NeighbourState[] {
+    return [...this.#states.values()]
+      .filter(({ process, json }) => process === null && json !== null)
+      .map(({ client, personId, json }) => ({ client, personId, json }));
   }
 
   /** Ends what this connection showed; also when it may no longer send presence. */
@@ -89,10 +120,10 @@ export class Presence {
     return state.owner === null || !state.owner.isOpen;
   }
 
-  #put(owner: Connection, client: number, personId: string, json: string): void {
+  #put(client: number, personId: string, json: string, from: Pick<State, "owner" | "process">): void {
     const now = this.#now();
     const clock = Math.max((this.#states.get(client)?.clock ?? 0) + 1, now);
-    this.#states.set(client, { client, clock, json, owner, personId, renewedAt: now });
+    this.#states.set(client, { client, clock, json, ...from, personId, renewedAt: now });
     this.#change(client);
   }
 
@@ -115,6 +146,8 @@ export class Presence {
     const changed = [...this.#changed].flatMap((client) => this.#states.get(client) ?? []);
     this.#changed.clear();
     if (changed.length === 0) return;
+    for (const { client, personId, json, process } of changed)
+      if (process === null) this.options.onChange?.({ client, personId, json });
     const forMost = writeStates(changed);
     for (const connection of this.options.audience()) {
       if (!connection.rights.maySeePresence || connection.backlogBytes > PRESENCE_BACKLOG_BYTES) continue;

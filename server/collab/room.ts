@@ -9,46 +9,16 @@
  * something is not stored. Draining turns back to open when someone comes.
  */
 import { setTimeout as sleep } from "node:timers/promises";
-import type { Logger } from "pino";
 import { closeCode, type ServerNotice } from "#contract/collab.ts";
-import type { RetryTimes } from "./append-until-answered.ts";
 import { CommittedDocument, type CommittedBy } from "./committed-document.ts";
 import type { Connection } from "./connection.ts";
-import type { DocumentStore } from "./document-store.ts";
 import { writeStep1, writeUpdate } from "./frames.ts";
 import { Presence } from "./presence.ts";
-import {
-  RoomFailed,
-  RoomNotFound,
-  ways,
-  type OpenRoom,
-  type RoomObserver,
-  type RoomState,
-} from "./room-state.ts";
+import { RoomFailed, RoomNotFound, ways, type RoomState } from "./room-state.ts";
+import type { Content, Lease, RoomOptions } from "./room-parts.ts";
 import { reportsTo } from "./room-reports.ts";
 import { UpdateWriter } from "./update-writer.ts";
 import type { QueuedUpdate } from "./writer-reports.ts";
-
-export interface RoomOptions {
-  readonly notebookId: string;
-  readonly store: DocumentStore;
-  readonly log: Logger;
-  readonly observers: readonly RoomObserver[];
-  /** How long an empty room is kept for those who reload their page. */
-  readonly lingerMs: number;
-  readonly retry?: RetryTimes;
-}
-
-export interface Lease {
-  readonly room: Room;
-  release(): void;
-}
-
-interface Content {
-  readonly document: CommittedDocument;
-  readonly writer: UpdateWriter;
-  readonly open: OpenRoom;
-}
 
 export class Room {
   readonly notebookId: string;
@@ -63,6 +33,8 @@ export class Room {
   #content: Content | null = null;
   #leases = 0;
   #stopping = false;
+  /** Something was announced while the stored document was on its way here. */
+  #mayBeBehind = false;
   #linger: NodeJS.Timeout | null = null;
   /** Told apart by number: one that was interrupted must not end the room under a later one. */
   #drains = 0;
@@ -71,7 +43,10 @@ export class Room {
   constructor(options: RoomOptions) {
     this.notebookId = options.notebookId;
     this.#options = options;
-    this.#presence = new Presence({ audience: () => this.members });
+    this.#presence = new Presence({
+      audience: () => this.members,
+      onChange: (state) => options.neighbours.say({ about: "presence", notebookId: this.notebookId, state }),
+    });
     this.ended = new Promise((resolve) => (this.#resolveEnded = resolve));
     this.#loaded = this.#load();
     // Whoever waits for the load hears of its failure; nobody may be waiting any more.
@@ -145,6 +120,12 @@ export class Room {
     for (const member of this.members) member.notify(notice);
   }
 
+  /** Another process has committed rows, or may have. */
+  lookForMore(): void {
+    if (this.#content === null) this.#mayBeBehind = true;
+    else this.#content.writer.lookForMore();
+  }
+
   /** Called every few seconds. */
   tick(now: number): void {
     this.#presence.expire();
@@ -192,8 +173,9 @@ export class Room {
   }
 
   async #load(): Promise<Content> {
-    const { store, notebookId, observers, log } = this.#options;
+    const { store, notebookId, observers, neighbours, log } = this.#options;
     try {
+      await neighbours.hold(notebookId);
       const stored = await store.load(notebookId);
       if (stored === null) throw new RoomNotFound("there is no such notebook");
       const document = new CommittedDocument(stored);
@@ -205,6 +187,7 @@ export class Room {
       }
       const content = this.#open(document);
       this.#move("open");
+      if (this.#mayBeBehind) content.writer.lookForMore();
       for (const observer of observers) observer.opened?.(content.open);
       this.#leaveIfEmpty();
       return content;
@@ -228,7 +211,11 @@ export class Room {
       reports: reportsTo(this, document, (batch) => this.#committed(batch)),
       ...(retry === undefined ? {} : { retry }),
     });
-    const open = { notebookId, content: document, notify: (notice: ServerNotice) => this.notify(notice) };
+    const notify = (notice: ServerNotice) => {
+      this.notify(notice);
+      if (notice.about === "results") this.#options.neighbours.say({ about: "results", notebookId });
+    };
+    const open = { notebookId, content: document, notify };
     this.#content = { document, writer, open };
     return this.#content;
   }
@@ -286,6 +273,9 @@ export class Room {
     if (this.#linger !== null) clearTimeout(this.#linger);
     this.#linger = null;
     this.#presence.stop();
+    this.#options.neighbours
+      .letGo(this.notebookId)
+      .catch((error: unknown) => this.#options.log.warn({ err: error }, "a notebook stays noted as held"));
     const content = this.#content;
     if (content !== null) {
       for (const observer of this.#options.observers) observer.ended?.(content.open);

@@ -1,5 +1,6 @@
 /** The rooms of this process: at most one per notebook, made when first entered. */
-import { Room, type Lease, type RoomOptions } from "./room.ts";
+import type { Lease, RoomOptions } from "./room-parts.ts";
+import { Room } from "./room.ts";
 
 export type RoomsOptions = Omit<RoomOptions, "notebookId">;
 

@@ -8,19 +8,15 @@ import { CommittedBy, type CommittedDocument } from "./committed-document.ts";
 import type { Connection } from "./connection.ts";
 import type { AppendOutcome, DocumentStore } from "./document-store.ts";
 import { appendUntilAnswered, usualRetry, type RetryTimes } from "./append-until-answered.ts";
-import { BackPressure } from "./back-pressure.ts";
 import { HeldFrames } from "./held-frames.ts";
 import type { QueuedUpdate, WriterReports } from "./writer-reports.ts";
 import { STEPS_PER_TURN } from "./integration-meter.ts";
-import { nextBatch } from "./next-batch.ts";
 import { rowsSetAside } from "./rows-set-aside.ts";
-import {
-  assessUpdate,
-  isDeletedIn,
-  type Assessment,
-  type KnownContent,
-  type Missing,
-} from "./update-check.ts";
+import { takeInRows } from "./take-in-rows.ts";
+import { assessUpdate, type Assessment, type Missing } from "./update-check.ts";
+import { WriteQueue } from "./write-queue.ts";
+
+const SHORTER = "the stored log is shorter than what was committed";
 
 export interface WriterOptions {
   readonly notebookId: string;
@@ -33,30 +29,26 @@ export interface WriterOptions {
 
 export class UpdateWriter {
   readonly #options: WriterOptions;
-  readonly #queue: QueuedUpdate[] = [];
-  /** Clocks that the queue brings clients to, beyond the document's. */
-  readonly #reaches = new Map<number, number>();
-  readonly #pressure = new BackPressure();
+  readonly #queue: WriteQueue;
   readonly #held = new HeldFrames();
-  readonly #known: KnownContent;
   readonly #stop = new AbortController();
   readonly #retry: RetryTimes;
   #running: Promise<void> | null = null;
+  #mayBeBehind = false;
+  /** Another process held the notebook when this one last stored something. */
+  #isShared = false;
 
   constructor(options: WriterOptions) {
     this.#options = options;
     this.#retry = options.retry ?? usualRetry;
-    this.#known = {
-      clockOf: (client) => Math.max(this.#reaches.get(client) ?? 0, options.document.clockOf(client)),
-      isDeleted: (client, clock, length) => isDeletedIn(options.document.document, client, clock, length),
-    };
+    this.#queue = new WriteQueue(options.document, options.reports);
   }
 
   /** Takes a content frame of someone who may write. */
   offer(connection: Connection, personId: string, update: Uint8Array): void {
     const { reports, document } = this.#options;
     const frame = connection.saved.take();
-    const assessment = assessUpdate(update, this.#known);
+    const assessment = assessUpdate(update, this.#queue.known);
     const entry = { connection, frame, personId, update, carries: assessment.verdict === "new" };
     if (assessment.verdict === "malformed") return reports.malformed(connection, assessment.reason);
     if (assessment.verdict === "waiting") return this.#hold(entry, assessment.missing);
@@ -87,24 +79,13 @@ export class UpdateWriter {
   /** Stops trying. What is queued was never acknowledged, so its authors still hold it. */
   abandon(): void {
     this.#stop.abort();
-    this.#queue.length = 0;
-    this.#reaches.clear();
-    this.#pressure.releaseAll();
+    this.#queue.clear();
   }
 
-  /** Takes in rows that another process wrote. */
-  async #catchUp(atLeast: number): Promise<void> {
-    const { store, document, notebookId } = this.#options;
-    const rows = await store.readAfter(notebookId, document.lastSeq);
-    for (const { seq, update, personId } of rows) {
-      if (this.#isGivenUp()) return;
-      if (seq <= document.lastSeq) continue;
-      const applied = document.apply(seq, update, new CommittedBy(personId, null));
-      if (!applied.ok) return this.#setAside(seq, applied.reason, []);
-    }
-    // Quarantined rows are passed over, and so leave gaps.
-    document.lastSeq = Math.max(document.lastSeq, atLeast);
-    this.#reassess();
+  /** Another process has committed rows, or may have while nobody heard of it. */
+  lookForMore(): void {
+    this.#mayBeBehind = true;
+    this.#start();
   }
 
   #isGivenUp(): boolean {
@@ -120,9 +101,9 @@ export class UpdateWriter {
   }
 
   #retryHeld(connection: Connection): void {
-    const next = () => this.#held.first(connection, this.#known);
+    const next = () => this.#held.first(connection, this.#queue.known);
     for (let entry = next(); entry !== null; entry = next()) {
-      const assessment = assessUpdate(entry.update, this.#known);
+      const assessment = assessUpdate(entry.update, this.#queue.known);
       if (assessment.verdict === "waiting") {
         if (!this.#held.waitOn(connection, assessment.missing)) this.#waitsTooMuch(connection);
         return;
@@ -135,22 +116,21 @@ export class UpdateWriter {
   }
 
   #enqueue(entry: QueuedUpdate, assessment: Assessment): void {
-    entry.carries = assessment.verdict === "new";
-    if (assessment.verdict === "new") this.#note(assessment.reaches);
-    this.#queue.push(entry);
-    this.#pressure.add(entry.connection, entry.update.length);
-    this.#running ??= this.#run().finally(() => (this.#running = null));
+    this.#queue.push(entry, assessment);
+    this.#start();
   }
 
-  #note(reaches: ReadonlyMap<number, number>): void {
-    for (const [client, clock] of reaches) this.#reaches.set(client, clock);
+  #start(): void {
+    this.#running ??= this.#run().finally(() => (this.#running = null));
   }
 
   async #run(): Promise<void> {
     // What arrives in the same turn shares the first insert.
     await Promise.resolve();
-    while (this.#queue.length > 0 && !this.#isGivenUp()) {
-      const batch = nextBatch(this.#queue);
+    while ((this.#queue.length > 0 || this.#mayBeBehind) && !this.#isGivenUp()) {
+      if (this.#mayBeBehind) await this.#look();
+      if (this.#queue.length === 0 || this.#isGivenUp()) continue;
+      const batch = this.#queue.nextBatch();
       const carrying = batch.filter(({ carries }) => carries);
       if (carrying.length === 0) {
         this.#settle(batch);
@@ -170,6 +150,8 @@ export class UpdateWriter {
     const request = {
       notebookId,
       after: document.lastSeq,
+      // Two who write at once would otherwise refuse each other again and again.
+      evenIfBehind: this.#isShared,
       updates: carrying,
       schema: { lowest: Math.min(...versions), highest: Math.max(...versions) },
     };
@@ -193,7 +175,11 @@ export class UpdateWriter {
     outcome: AppendOutcome,
   ): Promise<void> {
     const { document, reports } = this.#options;
+    this.#isShared = outcome.announced;
     let seq = outcome.lastSeq - carrying.length;
+    if (seq < document.lastSeq) return reports.broken(new Error(SHORTER));
+    while (seq > document.lastSeq && !this.#isGivenUp()) await this.#catchUpOrWait(seq);
+    if (this.#isGivenUp()) return;
     let stepsInTurn = 0;
     for (const [index, { update, personId, connection }] of carrying.entries()) {
       seq += 1;
@@ -207,19 +193,11 @@ export class UpdateWriter {
       if (this.#isGivenUp()) return;
     }
     this.#settle(batch);
-    if (outcome.schemaVersion > document.schemaVersion) {
-      document.schemaVersion = outcome.schemaVersion;
-      reports.schemaRaised();
-    }
+    this.#heedSchema(outcome);
   }
 
   #settle(batch: readonly QueuedUpdate[]): void {
-    this.#queue.splice(0, batch.length);
-    if (this.#queue.length === 0) this.#reaches.clear();
-    for (const { connection, frame, update } of batch) {
-      connection.saved.commit(frame);
-      this.#pressure.remove(connection, update.length);
-    }
+    this.#queue.settle(batch);
     this.#options.reports.committed(batch);
   }
 
@@ -239,62 +217,71 @@ export class UpdateWriter {
   async #resolve(outcome: AppendOutcome): Promise<void> {
     const { document, reports } = this.#options;
     if (outcome.deleted) return reports.notebookGone();
-    if (outcome.lastSeq < document.lastSeq)
-      return reports.broken(new Error("the stored log is shorter than what was committed"));
+    if (outcome.lastSeq < document.lastSeq) return reports.broken(new Error(SHORTER));
     if (outcome.archived) {
-      this.#refuse(() => true, "the notebook is archived");
+      this.#queue.refuse(() => true, "the notebook is archived");
       return reports.lostRight("everyone");
     }
     if (outcome.denied.length > 0) {
       const denied = new Set(outcome.denied);
-      this.#refuse(({ personId }) => denied.has(personId), "you may only read this notebook");
+      this.#queue.refuse(({ personId }) => denied.has(personId), "you may only read this notebook");
       reports.lostRight(outcome.denied);
     }
-    if (outcome.schemaVersion > document.schemaVersion) {
-      document.schemaVersion = outcome.schemaVersion;
-      this.#refuse(
-        ({ connection }) => connection.schemaVersion < outcome.schemaVersion,
-        "the notebook needs a newer page",
-      );
-      reports.schemaRaised();
+    this.#heedSchema(outcome);
+    if (outcome.lastSeq > document.lastSeq) {
+      await this.#catchUpOrWait(outcome.lastSeq);
+      this.#queue.reassess();
     }
-    if (outcome.lastSeq > document.lastSeq) await this.#catchUpOrWait(outcome.lastSeq);
   }
 
-  async #catchUpOrWait(lastSeq: number): Promise<void> {
+  /** Older editors would delete what they do not know: they are refused, also when another process took the newer one. */
+  #heedSchema({ schemaVersion }: Pick<AppendOutcome, "schemaVersion">): void {
+    const { document, reports } = this.#options;
+    if (schemaVersion <= document.schemaVersion) return;
+    document.schemaVersion = schemaVersion;
+    this.#queue.refuse(
+      ({ connection }) => connection.schemaVersion < schemaVersion,
+      "the notebook needs a newer page",
+    );
+    reports.schemaRaised();
+  }
+
+  /** What became of the notebook elsewhere. */
+  async #look(): Promise<void> {
+    const { store, document, notebookId, reports, log } = this.#options;
+    this.#mayBeBehind = false;
     try {
-      await this.#catchUp(lastSeq);
+      const newest = await store.newest(notebookId);
+      if (newest === null) return reports.notebookGone();
+      if (newest.lastSeq < document.lastSeq) return reports.broken(new Error(SHORTER));
+      this.#heedSchema(newest);
+      if (newest.lastSeq === document.lastSeq) return;
+      await this.#catchUp(newest.lastSeq);
+      this.#queue.reassess();
     } catch (error) {
-      // The next append meets the same store, and says so.
+      log.error({ err: error }, "rows of another process could not be looked for");
+      this.#mayBeBehind = true;
+      await this.#pause();
+    }
+  }
+
+  /** Takes in rows that another process wrote. */
+  async #catchUp(upTo: number): Promise<void> {
+    const bad = await takeInRows(this.#options, upTo, () => this.#isGivenUp());
+    if (bad !== null) this.#setAside(bad.seq, bad.reason, []);
+  }
+
+  async #catchUpOrWait(upTo: number): Promise<void> {
+    try {
+      await this.#catchUp(upTo);
+    } catch (error) {
+      // The next attempt meets the same store.
       this.#options.log.error({ err: error }, "rows of another process could not be read");
-      await sleep(this.#retry.firstMs);
+      await this.#pause();
     }
   }
 
-  #refuse(isRefused: (entry: QueuedUpdate) => boolean, reason: string): void {
-    const refused = this.#queue.filter(isRefused);
-    const kept = this.#queue.filter((entry) => !refused.includes(entry));
-    this.#queue.splice(0, this.#queue.length, ...kept);
-    for (const entry of refused) {
-      this.#pressure.remove(entry.connection, entry.update.length);
-      this.#options.reports.refused(entry, reason);
-    }
-    this.#reassess();
-  }
-
-  /** What the queue builds on has changed: some of it may be known by now, or have lost what it builds on. */
-  #reassess(): void {
-    const queued = this.#queue.splice(0);
-    this.#reaches.clear();
-    for (const entry of queued) {
-      const assessment = assessUpdate(entry.update, this.#known);
-      if (assessment.verdict === "new") this.#note(assessment.reaches);
-      entry.carries = assessment.verdict === "new";
-      if (assessment.verdict === "new" || assessment.verdict === "known") this.#queue.push(entry);
-      else {
-        this.#pressure.remove(entry.connection, entry.update.length);
-        this.#options.reports.refused(entry, "it builds on something that was not accepted");
-      }
-    }
+  async #pause(): Promise<void> {
+    await sleep(this.#retry.firstMs, undefined, { signal: this.#stop.signal }).catch(() => undefined); // given up: looked at next
   }
 }

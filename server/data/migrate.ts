@@ -4,6 +4,7 @@ import { openDatabase, type Database } from "./database.ts";
 import type { Knex } from "knex";
 import * as foundation from "../../migrations/20261201000001_foundation.ts";
 import * as searchText from "../../migrations/20261201000010_search_text.ts";
+import * as serverProcesses from "../../migrations/20261201000020_server_processes.ts";
 
 type Migration = { readonly up: (knex: Knex) => Promise<void>; readonly down: (knex: Knex) => Promise<void> };
 
@@ -14,6 +15,7 @@ type Migration = { readonly up: (knex: Knex) => Promise<void>; readonly down: (k
 export const migrations: Readonly<Record<string, Migration>> = {
   "20261201000001_foundation.ts": foundation,
   "20261201000010_search_text.ts": searchText,
+  "20261201000020_server_processes.ts": serverProcesses,
 };
 
 const migrationSource: Knex.MigrationSource<string> = {

@@ -1,7 +1,7 @@
 /** A document store that can be made to wait or to fail at each of its doors. */
 import type { DocumentStore } from "../../../server/collab/document-store.ts";
 
-export type Door = Exclude<keyof DocumentStore, "stop">;
+export type Door = Exclude<keyof DocumentStore, "stop" | "processId">;
 export interface SlowStore extends DocumentStore {
   /** From now on calls of this door wait until it is opened. */
   shut(door: Door): void;
@@ -28,6 +28,8 @@ export function makeSlow(store: DocumentStore): SlowStore {
       return answer;
     };
   return {
+    processId: store.processId,
+    newest: pass("newest", store.newest.bind(store)),
     load: pass("load", store.load.bind(store)),
     append: pass("append", store.append.bind(store)),
     readAfter: pass("readAfter", store.readAfter.bind(store)),
