@@ -4,7 +4,8 @@
  */
 import { colour, pivotOrder, whiten, type Factor } from "./cholesky.ts";
 import { chanceFrom } from "./chance.ts";
-import type { CoefficientsAlong } from "./coefficients-along.ts";
+import { coefficientsAt, type CoefficientsAlong } from "./coefficients-along.ts";
+import { evenly } from "./curve-data.ts";
 import { mahalanobisTail } from "./incomplete-beta.ts";
 import { correlations, factorOf } from "./kernel.ts";
 import type { LengthFit, Prior } from "./likelihood.ts";
@@ -53,11 +54,16 @@ export interface Checks {
   readonly withinSigma: readonly [number, number];
 }
 
+/** More points than this show a reader nothing more. */
+const MOST_POINTS = 120;
 export const SAMPLES = 400;
 const SEED = 20190712;
 export const checkBeliefs = Array.from({ length: 19 }, (_, index) => (index + 1) / 20);
 
-export function checkConsistency(coefficients: CoefficientsAlong, fit: LengthFit, prior: Prior): Checks {
+/** @param fitted the coefficients that the fit was made of */
+export function checkConsistency(fitted: CoefficientsAlong, fit: LengthFit, prior: Prior): Checks {
+  const points = fitted.x.length;
+  const coefficients = coefficientsAt(fitted, evenly(points, MOST_POINTS));
   const { x, orders } = coefficients;
   const { factor, nugget } = factorOf(x, fit.length, fit.nugget);
   const pivots = pivotOrder(correlations(x, fit.length, nugget), x.length);
@@ -69,7 +75,7 @@ export function checkConsistency(coefficients: CoefficientsAlong, fit: LengthFit
   const checks = orders.map(({ order, values }, index) => {
     const spread = spreadOf(
       fit.squares.filter((_, other) => other !== index),
-      x.length,
+      points,
       prior,
     );
     return checkOrder(order, [...values], spread, factor, permuted, pivots);
@@ -78,8 +84,8 @@ export function checkConsistency(coefficients: CoefficientsAlong, fit: LengthFit
     x,
     orders: checks,
     beliefs: checkBeliefs,
-    coverage: coverageChecks(coefficients, fit, factor, prior),
-    withinSigma: withinSigma(coefficients, spreadOf(fit.squares, x.length, prior)),
+    coverage: coverageChecks(coefficients, points, fit, factor, prior),
+    withinSigma: withinSigma(fitted, spreadOf(fit.squares, points, prior)),
   };
 }
 
@@ -153,13 +159,14 @@ function withinSigma({ orders }: CoefficientsAlong, spread: Spread | null): read
  * points from the model 400 times.
  */
 function coverageChecks(
-  { x, orders }: CoefficientsAlong,
+  { orders }: CoefficientsAlong,
+  points: number,
   fit: LengthFit,
   factor: Factor,
   prior: Prior,
 ): readonly CoverageCheck[] {
   return orders.slice(1).flatMap(({ order: next, values }, index) => {
-    const spread = spreadOf(fit.squares.slice(0, index + 1), x.length, prior);
+    const spread = spreadOf(fit.squares.slice(0, index + 1), points, prior);
     if (!spread || spread.tau2 === 0) return [];
     const tau = Math.sqrt(spread.tau2);
     const limits = checkBeliefs.map((p) => studentHalfWidth(p, Math.min(spread.nu, 1e6)));

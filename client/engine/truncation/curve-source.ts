@@ -53,7 +53,11 @@ export function curveDataOf({ value }: Source): CurveData | null {
   };
 }
 
+const plainDecimal = /^-?\d+(?:\.\d+)?(?:[eE][+-]?\d+)?$/;
+
 function numberOf(text: string): number | null {
+  // Reading a plain decimal is what the language does best; fractions are for the exact reader.
+  if (plainDecimal.test(text)) return Number.isFinite(Number(text)) ? Number(text) : null;
   const value = readNumber(text)?.toFloat();
   return value !== undefined && Number.isFinite(value) ? value : null;
 }

@@ -11,6 +11,9 @@ import { likelihoodOf, type Observable, type Prior } from "./likelihood.ts";
 const FIRST_PARTS = 15;
 const FEWEST_PARTS = 4;
 const ROUNDS = 6;
+const WINDOW = 80;
+/** The factor by which a length found among neighbours may be wrong. */
+const KNOWN = 3;
 /** Points this much nearer than wanted are taken all the same: the next may be much too far. */
 const SHORT = 0.85;
 
@@ -26,13 +29,19 @@ export function apartFor(nugget: number): number {
   return Math.PI / Math.sqrt(2 * Math.log(1 / Math.min(Math.max(nugget, FAINTEST), 0.1)));
 }
 
+export interface FitPoints {
+  readonly observable: Observable;
+  /** Where its length scale is to be looked for. */
+  readonly range: readonly [number, number];
+}
+
 /** @param length as given; null is estimated, in turns with the distance of the points */
 export function fitPoints(
   observable: Observable,
   length: number | null,
   prior: Prior,
   tell: () => void,
-): Observable {
+): FitPoints {
   const all = observable.coefficients;
   const whole = (all.x.at(-1) ?? 0) - (all.x[0] ?? 0);
   const apart = apartFor(observable.nugget);
@@ -41,10 +50,21 @@ export function fitPoints(
     ...observable,
     coefficients: coefficientsAt(all, placesApart(all.x, gap)),
   });
-  if (length !== null) return at(gapFor(length));
+  const chosen = (gap: number, best: number | null): FitPoints => {
+    const points = at(gap);
+    const [low, high] = lengthRange(points.coefficients.x);
+    // With many points the length is known well by now, and each further one to be tried is dear.
+    const isKnown = best !== null && points.coefficients.x.length > WINDOW;
+    const range = isKnown
+      ? ([Math.max(low, best / KNOWN), Math.min(high, best * KNOWN)] as const)
+      : ([low, high] as const);
+    return { observable: points, range };
+  };
+  if (length !== null) return chosen(gapFor(length), null);
+  let best: number | null = null;
   let gap = whole / FIRST_PARTS;
   for (let round = 0; round < ROUNDS; round += 1) {
-    const tried = at(gap);
+    const tried = windowOf(at(gap));
     const fits = searchLengths(
       likelihoodOf(tried, prior, [0, 0]),
       lengthRange(tried.coefficients.x),
@@ -52,15 +72,24 @@ export function fitPoints(
       tell,
       1,
     );
-    const best = fits.reduce((one, other) => (other.logLikelihood(0) > one.logLikelihood(0) ? other : one));
-    const wanted = gapFor(best.length);
+    best = fits.reduce((one, other) => (other.logLikelihood(0) > one.logLikelihood(0) ? other : one)).length;
+    const wanted = gapFor(best);
     // A quarter more or less changes nothing that a reader would see; and more points than there are cannot be had.
-    const isAll = tried.coefficients.x.length === all.x.length;
+    const isAll = placesApart(all.x, gap).length === all.x.length;
     if (Math.abs(wanted / gap - 1) < 0.25 || (isAll && wanted < gap)) break;
     // Too sparse a grid finds lengths at random: never more than three times as many points at once.
     gap = Math.max(wanted, gap / 3);
   }
-  return at(gap);
+  return chosen(gap, best);
+}
+
+/** Neighbours in the middle: enough to tell a length scale near their distance, which is all that is asked here. */
+function windowOf(observable: Observable): Observable {
+  const { coefficients } = observable;
+  const count = Math.min(coefficients.x.length, WINDOW);
+  const first = Math.floor((coefficients.x.length - count) / 2);
+  const places = Array.from({ length: count }, (_, index) => first + index);
+  return { ...observable, coefficients: coefficientsAt(coefficients, places) };
 }
 
 /** Places of points that are at least so far apart, from the first on. */

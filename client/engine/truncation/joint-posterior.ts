@@ -1,7 +1,7 @@
 /** The posterior of the breakdown scale, joint over observables, and of the length scale of each. */
 import { densityOf, type Density } from "./density.ts";
 import { fitPoints } from "./fit-points.ts";
-import { lengthRange, searchLengths } from "./length-search.ts";
+import { searchLengths } from "./length-search.ts";
 import { likelihoodOf, type LengthFit, type Observable, type Prior } from "./likelihood.ts";
 import type { Degree } from "./value.ts";
 
@@ -45,8 +45,9 @@ export function jointPosterior(
   const logPrior = belief?.logPrior ?? (() => 0);
   let done = 0;
   const count = () => tell((done += 1));
-  const fitted = observables.map((one, index) => fitPoints(one, lengths[index] ?? null, prior, count));
-  const all = fitted.map((observable, index) => {
+  const chosenPoints = observables.map((one, index) => fitPoints(one, lengths[index] ?? null, prior, count));
+  const fitted = chosenPoints.map(({ observable }) => observable);
+  const all = chosenPoints.map(({ observable, range: where }, index) => {
     const fit = likelihoodOf(observable, prior, range);
     const given = lengths[index] ?? null;
     if (given !== null) {
@@ -54,7 +55,7 @@ export function jointPosterior(
       return [fit(given)];
     }
     const profile = (one: LengthFit) => Math.max(...coarse.map((s) => one.logLikelihood(s) + logPrior(s)));
-    return searchLengths(fit, lengthRange(observable.coefficients.x), profile, count);
+    return searchLengths(fit, where, profile, count);
   });
   const [first] = all;
   const chosen = first && [...first].sort((a, b) => b.logLikelihood(0) - a.logLikelihood(0))[0];

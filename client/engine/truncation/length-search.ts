@@ -3,7 +3,9 @@ import type { LengthFit } from "./likelihood.ts";
 
 /** Length scales further below the best than this, in ln pr, do not matter. */
 const DEPTH = 9;
-const FIRST = 12;
+/** The first lengths tried are about this far apart in ln ℓ. */
+const STEP = 0.45;
+const [FEWEST, MOST] = [5, 14];
 const NEXT = 8;
 const ROUNDS = 4;
 /** With so many points on it a peak is drawn and integrated well. */
@@ -44,7 +46,8 @@ export function searchLengths(
     }
     found.sort((a, b) => a.log - b.log);
   };
-  add(Math.log(low), Math.log(high), FIRST, true);
+  const first = Math.min(MOST, Math.max(FEWEST, 1 + Math.ceil(Math.log(high / low) / STEP)));
+  add(Math.log(low), Math.log(high), first, true);
   for (let round = 0; round < rounds; round += 1) {
     const best = Math.max(...found.map(({ value }) => value));
     const near = found.flatMap(({ value }, index) => (value > best - DEPTH ? [index] : []));

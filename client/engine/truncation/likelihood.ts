@@ -38,8 +38,8 @@ export interface LengthFit {
   logLikelihood(s: number): number;
 }
 
-/** Nodes in s at which a Q that is not inverse to the breakdown scale is followed exactly. */
-const NODES = 25;
+/** Chebyshev nodes in s at which a Q that is not inverse to the breakdown scale is followed exactly. */
+const NODES = 15;
 
 /** @param range of s that will be asked for */
 export function likelihoodOf(
@@ -51,8 +51,8 @@ export function likelihoodOf(
   const nu = nu0 + orders.length * x.length;
   const powers = orders.reduce((sum, { power }) => sum + power, 0);
   const logQ = q.reduce((sum, one) => sum + Math.log(one), 0);
-  const step = (range[1] - range[0]) / (NODES - 1);
-  const nodes = parameterAt && step > 0 ? nodesAlong(coefficients, parameterAt, range[0], step) : null;
+  const places = chebyshev(range);
+  const nodes = parameterAt && range[1] > range[0] ? nodesAlong(coefficients, parameterAt, places) : null;
 
   return (length) => {
     const { factor, nugget: needed } = factorOf(x, length, nugget);
@@ -78,18 +78,17 @@ export function likelihoodOf(
         there,
       ),
     );
-    return { ...fit, logLikelihood: (s) => interpolate(exact, (s - range[0]) / step) };
+    return { ...fit, logLikelihood: (s) => interpolate(places, exact, s) };
   };
 }
 
 function nodesAlong(
   { x, q, orders }: CoefficientsAlong,
   parameterAt: (x: number, s: number) => number,
-  from: number,
-  step: number,
+  places: readonly number[],
 ): readonly { readonly values: readonly Float64Array[]; readonly logQ: number }[] {
-  return Array.from({ length: NODES }, (_, index) => {
-    const there = x.map((at) => parameterAt(at, from + index * step));
+  return places.map((s) => {
+    const there = x.map((at) => parameterAt(at, s));
     const ratio = there.map((one, point) => (q[point] ?? NaN) / one);
     return {
       values: orders.map(({ power, values }) =>
@@ -100,15 +99,23 @@ function nodesAlong(
   });
 }
 
-/** Cubic through the four nodes around. */
-function interpolate(values: readonly number[], at: number): number {
-  const first = Math.min(Math.max(Math.floor(at) - 1, 0), values.length - 4);
-  const t = at - first;
-  const [a = NaN, b = NaN, c = NaN, d = NaN] = values.slice(first, first + 4);
-  return (
-    (-a * (t - 1) * (t - 2) * (t - 3)) / 6 +
-    (b * t * (t - 2) * (t - 3)) / 2 -
-    (c * t * (t - 1) * (t - 3)) / 2 +
-    (d * t * (t - 1) * (t - 2)) / 6
+function chebyshev([from, to]: readonly [number, number]): number[] {
+  return Array.from(
+    { length: NODES },
+    (_, index) => (from + to) / 2 - ((to - from) / 2) * Math.cos((Math.PI * index) / (NODES - 1)),
   );
+}
+
+/** The polynomial through all nodes, in its barycentric form (Berrut, Trefethen 2004, SIAM Rev. 46, 501). */
+function interpolate(places: readonly number[], values: readonly number[], at: number): number {
+  let [over, under] = [0, 0];
+  for (let index = 0; index < places.length; index += 1) {
+    const distance = at - (places[index] ?? NaN);
+    if (distance === 0) return values[index] ?? NaN;
+    const isEnd = index === 0 || index === places.length - 1;
+    const weight = ((index % 2 === 0 ? 1 : -1) * (isEnd ? 0.5 : 1)) / distance;
+    over += weight * (values[index] ?? NaN);
+    under += weight;
+  }
+  return over / under;
 }
