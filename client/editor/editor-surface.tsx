@@ -1,8 +1,9 @@
-/** The writing surface: the section scale, the margin tick, the writing bar and the document itself. */
+/** The writing surface: the order ruler, the section scale, the margin tick, the writing bar and the document itself. */
 import type { Editor } from "@tiptap/core";
 import { EditorContent, useEditor } from "@tiptap/react";
 import { useEffect, useMemo, useState, useSyncExternalStore, type ReactNode } from "react";
 import type { StoredResult } from "#contract/api.ts";
+import { RulerPlace } from "../ruler/ruler-place.tsx";
 import { say } from "../ui/notices.ts";
 import { blockExtensions, blockViews } from "./blocks/block-extensions.ts";
 import { useBlockWorld } from "./blocks/block-world.ts";
@@ -78,6 +79,7 @@ function WritingSurface({ session, state, children }: Omit<EditorSurfaceProps, "
   const notebook = useMemo<OpenNotebook>(() => ({ session, editor, readOnly }), [session, editor, readOnly]);
   return (
     <NotebookContext value={notebook}>
+      <RulerPlace />
       <div className="notebook-surface">
         <SectionScale editor={editor} />
         <div className="notebook-column">

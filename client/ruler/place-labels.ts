@@ -1,0 +1,82 @@
+/**
+ * Where the marks' labels stand: on levels above the scale, never on each other and never across another mark's stem.
+ * From the right to the left, each at the lowest level that is free: so a stem is always left of the labels that were
+ * placed before it, and a crowd of equal sizes becomes a staircase instead of a heap.
+ */
+export interface Labelled {
+  readonly id: string;
+  readonly x: number;
+  readonly width: number;
+}
+
+export interface PlacedLabel {
+  readonly id: string;
+  readonly x: number;
+  readonly level: number;
+  /** Which side of its mark the label stands on; null when there is no room for it at any level. */
+  readonly side: "right" | "left" | null;
+}
+
+/** Half of a mark, and from a mark's middle to its label. */
+export const MARK_REACH = 7;
+export const LABEL_GAP = 10;
+/** Between a label and the next mark. */
+const APART = 4;
+
+interface Span {
+  readonly from: number;
+  readonly to: number;
+}
+interface Room extends Span {
+  readonly level: number;
+  readonly x: number;
+}
+
+export function placeLabels(
+  labels: readonly Labelled[],
+  { levels, left, right }: { readonly levels: number; readonly left: number; readonly right: number },
+): readonly PlacedLabel[] {
+  const taken: Room[] = [];
+  const placed = new Map<string, PlacedLabel>();
+  // Equal positions keep their order: the first stands lowest.
+  const inTurn = labels
+    .map((label, index) => ({ label, index }))
+    .sort((a, b) => b.label.x - a.label.x || a.index - b.index);
+  for (const { label } of inTurn) {
+    const found = firstRoom(label, taken, levels, { from: left, to: right });
+    if (found) taken.push(found.room);
+    placed.set(label.id, {
+      id: label.id,
+      x: label.x,
+      level: found?.room.level ?? 0,
+      side: found?.side ?? null,
+    });
+  }
+  return labels.flatMap(({ id }) => placed.get(id) ?? []);
+}
+
+function firstRoom(label: Labelled, taken: readonly Room[], levels: number, within: Span) {
+  for (const side of ["right", "left"] as const) {
+    const span = spanOf(label, side);
+    if (span.from < within.from || span.to > within.to) continue;
+    for (let level = 0; level < levels; level += 1) {
+      const room = { ...span, level, x: label.x };
+      if (!taken.some((other) => meet(room, other))) return { side, room };
+    }
+  }
+  return null;
+}
+
+/** What a mark and its label cover. */
+export function spanOf({ x, width }: Labelled, side: "right" | "left"): Span {
+  const reach = LABEL_GAP + width + APART;
+  return side === "right" ? { from: x - MARK_REACH, to: x + reach } : { from: x - reach, to: x + MARK_REACH };
+}
+
+function meet(one: Room, other: Room): boolean {
+  if (one.level === other.level) return one.from < other.to && other.from < one.to;
+  const [upper, lower] = one.level > other.level ? [one, other] : [other, one];
+  // The stem of the upper one comes down through the lower one's label; marks themselves may stand on one stem.
+  const beside = Math.abs(upper.x - lower.x) <= MARK_REACH;
+  return !beside && upper.x > lower.from && upper.x < lower.to;
+}

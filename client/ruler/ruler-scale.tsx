@@ -1,0 +1,279 @@
+/** The scale itself: graduation, marks with their labels, the hairline, and what lies beyond it. */
+import { useRef, type KeyboardEvent, type RefObject } from "react";
+import { tenTo } from "../blocks/parts/plot-scales.ts";
+import { sizeText } from "../blocks/parts/number-text.ts";
+import { classes } from "../ui/classes.ts";
+import { roundedTarget } from "./kept-text.ts";
+import { labelWidth } from "./short-label.ts";
+import { LABEL_GAP, placeLabels, type PlacedLabel } from "./place-labels.ts";
+import type { Reading, ReadMark } from "./reading.ts";
+import { graduations, positionOf, sizeAtPosition, type RulerAxis } from "./ruler-axis.ts";
+import type { EstimateBand } from "./ruler-model.ts";
+import { markName, spokenReading, targetWords } from "./ruler-words.ts";
+import { useDrag } from "./use-drag.ts";
+import { valueAfterKey, within } from "./slider-keys.ts";
+
+const CAPTION = 26;
+const LEVEL = 16;
+const STRIP = 12;
+export const EDGE = 24;
+const shapes = {
+  relevant: "M0 -5 5 4H-5z",
+  marginal: "M0 -5 5 0 0 5-5 0z",
+  irrelevant: "M-5 -4H5L0 5z",
+} as const;
+
+export const scaleHeight = (levels: number) => CAPTION + levels * LEVEL + 4 + STRIP + 24;
+
+interface Props {
+  readonly drawing: RefObject<SVGSVGElement | null>;
+  readonly axis: RulerAxis;
+  readonly width: number;
+  readonly levels: number;
+  readonly reading: Reading;
+  readonly marks: readonly ReadMark[];
+  readonly estimate: EstimateBand | null;
+  readonly moving: boolean;
+  readonly opened: string | null;
+  readonly onOpen: (markId: string | null) => void;
+  readonly onTarget: (target: number) => void;
+  readonly onHold: (held: boolean) => void;
+  readonly onKey: (event: KeyboardEvent) => void;
+}
+
+export function labelOf({ mark, size }: ReadMark, isFirstOut: boolean): string {
+  const name = mark.insertions > 1 && mark.rowIds.length === 1 ? `${mark.label} twice` : mark.label;
+  return isFirstOut ? `${name} ← first left out, ${sizeText(size)}` : name;
+}
+
+/** Labels of what is drawn, at the levels there are. */
+export function placed(
+  marks: readonly ReadMark[],
+  firstOut: ReadMark | null,
+  axis: RulerAxis,
+  levels: number,
+): ReadonlyMap<string, PlacedLabel> {
+  const wanted = marks.map((read) => ({
+    id: read.mark.id,
+    x: positionOf(axis, read.size),
+    width: labelWidth(labelOf(read, read.mark.id === firstOut?.mark.id)),
+  }));
+  const room = { levels, left: axis.left - 18, right: axis.right + EDGE };
+  return new Map(placeLabels(wanted, room).map((label) => [label.id, label]));
+}
+
+export function RulerScale(props: Props) {
+  const { drawing, axis, width, levels, reading, marks, estimate, moving, opened } = props;
+  const height = scaleHeight(levels);
+  const floor = CAPTION + levels * LEVEL + 4;
+  const { target, firstOut } = reading;
+  const hairline = target === null ? null : positionOf(axis, target);
+  const labels = placed(marks, firstOut, axis, levels);
+  const current = opened ?? marks[0]?.mark.id ?? null;
+  return (
+    <svg
+      ref={drawing}
+      className={classes("ruler-scale", moving && "is-moving")}
+      viewBox={`0 0 ${width} ${height}`}
+      role="group"
+      aria-label="Terms by their estimated size"
+      onKeyDown={walk}
+    >
+      {hairline !== null && (
+        <path className="ruler-beyond" d={hatching(hairline, axis.right + EDGE, floor, floor + STRIP)} />
+      )}
+      {estimate && <Estimate band={estimate} axis={axis} floor={floor} />}
+      <path className="ruler-line" d={`M0 ${floor}H${width}`} />
+      <path className="ruler-foot" d={`M0 ${floor + STRIP}H${width}`} />
+      {graduations(axis).map(({ x, length, power }) => (
+        <g key={x}>
+          <path
+            className={`ruler-tick is-${length}`}
+            d={`M${x.toFixed(1)} ${floor}v${length === "long" ? STRIP : length === "middle" ? 8 : 5}`}
+          />
+          {power !== null && (
+            <text className="ruler-power" x={x} y={floor + STRIP + 14} textAnchor="middle">
+              {tenTo(power)}
+            </text>
+          )}
+        </g>
+      ))}
+      {marks.map((read) => (
+        <Mark
+          key={read.mark.id}
+          read={read}
+          floor={floor}
+          place={labels.get(read.mark.id) ?? { id: read.mark.id, x: 0, level: 0, side: null }}
+          isFirstOut={read.mark.id === firstOut?.mark.id}
+          current={read.mark.id === current}
+          opened={read.mark.id === opened}
+          onOpen={() => props.onOpen(read.mark.id === opened ? null : read.mark.id)}
+        />
+      ))}
+      {target !== null && hairline !== null && (
+        <Hairline {...props} target={target} x={hairline} floor={floor} />
+      )}
+    </svg>
+  );
+}
+
+/** Arrows go from mark to mark, along the scale: only one of them is a stop of the Tab key. */
+function walk(event: KeyboardEvent<SVGSVGElement>): void {
+  const marks = [...event.currentTarget.querySelectorAll<SVGElement>(".ruler-mark")];
+  const at = marks.findIndex((mark) => mark === document.activeElement);
+  const step = { ArrowRight: 1, ArrowDown: 1, ArrowLeft: -1, ArrowUp: -1 }[event.key];
+  if (at === -1 || step === undefined) return;
+  event.preventDefault();
+  marks[(at + step + marks.length) % marks.length]?.focus();
+}
+
+interface MarkProps {
+  readonly read: ReadMark;
+  readonly floor: number;
+  readonly place: PlacedLabel;
+  readonly isFirstOut: boolean;
+  readonly current: boolean;
+  readonly opened: boolean;
+  readonly onOpen: () => void;
+}
+
+function Mark({ read, floor, place, isFirstOut, current, opened, onOpen }: MarkProps) {
+  const { mark, included } = read;
+  const height = 11 + place.level * LEVEL;
+  const [name = "", ...note] = labelOf(read, isFirstOut).split(" ← ");
+  const toRight = place.side !== "left";
+  return (
+    <g
+      className={classes(
+        "ruler-mark",
+        `is-${mark.scalingClass}`,
+        !included && "is-out",
+        isFirstOut && "is-first-out",
+      )}
+      style={{ transform: `translateX(${place.x.toFixed(2)}px)` }}
+      role="button"
+      tabIndex={current ? 0 : -1}
+      aria-label={markName(read, isFirstOut)}
+      aria-expanded={opened}
+      onClick={onOpen}
+      onKeyDown={(event) => {
+        if (event.key !== "Enter" && event.key !== " ") return;
+        event.preventDefault();
+        onOpen();
+      }}
+    >
+      <title>{markName(read, isFirstOut)}</title>
+      <rect data-hand="" className="ruler-touch" x={-12} y={floor - height - 12} width={24} height={24} />
+      <path className="ruler-stem" d={`M0 ${floor}V${floor - height}`} />
+      <path
+        className="ruler-shape"
+        d={shapes[mark.scalingClass]}
+        transform={`translate(0 ${floor - height})`}
+      />
+      {place.side !== null && (
+        <text
+          className="ruler-label"
+          x={toRight ? LABEL_GAP : -LABEL_GAP}
+          y={floor - height + 4}
+          textAnchor={toRight ? "start" : "end"}
+        >
+          {name}
+          {note.length > 0 && <tspan className="ruler-note">{` ← ${note.join("")}`}</tspan>}
+        </text>
+      )}
+    </g>
+  );
+}
+
+function Estimate({
+  band,
+  axis,
+  floor,
+}: {
+  readonly band: EstimateBand;
+  readonly axis: RulerAxis;
+  readonly floor: number;
+}) {
+  const clamp = (size: number) => Math.min(axis.right, Math.max(axis.left, positionOf(axis, size)));
+  const [from, to] = [clamp(band.high), clamp(band.low)];
+  const words = `${band.words}: ${sizeText(band.low)} to ${sizeText(band.high)}`;
+  return (
+    <rect
+      className="ruler-estimate"
+      x={from}
+      y={floor + 1}
+      width={Math.max(2, to - from)}
+      height={STRIP - 2}
+      role="img"
+      aria-label={words}
+    >
+      <title>{words}</title>
+    </rect>
+  );
+}
+
+function Hairline(props: Props & { readonly target: number; readonly x: number; readonly floor: number }) {
+  const { axis, reading, drawing, target, x, floor, width, onTarget, onHold, onKey } = props;
+  const range = {
+    low: 10 ** axis.low,
+    high: Math.min(0.5, 10 ** axis.high),
+    step: 10 ** 0.05,
+    leap: 10 ** 0.5,
+  };
+  const hand = useRef<SVGGElement>(null);
+  const drag = useDrag((clientX) => {
+    const box = drawing.current?.getBoundingClientRect();
+    if (!box || box.width === 0) return;
+    const size = sizeAtPosition(axis, ((clientX - box.left) / box.width) * width);
+    onTarget(roundedTarget(within(size, range)));
+  }, onHold);
+  const words = `target ${targetWords(target)}`;
+  // Near the right edge the words stand on the other side of the hairline.
+  const toRight = x < width - 120;
+  return (
+    <g
+      ref={hand}
+      className="ruler-hairline"
+      style={{ transform: `translateX(${x.toFixed(2)}px)` }}
+      role="slider"
+      tabIndex={0}
+      aria-label="Target accuracy"
+      aria-orientation="horizontal"
+      aria-valuemin={Math.log10(range.low)}
+      aria-valuemax={Math.log10(range.high)}
+      aria-valuenow={Number(Math.log10(target).toFixed(3))}
+      aria-valuetext={spokenReading(words, reading)}
+      onKeyDown={(event) => {
+        // To the right is smaller on this scale, and the key follows the hand.
+        const key = { ArrowRight: "ArrowLeft", ArrowLeft: "ArrowRight" }[event.key] ?? event.key;
+        const next = valueAfterKey(key, target, range);
+        if (next === null) {
+          onKey(event);
+          return;
+        }
+        event.preventDefault();
+        event.stopPropagation();
+        onTarget(roundedTarget(next));
+      }}
+      {...drag}
+    >
+      <rect data-hand="" className="ruler-touch" x={-12} y={0} width={24} height={floor + STRIP + 24} />
+      <path className="ruler-hair" d={`M0 2V${floor + STRIP + 16}`} />
+      <circle className="ruler-grip" cy={floor + STRIP + 16} r={5} />
+      <text className="ruler-target" x={toRight ? 7 : -7} y={11} textAnchor={toRight ? "start" : "end"}>
+        {words}
+      </text>
+      <text className="ruler-target-note" x={toRight ? 7 : -7} y={23} textAnchor={toRight ? "start" : "end"}>
+        left out beyond
+      </text>
+    </g>
+  );
+}
+
+/** Strokes at 45° between two heights: a pattern would not survive every printer, and none lies under a label. */
+function hatching(from: number, to: number, top: number, bottom: number): string {
+  const rise = bottom - top;
+  const strokes: string[] = [];
+  for (let x = from + 2; x < to - rise; x += 6) strokes.push(`M${x.toFixed(1)} ${bottom}l${rise} ${-rise}`);
+  return strokes.join("");
+}
