@@ -36,7 +36,6 @@ export function useRulerSource(chosen: string | null): {
   const version = useSyncExternalStore(store.subscribe, store.version);
   // Results change in place; their version says when.
   return useMemo(() => {
-    void version;
     const blocks = store.blocks();
     const plans = blocks.filter(({ id, kind }) => kind === "orderPlan" && valueOf(store, id) !== null);
     const candidates =
