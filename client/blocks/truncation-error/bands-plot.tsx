@@ -6,11 +6,18 @@ import { useBlock } from "../block-handle.ts";
 import { plotFrame } from "../parts/plot.tsx";
 import { plain } from "../parts/plot-scales.ts";
 import { textTo } from "../parts/number-text.ts";
+import { CurveFigures } from "./curve-figures.tsx";
 import { resolutionOf } from "./method-rows.ts";
 import { ScrollBox } from "../parts/scroll-box.tsx";
 
+/** At one point the bands order by order; with data along x all that is drawn there. */
+export function BandsPlot({ value, stale }: ResultProps<TruncationValue>) {
+  if (!value.curve) return <PointBands value={value} stale={stale} />;
+  return <CurveFigures curve={value.curve} highlighted={value.highlighted} unit={value.unit} />;
+}
+
 /** X order by order with the band of the chosen method around each: narrow and dark, wide and pale. */
-export function BandsPlot({ value }: ResultProps<TruncationValue>) {
+function PointBands({ value }: ResultProps<TruncationValue>) {
   const { tables } = useBlock();
   const clip = useId();
   const names = new Map((tables["orders"] ?? []).map((row) => [row.id, row["name"] ?? ""]));

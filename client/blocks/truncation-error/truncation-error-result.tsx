@@ -1,3 +1,4 @@
+import type { CurveValue } from "#engine/truncation/curve-value.ts";
 import type { TruncationValue } from "#engine/truncation/value.ts";
 import { Formula, TextWithMath } from "../../ui/math.tsx";
 import type { ResultProps } from "../block-parts.ts";
@@ -6,6 +7,7 @@ import { Figure } from "../parts/figure.tsx";
 import { sizeText, textTo, withUnit } from "../parts/number-text.ts";
 import { ResultTable, type ResultColumnSpec } from "../parts/result-table.tsx";
 import { Coefficients } from "./coefficients.tsx";
+import { CorrelatedLines } from "./correlated-lines.tsx";
 import { assumptionOf, bandScalar, methodRows, resolutionOf, type MethodRow } from "./method-rows.ts";
 
 /** The methods side by side on the same data; the chosen one stands out. */
@@ -22,7 +24,8 @@ export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
   return (
     <>
       <p className="block-line block-verdict">
-        {sentenceStart(fields["quantity"] ?? "")} through order{" "}
+        {sentenceStart(fields["quantity"] ?? "")}
+        {value.curve && <At curve={value.curve} />} through order{" "}
         <Figure scalar="order">{String(last.order)}</Figure> is{" "}
         {value.highlighted ? (
           <strong>
@@ -53,9 +56,27 @@ export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
         ]}
       />
       <Coefficients value={value} />
+      {value.curve?.correlated && (
+        <CorrelatedLines
+          model={value.curve.correlated}
+          variable={value.curve.variable}
+          unit={value.curve.xUnit}
+        />
+      )}
       <p className="block-line block-caution">
         A model of what was left out, not a bound: it takes the coefficients to be of natural size.
       </p>
+    </>
+  );
+}
+
+/** " at p = 210 MeV": the point of the table. */
+function At({ curve }: { readonly curve: CurveValue }) {
+  return (
+    <>
+      {" "}
+      at <Formula latex={curve.variable} /> ={" "}
+      <Figure scalar="at">{withUnit(sizeText(curve.at, 4), curve.xUnit)}</Figure>
     </>
   );
 }

@@ -1,0 +1,58 @@
+/** Points and filled shapes for the plots along x. */
+import type { Axis } from "../parts/plot-scales.ts";
+
+/** The points that have a value. */
+export function pointsOf(
+  x: readonly number[],
+  values: readonly (number | null)[],
+): (readonly [number, number])[] {
+  return x.flatMap((at, index) => {
+    const value = values[index] ?? null;
+    return value === null ? [] : [[at, value] as const];
+  });
+}
+
+export interface Ribbon {
+  readonly x: number;
+  readonly low: number;
+  readonly high: number;
+}
+
+/** The outline of a band, in pieces where it is interrupted. */
+export function ribbonPath(ribbon: readonly (Ribbon | null)[], x: Axis, y: Axis): string {
+  const pieces: Ribbon[][] = [[]];
+  for (const at of ribbon) {
+    if (at) pieces.at(-1)?.push(at);
+    else pieces.push([]);
+  }
+  const point = (at: number, value: number) => `${x.position(at).toFixed(1)},${y.position(value).toFixed(1)}`;
+  return pieces
+    .filter((piece) => piece.length > 0)
+    .map((piece) => {
+      const there = piece.map(({ x: at, high }) => point(at, high));
+      const back = [...piece].reverse().map(({ x: at, low }) => point(at, low));
+      return `M${[...there, ...back].join("L")}Z`;
+    })
+    .join("");
+}
+
+/** From the least to the largest of some values, with a little room around. */
+export function rangeOf(values: readonly number[], room = 0.06): readonly [number, number] {
+  const finite = values.filter(Number.isFinite);
+  if (finite.length === 0) return [0, 1];
+  const [low, high] = [Math.min(...finite), Math.max(...finite)];
+  const space = (high - low || Math.abs(high) || 1) * room;
+  return [low - space, high + space];
+}
+
+/** The ends of a list of x, apart even when there is one only. */
+export function spanOf(x: readonly number[]): readonly [number, number] {
+  const [low, high] = [x[0] ?? 0, x.at(-1) ?? 1];
+  return low < high ? [low, high] : [low - 1, high + 1];
+}
+
+/** "p (MeV)": LaTeX of a name as plain text, with its unit. */
+export function axisLabel(name: string, unit: string): string {
+  const plain = name.replace(/\\([A-Za-z]+)/g, "$1").replace(/[{}$\\]/g, "");
+  return unit === "" ? plain : `${plain} (${unit})`;
+}

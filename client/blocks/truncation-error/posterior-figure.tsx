@@ -1,0 +1,65 @@
+import type { DrawnDensity } from "#engine/truncation/curve-value.ts";
+import { plain } from "../parts/plot-scales.ts";
+import { Plot, type Guide } from "../parts/plot.tsx";
+import { axisLabel, ribbonPath } from "./plot-shapes.ts";
+
+interface Props {
+  readonly symbol: string;
+  readonly density: DrawnDensity;
+  readonly stated?: number;
+  readonly alone?: readonly { readonly name: string; readonly density: readonly number[] }[];
+}
+
+/** A posterior density, shaded over its widest interval, with the value stated in the premises. */
+export function PosteriorFigure({ symbol, density, stated, alone = [] }: Props) {
+  const { grid, density: heights, intervals, median, unit } = density;
+  const top = Math.max(...heights, ...alone.flatMap((one) => one.density));
+  const widest = intervals.at(-1);
+  const label = axisLabel(symbol, unit);
+  const [first = 0, last = 1] = [grid[0], grid.at(-1)];
+  const guides: Guide[] = [
+    { axis: "x", value: median, label: "median", color: "ink" },
+    ...(stated !== undefined && stated >= first && stated <= last
+      ? [{ axis: "x" as const, value: stated, label: "stated", color: "relevant" as const }]
+      : []),
+  ];
+  return (
+    <Plot
+      name={`Posterior density of ${label}: median ${plain(median)}${intervals.map(({ degree, low, high }) => `, ${degree} % from ${plain(low)} to ${plain(high)}`).join("")}`}
+      x={{ kind: "linear", label, domain: [first, last] }}
+      y={{ kind: "linear", label: "probability density", domain: [0, top * 1.08] }}
+      curves={[
+        {
+          key: "joint",
+          label: alone.length > 0 ? "joint" : "",
+          points: grid.map((at, index) => [at, heights[index] ?? 0] as const),
+          style: 0,
+          color: "ink",
+        },
+        ...alone.map((one, index) => ({
+          key: `alone ${index}`,
+          label: one.name === "" ? `data ${index + 1}` : one.name,
+          points: grid.map((at, place) => [at, one.density[place] ?? 0] as const),
+          style: index + 1,
+          color: "irrelevant" as const,
+        })),
+      ]}
+      guides={guides}
+      below={(x, y) =>
+        widest && (
+          <path
+            className="plot-band-outer"
+            d={ribbonPath(
+              grid.flatMap((at, index) =>
+                at >= widest.low && at <= widest.high ? [{ x: at, low: 0, high: heights[index] ?? 0 }] : [],
+              ),
+              x,
+              y,
+            )}
+          />
+        )
+      }
+      table={{ x: label }}
+    />
+  );
+}
