@@ -29,6 +29,8 @@ export interface Configuration {
   readonly trustedProxies: number;
   /** Multiplies every rate limit; above 1 for tests and demonstrations on loopback. */
   readonly rateLimitFactor: number;
+  /** Lets one read /metrics from elsewhere; null: from loopback only. */
+  readonly metricsToken: string | null;
   /** Folder of the built page; null serves no page. */
   readonly clientFolder: string | null;
   readonly logLevel: "fatal" | "error" | "warn" | "info" | "debug" | "silent";
@@ -102,6 +104,11 @@ const environmentSchema = z.object({
     .number("RATE_LIMIT_FACTOR must be a number.")
     .positive("RATE_LIMIT_FACTOR must be above zero.")
     .default(1),
+  METRICS_TOKEN: z
+    .string()
+    .trim()
+    .min(16, "METRICS_TOKEN is too short: use at least 16 random characters.")
+    .optional(),
   CLIENT_FOLDER: z.string().trim().min(1).optional(),
   LOG_LEVEL: z
     .enum(
@@ -159,6 +166,7 @@ export function readConfiguration(
     // This server speaks plain HTTP, so an https address means that one proxy ends TLS in front of it.
     trustedProxies: variables.TRUSTED_PROXIES ?? (publicUrl?.startsWith("https:") ? 1 : 0),
     rateLimitFactor: variables.RATE_LIMIT_FACTOR,
+    metricsToken: variables.METRICS_TOKEN ?? null,
     clientFolder: variables.CLIENT_FOLDER ?? builtPage,
     logLevel: variables.LOG_LEVEL,
   };

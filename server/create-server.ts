@@ -11,6 +11,8 @@ import { createApp } from "./http/app.ts";
 import { openLog } from "./http/request-log.ts";
 import { openSessions } from "./http/sessions.ts";
 import { startMailSender } from "./mail/sender.ts";
+import { Metrics } from "./metrics/metrics.ts";
+import { measureProcess } from "./metrics/process-metrics.ts";
 import { listenForAccessChanges } from "./policies/access-changes.ts";
 import type { Services } from "./services.ts";
 
@@ -71,7 +73,13 @@ export async function createServer(
   const publicUrl = configuration.publicUrl ?? `http://${configuration.host}:${port}`;
   const database = openDatabase(configuration.databaseUrl, { log });
   const sessions = openSessions(configuration, publicUrl, log);
-  const services: Services = { configuration, publicUrl, database, log, sessions, accessChanges };
+  const metrics = new Metrics();
+  const stopMeasuring = measureProcess(metrics, database);
+  const stopping = new AbortController();
+  const services: Services = {
+    ...{ configuration, publicUrl, database, log, metrics, sessions, accessChanges },
+    stopping: stopping.signal,
+  };
   const compute = openCompute({ database, log });
   httpServer.on("request", createApp(services, compute));
   const collab = attachCollab(httpServer, {
@@ -83,6 +91,7 @@ export async function createServer(
   const housekeeping = startHousekeeping(services);
 
   const stop = async () => {
+    stopping.abort();
     const closed = closeHttp(httpServer);
     // Open sockets would keep the HTTP server from closing; what they sent is stored first.
     await collab.stop();
@@ -92,6 +101,7 @@ export async function createServer(
     await mail.stop();
     await accessChanges.stop();
     await sessions.stop();
+    stopMeasuring();
     await database.destroy();
   };
   return { httpServer, address: publicUrl, services, stop };

@@ -3,6 +3,7 @@ import type { Logger } from "pino";
 import type { Configuration } from "./configuration.ts";
 import type { Database } from "./data/database.ts";
 import type { Sessions } from "./http/sessions.ts";
+import type { Metrics } from "./metrics/metrics.ts";
 import type { AccessChanges } from "./policies/access-changes.ts";
 
 export interface Services {
@@ -11,6 +12,9 @@ export interface Services {
   readonly publicUrl: string;
   readonly database: Database;
   readonly log: Logger;
+  readonly metrics: Metrics;
   readonly sessions: Sessions;
   readonly accessChanges: AccessChanges;
+  /** Aborted once the server is asked to stop. */
+  readonly stopping: AbortSignal;
 }

@@ -9,6 +9,8 @@ import type { Configuration } from "../configuration.ts";
 import type { Database } from "../data/database.ts";
 import type { Sessions } from "../http/sessions.ts";
 import type { AccessChanges } from "../policies/access-changes.ts";
+import { measureStore } from "../metrics/collab-metrics.ts";
+import { Metrics } from "../metrics/metrics.ts";
 import { AccessWatch } from "./access-watch.ts";
 import type { RetryTimes } from "./append-until-answered.ts";
 import { admit, type Admitted } from "./admission.ts";
@@ -32,6 +34,8 @@ export interface CollabDependencies {
   readonly configuration: Pick<Configuration, "databaseUrl">;
   readonly database: Database;
   readonly log: Logger;
+  /** Where the work is counted; nobody reads it when left out. */
+  readonly metrics?: Metrics;
   readonly sessions: Pick<Sessions, "identify">;
   readonly accessChanges: Pick<AccessChanges, "onAccessChange">;
   /** Its origin is the only one that pages may come from. */
@@ -54,11 +58,16 @@ const LINGER_MS = 5_000;
 const LOAD_PATIENCE_MS = 20_000;
 const STOP_PATIENCE_MS = 10_000;
 const RECHECK_EVERY_MS = 30_000;
+/** Ours, and those of RFC 6455: going, leaving, and gone without a word. A stranger may send any number. */
+const codesToCount: ReadonlySet<number> = new Set([...Object.values(closeCode), 1000, 1001, 1005, 1006]);
 
 export function attachCollab(server: Server, dependencies: CollabDependencies): Collab {
   const { configuration, database, log, sessions, accessChanges } = dependencies;
-  const store =
-    dependencies.store ?? openDocumentStore({ database, databaseUrl: configuration.databaseUrl, log });
+  const metrics = dependencies.metrics ?? new Metrics();
+  const store = measureStore(
+    dependencies.store ?? openDocumentStore({ database, databaseUrl: configuration.databaseUrl, log }),
+    metrics,
+  );
   const neighbours = new Neighbours({
     database,
     databaseUrl: configuration.databaseUrl,
@@ -93,6 +102,12 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
   });
   sockets.on("error", (error) => log.error({ err: error }, "the socket server failed"));
   const connections = new Set<Connection>();
+  const closes = metrics.counter(
+    "subleading_sockets_closed_total",
+    "Sockets that ended, by the code of their end.",
+  );
+  metrics.gauge("subleading_sockets", "Open sockets.", () => connections.size);
+  metrics.gauge("subleading_notebooks_open", "Notebooks that are open here.", () => rooms.all().length);
   const ending = new AbortController();
   const isStopping = () => ending.signal.aborted;
 
@@ -109,6 +124,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
       return refuse(socket, 503);
     }
     sockets.handleUpgrade(request, socket, head, (accepted) => {
+      accepted.once("close", (code) => closes.add({ code: codesToCount.has(code) ? String(code) : "other" }));
       const connection = new Connection({
         ...admission,
         socket: accepted,

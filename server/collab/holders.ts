@@ -12,6 +12,8 @@ export interface HoldersOptions {
   readonly database: Database;
   readonly processId: string;
   readonly log: Logger;
+  /** Now and then for a notebook that others hold too: an announcement may have been missed. */
+  readonly onShared: (notebookId: string) => void;
 }
 
 export class Holders {
@@ -24,7 +26,9 @@ export class Holders {
 
   constructor(private readonly options: HoldersOptions) {
     this.#beat = setInterval(() => {
-      this.#beating = this.refresh();
+      this.#beating = this.refresh().then(() => {
+        for (const [notebookId, others] of this.#held) if (others.size > 0) this.options.onShared(notebookId);
+      });
     }, BEAT_EVERY_MS);
   }
 

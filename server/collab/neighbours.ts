@@ -42,7 +42,7 @@ export class Neighbours {
   #sending: Promise<void> = Promise.resolve();
 
   constructor(private readonly options: NeighboursOptions) {
-    this.holders = new Holders(options);
+    this.holders = new Holders({ ...options, onShared: options.onRows });
     this.#started = this.#listen();
   }
 
@@ -108,8 +108,8 @@ export class Neighbours {
           log,
           onNotification: (channel, payload) => this.#hear(channel, payload),
           onGap: () => {
-            void this.holders.refresh();
-            onGap();
+            // Noted as holders first: what is committed after that is announced to us again.
+            void this.holders.refresh().then(onGap);
           },
         });
       } catch (error) {

@@ -1,6 +1,7 @@
 /** What goes by itself with time. Several processes may do it at once: each finds what the other has left. */
 import type { Services } from "../services.ts";
 import { removeDeletedForGood } from "./deleted-notebooks.ts";
+import { prune } from "./prune.ts";
 
 export interface Housekeeping {
   stop(): Promise<void>;
@@ -16,8 +17,10 @@ export function startHousekeeping({ database, log }: Pick<Services, "database" |
     try {
       const count = await removeDeletedForGood(database);
       if (count > 0) log.info({ count }, "deleted notebooks have gone for good");
+      const pruned = await prune(database);
+      if (pruned.rows > 0 || pruned.results > 0) log.info(pruned, "what nobody needs any more has gone");
     } catch (error) {
-      log.error({ err: error }, "deleted notebooks could not be removed; they are tried again later");
+      log.error({ err: error }, "what has gone by time could not be removed; it is tried again later");
     }
   };
   const begin = () => {

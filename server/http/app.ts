@@ -5,6 +5,7 @@ import { evaluateRoutes, resultRoutes } from "../compute/routes.ts";
 import type { Services } from "../services.ts";
 import { answerFailure, answerUnknownAddress } from "./failures.ts";
 import { healthRoutes } from "./health.ts";
+import { measureRequests, metricsRoute } from "./metrics.ts";
 import { servePages } from "./pages.ts";
 import { createRateLimits } from "./rate-limits.ts";
 import { logRequests } from "./request-log.ts";
@@ -25,6 +26,8 @@ export function createApp(services: Services, compute: Compute): Express {
   app.disable("x-powered-by");
   app.use(securityHeaders(publicUrl));
   app.use(healthRoutes(services));
+  app.use(metricsRoute(services));
+  app.use(measureRequests(services.metrics));
   app.use(logRequests(log));
   app.use(["/api", "/auth"], (_request, response, next) => {
     // What one person may see must not be kept for the next.

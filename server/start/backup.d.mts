@@ -1,0 +1,1 @@
+export function backUp(address: string, file: string): void;

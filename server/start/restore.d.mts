@@ -1,0 +1,1 @@
+export function restore(address: string, file: string): void;
