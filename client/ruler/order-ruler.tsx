@@ -3,6 +3,7 @@
  * own numbers, until it is kept: then it is written into the premises like anything typed there.
  */
 import { useEffect, useLayoutEffect, useMemo, useRef, useState, type KeyboardEvent } from "react";
+import { sizeText } from "../blocks/parts/number-text.ts";
 import { useBlockWorld, useReadOnly } from "../editor/blocks/block-world.ts";
 import { keepReading } from "./keep-reading.ts";
 import { MarkPanel } from "./mark-panel.tsx";
@@ -10,7 +11,7 @@ import { ProbeRail } from "./probe-rail.tsx";
 import { readAt, type Reading, type ReadMark } from "./reading.ts";
 import { rulerAxis } from "./ruler-axis.ts";
 import type { RulerModel } from "./ruler-model.ts";
-import { EDGE, placed, RulerScale } from "./ruler-scale.tsx";
+import { EDGE, labelOf, NOTE_FROM, placed, RulerScale } from "./ruler-scale.tsx";
 import { useRulerSource, type RulerChoice, type RulerSource } from "./ruler-source.ts";
 import { probeWords, ratioWords, targetWords } from "./ruler-words.ts";
 import { saveSvg } from "./save-svg.ts";
@@ -94,6 +95,7 @@ function DrawnRuler({ source, choices, onChoose }: DrawnProps) {
         levels={levels}
         reading={reading}
         marks={marks}
+        keptTarget={model.target}
         estimate={estimate}
         moving={held}
         opened={opened}
@@ -106,25 +108,29 @@ function DrawnRuler({ source, choices, onChoose }: DrawnProps) {
         <ProbeRail
           model={model}
           reading={reading}
-          width={Math.min(380, width - 4)}
+          width={Math.min(300, width)}
           moving={held}
           onProbe={(probe) => tryValues({ probe })}
           onHold={setHeld}
           onKey={onKey}
         />
-        <Values source={source} reading={reading} />
-        {isMoved && (
-          <span className="ruler-actions">
-            {!readOnly && (
-              <button type="button" className="ruler-keep" onClick={keep}>
-                keep {keptWords(model, reading)} in the premises
-              </button>
-            )}
-            <button type="button" onClick={() => setTried(null)}>
-              put back
+        <Values source={source} reading={reading} isNarrow={width < NOTE_FROM} />
+        {/* Always there, so that nothing moves when they are needed. */}
+        <span className="ruler-actions" hidden={!isMoved}>
+          {!readOnly && (
+            <button
+              type="button"
+              className="ruler-keep"
+              aria-label={`keep ${keptWords(model, reading)} in the premises`}
+              onClick={keep}
+            >
+              keep in the premises
             </button>
-          </span>
-        )}
+          )}
+          <button type="button" onClick={() => setTried(null)}>
+            put back
+          </button>
+        </span>
         <span className="ruler-tools">
           {beyond > 0 && <span className="ruler-more">{beyond} off the scale</span>}
           {choices.length > 1 && (
@@ -171,7 +177,13 @@ function DrawnRuler({ source, choices, onChoose }: DrawnProps) {
   );
 }
 
-function Values({ source, reading }: { readonly source: RulerSource; readonly reading: Reading }) {
+interface ValuesProps {
+  readonly source: RulerSource;
+  readonly reading: Reading;
+  readonly isNarrow: boolean;
+}
+
+function Values({ source, reading, isNarrow }: ValuesProps) {
   const { model, heavyText } = source;
   return (
     <span className="ruler-values">
@@ -188,6 +200,15 @@ function Values({ source, reading }: { readonly source: RulerSource; readonly re
         <>
           {" "}
           <span>{reading.order ? `through order ${reading.order.text}` : "target not reached"}</span>
+        </>
+      )}
+      {isNarrow && reading.firstOut && (
+        <>
+          {" "}
+          <span>
+            first left out <i className="font-prose">{labelOf(reading.firstOut)}</i>,{" "}
+            {sizeText(reading.firstOut.size)}
+          </span>
         </>
       )}
     </span>
@@ -223,7 +244,7 @@ function layoutOf(model: RulerModel, width: number, withProducts: boolean) {
   const sizes = marks.map(({ size }) => size);
   const axis = rulerAxis(sizes, model.target, [EDGE, width - EDGE]);
   for (let levels = FEWEST_LEVELS; levels < MOST_LEVELS; levels += 1) {
-    const labels = placed(marks, kept.firstOut, axis, levels);
+    const labels = placed(marks, kept.firstOut, axis, levels, model.target);
     if ([...labels.values()].every(({ side }) => side !== null)) return { axis, levels };
   }
   return { axis, levels: MOST_LEVELS };

@@ -32,10 +32,15 @@ interface Room extends Span {
   readonly x: number;
 }
 
-export function placeLabels(
-  labels: readonly Labelled[],
-  { levels, left, right }: { readonly levels: number; readonly left: number; readonly right: number },
-): readonly PlacedLabel[] {
+export interface LabelRoom {
+  readonly levels: number;
+  readonly left: number;
+  readonly right: number;
+  /** Where a line goes from top to bottom: no label lies across it. */
+  readonly line?: number | null;
+}
+
+export function placeLabels(labels: readonly Labelled[], room: LabelRoom): readonly PlacedLabel[] {
   const taken: Room[] = [];
   const placed = new Map<string, PlacedLabel>();
   // Equal positions keep their order: the first stands lowest.
@@ -43,28 +48,47 @@ export function placeLabels(
     .map((label, index) => ({ label, index }))
     .sort((a, b) => b.label.x - a.label.x || a.index - b.index);
   for (const { label } of inTurn) {
-    const found = firstRoom(label, taken, levels, { from: left, to: right });
-    if (found) taken.push(found.room);
+    const found = firstRoom(label, taken, room) ?? roomOfMark(label, taken, room.levels);
+    taken.push(found.room);
     placed.set(label.id, {
       id: label.id,
       x: label.x,
-      level: found?.room.level ?? 0,
-      side: found?.side ?? null,
+      level: found.room.level,
+      side: found.side,
     });
   }
   return labels.flatMap(({ id }) => placed.get(id) ?? []);
 }
 
-function firstRoom(label: Labelled, taken: readonly Room[], levels: number, within: Span) {
+function firstRoom(label: Labelled, taken: readonly Room[], { levels, left, right, line = null }: LabelRoom) {
+  const rising = Array.from({ length: levels }, (_, level) => level);
   for (const side of ["right", "left"] as const) {
     const span = spanOf(label, side);
-    if (span.from < within.from || span.to > within.to) continue;
-    for (let level = 0; level < levels; level += 1) {
+    if (span.from < left || span.to > right) continue;
+    if (line !== null && isCrossed(label.x, span, line)) continue;
+    // To the left of its mark a label lies where others are still to come: it goes high, and their stems end below it.
+    for (const level of side === "right" ? rising : rising.toReversed()) {
       const room = { ...span, level, x: label.x };
       if (!taken.some((other) => meet(room, other))) return { side, room };
     }
   }
   return null;
+}
+
+/** The mark alone, when there is no room for its label: it still stands on nobody's words where that can be. */
+function roomOfMark({ x }: Labelled, taken: readonly Room[], levels: number) {
+  const rooms = Array.from({ length: levels }, (_, level) => ({
+    from: x - MARK_REACH,
+    to: x + MARK_REACH,
+    level,
+    x,
+  }));
+  const free = rooms.find((room) => !taken.some((other) => meet(room, other)));
+  return { side: null, room: free ?? { from: x, to: x, level: 0, x } };
+}
+
+function isCrossed(x: number, { from, to }: Span, line: number): boolean {
+  return line > from && line < to && Math.abs(line - x) > MARK_REACH;
 }
 
 /** What a mark and its label cover. */

@@ -77,7 +77,7 @@ export function modelOfPlan(plan: OrderPlanValue, premises: PremisesValue): Rule
   return {
     marks: [...singles, ...products].filter(isDrawable),
     probe: scaleOf(plan.probe),
-    heavy: scaleOf(plan.heavy),
+    heavy: inUnitOf(plan.probe, scaleOf(plan.heavy), Q.value),
     Q,
     target: plan.target,
     orders: plan.orders.map(({ order: [at], leftOut }) => ({
@@ -96,9 +96,6 @@ export function modelOfPlan(plan: OrderPlanValue, premises: PremisesValue): Rule
 export function modelOfScaling(scaling: ScalingValue): RulerModel | null {
   const { probe, heavy, expansion } = scaling;
   if (!probe?.size || !heavy?.size || !expansion || !(expansion.value > 0)) return null;
-  const { unit } = probe.size;
-  // The heavy scale in the probe's unit, whatever unit it was typed in.
-  const heavyValue = probe.size.value / expansion.value;
   const marks = scaling.rows.flatMap((row): RulerMark[] => {
     const excess = -floatOf(row.coefficient.text);
     if (row.kinetic || !row.size || !row.scalingClass || !Number.isFinite(excess)) return [];
@@ -120,13 +117,8 @@ export function modelOfScaling(scaling: ScalingValue): RulerModel | null {
   });
   return {
     marks: marks.filter(isDrawable),
-    probe: { name: plainLatex(probe.latex), value: probe.size.value, sigma: probe.size.sigma, unit },
-    heavy: {
-      name: plainLatex(heavy.latex),
-      value: heavyValue,
-      sigma: (heavy.size.sigma / heavy.size.value) * heavyValue,
-      unit,
-    },
+    probe: scaleOf({ latex: probe.latex, ...probe.size }),
+    heavy: inUnitOf(probe.size, scaleOf({ latex: heavy.latex, ...heavy.size }), expansion.value),
     Q: expansion,
     target: null,
     orders: [],
@@ -186,6 +178,16 @@ function excesses({ terms }: PremisesValue): ReadonlyMap<string, number> {
 
 function scaleOf({ latex, value, sigma, unit }: OrderPlanValue["probe"]): RulerScale {
   return { name: plainLatex(latex), value, sigma, unit };
+}
+
+/** The heavy scale in the probe's unit, whatever unit it was typed in: only so can both be on one rail. */
+function inUnitOf(
+  probe: { readonly value: number; readonly unit: string },
+  heavy: RulerScale,
+  Q: number,
+): RulerScale {
+  const value = probe.value / Q;
+  return { ...heavy, value, sigma: (heavy.sigma / heavy.value) * value, unit: probe.unit };
 }
 
 const isDrawable = ({ size, power }: RulerMark) =>

@@ -4,7 +4,7 @@ import { tenTo } from "../blocks/parts/plot-scales.ts";
 import { sizeText } from "../blocks/parts/number-text.ts";
 import { classes } from "../ui/classes.ts";
 import { roundedTarget } from "./kept-text.ts";
-import { labelWidth } from "./short-label.ts";
+import { labelWidth, NOTE_SCALE } from "./short-label.ts";
 import { LABEL_GAP, placeLabels, type PlacedLabel } from "./place-labels.ts";
 import type { Reading, ReadMark } from "./reading.ts";
 import { graduations, positionOf, sizeAtPosition, type RulerAxis } from "./ruler-axis.ts";
@@ -23,7 +23,12 @@ const shapes = {
   irrelevant: "M-5 -4H5L0 5z",
 } as const;
 
-export const scaleHeight = (levels: number) => CAPTION + levels * LEVEL + 4 + STRIP + 24;
+/** From the foot of the strip to the middle of the hairline's grip, clear of the numerals. */
+const GRIP = 23;
+/** Narrower than this, the first term left out is named below the scale and not on it. */
+export const NOTE_FROM = 640;
+
+export const scaleHeight = (levels: number) => CAPTION + levels * LEVEL + 4 + STRIP + GRIP + 7;
 
 interface Props {
   readonly drawing: RefObject<SVGSVGElement | null>;
@@ -32,6 +37,8 @@ interface Props {
   readonly levels: number;
   readonly reading: Reading;
   readonly marks: readonly ReadMark[];
+  /** The hairline's kept place: labels leave it free, and stay where they are while it is moved. */
+  readonly keptTarget: number | null;
   readonly estimate: EstimateBand | null;
   readonly moving: boolean;
   readonly opened: string | null;
@@ -41,10 +48,11 @@ interface Props {
   readonly onKey: (event: KeyboardEvent) => void;
 }
 
-export function labelOf({ mark, size }: ReadMark, isFirstOut: boolean): string {
-  const name = mark.insertions > 1 && mark.rowIds.length === 1 ? `${mark.label} twice` : mark.label;
-  return isFirstOut ? `${name} ← first left out, ${sizeText(size)}` : name;
+export function labelOf({ mark }: ReadMark): string {
+  return mark.insertions > 1 && mark.rowIds.length === 1 ? `${mark.label} twice` : mark.label;
 }
+
+const noteOf = ({ size }: ReadMark) => ` ← first left out, ${sizeText(size)}`;
 
 /** Labels of what is drawn, at the levels there are. */
 export function placed(
@@ -52,24 +60,31 @@ export function placed(
   firstOut: ReadMark | null,
   axis: RulerAxis,
   levels: number,
+  keptTarget: number | null,
 ): ReadonlyMap<string, PlacedLabel> {
+  const hasNote = axis.right + EDGE >= NOTE_FROM;
   const wanted = marks.map((read) => ({
     id: read.mark.id,
     x: positionOf(axis, read.size),
-    width: labelWidth(labelOf(read, read.mark.id === firstOut?.mark.id)),
+    width:
+      labelWidth(labelOf(read)) +
+      (hasNote && read.mark.id === firstOut?.mark.id ? NOTE_SCALE * labelWidth(noteOf(read)) : 0),
   }));
-  const room = { levels, left: axis.left - 18, right: axis.right + EDGE };
+  const line = keptTarget === null ? null : positionOf(axis, keptTarget);
+  const room = { levels, left: axis.left - 18, right: axis.right + EDGE, line };
   return new Map(placeLabels(wanted, room).map((label) => [label.id, label]));
 }
 
 export function RulerScale(props: Props) {
   const { drawing, axis, width, levels, reading, marks, estimate, moving, opened } = props;
   const height = scaleHeight(levels);
+  const hasNote = width >= NOTE_FROM;
   const floor = CAPTION + levels * LEVEL + 4;
   const { target, firstOut } = reading;
   const hairline = target === null ? null : positionOf(axis, target);
-  const labels = placed(marks, firstOut, axis, levels);
+  const labels = placed(marks, firstOut, axis, levels, props.keptTarget);
   const current = opened ?? marks[0]?.mark.id ?? null;
+  const ticks = graduations(axis);
   return (
     <svg
       ref={drawing}
@@ -85,34 +100,48 @@ export function RulerScale(props: Props) {
       {estimate && <Estimate band={estimate} axis={axis} floor={floor} />}
       <path className="ruler-line" d={`M0 ${floor}H${width}`} />
       <path className="ruler-foot" d={`M0 ${floor + STRIP}H${width}`} />
-      {graduations(axis).map(({ x, length, power }) => (
-        <g key={x}>
-          <path
-            className={`ruler-tick is-${length}`}
-            d={`M${x.toFixed(1)} ${floor}v${length === "long" ? STRIP : length === "middle" ? 8 : 5}`}
-          />
-          {power !== null && (
-            <text className="ruler-power" x={x} y={floor + STRIP + 14} textAnchor="middle">
+      {ticks.map(({ x, length }) => (
+        <path
+          key={x}
+          className={`ruler-tick is-${length}`}
+          d={`M${x.toFixed(1)} ${floor}v${length === "long" ? STRIP : length === "middle" ? 8 : 5}`}
+        />
+      ))}
+      {target !== null && hairline !== null && (
+        <Hairline {...props} target={target} x={hairline} floor={floor} />
+      )}
+      {ticks.map(
+        ({ x, power }) =>
+          power !== null && (
+            <text key={x} className="ruler-power" x={x} y={floor + STRIP + 13} textAnchor="middle">
               {tenTo(power)}
             </text>
-          )}
-        </g>
-      ))}
+          ),
+      )}
+      {marks.map(({ mark: { id } }) => {
+        const { x, level } = labels.get(id) ?? nowhere;
+        return (
+          <path
+            key={id}
+            className="ruler-stem"
+            style={{ transform: `translateX(${x.toFixed(2)}px)` }}
+            d={`M0 ${floor}V${floor - heightOf(level)}`}
+          />
+        );
+      })}
       {marks.map((read) => (
         <Mark
           key={read.mark.id}
           read={read}
           floor={floor}
-          place={labels.get(read.mark.id) ?? { id: read.mark.id, x: 0, level: 0, side: null }}
+          place={labels.get(read.mark.id) ?? nowhere}
+          note={hasNote && read.mark.id === firstOut?.mark.id ? noteOf(read) : null}
           isFirstOut={read.mark.id === firstOut?.mark.id}
           current={read.mark.id === current}
           opened={read.mark.id === opened}
           onOpen={() => props.onOpen(read.mark.id === opened ? null : read.mark.id)}
         />
       ))}
-      {target !== null && hairline !== null && (
-        <Hairline {...props} target={target} x={hairline} floor={floor} />
-      )}
     </svg>
   );
 }
@@ -127,20 +156,23 @@ function walk(event: KeyboardEvent<SVGSVGElement>): void {
   marks[(at + step + marks.length) % marks.length]?.focus();
 }
 
+const nowhere: PlacedLabel = { id: "", x: 0, level: 0, side: null };
+const heightOf = (level: number) => 11 + level * LEVEL;
+
 interface MarkProps {
   readonly read: ReadMark;
   readonly floor: number;
   readonly place: PlacedLabel;
+  readonly note: string | null;
   readonly isFirstOut: boolean;
   readonly current: boolean;
   readonly opened: boolean;
   readonly onOpen: () => void;
 }
 
-function Mark({ read, floor, place, isFirstOut, current, opened, onOpen }: MarkProps) {
+function Mark({ read, floor, place, note, isFirstOut, current, opened, onOpen }: MarkProps) {
   const { mark, included } = read;
-  const height = 11 + place.level * LEVEL;
-  const [name = "", ...note] = labelOf(read, isFirstOut).split(" ← ");
+  const height = heightOf(place.level);
   const toRight = place.side !== "left";
   return (
     <g
@@ -164,7 +196,6 @@ function Mark({ read, floor, place, isFirstOut, current, opened, onOpen }: MarkP
     >
       <title>{markName(read, isFirstOut)}</title>
       <rect data-hand="" className="ruler-touch" x={-12} y={floor - height - 12} width={24} height={24} />
-      <path className="ruler-stem" d={`M0 ${floor}V${floor - height}`} />
       <path
         className="ruler-shape"
         d={shapes[mark.scalingClass]}
@@ -177,8 +208,8 @@ function Mark({ read, floor, place, isFirstOut, current, opened, onOpen }: MarkP
           y={floor - height + 4}
           textAnchor={toRight ? "start" : "end"}
         >
-          {name}
-          {note.length > 0 && <tspan className="ruler-note">{` ← ${note.join("")}`}</tspan>}
+          {labelOf(read)}
+          {note !== null && <tspan className="ruler-note">{note}</tspan>}
         </text>
       )}
     </g>
@@ -257,9 +288,9 @@ function Hairline(props: Props & { readonly target: number; readonly x: number; 
       }}
       {...drag}
     >
-      <rect data-hand="" className="ruler-touch" x={-12} y={0} width={24} height={floor + STRIP + 24} />
-      <path className="ruler-hair" d={`M0 2V${floor + STRIP + 16}`} />
-      <circle className="ruler-grip" cy={floor + STRIP + 16} r={5} />
+      <rect data-hand="" className="ruler-touch" x={-12} y={0} width={24} height={floor + STRIP + GRIP + 6} />
+      <path className="ruler-hair" d={`M0 2V${floor + STRIP + GRIP - 5}`} />
+      <circle className="ruler-grip" cy={floor + STRIP + GRIP} r={5} />
       <text className="ruler-target" x={toRight ? 7 : -7} y={11} textAnchor={toRight ? "start" : "end"}>
         {words}
       </text>

@@ -12,6 +12,8 @@ const carried = [
   "font-style",
   "font-weight",
   "text-anchor",
+  "paint-order",
+  "stroke-linejoin",
 ] as const;
 
 /** `caption` stands below the scale: the values that the sizes belong to. */

@@ -22,6 +22,9 @@ function numerators(latex: string): string {
   return text;
 }
 
+/** The note beside a label is set smaller than the label. */
+export const NOTE_SCALE = 0.78;
+
 /** Wide enough for the face in any browser; a label that is measured too wide only stands alone. In px at 13 px. */
 export function labelWidth(text: string): number {
   let width = 0;
