@@ -13,7 +13,15 @@ import { ScrollBox } from "../parts/scroll-box.tsx";
 /** At one point the bands order by order; with data along x all that is drawn there. */
 export function BandsPlot({ value, stale }: ResultProps<TruncationValue>) {
   if (!value.curve) return <PointBands value={value} stale={stale} />;
-  return <CurveFigures curve={value.curve} highlighted={value.highlighted} unit={value.unit} />;
+  const [degree] = value.degrees;
+  return (
+    <CurveFigures
+      curve={value.curve}
+      highlighted={value.highlighted}
+      unit={value.unit}
+      degree={degree?.text ?? ""}
+    />
+  );
 }
 
 /** X order by order with the band of the chosen method around each: narrow and dark, wide and pale. */

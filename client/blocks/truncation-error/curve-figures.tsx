@@ -6,6 +6,7 @@ import { BandsAlong } from "./bands-along.tsx";
 import { CoefficientsAlong } from "./coefficients-along.tsx";
 import { CoverageFigure } from "./coverage-figure.tsx";
 import { DistanceFigure } from "./distance-figure.tsx";
+import { MethodsAlong } from "./methods-along.tsx";
 import { PivotedFigure } from "./pivoted-figure.tsx";
 import { PosteriorFigure } from "./posterior-figure.tsx";
 
@@ -13,14 +14,17 @@ interface Props {
   readonly curve: CurveValue;
   readonly highlighted: Band | null;
   readonly unit: string;
+  /** The first degree of belief, in percent. */
+  readonly degree: string;
 }
 
-export function CurveFigures({ curve, highlighted, unit }: Props) {
+export function CurveFigures({ curve, highlighted, unit, degree }: Props) {
   const { correlated } = curve;
   const found = (check: Finding["check"]) => correlated?.findings.find((one) => one.check === check);
   return (
     <>
       <BandsAlong curve={curve} highlighted={highlighted} unit={unit} />
+      <MethodsAlong curve={curve} unit={unit} degree={degree} />
       <CoefficientsAlong curve={curve} />
       <Said finding={found("coefficients")} />
       {correlated?.breakdown && (

@@ -1,4 +1,5 @@
 /** Points and filled shapes for the plots along x. */
+import { plainLatex } from "../parts/plain-latex.ts";
 import type { Axis } from "../parts/plot-scales.ts";
 
 /** The points that have a value. */
@@ -53,6 +54,6 @@ export function spanOf(x: readonly number[]): readonly [number, number] {
 
 /** "p (MeV)": LaTeX of a name as plain text, with its unit. */
 export function axisLabel(name: string, unit: string): string {
-  const plain = name.replace(/\\([A-Za-z]+)/g, "$1").replace(/[{}$\\]/g, "");
+  const plain = plainLatex(name);
   return unit === "" ? plain : `${plain} (${unit})`;
 }

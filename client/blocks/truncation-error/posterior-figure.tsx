@@ -10,24 +10,37 @@ interface Props {
   readonly alone?: readonly { readonly name: string; readonly density: readonly number[] }[];
 }
 
-/** A posterior density, shaded over its widest interval, with the value stated in the premises. */
+const VISIBLE = 0.003;
+
+/** A posterior density with its median, shaded over its widest interval, with the value stated in the premises. */
 export function PosteriorFigure({ symbol, density, stated, alone = [] }: Props) {
-  const { grid, density: heights, intervals, median, unit } = density;
+  const { intervals, median, unit } = density;
+  // Where next to nothing is left there is nothing to see.
+  const kept = density.density.flatMap((height, index) =>
+    [height, ...alone.map((one) => one.density[index] ?? 0)].some(
+      (one) => one > VISIBLE * Math.max(...density.density),
+    )
+      ? [index]
+      : [],
+  );
+  const from = Math.max(0, (kept[0] ?? 0) - 1);
+  const to = Math.min(density.grid.length, (kept.at(-1) ?? 0) + 2);
+  const [grid, heights] = [density.grid.slice(from, to), density.density.slice(from, to)];
   const top = Math.max(...heights, ...alone.flatMap((one) => one.density));
   const widest = intervals.at(-1);
   const label = axisLabel(symbol, unit);
   const [first = 0, last = 1] = [grid[0], grid.at(-1)];
   const guides: Guide[] = [
-    { axis: "x", value: median, label: "median", color: "ink" },
+    { axis: "x", value: median, label: "", color: "ink" },
     ...(stated !== undefined && stated >= first && stated <= last
-      ? [{ axis: "x" as const, value: stated, label: "stated", color: "relevant" as const }]
+      ? [{ axis: "x" as const, value: stated, label: "as stated", color: "relevant" as const }]
       : []),
   ];
   return (
     <Plot
       name={`Posterior density of ${label}: median ${plain(median)}${intervals.map(({ degree, low, high }) => `, ${degree} % from ${plain(low)} to ${plain(high)}`).join("")}`}
       x={{ kind: "linear", label, domain: [first, last] }}
-      y={{ kind: "linear", label: "probability density", domain: [0, top * 1.08] }}
+      y={{ kind: "linear", label: "probability density, with its median", domain: [0, top * 1.08] }}
       curves={[
         {
           key: "joint",
@@ -39,7 +52,7 @@ export function PosteriorFigure({ symbol, density, stated, alone = [] }: Props) 
         ...alone.map((one, index) => ({
           key: `alone ${index}`,
           label: one.name === "" ? `data ${index + 1}` : one.name,
-          points: grid.map((at, place) => [at, one.density[place] ?? 0] as const),
+          points: grid.map((at, place) => [at, one.density[from + place] ?? 0] as const),
           style: index + 1,
           color: "irrelevant" as const,
         })),

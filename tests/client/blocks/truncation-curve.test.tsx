@@ -15,7 +15,7 @@ const theory = theoryOf({
 function draw(method: string, count = 41) {
   const { value } = evaluateCurve({ d: ternTable(count, 4) }, { method }, theory);
   if (!value?.curve) throw new Error("there is a curve");
-  render(<CurveFigures curve={value.curve} highlighted={value.highlighted} unit={value.unit} />);
+  render(<CurveFigures curve={value.curve} highlighted={value.highlighted} unit={value.unit} degree="68" />);
   return value;
 }
 
@@ -25,17 +25,18 @@ describe("what is drawn along x", () => {
     const names = screen.getAllByRole("img").map((one) => one.getAttribute("aria-label"));
     expect(names).toEqual([
       "The quantity along p (MeV), order by order, with the band of conjugate prior around order 4",
+      "Half-widths of all methods along p (MeV) after order 4, at 68 %",
       "Coefficients along p (MeV), with one and two standard deviations around 0",
     ]);
-    expect(screen.getAllByText("as a table")).toHaveLength(2);
+    expect(screen.getAllByText("as a table")).toHaveLength(3);
   });
 
   it("with the correlated model: both posteriors and all checks, each with what it found in a sentence", () => {
     const value = draw("correlated along x");
     const names = screen.getAllByRole("img").map((one) => one.getAttribute("aria-label") ?? "");
-    expect(names).toHaveLength(7);
+    expect(names).toHaveLength(8);
     expect(names.join("\n")).toMatch(
-      /Posterior density of Lambda \(MeV\): median \d+.*68 % from \d+.*\n.*ℓ \(MeV\).*\n.*degree of belief\n.*Mahalanobis.*\n.*Cholesky/,
+      /Posterior density of Λ \(MeV\): median \d+.*68 % from \d+.*\n.*ℓ \(MeV\).*\n.*degree of belief\n.*Mahalanobis.*\n.*Cholesky/,
     );
     for (const { says } of value.curve?.correlated?.findings ?? [])
       expect(screen.getByText(says, { exact: false })).toBeTruthy();
