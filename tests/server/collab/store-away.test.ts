@@ -73,6 +73,21 @@ describe("the store goes away", () => {
     }
   });
 
+  test.each([
+    ["a full disk", "53100"],
+    ["a disk that refuses to write", "58030"],
+  ])("with %s: people are told, and it is stored once there is room", async (_what, code) => {
+    const notebookId = await stage.notebook();
+    const writer = await stage.write(stage.ada, notebookId);
+    store().fail("append", { error: Object.assign(new Error("could not write"), { code }) });
+    writer.type("kept");
+    await until("they are told", () => writer.notices.some(({ about }) => about === "store-unreachable"));
+    store().fail("append", null);
+    await writer.allSaved();
+    expect(writer.closes).toEqual([]);
+    expect(await stored(notebookId)).toBe("kept");
+  });
+
   test("with a complaint that never passes: the room is loaded afresh and the authors send again", async () => {
     const notebookId = await stage.notebook();
     const writer = await stage.write(stage.ada, notebookId);
