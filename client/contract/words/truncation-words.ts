@@ -103,6 +103,7 @@ export const truncationWords: Words = {
     `The reference is 0 at ${said(points)} of ${said(count)} points, where no coefficient exists. They are left out; a reference column, or a number, avoids it.`,
   "q-beyond-one-along": ({ points, count, from, to }) =>
     `Q is not below 1 at ${said(points)} of ${said(count)} points, from x = ${said(from)} to ${said(to)}. Sums over omitted orders do not exist there, and the correlated model leaves these points out.`,
+  "observables-too-many": ({ most }) => `At most ${said(most)} further observables are combined at once.`,
   "observable-twice": () =>
     "This observable is the block's own data: each may count once in the joint posterior.",
   "correlated-without-coefficients": () =>

@@ -43,6 +43,8 @@ interface Given {
 
 const SMALLEST_NUGGET = 1e-8;
 const LARGEST_NUGGET = 0.1;
+/** Each is a fit of its own. */
+const MOST_OBSERVABLES = 8;
 /** Fewer points have no length scale. */
 const FEWEST_POINTS = 3;
 
@@ -186,6 +188,8 @@ function readBelief({ inputs, theory, problems }: Given, scale: BreakdownScale):
 /** Further observables; what is wrong with one is said at its row. */
 function readOthers(given: Given): { observable: Observable; name: string }[] {
   const { inputs, settings, theory, sources, problems } = given;
+  if (inputs.observables.length > MOST_OBSERVABLES)
+    problems.push({ code: "observables-too-many", path: ["observables"], facts: { most: MOST_OBSERVABLES } });
   return inputs.observables.flatMap((row) => {
     const source = sources.get(row.data);
     if (!source) return [];

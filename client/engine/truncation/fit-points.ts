@@ -4,6 +4,7 @@
  * of ℓ apart carry all that the kernel says the others do, and their number is the number of data.
  */
 import { coefficientsAt } from "./coefficients-along.ts";
+import { evenly } from "./curve-data.ts";
 import { lengthRange, searchLengths } from "./length-search.ts";
 import { likelihoodOf, type Observable, type Prior } from "./likelihood.ts";
 
@@ -12,6 +13,8 @@ const FIRST_PARTS = 15;
 const FEWEST_PARTS = 4;
 const ROUNDS = 6;
 const WINDOW = 80;
+/** A factor costs the cube of this and holds its square; more points than this are fitted by as many of them. */
+const MOST = 600;
 /** The factor by which a length found among neighbours may be wrong. */
 const KNOWN = 3;
 /** Points this much nearer than wanted are taken all the same: the next may be much too far. */
@@ -46,9 +49,13 @@ export function fitPoints(
   const whole = (all.x.at(-1) ?? 0) - (all.x[0] ?? 0);
   const apart = apartFor(observable.nugget);
   const gapFor = (scale: number) => Math.min(apart * scale, whole / FEWEST_PARTS);
+  const placesFor = (gap: number) => {
+    const places = placesApart(all.x, gap);
+    return evenly(places.length, MOST).map((index) => places[index] ?? 0);
+  };
   const at = (gap: number) => ({
     ...observable,
-    coefficients: coefficientsAt(all, placesApart(all.x, gap)),
+    coefficients: coefficientsAt(all, placesFor(gap)),
   });
   const chosen = (gap: number, best: number | null): FitPoints => {
     const points = at(gap);

@@ -233,6 +233,12 @@ describe("the correlated model in a block", () => {
       "breakdown-width-unreadable",
     ],
     ["the same data twice", three, { observables: [{ id: "r", data: "d", q: "" }] }, "observable-twice"],
+    [
+      "a crowd of observables",
+      three,
+      { observables: Array.from({ length: 9 }, (_, row) => ({ id: `r${row}`, data: "", q: "" })) },
+      "observables-too-many",
+    ],
   ])("says what is wrong: %s", (_, table, inputs, code) => {
     const result = evaluateCurve({ d: table }, { ...correlated, ...inputs }, theory);
     expect(codes(result.problems)).toContain(code);
@@ -251,6 +257,20 @@ describe("the correlated model in a block", () => {
     const result = evaluateCurve({ d: rough }, correlated, theory);
     expect(codes(result.notices)).toContain("length-not-resolved");
     said(result);
+  });
+
+  it("takes a table of many thousand rough points, and repeated ones, by fitting some of them", () => {
+    const count = 6000;
+    const x = Array.from({ length: count }, (_, index) => 60 + Math.floor(index / 2) / 10);
+    const rough = (n: number) => x.map((at, index) => 10 + Math.sin(index * index + n) * (at / 600) ** n);
+    const result = evaluateCurve(
+      { d: { x, orders: { 0: x.map(() => 10), 1: rough(1) } } },
+      { ...correlated, length: "0.1" },
+      theory,
+    );
+    expect(result.problems).toEqual([]);
+    expect(result.value?.curve?.correlated?.points).toBe(600);
+    expect(codes(result.notices)).toContain("points-thinned");
   });
 
   it("says when the prior and not the data ends the breakdown scale", () => {
