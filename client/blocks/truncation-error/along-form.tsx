@@ -1,4 +1,4 @@
-import { breakdownPriors } from "#engine/truncation/shape.ts";
+import { breakdownPriors, unlessTyped } from "#engine/truncation/shape.ts";
 import { useBlock } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
 import { RowTable } from "../parts/row-table.tsx";
@@ -63,7 +63,13 @@ export function AlongForm() {
           placeholder="a quarter"
         />
         <TextField place={{ field: "breakdownTo" }} label="to" showLabel size={8} placeholder="four times" />
-        <TextField place={{ field: "breakdownWidth" }} label="width, if normal" showLabel size={4} />
+        <TextField
+          place={{ field: "breakdownWidth" }}
+          label="width, if normal"
+          showLabel
+          size={4}
+          placeholder={unlessTyped.breakdownWidth}
+        />
       </div>
       <RowTable
         table="observables"

@@ -1,5 +1,5 @@
 /** The methods side by side: one row for each method and what it estimates, one column for each degree of belief. */
-import type { Method, Omitted } from "#engine/truncation/shape.ts";
+import { unlessTyped, type Method, type Omitted } from "#engine/truncation/shape.ts";
 import type { Band, TruncationValue } from "#engine/truncation/value.ts";
 
 export interface MethodRow {
@@ -61,11 +61,11 @@ export function assumptionOf(
     case "uniform prior":
       return `coefficients bounded, their scale unknown; ${what}`;
     case "prior set A":
-      return `coefficients bounded by $\\bar c$ from ${numberIn(fields["cbarLow"])} to ${numberIn(fields["cbarHigh"])}; ${several(fields, what)}`;
+      return `coefficients bounded by $\\bar c$ from ${setting(fields, "cbarLow")} to ${setting(fields, "cbarHigh")}; ${several(fields, what)}`;
     case "prior set B":
-      return `coefficients bounded by $\\bar c$ near 1, $\\sigma = ${numberIn(fields["cbarWidth"])}$; ${several(fields, what)}`;
+      return `coefficients bounded by $\\bar c$ near 1, $\\sigma = ${setting(fields, "cbarWidth")}$; ${several(fields, what)}`;
     case "prior set C":
-      return `coefficients normal, $\\bar c$ from ${numberIn(fields["cbarLow"])} to ${numberIn(fields["cbarHigh"])}; ${several(fields, what)}`;
+      return `coefficients normal, $\\bar c$ from ${setting(fields, "cbarLow")} to ${setting(fields, "cbarHigh")}; ${several(fields, what)}`;
     case "correlated along x":
       return `coefficients normal and alike over a length in $x$; ${what}`;
     case "first omitted term":
@@ -75,6 +75,10 @@ export function assumptionOf(
   }
 }
 
+function setting(fields: Readonly<Record<string, string>>, field: keyof typeof unlessTyped): string {
+  const typed = (fields[field] ?? "").trim();
+  return numberIn(typed === "" ? unlessTyped[field] : typed);
+}
 function several(fields: Readonly<Record<string, string>>, what: string): string {
   const terms = (fields["terms"] ?? "").trim();
   return terms === "" || terms === "1" ? what : `${terms} orders summed`;

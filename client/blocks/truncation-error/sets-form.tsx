@@ -1,4 +1,4 @@
-import { setChoices } from "#engine/truncation/shape.ts";
+import { setChoices, unlessTyped } from "#engine/truncation/shape.ts";
 import { useBlock } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
 import { TextField } from "../parts/text-field.tsx";
@@ -12,9 +12,27 @@ export function SetsForm() {
       <summary>prior sets A, B, C</summary>
       <div className="block-settings">
         <ChoiceField place={{ field: "sets" }} label="table" showLabel options={setChoices} />
-        <TextField place={{ field: "cbarLow" }} label="c̄ of A and C from" showLabel size={5} />
-        <TextField place={{ field: "cbarHigh" }} label="to" showLabel size={5} />
-        <TextField place={{ field: "cbarWidth" }} label="width of ln c̄ in B" showLabel size={4} />
+        <TextField
+          place={{ field: "cbarLow" }}
+          label="c̄ of A and C from"
+          showLabel
+          size={5}
+          placeholder={unlessTyped.cbarLow}
+        />
+        <TextField
+          place={{ field: "cbarHigh" }}
+          label="to"
+          showLabel
+          size={5}
+          placeholder={unlessTyped.cbarHigh}
+        />
+        <TextField
+          place={{ field: "cbarWidth" }}
+          label="width of ln c̄ in B"
+          showLabel
+          size={4}
+          placeholder={unlessTyped.cbarWidth}
+        />
         <TextField
           place={{ field: "terms" }}
           label="omitted terms"

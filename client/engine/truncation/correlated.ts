@@ -13,7 +13,7 @@ import type { Observable } from "./likelihood.ts";
 import { readParameterAlong, type BreakdownScale, type ParameterAlong } from "./parameter-along.ts";
 import { readNumber } from "./read-orders.ts";
 import type { Settings } from "./read-settings.ts";
-import type { TruncationInputs } from "./shape.ts";
+import { typedOr, type TruncationInputs } from "./shape.ts";
 
 export interface Correlated {
   readonly posterior: JointPosterior;
@@ -165,7 +165,7 @@ function readBelief({ inputs, theory, problems }: Given, scale: BreakdownScale):
       path: ["breakdownTo"],
       facts: { from: roundFloat(from) },
     });
-  const width = readNumber(inputs.breakdownWidth)?.toFloat() ?? NaN;
+  const width = readNumber(typedOr(inputs, "breakdownWidth"))?.toFloat() ?? NaN;
   if (inputs.breakdownPrior === "normal in its logarithm" && !(width > 0))
     problems.push({
       code: "breakdown-width-unreadable",

@@ -1,7 +1,7 @@
 /** Reads the single fields of the block other than the expansion parameter. */
 import type { Notice, Problem } from "../evaluation.ts";
 import { readNumber } from "./read-orders.ts";
-import { isPriorSet, setChoices, type TruncationInputs } from "./shape.ts";
+import { isPriorSet, setChoices, typedOr, type TruncationInputs } from "./shape.ts";
 import type { Degree, PriorSettings } from "./value.ts";
 
 const MOST_DEGREES = 6;
@@ -64,12 +64,12 @@ type Wrong = (code: string, field: string, text: string, facts?: Record<string, 
 
 function readSets(inputs: TruncationInputs, wrong: Wrong): PriorSettings {
   const positive = (field: "cbarLow" | "cbarHigh" | "cbarWidth") => {
-    const value = readNumber(inputs[field])?.toFloat() ?? NaN;
+    const value = readNumber(typedOr(inputs, field))?.toFloat() ?? NaN;
     if (!(value > 0)) wrong("cbar-unreadable", field, inputs[field]);
     return value;
   };
   const [low, high, sigma] = [positive("cbarLow"), positive("cbarHigh"), positive("cbarWidth")];
-  if (low >= high) wrong("cbar-limits-reversed", "cbarHigh", inputs.cbarHigh, { low });
+  if (low >= high) wrong("cbar-limits-reversed", "cbarHigh", typedOr(inputs, "cbarHigh"), { low });
   const typed = inputs.terms.trim();
   const terms = typed === "" ? null : /^\d{1,3}$/.test(typed) ? Number(typed) : 0;
   if (terms !== null && (terms < 1 || terms > MOST_TERMS))

@@ -29,6 +29,14 @@ export const setChoices = ["without sets A, B, C", "with sets A, B, C"] as const
 export const breakdownPriors = ["uniform in its logarithm", "uniform", "normal in its logarithm"] as const;
 export type BreakdownPrior = (typeof breakdownPriors)[number];
 
+/** What settings that few people touch are while they are empty. */
+export const unlessTyped = {
+  cbarLow: "0.001",
+  cbarHigh: "1000",
+  cbarWidth: "1",
+  breakdownWidth: "0.5",
+} as const;
+
 export const truncationShape = defineShape({
   fields: {
     title: note(),
@@ -51,11 +59,11 @@ export const truncationShape = defineShape({
     method: choice(...methods),
     omitted: choice(...omittedChoices),
     sets: choice(...setChoices),
-    /** Limits of c̄ in sets A and C. */
-    cbarLow: text("0.001"),
-    cbarHigh: text("1000"),
+    /** Limits of c̄ in sets A and C; "" is what `unlessTyped` says, here and below. */
+    cbarLow: text(),
+    cbarHigh: text(),
     /** Width of ln c̄ in set B. */
-    cbarWidth: text("1"),
+    cbarWidth: text(),
     /** How many omitted terms the prior sets sum; "" follows `omitted`. */
     terms: text(),
     /** A table of predictions along x, in place of the orders typed here. */
@@ -75,7 +83,7 @@ export const truncationShape = defineShape({
     breakdownFrom: text(),
     breakdownTo: text(),
     /** Width of the normal prior in ln Λ_b, about the stated value. */
-    breakdownWidth: text("0.5"),
+    breakdownWidth: text(),
     note: note(),
   },
   tables: {
@@ -96,3 +104,8 @@ export const truncationShape = defineShape({
   },
 });
 export type TruncationInputs = InputsOf<typeof truncationShape>;
+
+/** A setting as typed, or what stands for it. */
+export function typedOr(inputs: TruncationInputs, field: keyof typeof unlessTyped): string {
+  return inputs[field].trim() === "" ? unlessTyped[field] : inputs[field];
+}
