@@ -2,6 +2,7 @@
 import * as z from "zod/mini";
 import type { Evaluation } from "#engine/evaluation.ts";
 import { roles, type Role } from "./roles.ts";
+import { templateNames } from "./templates.ts";
 
 const title = z.string().check(z.trim(), z.minLength(1), z.maxLength(300));
 const uuid = z.uuid();
@@ -52,7 +53,7 @@ export const notebookListQuery = z.object({
 });
 export const notebookCreate = z.strictObject({
   title: z._default(title, "Untitled notebook"),
-  template: z._default(z.enum(["blank", "lantern"]), "blank"),
+  template: z._default(z.enum(templateNames), "blank"),
 });
 export interface Notebook {
   readonly id: string;

@@ -1,10 +1,10 @@
 /** Makes a notebook with its maker as owner, and fills it from a template in the same transaction. */
 import type { Knex } from "knex";
+import type { Template } from "#contract/templates.ts";
 import { SCHEMA_VERSION } from "#schema/version.ts";
 import type { Database } from "../data/database.ts";
 import { recordEvent } from "../data/events.ts";
 
-export type Template = "blank" | "lantern";
 /** Writes the template's document into an empty notebook. */
 export type SeedNotebook = (
   transaction: Knex.Transaction,

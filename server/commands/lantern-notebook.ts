@@ -3,11 +3,9 @@
  * Its pins are taken from the engine when it is made, never written by hand.
  */
 import { block, displayed, heading, paragraph, type DocumentNode } from "./document-builder.ts";
+import type { PinMaker } from "./pin-maker.ts";
 
 export const LANTERN_TITLE = "Lantern amplitude to one per mille";
-
-/** Makes a pin of one scalar of one block; `format` as in engine/notebook/pin-format.ts. */
-export type PinMaker = (blockId: string, scalar: string, format: string) => DocumentNode;
 
 export const lanternBlocks: readonly DocumentNode[] = [
   block("premises", "lantern", "", {

@@ -1,10 +1,10 @@
-/** The demonstration notebook is complete and agrees with itself. */
+/** The demonstration notebooks are complete and agree with themselves. */
 import { expect, test } from "vitest";
 import { seedDemonstration } from "../../server/commands/seed-demonstration.ts";
 import { openDatabase, rows } from "../../server/data/database.ts";
 import { createTestDatabase } from "./database.ts";
 
-test("the Lantern notebook waits for its authors, with every result stored and every pin holding", async () => {
+test("both notebooks wait for their authors, with every result stored and every pin holding", async () => {
   const { url, drop } = await createTestDatabase();
   const database = openDatabase(url);
   try {
@@ -12,10 +12,11 @@ test("the Lantern notebook waits for its authors, with every result stored and e
     await seedDemonstration(database);
     const notebooks = await rows<{ premises_line: string; pins_moved: number; pins_loose: number }>(
       database,
-      "select premises_line, pins_moved, pins_loose from notebooks",
+      "select premises_line, pins_moved, pins_loose from notebooks order by title",
     );
     expect(notebooks).toEqual([
       { premises_line: "d = 4 · 2 fields · 9 terms", pins_moved: 0, pins_loose: 0 },
+      { premises_line: "D = 3, z = 2 · 3 fields · 7 terms", pins_moved: 0, pins_loose: 0 },
     ]);
     const results = await rows<{ block_id: string; problems: unknown[]; has_value: boolean }>(
       database,
@@ -28,6 +29,11 @@ test("the Lantern notebook waits for its authors, with every result stored and e
       "lantern-graph",
       "lantern-plan",
       "lantern-scaling",
+      "tern",
+      "tern-error",
+      "tern-graph",
+      "tern-plan",
+      "tern-scaling",
     ]);
     for (const result of results) expect(result).toMatchObject({ problems: [], has_value: true });
     const waiting = await rows<{ login: string; role: string }>(
@@ -36,6 +42,8 @@ test("the Lantern notebook waits for its authors, with every result stored and e
     );
     expect(waiting).toEqual([
       { login: "otto-lantern", role: "author" },
+      { login: "otto-lantern", role: "author" },
+      { login: "wren-lantern", role: "owner" },
       { login: "wren-lantern", role: "owner" },
     ]);
   } finally {

@@ -1,3 +1,4 @@
+import { templateNames, templateWords, type Template } from "#contract/templates.ts";
 import { useState } from "react";
 import { useNavigate } from "react-router-dom";
 import { useCreateNotebook } from "../../api/notebooks.ts";
@@ -7,7 +8,6 @@ import { Dialog } from "../../ui/dialog.tsx";
 import { Choice, TextField } from "../../ui/field.tsx";
 import { Refusal } from "../../ui/refusal.tsx";
 
-type Template = "blank" | "lantern";
 interface Props {
   readonly open: boolean;
   readonly onClose: () => void;
@@ -51,25 +51,19 @@ function NewNotebookForm({ onClose }: { readonly onClose: () => void }) {
       />
       <fieldset className="mt-5 space-y-3">
         <legend className="mb-1 text-small font-medium text-ink-2">Begin with</legend>
-        <Choice
-          type="radio"
-          name="template"
-          label="A blank page"
-          checked={template === "blank"}
-          onChecked={() => {
-            setTemplate("blank");
-          }}
-        />
-        <Choice
-          type="radio"
-          name="template"
-          label="A copy of the Lantern demonstration"
-          hint="An invented scalar sector below an invented threshold, counted to one per mille. Nothing in it is a real measurement."
-          checked={template === "lantern"}
-          onChecked={() => {
-            setTemplate("lantern");
-          }}
-        />
+        {templateNames.map((name) => (
+          <Choice
+            key={name}
+            type="radio"
+            name="template"
+            label={templateWords[name].label}
+            {...(templateWords[name].hint === "" ? {} : { hint: templateWords[name].hint })}
+            checked={template === name}
+            onChecked={() => {
+              setTemplate(name);
+            }}
+          />
+        ))}
       </fieldset>
       <Refusal sentence={create.isError ? sentenceOf(create.error) : null} />
       <div className="mt-6 flex flex-wrap justify-end gap-3">

@@ -1,0 +1,26 @@
+/** The documents that a new notebook can begin with. */
+import type { Template } from "#contract/templates.ts";
+import type { DocumentNode } from "./document-builder.ts";
+import { lanternBlocks, lanternDocument } from "./lantern-notebook.ts";
+import type { PinMaker } from "./pin-maker.ts";
+import { contactBlocks, contactDocument } from "./templates-contact.ts";
+import { lifshitzBlocks, lifshitzDocument } from "./templates-lifshitz.ts";
+import { scalarBlocks, scalarDocument } from "./templates-scalar.ts";
+import { ternBlocks, ternDocument } from "./tern-notebook.ts";
+
+export interface WrittenTemplate {
+  readonly blocks: readonly DocumentNode[];
+  readonly write: (pin: PinMaker) => DocumentNode;
+}
+
+const documents: Readonly<Record<Exclude<Template, "blank">, WrittenTemplate>> = {
+  lantern: { blocks: lanternBlocks, write: lanternDocument },
+  tern: { blocks: ternBlocks, write: ternDocument },
+  "scalar-pair": { blocks: scalarBlocks, write: scalarDocument },
+  "contact-gauge": { blocks: contactBlocks, write: contactDocument },
+  lifshitz: { blocks: lifshitzBlocks, write: lifshitzDocument },
+};
+
+export function documentOf(template: Exclude<Template, "blank">): WrittenTemplate {
+  return documents[template];
+}
