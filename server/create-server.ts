@@ -1,5 +1,5 @@
 /** Builds one server from its configuration: used by main.ts, by tests and by the benchmarks. */
-import { createServer as createHttpServer, type Server } from "node:http";
+import type { Server } from "node:http";
 import type { AddressInfo } from "node:net";
 import type { DestinationStream } from "pino";
 import { attachCollab } from "./collab/attach-collab.ts";
@@ -8,6 +8,7 @@ import { openCompute } from "./compute/open-compute.ts";
 import type { Configuration } from "./configuration.ts";
 import { openDatabase } from "./data/database.ts";
 import { createApp } from "./http/app.ts";
+import { openHttpServer } from "./http/http-server.ts";
 import { openLog } from "./http/request-log.ts";
 import { openSessions } from "./http/sessions.ts";
 import { startMailSender } from "./mail/sender.ts";
@@ -57,11 +58,7 @@ export async function createServer(
 ): Promise<RunningServer> {
   const log = openLog(configuration, logDestination);
   const accessChanges = await listenForAccessChanges(configuration.databaseUrl, log);
-  const httpServer = createHttpServer();
-  httpServer.on("clientError", (error, socket) => {
-    log.debug({ err: error }, "a client spoke no HTTP");
-    if (socket.writable) socket.end("HTTP/1.1 400 Bad Request\r\nConnection: close\r\n\r\n");
-  });
+  const httpServer = openHttpServer(log);
   let port: number;
   try {
     port = await listen(httpServer, configuration);

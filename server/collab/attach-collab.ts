@@ -17,6 +17,7 @@ import { admit, type Admitted } from "./admission.ts";
 import { compactHere, createCompaction, type Compact } from "./compaction.ts";
 import { Connection } from "./connection.ts";
 import { openDocumentStore, type DocumentStore } from "./document-store.ts";
+import { Guests } from "./guests.ts";
 import { hearNeighbour } from "./hear-neighbour.ts";
 import {
   CONNECTIONS_PER_NOTEBOOK,
@@ -61,6 +62,9 @@ const RECHECK_EVERY_MS = 30_000;
 /** Ours, and those of RFC 6455: going, leaving, and gone without a word. A stranger may send any number. */
 const codesToCount: ReadonlySet<number> = new Set([...Object.values(closeCode), 1000, 1001, 1005, 1006]);
 
+/** What no honest page brings about. */
+const offences: ReadonlySet<number> = new Set([closeCode.malformed, closeCode.tooLarge, closeCode.tooFast]);
+
 export function attachCollab(server: Server, dependencies: CollabDependencies): Collab {
   const { configuration, database, log, sessions, accessChanges } = dependencies;
   const metrics = dependencies.metrics ?? new Metrics();
@@ -102,6 +106,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
   });
   sockets.on("error", (error) => log.error({ err: error }, "the socket server failed"));
   const connections = new Set<Connection>();
+  const guests = new Guests();
   const closes = metrics.counter(
     "subleading_sockets_closed_total",
     "Sockets that ended, by the code of their end.",
@@ -116,7 +121,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
     const admission = await admit(request, dependencies);
     if (!admission.admitted) return refuse(socket, admission.status);
     if (admission.editorSchema < admission.storedSchema) return refuseOldSchema(request, socket, head);
-    if (isCrowded(admission)) return refuse(socket, 429);
+    if (!guests.mayEnter(admission.visitor) || isCrowded(admission)) return refuse(socket, 429);
     const lease = await enterRoom(admission.notebookId);
     if (typeof lease === "number") return refuse(socket, lease);
     if (isStopping() || socket.destroyed) {
@@ -170,14 +175,19 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
     const { room } = lease;
     const watched = { connection, room, cookie, endsAt: admission.endsAt };
     connections.add(connection);
+    guests.enter(connection);
+    connection.onClosing((code) => {
+      if (offences.has(code)) guests.offend(connection);
+    });
     connection.onEnd(() => {
       connections.delete(connection);
+      guests.leave(connection);
       watch.remove(watched);
       room.leave(connection);
       lease.release();
     });
     watch.add(watched);
-    receiveFrames(room, connection);
+    receiveFrames(room, connection, guests);
     room.join(connection);
     // Raised while this editor was on its way in.
     if (connection.schemaVersion < (room.taking?.document.schemaVersion ?? 0))
@@ -217,6 +227,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
     const now = Date.now();
     for (const connection of connections) connection.keepAlive(now, HEARTBEAT);
     for (const room of rooms.all()) room.tick(now);
+    guests.tidy();
   }, HEARTBEAT.checkEveryMs);
   const recheck = setInterval(() => watch.recheckAll(), RECHECK_EVERY_MS);
 
@@ -228,6 +239,7 @@ export function attachCollab(server: Server, dependencies: CollabDependencies): 
       clearInterval(beat);
       clearInterval(recheck);
       watch.stop();
+      guests.stop();
       await rooms.stop(STOP_PATIENCE_MS);
       server.off("upgrade", onUpgrade);
       // Each is being closed with a word why; one that does not answer is cut after `CLOSING_PATIENCE_MS`.

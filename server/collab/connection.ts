@@ -16,6 +16,9 @@ export interface ConnectionOptions {
   readonly log: Logger;
 }
 
+/** Why a socket is not read from: too much of it waits to be stored, or its sender has worked us hard. */
+export type HoldReason = "queue" | "effort";
+
 export interface KeepAlive {
   readonly silentForMs: number;
   readonly deadAfterMs: number;
@@ -36,7 +39,8 @@ export class Connection {
   #lastSentAt = Date.now();
   #closing: { readonly code: number; readonly reason: string } | null = null;
   #ended = false;
-  #held = false;
+  #onClosing: ((code: number) => void) | null = null;
+  readonly #heldFor = new Set<HoldReason>();
   #wholeBytes = 0;
   #savedSent = 0;
 
@@ -67,6 +71,11 @@ export class Connection {
       if (!isBinary) return this.close(closeCode.malformed, "text is not spoken here");
       listener(data as Buffer); // binaryType stays "nodebuffer", the default
     });
+  }
+
+  /** Told of the code with which we close. */
+  onClosing(listener: (code: number) => void): void {
+    this.#onClosing = listener;
   }
 
   /** Called once, whoever closes and however abruptly. */
@@ -112,7 +121,7 @@ export class Connection {
   keepAlive(now: number, { silentForMs, deadAfterMs }: KeepAlive): void {
     if (!this.isOpen) return;
     // A socket that we do not read from cannot answer; its silence is ours.
-    const unheardForMs = this.#held ? 0 : now - this.lastHeardAt;
+    const unheardForMs = this.#heldFor.size > 0 ? 0 : now - this.lastHeardAt;
     if (unheardForMs > deadAfterMs) return this.#socket.terminate();
     // Someone who only reads never speaks by themselves, however much they are told.
     if (unheardForMs > silentForMs) this.#socket.ping();
@@ -120,15 +129,14 @@ export class Connection {
   }
 
   /** Slows the writer down: what it sends stays in the network until its earlier frames are stored. */
-  hold(): void {
-    if (this.#held || !this.isOpen) return;
-    this.#held = true;
-    this.#socket.pause();
+  hold(reason: HoldReason = "queue"): void {
+    if (!this.isOpen) return;
+    if (this.#heldFor.size === 0) this.#socket.pause();
+    this.#heldFor.add(reason);
   }
 
-  release(): void {
-    if (!this.#held) return;
-    this.#held = false;
+  release(reason: HoldReason = "queue"): void {
+    if (!this.#heldFor.delete(reason) || this.#heldFor.size > 0) return;
     this.lastHeardAt = Date.now();
     this.#socket.resume();
   }
@@ -138,7 +146,8 @@ export class Connection {
     if (this.#closing !== null) return;
     this.#closing = { code, reason };
     this.#log.info({ code, reason }, "closing a socket");
-    this.release();
+    this.#onClosing?.(code);
+    for (const held of this.#heldFor) this.release(held);
     this.#socket.close(code, reason);
     // A peer that does not answer, or that does not read, is not waited for.
     const patience = setTimeout(() => this.#socket.terminate(), CLOSING_PATIENCE_MS);

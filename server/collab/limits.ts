@@ -9,6 +9,9 @@ export const LARGEST_BACKLOG_BYTES = 16 * 1024 * 1024;
 /** Presence is not worth queueing behind this much. */
 export const PRESENCE_BACKLOG_BYTES = 256 * 1024;
 
+/** Structs and deletions in one change: reading so many takes a fifth of a second. */
+export const PARTS_PER_UPDATE = 300_000;
+
 /** Of a whole notebook as stored: a thousand times what a long paper takes. Above it only deletions are taken. */
 export const LARGEST_DOCUMENT_BYTES = 32 * 1024 * 1024;
 /** Measuring a large document takes a tenth of a second. */
@@ -36,6 +39,12 @@ export const PRESENCE = {
 };
 
 export const CONNECTIONS_PER_VISITOR = 32;
+/** Of one person or link, in all notebooks together. */
+export const CONNECTIONS_PER_GUEST = 128;
+/** Milliseconds of this process's main thread that one guest may use: at once, and from then on per millisecond. */
+export const EFFORT = { most: 400, perMillisecond: 0.25 };
+/** Frames that no honest page sends: who sends more is not let in for a while. */
+export const OFFENCES = { most: 10, rememberedMs: 10 * 60_000, keptOutMs: 60_000 };
 export const CONNECTIONS_PER_NOTEBOOK = 1_000;
 /** Handshakes and full encodings are the dear ones: per connection and ten seconds. */
 export const STEP_1_PER_TEN_SECONDS = 20;

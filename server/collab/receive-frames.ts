@@ -5,18 +5,25 @@ import type { CommittedDocument } from "./committed-document.ts";
 import type { Connection } from "./connection.ts";
 import { readFrame, writeStep2, writeUpdate, type IncomingFrame } from "./frames.ts";
 import { LARGEST_FRAME_BYTES, PRESENCE_FRAMES_PER_SECOND, STEP_1_PER_TEN_SECONDS } from "./limits.ts";
+import type { Guests } from "./guests.ts";
 import type { Room } from "./room.ts";
 import { assessUpdate, isDeletedIn } from "./update-check.ts";
 
 /** Someone who may only read sends none from an honest page; a few may be under way when rights change. */
 const REFUSED_PER_MINUTE = 20;
 
-export function receiveFrames(room: Room, connection: Connection): void {
+export function receiveFrames(room: Room, connection: Connection, guests: Guests): void {
   const joins = new Budget(STEP_1_PER_TEN_SECONDS, 10_000);
   const presence = new Budget(PRESENCE_FRAMES_PER_SECOND, 1_000);
   const refused = new Budget(REFUSED_PER_MINUTE, 60_000);
 
   connection.onFrame((frame) => {
+    const start = performance.now();
+    take(frame);
+    guests.spend(connection, performance.now() - start);
+  });
+
+  function take(frame: Uint8Array): void {
     if (frame.length > LARGEST_FRAME_BYTES)
       return connection.close(closeCode.tooLarge, "a change may have at most 4 MB");
     const message = readFrame(frame);
@@ -44,7 +51,7 @@ export function receiveFrames(room: Room, connection: Connection): void {
         return refuseContent(taking.document, connection, message.update);
       }
     }
-  });
+  }
 }
 
 function answerStep1(

@@ -5,6 +5,7 @@
  */
 import * as Y from "yjs";
 import { FRAGMENT } from "#contract/collab.ts";
+import { decodeBounded } from "./decode-bounded.ts";
 
 export type Assessment =
   /** Whole and new; `reaches` are the clocks that it brings each of its clients to. */
@@ -40,7 +41,7 @@ class Malformed extends Error {}
 export function assessUpdate(update: Uint8Array, known: KnownContent): Assessment {
   let decoded: ReturnType<typeof Y.decodeUpdate>;
   try {
-    decoded = Y.decodeUpdate(update);
+    decoded = decodeBounded(update);
   } catch (error) {
     // Yjs throws plain errors of many kinds on bytes that are no update.
     return { verdict: "malformed", reason: error instanceof Error ? error.message : "not an update" };

@@ -52,7 +52,48 @@ async function readAccount(
   };
 }
 
-export function githubStrategy(endpoints: GitHubEndpoints, callbackUrl: string): Strategy {
+type Answered = (...answer: readonly unknown[]) => void;
+interface HttpLibrary {
+  request(options: unknown): { destroy(): void };
+}
+/** The parts of passport-oauth2's client that send requests; its types leave them out. */
+interface OAuth2Client {
+  _executeRequest(library: HttpLibrary, options: unknown, body: unknown, answered: Answered): void;
+}
+
+/** The client for codes and profiles waits for ever; a sign-in service that hangs would keep every sign-in hanging. */
+function giveUpAfter(patienceMs: number, strategy: Strategy): void {
+  const { _oauth2: client } = strategy as unknown as { _oauth2: OAuth2Client }; // see above
+  const execute = client._executeRequest.bind(client);
+  client._executeRequest = (library, options, body, answered) => {
+    const requests: { destroy(): void }[] = [];
+    let isOver = false;
+    const finish: Answered = (...answer) => {
+      if (isOver) return;
+      isOver = true;
+      clearTimeout(patience);
+      answered(...answer);
+    };
+    const patience = setTimeout(() => {
+      finish(new Error("The sign-in service did not answer in time."));
+      for (const request of requests) request.destroy();
+    }, patienceMs);
+    const watched: HttpLibrary = {
+      request(wish) {
+        const request = library.request(wish);
+        requests.push(request);
+        return request;
+      },
+    };
+    execute(watched, options, body, finish);
+  };
+}
+
+export function githubStrategy(
+  endpoints: GitHubEndpoints,
+  callbackUrl: string,
+  patienceMs = PATIENCE_MS,
+): Strategy {
   const options = {
     clientID: endpoints.clientId,
     clientSecret: endpoints.clientSecret,
@@ -65,10 +106,15 @@ export function githubStrategy(endpoints: GitHubEndpoints, callbackUrl: string):
     state: true as unknown as string,
   } satisfies StrategyOptions;
   type Done = (error: unknown, account?: Account) => void;
-  return new Strategy(options, (accessToken: string, _refreshToken: string, profile: unknown, done: Done) => {
-    readAccount(endpoints, accessToken, profile).then(
-      (account) => done(null, account),
-      (error: unknown) => done(error),
-    );
-  });
+  const strategy = new Strategy(
+    options,
+    (accessToken: string, _refreshToken: string, profile: unknown, done: Done) => {
+      readAccount(endpoints, accessToken, profile).then(
+        (account) => done(null, account),
+        (error: unknown) => done(error),
+      );
+    },
+  );
+  giveUpAfter(patienceMs, strategy);
+  return strategy;
 }

@@ -1,10 +1,11 @@
 /** Frames that no honest page sends: their sender is closed, and nobody else notices. */
 import { randomBytes } from "node:crypto";
 import * as encoding from "lib0/encoding";
-import { describe, expect, test } from "vitest";
+import { beforeAll, describe, expect, test } from "vitest";
 import * as Y from "yjs";
 import { closeCode, FRAGMENT, messageType } from "../../../client/contract/collab.ts";
 import { firstRow } from "../../../server/data/database.ts";
+import { addPerson, type CastPerson } from "./cast.ts";
 import { presence, presenceIn, step1, step2, sync, update } from "./raw-socket.ts";
 import { seededRandom } from "./seeded-random.ts";
 import { setStage } from "./stage.ts";
@@ -12,6 +13,17 @@ import { until } from "./until.ts";
 import { paragraphOf } from "./writer.ts";
 
 const stage = setStage();
+
+/** Someone new for every attack: who goes on attacking is kept out (guests.test.ts). */
+async function scene() {
+  const mallory = await addPerson(stage.server.database, "Mallory");
+  const notebookId = await stage.notebook([
+    [stage.ada, "owner"],
+    [stage.cleo, "reader"],
+    [mallory, "author"],
+  ]);
+  return { mallory, notebookId };
+}
 
 const documentWith = (change: (document: Y.Doc) => void): Uint8Array => {
   const document = new Y.Doc();
@@ -99,25 +111,52 @@ const hostile: readonly (readonly [string, () => Uint8Array, number])[] = [
     () => presence(...Array.from({ length: 5_000 }, (_, clock) => [5, clock, {}] as const)),
     closeCode.malformed,
   ],
+  [
+    "a change of a million parts",
+    () =>
+      update(
+        handmade((encoder) => {
+          for (const value of [1, 1_000_000, 99, 0]) encoding.writeVarUint(encoder, value);
+          for (let count = 0; count < 1_000_000; count += 1)
+            for (const value of [0, 1]) encoding.writeVarUint(encoder, value);
+          encoding.writeVarUint(encoder, 0);
+        }),
+      ),
+    closeCode.malformed,
+  ],
+  [
+    "a state vector of a client that is not there, from the future, cut short",
+    () => sync(0, numbers(3, 5, 2 ** 40)),
+    closeCode.malformed,
+  ],
   ["a change of 5 MB", () => update(sentence("x".repeat(5_000_000))), closeCode.tooLarge],
   ["more than the socket takes", () => update(sentence("x".repeat(9_000_000))), 1009],
 ];
 
+let quietNotebookId: string;
+beforeAll(async () => {
+  quietNotebookId = await stage.notebook();
+});
+
 describe.each(hostile)("%s", (_name, frame, code) => {
   test("closes its sender and leaves the others undisturbed", async () => {
-    const notebookId = await stage.notebook();
+    const { mallory, notebookId } = await scene();
     const honest = await stage.write(stage.ada, notebookId);
     const colleague = await stage.write(stage.cleo, notebookId);
-    const socket = await stage.raw(stage.ben, notebookId);
+    const elsewhere = await stage.write(stage.ada, quietNotebookId);
+    const socket = await stage.raw(mallory, notebookId);
     socket.send(frame());
     honest.type("meanwhile");
+    elsewhere.type("x");
     await until("the others go on", () => colleague.text() === "meanwhile");
+    await elsewhere.allSaved();
     expect(await socket.closedWith()).toBe(code);
-    expect(honest.closes).toEqual([]);
+    expect(socket.closed()?.reason).not.toBe(code === 1009 ? null : "");
+    expect([...honest.closes, ...colleague.closes, ...elsewhere.closes]).toEqual([]);
     const row = await firstRow<{ count: string }>(
       stage.server.database,
       "select count(*) from document_updates where notebook_id = ? and person_id = ?",
-      [notebookId, stage.ben.id],
+      [notebookId, mallory.id],
     );
     expect(row!.count).toBe("0");
   });
@@ -234,7 +273,13 @@ test("updates spoiled at random never end the process, nor leave pending structs
   const seed = Number(process.env["SPOIL_SEED"] ?? Date.now() % 1_000_000);
   console.info(`SPOIL_SEED=${seed}`);
   const random = seededRandom(seed);
-  const notebookId = await stage.notebook();
+  const attackers: CastPerson[] = [];
+  for (let count = 0; count < 12; count += 1)
+    attackers.push(await addPerson(stage.server.database, "Mallory"));
+  const notebookId = await stage.notebook([
+    [stage.ada, "owner"],
+    ...attackers.map((person) => [person, "author"] as const),
+  ]);
   const honest = await stage.write(stage.ada, notebookId);
   honest.type("some text to build on");
   await honest.allSaved();
@@ -243,7 +288,7 @@ test("updates spoiled at random never end the process, nor leave pending structs
     const bad = Uint8Array.from(good);
     for (let spoiled = 0; spoiled < 3; spoiled += 1)
       bad[Math.floor(random() * bad.length)] = Math.floor(random() * 256);
-    const socket = await stage.raw(stage.ben, notebookId);
+    const socket = await stage.raw(attackers[attempt % attackers.length]!, notebookId);
     socket.send(update(bad));
     socket.send(step1());
     await until(
