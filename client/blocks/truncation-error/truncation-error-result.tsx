@@ -7,6 +7,7 @@ import { Figure } from "../parts/figure.tsx";
 import { sizeText, textTo, withUnit } from "../parts/number-text.ts";
 import { ResultTable, type ResultColumnSpec } from "../parts/result-table.tsx";
 import { Coefficients } from "./coefficients.tsx";
+import { CoveredLine } from "./covered-line.tsx";
 import { CorrelatedLines } from "./correlated-lines.tsx";
 import { assumptionOf, bandScalar, methodRows, resolutionOf, type MethodRow } from "./method-rows.ts";
 
@@ -56,6 +57,7 @@ export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
         ]}
       />
       <Coefficients value={value} />
+      {value.curve && <CoveredLine covered={value.curve.covered} />}
       {value.curve?.correlated && (
         <CorrelatedLines
           model={value.curve.correlated}

@@ -58,7 +58,7 @@ export interface Checks {
 const MOST_POINTS = 120;
 export const SAMPLES = 400;
 const SEED = 20190712;
-export const checkBeliefs = Array.from({ length: 19 }, (_, index) => (index + 1) / 20);
+const checkBeliefs = Array.from({ length: 19 }, (_, index) => (index + 1) / 20);
 
 /** @param fitted the coefficients that the fit was made of */
 export function checkConsistency(fitted: CoefficientsAlong, fit: LengthFit, prior: Prior): Checks {

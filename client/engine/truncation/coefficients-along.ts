@@ -22,7 +22,7 @@ export interface CoefficientsAlong {
 }
 
 /** How many points could not be used, and why. */
-export interface Left {
+interface Left {
   readonly incomplete: number;
   readonly zeroReference: number;
   readonly beyondOne: number;

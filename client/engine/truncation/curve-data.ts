@@ -33,19 +33,6 @@ export interface CurveSource {
   readonly data: CurveData;
 }
 
-/** The points at these places of the list. */
-export function pointsAt(data: CurveData, places: readonly number[]): CurveData {
-  const pick = <T>(values: readonly T[]) => places.map((place) => values[place] as T); // places are within the list
-  return {
-    ...data,
-    x: pick(data.x),
-    orders: data.orders.map(({ order, values }) => ({ order, values: pick(values) })),
-    reference: data.reference && pick(data.reference),
-    measured: data.measured && pick(data.measured),
-    measuredError: data.measuredError && pick(data.measuredError),
-  };
-}
-
 /** At most `most` places of a list of `count`, evenly spread with both ends. */
 export function evenly(count: number, most: number): number[] {
   if (count <= most) return Array.from({ length: count }, (_, index) => index);

@@ -28,9 +28,18 @@ export interface CurveValue {
   /** Every method after the last order, and the highlighted one after each. */
   readonly bands: readonly BandAlong[];
   readonly measured: readonly { readonly x: number; readonly value: number; readonly error: number | null }[];
+  /** How many measured values lie in the intervals of the highlighted method, by order and degree of belief. */
+  readonly covered: readonly Covered[];
   /** One standard deviation of the coefficients; null when there are none. */
   readonly spread: number | null;
   readonly correlated: CorrelatedValue | null;
+}
+
+export interface Covered {
+  readonly order: number;
+  readonly degree: string;
+  readonly inside: number;
+  readonly count: number;
 }
 
 export interface BandAlong {

@@ -2,7 +2,7 @@
 import { roundFloat } from "../evaluation.ts";
 import type { Correlated } from "./correlated.ts";
 import { drawnPlaces, type Curve } from "./curve.ts";
-import type { BandAlong, CorrelatedValue, CurveValue, DrawnDensity } from "./curve-value.ts";
+import type { BandAlong, CorrelatedValue, Covered, CurveValue, DrawnDensity } from "./curve-value.ts";
 import type { Density } from "./density.ts";
 import { describeFindings } from "./findings.ts";
 import { omittedOf } from "./present.ts";
@@ -14,6 +14,10 @@ import {
   type SeriesEstimate,
 } from "./series.ts";
 import { isPriorSet, type Method, type TruncationInputs } from "./shape.ts";
+import { studentHalfWidth } from "./student-t.ts";
+
+/** So many degrees of freedom are as good as normal. */
+const NORMAL = 1e6;
 
 const rounded = (value: number | null | undefined) =>
   value === null || value === undefined || !Number.isFinite(value) ? null : roundFloat(value);
@@ -30,6 +34,7 @@ export function presentCurve(inputs: TruncationInputs, curve: Curve): CurveValue
       rounded(estimate?.coefficients.find((c) => c.order === order)?.value),
     ),
   }));
+  const bands = bandsAlong(inputs, curve, estimates);
   const all = coefficients.orders.flatMap(({ values }) => [...values]);
   return {
     variable: curve.variable,
@@ -39,7 +44,8 @@ export function presentCurve(inputs: TruncationInputs, curve: Curve): CurveValue
     x: places.map((place) => roundFloat(data.x[place] ?? NaN)),
     q: places.map((place) => rounded(q[place])),
     orders,
-    bands: bandsAlong(inputs, curve, estimates),
+    bands,
+    covered: covered(inputs, curve, places, bands),
     measured: places.flatMap((place) => {
       const [x, value] = [data.x[place], data.measured?.[place] ?? null];
       if (x === undefined || value === null) return [];
@@ -105,6 +111,49 @@ function bandsAlong(
     order,
     halfWidths,
   }));
+}
+
+/**
+ * Measured values against the intervals of the highlighted method around each order: inside when they differ by less than
+ * the half-width, with their own error at the same degree of belief added in quadrature.
+ */
+function covered(
+  inputs: TruncationInputs,
+  { data, series, coefficients }: Curve,
+  places: readonly number[],
+  bands: readonly BandAlong[],
+): Covered[] {
+  const { measured, measuredError } = data;
+  // Before the first coefficient an interval rests on the prior alone, and says nothing about these data.
+  const first = coefficients.orders[0]?.order;
+  if (!measured || first === undefined) return [];
+  const omitted = omittedOf(inputs.method as Method, inputs); // a choice of the shape
+  return bands.flatMap(({ method, omitted: of, degree, order, halfWidths }) => {
+    const probability = series.degrees.find(({ text }) => text === degree)?.probability;
+    const values = data.orders.find((one) => one.order === order)?.values;
+    if (
+      method !== inputs.method ||
+      of !== omitted ||
+      degree === null ||
+      !probability ||
+      !values ||
+      order < first
+    )
+      return [];
+    const quantile = studentHalfWidth(probability, NORMAL);
+    const inside = places.flatMap((place, index) => {
+      const [truth, value, half] = [
+        measured[place] ?? null,
+        values[place] ?? null,
+        halfWidths[index] ?? null,
+      ];
+      if (truth === null || value === null || half === null) return [];
+      return [Math.abs(truth - value) <= Math.hypot(half, quantile * (measuredError?.[place] ?? 0))];
+    });
+    return inside.length === 0
+      ? []
+      : [{ order, degree, inside: inside.filter(Boolean).length, count: inside.length }];
+  });
 }
 
 function presentCorrelated({

@@ -1,6 +1,6 @@
 /** The numbers of a curve that can be pinned into prose. */
 import { roundFloat, type Scalar } from "../evaluation.ts";
-import type { CurveValue, DrawnDensity } from "./curve-value.ts";
+import type { Covered, CurveValue, DrawnDensity } from "./curve-value.ts";
 
 const checkNames = {
   coverage: "coverage of the intervals",
@@ -10,7 +10,7 @@ const checkNames = {
 } as const;
 
 /** All other scalars of the block are at the x of `at`. */
-export function describeCurveScalars({ at, xUnit, variable, correlated }: CurveValue): Scalar[] {
+export function describeCurveScalars({ at, xUnit, variable, covered, correlated }: CurveValue): Scalar[] {
   const unit = xUnit === "" ? {} : { unit: xUnit };
   const scalars: Scalar[] = [
     {
@@ -19,6 +19,12 @@ export function describeCurveScalars({ at, xUnit, variable, correlated }: CurveV
       value: { type: "number", value: at, ...unit },
     },
   ];
+  for (const { degree, inside, count } of totals(covered))
+    scalars.push({
+      id: `covered/${degree}`,
+      label: `share of measured values in the ${degree} % intervals, all orders together`,
+      value: { type: "number", value: roundFloat(inside / count) },
+    });
   if (!correlated) return scalars;
   const { breakdown, lengthPosterior, length, tau2 } = correlated;
   scalars.push({
@@ -57,6 +63,16 @@ export function describeCurveScalars({ at, xUnit, variable, correlated }: CurveV
     });
   }
   return scalars;
+}
+
+/** All orders together, by degree of belief. */
+export function totals(covered: readonly Covered[]): Omit<Covered, "order">[] {
+  const degrees = [...new Set(covered.map(({ degree }) => degree))];
+  return degrees.map((degree) => {
+    const own = covered.filter((one) => one.degree === degree);
+    const sum = (of: (one: Covered) => number) => own.reduce((so, one) => so + of(one), 0);
+    return { degree, inside: sum(({ inside }) => inside), count: sum(({ count }) => count) };
+  });
 }
 
 function densityScalars(

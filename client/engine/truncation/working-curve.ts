@@ -3,6 +3,7 @@ import type { WorkingStep } from "../evaluation.ts";
 import { floatText } from "../notation/float-text.ts";
 import { unitText } from "../notation/unit-text.ts";
 import type { CorrelatedValue, CurveValue, DrawnDensity } from "./curve-value.ts";
+import { totals } from "./scalars-curve.ts";
 import type { TruncationInputs } from "./shape.ts";
 import type { PriorSettings } from "./value.ts";
 
@@ -43,7 +44,24 @@ export function describeAlong(curve: CurveValue, inputs: TruncationInputs): Work
       `The data give ${count} points. The numbers above are at $${variable} = ${withUnit(at, xUnit)}$; the same methods are applied at every point with the Q there, each point on its own.`,
     ),
   ];
+  if (curve.covered.length > 0) steps.push(heading("Measured values"), ...describeCovered(curve.covered));
   return correlated ? [...steps, ...describeCorrelated(curve, correlated, inputs)] : steps;
+}
+
+function describeCovered(covered: CurveValue["covered"]): WorkingStep[] {
+  const lines = totals(covered).map(({ degree, inside, count }) => {
+    const own = covered.filter((one) => one.degree === degree);
+    const parts = own.map((one) => `${one.inside} of ${one.count} at order ${one.order}`);
+    return prose(
+      `In the ${degree} % intervals lie ${parts.join(", ")}: together ${Math.round((100 * inside) / count)} %.`,
+    );
+  });
+  return [
+    ...lines,
+    prose(
+      "A measured value counts as inside when it differs by less than the half-width, its own error at the same degree of belief added in quadrature. Neighbouring points are not independent, so the share of one curve may stray far from the degree of belief.",
+    ),
+  ];
 }
 
 function describeCorrelated(

@@ -8,6 +8,7 @@ import { jointPosterior } from "#engine/truncation/joint-posterior.ts";
 import { factorOf } from "#engine/truncation/kernel.ts";
 import { ternTrap, ternTrapBreakdown } from "#engine/truncation/tern-trap.ts";
 import { evaluateCurve, ternTable } from "./curve-block.ts";
+import { scalar } from "./truncation-block.ts";
 
 // Draws with fixed seeds: these tests always see the same numbers. The bounds are what a binomial with so many trials
 // gives in 999 of 1000 cases, so that a statement that is wrong by much cannot pass.
@@ -145,6 +146,7 @@ describe("the invented observable of the demonstration", () => {
         p.map((_, at) => Math.abs((exact[at] ?? 0) - (orders[order]?.[at] ?? 0)) <= (halfWidths[at] ?? -1)),
       );
       const share = hits.filter(Boolean).length / hits.length;
+      expect(scalar(result, "covered/68")).toBeCloseTo(share, 11);
       expect(share).toBeGreaterThan(0.6);
       expect(share).toBeLessThan(0.76);
     }
