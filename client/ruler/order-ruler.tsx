@@ -61,8 +61,9 @@ function DrawnRuler({ source, choices, onChoose }: DrawnProps) {
   const [withProducts, setWithProducts] = useState(false);
   const [opened, setOpened] = useState<string | null>(null);
 
-  const now =
-    tried && sameKept(tried.model, model) ? tried : { model, probe: model.probe.value, target: model.target };
+  // Other values were kept: what was tried from the old ones is over, also when those are kept again.
+  if (tried && !sameKept(tried.model, model)) setTried(null);
+  const now = tried ?? { model, probe: model.probe.value, target: model.target };
   const isMoved = now.probe !== model.probe.value || now.target !== model.target;
   const reading = useMemo(() => readAt(model, now.probe, now.target), [model, now.probe, now.target]);
   const { axis, levels } = useMemo(() => layoutOf(model, width, withProducts), [model, width, withProducts]);
@@ -83,6 +84,10 @@ function DrawnRuler({ source, choices, onChoose }: DrawnProps) {
     } else if (event.key === "Enter" && isMoved && !readOnly) {
       event.preventDefault();
       keep();
+    } else if ((event.ctrlKey || event.metaKey) && event.key.toLowerCase() === "z") {
+      event.preventDefault();
+      if (event.shiftKey) world.session.history.redoOnce();
+      else world.session.history.undoOnce();
     }
   };
   const caption = captionOf(source, reading);

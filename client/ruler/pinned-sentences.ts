@@ -34,9 +34,13 @@ export function sentencesOf(
       );
     const before = words(parentOffset - BEFORE, parentOffset);
     const after = words(parentOffset + 1, parentOffset + 1 + AFTER);
-    return [{ position: offset, words: `… ${before}${pin.text}${after} …` }];
+    return [{ position: offset, words: `… ${fromWord(before)}${pin.text}${toWord(after)} …` }];
   });
 }
+
+/** Without the rest of a word that was cut. */
+const fromWord = (text: string) => (text.length < BEFORE ? text : text.replace(/^\S*\s/, ""));
+const toWord = (text: string) => (text.length < AFTER ? text : text.replace(/\s\S*$/, ""));
 
 export function goToSentence(editor: Editor, position: number): void {
   const element = editor.view.nodeDOM(position);

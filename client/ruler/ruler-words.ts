@@ -1,11 +1,11 @@
 /** What the ruler says aloud and beside its scale. */
-import { tenTo } from "../blocks/parts/plot-scales.ts";
+import { plain, tenTo } from "../blocks/parts/plot-scales.ts";
 import { sizeText, textTo, withUnit } from "../blocks/parts/number-text.ts";
 import type { Reading, ReadMark } from "./reading.ts";
 import type { RulerModel } from "./ruler-model.ts";
 
 export function probeWords(model: RulerModel, probe: number): string {
-  return withUnit(sizeText(probe, 3), model.probe.unit);
+  return withUnit(plain(Number(probe.toPrecision(3))), model.probe.unit);
 }
 
 export function ratioWords(model: RulerModel, reading: Reading): string {
