@@ -6,6 +6,11 @@ import { ensureDependencies } from "./dependencies.mjs";
 import { root } from "./place.mjs";
 import { endWith, say } from "./say.mjs";
 
+const benches = [
+  ...["delivery", "many-notebooks", "opening", "reconnect-storm"],
+  ...["evaluation", "bundle"],
+];
+
 // Ctrl-C reaches the bench that runs, which ends; we then clean up.
 let interrupted = false;
 process.on("SIGINT", () => (interrupted = true));
@@ -29,7 +34,7 @@ try {
   };
   let failed = false;
   try {
-    for (const bench of ["delivery", "evaluation", "bundle"]) {
+    for (const bench of benches) {
       say(`tests/bench/${bench}.ts`);
       const { status, signal } = spawnSync(process.execPath, ["--import", "tsx", `tests/bench/${bench}.ts`], {
         cwd: root,

@@ -8,17 +8,14 @@
 import { fork } from "node:child_process";
 import { once } from "node:events";
 import { join } from "node:path";
-import { openDatabase, rows } from "../../server/data/database.ts";
-import { addNotebook, addPerson, type CastPerson } from "../server/collab/cast.ts";
-import { startChild } from "../server/collab/child.ts";
-import { publicUrl } from "../server/collab/collab-server.ts";
-import { createTestDatabase } from "../server/database.ts";
+import { startBenchServer } from "./bench-server.ts";
 import { measureDelivery, type CrowdOptions } from "./typing-crowd.ts";
 
-process.env["SUBLEADING_TEST_DATABASE_URL"] ??= process.env["DATABASE_URL"];
 const crowds = [
   { people: 2, keystrokes: 10 },
-  { people: 20, keystrokes: 5 },
+  { people: 10, keystrokes: 5 },
+  { people: 50, keystrokes: 1 },
+  { people: 200, keystrokes: 0.25 },
 ] as const;
 const ROUNDS = 3;
 const times = { warmUpMs: 1_000, measureMs: 4_000 };
@@ -38,21 +35,13 @@ function summary(samples: readonly number[]) {
 }
 const milliseconds = (value: number) => `${value.toFixed(2).padStart(7)} ms`;
 
-const testDatabase = await createTestDatabase();
-const database = openDatabase(testDatabase.url);
-const server = await startChild(testDatabase.url);
+const bench = await startBenchServer(Math.max(...crowds.map(({ people }) => people)));
 try {
-  const [settings] = await rows<{ fsync: string; commit: string }>(
-    database,
-    "select current_setting('fsync') as fsync, current_setting('synchronous_commit') as commit",
-  );
-  console.log(`PostgreSQL: fsync ${settings?.fsync ?? "?"}, synchronous_commit ${settings?.commit ?? "?"}`);
   console.log(
     "from a keystroke to its being in another's document, committed on the way (ours) or not (control)\n",
   );
   for (const { people, keystrokes } of crowds) {
-    const cast: CastPerson[] = [];
-    for (let index = 0; index < people; index += 1) cast.push(await addPerson(database, `Typist ${index}`));
+    const cast = bench.people.slice(0, people);
     const ours: number[] = [];
     const control: number[] = [];
     const measure = (addresses: CrowdOptions["addresses"]) =>
@@ -62,18 +51,8 @@ try {
       const url = `ws://127.0.0.1:${room.port}/`;
       control.push(...(await measure(cast.map(() => ({ url, headers: {} })))));
       room.end();
-      const notebookId = await addNotebook(
-        database,
-        cast.map((person) => [person, "author"] as const),
-      );
-      ours.push(
-        ...(await measure(
-          cast.map(({ cookie }) => ({
-            url: `ws://127.0.0.1:${server.port}/collab/${notebookId}?schema=1`,
-            headers: { cookie, origin: publicUrl },
-          })),
-        )),
-      );
+      const notebookId = await bench.notebook(cast);
+      ours.push(...(await measure(cast.map((person) => bench.address(person, notebookId)))));
     }
     const [mine, theirs] = [summary(ours), summary(control)];
     console.log(`${people} people, ${keystrokes} keystrokes a second each (${mine.count} deliveries)`);
@@ -85,7 +64,5 @@ try {
     );
   }
 } finally {
-  await server.end("SIGTERM");
-  await database.destroy();
-  await testDatabase.drop();
+  await bench.end();
 }

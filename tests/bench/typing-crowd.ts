@@ -25,7 +25,7 @@ export async function measureDelivery(options: CrowdOptions): Promise<readonly n
   const times: number[] = [];
   let measuring = false;
   let expected = 0;
-  const people = await Promise.all(options.addresses.map(({ url, headers }) => join(url, headers)));
+  const people = await Promise.all(options.addresses.map(joinRoom));
   const [first] = people;
   if (first === undefined) throw new Error("nobody types");
   paragraphOf(first.document);
@@ -71,7 +71,8 @@ export async function measureDelivery(options: CrowdOptions): Promise<readonly n
   return times;
 }
 
-async function join(url: string, headers: Readonly<Record<string, string>>): Promise<Person> {
+/** Someone who has the whole document. */
+export async function joinRoom({ url, headers }: CrowdOptions["addresses"][number]): Promise<Person> {
   const document = new Y.Doc();
   const socket = new WebSocket(url, { headers, perMessageDeflate: false });
   let isSynced = false;
@@ -88,6 +89,6 @@ async function join(url: string, headers: Readonly<Record<string, string>>): Pro
   });
   await new Promise((resolve, reject) => socket.once("open", resolve).once("error", reject));
   socket.send(step1(document));
-  await until("the document is there", () => isSynced);
+  await until("the document is there", () => isSynced, 60_000);
   return { socket, document };
 }

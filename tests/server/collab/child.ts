@@ -7,6 +7,7 @@ import { pathToFileURL } from "node:url";
 
 export interface Child {
   readonly port: number;
+  readonly pid: number;
   /** Resolves when the process is gone; gives its exit code, null after a kill. */
   end(signal: "SIGKILL" | "SIGTERM"): Promise<number | null>;
 }
@@ -26,6 +27,7 @@ export async function startChild(databaseUrl: string, port = 0): Promise<Child> 
   ])) as [{ port: number }]; // see child-server.ts
   return {
     port: said.port,
+    pid: process_.pid ?? 0, // it has spoken, so it has one
     end: async (signal) => {
       const gone = once(process_, "exit");
       process_.kill(signal);
