@@ -95,7 +95,9 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: BlockFrame
             <OtherProblems />
           </div>
           <div className="block-form">
-            <parts.Form />
+            <Suspense fallback={<p className="block-awaited">fetching the form</p>}>
+              <parts.Form />
+            </Suspense>
           </div>
           {value !== null && (parts.Result || parts.Plot) && (
             <div
@@ -107,7 +109,9 @@ export function BlockFrame({ selected, onKeyDown, onMove, onDelete }: BlockFrame
             >
               {parts.Result && (
                 <div className="block-outcome-result">
-                  <parts.Result value={value} stale={stale} />
+                  <Suspense fallback={null}>
+                    <parts.Result value={value} stale={stale} />
+                  </Suspense>
                 </div>
               )}
               {parts.Plot && (

@@ -1,6 +1,7 @@
 /** The block kinds as the page draws them. Adding a kind is one line here and one in the engine. */
 import type { KindName } from "#engine/kind.ts";
 import type { BlockParts } from "./block-parts.ts";
+import { basisCountParts } from "./basis-count/basis-count-parts.ts";
 import { divergenceParts } from "./divergence/divergence-parts.ts";
 import { orderPlanParts } from "./order-plan/order-plan-parts.ts";
 import { premisesParts } from "./premises/premises-parts.ts";
@@ -13,4 +14,5 @@ export const blockParts: Readonly<Record<KindName, BlockParts>> = {
   divergence: divergenceParts,
   orderPlan: orderPlanParts,
   truncationError: truncationErrorParts,
+  basisCount: basisCountParts,
 };

@@ -1,4 +1,5 @@
 /** Every block kind by name, without its computation: for documents, forms and the index of what can be placed. */
+import { basisCountDescription } from "./basis/description.ts";
 import { divergenceDescription } from "./divergence/description.ts";
 import type { BlockDescription, KindName } from "./kind.ts";
 import { orderPlanDescription } from "./plan/description.ts";
@@ -12,4 +13,5 @@ export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
   divergence: divergenceDescription,
   orderPlan: orderPlanDescription,
   truncationError: truncationErrorDescription,
+  basisCount: basisCountDescription,
 };

@@ -3,7 +3,14 @@ import type { Evaluation, Scalar } from "./evaluation.ts";
 import type { Theory } from "./premises/theory.ts";
 import type { InputsOf, Shape } from "./shape.ts";
 
-export const kindNames = ["premises", "scaling", "divergence", "orderPlan", "truncationError"] as const;
+export const kindNames = [
+  "premises",
+  "scaling",
+  "divergence",
+  "orderPlan",
+  "truncationError",
+  "basisCount",
+] as const;
 export type KindName = (typeof kindNames)[number];
 
 /** What a kind is and takes. Kept apart from its computation, so that a page can draw forms without the parser. */

@@ -1,4 +1,5 @@
 /** The block kinds of this version, by name. What they are without computing is in `descriptions.ts`. */
+import { basisCount } from "./basis/kind.ts";
 import { divergence } from "./divergence/kind.ts";
 import type { BlockKind, KindName } from "./kind.ts";
 import { orderPlan } from "./plan/kind.ts";
@@ -16,4 +17,5 @@ export const kinds: Readonly<Record<KindName, BlockKind>> = {
   divergence,
   orderPlan,
   truncationError,
+  basisCount,
 };

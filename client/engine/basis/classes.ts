@@ -24,14 +24,18 @@ export function doubledOf({ spin }: Quantum, d: number): number {
   return spin === "scalar" ? d - 2 : doubledDimension[spin];
 }
 
-/** @param most twice the largest mass dimension */
-export function fieldClasses(content: Content, most: number, visit: (found: FieldClass) => void): void {
+/**
+ * @param most twice the largest mass dimension
+ * @param visit told of each; false ends the search
+ */
+export function fieldClasses(content: Content, most: number, visit: (found: FieldClass) => boolean): void {
   const { quanta, d } = content;
   const ledger = ledgerOf(content);
   const sizes = quanta.map((quantum) => doubledOf(quantum, d));
   const reach = reachable(ledger, sizes, most);
   const isSymmetric = isSymmetricUnderConjugation(content);
   const powers = quanta.map(() => 0);
+  let goesOn = true;
   const descend = (at: number, doubled: number, sums: readonly number[]) => {
     const suffix = reach[at];
     // The least that the fields to come need to make these sums allowed.
@@ -40,12 +44,12 @@ export function fieldClasses(content: Content, most: number, visit: (found: Fiel
     if (at === quanta.length) {
       if (doubled === 0) return;
       const order = isSymmetric ? compareWithConjugate(powers, quanta) : 0;
-      if (order >= 0) visit({ powers: [...powers], doubled, counts: order === 0 ? 1 : 2 });
+      if (order >= 0) goesOn = visit({ powers: [...powers], doubled, counts: order === 0 ? 1 : 2 });
       return;
     }
     const size = sizes[at] ?? 1;
     let current = sums;
-    for (let power = 0; doubled + power * size <= most; power++) {
+    for (let power = 0; goesOn && doubled + power * size <= most; power++) {
       powers[at] = power;
       descend(at + 1, doubled + power * size, current);
       current = plus(current, ledger.of[at] ?? [], ledger.moduli);
@@ -75,8 +79,11 @@ function isSymmetricUnderConjugation({ charges }: Content): boolean {
 
 function ledgerOf({ quanta, gauge, charges }: Content): Ledger {
   // Charges become integers by their common denominator.
-  const scales = charges.map((_, index) =>
-    quanta.reduce((lcm, quantum) => leastCommon(lcm, Number(quantum.charges[index]?.denominator ?? 1n)), 1),
+  const scales = charges.map(({ kept }, index) =>
+    [...quanta.map((quantum) => quantum.charges[index]), ...(kept ?? [])].reduce(
+      (lcm, charge) => leastCommon(lcm, Number(charge?.denominator ?? 1n)),
+      1,
+    ),
   );
   const whole = (value: { numerator: bigint; denominator: bigint } | undefined, scale: number) =>
     value === undefined ? 0 : Number((value.numerator * BigInt(scale)) / value.denominator);

@@ -17,7 +17,6 @@ import { ScalarIntegral } from "./scalar-integral.ts";
 
 export interface CountedClass extends FieldClass {
   /** By number of derivatives, those that are not zero. For one of the conjugate pair. */
-  readonly counts: 1 | 2;
   readonly numbers: readonly { readonly derivatives: number; readonly number: FlavourPolynomial }[];
 }
 
@@ -35,7 +34,7 @@ export function countOperators(
   tell: (progress: Progress) => void,
 ): readonly CountedClass[] {
   const classes: FieldClass[] = [];
-  fieldClasses(content, most, (found) => classes.push(found));
+  fieldClasses(content, most, (found) => classes.push(found) > 0);
   const counter = new Counter(content, most);
   // Rising dimension, so that progress means something.
   classes.sort((a, b) => a.doubled - b.doubled);
@@ -57,6 +56,14 @@ interface Entries {
   readonly scalars: number;
   readonly gauge: readonly number[];
   readonly vectors: readonly number[];
+}
+
+/** One product of cycle types: its weight, and the same by its factors for when the weight is too large to be exact. */
+interface Term {
+  readonly weight: number;
+  readonly factors: readonly bigint[];
+  readonly flavourPower: number;
+  readonly vector: Float64Array;
 }
 
 class Counter {
@@ -87,20 +94,18 @@ class Counter {
   count(found: FieldClass): FlavourPolynomial[] {
     const derivatives = Math.floor((this.most - found.doubled) / 2) + 1;
     const sums = this.#sum(found, derivatives);
-    const arrangements = found.powers.reduce((product, power) => product * BigInt(factorial(power)), 1n);
-    return Array.from({ length: derivatives }, (_, k) => {
-      return FlavourPolynomial.of(
-        sums.map((byDerivatives) => Rational.of(byDerivatives[k] ?? 0n, arrangements)),
-      );
-    });
+    const arrangements = found.powers.reduce((product, power) => product * factorial(power), 1n);
+    return Array.from({ length: derivatives }, (_, k) =>
+      FlavourPolynomial.of(sums.map((byDerivatives) => Rational.of(byDerivatives[k] ?? 0n, arrangements))),
+    );
   }
 
   /** Sums [power of n_f][derivatives] before the division by Π n_i!. */
   #sum(found: FieldClass, derivatives: number): bigint[][] {
     const floats: Float64Array[] = [];
     let largest = 0;
-    this.#terms(found, (weight, power, vector) => {
-      const sums = (floats[power] ??= new Float64Array(derivatives));
+    this.#terms(found, ({ weight, flavourPower, vector }) => {
+      const sums = (floats[flavourPower] ??= new Float64Array(derivatives));
       let size = 0;
       for (let k = 0; k < derivatives; k++) {
         const term = weight * (vector[k] ?? 0);
@@ -114,46 +119,52 @@ class Counter {
         Array.from(sums ?? [], (sum) => BigInt(sum)),
       );
     const exact: bigint[][] = [];
-    this.#terms(found, (weight, power, vector) => {
-      const sums = (exact[power] ??= Array.from({ length: derivatives }, () => 0n));
-      for (let k = 0; k < derivatives; k++)
-        sums[k] = (sums[k] ?? 0n) + BigInt(weight) * BigInt(vector[k] ?? 0);
+    this.#terms(found, ({ factors, flavourPower, vector }) => {
+      const sums = (exact[flavourPower] ??= Array.from({ length: derivatives }, () => 0n));
+      const weight = factors.reduce((product, factor) => product * factor, 1n);
+      for (let k = 0; k < derivatives; k++) sums[k] = (sums[k] ?? 0n) + weight * BigInt(vector[k] ?? 0);
     });
     return Array.from(exact, (sums: bigint[] | undefined) => sums ?? []);
   }
 
-  /** Every choice of a cycle type for each power: its weight with signs, the power of n_f, and the Lorentz integral. */
-  #terms(
-    { powers }: FieldClass,
-    note: (weight: number, flavourPower: number, vector: Float64Array) => void,
-  ): void {
+  /** Every choice of a cycle type for each power. */
+  #terms({ powers }: FieldClass, note: (term: Term) => void): void {
     const { quanta } = this.content;
-    const lorentz = this.#lorentz;
+    const factors: bigint[] = [];
     const descend = (at: number, weight: number, flavourPower: number, entries: Entries) => {
       if (at === quanta.length) {
-        let value = weight;
-        for (const [index, gauge] of this.#gauge.entries()) value *= gauge.value(entries.gauge[index] ?? 0);
-        for (const [index, group] of this.#orthogonal.entries())
-          value *= group.value(entries.vectors[index] ?? 0);
-        if (value === 0) return;
+        const values = [
+          ...this.#gauge.map((gauge, index) => gauge.value(entries.gauge[index] ?? 0)),
+          ...this.#orthogonal.map((group, index) => group.value(entries.vectors[index] ?? 0)),
+        ];
+        if (values.includes(0)) return;
         const vector =
-          this.#scalarIntegral?.value(entries.scalars) ?? lorentz.value(entries.others, entries.scalars);
-        note(value, flavourPower, vector);
+          this.#scalarIntegral?.value(entries.scalars) ??
+          this.#lorentz.value(entries.others, entries.scalars);
+        note({
+          weight: values.reduce((product, value) => product * value, weight),
+          factors: [...factors, ...values.map(BigInt)],
+          flavourPower,
+          vector,
+        });
         return;
       }
       const power = powers[at] ?? 0;
       const quantum = quanta[at];
       if (power === 0 || !quantum) return descend(at + 1, weight, flavourPower, entries);
       for (const { cycles, permutations } of cycleTypes(power)) {
-        const sign = quantum.isFermion && (power - cycles.length) % 2 === 1 ? -1 : 1;
-        const symbolic = quantum.flavours === "symbolic";
-        const copies = quantum.flavours === "symbolic" ? 1 : quantum.flavours ** cycles.length;
+        const sign = quantum.isFermion && (power - cycles.length) % 2 === 1 ? -1n : 1n;
+        const copies =
+          quantum.flavours === "symbolic" ? 1n : BigInt(quantum.flavours) ** BigInt(cycles.length);
+        const factor = sign * copies * permutations;
+        factors.push(factor);
         descend(
           at + 1,
-          weight * sign * permutations * copies,
-          flavourPower + (symbolic ? cycles.length : 0),
+          weight * Number(factor),
+          flavourPower + (quantum.flavours === "symbolic" ? cycles.length : 0),
           this.#enter(entries, quantum, cycles),
         );
+        factors.pop();
       }
     };
     descend(0, 1, 0, {

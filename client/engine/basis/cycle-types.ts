@@ -3,14 +3,14 @@
 export interface CycleType {
   /** Lengths, longest first: [2, 1, 1]. */
   readonly cycles: readonly number[];
-  /** Permutations of this type: n! / z, an integer. */
-  readonly permutations: number;
+  /** Permutations of this type: n! / z. */
+  readonly permutations: bigint;
 }
 
 const known = new Map<number, readonly CycleType[]>();
 
 /**
- * All cycle types of n objects with their sizes, which add up to n!. Exact for n ≤ 18, where n! is below 2⁵³.
+ * All cycle types of n objects with their sizes, which add up to n!.
  * @example cycleTypes(3).length // 3
  */
 export function cycleTypes(n: number): readonly CycleType[] {
@@ -33,18 +33,18 @@ function partitions(n: number, largest: number): number[][] {
 }
 
 /** z = Π_j j^{m_j} m_j!, with m_j cycles of length j. */
-function centralizer(cycles: readonly number[]): number {
-  let z = 1;
+function centralizer(cycles: readonly number[]): bigint {
+  let z = 1n;
   for (const length of new Set(cycles)) {
     const multiplicity = cycles.filter((other) => other === length).length;
-    z *= length ** multiplicity * factorial(multiplicity);
+    z *= BigInt(length) ** BigInt(multiplicity) * factorial(multiplicity);
   }
   return z;
 }
 
-/** @example factorial(5) // 120 */
-export function factorial(n: number): number {
-  let product = 1;
-  for (let factor = 2; factor <= n; factor++) product *= factor;
+/** @example String(factorial(5)) // "120" */
+export function factorial(n: number): bigint {
+  let product = 1n;
+  for (let factor = 2n; factor <= n; factor++) product *= factor;
   return product;
 }

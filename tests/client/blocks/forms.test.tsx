@@ -32,13 +32,21 @@ function places(): string[] {
   );
 }
 
+/** The code of some forms comes when the first one is drawn. */
+async function formsAreThere() {
+  await waitFor(() => {
+    expect(document.querySelectorAll("[data-kind]").length).toBeGreaterThan(0);
+    expect(document.querySelectorAll(".block-awaited")).toHaveLength(0);
+  });
+}
+
 describe.each(kindNames)("the form of %s", (kind) => {
   const { shape } = kindDescriptions[kind];
   const variants: Record<string, Record<string, string>[]> = {
     premises: [{ geometry: "isotropic" }, { geometry: "anisotropic" }],
     divergence: [{ mode: "one graph" }, { mode: "whole theory" }],
   };
-  it("has a control for every field and column of its shape, and for nothing else", () => {
+  it("has a control for every field and column of its shape, and for nothing else", async () => {
     const seen = new Set<string>();
     for (const attrs of variants[kind] ?? [{}]) {
       const rows = Object.entries(shape.tables).map(([table, columns]) =>
@@ -55,6 +63,7 @@ describe.each(kindNames)("the form of %s", (kind) => {
         documentOf([{ type: kind, attrs: { blockId: "b", ...attrs }, content: rows }]),
         ["b"],
       );
+      await formsAreThere();
       for (const place of places()) seen.add(place.replace(/^.*: /, "").replace(/\/[^/]+\//, "/"));
       wren.leave();
       wren = null;
@@ -69,8 +78,9 @@ describe.each(kindNames)("the form of %s", (kind) => {
     expect([...seen].sort()).toEqual([...wanted].sort());
   });
 
-  it("gives every control a name", () => {
+  it("gives every control a name", async () => {
     wren = personAtForms("Wren", 10, documentOf([lantern, { type: kind, attrs: { blockId: "b" } }]), ["b"]);
+    await formsAreThere();
     for (const control of document.querySelectorAll<HTMLInputElement>("input, select")) {
       const name = control.getAttribute("aria-label") ?? control.labels?.[0]?.textContent ?? "";
       expect(name, control.outerHTML).not.toBe("");

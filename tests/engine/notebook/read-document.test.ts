@@ -116,10 +116,10 @@ describe("reading a document", () => {
 
   it("reports blocks of unknown kinds and does not lose those around them", () => {
     const { blocks, unknown } = readDocument(
-      documentOf(block("basisCount", { blockId: "n" }), truncationBlock("t")),
+      documentOf(block("remark", { blockId: "n" }), truncationBlock("t")),
     );
     expect(blocks.map(({ id }) => id)).toEqual(["t"]);
-    expect(unknown).toEqual([{ blockId: "n", type: "basisCount" }]);
+    expect(unknown).toEqual([{ blockId: "n", type: "remark" }]);
   });
 
   it("says when a choice or a text cannot be, and never computes with something else in silence", () => {
