@@ -41,7 +41,7 @@ test("moves the probe and the target, keeps them for both, and takes them back",
   await expect(target).not.toHaveAttribute("aria-valuetext", /^target 10⁻³/);
   await probe.focus();
   await wren.page.keyboard.press("PageDown");
-  await hers.getByRole("button", { name: /^keep 280 GeV and target .* in the premises$/ }).click();
+  await hers.getByRole("button", { name: /^keep in the premises: 280 GeV and target / }).click();
   await isSaved(wren.page);
   await expect(his.getByRole("slider", { name: "Probe scale p" })).toHaveAttribute(
     "aria-valuetext",

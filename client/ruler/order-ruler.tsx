@@ -126,7 +126,7 @@ function DrawnRuler({ source, choices, onChoose }: DrawnProps) {
             <button
               type="button"
               className="ruler-keep"
-              aria-label={`keep ${keptWords(model, reading)} in the premises`}
+              aria-label={`keep in the premises: ${keptWords(model, reading)}`}
               onClick={keep}
             >
               keep in the premises

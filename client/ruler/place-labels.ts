@@ -7,6 +7,8 @@ export interface Labelled {
   readonly id: string;
   readonly x: number;
   readonly width: number;
+  /** What it may shrink to where there is no room. */
+  readonly least?: number;
 }
 
 export interface PlacedLabel {
@@ -15,6 +17,8 @@ export interface PlacedLabel {
   readonly level: number;
   /** Which side of its mark the label stands on; null when there is no room for it at any level. */
   readonly side: "right" | "left" | null;
+  /** Whether only its least width found room. */
+  readonly isCut: boolean;
 }
 
 /** Half of a mark, and from a mark's middle to its label. */
@@ -48,13 +52,17 @@ export function placeLabels(labels: readonly Labelled[], room: LabelRoom): reado
     .map((label, index) => ({ label, index }))
     .sort((a, b) => b.label.x - a.label.x || a.index - b.index);
   for (const { label } of inTurn) {
-    const found = firstRoom(label, taken, room) ?? roomOfMark(label, taken, room.levels);
+    const { least = label.width } = label;
+    const whole = firstRoom(label, taken, room);
+    const found =
+      whole ?? firstRoom({ ...label, width: least }, taken, room) ?? roomOfMark(label, taken, room.levels);
     taken.push(found.room);
     placed.set(label.id, {
       id: label.id,
       x: label.x,
       level: found.room.level,
       side: found.side,
+      isCut: whole === null,
     });
   }
   return labels.flatMap(({ id }) => placed.get(id) ?? []);

@@ -63,13 +63,11 @@ export function placed(
   keptTarget: number | null,
 ): ReadonlyMap<string, PlacedLabel> {
   const hasNote = axis.right + EDGE >= NOTE_FROM;
-  const wanted = marks.map((read) => ({
-    id: read.mark.id,
-    x: positionOf(axis, read.size),
-    width:
-      labelWidth(labelOf(read)) +
-      (hasNote && read.mark.id === firstOut?.mark.id ? NOTE_SCALE * labelWidth(noteOf(read)) : 0),
-  }));
+  const wanted = marks.map((read) => {
+    const least = labelWidth(labelOf(read));
+    const note = hasNote && read.mark.id === firstOut?.mark.id ? NOTE_SCALE * labelWidth(noteOf(read)) : 0;
+    return { id: read.mark.id, x: positionOf(axis, read.size), width: least + note, least };
+  });
   const line = keptTarget === null ? null : positionOf(axis, keptTarget);
   const room = { levels, left: axis.left - 18, right: axis.right + EDGE, line };
   return new Map(placeLabels(wanted, room).map((label) => [label.id, label]));
@@ -135,13 +133,23 @@ export function RulerScale(props: Props) {
           read={read}
           floor={floor}
           place={labels.get(read.mark.id) ?? nowhere}
-          note={hasNote && read.mark.id === firstOut?.mark.id ? noteOf(read) : null}
           isFirstOut={read.mark.id === firstOut?.mark.id}
           current={read.mark.id === current}
           opened={read.mark.id === opened}
           onOpen={() => props.onOpen(read.mark.id === opened ? null : read.mark.id)}
         />
       ))}
+      <g aria-hidden="true">
+        {marks.map((read) => (
+          <Label
+            key={read.mark.id}
+            read={read}
+            place={labels.get(read.mark.id) ?? nowhere}
+            note={hasNote && read.mark.id === firstOut?.mark.id ? noteOf(read) : null}
+            floor={floor}
+          />
+        ))}
+      </g>
     </svg>
   );
 }
@@ -156,24 +164,23 @@ function walk(event: KeyboardEvent<SVGSVGElement>): void {
   marks[(at + step + marks.length) % marks.length]?.focus();
 }
 
-const nowhere: PlacedLabel = { id: "", x: 0, level: 0, side: null };
+const nowhere: PlacedLabel = { id: "", x: 0, level: 0, side: null, isCut: true };
 const heightOf = (level: number) => 11 + level * LEVEL;
 
 interface MarkProps {
   readonly read: ReadMark;
   readonly floor: number;
   readonly place: PlacedLabel;
-  readonly note: string | null;
   readonly isFirstOut: boolean;
   readonly current: boolean;
   readonly opened: boolean;
   readonly onOpen: () => void;
 }
 
-function Mark({ read, floor, place, note, isFirstOut, current, opened, onOpen }: MarkProps) {
+function Mark({ read, floor, place, isFirstOut, current, opened, onOpen }: MarkProps) {
   const { mark, included } = read;
   const height = heightOf(place.level);
-  const toRight = place.side !== "left";
+  const words = place.side === null ? 0 : labelWidth(labelOf(read));
   return (
     <g
       className={classes(
@@ -195,24 +202,46 @@ function Mark({ read, floor, place, note, isFirstOut, current, opened, onOpen }:
       }}
     >
       <title>{markName(read, isFirstOut)}</title>
-      <rect data-hand="" className="ruler-touch" x={-12} y={floor - height - 12} width={24} height={24} />
+      {/* Its words belong to what can be pressed. */}
+      <rect
+        data-hand=""
+        className="ruler-touch"
+        x={place.side === "left" ? -12 - words : -12}
+        y={floor - height - (words === 0 ? 12 : 8)}
+        width={24 + words}
+        height={words === 0 ? 24 : 16}
+      />
       <path
         className="ruler-shape"
         d={shapes[mark.scalingClass]}
         transform={`translate(0 ${floor - height})`}
       />
-      {place.side !== null && (
-        <text
-          className="ruler-label"
-          x={toRight ? LABEL_GAP : -LABEL_GAP}
-          y={floor - height + 4}
-          textAnchor={toRight ? "start" : "end"}
-        >
-          {labelOf(read)}
-          {note !== null && <tspan className="ruler-note">{note}</tspan>}
-        </text>
-      )}
     </g>
+  );
+}
+
+interface LabelProps {
+  readonly read: ReadMark;
+  readonly place: PlacedLabel;
+  readonly note: string | null;
+  readonly floor: number;
+}
+
+/** Outside the mark's button, whose name says more than this. */
+function Label({ read, place, note, floor }: LabelProps) {
+  if (place.side === null) return null;
+  const toRight = place.side === "right";
+  return (
+    <text
+      className={classes("ruler-label", !read.included && "is-out")}
+      style={{ transform: `translateX(${place.x.toFixed(2)}px)` }}
+      x={toRight ? LABEL_GAP : -LABEL_GAP}
+      y={floor - heightOf(place.level) + 4}
+      textAnchor={toRight ? "start" : "end"}
+    >
+      {labelOf(read)}
+      {note !== null && !place.isCut && <tspan className="ruler-note">{note}</tspan>}
+    </text>
   );
 }
 
