@@ -31,7 +31,7 @@ export const truncationWords: Words = {
   "reference-from-order": ({ order }) =>
     `The series starts at order ${said(order)}; the reference is its first value divided by Q to that power, so that its coefficient is 1.`,
   "coefficients-not-finite": ({ value }) =>
-    `With Q = ${said(value)} some power of Q is too small to divide by, so a coefficient has no value.`,
+    `With Q = ${said(value)} a coefficient is too large to compute with: a power of Q, or the reference, is too small to divide by.`,
   "q-not-positive": ({ value }) => `Q is ${said(value)}. An expansion parameter must be above 0.`,
   "q-needs-premises": () =>
     "Q is to come from the scales of the premises, but this block stands on none. Choose premises, or enter a number.",
@@ -101,6 +101,8 @@ export const truncationWords: Words = {
     `${said(points)} of ${said(count)} points lack an order or a reference. There the bands stop at the orders known, and the correlated model leaves them out.`,
   "reference-vanishes": ({ points, count }) =>
     `The reference is 0 at ${said(points)} of ${said(count)} points, where no coefficient exists. They are left out; a reference column, or a number, avoids it.`,
+  "coefficients-out-of-range": ({ points, count }) =>
+    `At ${said(points)} of ${said(count)} points a coefficient is too large to compute with; they are left out.`,
   "q-beyond-one-along": ({ points, count, from, to }) =>
     `Q is not below 1 at ${said(points)} of ${said(count)} points, from x = ${said(from)} to ${said(to)}. Sums over omitted orders do not exist there, and the correlated model leaves these points out.`,
   "observables-too-many": ({ most }) => `At most ${said(most)} further observables are combined at once.`,
@@ -109,7 +111,7 @@ export const truncationWords: Words = {
   "correlated-without-coefficients": () =>
     "No order gives a coefficient along x, so there is nothing to correlate. Add an order to the data.",
   "correlated-few-points": ({ points, fewest }) =>
-    `Only ${said(points)} points have all orders and Q below 1; a length scale needs at least ${said(fewest)}.`,
+    `Only ${said(points)} different x have all orders and Q below 1; a length scale needs at least ${said(fewest)}.`,
   "correlated-all-zero": () =>
     "All coefficients are zero at every point, so they have neither size nor length scale.",
   "length-unreadable": ({ text }) =>

@@ -1,6 +1,7 @@
 /** Coefficients c_n(x) from predictions along x, and which points give them. */
 import type { CurveData } from "./curve-data.ts";
 import type { Settings } from "./read-settings.ts";
+import { LARGEST_COEFFICIENT } from "./series.ts";
 import type { TruncationInputs } from "./shape.ts";
 
 /** The coefficients of the points that have every order, at one expansion parameter. */
@@ -26,6 +27,7 @@ interface Left {
   readonly incomplete: number;
   readonly zeroReference: number;
   readonly beyondOne: number;
+  readonly outOfRange: number;
 }
 
 /**
@@ -40,9 +42,15 @@ export function coefficientsAlong(
 ): CoefficientsAlong {
   const lowest = data.orders[0]?.order ?? 0;
   const fromLowest = fixedReference === null && data.reference === null;
-  const left = { incomplete: 0, zeroReference: 0, beyondOne: 0 };
+  const left = { incomplete: 0, zeroReference: 0, beyondOne: 0, outOfRange: 0 };
   const places: number[] = [];
   const references: number[] = [];
+  const coefficient = (index: number, place: number, reference: number) => {
+    const { order, values } = data.orders[index] ?? { order: 0, values: [] };
+    const shift = (values[place] ?? NaN) - (index === 0 ? 0 : (data.orders[index - 1]?.values[place] ?? NaN));
+    return shift / (reference * (q[place] ?? NaN) ** (fromLowest ? order - lowest : order));
+  };
+  const used = data.orders.flatMap(({ order }, index) => (isUsed(order) ? [index] : []));
   data.x.forEach((_, place) => {
     const parameter = q[place] ?? NaN;
     const first = data.orders[0]?.values[place] ?? null;
@@ -51,20 +59,17 @@ export function coefficientsAlong(
       left.incomplete += 1;
     else if (reference === 0) left.zeroReference += 1;
     else if (!(parameter < 1)) left.beyondOne += 1;
+    else if (!used.every((index) => Math.abs(coefficient(index, place, reference)) <= LARGEST_COEFFICIENT))
+      left.outOfRange += 1;
     else {
       places.push(place);
       references.push(reference);
     }
   });
-  const orders = data.orders.flatMap(({ order, values }, index) => {
-    if (!isUsed(order)) return [];
-    const power = fromLowest ? order - lowest : order;
-    const before = data.orders[index - 1]?.values;
-    const list = places.map((place, point) => {
-      const shift = (values[place] ?? NaN) - (before ? (before[place] ?? NaN) : 0);
-      return shift / ((references[point] ?? NaN) * (q[place] ?? NaN) ** power);
-    });
-    return [{ order, power, values: Float64Array.from(list) }];
+  const orders = used.map((index) => {
+    const { order } = data.orders[index] ?? { order: 0 };
+    const list = places.map((place, point) => coefficient(index, place, references[point] ?? NaN));
+    return { order, power: fromLowest ? order - lowest : order, values: Float64Array.from(list) };
   });
   const pick = (values: readonly number[]) => places.map((place) => values[place] ?? NaN);
   return { x: pick(data.x), q: pick(q), reference: references, orders, left };

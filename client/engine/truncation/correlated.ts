@@ -56,8 +56,9 @@ export function correlate(given: Given): Correlated | null {
     return null;
   };
   if (coefficients.orders.length === 0) return wrong("correlated-without-coefficients", "data");
-  if (coefficients.x.length < FEWEST_POINTS)
-    return wrong("correlated-few-points", "data", { points: coefficients.x.length, fewest: FEWEST_POINTS });
+  const different = differentOf(coefficients.x);
+  if (different < FEWEST_POINTS)
+    return wrong("correlated-few-points", "data", { points: different, fewest: FEWEST_POINTS });
   if (coefficients.orders.every(({ values }) => values.every((value) => value === 0)))
     return wrong("correlated-all-zero", "data");
   const typed = (field: "length" | "nugget") => {
@@ -109,6 +110,11 @@ export function correlate(given: Given): Correlated | null {
   };
 }
 
+/** How many x there are; those that differ only in the last digits of a double count as one. */
+function differentOf(x: readonly number[]): number {
+  return new Set(x.map((at) => at.toPrecision(9))).size;
+}
+
 function observableOf(
   data: CurveData,
   coefficients: CoefficientsAlong,
@@ -135,7 +141,9 @@ function rounding({ resolution }: CurveData, { orders, q, reference }: Coefficie
       count += 1;
     });
   }
-  return count === 0 || size === 0 ? 0 : noise / size;
+  if (count === 0 || size === 0) return 0;
+  // Sizes at the ends of what a double holds: then nothing is known of their digits.
+  return Number.isFinite(noise / size) ? noise / size : LARGEST_NUGGET;
 }
 
 function readBelief({ inputs, theory, problems }: Given, scale: BreakdownScale): BreakdownBelief | null {
@@ -215,11 +223,12 @@ function readOthers(given: Given): { observable: Observable; name: string }[] {
     }
     const q = data.x.map((x) => reading.along.at(x));
     const coefficients = coefficientsAlong(data, q, settings.reference, isUsedIn(inputs, settings, data));
-    if (coefficients.orders.length === 0 || coefficients.x.length < FEWEST_POINTS) {
+    const different = coefficients.orders.length === 0 ? 0 : differentOf(coefficients.x);
+    if (different < FEWEST_POINTS) {
       problems.push({
         code: "correlated-few-points",
         path: ["observables", row.id, "data"],
-        facts: { points: coefficients.x.length, fewest: FEWEST_POINTS },
+        facts: { points: different, fewest: FEWEST_POINTS },
       });
       return [];
     }

@@ -90,10 +90,10 @@ export function readCurve(
   if (place === null || problems.length > 0) return nothing();
   const at = along.withSigma(data.x[place] ?? NaN);
   const estimate = series && estimateSeries(series, at.value);
-  if (!series || !estimate) {
-    problems.push({ code: "point-incomplete", path: ["at"], facts: { x: data.x[place] ?? NaN } });
-    return nothing();
-  }
+  if (!series) problems.push({ code: "point-incomplete", path: ["at"], facts: { x: data.x[place] ?? NaN } });
+  else if (!estimate)
+    problems.push({ code: "coefficients-not-finite", path: ["q"], facts: { value: at.value } });
+  if (!series || !estimate) return nothing();
   notices.push(...leftOut(coefficients, data, q));
   const variable = name.ok ? name.value.latex : "x";
   return {
@@ -161,6 +161,12 @@ function leftOut({ left }: CoefficientsAlong, { x }: CurveData, q: readonly numb
       code: "reference-vanishes",
       path: ["reference"],
       facts: { points: left.zeroReference, count },
+    });
+  if (left.outOfRange > 0)
+    notices.push({
+      code: "coefficients-out-of-range",
+      path: ["data"],
+      facts: { points: left.outOfRange, count },
     });
   const beyond = q.flatMap((one, place) => (one >= 1 ? [x[place] ?? NaN] : []));
   if (beyond.length > 0)

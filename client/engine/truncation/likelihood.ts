@@ -38,6 +38,8 @@ export interface LengthFit {
   logLikelihood(s: number): number;
 }
 
+/** What vanishing coefficients without a prior are taken for: their likelihood would be without bound. */
+const LEAST = 1e-200;
 /** Chebyshev nodes in s at which a Q that is not inverse to the breakdown scale is followed exactly. */
 const NODES = 15;
 
@@ -60,7 +62,7 @@ export function likelihoodOf(
       whiten(factor, values).reduce((sum, z) => sum + z * z, 0);
     const squares = orders.map(({ values }) => squaresOf(values));
     const log = (total: number, logQNow: number) =>
-      -(nu / 2) * Math.log(nu0 * tau0 ** 2 + total) -
+      -(nu / 2) * Math.log(Math.max(nu0 * tau0 ** 2 + total, LEAST)) -
       (orders.length / 2) * factor.logDeterminant -
       powers * logQNow;
     const inverse = (s: number) => {

@@ -47,7 +47,7 @@ export function describeScalars(value: TruncationValue): Scalar[] {
       label: `truncation error after order ${last.order}: ${nameOf(best)}`,
       value: number(best.halfWidth, 0, value.unit),
     });
-    if (last.value !== 0) {
+    if (Number.isFinite(best.halfWidth / Math.abs(last.value))) {
       scalars.push({
         id: "relative-error",
         label: `the same relative to $X$`,

@@ -59,6 +59,9 @@ export interface SeriesEstimate {
   readonly orders: readonly EstimateAtOrder[];
 }
 
+/** Larger coefficients are no sizes of anything, and their squares would not fit a double. */
+export const LARGEST_COEFFICIENT = 1e120;
+
 /** Null when a power of Q leaves the range of a double, so that some coefficient has no value. */
 export function estimateSeries(series: Series, q: number): SeriesEstimate | null {
   const lowest = series.known[0];
@@ -66,10 +69,12 @@ export function estimateSeries(series: Series, q: number): SeriesEstimate | null
   const reference = series.reference ?? lowest.value / q ** lowest.order;
   const coefficients = series.known.map(({ order, shift }) => ({
     order,
-    value: shift / (reference * q ** order),
+    // Without the sum a vanishing shift over a negative reference would be −0.
+    value: shift / (reference * q ** order) + 0,
     used: (order > 0 || series.includeOrderZero) && !(series.reference === null && order === lowest.order),
   }));
-  if (!coefficients.every(({ value }) => Number.isFinite(value))) return null;
+  const fits = ({ value }: { value: number }) => Math.abs(value) <= LARGEST_COEFFICIENT;
+  if (!Number.isFinite(reference) || !coefficients.every(fits)) return null;
   const orders = series.known.map((_, index) => estimateAt(series, q, reference, coefficients, index));
   return { reference, coefficients, orders };
 }
@@ -111,9 +116,11 @@ function estimateAt(
       add("correlated along x", "first omitted term", degree, of(powers.first ** 2));
     }
   }
-  if (series.sets)
-    for (const band of setBands(series, series.sets, q, nextOrder, used))
-      bands.push({ ...band, halfWidth: size * band.halfWidth });
+  if (series.sets) {
+    for (const { method, omitted, degree, halfWidth } of setBands(series, series.sets, q, nextOrder, used))
+      if (Number.isFinite(size * halfWidth))
+        bands.push({ method, omitted, degree, halfWidth: size * halfWidth });
+  }
   if (largest !== null) {
     for (const degree of series.degrees) {
       const factor = uniformPriorFactor(used.length, degree.probability);

@@ -37,7 +37,7 @@ function draw(seed: number): { coefficients: CoefficientsAlong; truth: readonly 
     q,
     reference: x.map(() => 1),
     orders: ordersKnown.map((order) => ({ order, power: order, values: one() })),
-    left: { incomplete: 0, zeroReference: 0, beyondOne: 0 },
+    left: { incomplete: 0, zeroReference: 0, beyondOne: 0, outOfRange: 0 },
   };
   const rest = Array.from({ length: 20 }, (_, index) => ({ order: 5 + index, values: one() }));
   const truth = q.map((at, point) =>

@@ -20,7 +20,7 @@ function observable(x: number[], lists: Record<number, number[]>, breakdown = 60
       power: Number(order),
       values: Float64Array.from(values),
     })),
-    left: { incomplete: 0, zeroReference: 0, beyondOne: 0 },
+    left: { incomplete: 0, zeroReference: 0, beyondOne: 0, outOfRange: 0 },
   };
   return { coefficients, parameterAt: null, nugget: 1e-8 };
 }
