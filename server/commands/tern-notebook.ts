@@ -28,8 +28,8 @@ export const ternBlocks: readonly DocumentNode[] = [
     fields: { name: "Tern", geometry: "anisotropic", D: "3", z: "2", note: "Invented for demonstration." },
     tables: {
       symmetries: [
-        { id: "n1", name: "first number", group: "U(1)", meaning: "particles of the first species" },
-        { id: "n2", name: "second number", group: "U(1)", meaning: "particles of the second species" },
+        { id: "n1", name: "first", group: "U(1)", meaning: "particles of the first species" },
+        { id: "n2", name: "second", group: "U(1)", meaning: "particles of the second species" },
       ],
       fields: [
         { id: "psi", symbol: "psi", kind: "Schrödinger field", charges: "1, 0", meaning: "first species" },

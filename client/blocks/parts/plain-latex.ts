@@ -36,6 +36,7 @@ const letters: Readonly<Record<string, string>> = {
   Psi: "Ψ",
   Omega: "Ω",
   partial: "∂",
+  dagger: "†",
 };
 
 /** For native lists, spoken names and searches: "c₆/(6! Λ²) χ⁶". */
@@ -44,6 +45,9 @@ export function plainLatex(latex: string): string {
     .replace(/\\frac\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}\{([^{}]*(?:\{[^{}]*\}[^{}]*)*)\}/g, "$1/($2)")
     .replace(/\\bar\{([^{}]*)\}/g, "$1̄")
     .replace(/\\([A-Za-z]+)/g, (_, name: string) => letters[name] ?? "")
+    .replace(/\^\{?†\}?/g, "†")
+    .replace(/_\{?i\}?/g, "ᵢ")
+    .replace(/_\{?t\}?/g, "ₜ")
     .replace(/\^\{?(\d+)\}?/g, (_, digits: string) => superscript(digits))
     .replace(/_\{?(\d+)\}?/g, (_, digits: string) =>
       digits.replace(/\d/g, (digit) => "₀₁₂₃₄₅₆₇₈₉".charAt(Number(digit))),

@@ -106,6 +106,8 @@ describe("words on the ruler", () => {
       ["\\frac{m^{2}}{2}\\,\\chi^{2}", "m² χ²"],
       ["\\frac{a}{\\Lambda}\\,(\\partial\\chi)^{2}\\,\\sigma", "a (∂χ)² σ"],
       ["\\frac{1}{2}\\,(\\partial\\phi)^{2}", "(∂φ)²"],
+      ["r\\,s^{\\dagger}\\,\\partial_t s", "r s† ∂ₜ s"],
+      ["w\\,s^{\\dagger}\\,\\partial_i^{4} s", "w s† ∂ᵢ⁴ s"],
     ] as const;
     expect(cases.map(([latex]) => shortLabel(latex))).toEqual(cases.map(([, label]) => label));
   });
