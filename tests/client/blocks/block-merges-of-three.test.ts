@@ -117,62 +117,66 @@ afterEach(() => {
   people = [];
 });
 
-it("all have the same in the end: no row in the wrong block, none lost or doubled, no value that nobody wrote", () => {
-  fc.assert(
-    fc.property(scene, ({ rows, deeds, turns }) => {
-      leave(...people);
-      const state = notebookState([paragraph("before"), ...ids.map((id) => premises(id, rows))]);
-      people = deeds.map((_, index) => person(10 * (index + 1), state));
-      const ledger = new Ledger();
-      for (const id of ids) ledger.written.add(`name of ${id}`);
-      const heard = people.map((): Uint8Array[] => []);
-      const posts = people.map((who, sender) => {
-        const post = (update: Uint8Array, origin: unknown) => {
-          if (origin === "network") return;
-          for (const [reader, queue] of heard.entries()) if (reader !== sender) queue.push(update);
+it(
+  "all have the same in the end: no row in the wrong block, none lost or doubled, no value that nobody wrote",
+  () => {
+    fc.assert(
+      fc.property(scene, ({ rows, deeds, turns }) => {
+        leave(...people);
+        const state = notebookState([paragraph("before"), ...ids.map((id) => premises(id, rows))]);
+        people = deeds.map((_, index) => person(10 * (index + 1), state));
+        const ledger = new Ledger();
+        for (const id of ids) ledger.written.add(`name of ${id}`);
+        const heard = people.map((): Uint8Array[] => []);
+        const posts = people.map((who, sender) => {
+          const post = (update: Uint8Array, origin: unknown) => {
+            if (origin === "network") return;
+            for (const [reader, queue] of heard.entries()) if (reader !== sender) queue.push(update);
+          };
+          who.doc.on("update", post);
+          return () => who.doc.off("update", post);
+        });
+        const hear = (reader: number) => {
+          const update = heard[reader]?.shift();
+          const who = people[reader];
+          if (update !== undefined && who !== undefined) Y.applyUpdate(who.doc, update, "network");
+          return update !== undefined;
         };
-        who.doc.on("update", post);
-        return () => who.doc.off("update", post);
-      });
-      const hear = (reader: number) => {
-        const update = heard[reader]?.shift();
-        const who = people[reader];
-        if (update !== undefined && who !== undefined) Y.applyUpdate(who.doc, update, "network");
-        return update !== undefined;
-      };
-      for (const [index, who] of people.entries())
-        for (const each of deeds[index] ?? []) perform(who, `p${index}`, each, ledger);
-      for (const turn of turns) hear(turn % people.length);
-      while (people.map((_, reader) => hear(reader)).some(Boolean));
-      for (const stop of posts) stop();
+        for (const [index, who] of people.entries())
+          for (const each of deeds[index] ?? []) perform(who, `p${index}`, each, ledger);
+        for (const turn of turns) hear(turn % people.length);
+        while (people.map((_, reader) => hear(reader)).some(Boolean));
+        for (const stop of posts) stop();
 
-      const [first, ...others] = people;
-      if (first === undefined) throw new Error("nobody is there");
-      for (const other of others) {
-        expect(other.editor.getJSON()).toEqual(first.editor.getJSON());
-        expect(other.fragment.toJSON()).toBe(first.fragment.toJSON());
-        expect(other.directory.blocks()).toEqual(first.directory.blocks());
-      }
-      const blocks = first.directory.blocks();
-      for (const id of ids) {
-        if (ledger.gone.has(id)) continue;
-        const block = blocks.find((each) => each.id === id) ?? expect.fail(`${id} was lost`);
-        const kept = scales(block).map((each) => each.id);
-        for (let index = 0; index < rows; index += 1)
-          if (!ledger.gone.has(`${id}-r${index}`)) expect(kept).toContain(`${id}-r${index}`);
-      }
-      for (const block of blocks) {
-        const rowIds = scales(block).map((each) => each.id);
-        expect(new Set(rowIds).size).toBe(rowIds.length);
-        expect(block.inputs["name"]).toBe(`name of ${block.id}`);
-        for (const rowId of rowIds) expect(rowId.startsWith(`${block.id}-`)).toBe(true);
-        const values = [
-          ...Object.values(block.inputs).filter((value) => typeof value === "string"),
-          ...scales(block).flatMap(({ id: _, ...cells }) => Object.values(cells)),
-        ];
-        expect(values.filter((value) => !ledger.written.has(value))).toEqual([]);
-      }
-    }),
-    { numRuns: RUNS },
-  );
-}, 30_000 + RUNS * 500);
+        const [first, ...others] = people;
+        if (first === undefined) throw new Error("nobody is there");
+        for (const other of others) {
+          expect(other.editor.getJSON()).toEqual(first.editor.getJSON());
+          expect(other.fragment.toJSON()).toBe(first.fragment.toJSON());
+          expect(other.directory.blocks()).toEqual(first.directory.blocks());
+        }
+        const blocks = first.directory.blocks();
+        for (const id of ids) {
+          if (ledger.gone.has(id)) continue;
+          const block = blocks.find((each) => each.id === id) ?? expect.fail(`${id} was lost`);
+          const kept = scales(block).map((each) => each.id);
+          for (let index = 0; index < rows; index += 1)
+            if (!ledger.gone.has(`${id}-r${index}`)) expect(kept).toContain(`${id}-r${index}`);
+        }
+        for (const block of blocks) {
+          const rowIds = scales(block).map((each) => each.id);
+          expect(new Set(rowIds).size).toBe(rowIds.length);
+          expect(block.inputs["name"]).toBe(`name of ${block.id}`);
+          for (const rowId of rowIds) expect(rowId.startsWith(`${block.id}-`)).toBe(true);
+          const values = [
+            ...Object.values(block.inputs).filter((value) => typeof value === "string"),
+            ...scales(block).flatMap(({ id: _, ...cells }) => Object.values(cells)),
+          ];
+          expect(values.filter((value) => !ledger.written.has(value))).toEqual([]);
+        }
+      }),
+      { numRuns: RUNS },
+    );
+  },
+  30_000 + RUNS * 500,
+);
