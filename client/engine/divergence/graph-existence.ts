@@ -17,7 +17,7 @@ type Split = readonly number[];
  * Every way to take some of the vertices as their Hermitian conjugates such that lines of charged fields close:
  * Σ (n_ψ − n_ψ̄) over the vertices equals that of the legs. A Lagrangian is real, so "y φ χ χ" stands for itself + h.c.
  */
-function closingSplits(vertices: readonly VertexCount[], legs: HalfEdges, theory: Theory): Split[] {
+export function closingSplits(vertices: readonly VertexCount[], legs: HalfEdges, theory: Theory): Split[] {
   const wanted = netOf(legs, theory);
   const nets = vertices.map(({ edges }) => netOf(edges, theory));
   const found: Split[] = [];

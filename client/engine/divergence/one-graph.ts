@@ -11,6 +11,7 @@ import { totalOf } from "./half-edges.ts";
 import type { DivergenceInputs } from "./inputs.ts";
 import { describeLegs } from "./legs.ts";
 import { cutoffMeaning, dimensionalMeaning, logarithmicAt, verdictOf, type GraphFacts } from "./meaning.ts";
+import { picturesOf } from "./pictures.ts";
 import { readGraph } from "./read-graph.ts";
 import { vanishesInVacuum } from "./retarded.ts";
 import { forbiddingSymmetry } from "./selection.ts";
@@ -95,6 +96,7 @@ function describeGraph(
     cutoff: cutoffMeaning(facts, dimensional),
     cutoffPower: verdict === "power" && !facts.vanishes ? shown(omega) : null,
     counterterms: facts.vanishes ? [] : counterterms,
+    pictures: picturesOf(graph, loops, theory),
   };
 }
 

@@ -3,6 +3,7 @@
  * Degrees and dimensions are linear forms in d (or D and z): text "4 - …", "d - 4", "1/2".
  */
 
+import type { Graph } from "../graphs/graph.ts";
 import type { Exact } from "../premises/value.ts";
 
 /** Convergence of one graph: "tree" has no loop integral at all; "depends" when d, D or z is a symbol. */
@@ -112,6 +113,49 @@ export interface GraphDivergence {
   /** Highest power of the cutoff, when ω is a number > 0. */
   readonly cutoffPower: Exact | null;
   readonly counterterms: readonly Counterterm[];
+  /** The graphs themselves; null where there are more than anyone draws (six loops, ten legs). */
+  readonly pictures: GraphPictures | null;
+}
+
+export type LineStyle = "solid" | "dashed" | "dotted" | "wavy" | "curly" | "double" | "double wavy";
+export type VertexMark = "vertex" | "insertion" | "counterterm";
+
+/** A one-particle irreducible subgraph with ω ≥ 0. */
+export interface NestedDivergence {
+  /** Indices of its vertices in the graph. */
+  readonly vertices: readonly number[];
+  readonly lines: number;
+  readonly loops: number;
+  readonly omega: Exact;
+  /** How many choices among equal lines give it. */
+  readonly ways: number;
+}
+
+export interface GraphPicture extends Graph {
+  /** Null when the degrees are no numbers, or the graph has too many choices of lines to look at. */
+  readonly nested: readonly NestedDivergence[] | null;
+}
+
+export interface GraphPictures {
+  /** False when no graph is one-particle irreducible: then all connected ones are listed. */
+  readonly irreducible: boolean;
+  /** Graphs found, with legs of one field interchangeable. */
+  readonly count: number;
+  /** False when the search was cut short: there are more than `count`. */
+  readonly complete: boolean;
+  readonly fields: readonly {
+    readonly symbol: string;
+    readonly latex: string;
+    readonly style: LineStyle;
+    readonly directed: boolean;
+  }[];
+  readonly kinds: readonly {
+    readonly termRowId: string;
+    readonly latex: string;
+    readonly mark: VertexMark;
+  }[];
+  /** The first of them. */
+  readonly list: readonly GraphPicture[];
 }
 
 /** "divergent": ω ≥ 0 and a graph exists. The rest have ω ≥ 0 by their legs but no graph makes them. */

@@ -1,0 +1,121 @@
+/** The graphs that given vertices and legs have, to be drawn: each with its symmetry factor and nested divergences. */
+import { enumerateGraphs, MOST_VERTICES } from "../graphs/enumerate.ts";
+import type { Graph, GraphRequest, VertexKind } from "../graphs/graph.ts";
+import type { Term, Theory } from "../premises/theory.ts";
+import type { GraphParts } from "./degree.ts";
+import { closingSplits } from "./graph-existence.ts";
+import { conjugated, sameHalfEdges, totalOf } from "./half-edges.ts";
+import { lineStyle, vertexMark } from "./line-styles.ts";
+import { nestedDivergences, type Allowance } from "./nested.ts";
+import type { GraphPictures } from "./value.ts";
+
+/** Bounds that keep typing quick: partial graphs looked at, graphs told, choices of lines for nested divergences. */
+const MOST_STEPS = 6_000;
+const MOST_TOLD = 60;
+const MOST_LOOPS = 6;
+const MOST_LEGS = 10;
+const MOST_CHOICES = 12_000;
+
+interface Kinds {
+  readonly vertices: readonly VertexKind[];
+  /** The term of each kind, and whether it is the Hermitian conjugate. */
+  readonly terms: readonly { readonly term: Term; readonly mirrored: boolean }[];
+}
+
+/** A term stands for itself and its Hermitian conjugate: each way to take them apart that closes the lines. */
+function kindsOf({ vertices, legs }: GraphParts, theory: Theory): Kinds[] {
+  return closingSplits(vertices, legs, theory).map((split) => {
+    const kinds = vertices.flatMap(({ term, edges, count }, index) => {
+      const plain = split[index] ?? count;
+      const mirror = conjugated(edges, theory);
+      if (sameHalfEdges(edges, mirror)) return [{ term, edges, count, mirrored: false }];
+      return [
+        { term, edges, count: plain, mirrored: false },
+        { term, edges: mirror, count: count - plain, mirrored: true },
+      ].filter((kind) => kind.count > 0);
+    });
+    return {
+      vertices: kinds.map(({ term, edges, count, mirrored }) => ({
+        id: mirrored ? `${term.rowId}*` : term.rowId,
+        legs: edges,
+        count,
+      })),
+      terms: kinds.map(({ term, mirrored }) => ({ term, mirrored })),
+    };
+  });
+}
+
+/**
+ * One-particle irreducible graphs; where there are none, the connected ones. Lists are cut at fixed bounds, and say so.
+ *
+ * @returns null above six loops, ten legs or thirty vertices, where nobody looks at all graphs
+ */
+export function picturesOf(graph: GraphParts, loops: number, theory: Theory): GraphPictures | null {
+  const vertexCount = graph.vertices.reduce((sum, { count }) => sum + count, 0);
+  if (loops > MOST_LOOPS || totalOf(graph.legs) > MOST_LEGS || vertexCount > MOST_VERTICES) return null;
+  const kinds = kindsOf(graph, theory);
+  const irreducible = listAll(kinds, graph, theory, true);
+  const isEmpty = irreducible.graphs.length === 0 && !irreducible.truncated;
+  const { graphs, truncated } = isEmpty ? listAll(kinds, graph, theory, false) : irreducible;
+  const allowance: Allowance = { choices: MOST_CHOICES };
+  // Kinds of every split are told in one list, so that a graph's vertices can name them.
+  const offsets = kinds.map((_, n) => kinds.slice(0, n).reduce((sum, { terms }) => sum + terms.length, 0));
+  const allTerms = kinds.flatMap(({ terms }) => terms);
+  return {
+    irreducible: !isEmpty,
+    count: graphs.length,
+    complete: !truncated,
+    fields: theory.fields.map((field, f) => ({
+      symbol: field.symbol,
+      latex: field.latex,
+      style: lineStyle(field, f, theory),
+      directed: !field.selfConjugate,
+    })),
+    kinds: allTerms.map(({ term, mirrored }) => ({
+      termRowId: term.rowId,
+      latex: mirrored ? `\\bigl(${term.latex}\\bigr)^\\dagger` : term.latex,
+      mark: vertexMark(term, theory),
+    })),
+    list: graphs.slice(0, MOST_TOLD).map(({ found, split }) => {
+      const shifted = { ...found, vertices: found.vertices.map((kind) => kind + (offsets[split] ?? 0)) };
+      return {
+        ...shifted,
+        nested:
+          found.loops < 1
+            ? []
+            : nestedDivergences(
+                shifted,
+                allTerms.map(({ term }) => term),
+                theory,
+                allowance,
+              ),
+      };
+    }),
+  };
+}
+
+function listAll(
+  kinds: readonly Kinds[],
+  { legs }: GraphParts,
+  theory: Theory,
+  onlyOneParticleIrreducible: boolean,
+): { graphs: { readonly found: Graph; readonly split: number }[]; truncated: boolean } {
+  const graphs: { found: Graph; split: number }[] = [];
+  let truncated = false;
+  const fields: GraphRequest["fields"] = theory.fields.map(({ symbol, selfConjugate }) => ({
+    id: symbol,
+    directed: !selfConjugate,
+  }));
+  for (const [split, { vertices }] of kinds.entries()) {
+    const list = enumerateGraphs({
+      fields,
+      vertices,
+      external: legs,
+      onlyOneParticleIrreducible,
+      mostSteps: Math.floor(MOST_STEPS / kinds.length),
+    });
+    graphs.push(...list.graphs.map((found) => ({ found, split })));
+    truncated ||= list.truncated;
+  }
+  return { graphs, truncated };
+}
