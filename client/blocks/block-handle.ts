@@ -80,6 +80,8 @@ export interface BlockHandle {
   moveRow(table: string, rowId: string, beforeRowId: string | null): void;
   /** Fills rows from a place on, adding what is missing, as one step of the history. */
   paste(grid: PastedGrid): void;
+  /** Puts new rows in the place of all rows of these tables, as one step of the history. */
+  replaceRows(tables: Readonly<Record<string, readonly Readonly<Record<string, string>>[]>>): void;
   /** Shared per-person history, also from within a field. */
   undo(): void;
   redo(): void;

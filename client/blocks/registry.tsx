@@ -2,6 +2,7 @@
 import type { KindName } from "#engine/kind.ts";
 import type { BlockParts } from "./block-parts.ts";
 import { basisCountParts } from "./basis-count/basis-count-parts.ts";
+import { dataParts } from "./data/data-parts.ts";
 import { divergenceParts } from "./divergence/divergence-parts.ts";
 import { orderPlanParts } from "./order-plan/order-plan-parts.ts";
 import { premisesParts } from "./premises/premises-parts.ts";
@@ -15,4 +16,5 @@ export const blockParts: Readonly<Record<KindName, BlockParts>> = {
   orderPlan: orderPlanParts,
   truncationError: truncationErrorParts,
   basisCount: basisCountParts,
+  data: dataParts,
 };

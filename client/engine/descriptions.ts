@@ -1,5 +1,6 @@
 /** Every block kind by name, without its computation: for documents, forms and the index of what can be placed. */
 import { basisCountDescription } from "./basis/description.ts";
+import { dataDescription } from "./data/description.ts";
 import { divergenceDescription } from "./divergence/description.ts";
 import type { BlockDescription, KindName } from "./kind.ts";
 import { orderPlanDescription } from "./plan/description.ts";
@@ -14,4 +15,5 @@ export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
   orderPlan: orderPlanDescription,
   truncationError: truncationErrorDescription,
   basisCount: basisCountDescription,
+  data: dataDescription,
 };

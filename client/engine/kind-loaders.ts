@@ -6,6 +6,7 @@ export const kindLoaders: Readonly<Record<KindName, () => Promise<BlockKind>>> =
   scaling: async () => (await import("./scaling/kind.ts")).scaling,
   divergence: async () => (await import("./divergence/kind.ts")).divergence,
   orderPlan: async () => (await import("./plan/kind.ts")).orderPlan,
+  data: async () => (await import("./data/kind.ts")).data,
   basisCount: async () => (await import("./basis/kind.ts")).basisCount,
   truncationError: async () => (await import("./truncation/kind.ts")).truncationError,
 };

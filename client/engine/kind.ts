@@ -10,6 +10,7 @@ export const kindNames = [
   "orderPlan",
   "truncationError",
   "basisCount",
+  "data",
 ] as const;
 export type KindName = (typeof kindNames)[number];
 

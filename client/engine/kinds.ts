@@ -1,5 +1,6 @@
 /** The block kinds of this version, by name. What they are without computing is in `descriptions.ts`. */
 import { basisCount } from "./basis/kind.ts";
+import { data } from "./data/kind.ts";
 import { divergence } from "./divergence/kind.ts";
 import type { BlockKind, KindName } from "./kind.ts";
 import { orderPlan } from "./plan/kind.ts";
@@ -18,4 +19,5 @@ export const kinds: Readonly<Record<KindName, BlockKind>> = {
   orderPlan,
   truncationError,
   basisCount,
+  data,
 };

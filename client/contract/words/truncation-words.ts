@@ -71,6 +71,8 @@ export const truncationWords: Words = {
     "The correlated model needs predictions along x. Choose a Data block, or another method.",
   "curve-empty": () =>
     "The data have no points, or no column of predictions with an order. Give one column the role x, and others the role of an order.",
+  "curve-units-differ": () =>
+    "The columns of predictions, reference and measurements have different units. Give all of them in one unit.",
   "orders-beside-data": () =>
     "The orders typed here are not used: the predictions come from the Data block. Remove one of the two.",
   "variable-unreadable": ({ text }) =>

@@ -73,6 +73,7 @@ type Changes = Pick<
   | "removeRow"
   | "moveRow"
   | "paste"
+  | "replaceRows"
   | "undo"
   | "redo"
   | "setFocus"
@@ -123,6 +124,14 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
     removeRow: (table, rowId) => change((element) => removeRow(element, table, rowId)),
     moveRow: (table, rowId, beforeRowId) => change((element) => moveRow(element, table, rowId, beforeRowId)),
     paste: (grid) => change((element, { kind }) => pasteInto(element, kindDescriptions[kind], grid, newId)),
+    replaceRows: (tables) =>
+      change((element, { kind }) => {
+        for (const [table, rows] of Object.entries(tables)) {
+          for (const { id } of orderedRows(element, table)) removeRow(element, table, id);
+          const fresh = rows.map((values) => ({ id: newId(), values }));
+          insertRows(element, kindDescriptions[kind], table, fresh, null);
+        }
+      }),
     undo: () => void session.history.undoOnce(),
     redo: () => void session.history.redoOnce(),
     setFocus(place) {

@@ -1,0 +1,131 @@
+/** Reads a CSV text for the preview of an import: delimiter, header, decimal mark, and what stands in the way. */
+import Papa from "papaparse";
+import type { ColumnRole } from "#engine/data/inputs.ts";
+
+export const LARGEST_BYTES = 10_000_000;
+export const MOST_LINES = 20_000;
+const MOST_COLUMNS = 40;
+const delimiters = [",", ";", "\t"];
+const decimal = /^[-+−]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][-+]?\d+)?$/;
+const withComma = /^[-+−]?\d*,\d+(?:[eE][-+]?\d+)?$/;
+const nothing = /^(?:|-|–|—|\.|n\/a|nan)$/i;
+
+export interface FileColumn {
+  readonly name: string;
+  readonly role: ColumnRole;
+  readonly order: string;
+  readonly unit: string;
+}
+export interface ReadFile {
+  readonly columns: readonly FileColumn[];
+  /** Decimals with a point; "" where there is nothing. */
+  readonly lines: readonly (readonly string[])[];
+  readonly delimiter: string;
+  readonly hasDecimalComma: boolean;
+  /** What cannot be read, by line and column of the file, counted from 1. */
+  readonly faults: readonly { readonly line: number; readonly column: number; readonly sentence: string }[];
+}
+export type FileReading =
+  { readonly ok: true; readonly file: ReadFile } | { readonly ok: false; readonly sentence: string };
+
+/** @param text the file as UTF-8; a byte-order mark is no part of it */
+export function readFile(text: string): FileReading {
+  const parsed = Papa.parse<string[]>(text.replace(/^\uFEFF/, ""), {
+    delimiter: "",
+    delimitersToGuess: delimiters,
+    skipEmptyLines: "greedy",
+  });
+  const broken = parsed.errors.find(({ type }) => type === "Quotes");
+  if (broken)
+    return { ok: false, sentence: `Line ${(broken.row ?? 0) + 1}: a quotation mark is not closed.` };
+  const all = parsed.data.map((line) => line.map((value) => value.trim()));
+  const [header, ...body] = all;
+  if (!header || body.length === 0)
+    return { ok: false, sentence: "The file has a header line and lines of values below it." };
+  if (header.every((value) => decimal.test(value)))
+    return { ok: false, sentence: "The first line holds numbers only. It must name the columns." };
+  if (header.length > MOST_COLUMNS)
+    return { ok: false, sentence: `At most ${MOST_COLUMNS} columns are read.` };
+  if (body.length > MOST_LINES)
+    return { ok: false, sentence: `At most ${MOST_LINES} lines are read; the file has ${body.length}.` };
+  const { delimiter } = parsed.meta;
+  const hasDecimalComma = delimiter !== "," && isMostlyWithComma(body);
+  const faults: { line: number; column: number; sentence: string }[] = [];
+  const lines = body.map((line, index) => {
+    if (line.length !== header.length)
+      faults.push({
+        line: index + 2,
+        column: Math.min(line.length, header.length) + 1,
+        sentence: `Line ${index + 2} has ${line.length} values; the header has ${header.length}.`,
+      });
+    return header.map((name, column) => {
+      const value = line[column] ?? "";
+      if (nothing.test(value)) return "";
+      const pointed = (hasDecimalComma ? value.replace(",", ".") : value).replace("−", "-");
+      if (decimal.test(pointed)) return pointed;
+      faults.push({
+        line: index + 2,
+        column: column + 1,
+        sentence: `Line ${index + 2}, column ${column + 1} (${name}): “${value.slice(0, 40)}” is no number.`,
+      });
+      return "";
+    });
+  });
+  return { ok: true, file: { columns: guessRoles(header), lines, delimiter, hasDecimalComma, faults } };
+}
+
+function isMostlyWithComma(lines: readonly (readonly string[])[]): boolean {
+  const values = lines.slice(0, 200).flat();
+  return (
+    values.filter((value) => withComma.test(value)).length >
+    values.filter((value) => value.includes(".")).length
+  );
+}
+
+const leading: Readonly<Record<string, number>> = {
+  LO: 0,
+  NLO: 1,
+  NNLO: 2,
+  N2LO: 2,
+  NNNLO: 3,
+  N3LO: 3,
+  N4LO: 4,
+};
+
+/** "p [MeV]" is p in MeV; "LO", "X2" or "order 2" are predictions; the first other column is x. */
+export function guessRoles(header: readonly string[]): FileColumn[] {
+  let hasX = false;
+  return header.map((text): FileColumn => {
+    const unit = /[[(]\s*([^\])]*?)\s*[\])]\s*$/.exec(text)?.[1] ?? "";
+    const name = text.replace(/\s*[[(][^\])]*[\])]\s*$/, "").trim();
+    const numbered = /^(?:order[ _]?|X_?|n=)(\d{1,2})$/i.exec(name)?.[1];
+    const order = leading[name.toUpperCase()] ?? (numbered === undefined ? null : Number(numbered));
+    if (order !== null) return { name, role: "order", order: String(order), unit };
+    if (/^ref(?:erence)?$/i.test(name)) return { name, role: "reference", order: "", unit };
+    if (/^(?:measured|data|exp(?:eriment)?)$/i.test(name)) return { name, role: "measured", order: "", unit };
+    if (/^(?:err(?:or)?|sigma|uncertainty)$/i.test(name)) return { name, role: "error", order: "", unit };
+    if (hasX) return { name, role: "other", order: "", unit };
+    hasX = true;
+    return { name, role: "x", order: "", unit };
+  });
+}
+
+/** A row of the document holds one line while there are few, and as many as fit when there are many. */
+const LINES_ONE_BY_ONE = 400;
+const LONGEST_ROW = 3_800;
+
+/** Lines as the values of document rows. */
+export function packLines(lines: readonly (readonly string[])[]): readonly string[] {
+  const texts = lines.map((line) => line.join("; "));
+  if (texts.length <= LINES_ONE_BY_ONE) return texts;
+  const rows: string[] = [];
+  let row = "";
+  for (const text of texts) {
+    if (row !== "" && row.length + text.length + 1 > LONGEST_ROW) {
+      rows.push(row);
+      row = "";
+    }
+    row = row === "" ? text : `${row}\n${text}`;
+  }
+  return row === "" ? rows : [...rows, row];
+}
