@@ -11,6 +11,8 @@ export interface CurveData {
   readonly xName: string;
   readonly xUnit: string;
   readonly unit: string;
+  /** Whether the columns of X have different units. */
+  readonly unitsDiffer: boolean;
   /** Shape of all lists below: one entry for each x, rising. */
   readonly x: readonly number[];
   /** Rising; at least one. */

@@ -1,48 +1,37 @@
 /** Turns the table of a Data block into predictions along x. */
+import type { ColumnRole } from "../data/inputs.ts";
+import type { DataValue } from "../data/value.ts";
 import type { Source } from "../kind.ts";
 import type { CurveData } from "./curve-data.ts";
-import { readNumber } from "./read-orders.ts";
 
-/** What is used of the value of a Data block. */
-interface DataTable {
-  readonly columns: readonly {
-    readonly name: string;
-    readonly role: string;
-    readonly unit: string;
-    /** Of a column of predictions. */
-    readonly order: number | null;
-  }[];
-  /** Exact decimals, or null. */
-  readonly rows: readonly (readonly (string | null)[])[];
-}
-
-/** Null when the table has no x; points without x are left out. */
-export function curveDataOf({ value }: Source): CurveData | null {
-  const table = value as DataTable; // the evaluator allows no other kind here
-  const find = (role: string) => table.columns.findIndex((column) => column.role === role);
-  const xColumn = find("x");
-  if (xColumn < 0) return null;
-  const numbers = table.rows.map((row) => row.map((text) => (text === null ? null : numberOf(text))));
-  const rows = numbers
-    .filter((row) => (row[xColumn] ?? null) !== null)
-    .sort((a, b) => (a[xColumn] ?? 0) - (b[xColumn] ?? 0));
+/** Lines without x are left out; a table without an x column has no points. Of two columns for one order the first counts. */
+export function curveDataOf({ value }: Source): CurveData {
+  const table = value as DataValue; // the evaluator allows no other kind here
+  const find = (role: ColumnRole) => table.columns.findIndex((column) => column.role === role);
+  const x = find("x");
+  const rows = table.rows
+    .map((row) => row.map(numberOf))
+    .filter((row) => (row[x] ?? null) !== null)
+    .sort((a, b) => (a[x] ?? 0) - (b[x] ?? 0));
   const column = (index: number) => rows.map((row) => row[index] ?? null);
-  const optional = (role: string) => (find(role) < 0 ? null : column(find(role)));
-  const predictions = table.columns
-    .flatMap(({ role, order, unit }, index) =>
-      role === "order" && order !== null ? [{ order, unit, index }] : [],
-    )
-    .sort((a, b) => a.order - b.order);
-  const given = predictions.map((one) => ({ ...one, values: column(one.index) }));
-  const isEmpty = ({ values }: { values: readonly (number | null)[] }) => values.every((one) => one === null);
-  const orders = given.filter((one) => !isEmpty(one));
+  const optional = (role: ColumnRole) => (find(role) < 0 ? null : column(find(role)));
+  const given = table.columns
+    .flatMap(({ role, order }, index) => (role === "order" && order !== null ? [{ order, index }] : []))
+    .filter(({ order }, at, all) => all.findIndex((other) => other.order === order) === at)
+    .sort((a, b) => a.order - b.order)
+    .map((one) => ({ ...one, values: column(one.index) }));
+  const orders = given.filter(({ values }) => values.some((value) => value !== null));
+  const units = new Set(
+    table.columns.flatMap(({ role, unit }) => (role === "x" || role === "other" ? [] : [unit])),
+  );
   return {
-    xName: table.columns[xColumn]?.name ?? "",
-    xUnit: table.columns[xColumn]?.unit ?? "",
-    unit: orders[0]?.unit ?? "",
-    x: rows.map((row) => row[xColumn] ?? NaN),
+    xName: table.columns[x]?.name ?? "",
+    xUnit: table.columns[x]?.unit ?? "",
+    unit: [...units][0] ?? "",
+    unitsDiffer: units.size > 1,
+    x: rows.map((row) => row[x] ?? NaN),
     orders: orders.map(({ order, values }) => ({ order, values })),
-    absent: given.filter(isEmpty).map(({ order }) => order),
+    absent: given.filter((one) => !orders.includes(one)).map(({ order }) => order),
     reference: optional("reference"),
     measured: optional("measured"),
     measuredError: optional("error"),
@@ -53,17 +42,14 @@ export function curveDataOf({ value }: Source): CurveData | null {
   };
 }
 
-const plainDecimal = /^-?\d+(?:\.\d+)?(?:[eE][+-]?\d+)?$/;
-
-function numberOf(text: string): number | null {
-  // Reading a plain decimal is what the language does best; fractions are for the exact reader.
-  if (plainDecimal.test(text)) return Number.isFinite(Number(text)) ? Number(text) : null;
-  const value = readNumber(text)?.toFloat();
-  return value !== undefined && Number.isFinite(value) ? value : null;
+/** The table holds decimals only; one that no double holds is none. */
+function numberOf(text: string | null): number | null {
+  const value = text === null ? NaN : Number(text);
+  return Number.isFinite(value) ? value : null;
 }
 
 /** The finest step in which the predictions are written: a table in two decimals has 0.01. */
-function resolutionOf({ rows }: DataTable, columns: readonly number[]): number {
+function resolutionOf({ rows }: DataValue, columns: readonly number[]): number {
   let finest = Infinity;
   for (const row of rows) {
     for (const column of columns) {

@@ -55,6 +55,7 @@ export function readCurve(
     problems.push({ code: "curve-empty", path: ["data"], facts: {} });
     return nothing();
   }
+  if (data.unitsDiffer) problems.push({ code: "curve-units-differ", path: ["data"], facts: {} });
   if (inputs.orders.length > 0) notices.push({ code: "orders-beside-data", path: ["orders"], facts: {} });
   const name = readSymbol(inputs.variable.trim() === "" ? data.xName : inputs.variable);
   const reading = readParameterAlong(

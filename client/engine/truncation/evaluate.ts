@@ -113,8 +113,7 @@ function sourcesOf(inputs: TruncationInputs, context: EvaluationContext): Readon
   const sources = new Map<string, CurveSource>();
   for (const id of [inputs.data, ...inputs.observables.map(({ data }) => data)]) {
     const source = id === "" ? null : context.source(id);
-    const data = source && curveDataOf(source);
-    if (source && data) sources.set(id, { name: source.title, data });
+    if (source) sources.set(id, { name: source.title, data: curveDataOf(source) });
   }
   return sources;
 }

@@ -16,17 +16,19 @@ export interface Table {
   readonly orders: Readonly<Record<number, readonly (number | null)[]>>;
   readonly reference?: readonly (number | null)[];
   readonly measured?: readonly (number | null)[];
+  /** Of the columns other than x and the predictions. */
+  readonly otherUnit?: string;
 }
 
 const text = (value: number | null | undefined) =>
   value === null || value === undefined ? null : String(value);
 
 /** What a Data block gives for it. */
-function valueOf({ name = "p", xUnit = "MeV", x, orders, reference, measured }: Table) {
+function valueOf({ name = "p", xUnit = "MeV", x, orders, reference, measured, otherUnit = "mb" }: Table) {
   const column = (role: string, values: readonly (number | null)[], order: number | null = null) => ({
     name: role === "x" ? name : `${role}${order ?? ""}`,
     role,
-    unit: role === "x" ? xUnit : "mb",
+    unit: role === "x" ? xUnit : order === null ? otherUnit : "mb",
     order,
     values,
   });

@@ -107,6 +107,7 @@ describe("the methods along x", () => {
   it.each<[string, Table, Parameters<typeof evaluateCurve>[1], string]>([
     ["an empty table", { x: [], orders: { 0: [] } }, {}, "curve-empty"],
     ["no predictions", { x: [1, 2], orders: {} }, {}, "curve-empty"],
+    ["units that differ", { ...three, reference: [10, 8, 6], otherUnit: "fm" }, {}, "curve-units-differ"],
     ["an x outside", three, { at: "900" }, "at-unreadable"],
     ["an x that is no number", three, { at: "there" }, "at-unreadable"],
     ["Q with units", three, { q: "p" }, "q-has-units"],
