@@ -17,6 +17,7 @@ const SharingPage = lazy(async () => ({
 const RefereePage = lazy(async () => ({
   default: (await import("../pages/referee/referee-page.tsx")).RefereePage,
 }));
+const PartsPage = lazy(async () => ({ default: (await import("../pages/parts/parts-page.tsx")).PartsPage }));
 const NotFoundPage = lazy(async () => ({
   default: (await import("../pages/not-found/not-found-page.tsx")).NotFoundPage,
 }));
@@ -33,6 +34,7 @@ export function Router() {
           <Route path="/notebooks/:id" element={<SignedInOnly page={<NotebookPage />} />} />
           <Route path="/notebooks/:id/sharing" element={<SignedInOnly page={<SharingPage />} />} />
           <Route path="/r/:token" element={<RefereePage />} />
+          <Route path="/parts" element={<PartsPage />} />
           <Route path="*" element={<NotFoundPage />} />
         </Routes>
       </Suspense>
