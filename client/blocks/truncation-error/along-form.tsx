@@ -57,12 +57,18 @@ export function AlongForm() {
         />
         <TextField
           place={{ field: "breakdownFrom" }}
-          label="from"
+          label="breakdown scale from"
           showLabel
           size={8}
           placeholder="a quarter"
         />
-        <TextField place={{ field: "breakdownTo" }} label="to" showLabel size={8} placeholder="four times" />
+        <TextField
+          place={{ field: "breakdownTo" }}
+          label="breakdown scale to"
+          showLabel
+          size={8}
+          placeholder="four times"
+        />
         <TextField
           place={{ field: "breakdownWidth" }}
           label="width, if normal"

@@ -21,7 +21,7 @@ export function SetsForm() {
         />
         <TextField
           place={{ field: "cbarHigh" }}
-          label="to"
+          label="c̄ of A and C to"
           showLabel
           size={5}
           placeholder={unlessTyped.cbarHigh}

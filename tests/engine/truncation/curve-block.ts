@@ -54,7 +54,7 @@ export function evaluateCurve(
   const context: EvaluationContext = {
     source: (id) => {
       const table = tables[id];
-      return table ? { kind: "scaling", value: valueOf(table), scalars: [], title: `table ${id}` } : null;
+      return table ? { kind: "data", value: valueOf(table), scalars: [], title: `table ${id}` } : null;
     },
     tell: (progress) => heard.push(progress),
   };
