@@ -54,7 +54,9 @@ export function StateSpecimens() {
       </Specimen>
       <Specimen name="mathematics">
         <Formula latex={"\\frac{c_6}{6!\\,\\Lambda^{2}}\\,\\chi^{6}"} />
-        <TextWithMath text="a phrase with $\\lambda\\phi^4$ in it" />
+        <span>
+          <TextWithMath text={"a phrase with $\\lambda\\phi^4$ in it"} />
+        </span>
         <Formula latex={"\\frac{c_6}{"} />
       </Specimen>
     </Family>

@@ -57,28 +57,35 @@ const named = (boxes: readonly { x: number; width: number }[]): Labelled[] =>
 describe("labels", () => {
   it("never lie on each other, on another mark, or across a stem, and stay on the ruler", () => {
     fc.assert(
-      fc.property(labels, fc.integer({ min: 1, max: 6 }), (boxes, levels) => {
-        const wanted = named(boxes);
-        const placed = placeLabels(wanted, { levels, left: 0, right: 1040 });
-        expect(placed.map(({ id }) => id)).toEqual(wanted.map(({ id }) => id));
-        const drawn = placed.flatMap(({ id, x, level, side }) => {
-          const label = wanted.find((one) => one.id === id);
-          return side && label ? [{ ...spanOf(label, side), level, x }] : [];
-        });
-        for (const [index, one] of drawn.entries()) {
-          expect(one.from).toBeGreaterThanOrEqual(0);
-          expect(one.to).toBeLessThanOrEqual(1040);
-          expect(one.level).toBeLessThan(levels);
-          for (const other of drawn.slice(index + 1)) {
-            if (one.level === other.level) expect(one.to <= other.from || other.to <= one.from).toBe(true);
-            else {
-              const [upper, lower] = one.level > other.level ? [one, other] : [other, one];
-              const crosses = upper.x > lower.from && upper.x < lower.to;
-              expect(crosses && Math.abs(upper.x - lower.x) > 7).toBe(false);
+      fc.property(
+        labels,
+        fc.integer({ min: 1, max: 6 }),
+        fc.constantFrom(null, 300, 700),
+        (boxes, levels, line) => {
+          const wanted = named(boxes);
+          const placed = placeLabels(wanted, { levels, left: 0, right: 1040, line });
+          expect(placed.map(({ id }) => id)).toEqual(wanted.map(({ id }) => id));
+          const drawn = placed.flatMap(({ id, x, level, side }) => {
+            const label = wanted.find((one) => one.id === id);
+            return side && label ? [{ ...spanOf(label, side), level, x }] : [];
+          });
+          for (const [index, one] of drawn.entries()) {
+            expect(one.from).toBeGreaterThanOrEqual(0);
+            expect(one.to).toBeLessThanOrEqual(1040);
+            expect(one.level).toBeLessThan(levels);
+            if (line !== null && Math.abs(line - one.x) > 7)
+              expect(line > one.from && line < one.to).toBe(false);
+            for (const other of drawn.slice(index + 1)) {
+              if (one.level === other.level) expect(one.to <= other.from || other.to <= one.from).toBe(true);
+              else {
+                const [upper, lower] = one.level > other.level ? [one, other] : [other, one];
+                const crosses = upper.x > lower.from && upper.x < lower.to;
+                expect(crosses && Math.abs(upper.x - lower.x) > 7).toBe(false);
+              }
             }
           }
-        }
-      }),
+        },
+      ),
     );
   });
 
