@@ -1,7 +1,12 @@
+import { lazy, Suspense } from "react";
 import type { GraphDivergence, Meaning } from "#engine/divergence/value.ts";
 import { Formula } from "../../ui/math.tsx";
 import { Figure } from "../parts/figure.tsx";
 import { Counterterms } from "./counterterms.tsx";
+
+const GraphPictures = lazy(async () => ({
+  default: (await import("./graph-pictures.tsx")).GraphPictures,
+}));
 
 const meaningWords: Readonly<Record<Meaning, string>> = {
   tree: "a tree: no loop integral",
@@ -69,6 +74,12 @@ export function GraphResult({ value }: { readonly value: GraphDivergence }) {
           )}
         </dd>
       </dl>
+      {/* Results kept from before graphs were drawn have none. */}
+      {value.pictures && (
+        <Suspense fallback={null}>
+          <GraphPictures pictures={value.pictures} />
+        </Suspense>
+      )}
       {counterterms.length > 0 && (
         <Counterterms caption="Counterterms it demands" counterterms={counterterms} />
       )}

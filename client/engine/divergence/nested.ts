@@ -34,7 +34,7 @@ export function nestedDivergences(
   const found: NestedDivergence[] = [];
   const whole = graph.edges.reduce((sum, { count }) => sum + count, 0);
   const taken = graph.edges.map(() => 0);
-  let symbolic = false;
+  const degrees = { symbolic: false };
 
   const choose = (index: number): void => {
     const edge = graph.edges[index];
@@ -51,7 +51,7 @@ export function nestedDivergences(
     const vertices = irreducibleVertices(graph, taken);
     if (!vertices) return;
     const omega = degreeOfPart(graph, taken, vertices, vertexKinds, theory);
-    if (omega === null) symbolic = true;
+    if (omega === null) degrees.symbolic = true;
     else if (omega.sign() >= 0) {
       found.push({
         vertices,
@@ -63,7 +63,7 @@ export function nestedDivergences(
     }
   };
   choose(0);
-  if (symbolic) return null;
+  if (degrees.symbolic) return null;
   return found.sort((a, b) => a.loops - b.loops || a.vertices.length - b.vertices.length);
 }
 

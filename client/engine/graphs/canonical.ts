@@ -21,9 +21,7 @@ export interface Canonical {
  */
 export function canonicalForm({ colours, codes }: Coloured): Canonical {
   const size = colours.length;
-  let best = "";
-  let bestOrder: number[] | null = null;
-  let ways = 0n;
+  const best = { certificate: "", order: [] as readonly number[], automorphisms: 0n };
 
   const visit = (start: readonly number[], weight: bigint): void => {
     const cells = refine(start, codes);
@@ -32,8 +30,9 @@ export function canonicalForm({ colours, codes }: Coloured): Canonical {
       const order = Array.from({ length: size }, () => 0);
       cells.forEach((place, vertex) => (order[place] = vertex));
       const certificate = certificateOf(order, colours, codes);
-      if (bestOrder === null || certificate < best) [best, bestOrder, ways] = [certificate, order, weight];
-      else if (certificate === best) ways += weight;
+      if (best.automorphisms === 0n || certificate < best.certificate)
+        Object.assign(best, { certificate, order, automorphisms: weight });
+      else if (certificate === best.certificate) best.automorphisms += weight;
       return;
     }
     const twins = cell.every((vertex) => areTwins(cell[0] ?? 0, vertex, codes, size));
@@ -49,7 +48,7 @@ export function canonicalForm({ colours, codes }: Coloured): Canonical {
     }
   };
   visit(ranked(colours), 1n);
-  return { certificate: best, order: bestOrder ?? [], automorphisms: ways };
+  return best;
 }
 
 /** Places of cells: each vertex gets the number of vertices with smaller keys. */

@@ -10,7 +10,7 @@ export interface LineCodes {
 export function makeLineCodes(): LineCodes {
   const sets: (readonly number[])[] = [[]];
   const known = new Map<string, number>([["", 0]]);
-  const grown: Map<number, number>[] = [new Map()];
+  const grown: Map<number, number>[] = [new Map<number, number>()];
   return {
     add(code, item) {
       const before = grown[code]?.get(item);
