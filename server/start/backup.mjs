@@ -1,6 +1,6 @@
 /** `npm run backup -- FILE`: everything of a running installation, as of one moment, into one file. */
 import { chmodSync, closeSync, existsSync, openSync, renameSync, rmSync } from "node:fs";
-import { ownDatabase, runTool } from "./database-tools.mjs";
+import { runTool, withOwnDatabase } from "./database-tools.mjs";
 import { Advice, endWith, say } from "./say.mjs";
 
 /** Sessions open doors, and which process holds what is of the moment: neither belongs into a file that is kept. */
@@ -31,7 +31,7 @@ if (process.argv[1] === import.meta.filename) {
   try {
     const [file] = process.argv.slice(2);
     if (!file) throw new Advice("Say where to: npm run backup -- FILE");
-    backUp(await ownDatabase(), file);
+    await withOwnDatabase((address) => backUp(address, file));
     say(`everything is in ${file}`);
   } catch (error) {
     endWith(error);

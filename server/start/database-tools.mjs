@@ -7,15 +7,19 @@ import { dataFolder, fallbackFolder } from "./place.mjs";
 import { ensureCluster } from "./postgres.mjs";
 import { Advice } from "./say.mjs";
 
-/** @returns {Promise<string>} the address of the database */
-export async function ownDatabase() {
-  if (process.env.DATABASE_URL) return process.env.DATABASE_URL;
+/** Gives the address of the database to `work`; one that was not running runs for that long. */
+export async function withOwnDatabase(work) {
+  if (process.env.DATABASE_URL) return work(process.env.DATABASE_URL);
   const folders = [join(dataFolder, "postgres"), join(fallbackFolder(), "postgres")];
   if (!folders.some((folder) => existsSync(folder)))
     throw new Advice("There is no database here yet. Set DATABASE_URL, or run npm start first.");
   const cluster = await ensureCluster({ folder: join(dataFolder, "postgres") });
-  cluster.ensureDatabase("subleading");
-  return cluster.url("subleading");
+  try {
+    cluster.ensureDatabase("subleading");
+    work(cluster.url("subleading"));
+  } finally {
+    if (!cluster.wasRunning) cluster.stop();
+  }
 }
 
 /** The address goes by the environment: what stands in a command line is there for every user of the machine to read. */

@@ -1,4 +1,6 @@
 export interface Cluster {
+  /** Started by someone else, who will stop it. */
+  readonly wasRunning: boolean;
   /** Makes a database unless it is there. */
   ensureDatabase(database: string): void;
   /** Connection address of one database of the cluster. */

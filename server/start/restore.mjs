@@ -5,7 +5,7 @@
 import { existsSync, mkdtempSync, rmSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { ownDatabase, runTool } from "./database-tools.mjs";
+import { runTool, withOwnDatabase } from "./database-tools.mjs";
 import { Advice, endWith, say } from "./say.mjs";
 
 export function restore(address, file) {
@@ -40,7 +40,7 @@ if (process.argv[1] === import.meta.filename) {
   try {
     const [file] = process.argv.slice(2);
     if (!file) throw new Advice("Say what from: npm run restore -- FILE");
-    restore(await ownDatabase(), file);
+    await withOwnDatabase((address) => restore(address, file));
     say("everything is as it was when the file was made; people sign in again");
   } catch (error) {
     endWith(error);
