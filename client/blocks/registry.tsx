@@ -3,6 +3,7 @@ import type { KindName } from "#engine/kind.ts";
 import type { BlockParts } from "./block-parts.ts";
 import { basisCountParts } from "./basis-count/basis-count-parts.ts";
 import { dataParts } from "./data/data-parts.ts";
+import { errorBudgetParts } from "./error-budget/error-budget-parts.ts";
 import { divergenceParts } from "./divergence/divergence-parts.ts";
 import { orderPlanParts } from "./order-plan/order-plan-parts.ts";
 import { premisesParts } from "./premises/premises-parts.ts";
@@ -17,4 +18,5 @@ export const blockParts: Readonly<Record<KindName, BlockParts>> = {
   truncationError: truncationErrorParts,
   basisCount: basisCountParts,
   data: dataParts,
+  errorBudget: errorBudgetParts,
 };

@@ -1,6 +1,7 @@
 /** Every problem and notice of the engine in plain words. The only place that knows how to say them. */
 import type { InputPath, Problem } from "#engine/evaluation.ts";
 import { basisWords } from "./words/basis-words.ts";
+import { budgetWords } from "./words/budget-words.ts";
 import { dataWords } from "./words/data-words.ts";
 import { divergenceWords } from "./words/divergence-words.ts";
 import { notationWords } from "./words/notation-words.ts";
@@ -22,6 +23,7 @@ export const problemWords: Words = {
   ...truncationWords,
   ...basisWords,
   ...dataWords,
+  ...budgetWords,
 };
 
 /**

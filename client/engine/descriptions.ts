@@ -1,5 +1,6 @@
 /** Every block kind by name, without its computation: for documents, forms and the index of what can be placed. */
 import { basisCountDescription } from "./basis/description.ts";
+import { errorBudgetDescription } from "./budget/description.ts";
 import { dataDescription } from "./data/description.ts";
 import { divergenceDescription } from "./divergence/description.ts";
 import type { BlockDescription, KindName } from "./kind.ts";
@@ -16,4 +17,5 @@ export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
   truncationError: truncationErrorDescription,
   basisCount: basisCountDescription,
   data: dataDescription,
+  errorBudget: errorBudgetDescription,
 };

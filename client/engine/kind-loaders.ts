@@ -7,6 +7,7 @@ export const kindLoaders: Readonly<Record<KindName, () => Promise<BlockKind>>> =
   divergence: async () => (await import("./divergence/kind.ts")).divergence,
   orderPlan: async () => (await import("./plan/kind.ts")).orderPlan,
   data: async () => (await import("./data/kind.ts")).data,
+  errorBudget: async () => (await import("./budget/kind.ts")).errorBudget,
   basisCount: async () => (await import("./basis/kind.ts")).basisCount,
   truncationError: async () => (await import("./truncation/kind.ts")).truncationError,
 };

@@ -11,6 +11,7 @@ export const kindNames = [
   "truncationError",
   "basisCount",
   "data",
+  "errorBudget",
 ] as const;
 export type KindName = (typeof kindNames)[number];
 

@@ -1,5 +1,6 @@
 /** The block kinds of this version, by name. What they are without computing is in `descriptions.ts`. */
 import { basisCount } from "./basis/kind.ts";
+import { errorBudget } from "./budget/kind.ts";
 import { data } from "./data/kind.ts";
 import { divergence } from "./divergence/kind.ts";
 import type { BlockKind, KindName } from "./kind.ts";
@@ -20,4 +21,5 @@ export const kinds: Readonly<Record<KindName, BlockKind>> = {
   truncationError,
   basisCount,
   data,
+  errorBudget,
 };

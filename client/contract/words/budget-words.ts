@@ -1,0 +1,26 @@
+/** Problems and notices of Error budget. */
+import { quoted, said, type Words } from "./words.ts";
+
+export const budgetWords: Words = {
+  "budget-empty": () => "There is no source of error yet. Type one with its size, or take one from a block.",
+  "size-missing": ({ name }) => `${quoted(name)} has no size. Give one such as “0.012”, “3 MeV” or “1.2 %”.`,
+  "size-unreadable": ({ text }) =>
+    `${quoted(text)} is no size. Give a number, with a unit or percent sign if need be.`,
+  "size-uncertain-itself": ({ text }) =>
+    `${quoted(text)} has an uncertainty of its own. Give the standard uncertainty alone.`,
+  "percent-of-nothing": () => "A percentage needs the value it is of. Give the value above.",
+  "budget-units-differ": ({ from, to }) =>
+    `${quoted(from)} cannot be added to ${quoted(to)}. Give the size in the unit of the budget.`,
+  "budget-needs-conversion": ({ from, to }) =>
+    `${quoted(from)} and ${quoted(to)} agree only by ħ = c = 1. Choose natural units to convert them.`,
+  "budget-scalar-missing": ({ what }) => `Choose which number of that block the ${said(what)} is.`,
+  "budget-scalar-no-number": ({ what }) =>
+    `That is no number, so it cannot be the ${said(what)}. Choose another.`,
+  "coefficient-unreadable": ({ text }) =>
+    `${quoted(text)} is no coefficient of correlation. Give a number from -1 to 1.`,
+  "coefficient-twice": ({ group }) => `The group ${quoted(group)} has two coefficients. Keep one of them.`,
+  "correlations-contradict": () =>
+    "These coefficients contradict each other: the squared error would be negative. Three sources cannot all be opposed.",
+  "scale-variation-and-truncation": () =>
+    "Scale variation and truncation errors both stand for orders left out. Adding them in quadrature counts those twice.",
+};

@@ -1,0 +1,142 @@
+/** Evaluates an Error budget: reads sizes into one unit, combines them, and words the result. */
+import { roundFloat, type Evaluation, type Problem, type Scalar } from "../evaluation.ts";
+import type { EvaluationContext } from "../kind.ts";
+import type { Theory } from "../premises/theory.ts";
+import { linearSum, shares, variance, type Contribution } from "./combine.ts";
+import { combinations, conversions, sourceKinds, type BudgetInputs, type SourceKind } from "./inputs.ts";
+import { readCorrelations, readSize, readValue, type Reading } from "./read-sizes.ts";
+import { resultText, sizeText } from "./result-text.ts";
+import { readUnit } from "./units.ts";
+import type { BudgetRow, BudgetValue } from "./value.ts";
+import { budgetWorking } from "./working.ts";
+
+interface Read extends Contribution {
+  readonly row: BudgetInputs["sources"][number];
+}
+
+/** Problems: those of sizes and correlations; a row that cannot be read is left out. `budget-empty` when none is left. */
+export function evaluateBudget(
+  inputs: BudgetInputs,
+  _theory: Theory | null,
+  context: EvaluationContext,
+): Evaluation<BudgetValue> {
+  const problems: Problem[] = [];
+  const reading: Reading = {
+    unit: readUnit(inputs.unit),
+    natural: inputs.convert === conversions[1],
+    context,
+    problems,
+  };
+  const value = readValue(inputs, reading);
+  const coefficients = readCorrelations(inputs.correlations, problems);
+  const read = inputs.sources.flatMap((row): Read[] => {
+    const size = readSize(row, value, reading);
+    return size === null ? [] : [{ row, size, group: row.group.trim() }];
+  });
+  if (read.length === 0)
+    return {
+      value: null,
+      problems: [...problems, { code: "budget-empty", path: ["sources"], facts: {} }],
+      notices: [],
+      scalars: [],
+      working: [],
+    };
+  const coefficientOf = (group: string) => coefficients.get(group) ?? 1;
+  const linear = inputs.combine === combinations[1];
+  const squared = variance(read, coefficientOf);
+  if (!linear && squared < 0)
+    return {
+      value: null,
+      problems: [...problems, { code: "correlations-contradict", path: ["correlations"], facts: {} }],
+      notices: [],
+      scalars: [],
+      working: [],
+    };
+  const combined = (some: readonly Contribution[]) =>
+    linear ? linearSum(some) : Math.sqrt(Math.max(0, variance(some, coefficientOf)));
+  const total = combined(read);
+  const parts = shares(read, coefficientOf);
+  const unit = inputs.unit.trim();
+  const rows = read.map(({ row, size, group }, index): BudgetRow => ({
+    rowId: row.id,
+    name: row.name.trim(),
+    kind: kindOf(row.kind),
+    group,
+    size: roundFloat(size),
+    text: sizeText(size, unit),
+    share: linear || squared === 0 ? null : roundFloat((parts[index] ?? 0) / squared),
+  }));
+  const kinds = sourceKinds.flatMap((kind) => {
+    const own = read.filter(({ row }) => row.kind === kind);
+    if (own.length === 0) return [];
+    const size = combined(own);
+    return [{ kind, total: roundFloat(size), text: sizeText(size, unit) }];
+  });
+  const result: BudgetValue = {
+    quantity: inputs.quantity.trim(),
+    unit,
+    combine: inputs.combine,
+    value: value === null ? null : roundFloat(value),
+    rows,
+    total: roundFloat(total),
+    totalText: sizeText(total, unit),
+    kinds,
+    sentence: resultText(
+      value,
+      kinds.map((one) => one.total),
+      unit,
+    ),
+    brackets: kinds.map(({ kind }) => kind),
+  };
+  return {
+    value: result,
+    problems,
+    notices: noticesOf(read, linear),
+    scalars: scalarsOf(result),
+    working: budgetWorking(result, read, coefficientOf, linear),
+  };
+}
+
+function kindOf(text: string): SourceKind {
+  return sourceKinds.find((kind) => kind === text) ?? "other";
+}
+
+function noticesOf(read: readonly Read[], linear: boolean): Problem[] {
+  const has = (kind: SourceKind) => read.some(({ row }) => row.kind === kind);
+  const doubled = !linear && has("scale variation") && has("truncation");
+  return doubled ? [{ code: "scale-variation-and-truncation", path: ["sources"], facts: {} }] : [];
+}
+
+function scalarsOf(value: BudgetValue): Scalar[] {
+  const unit = value.unit === "" ? {} : { unit: value.unit };
+  const what = value.quantity === "" ? "the value" : value.quantity;
+  const central: Scalar[] =
+    value.value === null
+      ? []
+      : [
+          {
+            id: "value",
+            label: `${what} with its whole error`,
+            value: { type: "number", value: value.value, sigma: value.total, ...unit },
+          },
+          {
+            id: "result",
+            label: `${what}, one bracket for each kind of error`,
+            value: { type: "word", text: value.sentence },
+          },
+        ];
+  return [
+    ...central,
+    { id: "total", label: `whole error of ${what}`, value: { type: "number", value: value.total, ...unit } },
+    ...value.kinds.map(({ kind, total }): Scalar => ({
+      id: `kind/${kind.replace(" ", "-")}`,
+      label: `${kind} error of ${what}`,
+      value: { type: "number", value: total, ...unit },
+    })),
+    ...value.rows.map(({ rowId, name, size }): Scalar => ({
+      id: `${rowId}/size`,
+      label: `error from ${name === "" ? "a source without a name" : name}`,
+      value: { type: "number", value: Math.abs(size), ...unit },
+    })),
+  ];
+}

@@ -1,0 +1,136 @@
+/** Reads the value and the sizes of a budget, typed or taken from blocks, into its unit. */
+import type { InputPath, Problem, ScalarValue } from "../evaluation.ts";
+import type { EvaluationContext } from "../kind.ts";
+import { readQuantity } from "../notation/read-quantity.ts";
+import { sigmaOf } from "../notation/quantity.ts";
+import type { BudgetInputs } from "./inputs.ts";
+import { convert, readUnit, type BudgetUnit } from "./units.ts";
+
+export interface Reading {
+  readonly unit: BudgetUnit;
+  readonly natural: boolean;
+  readonly context: EvaluationContext;
+  readonly problems: Problem[];
+}
+const nothing = { symbols: [], lookUp: () => null };
+
+/** Null when there is none, or it cannot be read. */
+export function readValue({ value, from, scalar }: BudgetInputs, reading: Reading): number | null {
+  if (from !== "") return fromBlock(from, scalar, ["scalar"], reading, "value");
+  return value.trim() === "" ? null : typed(value, ["value"], reading);
+}
+
+/** A percentage is one of the value. */
+export function readSize(
+  row: BudgetInputs["sources"][number],
+  value: number | null,
+  reading: Reading,
+): number | null {
+  const path = ["sources", row.id, "size"];
+  if (row.from !== "")
+    return fromBlock(row.from, row.scalar, ["sources", row.id, "scalar"], reading, "error");
+  if (row.size.trim() === "") {
+    if (row.name.trim() !== "")
+      reading.problems.push({ code: "size-missing", path, facts: { name: row.name } });
+    return null;
+  }
+  const percent = /^(.*?)\s*\\?%$/.exec(row.size.trim());
+  if (!percent) return typed(row.size, path, reading);
+  const part = plainNumber(percent[1] ?? "");
+  if (part === null) return refuse(reading, path, "size-unreadable", { text: row.size });
+  if (value === null) return refuse(reading, path, "percent-of-nothing", {});
+  return (part / 100) * value;
+}
+
+function plainNumber(text: string): number | null {
+  const number = Number(text.trim().replace("−", "-"));
+  return text.trim() !== "" && Number.isFinite(number) ? number : null;
+}
+
+function refuse(reading: Reading, path: InputPath, code: string, facts: Problem["facts"]): null {
+  reading.problems.push({ code, path, facts });
+  return null;
+}
+
+function typed(text: string, path: InputPath, reading: Reading): number | null {
+  const plain = plainNumber(text);
+  if (plain !== null) return plain;
+  // A unit that is no energy or length is known by its name only.
+  const split = /^\s*([-+−]?[\d.]+(?:[eE][-+]?\d+)?)\s*(\D.*)$/.exec(text);
+  const unit = readUnit(split?.[2] ?? "");
+  if (split && !unit.known)
+    return inUnit(plainNumber(split[1] ?? "") ?? Number.NaN, unit, path, reading, text);
+  const read = readQuantity(text, nothing, path.join("/"));
+  if (!read.ok) return refuse(reading, path, "size-unreadable", { text });
+  const { quantity } = read.value;
+  if (sigmaOf(quantity) > 0) return refuse(reading, path, "size-uncertain-itself", { text });
+  const written = readUnit(unitWritten(text));
+  return inUnit(written.known ? quantity.value / written.size : quantity.value, written, path, reading, text);
+}
+
+/** What stands after the number: "MeV" of "3.2e2 MeV". */
+function unitWritten(text: string): string {
+  return text.replace(/^\s*[-+−]?[\d.]+(?:[eE][-+]?\d+)?\s*\*?\s*/, "").trim();
+}
+
+function inUnit(
+  value: number,
+  from: BudgetUnit,
+  path: InputPath,
+  reading: Reading,
+  text: string,
+): number | null {
+  if (!Number.isFinite(value)) return refuse(reading, path, "size-unreadable", { text });
+  const converted = convert(value, from, reading.unit, reading.natural);
+  if (converted.ok) return converted.value;
+  return refuse(reading, path, converted.code, {
+    from: from.text === "" ? "no unit" : from.text,
+    to: reading.unit.text === "" ? "no unit" : reading.unit.text,
+  });
+}
+
+/** Of a number with an uncertainty of its own, the value's row takes the value; an error is the number itself. */
+function fromBlock(
+  blockId: string,
+  scalarId: string,
+  path: InputPath,
+  reading: Reading,
+  what: "value" | "error",
+): number | null {
+  const source = reading.context.source(blockId);
+  // Why there is none is said already.
+  if (!source) return null;
+  const scalar = source.scalars.find(({ id }) => id === scalarId);
+  if (!scalar) return refuse(reading, path, "budget-scalar-missing", { what });
+  const number = numberOf(scalar.value);
+  if (number === null) return refuse(reading, path, "budget-scalar-no-number", { what });
+  const unit = scalar.value.type === "number" ? (scalar.value.unit ?? "") : "";
+  return inUnit(number, readUnit(unit), path, reading, scalar.id);
+}
+
+function numberOf(value: ScalarValue): number | null {
+  if (value.type === "number") return value.value;
+  return value.type === "exact" ? plainNumber(value.text) : null;
+}
+
+/** Coefficients by group. */
+export function readCorrelations(
+  rows: BudgetInputs["correlations"],
+  problems: Problem[],
+): ReadonlyMap<string, number> {
+  const found = new Map<string, number>();
+  for (const { id, group, coefficient } of rows) {
+    if (group.trim() === "") continue;
+    const value = plainNumber(coefficient);
+    if (value === null || value < -1 || value > 1)
+      problems.push({
+        code: "coefficient-unreadable",
+        path: ["correlations", id, "coefficient"],
+        facts: { text: coefficient },
+      });
+    else if (found.has(group.trim()))
+      problems.push({ code: "coefficient-twice", path: ["correlations", id, "group"], facts: { group } });
+    else found.set(group.trim(), value);
+  }
+  return found;
+}
