@@ -78,7 +78,9 @@ function At({ curve }: { readonly curve: CurveValue }) {
     <>
       {" "}
       at <Formula latex={curve.variable} /> ={" "}
-      <Figure scalar="at">{withUnit(sizeText(curve.at, 4), curve.xUnit)}</Figure>
+      <Figure scalar="at">
+        {withUnit(String(Number(curve.at.toPrecision(5))).replace("-", "−"), curve.xUnit)}
+      </Figure>
     </>
   );
 }

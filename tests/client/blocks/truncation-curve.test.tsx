@@ -1,5 +1,8 @@
 import { cleanup, render, screen } from "@testing-library/react";
 import { afterEach, describe, expect, it } from "vitest";
+import type { Evaluation } from "#engine/evaluation.ts";
+import { BlockHandleContext, type BlockHandle } from "../../../client/blocks/block-handle.ts";
+import { TruncationErrorResult } from "../../../client/blocks/truncation-error/truncation-error-result.tsx";
 import { CurveFigures } from "../../../client/blocks/truncation-error/curve-figures.tsx";
 import { evaluateCurve, ternTable } from "../../engine/truncation/curve-block.ts";
 import { theoryOf } from "../../engine/theory-builder.ts";
@@ -18,6 +21,35 @@ function draw(method: string, count = 41) {
   render(<CurveFigures curve={value.curve} highlighted={value.highlighted} unit={value.unit} degree="68" />);
   return value;
 }
+
+/** As much of a block as a result looks at. */
+function handleOf(evaluation: Evaluation): BlockHandle {
+  return {
+    fields: { quantity: "the rate" },
+    tables: {},
+    evaluation,
+    readOnly: false,
+  } as unknown as BlockHandle;
+}
+
+describe("what is said along x", () => {
+  it("gives the point, the methods, the scales and what was measured, each a number of the block", () => {
+    const evaluation = evaluateCurve({ d: ternTable(31, 4) }, { method: "correlated along x" }, theory);
+    if (!evaluation.value) throw new Error("there is a value");
+    const { container } = render(
+      <BlockHandleContext value={handleOf(evaluation)}>
+        <TruncationErrorResult value={evaluation.value} stale={false} />
+      </BlockHandleContext>,
+    );
+    const text = container.textContent;
+    expect(text).toMatch(/^The rate at .*210 MeV through order 4 is 11\.3/);
+    expect(text).toContain("correlated along x");
+    expect(text).toMatch(/Of the measured values, 7\d % lie in the 68 % intervals/);
+    expect(text).toMatch(/From the data, .* is \d+ to \d+ MeV at 68 %, median \d+ MeV; stated is 600 MeV/);
+    expect(text).toMatch(/fitted at \d+ points/);
+    expect(text).not.toMatch(/undefined|NaN|null/);
+  });
+});
 
 describe("what is drawn along x", () => {
   it("point by point: the bands and the coefficients, each with a name and a table", () => {

@@ -6,7 +6,7 @@ import type { CoefficientsAlong } from "#engine/truncation/coefficients-along.ts
 import { studentHalfWidth } from "#engine/truncation/student-t.ts";
 import { jointPosterior } from "#engine/truncation/joint-posterior.ts";
 import { factorOf } from "#engine/truncation/kernel.ts";
-import { ternTrap, ternTrapBreakdown } from "#engine/truncation/tern-trap.ts";
+import { ternTrap, ternTrapBreakdown, ternTrapTable } from "#engine/truncation/tern-trap.ts";
 import { evaluateCurve, ternTable } from "./curve-block.ts";
 import { scalar } from "./truncation-block.ts";
 
@@ -150,6 +150,17 @@ describe("the invented observable of the demonstration", () => {
       expect(share).toBeGreaterThan(0.6);
       expect(share).toBeLessThan(0.76);
     }
+  });
+
+  it("is a table to paste: a header, and a line for each p", () => {
+    const [header, first, ...rest] = ternTrapTable(5, 2).trim().split("\n");
+    expect(header).toBe("p (MeV),X0 (mb),X1 (mb),X2 (mb),exact (mb)");
+    expect(first?.split(",").map(Number)).toEqual([
+      60,
+      ...[0, 1, 2].map((n) => Number(ternTrap(5, 2).orders[n]?.[0]?.toPrecision(8))),
+      Number(ternTrap(5, 2).exact[0]?.toPrecision(8)),
+    ]);
+    expect(rest).toHaveLength(4);
   });
 
   it("has all its orders: what is left after the thirtieth is below the digits told", () => {
