@@ -177,6 +177,95 @@ describe("results", () => {
   });
 });
 
+describe("long work", () => {
+  const withCount = [
+    ...content,
+    {
+      type: "basisCount",
+      attrs: { blockId: "count", from: "5", to: "7" },
+      content: [row("fields", "f", "K", { symbol: "phi" })],
+    },
+    {
+      type: "errorBudget",
+      attrs: { blockId: "budget" },
+      content: [row("sources", "b", "K", { name: "x", from: "count", scalar: "total/5" })],
+    },
+  ];
+  beforeEach(() => {
+    directory.destroy();
+    doc = new Y.Doc();
+    Y.applyUpdate(doc, notebookState(withCount));
+    directory = createBlockDirectory(doc.getXmlFragment(FRAGMENT));
+  });
+
+  it("comes after what is quick, and what uses it comes then", async () => {
+    let workers = 0;
+    const results = open(() => {
+      workers += 1;
+      return workerInProcess();
+    });
+    await vi.waitFor(() => expect(results.result("scaling").evaluation).not.toBeNull());
+    await settled(results);
+    expect(results.result("count").evaluation?.value).not.toBeNull();
+    expect(results.result("budget").evaluation?.problems).toEqual([]);
+    expect(workers).toBe(2);
+    expect(results.longWork("count")).toBeNull();
+  });
+
+  it("is stopped and resumed by hand, and what is quick goes on meanwhile", async () => {
+    const silent: WorkerLike[] = [];
+    let quick = true;
+    const results = open(() => {
+      // The second worker is the one for long work.
+      if (quick) {
+        quick = false;
+        return workerInProcess();
+      }
+      const worker = {
+        onmessage: null,
+        onerror: null,
+        postMessage: () => undefined,
+        terminate: () => undefined,
+      };
+      silent.push(worker);
+      return worker;
+    });
+    await vi.waitFor(() => expect(results.longWork("count")?.state).toBe("computing"));
+    results.stopLongWork("count");
+    expect(results.longWork("count")?.state).toBe("stopped");
+    edit("apart", "q", "0.2");
+    await vi.waitFor(() => expect(results.isPending("apart")).toBe(false));
+    expect(results.longWork("count")?.state).toBe("stopped");
+    expect(results.isPending("budget")).toBe(true);
+    results.resumeLongWork("count");
+    expect(results.longWork("count")?.state).toBe("computing");
+    expect(silent).toHaveLength(2);
+  });
+
+  it("need not be done here when the server has its result", async () => {
+    const { blocks } = readDocument({ type: "doc", content: withCount });
+    const stored = evaluateNotebook(blocks, { memo: new Map(), onInternalError: () => undefined }).map(
+      ({ blockId, key, evaluation }): StoredResult => ({
+        blockId,
+        key,
+        evaluation,
+        engineVersion: ENGINE_VERSION,
+        settledAt: "2026-12-01T14:02:00Z",
+        changedBy: null,
+      }),
+    );
+    let workers = 0;
+    const results = open(() => {
+      workers += 1;
+      return workerInProcess();
+    });
+    results.setStored(stored);
+    await settled(results);
+    expect(results.result("budget").evaluation?.problems).toEqual([]);
+    expect(workers).toBe(1);
+  });
+});
+
 describe("the worker", () => {
   it("computes only the newest of several states that arrive together", () => {
     const core = createEvaluationCore({ kindOf: (kind) => kinds[kind], onProgress: () => undefined });

@@ -327,3 +327,30 @@ test("what takes too long is ended, and the next is computed", async () => {
     await pool.stop();
   }
 });
+
+const count = (to: string) =>
+  block("basisCount", "count", "", { fields: { to }, tables: { fields: [{ id: "f", symbol: "phi" }] } });
+
+test("long work is computed in the background, and named for whose edit asked for it", async () => {
+  const notebookId = await seeded(document(count("6"), premises("4")));
+  const writer = await open(ben, notebookId);
+  elementOf(writer, "basisCount").setAttribute("to", "7");
+  const stored = async () =>
+    (await storedResults(server.database, notebookId)).find(({ blockId }) => blockId === "count");
+  await until("the new count is stored", async () =>
+    Boolean((await stored())?.evaluation.scalars.some(({ id }) => id === "total/7")),
+  );
+  expect((await stored())?.changedBy).toBe("Ben");
+});
+
+test("long work that somebody has asked for before is taken from the store", async () => {
+  const first = await seeded(document(count("9")));
+  const keyOf = async (notebookId: string) => (await keysOf(notebookId)).get("count");
+  const known = await keyOf(first);
+  const before = await rows(server.database, "select 1 from results where key = ?", [known!]);
+  expect(before).toHaveLength(1);
+  const second = await seeded(document(count("8")));
+  const writer = await open(ada, second);
+  elementOf(writer, "basisCount").setAttribute("to", "9");
+  await until("the same key", async () => (await keyOf(second)) === known);
+});
