@@ -30,6 +30,8 @@ test("a visitor without an account reads and checks every number, and hears when
   enter,
   visit,
 }) => {
+  // The whole page is looked over several times on the way.
+  test.slow();
   const owner = (await enter("wren-lantern")).page;
   const notebook = await makeNotebook(owner, "Read by a referee", LANTERN);
   const address = await makeRefereeLink(owner, notebook, "journal");
