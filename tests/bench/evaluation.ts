@@ -8,6 +8,7 @@
  */
 import { printEngineTimes } from "./engine-times.ts";
 import { printPageTimes } from "./page-times.ts";
+import { printGraphTimes } from "./graphs-times.ts";
 import { printTruncationTimes } from "./truncation-times.ts";
 
 process.env["SUBLEADING_TEST_DATABASE_URL"] ??= process.env["DATABASE_URL"];
@@ -15,5 +16,6 @@ process.env["SUBLEADING_TEST_DATABASE_URL"] ??= process.env["DATABASE_URL"];
 printEngineTimes();
 console.log("");
 printTruncationTimes();
+printGraphTimes();
 console.log("");
 await printPageTimes();

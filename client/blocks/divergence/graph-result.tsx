@@ -74,6 +74,11 @@ export function GraphResult({ value }: { readonly value: GraphDivergence }) {
           )}
         </dd>
       </dl>
+      {value.pictures === null && (
+        <p className="block-line">
+          Graphs are drawn up to six loops, ten legs and twelve vertices, four of them with a single leg.
+        </p>
+      )}
       {/* Results kept from before graphs were drawn have none. */}
       {value.pictures && (
         <Suspense fallback={null}>

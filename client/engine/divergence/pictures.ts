@@ -1,5 +1,5 @@
 /** The graphs that given vertices and legs have, to be drawn: each with its symmetry factor and nested divergences. */
-import { enumerateGraphs, MOST_VERTICES } from "../graphs/enumerate.ts";
+import { enumerateGraphs } from "../graphs/enumerate.ts";
 import type { Graph, GraphRequest, VertexKind } from "../graphs/graph.ts";
 import type { Term, Theory } from "../premises/theory.ts";
 import type { GraphParts } from "./degree.ts";
@@ -14,6 +14,9 @@ const MOST_STEPS = 6_000;
 const MOST_TOLD = 60;
 const MOST_LOOPS = 6;
 const MOST_LEGS = 10;
+const MOST_VERTICES = 12;
+/** Many sources make graphs with so many symmetries that telling them apart takes long. */
+const MOST_SOURCES = 4;
 const MOST_CHOICES = 12_000;
 
 interface Kinds {
@@ -48,11 +51,13 @@ function kindsOf({ vertices, legs }: GraphParts, theory: Theory): Kinds[] {
 /**
  * One-particle irreducible graphs; where there are none, the connected ones. Lists are cut at fixed bounds, and say so.
  *
- * @returns null above six loops, ten legs or thirty vertices, where nobody looks at all graphs
+ * @returns null above six loops, ten legs, twelve vertices or four of them with a single leg
  */
 export function picturesOf(graph: GraphParts, loops: number, theory: Theory): GraphPictures | null {
   const vertexCount = graph.vertices.reduce((sum, { count }) => sum + count, 0);
   if (loops > MOST_LOOPS || totalOf(graph.legs) > MOST_LEGS || vertexCount > MOST_VERTICES) return null;
+  const sources = graph.vertices.reduce((sum, { edges, count }) => sum + (totalOf(edges) < 2 ? count : 0), 0);
+  if (sources > MOST_SOURCES) return null;
   const kinds = kindsOf(graph, theory);
   const irreducible = listAll(kinds, graph, theory, true);
   const isEmpty = irreducible.graphs.length === 0 && !irreducible.truncated;

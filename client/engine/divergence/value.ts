@@ -113,7 +113,7 @@ export interface GraphDivergence {
   /** Highest power of the cutoff, when ω is a number > 0. */
   readonly cutoffPower: Exact | null;
   readonly counterterms: readonly Counterterm[];
-  /** The graphs themselves; null where there are more than anyone draws (six loops, ten legs). */
+  /** The graphs themselves; null above six loops, ten legs, twelve vertices or four of them with a single leg. */
   readonly pictures: GraphPictures | null;
 }
 

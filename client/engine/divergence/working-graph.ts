@@ -1,5 +1,6 @@
 /** The derivation of one graph's degree, with this theory's numbers in both formulas. */
 import type { WorkingStep } from "../evaluation.ts";
+import { Rational } from "../exact/rational.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { Degree, GraphParts } from "./degree.ts";
 import { addHalfEdges, countOf, noHalfEdges } from "./half-edges.ts";
@@ -42,6 +43,7 @@ export function explainGraph(
       text: "Both ways agree (Weinberg 1995, section 12.1; Peskin and Schroeder 1995, section 10.1).",
     },
     ...symbolicSteps(value),
+    ...pictureSteps(value),
   ];
   return value.counterterms.length === 0 ? steps : [...steps, ...countertermSteps(value)];
 }
@@ -85,6 +87,27 @@ function symbolicSteps({ logarithmicAt: at }: GraphDivergence): WorkingStep[] {
       step: "prose",
       text: `$\\omega = 0$ at $${at.symbol} = ${at.value.latex}$: there the graph diverges logarithmically; above it ${above}, below it ${below}.`,
     },
+  ];
+}
+
+/** Which graphs there are, and the sum of their weights that an integral over a single number checks. */
+function pictureSteps({ pictures }: GraphDivergence): WorkingStep[] {
+  if (!pictures?.complete || pictures.count > pictures.list.length || pictures.count === 0) return [];
+  const weights = pictures.list.map(({ symmetry, labellings }) =>
+    Rational.of(BigInt(labellings), BigInt(symmetry)),
+  );
+  const total = weights.reduce((sum, weight) => sum.plus(weight), Rational.zero);
+  const terms =
+    weights.length > 12
+      ? ""
+      : ` = ${pictures.list.map(({ symmetry, labellings }) => `\\tfrac{${labellings}}{${symmetry}}`).join(" + ")}`;
+  return [
+    { step: "heading", text: "Graphs" },
+    {
+      step: "prose",
+      text: `There ${pictures.count === 1 ? "is 1 graph" : `are ${String(pictures.count)} graphs`}, ${pictures.irreducible ? "one-particle irreducible" : "connected"}, with legs of one field interchangeable. $S$ permutes vertices and lines and holds the legs fixed; $N$ is the number of ways to label them. The sum is what field theory in zero dimensions gives with these vertices.`,
+    },
+    { step: "formula", latex: `\\sum \\frac{N}{S}${terms} = ${total.toLatex()}` },
   ];
 }
 

@@ -15,7 +15,7 @@ import {
 } from "./partial-graph.ts";
 
 /** Sets of vertices are bits of a number. */
-export const MOST_VERTICES = 30;
+const MOST_VERTICES = 30;
 
 /**
  * Joins all free legs of one vertex of a partial graph in every way, then of a next one, keeping one partial graph of
@@ -60,6 +60,7 @@ export function enumerateGraphs(request: GraphRequest): GraphList {
       left -= 1;
       if (left < 0) truncated = true;
       if (!truncated && canBeFinished(next, setting)) visit(next);
+      return !truncated;
     });
   };
   visit(firstVertex(rarest.kind, setting));
@@ -113,16 +114,21 @@ function nextOpen({ free }: PartialGraph, { order }: Canonical, { types }: Setti
   return null;
 }
 
-/** Every way to spend the free legs of a vertex, with legs of one type going to targets in rising order. */
+/** Every way to spend the free legs of a vertex, with legs of one type going to targets in rising order; `found` says whether to go on. */
 function joinAll(
   start: PartialGraph,
   vertex: number,
   setting: Setting,
-  found: (graph: PartialGraph) => void,
+  found: (graph: PartialGraph) => boolean,
 ): void {
   const { request, types, outside, partner } = setting;
+  let goesOn = true;
   const spend = (graph: PartialGraph, type: number, least: number): void => {
-    if (type === types) return found(graph);
+    if (!goesOn) return;
+    if (type === types) {
+      goesOn = found(graph);
+      return;
+    }
     if ((graph.free[vertex * types + type] ?? 0) === 0) return spend(graph, type + 1, 0);
     for (const [group, wanted] of graph.wanted.entries()) {
       if (group >= least && outside[group] === type && wanted > 0)
