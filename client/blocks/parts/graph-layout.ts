@@ -159,7 +159,9 @@ function arcs(graph: Graph, points: readonly Point[]): DrawnLine[] {
       const length = Math.hypot(b.x - a.x, b.y - a.y);
       // Measured from the lower vertex, so that lines of opposite direction do not fall on each other.
       const side = from < to ? 1 : -1;
-      const most = Math.min(0.62, 0.3 * (bundle.length - 1)) * Math.min(length, 1.3 * SPACING);
+      const most =
+        Math.min(graph.vertices.length > 2 ? 0.36 : 0.62, 0.3 * (bundle.length - 1)) *
+        Math.min(length, 1.3 * SPACING);
       const bend = bundle.length === 1 ? 0 : side * most * ((2 * k) / (bundle.length - 1) - 1);
       const normal = { x: -(b.y - a.y) / length, y: (b.x - a.x) / length };
       const control = (t: number): Point => ({
