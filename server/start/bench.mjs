@@ -44,6 +44,19 @@ try {
       failed ||= status !== 0;
       if (signal || interrupted) break;
     }
+    if (!interrupted) {
+      say("the long versions of the tests that kill servers and take the database away");
+      const tests = ["kill", "crowd-kill", "postgres-gone"].map(
+        (name) => `tests/server/collab/${name}.test.ts`,
+      );
+      const runner = join(root, "node_modules/vitest/vitest.mjs");
+      const { status } = spawnSync(process.execPath, [runner, "run", "--project", "server", ...tests], {
+        cwd: root,
+        stdio: "inherit",
+        env: { ...env, KILL_ROUNDS: "10", CROWD_ROUNDS: "5", GONE_MS: "20000" },
+      });
+      failed ||= status !== 0;
+    }
   } finally {
     cluster.remove();
     rmSync(folder, { recursive: true, force: true });
