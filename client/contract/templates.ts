@@ -6,6 +6,7 @@ export const templateNames = [
   "scalar-pair",
   "contact-gauge",
   "lifshitz",
+  "standard-model-count",
 ] as const;
 export type Template = (typeof templateNames)[number];
 
@@ -31,6 +32,10 @@ export const templateWords: Readonly<Record<Template, TemplateWords>> = {
   "contact-gauge": {
     label: "Contact theory of fermions with a gauge field",
     hint: "In four dimensions: four fermions at a point, a photon, and the order to stop at.",
+  },
+  "standard-model-count": {
+    label: "Operators of the Standard Model",
+    hint: "How many independent operators there are at dimensions 5 to 8, for any number of generations.",
   },
   lifshitz: {
     label: "Lifshitz scalar, z = 2",

@@ -3,6 +3,7 @@ import type { Template } from "#contract/templates.ts";
 import type { DocumentNode } from "./document-builder.ts";
 import { lanternBlocks, lanternDocument } from "./lantern-notebook.ts";
 import type { PinMaker } from "./pin-maker.ts";
+import { countBlocks, countDocument } from "./templates-count.ts";
 import { contactBlocks, contactDocument } from "./templates-contact.ts";
 import { lifshitzBlocks, lifshitzDocument } from "./templates-lifshitz.ts";
 import { scalarBlocks, scalarDocument } from "./templates-scalar.ts";
@@ -19,6 +20,7 @@ const documents: Readonly<Record<Exclude<Template, "blank">, WrittenTemplate>> =
   "scalar-pair": { blocks: scalarBlocks, write: scalarDocument },
   "contact-gauge": { blocks: contactBlocks, write: contactDocument },
   lifshitz: { blocks: lifshitzBlocks, write: lifshitzDocument },
+  "standard-model-count": { blocks: countBlocks, write: countDocument },
 };
 
 export function documentOf(template: Exclude<Template, "blank">): WrittenTemplate {

@@ -56,6 +56,9 @@ describe("numbers of the templates", () => {
     // Nishida and Son 2007, Phys. Rev. D 76, 086004: the dimer of dimension 2 couples with a marginal coupling.
     ["tern", "y/class", { type: "word", text: "marginal" }],
     ["tern", "r/coefficient", { type: "exact", text: "-1" }],
+    // Henning, Lu, Melia, Murayama 2017, J. High Energy Phys. 08, 016.
+    ["standard-model-count", "total/6", { type: "exact", text: "3045" }],
+    ["standard-model-count", "total/8", { type: "exact", text: "44807" }],
   ] as const)("%s: %s", (name, scalarId, value) => {
     const found = evaluated(name).outcomes.flatMap(({ evaluation }) => evaluation.scalars);
     expect(found.find(({ id }) => id === scalarId)?.value).toEqual(value);

@@ -1,5 +1,10 @@
 import type { ShelfView } from "../../api/notebooks.ts";
+import { templateWords } from "#contract/templates.ts";
+import { useNavigate } from "react-router-dom";
+import { useCreateNotebook } from "../../api/notebooks.ts";
+import { sentenceOf } from "../../api/problem.ts";
 import { Button } from "../../ui/button.tsx";
+import { say } from "../../ui/notices.ts";
 import { EmptyState } from "../../ui/empty-state.tsx";
 import { wholeShelf } from "./shelf-view.ts";
 
@@ -55,10 +60,46 @@ export function EmptyShelf({ view, onChange, onNew }: Props) {
   return (
     <EmptyState title="The shelf is empty">
       <p>
-        Begin with a blank notebook, or with a copy of the Lantern demonstration to see premises, counting and
-        pins at work. Notebooks that others share with you will stand here too.
+        Begin with a copy of a demonstration, which is a complete argument and shows what the blocks do, or
+        with a blank page. Notebooks that others share with you will stand here too.
       </p>
-      <Button onClick={onNew}>New notebook</Button>
+      <ul className="mt-4 space-y-4">
+        {demonstrations.map((template) => (
+          <Demonstration key={template} template={template} />
+        ))}
+      </ul>
+      <Button className="mt-6" onClick={onNew}>
+        New notebook
+      </Button>
     </EmptyState>
+  );
+}
+
+const demonstrations = ["lantern", "tern"] as const;
+
+/** One press makes a copy of one's own and opens it. */
+function Demonstration({ template }: { readonly template: (typeof demonstrations)[number] }) {
+  const create = useCreateNotebook();
+  const navigate = useNavigate();
+  const { label, hint } = templateWords[template];
+  return (
+    <li>
+      <Button
+        busy={create.isPending}
+        busyLabel="Copying"
+        onClick={() =>
+          create.mutate(
+            { template, title: label.replace("A copy of the", "The") },
+            {
+              onSuccess: ({ id }) => void navigate(`/notebooks/${id}`),
+              onError: (error) => say(sentenceOf(error), "refused"),
+            },
+          )
+        }
+      >
+        {label}
+      </Button>
+      <p className="mt-1 max-w-xl text-small text-ink-2">{hint}</p>
+    </li>
   );
 }
