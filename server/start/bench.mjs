@@ -8,7 +8,7 @@ import { endWith, say } from "./say.mjs";
 
 const benches = [
   ...["delivery", "many-notebooks", "opening", "reconnect-storm"],
-  ...["evaluation", "bundle"],
+  ...["evaluation", "basis-times", "bundle"],
 ];
 
 // Ctrl-C reaches the bench that runs, which ends; we then clean up.

@@ -36,13 +36,16 @@ describe("the Standard Model", () => {
 
   // arXiv:1512.03433, the polynomials in the number of generations.
   it("any number of generations", () => {
-    const { totals: found } = count({ ...standardModel, to: "9" });
+    const { totals: found } = count({ ...standardModel, to: "12" });
     expect(Object.fromEntries(found.map(({ dimension, total }) => [dimension, total.text]))).toEqual({
       5: "n_f^2 + n_f",
       6: "397/12*n_f^4 + 3/2*n_f^3 + 413/12*n_f^2 + 15",
       7: "52/3*n_f^4 + 2*n_f^3 + 26/3*n_f^2 + 2*n_f",
       8: "3047/6*n_f^4 + n_f^3 + 2371/6*n_f^2 + 89",
       9: "1943/24*n_f^6 + 17/24*n_f^5 + 2969/8*n_f^4 + 391/24*n_f^3 + 983/12*n_f^2 + 9*n_f",
+      10: "33547/18*n_f^6 + 19/3*n_f^5 + 306719/36*n_f^4 + 259/6*n_f^3 + 161741/36*n_f^2 + 530",
+      11: "94847/24*n_f^6 + 2549/24*n_f^5 + 164159/24*n_f^4 + 2635/24*n_f^3 + 11233/12*n_f^2 + 18*n_f",
+      12: "9617/4*n_f^8 + 33/4*n_f^7 + 4758857/72*n_f^6 + 1573/8*n_f^5 + 9847079/72*n_f^4 + 3417/8*n_f^3 + 1839853/36*n_f^2 + 1/2*n_f + 4481",
     });
   });
 

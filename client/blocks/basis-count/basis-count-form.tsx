@@ -2,14 +2,22 @@ import { countedKinds, patienceChoices } from "#engine/basis/inputs.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
 import { RowTable } from "../parts/row-table.tsx";
 import { TextField } from "../parts/text-field.tsx";
+import {
+  belowTheWeakScale,
+  orthogonalScalars,
+  scalarAlone,
+  standardModel,
+  standardModelWithNeutrinos,
+} from "#engine/basis/contents.ts";
 import { useBlock } from "../block-handle.ts";
 
 /** Which fields, under which groups, up to which dimension. */
 export function BasisCountForm() {
-  const { tables } = useBlock();
+  const { tables, readOnly } = useBlock();
   const groups = (tables["groups"] ?? []).map((row) => row["name"] || (row["group"] ?? ""));
   return (
     <div className="basis-form">
+      {!readOnly && (tables["fields"] ?? []).length === 0 && <Beginnings />}
       <div className="block-settings">
         <TextField place={{ field: "d" }} label="spacetime dimension d" showLabel size={4} />
         <TextField place={{ field: "from" }} label="mass dimensions from" showLabel size={4} />
@@ -62,4 +70,41 @@ export function BasisCountForm() {
       />
     </div>
   );
+}
+
+const beginnings = [
+  ["the Standard Model", standardModel],
+  ["with right-handed neutrinos", standardModelWithNeutrinos],
+  ["quarks, leptons, gluons and photons below the weak scale", belowTheWeakScale("2", "3", "3", "3")],
+  ["scalars of O(4)", orthogonalScalars(4)],
+  ["a scalar alone", scalarAlone],
+] as const;
+
+/** Field contents that many start from, each in one press. */
+function Beginnings() {
+  const { replaceRows } = useBlock();
+  return (
+    <p className="block-line">
+      begin with{" "}
+      {beginnings.map(([name, content], index) => (
+        <span key={name}>
+          {index > 0 && " · "}
+          <button
+            type="button"
+            className="block-link"
+            onClick={() =>
+              replaceRows({ groups: content.groups.map(bare), fields: content.fields.map(bare) })
+            }
+          >
+            {name}
+          </button>
+        </span>
+      ))}
+    </p>
+  );
+}
+
+/** Rows get ids of their own in each block. */
+function bare({ id: _, ...columns }: { readonly id: string } & Readonly<Record<string, string>>) {
+  return columns;
 }

@@ -4,6 +4,7 @@ import { Formula } from "../../ui/math.tsx";
 import type { ResultProps } from "../block-parts.ts";
 import { Figure } from "../parts/figure.tsx";
 import { ResultTable } from "../parts/result-table.tsx";
+import { contentLatex } from "./class-export.ts";
 import { orders, searchClasses, sortClasses, type ClassOrder } from "./class-list.ts";
 
 /** Totals by dimension; below them every field content, to be searched and sorted. */
@@ -129,19 +130,38 @@ function ClassTable({ value }: { readonly value: BasisValue }) {
           <button type="button" className="block-link" onClick={() => setShown(shown + 4 * PAGE)}>
             show more
           </button>
-        )}
+        )}{" "}
+        <Downloads value={value} />
       </p>
+    </>
+  );
+}
+
+/** All of them, however many are shown. */
+function Downloads({ value }: { readonly value: BasisValue }) {
+  async function save(format: "CSV" | "LaTeX") {
+    const [{ classesAsCsv, classesAsLatex }, { download }] = await Promise.all([
+      import("./class-export.ts"),
+      import("../../ui/download.ts"),
+    ]);
+    if (format === "CSV") download("operators.csv", "text/csv", classesAsCsv(value));
+    else download("operators.tex", "application/x-tex", classesAsLatex(value));
+  }
+  return (
+    <>
+      Download all as{" "}
+      <button type="button" className="block-link" onClick={() => void save("CSV")}>
+        CSV
+      </button>{" "}
+      <button type="button" className="block-link" onClick={() => void save("LaTeX")}>
+        LaTeX
+      </button>
     </>
   );
 }
 
 function symbolic({ number }: ClassCount) {
   return <Formula latex={number.latex} />;
-}
-
-function contentLatex({ fieldsLatex, derivatives, withConjugate }: ClassCount): string {
-  const derivative = derivatives === 0 ? "" : derivatives === 1 ? "\\,D" : `\\,D^{${derivatives}}`;
-  return `${fieldsLatex}${derivative}${withConjugate ? "\\;+\\;\\text{h.c.}" : ""}`;
 }
 
 /** @example grouped("75577476") // "75 577 476", in groups of three by narrow spaces */

@@ -1,4 +1,5 @@
 import { ChoiceField } from "../parts/choice-field.tsx";
+import { ReferenceField } from "../parts/reference-field.tsx";
 import { TextField } from "../parts/text-field.tsx";
 
 export function OrderPlanForm() {
@@ -39,6 +40,12 @@ export function OrderPlanForm() {
           { value: "natural tail", label: "estimated at natural size" },
           { value: "listed terms only", label: "left aside" },
         ]}
+      />
+      <ReferenceField
+        place={{ field: "basis" }}
+        label="numbers of operators from"
+        showLabel
+        none="no count"
       />
     </div>
   );

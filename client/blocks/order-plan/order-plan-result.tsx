@@ -44,6 +44,9 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
             numeric: true,
             show: ({ leftOut }) => <Decimal text={sizeText(leftOut.used)} widths={lefts} />,
           },
+          ...(orders.some(({ operators }) => operators !== undefined)
+            ? [{ heading: "operators", numeric: true, show: ({ operators }: PlanOrder) => operators ?? "–" }]
+            : []),
           { heading: "loops needed", numeric: true, show: ({ loops }) => loopsWords(loops) },
           {
             heading: (

@@ -50,4 +50,6 @@ export const planWords: Words = {
     `Without interference with the leading amplitude the first correction is a square, of order ${said(order)}. Terms of that order that are not listed may interfere and be as large.`,
   "plan-square-alone": ({ order }) =>
     `A square of order ${said(order)} is kept, but no single term of that order is listed whose interference is as large: the rate is not complete at this order.`,
+  "plan-basis-other-dimension": ({ d }) =>
+    `The Basis count is for d = ${said(d)}, and these premises are not, so its numbers are not shown.`,
 };

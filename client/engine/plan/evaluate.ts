@@ -1,7 +1,9 @@
 /** The Order plan block: how far to expand for a target accuracy. */
 import { roundFloat, type Evaluation, type Problem } from "../evaluation.ts";
 import { incompletePremises } from "../premises/incomplete.ts";
+import type { EvaluationContext } from "../kind.ts";
 import type { Theory } from "../premises/theory.ts";
+import { withOperators } from "./operators.ts";
 import { planCautions } from "./cautions.ts";
 import { corrections, rateEntries } from "./entries.ts";
 import { describePlan } from "./describe.ts";
@@ -29,6 +31,7 @@ const SMALLEST_Q = 1e-300;
 export function evaluateOrderPlan(
   inputs: OrderPlanInputs,
   theory: Theory | null,
+  context: EvaluationContext,
 ): Evaluation<OrderPlanValue> {
   const refuse = (problems: readonly Problem[]): Evaluation<OrderPlanValue> => ({
     value: null,
@@ -57,7 +60,8 @@ export function evaluateOrderPlan(
   const expansion = expand(inputs, settings, scales, read.terms, theory);
   if (!expansion) return refuse([problem("plan-too-large", ["insertions"], { most: MOST_ENTRIES })]);
   const order = orderFor(expansion, workingPoint);
-  const value = describePlan(expansion, order, read.terms, scales, theory);
+  const described = describePlan(expansion, order, read.terms, scales, theory);
+  const { value, notices } = withOperators(described, inputs.basis, theory, context);
   const missed = leftOutAt(expansion, expansion.orders.at(-1) ?? Rational.zero, workingPoint);
   const unreached = order
     ? []
@@ -71,7 +75,11 @@ export function evaluateOrderPlan(
   return {
     value,
     problems: [...read.problems, ...unreached],
-    notices: [...incompletePremises(theory), ...planCautions(expansion, order, read.terms, scales, theory)],
+    notices: [
+      ...notices,
+      ...incompletePremises(theory),
+      ...planCautions(expansion, order, read.terms, scales, theory),
+    ],
     scalars: planScalars(value),
     working: explainPlan(value, read.terms, theory),
   };

@@ -1,5 +1,5 @@
 /** What an Order plan is asked: the accuracy wanted, of which observable, and how far to look. */
-import { choice, defineShape, note, text, type InputsOf } from "../shape.ts";
+import { choice, defineShape, note, reference, text, type InputsOf } from "../shape.ts";
 
 export const orderPlanShape = defineShape({
   fields: {
@@ -17,6 +17,8 @@ export const orderPlanShape = defineShape({
     cap: text("8"),
     /** Whether unlisted terms past the highest listed order are estimated at natural size when the cut is made. */
     unlisted: choice("natural tail", "listed terms only"),
+    /** A Basis count whose numbers of operators are shown beside the orders. */
+    basis: reference(["basisCount"]),
     note: note(),
   },
   tables: {},

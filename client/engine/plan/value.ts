@@ -58,6 +58,8 @@ export interface PlanOrder {
    */
   readonly loops: { readonly insertions: number; readonly needed: number | null };
   readonly included: boolean;
+  /** Independent operators of mass dimension d + order, in digits, where a Basis count says; null outside its range. */
+  readonly operators?: string | null;
 }
 
 export interface Shift {

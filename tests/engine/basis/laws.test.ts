@@ -187,6 +187,24 @@ describe("a count", () => {
       totals(count({ fields: [field("a", "real scalar", "", "n_f")], flavours: "2", to: "9" })),
     );
   });
+  it("of a thousand copies, far beyond what a float holds, is the polynomial at a thousand", () => {
+    const groups = [group("colour", "SU(3)")];
+    const content = (flavours: string) => ({
+      groups,
+      fields: [
+        field("Q", "left-handed spinor", "3", flavours),
+        field("u", "right-handed spinor", "3", flavours),
+      ],
+      from: "6",
+      to: "12",
+      flavours: "1000",
+    });
+    const [numbers, polynomials] = [count(content("1000")), count(content("n_f"))];
+    expect(numbers.totals.map(({ total }) => total.at)).toEqual(
+      polynomials.totals.map(({ total }) => total.at),
+    );
+    expect(Number(operatorsAt(numbers, "12"))).toBeGreaterThan(2 ** 53);
+  });
   it("has a scalar to pin for every dimension, and says that it is of real parameters", () => {
     const { scalars, notices } = evaluate({ fields: [field("phi", "real scalar")], to: "7" });
     expect(scalars.map(({ id }) => id)).toEqual(["total/5", "total/6", "total/7"]);

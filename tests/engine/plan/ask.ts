@@ -2,6 +2,7 @@
 import { evaluateOrderPlan } from "#engine/plan/evaluate.ts";
 import type { Evaluation } from "#engine/evaluation.ts";
 import { orderPlanShape, type OrderPlanInputs } from "#engine/plan/inputs.ts";
+import { aloneContext } from "#engine/kind.ts";
 import type { OrderPlanValue } from "#engine/plan/value.ts";
 import type { Theory } from "#engine/premises/theory.ts";
 import { schemaOf } from "#engine/shape.ts";
@@ -10,7 +11,7 @@ export function askPlan(
   theory: Theory | null,
   given: Partial<OrderPlanInputs> = {},
 ): Evaluation<OrderPlanValue> {
-  return evaluateOrderPlan(schemaOf(orderPlanShape).parse(given), theory);
+  return evaluateOrderPlan(schemaOf(orderPlanShape).parse(given), theory, aloneContext);
 }
 
 export function planOf(theory: Theory, given: Partial<OrderPlanInputs> = {}): OrderPlanValue {
