@@ -14,6 +14,7 @@ import { measureDelivery, type CrowdOptions } from "./typing-crowd.ts";
 const crowds = [
   { people: 2, keystrokes: 10 },
   { people: 10, keystrokes: 5 },
+  { people: 20, keystrokes: 2 },
   { people: 50, keystrokes: 1 },
   { people: 200, keystrokes: 0.25 },
 ] as const;
