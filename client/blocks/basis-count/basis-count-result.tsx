@@ -75,7 +75,7 @@ function ClassTable({ value }: { readonly value: BasisValue }) {
   return (
     <>
       <div className="block-settings">
-        <label htmlFor={`${id}-search`} className="block-label">
+        <label htmlFor={`${id}-search`} className="block-label basis-search">
           search
           <input
             id={`${id}-search`}
@@ -89,7 +89,7 @@ function ClassTable({ value }: { readonly value: BasisValue }) {
             }}
           />
         </label>
-        <label htmlFor={`${id}-order`} className="block-label">
+        <label htmlFor={`${id}-order`} className="block-label basis-search">
           order
           <select
             id={`${id}-order`}

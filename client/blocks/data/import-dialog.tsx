@@ -129,7 +129,7 @@ function Preview({ file, columns, onChange }: PreviewProps) {
     // A wide table scrolls, so it must be reachable by keyboard (WCAG 2.1.1).
     // eslint-disable-next-line jsx-a11y-x/no-noninteractive-tabindex
     <div className="mt-2 overflow-x-auto" tabIndex={0} role="group" aria-label="preview">
-      <table className="block-table">
+      <table className="w-full text-small [&_td]:pr-4 [&_th]:pr-4 [&_th]:text-left [&_th]:align-top [&_th]:font-medium">
         <caption className="sr-only">The first lines, with the role of each column</caption>
         <thead>
           <tr>
