@@ -149,7 +149,7 @@ function Downloads({ value }: { readonly value: BasisValue }) {
   }
   return (
     <>
-      Download all as{" "}
+      Download {value.classesLeftOut > 0 ? "those listed" : "all"} as{" "}
       <button type="button" className="block-link" onClick={() => void save("CSV")}>
         CSV
       </button>{" "}

@@ -1,10 +1,17 @@
 import { columnRoles, type ColumnRole } from "#engine/data/inputs.ts";
-import { useId, useState } from "react";
+import { useId, useMemo, useState } from "react";
 import { Button } from "../../ui/button.tsx";
 import { Dialog } from "../../ui/dialog.tsx";
 import { say } from "../../ui/notices.ts";
 import { useBlock } from "../block-handle.ts";
-import { LARGEST_BYTES, packLines, readFile, type FileColumn, type ReadFile } from "./read-file.ts";
+import {
+  LARGEST_BYTES,
+  packLines,
+  readFile,
+  whyTooLarge,
+  type FileColumn,
+  type ReadFile,
+} from "./read-file.ts";
 
 type Chosen = Omit<FileColumn, "role"> & { readonly role: ColumnRole | "leave out" };
 
@@ -36,24 +43,28 @@ export function ImportDialog({ onClose }: { readonly onClose: () => void }) {
     }
     take(await picked.text(), picked.name);
   }
-  const kept = columns.flatMap((column, index) => (column.role === "leave out" ? [] : [index]));
-  const faults = (file?.faults ?? []).filter(
-    ({ column }) => kept.includes(column - 1) || column > columns.length,
+  const kept = useMemo(
+    () => columns.flatMap((column, index) => (column.role === "leave out" ? [] : [index])),
+    [columns],
   );
+  const faults = (file?.faults ?? []).filter(({ isOfLine, column }) => isOfLine || kept.includes(column - 1));
+  const rows = useMemo(
+    () => packLines((file?.lines ?? []).map((line) => kept.map((index) => line[index] ?? ""))),
+    [file, kept],
+  );
+  const tooLarge = whyTooLarge(rows);
 
   function importAll() {
     if (!file) return;
-    const before = (block.tables["lines"] ?? []).length;
+    const before = (block.tables["lines"] ?? []).flatMap(({ values = "" }) => values.split("\n")).length;
     block.replaceRows({
       columns: columns.flatMap(({ name: called, role, order, unit }) =>
         role === "leave out" ? [] : [{ name: called, role, order: role === "order" ? order : "", unit }],
       ),
-      lines: packLines(file.lines.map((line) => kept.map((index) => line[index] ?? ""))).map((values) => ({
-        values,
-      })),
+      lines: rows.map((values) => ({ values })),
     });
     say(
-      `${name === "" ? "The table" : `“${name}”`} was read in: ${kept.length} columns, ${file.lines.length} lines.${before === 0 ? "" : " It took the place of the table before; undo brings that back."}`,
+      `${name === "" ? "The table" : `“${name}”`} was read in: ${kept.length} columns, ${file.lines.length} lines.${before === 0 ? "" : " It took the place of ${before} lines; undo brings those back."}`,
     );
     onClose();
   }
@@ -94,6 +105,11 @@ export function ImportDialog({ onClose }: { readonly onClose: () => void }) {
           </p>
         )}
       </div>
+      {tooLarge !== null && (
+        <p role="alert" className="mt-3 text-small text-hairline">
+          {tooLarge}
+        </p>
+      )}
       {file && <Preview file={file} columns={columns} onChange={setColumns} />}
       {faults.length > 0 && (
         <div className="mt-3 text-small text-hairline" role="alert">
@@ -108,7 +124,11 @@ export function ImportDialog({ onClose }: { readonly onClose: () => void }) {
       )}
       <div className="mt-6 flex flex-wrap justify-end gap-3">
         <Button onClick={onClose}>Leave it</Button>
-        <Button look="main" disabled={!file || kept.length === 0 || faults.length > 0} onClick={importAll}>
+        <Button
+          look="main"
+          disabled={!file || kept.length === 0 || faults.length > 0 || tooLarge !== null}
+          onClick={importAll}
+        >
           Read it in
         </Button>
       </div>

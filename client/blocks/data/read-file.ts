@@ -23,23 +23,39 @@ export interface ReadFile {
   readonly delimiter: string;
   readonly hasDecimalComma: boolean;
   /** What cannot be read, by line and column of the file, counted from 1. */
-  readonly faults: readonly { readonly line: number; readonly column: number; readonly sentence: string }[];
+  readonly faults: readonly FileFault[];
+}
+export interface FileFault {
+  readonly line: number;
+  readonly column: number;
+  /** The line has another number of values than the header: which value is whose is then unknown. */
+  readonly isOfLine: boolean;
+  readonly sentence: string;
 }
 export type FileReading =
   { readonly ok: true; readonly file: ReadFile } | { readonly ok: false; readonly sentence: string };
 
 /** @param text the file as UTF-8; a byte-order mark is no part of it */
 export function readFile(text: string): FileReading {
-  const parsed = Papa.parse<string[]>(text.replace(/^\uFEFF/, ""), {
-    delimiter: "",
+  if (text.length > LARGEST_BYTES) return { ok: false, sentence: "At most 10 MB are read." };
+  if (text.includes("\uFFFD") || text.includes("\u0000"))
+    return { ok: false, sentence: "This is no text in UTF-8. Save the table as CSV in UTF-8 first." };
+  const csv = text.replace(/^\uFEFF/, "");
+  const { delimiter } = Papa.parse<string[]>(csv, {
     delimitersToGuess: delimiters,
     skipEmptyLines: "greedy",
-  });
+    preview: 10,
+  }).meta;
+  // Empty lines are kept so far, since they count when a line of the file is named.
+  const parsed = Papa.parse<string[]>(csv, { delimiter });
+  const numbered = withLineNumbers(parsed.data);
   const broken = parsed.errors.find(({ type }) => type === "Quotes");
-  if (broken)
-    return { ok: false, sentence: `Line ${(broken.row ?? 0) + 1}: a quotation mark is not closed.` };
-  const all = parsed.data.map((line) => line.map((value) => value.trim()));
-  const [header, ...body] = all;
+  if (broken) {
+    const line = numbered[broken.row ?? 0]?.line ?? 1;
+    return { ok: false, sentence: `Line ${line}: a quotation mark is not closed.` };
+  }
+  const [first, ...body] = numbered.filter(({ values }) => values.some((value) => value !== ""));
+  const header = first?.values;
   if (!header || body.length === 0)
     return { ok: false, sentence: "The file has a header line and lines of values below it." };
   if (header.every((value) => decimal.test(value)))
@@ -48,30 +64,46 @@ export function readFile(text: string): FileReading {
     return { ok: false, sentence: `At most ${MOST_COLUMNS} columns are read.` };
   if (body.length > MOST_LINES)
     return { ok: false, sentence: `At most ${MOST_LINES} lines are read; the file has ${body.length}.` };
-  const { delimiter } = parsed.meta;
-  const hasDecimalComma = delimiter !== "," && isMostlyWithComma(body);
-  const faults: { line: number; column: number; sentence: string }[] = [];
-  const lines = body.map((line, index) => {
-    if (line.length !== header.length)
+  const hasDecimalComma = delimiter !== "," && isMostlyWithComma(body.map(({ values }) => values));
+  const faults: FileFault[] = [];
+  const lines = body.map(({ line, values }) => {
+    if (values.length !== header.length)
       faults.push({
-        line: index + 2,
-        column: Math.min(line.length, header.length) + 1,
-        sentence: `Line ${index + 2} has ${line.length} values; the header has ${header.length}.`,
+        line,
+        column: Math.min(values.length, header.length) + 1,
+        isOfLine: true,
+        sentence: `Line ${line} has ${values.length} values; the header has ${header.length}.`,
       });
     return header.map((name, column) => {
-      const value = line[column] ?? "";
+      const value = values[column] ?? "";
       if (nothing.test(value)) return "";
       const pointed = (hasDecimalComma ? value.replace(",", ".") : value).replace("−", "-");
       if (decimal.test(pointed)) return pointed;
       faults.push({
-        line: index + 2,
+        line,
         column: column + 1,
-        sentence: `Line ${index + 2}, column ${column + 1} (${name}): “${value.slice(0, 40)}” is no number.`,
+        isOfLine: false,
+        sentence: `Line ${line}, column ${column + 1} (${name}): “${value.slice(0, 40)}” is no number.`,
       });
       return "";
     });
   });
   return { ok: true, file: { columns: guessRoles(header), lines, delimiter, hasDecimalComma, faults } };
+}
+
+interface NumberedLine {
+  readonly line: number;
+  readonly values: readonly string[];
+}
+
+/** Numbers of lines in the file, from 1: a quoted value may itself go over several. */
+function withLineNumbers(data: readonly (readonly string[])[]): readonly NumberedLine[] {
+  let next = 1;
+  return data.map((values) => {
+    const line = next;
+    next += 1 + values.reduce((sum, value) => sum + (value.match(/\r\n|\r|\n/g)?.length ?? 0), 0);
+    return { line, values: values.map((value) => value.trim()) };
+  });
 }
 
 function isMostlyWithComma(lines: readonly (readonly string[])[]): boolean {
@@ -113,6 +145,20 @@ export function guessRoles(header: readonly string[]): FileColumn[] {
 /** A row of the document holds one line while there are few, and as many as fit when there are many. */
 const LINES_ONE_BY_ONE = 400;
 const LONGEST_ROW = 3_800;
+/** The bounds of a block's inputs (`schemaOf`): what is beyond them would be cut off when read. */
+const LONGEST_VALUE = 4_000;
+const MOST_ROWS = 2_000;
+/** One change to a notebook may have 4 MB; a page that made a larger one could send nothing from then on. */
+const MOST_CHARACTERS = 3_000_000;
+
+/** Why these rows do not fit into a notebook, or null. */
+export function whyTooLarge(rows: readonly string[]): string | null {
+  const characters = rows.reduce((sum, row) => sum + row.length, 0);
+  if (rows.some((row) => row.length > LONGEST_VALUE))
+    return `A line has more than ${LONGEST_VALUE} characters. Leave columns out.`;
+  if (characters <= MOST_CHARACTERS && rows.length <= MOST_ROWS) return null;
+  return `These numbers take ${(characters / 1e6).toFixed(1)} MB; a table of a notebook holds 3. Leave columns out.`;
+}
 
 /** Lines as the values of document rows. */
 export function packLines(lines: readonly (readonly string[])[]): readonly string[] {

@@ -18,7 +18,7 @@ export const basisWords: Words = {
   "parity-needs-scalars": () =>
     "Parity is imposed for scalars and pseudoscalars only, since it exchanges the two chiralities. Count without parity.",
   "count-too-large": ({ most }) =>
-    `There are more than ${said(most)} field contents up to this dimension, more than can be counted. Lower the last dimension.`,
+    `Up to this dimension there is more to count than fits into memory, such as more than ${said(most)} field contents. Lower the last dimension.`,
   "count-takes-long": ({ classes, minutes }) =>
     `There are ${said(classes)} field contents up to this dimension, which takes about ${Number(minutes) > 1 ? `${said(minutes)} minutes` : "a minute"}. To go on, allow it however long it takes.`,
   "group-not-known": ({ text }) =>
@@ -27,7 +27,7 @@ export const basisWords: Words = {
     `${quoted(text)} is out of range: between ${said(least)} and ${said(most)} is counted.`,
   "kept-unreadable": ({ text }) =>
     `${quoted(text)} is no list of charges. Leave it empty for neutral operators, or write “all”, or numbers such as “1, -1”.`,
-  "fields-too-many": ({ most }) => `At most ${said(most)} fields are counted; the others are left out.`,
+  "fields-too-many": ({ most }) => `At most ${said(most)} fields are counted.`,
   "counted-symbol-unreadable": ({ text }) =>
     `${quoted(text)} is no symbol. Use one letter, with a subscript if need be.`,
   "counted-symbol-twice": ({ text }) => `${quoted(text)} names another field already. Choose another symbol.`,

@@ -8,6 +8,8 @@ export const budgetWords: Words = {
     `${quoted(text)} is no size. Give a number, with a unit or percent sign if need be.`,
   "size-uncertain-itself": ({ text }) =>
     `${quoted(text)} has an uncertainty of its own. Give the standard uncertainty alone.`,
+  "budget-value-uncertain": ({ text }) =>
+    `${quoted(text)} has an uncertainty. Give the value alone, and its uncertainty as a source below.`,
   "percent-of-nothing": () => "A percentage needs the value it is of. Give the value above.",
   "budget-units-differ": ({ from, to }) =>
     `${quoted(from)} cannot be added to ${quoted(to)}. Give the size in the unit of the budget.`,
@@ -21,6 +23,8 @@ export const budgetWords: Words = {
   "coefficient-twice": ({ group }) => `The group ${quoted(group)} has two coefficients. Keep one of them.`,
   "correlations-contradict": () =>
     "These coefficients contradict each other: the squared error would be negative. Three sources cannot all be opposed.",
+  "budget-kinds-correlated": ({ groups }) =>
+    `Errors of different kinds move together (${said(groups)}). The brackets leave that out; the whole error has it.`,
   "scale-variation-and-truncation": () =>
     "Scale variation and truncation errors both stand for orders left out. Adding them in quadrature counts those twice.",
 };

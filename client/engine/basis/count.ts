@@ -61,7 +61,9 @@ interface Entries {
 /** One product of cycle types: its weight, and the same by its factors for when the weight is too large to be exact. */
 interface Term {
   readonly weight: number;
+  /** Valid until the next term. */
   readonly factors: readonly bigint[];
+  readonly values: readonly number[];
   readonly flavourPower: number;
   readonly vector: Float64Array;
 }
@@ -70,7 +72,8 @@ class Counter {
   readonly #lorentz: LorentzIntegral;
   readonly #scalarIntegral: ScalarIntegral | null;
   readonly #gauge: readonly GaugeIntegral[];
-  readonly #representations: readonly (readonly Representation[])[];
+  /** For each gauge group, of each representation its place among the different ones. */
+  readonly #numbers: readonly ReadonlyMap<Representation, number>[];
   readonly #orthogonal: readonly OrthogonalIntegral[];
 
   constructor(
@@ -83,10 +86,17 @@ class Counter {
     this.#scalarIntegral = isUsual
       ? null
       : new ScalarIntegral(d, withParity, (quanta) => Math.floor((most - quanta * (d - 2)) / 2));
-    this.#representations = content.gauge.map((_, index) => distinct(quanta, index));
-    this.#gauge = content.gauge.map(
-      ({ n }, index) => new GaugeIntegral(n, this.#representations[index] ?? []),
+    const different = content.gauge.map((_, index) => distinct(quanta, index));
+    this.#numbers = different.map(
+      (all, index) =>
+        new Map(
+          quanta.flatMap(({ representations }) => {
+            const own = representations[index];
+            return own ? [[own, all.findIndex(({ name }) => name === own.name)] as const] : [];
+          }),
+        ),
     );
+    this.#gauge = content.gauge.map(({ n }, index) => new GaugeIntegral(n, different[index] ?? []));
     this.#orthogonal = content.orthogonal.map(({ n }) => new OrthogonalIntegral(n));
   }
 
@@ -119,9 +129,9 @@ class Counter {
         Array.from(sums ?? [], (sum) => BigInt(sum)),
       );
     const exact: bigint[][] = [];
-    this.#terms(found, ({ factors, flavourPower, vector }) => {
+    this.#terms(found, ({ factors, values, flavourPower, vector }) => {
       const sums = (exact[flavourPower] ??= Array.from({ length: derivatives }, () => 0n));
-      const weight = factors.reduce((product, factor) => product * factor, 1n);
+      const weight = [...factors, ...values.map(BigInt)].reduce((product, factor) => product * factor, 1n);
       for (let k = 0; k < derivatives; k++) sums[k] = (sums[k] ?? 0n) + weight * BigInt(vector[k] ?? 0);
     });
     return Array.from(exact, (sums: bigint[] | undefined) => sums ?? []);
@@ -143,7 +153,8 @@ class Counter {
           this.#lorentz.value(entries.others, entries.scalars);
         note({
           weight: values.reduce((product, value) => product * value, weight),
-          factors: [...factors, ...values.map(BigInt)],
+          factors,
+          values,
           flavourPower,
           vector,
         });
@@ -191,9 +202,7 @@ class Counter {
       for (const [index, integral] of this.#gauge.entries()) {
         const representation = quantum.representations[index];
         if (!representation || representation.dimension === 1) continue;
-        const number = (this.#representations[index] ?? []).findIndex(
-          ({ name }) => name === representation.name,
-        );
+        const number = this.#numbers[index]?.get(representation) ?? 0;
         gauge[index] = integral.multisets.add(gauge[index] ?? 0, integral.element(number, k));
       }
       for (const [index, group] of this.#orthogonal.entries())

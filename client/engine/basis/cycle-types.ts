@@ -32,6 +32,23 @@ function partitions(n: number, largest: number): number[][] {
   return found;
 }
 
+const partitionNumbers: number[] = [1];
+
+/**
+ * How many cycle types n objects have, by Euler's recurrence with pentagonal numbers (1753).
+ * @example partitionNumber(5) // 7
+ */
+export function partitionNumber(n: number): number {
+  for (let m = partitionNumbers.length; m <= n; m++) {
+    let sum = 0;
+    for (let k = 1; (k * (3 * k - 1)) / 2 <= m; k++)
+      for (const pentagonal of [(k * (3 * k - 1)) / 2, (k * (3 * k + 1)) / 2])
+        sum += (k % 2 === 1 ? 1 : -1) * (partitionNumbers[m - pentagonal] ?? 0);
+    partitionNumbers.push(sum);
+  }
+  return partitionNumbers[n] ?? 0;
+}
+
 /** z = Π_j j^{m_j} m_j!, with m_j cycles of length j. */
 function centralizer(cycles: readonly number[]): bigint {
   let z = 1n;

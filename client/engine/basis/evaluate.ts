@@ -4,7 +4,6 @@ import { Rational } from "../exact/rational.ts";
 import type { EvaluationContext } from "../kind.ts";
 import type { Theory } from "../premises/theory.ts";
 import { anomaliesOf } from "./anomalies.ts";
-import { fieldClasses } from "./classes.ts";
 import type { Content } from "./content.ts";
 import { countOperators, type CountedClass } from "./count.ts";
 import { FlavourPolynomial } from "./flavour-polynomial.ts";
@@ -12,13 +11,11 @@ import { patienceChoices, type BasisInputs } from "./inputs.ts";
 import { readContent } from "./read-content.ts";
 import { largestScalarDimension } from "./scalar-integral.ts";
 import type { BasisValue, ClassCount, CountText, DimensionCount } from "./value.ts";
+import { amountOfWork, MOST_CLASSES_COUNTED } from "./work.ts";
 import { basisWorking } from "./working.ts";
 
-/** A field content takes about 60 µs: this many are a few seconds. */
-const CLASSES_AT_ONCE = 60_000;
-/** More would not fit into memory, whatever the patience. */
-const MOST_CLASSES_COUNTED = 3_000_000;
-const CLASSES_A_MINUTE = 1_000_000;
+/** What takes longer is asked about first. */
+const SECONDS_AT_ONCE = 5;
 /** Shown and stored one by one; all are in the totals. */
 const MOST_CLASSES = 4_000;
 const LARGEST_DIMENSION = 30;
@@ -45,24 +42,19 @@ export function evaluateBasis(
   const flavours = readFlavoursAt(inputs.flavours, problems);
   if (d === null || range === null || flavours === null) return refused(problems);
   const content = readContent(inputs, d, problems);
-  if (content.quanta.length === 0) {
-    if (problems.length === 0) problems.push({ code: "nothing-to-count", path: ["fields"], facts: {} });
-    return refused(problems);
-  }
+  // Without a group or a field that cannot be read this would be the count of another theory.
+  if (problems.length > 0) return refused(problems);
+  if (content.quanta.length === 0)
+    return refused([{ code: "nothing-to-count", path: ["fields"], facts: {} }]);
   if (content.withParity && content.quanta.some(({ spin }) => spin !== "scalar"))
-    return refused([...problems, { code: "parity-needs-scalars", path: ["parity"], facts: {} }]);
+    return refused([{ code: "parity-needs-scalars", path: ["parity"], facts: {} }]);
   const work = amountOfWork(content, range.most);
-  const asksFirst = work > CLASSES_AT_ONCE && inputs.patience === patienceChoices[0];
-  if (work > MOST_CLASSES_COUNTED)
+  if (work.isTooMuch)
+    return refused([{ code: "count-too-large", path: ["to"], facts: { most: MOST_CLASSES_COUNTED } }]);
+  if (work.seconds > SECONDS_AT_ONCE && inputs.patience === patienceChoices[0]) {
+    const minutes = Math.max(1, Math.round(work.seconds / 60));
     return refused([
-      ...problems,
-      { code: "count-too-large", path: ["to"], facts: { most: MOST_CLASSES_COUNTED } },
-    ]);
-  if (asksFirst) {
-    const minutes = Math.max(1, Math.round(work / CLASSES_A_MINUTE));
-    return refused([
-      ...problems,
-      { code: "count-takes-long", path: ["patience"], facts: { classes: work, minutes } },
+      { code: "count-takes-long", path: ["patience"], facts: { classes: work.classes, minutes } },
     ]);
   }
   const counted = countOperators(content, range.least, range.most, context.tell);
@@ -119,16 +111,6 @@ function readFlavoursAt(text: string, problems: Problem[]): number | null {
   return null;
 }
 
-/** Field contents to be looked at; no more is counted than is refused in any case. */
-function amountOfWork(content: Content, most: number): number {
-  let classes = 0;
-  fieldClasses(content, most, () => {
-    classes += 1;
-    return classes <= MOST_CLASSES_COUNTED;
-  });
-  return classes;
-}
-
 function present(
   content: Content,
   counted: readonly CountedClass[],
@@ -141,28 +123,28 @@ function present(
     at: number.at(flavours).toString(),
   });
   const sums = new Map<number, { total: FlavourPolynomial; classes: number }>();
-  const classes: { readonly doubled: number; readonly row: ClassCount }[] = [];
+  const classes: { readonly doubled: number; readonly fields: number; readonly row: () => ClassCount }[] = [];
   for (const found of counted) {
+    const fields = found.powers.reduce((a, b) => a + b, 0);
     for (const { derivatives, number } of found.numbers) {
       const doubled = found.doubled + 2 * derivatives;
       const before = sums.get(doubled) ?? { total: FlavourPolynomial.zero, classes: 0 };
       const all = number.times(found.counts);
       sums.set(doubled, { total: before.total.plus(all), classes: before.classes + 1 });
-      classes.push({
-        doubled,
-        row: {
-          id: `${found.powers.join("-")}d${derivatives}`,
-          dimension: halfOf(doubled),
-          fieldsLatex: fieldsLatex(content, found.powers),
-          fields: found.powers.reduce((a, b) => a + b, 0),
-          derivatives,
-          number: show(all),
-          withConjugate: found.counts === 2,
-        },
+      // Of a long count most are never shown, and writing them all would take longer than counting them.
+      const row = () => ({
+        id: `${found.powers.join("-")}d${derivatives}`,
+        dimension: halfOf(doubled),
+        fieldsLatex: fieldsLatex(content, found.powers),
+        fields,
+        derivatives,
+        number: show(all),
+        withConjugate: found.counts === 2,
       });
+      classes.push({ doubled, fields, row });
     }
   }
-  classes.sort((a, b) => a.doubled - b.doubled || a.row.fields - b.row.fields);
+  classes.sort((a, b) => a.doubled - b.doubled || a.fields - b.fields);
   const totals: DimensionCount[] = [];
   // In even d only whole dimensions occur, and a dimension without operators is worth knowing.
   const step = content.d % 2 === 0 ? 2 : 1;
@@ -184,7 +166,7 @@ function present(
     symbolic: content.quanta.some((quantum) => quantum.flavours === "symbolic"),
     flavours,
     totals,
-    classes: classes.slice(0, MOST_CLASSES).map(({ row }) => row),
+    classes: classes.slice(0, MOST_CLASSES).map(({ row }) => row()),
     classesLeftOut: Math.max(0, classes.length - MOST_CLASSES),
     content: content.quanta.map((quantum) => ({
       latex: quantum.latex,

@@ -26,7 +26,7 @@ const spinOf: Readonly<Record<CountedKind, Spin | "scalar">> = {
 const MOST_FIELDS = 40;
 const MOST_FLAVOURS = 1000;
 
-/** Problems concern rows, which are then left out. `d` has been read. */
+/** Rows with problems are left out of what is returned, which then is no content to count. `d` has been read. */
 export function readContent(inputs: BasisInputs, d: number, problems: Problem[]): Content {
   const groups = readGroups(inputs.groups, problems);
   const known = groups.filter((group): group is Group => group !== null);

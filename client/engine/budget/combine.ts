@@ -9,7 +9,7 @@ export interface Contribution {
 
 /**
  * u² = Σ u_i² + 2 Σ_{i<j} r_ij u_i u_j, GUM eq. (16), with r the coefficient of the group two sources share, else 0.
- * Negative only when the coefficients of a group contradict each other.
+ * Negative only when the coefficients of a group contradict each other, which `contradictoryGroups` tells.
  *
  * @example variance([{ size: 3, group: "" }, { size: 4, group: "" }], () => 1) // 25
  * @example variance([{ size: 3, group: "a" }, { size: 4, group: "a" }], () => 1) // 49
@@ -35,6 +35,26 @@ export function shares(
   );
 }
 
+/** −1/3 is typed as a decimal. */
+const ROUNDING = 1e-3;
+
+/**
+ * Groups whose sources no random numbers can follow: n of them, each two with coefficient r, need r ≥ −1/(n − 1), or
+ * their matrix of correlations has the negative eigenvalue 1 + (n − 1) r. Sources of size 0 say nothing.
+ *
+ * @example contradictoryGroups(["a", "a", "a"].map((group) => ({ size: 1, group })), () => -0.6) // ["a"]
+ */
+export function contradictoryGroups(
+  contributions: readonly Contribution[],
+  coefficientOf: (group: string) => number,
+): readonly string[] {
+  const groups = new Set(contributions.map(({ group }) => group));
+  return [...groups].filter((group) => {
+    if (group === "") return false;
+    const count = contributions.filter((one) => one.group === group && one.size !== 0).length;
+    return 1 + (count - 1) * coefficientOf(group) < -ROUNDING;
+  });
+}
 /** Σ |u_i|: the most that errors of unknown dependence can add up to. */
 export function linearSum(contributions: readonly Contribution[]): number {
   return contributions.reduce((sum, { size }) => sum + Math.abs(size), 0);

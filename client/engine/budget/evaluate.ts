@@ -2,7 +2,7 @@
 import { roundFloat, type Evaluation, type Problem, type Scalar } from "../evaluation.ts";
 import type { EvaluationContext } from "../kind.ts";
 import type { Theory } from "../premises/theory.ts";
-import { linearSum, shares, variance, type Contribution } from "./combine.ts";
+import { contradictoryGroups, linearSum, shares, variance, type Contribution } from "./combine.ts";
 import { combinations, conversions, sourceKinds, type BudgetInputs, type SourceKind } from "./inputs.ts";
 import { readCorrelations, readSize, readValue, type Reading } from "./read-sizes.ts";
 import { resultText, sizeText } from "./result-text.ts";
@@ -43,8 +43,8 @@ export function evaluateBudget(
     };
   const coefficientOf = (group: string) => coefficients.get(group) ?? 1;
   const linear = inputs.combine === combinations[1];
-  const squared = variance(read, coefficientOf);
-  if (!linear && squared < 0)
+  const squared = Math.max(0, variance(read, coefficientOf));
+  if (!linear && contradictoryGroups(read, coefficientOf).length > 0)
     return {
       value: null,
       problems: [...problems, { code: "correlations-contradict", path: ["correlations"], facts: {} }],
@@ -91,7 +91,7 @@ export function evaluateBudget(
   return {
     value: result,
     problems,
-    notices: noticesOf(read, linear),
+    notices: noticesOf(read, linear, coefficientOf),
     scalars: scalarsOf(result),
     working: budgetWorking(result, read, coefficientOf, linear),
   };
@@ -101,10 +101,28 @@ function kindOf(text: string): SourceKind {
   return sourceKinds.find((kind) => kind === text) ?? "other";
 }
 
-function noticesOf(read: readonly Read[], linear: boolean): Problem[] {
+function noticesOf(
+  read: readonly Read[],
+  linear: boolean,
+  coefficientOf: (group: string) => number,
+): Problem[] {
+  if (linear) return [];
   const has = (kind: SourceKind) => read.some(({ row }) => row.kind === kind);
-  const doubled = !linear && has("scale variation") && has("truncation");
-  return doubled ? [{ code: "scale-variation-and-truncation", path: ["sources"], facts: {} }] : [];
+  const notices: Problem[] = [];
+  if (has("scale variation") && has("truncation"))
+    notices.push({ code: "scale-variation-and-truncation", path: ["sources"], facts: {} });
+  const kindsOf = (group: string) =>
+    new Set(read.filter((one) => one.group === group && one.size !== 0).map(({ row }) => row.kind));
+  const across = [...new Set(read.map(({ group }) => group))].filter(
+    (group) => group !== "" && coefficientOf(group) !== 0 && kindsOf(group).size > 1,
+  );
+  if (across.length > 0)
+    notices.push({
+      code: "budget-kinds-correlated",
+      path: ["sources"],
+      facts: { groups: across.join(", ") },
+    });
+  return notices;
 }
 
 function scalarsOf(value: BudgetValue): Scalar[] {

@@ -55,17 +55,26 @@ function refuse(reading: Reading, path: InputPath, code: string, facts: Problem[
 function typed(text: string, path: InputPath, reading: Reading): number | null {
   const plain = plainNumber(text);
   if (plain !== null) return plain;
-  // A unit that is no energy or length is known by its name only.
-  const split = /^\s*([-+−]?[\d.]+(?:[eE][-+]?\d+)?)\s*(\D.*)$/.exec(text);
-  const unit = readUnit(split?.[2] ?? "");
-  if (split && !unit.known)
-    return inUnit(plainNumber(split[1] ?? "") ?? Number.NaN, unit, path, reading, text);
   const read = readQuantity(text, nothing, path.join("/"));
-  if (!read.ok) return refuse(reading, path, "size-unreadable", { text });
+  if (!read.ok) return namedUnit(text, path, reading);
   const { quantity } = read.value;
-  if (sigmaOf(quantity) > 0) return refuse(reading, path, "size-uncertain-itself", { text });
+  if (sigmaOf(quantity) > 0)
+    return refuse(reading, path, path[0] === "value" ? "budget-value-uncertain" : "size-uncertain-itself", {
+      text,
+    });
   const written = readUnit(unitWritten(text));
+  // A ratio of energies is a number; one of an energy to an inverse length is so by ħ = c = 1 only.
+  if (quantity.energy.sign() === 0 && !(written.known && written.family === "mixed" && !reading.natural))
+    return inUnit(quantity.value, { known: false, text: "" }, path, reading, text);
   return inUnit(written.known ? quantity.value / written.size : quantity.value, written, path, reading, text);
+}
+
+/** A unit that is no energy or length is known by its name only: "0.2 pb". */
+function namedUnit(text: string, path: InputPath, reading: Reading): number | null {
+  const [, number = "", unit = ""] = /^\s*([-+−]?[\d.]+(?:[eE][-+]?\d+)?)\s*(\p{L}.*)$/u.exec(text) ?? [];
+  const value = plainNumber(number);
+  if (value === null) return refuse(reading, path, "size-unreadable", { text });
+  return inUnit(value, readUnit(unit), path, reading, text);
 }
 
 /** What stands after the number: "MeV" of "3.2e2 MeV". */

@@ -7,7 +7,7 @@ import type { DataValue } from "./value.ts";
 /** Problems: `data-empty`, and those of columns and values, which are then left out. */
 export function evaluateData(inputs: DataInputs): Evaluation<DataValue> {
   const problems: Problem[] = [];
-  const value = readTable(inputs, problems);
+  const { value, isCut } = readTable(inputs, problems);
   if (value.columns.length === 0 || value.rows.length === 0)
     return {
       value: null,
@@ -17,13 +17,12 @@ export function evaluateData(inputs: DataInputs): Evaluation<DataValue> {
       working: [],
     };
   const x = value.columns.findIndex(({ role }) => role === "x");
-  const full = value.rows.length >= MOST_LINES;
   return {
     value,
     problems,
     notices: [
       ...(x < 0 ? [{ code: "data-without-x", path: ["columns"], facts: {} }] : []),
-      ...(full ? [{ code: "data-cut", path: ["lines"], facts: { most: MOST_LINES } }] : []),
+      ...(isCut ? [{ code: "data-cut", path: ["lines"], facts: { most: MOST_LINES } }] : []),
     ],
     scalars: scalarsOf(value, x),
     working: workingOf(value, x),

@@ -10,14 +10,21 @@ const decimal = /^[-+−]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][-+]?\d+)?$/;
 /** What people write where there is nothing. */
 const nothing = /^(?:|-|–|—|\.|n\/a|nan)$/i;
 
-export function readTable(inputs: DataInputs, problems: Problem[]): DataValue {
+/** `isCut` when there are more lines than are read. */
+export function readTable(
+  inputs: DataInputs,
+  problems: Problem[],
+): { readonly value: DataValue; readonly isCut: boolean } {
   const columns = inputs.columns.map((row) => readColumn(row, problems));
   complainOfRoles(columns, problems);
   const rows: (readonly (string | null)[])[] = [];
   const complaints: Problem[] = [];
+  let isCut = false;
   for (const { id, values } of inputs.lines) {
     for (const line of values.split("\n")) {
-      if (line.trim() === "" || rows.length >= MOST_LINES) continue;
+      if (line.trim() === "") continue;
+      isCut ||= rows.length >= MOST_LINES;
+      if (isCut) break;
       rows.push(readLine(line, columns, rows.length + 1, id, complaints));
     }
   }
@@ -28,7 +35,7 @@ export function readTable(inputs: DataInputs, problems: Problem[]): DataValue {
       path: ["lines"],
       facts: { count: complaints.length - MOST_COMPLAINTS },
     });
-  return { columns, rows };
+  return { value: { columns, rows }, isCut };
 }
 
 function readColumn(row: DataInputs["columns"][number], problems: Problem[]): DataColumn {

@@ -1,6 +1,6 @@
 import { cleanup, screen, waitFor, within } from "@testing-library/react";
 import { afterEach, describe, expect, it } from "vitest";
-import { guessRoles, packLines, readFile } from "../../../client/blocks/data/read-file.ts";
+import { guessRoles, packLines, readFile, whyTooLarge } from "../../../client/blocks/data/read-file.ts";
 import { documentOf, personAtForms, type PersonAtForms } from "./people-at-forms.tsx";
 
 let wren: PersonAtForms | null = null;
@@ -35,8 +35,13 @@ describe("a file of values", () => {
       [4, 2],
     ]);
   });
+  it("counts lines as the file does, empty ones and those inside quotation marks too", () => {
+    expect(file('"p\n(fm)",LO\n\n1,2\n\n3,four\n').faults.map(({ line }) => line)).toEqual([6]);
+  });
   it.each([
     ["", /header/],
+    ["p,LO\n1,\uFFFD\n", /UTF-8/],
+    ["p,LO\n1,2\u0000\n", /UTF-8/],
     ["p,LO\n", /header/],
     ["1,2\n3,4\n", /name the columns/],
     ['p,LO\n"1,2\n', /quotation mark/],
@@ -62,10 +67,30 @@ describe("a file of values", () => {
     expect(Math.max(...rows.map((row) => row.length))).toBeLessThanOrEqual(4_000);
     expect(rows.join("\n").split("\n")).toHaveLength(20_000);
     expect(packLines(lines.slice(0, 3))).toHaveLength(3);
+    expect(whyTooLarge(rows)).toBeNull();
+  });
+  // The server takes changes of at most 4 MB, and a block's inputs have at most 2,000 rows of 4,000 characters.
+  it.each([
+    [Array.from({ length: 20_000 }, () => Array<string>(40).fill("1.2345678")), /take 8\.8 MB/],
+    [Array.from({ length: 500 }, () => Array<string>(40).fill(`1.${"2".repeat(120)}`)), /4000 characters/],
+  ])("is refused in words where it does not: %#", (lines, words) => {
+    expect(whyTooLarge(packLines(lines))).toMatch(words);
   });
 });
 
 describe("reading in a table", () => {
+  it("takes no line whose values cannot be told apart, whatever columns are left out", async () => {
+    wren = personAtForms("Wren", 10, documentOf([{ type: "data", attrs: { blockId: "d" } }]), ["d"]);
+    const { user } = wren;
+    await user.click(await screen.findByRole("button", { name: "read in a table" }));
+    const dialog = await screen.findByRole("dialog", { name: "Read in a table" });
+    await user.click(within(dialog).getByLabelText("or paste it here"));
+    await user.paste("p,LO,NLO\n1,2,3\n4");
+    await user.selectOptions(within(dialog).getByLabelText("role of LO"), "leave out");
+    expect(within(dialog).getByRole("alert").textContent).toContain("Line 3 has 1 values");
+    const readIn = within(dialog).getByRole("button", { name: "Read it in" });
+    expect(readIn.hasAttribute("disabled")).toBe(true);
+  });
   it("shows it first, takes nothing by halves, and replaces the table in one step", async () => {
     wren = personAtForms("Wren", 10, documentOf([{ type: "data", attrs: { blockId: "d" } }]), ["d"]);
     const { user, world } = wren;

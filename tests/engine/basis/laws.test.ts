@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { standardModel } from "#engine/basis/contents.ts";
-import { cycleTypes, factorial } from "#engine/basis/cycle-types.ts";
+import { cycleTypes, factorial, partitionNumber } from "#engine/basis/cycle-types.ts";
 import { GaugeIntegral } from "#engine/basis/gauge-integral.ts";
 import { OrthogonalIntegral, symmetricCharacter } from "#engine/basis/orthogonal-integral.ts";
 import { conjugate, readRepresentation, type Representation } from "#engine/basis/representations.ts";
@@ -147,6 +147,12 @@ describe("group integrals", () => {
   });
 });
 
+describe("cycle types", () => {
+  it("are as many as Euler's recurrence says", () => {
+    for (let n = 0; n <= 20; n++) expect(partitionNumber(n)).toBe(cycleTypes(n).length);
+  });
+});
+
 describe("a count", () => {
   it("without fermions is that at n_f = 0", () => {
     const bosons = standardModel.fields.filter(({ flavours }) => flavours === "1");
@@ -247,8 +253,34 @@ describe("a count is refused", () => {
     ],
     [{ fields: [field("phi", "real scalar", "", "0")] }, "flavours-unreadable"],
     [{ ...standardModel, to: "17" }, "count-takes-long"],
+    // Few field contents, but of up to 48 quanta with 147 273 cycle types.
+    [{ ...scalar, d: "3", from: "4", to: "24" }, "count-takes-long"],
+    [{ ...scalar, d: "6", from: "7", to: "30" }, "count-takes-long"],
+    [
+      {
+        ...scalar,
+        d: "3",
+        from: "4",
+        to: "30",
+        patience: "however long it takes",
+      },
+      "count-too-large",
+    ],
   ])("%j: %s", (inputs, code) => {
     expect(codes(inputs)).toContain(code);
+  });
+
+  it("rather than given for another theory, when a group or a field cannot be read", () => {
+    const fields = [field("Q", "left-handed spinor", "3"), field("u", "right-handed spinor", "3")];
+    expect(evaluate({ groups: [group("c", "SU(3)")], fields, to: "6" }).value).not.toBeNull();
+    for (const inputs of [
+      { groups: [group("c", "SU(12)")], fields },
+      { groups: [group("c", "SU(3)")], fields: [...fields, field("S", "complex scalar", "7")] },
+      { groups: [group("c", "SU(3)"), group("Y", "U(1)", "some")], fields },
+    ]) {
+      const { value, scalars, problems } = evaluate({ ...inputs, to: "6" });
+      expect([value, scalars, problems.length]).toEqual([null, [], 1]);
+    }
   });
 
   it("not, but a reader is warned, when fermions are anomalous or everything vanishes", () => {

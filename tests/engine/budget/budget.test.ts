@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { linearSum, variance } from "#engine/budget/combine.ts";
+import { contradictoryGroups, linearSum, variance } from "#engine/budget/combine.ts";
 import { budgetShape, type BudgetInputs } from "#engine/budget/inputs.ts";
 import { errorBudget } from "#engine/budget/kind.ts";
 import { resultText } from "#engine/budget/result-text.ts";
@@ -58,6 +58,36 @@ describe("errors combined", () => {
     expect(pair("1", "-4")).toBeCloseTo(1, 12);
     expect(pair("0.5")).toBeCloseTo(Math.sqrt(37), 11);
   });
+  // Eigenvalue 1 + (n - 1) r of a matrix with one coefficient everywhere; own derivation.
+  it.each([
+    [2, -1, false],
+    [3, -0.5, false],
+    [3, -0.51, true],
+    [4, -0.3333, false],
+    [4, -0.4, true],
+  ])("%d of one group with coefficient %d contradict each other: %s", (count, r, contradict) => {
+    const list = Array.from({ length: count }, (_, index) => ({ size: index === 0 ? 10 : 1, group: "g" }));
+    expect(contradictoryGroups(list, () => r).length > 0).toBe(contradict);
+  });
+  it("are refused when they contradict each other, also beside a large error", () => {
+    const sources = ["a", "b", "c"].map((name) =>
+      source(name, name === "a" ? "10" : "1", { group: "g", kind: "numerical" }),
+    );
+    const correlations = [{ id: "c", group: "g", coefficient: "-0.9" }];
+    expect(codes({ sources: [...sources, source("d", "50")], correlations })).toContain(
+      "correlations-contradict",
+    );
+  });
+  it("of several kinds that move together are said not to add up from their brackets", () => {
+    const sources = [
+      source("a", "1", { group: "g", kind: "numerical" }),
+      source("b", "1", { group: "g", kind: "parametric" }),
+    ];
+    const free = [{ id: "c", group: "g", coefficient: "0" }];
+    expect(codes({ value: "5", sources })).toEqual(["budget-kinds-correlated"]);
+    expect(codes({ value: "5", sources, correlations: free })).toEqual([]);
+    expect(codes({ value: "5", sources, combine: "linearly" })).toEqual([]);
+  });
   it("linearly are never less than otherwise, and never more than their sizes", () => {
     const contribution = fc.record({
       size: fc.double({ min: -10, max: 10, noNaN: true }),
@@ -90,6 +120,12 @@ describe("units", () => {
     expect(total({ unit: "pb", sources: [source("a", "0.2 pb"), source("b", "0")] })).toBeCloseTo(0.2, 12);
   });
   // ħc = 197.326 980 459 3… MeV fm, exact as a product in the SI of 2019 (CODATA 2022).
+  it("of a ratio cancel, an energy times a length by ħc on request only", () => {
+    expect(total({ sources: [source("a", "35 GeV / 3.5 TeV")] })).toBeCloseTo(0.01, 12);
+    const inputs = { sources: [source("a", "1 MeV * 1 fm")] };
+    expect(codes(inputs)).toContain("budget-units-differ");
+    expect(total({ ...inputs, convert: "natural units, ħ = c = 1" })).toBeCloseTo(1 / 197.3269804593, 12);
+  });
   it("of the other family by ħc, on request only", () => {
     const inputs = { unit: "MeV", sources: [source("a", "1 fm^-1")] };
     expect(codes(inputs)).toContain("budget-needs-conversion");
@@ -103,6 +139,8 @@ describe("units", () => {
     [{ unit: "pb", sources: [source("a", "1 mb")] }, "budget-units-differ"],
     [{ unit: "MeV", sources: [source("a", "about 3")] }, "size-unreadable"],
     [{ unit: "MeV", sources: [source("a", "3.2(4) MeV")] }, "size-uncertain-itself"],
+    [{ unit: "pb", sources: [source("a", "3.2(4) pb")] }, "size-unreadable"],
+    [{ value: "5.0(1)", sources: [source("a", "1")] }, "budget-value-uncertain"],
     [{ sources: [source("a", "3 %")] }, "percent-of-nothing"],
     [{ sources: [source("a", "")] }, "size-missing"],
     [{}, "budget-empty"],
@@ -164,6 +202,14 @@ describe("the result in words", () => {
     [1234, [56, 7], "MeV", "1234(56)(7) MeV"],
     [12345, [560], "", "12350(560)"],
     [0.00012346, [0.0000021], "", "0.0001235(21)"],
+    [3, [0.1, 0], "", "3.00(10)(0)"],
+    [1, [0.0996], "", "1.00(10)"],
+    // A small error beside a large one keeps its digit; one too small for that is not called none.
+    [1.23, [0.5, 0.002], "", "1.230(500)(2)"],
+    [1.23, [0.5, 0.000001], "", "1.23000(50000)(<1)"],
+    [150000, [12345, 300], "MeV", "150000(12300)(300) MeV"],
+    [2.2e-20, [1e-22, 4e-22], "", "2.200(10)(40) × 10⁻²⁰"],
+    [-1.234e25, [1e23, 2e23], "", "−1.234(10)(20) × 10²⁵"],
     [null, [0.3, 0.4], "pb", "± 0.3 ± 0.4 pb"],
   ])("%d with %j %s: %s", (value, errors, unit, text) => {
     expect(resultText(value, errors, unit)).toBe(text);

@@ -64,6 +64,13 @@ describe("a table of data", () => {
     expect(problems.at(-1)).toMatchObject({ code: "data-more-unreadable", facts: { count: 180 } });
     expect(problems).toHaveLength(21);
   });
+  it.each([
+    [20_000, []],
+    [20_001, ["data-cut"]],
+  ])("says so when lines are left out: of %d", (count, codes) => {
+    const all = Array.from({ length: count }, (_, index) => `${index}; 1`).join("\n");
+    expect(evaluateData(table(usual, all)).notices.map(({ code }) => code)).toEqual(codes);
+  });
   it("has its extent in x as numbers to pin", () => {
     const { scalars } = evaluateData(table(usual, "60; 1", "20; 2", "; 3"));
     expect(scalars.map(({ id, value }) => [id, value.type === "number" ? value.value : value.text])).toEqual([
