@@ -4,7 +4,7 @@ import { Formula } from "../../ui/math.tsx";
 import type { ResultProps } from "../block-parts.ts";
 import { Figure } from "../parts/figure.tsx";
 import { ResultTable } from "../parts/result-table.tsx";
-import { contentLatex } from "./class-export.ts";
+import { classesAsCsv, classesAsLatex, contentLatex } from "./class-export.ts";
 import { orders, searchClasses, sortClasses, type ClassOrder } from "./class-list.ts";
 
 /** Totals by dimension; below them every field content, to be searched and sorted. */
@@ -140,10 +140,7 @@ function ClassTable({ value }: { readonly value: BasisValue }) {
 /** All of them, however many are shown. */
 function Downloads({ value }: { readonly value: BasisValue }) {
   async function save(format: "CSV" | "LaTeX") {
-    const [{ classesAsCsv, classesAsLatex }, { download }] = await Promise.all([
-      import("./class-export.ts"),
-      import("../../ui/download.ts"),
-    ]);
+    const { download } = await import("../../ui/download.ts");
     if (format === "CSV") download("operators.csv", "text/csv", classesAsCsv(value));
     else download("operators.tex", "application/x-tex", classesAsLatex(value));
   }
