@@ -4,7 +4,7 @@
  */
 
 /** Bumped whenever any result, scalar or working could change for the same inputs. */
-export const ENGINE_VERSION = "2";
+export const ENGINE_VERSION = "3";
 
 /** Where in a block's inputs: a field name, or table, row id and column. */
 export type InputPath = readonly string[];

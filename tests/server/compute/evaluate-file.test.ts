@@ -68,7 +68,7 @@ describe("a file of blocks that can be read", () => {
     );
     if (!outcome.ok) throw new Error("expected results");
     const { results, ...about } = outcome.results;
-    expect(about).toEqual({ format: "subleading-results/1", engineVersion: "2" });
+    expect(about).toEqual({ format: "subleading-results/1", engineVersion: "3" });
     expect(results.map(({ id, kind, messages }) => ({ id, kind, messages }))).toEqual([
       { id: "rate", kind: "truncationError", messages: [] },
       {
