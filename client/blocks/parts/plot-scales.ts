@@ -6,9 +6,12 @@ export interface AxisSpec {
   readonly label: string;
   readonly kind: "linear" | "log";
   readonly domain: readonly [number, number];
+  /** Places with names, for an axis of things rather than numbers. */
+  readonly ticks?: readonly { readonly value: number; readonly label: string }[];
 }
 
 export interface Axis {
+  readonly kind: AxisSpec["kind"];
   readonly position: (value: number) => number;
   readonly ticks: readonly { readonly value: number; readonly label: string; readonly major: boolean }[];
   readonly domain: readonly [number, number];
@@ -20,13 +23,16 @@ export function axisOf(spec: AxisSpec, range: readonly [number, number], count: 
     const scale = scaleLinear([...spec.domain], [...range]);
     const format = scale.tickFormat(count);
     return {
+      kind: "linear",
       position: scale,
       domain: spec.domain,
-      ticks: scale.ticks(count).map((value) => ({ value, label: minus(format(value)), major: true })),
+      ticks: spec.ticks
+        ? spec.ticks.map((tick) => ({ ...tick, major: false }))
+        : scale.ticks(count).map((value) => ({ value, label: minus(format(value)), major: true })),
     };
   }
   const scale = scaleLog([...spec.domain], [...range]);
-  return { position: scale, domain: spec.domain, ticks: logTicks(spec.domain, count) };
+  return { kind: "log", position: scale, domain: spec.domain, ticks: logTicks(spec.domain, count) };
 }
 
 function logTicks([low, high]: readonly [number, number], count: number): Axis["ticks"] {

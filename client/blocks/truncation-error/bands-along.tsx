@@ -1,8 +1,7 @@
 import type { BandAlong, CurveValue } from "#engine/truncation/curve-value.ts";
 import type { Band } from "#engine/truncation/value.ts";
-import type { Axis } from "../parts/plot-scales.ts";
-import { Plot } from "../parts/plot.tsx";
-import { axisLabel, pointsOf, rangeOf, ribbonPath, spanOf } from "./plot-shapes.ts";
+import { Plot, type Curve } from "../parts/plot.tsx";
+import { axisLabel, pointsOf, rangeOf, spanOf } from "./plot-shapes.ts";
 
 interface Props {
   readonly curve: CurveValue;
@@ -37,28 +36,24 @@ export function BandsAlong({ curve, highlighted, unit }: Props) {
         label: unit,
         domain: rangeOf([...reach, ...others, ...measured.map(({ value }) => value)]),
       }}
-      curves={shown.map(({ order, values }, index) => ({
-        key: String(order),
-        label: `n = ${order}`,
-        points: pointsOf(x, values),
-        style: shown.length - 1 - index,
-        color: order === last.order ? "ink" : "irrelevant",
-      }))}
+      curves={[
+        ...shown.map(({ order, values }, index) => ({
+          key: String(order),
+          label: `n = ${order}`,
+          points: pointsOf(x, values),
+          style: shown.length - 1 - index,
+          color: order === last.order ? ("ink" as const) : ("irrelevant" as const),
+        })),
+        ...measuredCurve(measured),
+      ]}
       guides={[{ axis: "x", value: curve.at, label: "", color: "tick" }]}
-      below={(xAxis, yAxis) => (
-        <>
-          {[...drawn].reverse().map((band, index) => (
-            <path
-              key={band.degree ?? ""}
-              className={
-                index === drawn.length - 1 && drawn.length > 1 ? "truncation-band-inner" : "plot-band-outer"
-              }
-              d={ribbonPath(ribbonOf(band, x, last.values), xAxis, yAxis)}
-            />
-          ))}
-          <Measured measured={measured} x={xAxis} y={yAxis} />
-        </>
-      )}
+      bands={[...drawn].reverse().map((band, index) => ({
+        key: band.degree ?? "band",
+        label: band.degree === null ? "band" : `${band.degree} %`,
+        of: String(last.order),
+        points: ribbonOf(band, x, last.values),
+        tone: index === drawn.length - 1 && drawn.length > 1 ? "inner" : "outer",
+      }))}
       table={{ x: axisLabel(curve.variable, curve.xUnit) }}
     />
   );
@@ -71,26 +66,19 @@ function ribbonOf({ halfWidths }: BandAlong, x: readonly number[], values: reado
   });
 }
 
-function Measured({
-  measured,
-  x,
-  y,
-}: {
-  readonly measured: CurveValue["measured"];
-  readonly x: Axis;
-  readonly y: Axis;
-}) {
-  return measured.map(({ x: at, value, error }) => (
-    <g key={at} className="truncation-measured">
-      {error !== null && (
-        <line
-          x1={x.position(at)}
-          x2={x.position(at)}
-          y1={y.position(value - error)}
-          y2={y.position(value + error)}
-        />
-      )}
-      <circle cx={x.position(at)} cy={y.position(value)} r={1.8} />
-    </g>
-  ));
+/** What was measured, as marks with their errors. */
+function measuredCurve(measured: CurveValue["measured"]): Curve[] {
+  if (measured.length === 0) return [];
+  const hasErrors = measured.some(({ error }) => error !== null);
+  return [
+    {
+      key: "measured",
+      label: "measured",
+      points: measured.map(({ x, value }) => [x, value] as const),
+      ...(hasErrors ? { errors: measured.map(({ error }) => error) } : {}),
+      style: 3,
+      color: "relevant",
+      draw: "marks",
+    },
+  ];
 }

@@ -1,6 +1,6 @@
 import type { CurveValue } from "#engine/truncation/curve-value.ts";
 import { Plot } from "../parts/plot.tsx";
-import { axisLabel, pointsOf, rangeOf, ribbonPath, spanOf } from "./plot-shapes.ts";
+import { axisLabel, pointsOf, rangeOf, spanOf } from "./plot-shapes.ts";
 
 /** c_n along x for the coefficients that are used, with one and two standard deviations around 0. */
 export function CoefficientsAlong({ curve }: { readonly curve: CurveValue }) {
@@ -27,12 +27,10 @@ export function CoefficientsAlong({ curve }: { readonly curve: CurveValue }) {
         style: index,
         color: "ink",
       }))}
-      below={(xAxis, yAxis) => (
-        <>
-          <path className="plot-band-outer" d={ribbonPath(band(2 * sigma), xAxis, yAxis)} />
-          <path className="plot-band-outer" d={ribbonPath(band(sigma), xAxis, yAxis)} />
-        </>
-      )}
+      bands={[
+        { key: "2", label: "±2σ", points: band(2 * sigma), tone: "outer" },
+        { key: "1", label: "±1σ", points: band(sigma), tone: "outer" },
+      ]}
       table={{ x: axisLabel(curve.variable, curve.xUnit) }}
     />
   );

@@ -1,6 +1,5 @@
 import type { CorrelatedValue } from "#engine/truncation/curve-value.ts";
 import { Plot } from "../parts/plot.tsx";
-import { ribbonPath } from "./plot-shapes.ts";
 
 /** How many of the next shifts lie in the intervals stated, by degree of belief, with the band of the last order. */
 export function CoverageFigure({ checks }: { readonly checks: CorrelatedValue["checks"] }) {
@@ -19,27 +18,26 @@ export function CoverageFigure({ checks }: { readonly checks: CorrelatedValue["c
         style: index,
         color: "ink",
       }))}
+      bands={[
+        {
+          key: "expected",
+          label: `expected of n = ${last.next} at 95 %`,
+          of: String(last.next),
+          points: beliefs.map((belief, at) => {
+            const [low = 0, high = 1] = last.expected[at] ?? [];
+            return { x: belief, low, high };
+          }),
+          tone: "outer",
+        },
+      ]}
       below={(x, y) => (
-        <>
-          <path
-            className="plot-band-outer"
-            d={ribbonPath(
-              beliefs.map((belief, at) => {
-                const [low = 0, high = 1] = last.expected[at] ?? [];
-                return { x: belief, low, high };
-              }),
-              x,
-              y,
-            )}
-          />
-          <line
-            className="plot-axis"
-            x1={x.position(0)}
-            y1={y.position(0)}
-            x2={x.position(1)}
-            y2={y.position(1)}
-          />
-        </>
+        <line
+          className="plot-axis"
+          x1={x.position(0)}
+          y1={y.position(0)}
+          x2={x.position(1)}
+          y2={y.position(1)}
+        />
       )}
       table={{ x: "degree of belief" }}
     />

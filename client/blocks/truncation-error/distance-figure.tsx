@@ -1,6 +1,5 @@
 import type { CorrelatedValue } from "#engine/truncation/curve-value.ts";
 import { Plot } from "../parts/plot.tsx";
-import { ribbonPath } from "./plot-shapes.ts";
 
 /** The squared Mahalanobis distance of each order, over the range in which 95 % of them lie. */
 export function DistanceFigure({ checks }: { readonly checks: CorrelatedValue["checks"] }) {
@@ -21,29 +20,25 @@ export function DistanceFigure({ checks }: { readonly checks: CorrelatedValue["c
         label: "squared distance, and where 95 % lie",
         domain: [Math.min(...all) / 1.3, Math.max(...all) * 1.3],
       }}
-      curves={orders.map(({ order, distance }) => ({
-        key: String(order),
-        label: "",
-        points: [[order, distance] as const],
-        style: 0,
-        color: "ink",
-      }))}
-      below={(x, y) =>
-        orders.map(({ order, expected: [low, high] }) => (
-          <path
-            key={order}
-            className="plot-band-outer"
-            d={ribbonPath(
-              [
-                { x: order - 0.25, low, high },
-                { x: order + 0.25, low, high },
-              ],
-              x,
-              y,
-            )}
-          />
-        ))
-      }
+      curves={[
+        {
+          key: "distance",
+          label: "",
+          points: orders.map(({ order, distance }) => [order, distance] as const),
+          style: 0,
+          color: "ink",
+          draw: "marks",
+        },
+      ]}
+      bands={[
+        {
+          key: "expected",
+          label: "95 %",
+          points: orders.map(({ order, expected: [low, high] }) => ({ x: order, low, high })),
+          tone: "outer",
+          box: 0.25,
+        },
+      ]}
       table={{ x: "order n" }}
     />
   );

@@ -23,6 +23,7 @@ export function PivotedFigure({ checks }: { readonly checks: CorrelatedValue["ch
         points: pivoted.map((error, at) => [at + 1, error] as const),
         style: index,
         color: "ink",
+        draw: "marks" as const,
       }))}
       guides={[
         { axis: "y", value: limit, label: "95 %", color: "relevant" },

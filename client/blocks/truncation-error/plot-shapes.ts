@@ -1,6 +1,5 @@
-/** Points and filled shapes for the plots along x. */
+/** Points, ranges and labels for the plots along x. */
 import { plainLatex } from "../parts/plain-latex.ts";
-import type { Axis } from "../parts/plot-scales.ts";
 
 /** The points that have a value. */
 export function pointsOf(
@@ -11,30 +10,6 @@ export function pointsOf(
     const value = values[index] ?? null;
     return value === null ? [] : [[at, value] as const];
   });
-}
-
-export interface Ribbon {
-  readonly x: number;
-  readonly low: number;
-  readonly high: number;
-}
-
-/** The outline of a band, in pieces where it is interrupted. */
-export function ribbonPath(ribbon: readonly (Ribbon | null)[], x: Axis, y: Axis): string {
-  const pieces: Ribbon[][] = [[]];
-  for (const at of ribbon) {
-    if (at) pieces.at(-1)?.push(at);
-    else pieces.push([]);
-  }
-  const point = (at: number, value: number) => `${x.position(at).toFixed(1)},${y.position(value).toFixed(1)}`;
-  return pieces
-    .filter((piece) => piece.length > 0)
-    .map((piece) => {
-      const there = piece.map(({ x: at, high }) => point(at, high));
-      const back = [...piece].reverse().map(({ x: at, low }) => point(at, low));
-      return `M${[...there, ...back].join("L")}Z`;
-    })
-    .join("");
 }
 
 /** From the least to the largest of some values, with a little room around. */

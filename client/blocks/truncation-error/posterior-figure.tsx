@@ -1,7 +1,7 @@
 import type { DrawnDensity } from "#engine/truncation/curve-value.ts";
 import { plain } from "../parts/plot-scales.ts";
 import { Plot, type Guide } from "../parts/plot.tsx";
-import { axisLabel, ribbonPath } from "./plot-shapes.ts";
+import { axisLabel } from "./plot-shapes.ts";
 
 interface Props {
   readonly symbol: string;
@@ -58,19 +58,20 @@ export function PosteriorFigure({ symbol, density, stated, alone = [] }: Props) 
         })),
       ]}
       guides={guides}
-      below={(x, y) =>
-        widest && (
-          <path
-            className="plot-band-outer"
-            d={ribbonPath(
-              grid.flatMap((at, index) =>
-                at >= widest.low && at <= widest.high ? [{ x: at, low: 0, high: heights[index] ?? 0 }] : [],
-              ),
-              x,
-              y,
-            )}
-          />
-        )
+      bands={
+        widest
+          ? [
+              {
+                key: "interval",
+                label: `within ${widest.degree} %`,
+                of: "joint",
+                points: grid.map((at, index) =>
+                  at >= widest.low && at <= widest.high ? { x: at, low: 0, high: heights[index] ?? 0 } : null,
+                ),
+                tone: "outer",
+              },
+            ]
+          : []
       }
       table={{ x: label }}
     />

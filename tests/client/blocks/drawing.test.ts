@@ -3,7 +3,7 @@ import { describe, expect, it } from "vitest";
 import { splitDecimal } from "../../../client/blocks/parts/decimal.tsx";
 import { textTo } from "../../../client/blocks/parts/number-text.ts";
 import { axisOf, plain, powerOf } from "../../../client/blocks/parts/plot-scales.ts";
-import { spread } from "../../../client/blocks/parts/plot.tsx";
+import { spread } from "../../../client/blocks/parts/plot-axes.tsx";
 import { workingAsLatex } from "../../../client/blocks/parts/working.tsx";
 import { plainLatex } from "../../../client/blocks/parts/plain-latex.ts";
 
