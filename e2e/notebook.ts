@@ -1,12 +1,8 @@
 /** What people do in a notebook, in the words that they see. */
 import { expect, type Locator, type Page } from "playwright/test";
 
-/** From the shelf, in the dialog. Returns the notebook's address. */
-export async function makeNotebook(
-  page: Page,
-  title: string,
-  begin: "A blank page" | "A copy of the Lantern demonstration" = "A blank page",
-): Promise<string> {
+/** From the shelf, in the dialog; `begin` is what the dialog offers to begin with. Returns the notebook's address. */
+export async function makeNotebook(page: Page, title: string, begin = "A blank page"): Promise<string> {
   await page.getByRole("button", { name: "New notebook" }).first().click();
   const dialog = page.getByRole("dialog", { name: "New notebook" });
   await dialog.getByLabel("Title").fill(title);
@@ -82,7 +78,15 @@ export async function typeAtEnd(page: Page, text: string, pauseMs = 0): Promise<
   await page.keyboard.type(text, { delay: pauseMs });
 }
 
-export type Kind = "Premises" | "Scaling" | "Divergence" | "Order plan" | "Truncation error";
+export type Kind =
+  | "Premises"
+  | "Scaling"
+  | "Divergence"
+  | "Order plan"
+  | "Truncation error"
+  | "Basis count"
+  | "Data"
+  | "Error budget";
 
 /** The index of what can be placed, by keyboard only, from a caret in the prose. */
 export async function placeByKeyboard(page: Page, name: string): Promise<void> {
@@ -168,6 +172,12 @@ export async function revokeRefereeLink(page: Page, notebook: string, name: stri
   await page.getByRole("button", { name: `Revoke the link “${name}”` }).click();
   await page.getByRole("dialog").getByRole("button", { name: "Revoke the link" }).click();
   await expect(page.getByText(`“${name}” no longer opens anything.`)).toBeVisible();
+}
+
+/** From any page, by the name in its header. */
+export async function goToShelf(page: Page): Promise<void> {
+  await page.getByRole("link", { name: "Subleading" }).click();
+  await expect(page.getByRole("heading", { name: /shelf/i })).toBeVisible();
 }
 
 /** The id in a notebook's address. */

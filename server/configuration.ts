@@ -23,6 +23,8 @@ export interface Configuration {
   /** Null: letters stay in the queue. */
   readonly smtpUrl: string | null;
   readonly mailFrom: string;
+  /** Whether the shelf of someone new begins with copies of the demonstrations. */
+  readonly welcomesWithDemonstrations: boolean;
   /** Set when sign-in and mail are local stand-ins; the interface then says so. */
   readonly demonstration: { readonly mailboxUrl: string | null } | null;
   /** How many proxies in front may be believed about the client's address and TLS. */
@@ -95,6 +97,7 @@ const environmentSchema = z.object({
     .regex(/^[^\r\n]+$/, "MAIL_FROM must be one line.")
     .default("Subleading <subleading@localhost>"),
   DEMONSTRATION: z.enum(["yes", "no"], "DEMONSTRATION must be yes or no.").default("no"),
+  WELCOME_NOTEBOOKS: z.enum(["yes", "no"], "WELCOME_NOTEBOOKS must be yes or no.").default("yes"),
   MAILBOX_URL: webAddress("MAILBOX_URL must be an http:// or https:// address.").optional(),
   TRUSTED_PROXIES: whole(
     "TRUSTED_PROXIES must be the number of proxies in front of the server.",
@@ -162,6 +165,7 @@ export function readConfiguration(
     },
     smtpUrl: variables.SMTP_URL ?? null,
     mailFrom: variables.MAIL_FROM,
+    welcomesWithDemonstrations: variables.WELCOME_NOTEBOOKS === "yes",
     demonstration: variables.DEMONSTRATION === "yes" ? { mailboxUrl: variables.MAILBOX_URL ?? null } : null,
     // This server speaks plain HTTP, so an https address means that one proxy ends TLS in front of it.
     trustedProxies: variables.TRUSTED_PROXIES ?? (publicUrl?.startsWith("https:") ? 1 : 0),

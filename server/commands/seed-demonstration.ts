@@ -14,26 +14,32 @@ const waitingNotebooks = [
   { title: TERN_TITLE, template: "tern" },
   { title: LANTERN_TITLE, template: "lantern" },
 ] as const;
-const SEEDED = "demonstration-seeded";
+/** The event that marks a seeded notebook. */
+export const DEMONSTRATION_SEEDED = "demonstration-seeded";
 
 /** Does nothing when it has been done before, also when people have since deleted the notebooks. */
 export function seedDemonstration(database: Database): Promise<void> {
   return database.transaction(async (transaction) => {
     await transaction.raw("lock table notebooks in share row exclusive mode");
     const before = await firstRow(transaction, "select 1 as found from events where what = ? limit 1", [
-      SEEDED,
+      DEMONSTRATION_SEEDED,
     ]);
     if (before !== undefined) return;
     for (const { title, template } of waitingNotebooks) {
       const [made] = await transaction("notebooks")
-        .insert({ title, schema_version: SCHEMA_VERSION })
+        // The transaction's own time would be the same for both, and the shelf sorts by it.
+        .insert({
+          title,
+          schema_version: SCHEMA_VERSION,
+          changed_at: transaction.raw("clock_timestamp()"),
+        })
         .returning<{ id: string }[]>("id");
       if (made === undefined) throw new Error("PostgreSQL inserted a notebook and returned none.");
       await transaction("invitations").insert(
         waitingFor.map((person) => ({ notebook_id: made.id, ...person })),
       );
       await seedNotebook(transaction, made.id, template);
-      await recordEvent(transaction, { personId: null, notebookId: made.id, what: SEEDED });
+      await recordEvent(transaction, { personId: null, notebookId: made.id, what: DEMONSTRATION_SEEDED });
     }
   });
 }

@@ -29,8 +29,13 @@ async function freeLogin(transaction: Queryable, login: string, personId: string
   );
 }
 
-/** The person's id. */
-export async function signInPerson(database: Database, account: Account): Promise<string> {
+export interface SignedIn {
+  readonly personId: string;
+  /** Whether this is the first time. */
+  readonly isNew: boolean;
+}
+
+export async function signInPerson(database: Database, account: Account): Promise<SignedIn> {
   return database.transaction(async (transaction) => {
     await lockAccount(transaction, account);
     const known = await firstRow<{ person_id: string }>(
@@ -60,6 +65,6 @@ export async function signInPerson(database: Database, account: Account): Promis
     }
     await claimInvitations(transaction, { ...account, id: personId });
     await recordEvent(transaction, { personId, what: "signed-in" });
-    return personId;
+    return { personId, isNew: known === undefined };
   });
 }

@@ -71,6 +71,7 @@ describe("the configuration", () => {
     ["RATE_LIMIT_FACTOR", "0"],
     ["NODE_ENV", "staging"],
     ["DEMONSTRATION", "true"],
+    ["WELCOME_NOTEBOOKS", "1"],
     ["TRUSTED_PROXIES", "-1"],
   ])("refuses %s=%j and names it", (variable, value) => {
     const found = problems({ ...enough, [variable]: value });

@@ -1,5 +1,9 @@
 import { createHash } from "node:crypto";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import type { NotebookList } from "#contract/api.ts";
+import { LANTERN_TITLE } from "../../server/commands/lantern-notebook.ts";
+import { seedDemonstration } from "../../server/commands/seed-demonstration.ts";
+import { TERN_TITLE } from "../../server/commands/tern-notebook.ts";
 import { rows } from "../../server/data/database.ts";
 import { safeNextPath } from "../../server/http/next-path.ts";
 import { askConsent, Browser, signIn } from "./http-browser.ts";
@@ -253,5 +257,42 @@ describe("behind TLS", () => {
     expect(answer.headers.get("location")).toContain(
       `redirect_uri=${encodeURIComponent("https://notebooks.example.org/auth/github/callback")}`,
     );
+  });
+});
+
+describe("the shelf of someone new", () => {
+  const shelfOf = async (browser: Browser) =>
+    (await browser.get<NotebookList>("/api/notebooks")).body.notebooks.map(({ title, role, pinsMoved }) => ({
+      title,
+      role,
+      pinsMoved,
+    }));
+
+  it("begins with a copy of each demonstration, made once", async () => {
+    const welcoming = await createWorld({ environment: { WELCOME_NOTEBOOKS: "yes" } });
+    try {
+      const both = [
+        { title: LANTERN_TITLE, role: "owner", pinsMoved: 0 },
+        { title: TERN_TITLE, role: "owner", pinsMoved: 0 },
+      ];
+      expect(await shelfOf(await welcoming.signIn("lena-newcomer"))).toEqual(both);
+      const again = await welcoming.signIn("lena-newcomer");
+      expect(await shelfOf(again)).toEqual(both);
+    } finally {
+      await welcoming.stop();
+    }
+  });
+
+  it("has them once for those whom the seeded ones have waited for", async () => {
+    const welcoming = await createWorld({ environment: { WELCOME_NOTEBOOKS: "yes" } });
+    try {
+      await seedDemonstration(welcoming.database);
+      expect(await shelfOf(await welcoming.signIn("otto-lantern"))).toEqual([
+        { title: LANTERN_TITLE, role: "author", pinsMoved: 0 },
+        { title: TERN_TITLE, role: "author", pinsMoved: 0 },
+      ]);
+    } finally {
+      await welcoming.stop();
+    }
   });
 });

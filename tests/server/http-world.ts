@@ -50,6 +50,8 @@ export async function createWorld(options: WorldOptions = {}): Promise<World> {
     SMTP_URL: mailbox.smtpUrl,
     MAILBOX_URL: mailbox.url,
     DEMONSTRATION: "yes",
+    // Most tests begin with an empty shelf.
+    WELCOME_NOTEBOOKS: "no",
     RATE_LIMIT_FACTOR: "1000",
     LOG_LEVEL: "debug",
     ...options.environment,

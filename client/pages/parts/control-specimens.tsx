@@ -71,7 +71,7 @@ export function ControlSpecimens() {
       </Specimen>
       <Specimen name="menu, dialog, notices">
         <Menu
-          label="Actions of the specimen"
+          label="Menu of the specimen"
           items={[
             { name: "Rename", onSelect: () => say("The specimen keeps its name.") },
             { name: "Delete", tone: "danger", onSelect: () => setAsking(true) },

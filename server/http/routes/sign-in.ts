@@ -2,6 +2,7 @@
 import { Router, type Request, type RequestHandler, type Response } from "express";
 import { Passport } from "passport";
 import { signInPerson, type Account } from "../../commands/sign-in-person.ts";
+import { welcomePerson } from "../../commands/welcome-person.ts";
 import { recordEvent } from "../../data/events.ts";
 import { announceAccessChange } from "../../policies/access-changes.ts";
 import type { Services } from "../../services.ts";
@@ -44,7 +45,10 @@ async function announceEndOfSession(services: Services, sessionName: string): Pr
 
 async function completeSignIn(services: Services, request: Request, account: Account): Promise<string> {
   const next = safeNextPath(request.session.next);
-  const personId = await signInPerson(services.database, account);
+  const { personId, isNew } = await signInPerson(services.database, account);
+  if (isNew && services.configuration.welcomesWithDemonstrations) {
+    await welcomePerson(services.database, personId);
+  }
   const before = { sessionName: request.sessionID, isSignedIn: request.session.personId !== undefined };
   // A new session name: one that was planted in the browser before must not become a signed-in one.
   await sessionStep(request, "regenerate");
