@@ -2,11 +2,11 @@
 import type { Knex } from "knex";
 import * as z from "zod";
 import type { Invitation, InvitationOutcome, Person } from "#contract/api.ts";
+import { invitationWords } from "#contract/invitation-words.ts";
 import { roleMay, type Role } from "#contract/roles.ts";
 import { firstRow, rows, type Database } from "../data/database.ts";
 import { recordEvent } from "../data/events.ts";
 import { presentInvitation, type InvitationRow, type KnownPerson } from "../data/people.ts";
-import { invitationLetter } from "../mail/invitation-letter.ts";
 import { enqueueLetter } from "../mail/queue.ts";
 import { roleOf } from "../policies/access.ts";
 import { announceAccessChange } from "../policies/access-changes.ts";
@@ -117,8 +117,8 @@ async function writeLetter(
     "select title from notebooks where id = ?",
     [wish.notebookId],
   );
-  const letter = invitationLetter({ ...wish, recipient, isMember, notebookTitle: notebook?.title ?? "" });
-  await enqueueLetter(transaction, letter);
+  const words = invitationWords({ ...wish, recipient, isMember, notebookTitle: notebook?.title ?? "" });
+  await enqueueLetter(transaction, { recipient, ...words });
 }
 
 /** Inviting again the same way changes nothing and sends nothing. */

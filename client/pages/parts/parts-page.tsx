@@ -1,8 +1,17 @@
+import { lazy, Suspense } from "react";
+import { Loading } from "../../ui/loading.tsx";
 import { PageFrame } from "../../ui/page-frame.tsx";
 import { BlockSpecimens } from "./block-specimens.tsx";
 import { ControlSpecimens } from "./control-specimens.tsx";
+import { FieldSpecimens } from "./field-specimens.tsx";
+import { LetterSpecimens } from "./letter-specimens.tsx";
 import { RulerSpecimens } from "./ruler-specimens.tsx";
+import { Family } from "./specimen.tsx";
 import { StateSpecimens } from "./state-specimens.tsx";
+
+const NotebookSpecimen = lazy(async () => ({
+  default: (await import("./notebook-specimen.tsx")).NotebookSpecimen,
+}));
 
 /** For contributors: every part in every state, so that a change of one is seen beside all the others. */
 export function PartsPage() {
@@ -16,7 +25,14 @@ export function PartsPage() {
       <ControlSpecimens />
       <StateSpecimens />
       <BlockSpecimens />
+      <FieldSpecimens />
       <RulerSpecimens />
+      <LetterSpecimens />
+      <Family title="A page of a notebook">
+        <Suspense fallback={<Loading what="Opening the page" />}>
+          <NotebookSpecimen />
+        </Suspense>
+      </Family>
     </PageFrame>
   );
 }

@@ -1,8 +1,7 @@
 /** What someone who was invited reads. Plain text: nothing in it can be made to look like something else. */
-import type { Role } from "#contract/roles.ts";
-import type { Letter } from "./queue.ts";
+import type { Role } from "./roles.ts";
 
-interface Occasion {
+export interface Occasion {
   readonly recipient: string;
   readonly inviter: { readonly name: string; readonly login: string };
   readonly notebookTitle: string;
@@ -20,14 +19,13 @@ const whatRolesDo: Readonly<Record<Role, string>> = {
   reader: "a reader: you can read it and what it computes",
 };
 
-export function invitationLetter(occasion: Occasion): Letter {
+export function invitationWords(occasion: Occasion): { readonly subject: string; readonly body: string } {
   const { recipient, inviter, notebookTitle, notebookId, role, publicUrl, isMember } = occasion;
   const address = `${publicUrl}/notebooks/${notebookId}`;
   const way = isMember
     ? "It is on your shelf now:"
     : `To accept, sign in with the account whose verified e-mail address is ${recipient}:`;
   return {
-    recipient,
     subject: `${inviter.name} invites you to “${notebookTitle}”`,
     body: [
       "Hello,",
