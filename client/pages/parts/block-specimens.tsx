@@ -20,14 +20,14 @@ export function BlockSpecimens() {
         </span>
       </Specimen>
       <Specimen name="numbers on their decimal mark">
-        <span className="block-view grid">
+        <span className="block-view grid [content-visibility:visible]">
           {numbers.map((text) => (
             <Decimal key={text} text={text} widths={widths} />
           ))}
         </span>
       </Specimen>
       <Specimen name="plot">
-        <div className="block-view max-w-96 grow">
+        <div className="block-view max-w-96 grow [content-visibility:visible]">
           <Plot
             name="Sizes of two invented terms against the probe scale"
             x={{ label: "p in GeV", kind: "log", domain: [100, 3200] }}

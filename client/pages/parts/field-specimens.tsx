@@ -50,7 +50,7 @@ export function FieldSpecimens() {
       <Drawn name="a colleague is in it" handle={withColleague} />
       <Drawn name="for reading" handle={forReading} />
       <Specimen name="replaced while one typed">
-        <div className="block-view">
+        <div className="block-view block pt-4 [content-visibility:visible]">
           <ReplacedNotice
             draft={{
               text: "g/4! phi^4",
@@ -87,7 +87,7 @@ interface DrawnProps {
 function Drawn({ name, handle, reading }: DrawnProps) {
   return (
     <Specimen name={name}>
-      <div className="block-view">
+      <div className="block-view block pt-4 [content-visibility:visible]">
         <BlockHandleContext value={handle}>
           <TextField
             place={place}
