@@ -1,4 +1,4 @@
-/** Copies a notebook as it stands: text, blocks and results, under a new owner, with nobody else and no links. */
+/** Copies a notebook as it stands: text, blocks, results and kept files, under a new owner, with nobody else and no links. */
 import { loadStored } from "../collab/document-store.ts";
 import type { Compute } from "../compute/open-compute.ts";
 import { firstRow, type Database } from "../data/database.ts";
@@ -36,6 +36,13 @@ export async function duplicateNotebook(
     await transaction.raw(
       `insert into notebook_results (notebook_id, block_id, key, settled_at, changed_by)
        select ?, block_id, key, settled_at, changed_by from notebook_results where notebook_id = ?`,
+      [made.id, notebookId],
+    );
+    // The copy's document names them by the ids it was copied with.
+    await transaction.raw(
+      `insert into attachments (notebook_id, id, sha256, name, media_type, bytes, size, uploaded_by, created_at)
+       select ?, id, sha256, name, media_type, bytes, size, uploaded_by, now() from attachments
+        where notebook_id = ?`,
       [made.id, notebookId],
     );
     await recordEvent(transaction, {

@@ -18,7 +18,8 @@ export function startHousekeeping({ database, log }: Pick<Services, "database" |
       const count = await removeDeletedForGood(database);
       if (count > 0) log.info({ count }, "deleted notebooks have gone for good");
       const pruned = await prune(database);
-      if (pruned.rows > 0 || pruned.results > 0) log.info(pruned, "what nobody needs any more has gone");
+      if (Object.values(pruned).some((count) => count > 0))
+        log.info(pruned, "what nobody needs any more has gone");
     } catch (error) {
       log.error({ err: error }, "what has gone by time could not be removed; it is tried again later");
     }

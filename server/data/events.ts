@@ -22,7 +22,8 @@ export interface Happening {
     | "invitation-withdrawn"
     | "invitation-claimed"
     | "referee-link-created"
-    | "referee-link-revoked";
+    | "referee-link-revoked"
+    | "attachment-kept";
   readonly details?: Readonly<Record<string, string | number | boolean | null>>;
 }
 

@@ -5,6 +5,7 @@ import type { Knex } from "knex";
 import * as foundation from "../../migrations/20261201000001_foundation.ts";
 import * as searchText from "../../migrations/20261201000010_search_text.ts";
 import * as serverProcesses from "../../migrations/20261201000020_server_processes.ts";
+import * as attachments from "../../migrations/20261201000030_attachments.ts";
 
 type Migration = { readonly up: (knex: Knex) => Promise<void>; readonly down: (knex: Knex) => Promise<void> };
 
@@ -16,6 +17,7 @@ export const migrations: Readonly<Record<string, Migration>> = {
   "20261201000001_foundation.ts": foundation,
   "20261201000010_search_text.ts": searchText,
   "20261201000020_server_processes.ts": serverProcesses,
+  "20261201000030_attachments.ts": attachments,
 };
 
 const migrationSource: Knex.MigrationSource<string> = {

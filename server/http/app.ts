@@ -13,6 +13,7 @@ import { meRoutes } from "./routes/me.ts";
 import { signInRoutes } from "./routes/sign-in.ts";
 import { notebookRoutes } from "./routes/notebooks.ts";
 import { peopleRoutes } from "./routes/people.ts";
+import { attachmentRoutes } from "./routes/attachments.ts";
 import { refereeLinkRoutes } from "./routes/referee-links.ts";
 import { harmless, requireSameSite } from "./same-site.ts";
 import { hideReferrer, securityHeaders } from "./security-headers.ts";
@@ -49,6 +50,7 @@ export function createApp(services: Services, compute: Compute): Express {
   app.use(resultRoutes(services));
   app.use(peopleRoutes(services, limits));
   app.use(refereeLinkRoutes(services, limits));
+  app.use(attachmentRoutes(services, limits));
   app.use(["/api", "/auth", "/collab"], answerUnknownAddress);
   app.use(servePages(configuration.clientFolder, publicUrl));
   app.use(answerUnknownAddress);

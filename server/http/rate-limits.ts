@@ -10,6 +10,8 @@ export interface RateLimits {
   readonly signIn: RequestHandler;
   readonly invitations: RequestHandler;
   readonly evaluate: RequestHandler;
+  /** Files, which are large. */
+  readonly uploads: RequestHandler;
   /** Only refused tokens count, so readers of a good link are not slowed and guessing is. */
   readonly refereeGuesses: RequestHandler;
   /** Everything else that changes something. */
@@ -48,6 +50,7 @@ export function createRateLimits(factor: number): RateLimits {
     signIn: limiter(40, 10, address),
     invitations: limiter(60, 60, personOrAddress),
     evaluate: limiter(240, 1, personOrAddress),
+    uploads: limiter(40, 10, personOrAddress),
     refereeGuesses: limiter(20, 10, address, true),
     changes: limiter(300, 1, personOrAddress),
   };

@@ -7,6 +7,7 @@ import * as z from "zod/mini";
 import type { $ZodType, output } from "zod/v4/core";
 import { idParameter } from "#contract/api.ts";
 import { roleMay, type Action } from "#contract/roles.ts";
+import type { StoredFile } from "../commands/attachments.ts";
 import { refuse, succeed, type Outcome } from "../commands/outcome.ts";
 import { findPerson, type KnownPerson } from "../data/people.ts";
 import { accessTo, type NotebookAccess } from "../policies/access.ts";
@@ -17,9 +18,14 @@ import { check } from "./validation.ts";
 export interface Presentation {
   readonly status: number;
   readonly body?: unknown;
+  readonly file?: StoredFile;
 }
 export function present(body: unknown, status = 200): Outcome<Presentation> {
   return succeed({ status, body });
+}
+/** As something to keep, never as something to show: whatever it holds, no page of ours is made of it. */
+export function presentFile(file: StoredFile): Outcome<Presentation> {
+  return succeed({ status: 200, file });
 }
 export function presentNothing(): Outcome<Presentation> {
   return succeed({ status: 204 });
@@ -63,8 +69,12 @@ function checkContent<Query extends $ZodType, Body extends $ZodType>(
 
 function answer(response: Response, outcome: Outcome<Presentation>): void {
   if (!outcome.ok) return sendProblem(response, outcome);
-  response.status(outcome.value.status);
-  if (outcome.value.body === undefined) response.end();
+  const { status, file } = outcome.value;
+  response.status(status);
+  if (file) {
+    response.attachment(file.name);
+    response.type(file.mediaType).send(file.bytes);
+  } else if (outcome.value.body === undefined) response.end();
   else response.json(outcome.value.body);
 }
 

@@ -29,6 +29,12 @@ describe("a backup of a live system", () => {
     const first = await stage.write(stage.ada, notebookId);
     first.type("before");
     await first.allSaved();
+    const table = Buffer.from("p;X0\n1;2\n");
+    await stage.server.database.raw(
+      `insert into attachments (notebook_id, sha256, name, media_type, bytes, size)
+       values (?, sha256(?), 'table.csv', 'text/csv', ?, ?)`,
+      [notebookId, table, table, table.length],
+    );
     backUp(stage.testDatabase.url, file);
     expect(statSync(file).mode & 0o077).toBe(0);
     first.type(" and after");
@@ -47,6 +53,9 @@ describe("a backup of a live system", () => {
     expect(ids).toEqual([notebookId]);
     expect(ids).not.toContain(later);
     expect(await rows(database, "select 1 from sessions")).toEqual([]);
+    expect(await rows(database, "select name, bytes from attachments")).toEqual([
+      { name: "table.csv", bytes: table },
+    ]);
     const document = new Y.Doc();
     for (const { update } of await stage.store.readAfter(notebookId, 0)) Y.applyUpdate(document, update);
     expect(document.getXmlFragment("prose").toJSON()).toBe("<paragraph>before</paragraph>");
@@ -105,12 +114,12 @@ describe("what nobody needs any more", () => {
       key("b"),
     ]);
 
-    expect(await prune(database)).toEqual({ rows: 2, results: 1 });
+    expect(await prune(database)).toEqual({ rows: 2, results: 1, attachments: 0 });
     const left = await rows<{ key: string }>(database, "select r.key from results r order by r.key");
     expect(left.map((result) => result.key)).toEqual([key("a"), key("b"), key("d")]);
     const writer = await stage.write(stage.ada, notebookId);
     expect(writer.document.getXmlFragment("prose").toJSON()).toBe(document.getXmlFragment("prose").toJSON());
-    expect(await prune(database)).toEqual({ rows: 0, results: 0 });
+    expect(await prune(database)).toEqual({ rows: 0, results: 0, attachments: 0 });
   });
 });
 

@@ -1,5 +1,6 @@
 /** What may be done over HTTP. */
 import { EVALUATE_FORMAT } from "#contract/evaluate-file.ts";
+import { ATTACHMENT_CONTENT_TYPE } from "#contract/attachments.ts";
 import type { Answer, Browser } from "./http-browser.ts";
 import { verdictOf, verdicts, type Actor, type Line, type Scene } from "./roles-scene.ts";
 
@@ -123,6 +124,43 @@ const otherLines: readonly Line[] = [
   },
 ];
 
+const aFile = "p;X0\n1;2\n";
+/** Under the id of the scene's link, which stands for nothing else here. */
+const keepAFile = ({ world, notebookId, linkId }: Scene) =>
+  world.database.raw(
+    `insert into attachments (notebook_id, id, sha256, name, media_type, bytes, size)
+     values (?, ?, sha256(?), 'table.csv', 'text/csv', ?, ?)`,
+    [notebookId, linkId, Buffer.from(aFile), Buffer.from(aFile), aFile.length],
+  );
+
+const attachmentLines: readonly Line[] = [
+  line("keep the file of a table", true, writers, (browser, path, actor) =>
+    browser.post(`${path}/attachments?name=table.csv&referee=${actor.token}`, undefined, {
+      rawBody: aFile,
+      headers: { "content-type": ATTACHMENT_CONTENT_TYPE, ...withToken(actor).headers },
+    }),
+  ),
+  {
+    ...line("fetch the file of a table", false, everyMember, (browser, path, actor, { linkId }) =>
+      browser.get(`${path}/attachments/${linkId}?referee=${actor.token}`, withToken(actor)),
+    ),
+    prepare: keepAFile,
+  },
+  {
+    action: "fetch the file of a table by a referee's link",
+    changes: false,
+    verdicts: verdicts(["not-found", "not-found", "not-found", "not-found"], {
+      stranger: "not-found",
+      "signed out": "not-found",
+      "referee link": "done",
+      "revoked link": "gone",
+    }),
+    prepare: keepAFile,
+    attempt: async ({ browser, token }, { linkId }) =>
+      verdictOf(await browser.get(`/api/referee/${token}/attachments/${linkId}`)),
+  },
+];
+
 /** An owner may go only when another stays. */
 const leavingLine: Line = {
   ...line("leave it", true, everyMember, (browser, path, _actor, { bystanderId }) =>
@@ -136,4 +174,4 @@ const leavingLine: Line = {
       .update({ role: "owner" }),
 };
 
-export const httpLines: readonly Line[] = [...otherLines, leavingLine];
+export const httpLines: readonly Line[] = [...otherLines, ...attachmentLines, leavingLine];

@@ -132,6 +132,8 @@ export async function snapshot({ world, notebookId }: Scene): Promise<string> {
             (select string_agg(concat_ws(',', l.id, l.name, l.revoked_at), ';' order by l.id)
                from referee_links l where notebook_id = :id) as links,
             (select count(*) from document_updates where notebook_id = :id) as updates,
+            (select string_agg(concat_ws(',', a.id, a.name, a.size), ';' order by a.id)
+               from attachments a where notebook_id = :id) as attachments,
             (select count(*) from events where notebook_id = :id) as events`.replaceAll(
       ":id",
       `'${notebookId}'`,
