@@ -1,5 +1,6 @@
 /** One way to the server: typed answers, failures as values, the CSRF token on everything that changes something. */
 import type { Me } from "#contract/api.ts";
+import { ATTACHMENT_CONTENT_TYPE } from "#contract/attachment-type.ts";
 import { readProblem, RequestRefused, signedOut, unreachable, type Problem } from "./problem.ts";
 import { currentCsrfToken, rememberCsrfToken, setSessionLapsed } from "./session-state.ts";
 
@@ -10,6 +11,8 @@ type Method = "GET" | "POST" | "PUT" | "PATCH" | "DELETE";
 export interface RequestOptions {
   readonly method?: Method;
   readonly body?: unknown;
+  /** A file as the body, in place of JSON. */
+  readonly bytes?: Blob;
   readonly signal?: AbortSignal;
 }
 
@@ -49,6 +52,7 @@ async function send<T>(path: string, method: Method, options: RequestOptions): P
     headers["x-csrf-token"] = currentCsrfToken() ?? "";
   }
   if (options.body !== undefined) headers["content-type"] = "application/json";
+  if (options.bytes) headers["content-type"] = ATTACHMENT_CONTENT_TYPE;
   let response: Response;
   try {
     response = await fetch(path, {
@@ -56,6 +60,7 @@ async function send<T>(path: string, method: Method, options: RequestOptions): P
       headers,
       credentials: "same-origin",
       ...(options.body === undefined ? {} : { body: JSON.stringify(options.body) }),
+      ...(options.bytes ? { body: options.bytes } : {}),
       ...(options.signal ? { signal: options.signal } : {}),
     });
   } catch (cause) {

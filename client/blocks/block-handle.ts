@@ -80,8 +80,13 @@ export interface BlockHandle {
   moveRow(table: string, rowId: string, beforeRowId: string | null): void;
   /** Fills rows from a place on, adding what is missing, as one step of the history. */
   paste(grid: PastedGrid): void;
-  /** Puts new rows in the place of all rows of these tables, as one step of the history. */
-  replaceRows(tables: Readonly<Record<string, readonly Readonly<Record<string, string>>[]>>): void;
+  /** Puts new rows in the place of all rows of these tables, and values into fields, as one step of the history. */
+  replaceRows(
+    tables: Readonly<Record<string, readonly Readonly<Record<string, string>>[]>>,
+    fields?: Readonly<Record<string, string>>,
+  ): void;
+  /** The address under which files of this notebook are kept; null in a copy that belongs to no notebook. */
+  readonly files: string | null;
   /** Shared per-person history, also from within a field. */
   undo(): void;
   redo(): void;

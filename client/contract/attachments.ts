@@ -1,8 +1,5 @@
-/** Files kept as they were read in: what is sent, what comes back, and how large they may be. */
+/** Files kept as they were read in: what is sent with their bytes, and what comes back. */
 import * as z from "zod/mini";
-
-export const LARGEST_ATTACHMENT_BYTES = 10_000_000;
-export const ATTACHMENT_CONTENT_TYPE = "application/octet-stream";
 
 /** The bytes are the body of the request; their name stands in the address. No path, no control characters. */
 export const attachmentQuery = z.object({

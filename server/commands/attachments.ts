@@ -1,6 +1,7 @@
 /** Files that were read into a notebook, kept as they came. */
 import { createHash } from "node:crypto";
-import { LARGEST_ATTACHMENT_BYTES, type Attachment } from "#contract/attachments.ts";
+import { LARGEST_ATTACHMENT_BYTES } from "#contract/attachment-type.ts";
+import type { Attachment } from "#contract/attachments.ts";
 import { firstRow, type Database, type Queryable } from "../data/database.ts";
 import { recordEvent } from "../data/events.ts";
 import { mayNow, type NotebookAccess } from "../policies/access.ts";

@@ -1,6 +1,6 @@
 /** What may be done over HTTP. */
 import { EVALUATE_FORMAT } from "#contract/evaluate-file.ts";
-import { ATTACHMENT_CONTENT_TYPE } from "#contract/attachments.ts";
+import { ATTACHMENT_CONTENT_TYPE } from "#contract/attachment-type.ts";
 import type { Answer, Browser } from "./http-browser.ts";
 import { verdictOf, verdicts, type Actor, type Line, type Scene } from "./roles-scene.ts";
 

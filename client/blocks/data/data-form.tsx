@@ -2,6 +2,8 @@ import { columnRoles } from "#engine/data/inputs.ts";
 import { lazy, Suspense, useState } from "react";
 import { useBlock } from "../block-handle.ts";
 import { RowTable } from "../parts/row-table.tsx";
+import { LineEditor } from "./line-editor.tsx";
+import { OriginalFile } from "./original-file.tsx";
 
 const ImportDialog = lazy(async () => ({ default: (await import("./import-dialog.tsx")).ImportDialog }));
 
@@ -27,6 +29,7 @@ export function DataForm() {
           from a file or by pasting
         </p>
       )}
+      <OriginalFile />
       {importing && (
         <Suspense fallback={null}>
           <ImportDialog onClose={() => setImporting(false)} />
@@ -46,9 +49,12 @@ export function DataForm() {
         ]}
       />
       {isPacked ? (
-        <p className="block-line">
-          The lines were read in from a file; they stand below as they were understood.
-        </p>
+        <>
+          <p className="block-line">
+            The lines were read in from a file; they stand below as they were understood.
+          </p>
+          <LineEditor />
+        </>
       ) : (
         <RowTable
           table="lines"

@@ -1,13 +1,14 @@
 /** Reads a CSV text for the preview of an import: delimiter, header, decimal mark, and what stands in the way. */
 import Papa from "papaparse";
+import { LARGEST_ATTACHMENT_BYTES } from "#contract/attachment-type.ts";
 import type { ColumnRole } from "#engine/data/inputs.ts";
 
-export const LARGEST_BYTES = 10_000_000;
 export const MOST_LINES = 20_000;
 const MOST_COLUMNS = 40;
-const delimiters = [",", ";", "\t"];
+export const delimiters = [",", ";", "\t"];
 const decimal = /^[-+−]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][-+]?\d+)?$/;
 const withComma = /^[-+−]?\d*,\d+(?:[eE][-+]?\d+)?$/;
+const withThousands = /^[-+−]?\d{1,3}(?:\.\d{3})+,\d+$/;
 const nothing = /^(?:|-|–|—|\.|n\/a|nan)$/i;
 
 export interface FileColumn {
@@ -35,17 +36,19 @@ export interface FileFault {
 export type FileReading =
   { readonly ok: true; readonly file: ReadFile } | { readonly ok: false; readonly sentence: string };
 
+/** What a person has corrected; what is left out is found in the file. */
+export interface Corrections {
+  readonly delimiter?: string;
+  readonly hasDecimalComma?: boolean;
+}
+
 /** @param text the file as UTF-8; a byte-order mark is no part of it */
-export function readFile(text: string): FileReading {
-  if (text.length > LARGEST_BYTES) return { ok: false, sentence: "At most 10 MB are read." };
+export function readFile(text: string, corrections: Corrections = {}): FileReading {
+  if (text.length > LARGEST_ATTACHMENT_BYTES) return { ok: false, sentence: "At most 10 MB are read." };
   if (text.includes("\uFFFD") || text.includes("\u0000"))
     return { ok: false, sentence: "This is no text in UTF-8. Save the table as CSV in UTF-8 first." };
   const csv = text.replace(/^\uFEFF/, "");
-  const { delimiter } = Papa.parse<string[]>(csv, {
-    delimitersToGuess: delimiters,
-    skipEmptyLines: "greedy",
-    preview: 10,
-  }).meta;
+  const delimiter = corrections.delimiter ?? guessedDelimiter(csv);
   // Empty lines are kept so far, since they count when a line of the file is named.
   const parsed = Papa.parse<string[]>(csv, { delimiter });
   const numbered = withLineNumbers(parsed.data);
@@ -64,7 +67,8 @@ export function readFile(text: string): FileReading {
     return { ok: false, sentence: `At most ${MOST_COLUMNS} columns are read.` };
   if (body.length > MOST_LINES)
     return { ok: false, sentence: `At most ${MOST_LINES} lines are read; the file has ${body.length}.` };
-  const hasDecimalComma = delimiter !== "," && isMostlyWithComma(body.map(({ values }) => values));
+  const hasDecimalComma =
+    corrections.hasDecimalComma ?? (delimiter !== "," && isMostlyWithComma(body.map(({ values }) => values)));
   const faults: FileFault[] = [];
   const lines = body.map(({ line, values }) => {
     if (values.length !== header.length)
@@ -77,18 +81,33 @@ export function readFile(text: string): FileReading {
     return header.map((name, column) => {
       const value = values[column] ?? "";
       if (nothing.test(value)) return "";
-      const pointed = (hasDecimalComma ? value.replace(",", ".") : value).replace("−", "-");
+      // Where the mark is a comma, a point may separate thousands: 1.234 is then nobody knows what.
+      const pointed = (hasDecimalComma ? value.replace(".", "?").replace(",", ".") : value).replace("−", "-");
       if (decimal.test(pointed)) return pointed;
       faults.push({
         line,
         column: column + 1,
         isOfLine: false,
-        sentence: `Line ${line}, column ${column + 1} (${name}): “${value.slice(0, 40)}” is no number.`,
+        sentence: `Line ${line}, column ${column + 1} (${name}): “${value.slice(0, 40)}” is no number${otherMark(value, hasDecimalComma)}.`,
       });
       return "";
     });
   });
   return { ok: true, file: { columns: guessRoles(header), lines, delimiter, hasDecimalComma, faults } };
+}
+
+function guessedDelimiter(csv: string): string {
+  return Papa.parse<string[]>(csv, {
+    delimitersToGuess: delimiters,
+    skipEmptyLines: "greedy",
+    preview: 10,
+  }).meta.delimiter;
+}
+
+/** A hint where the other decimal mark would make it one. */
+function otherMark(value: string, hasDecimalComma: boolean): string {
+  if (hasDecimalComma) return decimal.test(value.replace("−", "-")) ? " with a decimal comma" : "";
+  return withComma.test(value) ? " with a decimal point" : "";
 }
 
 interface NumberedLine {
@@ -109,8 +128,8 @@ function withLineNumbers(data: readonly (readonly string[])[]): readonly Numbere
 function isMostlyWithComma(lines: readonly (readonly string[])[]): boolean {
   const values = lines.slice(0, 200).flat();
   return (
-    values.filter((value) => withComma.test(value)).length >
-    values.filter((value) => value.includes(".")).length
+    values.filter((value) => withComma.test(value) || withThousands.test(value)).length >
+    values.filter((value) => value.includes(".") && !value.includes(",")).length
   );
 }
 
@@ -146,7 +165,7 @@ export function guessRoles(header: readonly string[]): FileColumn[] {
 const LINES_ONE_BY_ONE = 400;
 const LONGEST_ROW = 3_800;
 /** The bounds of a block's inputs (`schemaOf`): what is beyond them would be cut off when read. */
-const LONGEST_VALUE = 4_000;
+export const LONGEST_VALUE = 4_000;
 const MOST_ROWS = 2_000;
 /** One change to a notebook may have 4 MB; a page that made a larger one could send nothing from then on. */
 const MOST_CHARACTERS = 3_000_000;

@@ -74,6 +74,7 @@ type Changes = Pick<
   | "moveRow"
   | "paste"
   | "replaceRows"
+  | "files"
   | "undo"
   | "redo"
   | "setFocus"
@@ -124,8 +125,10 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
     removeRow: (table, rowId) => change((element) => removeRow(element, table, rowId)),
     moveRow: (table, rowId, beforeRowId) => change((element) => moveRow(element, table, rowId, beforeRowId)),
     paste: (grid) => change((element, { kind }) => pasteInto(element, kindDescriptions[kind], grid, newId)),
-    replaceRows: (tables) =>
+    files: filesAddress(session),
+    replaceRows: (tables, fields = {}) =>
       change((element, { kind }) => {
+        for (const [field, value] of Object.entries(fields)) writeField(element, field, value);
         for (const [table, rows] of Object.entries(tables)) {
           for (const { id } of orderedRows(element, table)) removeRow(element, table, id);
           const fresh = rows.map((values) => ({ id: newId(), values }));
@@ -168,6 +171,13 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
     },
     pin: (scalarId) => placePinAtCaret(world, blockId, scalarId),
   };
+}
+
+function filesAddress({ notebookId, source }: BlockWorld["session"]): string | null {
+  if (source.mode === "scratch") return null;
+  return source.mode === "referee"
+    ? `/api/referee/${encodeURIComponent(source.token)}/attachments`
+    : `/api/notebooks/${notebookId}/attachments`;
 }
 
 /** The client of the shared document that wrote the value as it stands. */

@@ -5,7 +5,14 @@ export const columnRoles = ["other", "x", "order", "reference", "measured", "err
 export type ColumnRole = (typeof columnRoles)[number];
 
 export const dataShape = defineShape({
-  fields: { title: note(), note: note() },
+  fields: {
+    title: note(),
+    note: note(),
+    /** The file it was read in from: the id under which the notebook keeps it, a space, and its name. */
+    original: note(),
+    /** What the last reading in changed, in a sentence. */
+    lastImport: note(),
+  },
   tables: {
     columns: {
       name: text(),

@@ -1,12 +1,8 @@
 /** /api/notebooks/:id/attachments for those who take part, /api/referee/:token/attachments for whoever holds a link. */
 import express, { Router, type Request, type RequestHandler } from "express";
 import * as z from "zod/mini";
-import {
-  ATTACHMENT_CONTENT_TYPE,
-  LARGEST_ATTACHMENT_BYTES,
-  attachmentParameters,
-  attachmentQuery,
-} from "#contract/attachments.ts";
+import { ATTACHMENT_CONTENT_TYPE, LARGEST_ATTACHMENT_BYTES } from "#contract/attachment-type.ts";
+import { attachmentParameters, attachmentQuery } from "#contract/attachments.ts";
 import { fetchAttachment, fetchAttachmentAsReferee, keepAttachment } from "../../commands/attachments.ts";
 import { refuse } from "../../commands/outcome.ts";
 import type { Services } from "../../services.ts";
@@ -25,8 +21,7 @@ function bytesOf(request: Request): Promise<Buffer | null> {
     const { res: response } = request;
     if (!response) throw new Error("a request has its response");
     readBytes(request, response, (error?: unknown) => {
-      if (error !== undefined)
-        reject(error); // what body readers throw; answered in one place
+      if (error instanceof Error) reject(error);
       else resolve(Buffer.isBuffer(request.body) ? request.body : null);
     });
   });

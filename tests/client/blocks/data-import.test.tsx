@@ -1,6 +1,8 @@
 import { cleanup, screen, waitFor, within } from "@testing-library/react";
-import { afterEach, describe, expect, it } from "vitest";
+import { afterEach, describe, expect, it, vi } from "vitest";
 import { guessRoles, packLines, readFile, whyTooLarge } from "../../../client/blocks/data/read-file.ts";
+import { placeOfLine } from "../../../client/blocks/data/line-editor.tsx";
+import { whatChanged } from "../../../client/blocks/data/what-changed.ts";
 import { documentOf, personAtForms, type PersonAtForms } from "./people-at-forms.tsx";
 
 let wren: PersonAtForms | null = null;
@@ -8,6 +10,7 @@ afterEach(() => {
   wren?.leave();
   wren = null;
   cleanup();
+  vi.unstubAllGlobals();
 });
 const file = (text: string) => {
   const reading = readFile(text);
@@ -75,6 +78,151 @@ describe("a file of values", () => {
     [Array.from({ length: 500 }, () => Array<string>(40).fill(`1.${"2".repeat(120)}`)), /4000 characters/],
   ])("is refused in words where it does not: %#", (lines, words) => {
     expect(whyTooLarge(packLines(lines))).toMatch(words);
+  });
+});
+
+describe("a file that was taken wrongly", () => {
+  it.each([
+    // One column of "60,5" to whoever takes commas for separators.
+    ["p;LO\n60,5;1,25\n", { hasDecimalComma: false }, [1, 2], undefined],
+    ["p;LO\n60;1\n", { delimiter: "," }, [1], undefined],
+    ['"p","LO"\n"60,5","1,25"\n', { hasDecimalComma: true }, [], ["60.5", "1.25"]],
+    ["p;LO\n1.234;2,5\n", { hasDecimalComma: true }, [1], undefined],
+    ["p;LO\n1.234,5;2,5\n", {}, [1], undefined],
+    ["p\tLO\n60\t1;2\n", { delimiter: "\t" }, [2], undefined],
+    ["p;LO\n−60;+1,5e-3\n", {}, [], ["-60", "+1.5e-3"]],
+  ] as const)("%j with %j", (text, corrections, columns, line) => {
+    const reading = readFile(text, corrections);
+    if (!reading.ok) return expect.fail(reading.sentence);
+    expect(reading.file.faults.map(({ column }) => column)).toEqual(columns);
+    if (line) expect(reading.file.lines[0]).toEqual(line);
+  });
+});
+
+describe("nasty files", () => {
+  const large = `p;LO;NLO\r\n${Array.from({ length: 20_000 }, (_, n) => `${n},5;1,25;−2e-3`).join("\r\n")}\r\n`;
+  it.each<[string, string, number]>([
+    ["20,000 lines with decimal commas", `\uFEFF${large}`, 20_000],
+    ["lines that end as they did on old machines", "p,LO\r1,2\r3,4\r", 2],
+    ["blank lines between, and blanks around", "\n p , LO \n\n 1 , 2 \n\n\n 3 , 4\n", 2],
+    ["semicolons inside of quoted names", 'p,"LO; first"\n1,2\n', 1],
+    ["no line end at the end, and a hole", "p\tLO\n1\t\n2\t3", 2],
+  ])("%s", (_, text, count) => {
+    const { lines, faults } = file(text);
+    expect([lines.length, faults]).toEqual([count, []]);
+    expect(lines.every((line) => line.every((value) => value === "" || Number.isFinite(Number(value))))).toBe(
+      true,
+    );
+  });
+});
+
+describe("what a new table changes", () => {
+  const columns = [
+    { name: "p", role: "x" },
+    { name: "LO", role: "order" },
+  ] as const;
+  const table = (...lines: string[][]) => ({ columns, lines });
+  it.each([
+    [table(), table(["1", "2"]), ""],
+    [table(["1", "2"]), table(["1.0", "2.00"]), "Nothing in it has changed."],
+    [
+      table(["1", "2"], ["3", "4"], ["5", "6"]),
+      table(["3", "4.5"], ["7", "8"], ["9", "8"], ["1", "2"]),
+      "Against the table before: 2 lines added, 1 line removed, 1 value changed; lines are compared by their x.",
+    ],
+    // The same x twice: nobody can say which line is which.
+    [
+      table(["1", "2"], ["1", "3"]),
+      table(["1", "3"]),
+      "Against the table before: 1 line removed, 1 value changed; lines are compared in their order.",
+    ],
+    [
+      table(["1", "2"]),
+      { columns: [columns[0], { name: "NLO", role: "order" } as const], lines: [["1", "3"]] },
+      "Against the table before: 1 column new (NLO), 1 column gone (LO); lines are compared by their x.",
+    ],
+  ])("%#: %j to %j", (before, after, sentence) => {
+    expect(whatChanged(before, after)).toBe(sentence);
+  });
+});
+
+describe("a line of a large import", () => {
+  const rows = [
+    { id: "a", values: "1; 2\n\n3; 4" },
+    { id: "b", values: "5; 6" },
+  ];
+  it.each([
+    [1, "a", 0],
+    [2, "a", 2],
+    [3, "b", 0],
+  ])("%s stands in row %s", (number, id, index) => {
+    expect(placeOfLine(rows, number)).toMatchObject({ row: { id }, index });
+  });
+  it("beyond the last is none", () =>
+    expect([placeOfLine(rows, 4), placeOfLine(rows, 0)]).toEqual([null, null]));
+
+  it("is changed by hand", async () => {
+    const attrs = { blockId: "d" };
+    wren = personAtForms("Wren", 10, documentOf([{ type: "data", attrs }]), ["d"]);
+    const { user, world } = wren;
+    await user.click(await screen.findByRole("button", { name: "read in a table" }));
+    const dialog = await screen.findByRole("dialog", { name: "Read in a table" });
+    await user.click(within(dialog).getByLabelText("or paste it here"));
+    await user.paste(`p,LO\n${Array.from({ length: 500 }, (_, n) => `${n},2`).join("\n")}`);
+    await user.click(within(dialog).getByRole("button", { name: "Read it in" }));
+    await user.type(await screen.findByLabelText("change line"), "401");
+    const values = await screen.findByLabelText("values of line 401");
+    expect((values as HTMLInputElement).value).toBe("400; 2");
+    await user.clear(values);
+    await user.type(values, "400; 2.5");
+    await user.click(screen.getByRole("button", { name: "Put it in place" }));
+    await waitFor(() => {
+      const { value } = world.results.result("d").evaluation ?? {};
+      expect((value as { rows: string[][] } | null)?.rows[400]).toEqual(["400", "2.5"]);
+    });
+  });
+});
+
+describe("the file itself", () => {
+  const importing = async (answer: () => Response) => {
+    const sent: { address: string; body: unknown }[] = [];
+    vi.stubGlobal("fetch", (address: string, options?: { method?: string; body?: unknown }) => {
+      if (options?.method !== "POST") return Promise.resolve(Response.json({ person: null, csrfToken: "t" }));
+      sent.push({ address, body: options.body });
+      return Promise.resolve(answer());
+    });
+    wren = personAtForms("Wren", 10, documentOf([{ type: "data", attrs: { blockId: "d" } }]), ["d"]);
+    const { user, world } = wren;
+    await user.click(await screen.findByRole("button", { name: "read in a table" }));
+    const dialog = await screen.findByRole("dialog", { name: "Read in a table" });
+    const picked = new File(["p;LO\n1;2\n"], "tern.csv", { type: "text/csv" });
+    await user.upload(within(dialog).getByLabelText("File"), picked);
+    await user.click(await within(dialog).findByRole("button", { name: "Read it in" }));
+    await waitFor(() => expect(screen.queryByRole("dialog")).toBeNull());
+    return { sent, inputs: world.directory.block("d")?.inputs };
+  };
+  const id = "2f1c1f64-0000-4000-8000-000000000001";
+
+  it("is kept when it is read in, and the block names it", async () => {
+    const { sent, inputs } = await importing(() =>
+      Response.json({ id, name: "tern.csv", size: 9 }, { status: 201 }),
+    );
+    expect(sent.map(({ address }) => address)).toEqual(["/api/notebooks/n/attachments?name=tern.csv"]);
+    expect(inputs).toMatchObject({ original: `${id} tern.csv`, lines: [{ values: "1; 2" }] });
+    expect(screen.getByRole("button", { name: /^tern\.csv/ })).toBeTruthy();
+  });
+
+  it("that cannot be kept leaves the table read in, and named by nothing", async () => {
+    const problem = {
+      type: "urn:subleading:too-large",
+      title: "",
+      status: 413,
+      detail: "The files are too many.",
+    };
+    const { inputs } = await importing(() =>
+      Response.json(problem, { status: 413, headers: { "content-type": "application/problem+json" } }),
+    );
+    expect(inputs).toMatchObject({ original: "", lines: [{ values: "1; 2" }] });
   });
 });
 

@@ -12,6 +12,8 @@ const column = (name: string, role = "other", order = ""): DataInputs["columns"]
 const table = (columns: DataInputs["columns"], ...lines: string[]): DataInputs => ({
   title: "",
   note: "",
+  original: "",
+  lastImport: "",
   columns,
   lines: lines.map((values, index) => ({ id: `l${index}`, values })),
 });
