@@ -47,6 +47,7 @@ export function specimenHandle({
     moveRow: nothing,
     paste: nothing,
     replaceRows: nothing,
+    files: null,
     undo: nothing,
     redo: nothing,
     setFocus: nothing,
