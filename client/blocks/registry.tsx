@@ -7,6 +7,7 @@ import { errorBudgetParts } from "./error-budget/error-budget-parts.ts";
 import { divergenceParts } from "./divergence/divergence-parts.ts";
 import { orderPlanParts } from "./order-plan/order-plan-parts.ts";
 import { premisesParts } from "./premises/premises-parts.ts";
+import { runningParts } from "./running/running-parts.ts";
 import { scalingParts } from "./scaling/scaling-parts.ts";
 import { truncationErrorParts } from "./truncation-error/truncation-error-parts.ts";
 
@@ -19,4 +20,5 @@ export const blockParts: Readonly<Record<KindName, BlockParts>> = {
   basisCount: basisCountParts,
   data: dataParts,
   errorBudget: errorBudgetParts,
+  running: runningParts,
 };

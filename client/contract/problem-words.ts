@@ -8,6 +8,7 @@ import { notationWords } from "./words/notation-words.ts";
 import { notebookWords } from "./words/notebook-words.ts";
 import { planWords } from "./words/plan-words.ts";
 import { premisesWords } from "./words/premises-words.ts";
+import { runningWords } from "./words/running-words.ts";
 import { scalingWords } from "./words/scaling-words.ts";
 import { truncationWords } from "./words/truncation-words.ts";
 import type { Words } from "./words/words.ts";
@@ -24,6 +25,7 @@ export const problemWords: Words = {
   ...basisWords,
   ...dataWords,
   ...budgetWords,
+  ...runningWords,
 };
 
 /**

@@ -6,6 +6,7 @@ import { divergenceDescription } from "./divergence/description.ts";
 import type { BlockDescription, KindName } from "./kind.ts";
 import { orderPlanDescription } from "./plan/description.ts";
 import { premisesDescription } from "./premises/description.ts";
+import { runningDescription } from "./running/description.ts";
 import { scalingDescription } from "./scaling/description.ts";
 import { truncationErrorDescription } from "./truncation/description.ts";
 
@@ -18,4 +19,5 @@ export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
   basisCount: basisCountDescription,
   data: dataDescription,
   errorBudget: errorBudgetDescription,
+  running: runningDescription,
 };

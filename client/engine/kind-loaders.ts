@@ -8,6 +8,7 @@ export const kindLoaders: Readonly<Record<KindName, () => Promise<BlockKind>>> =
   orderPlan: async () => (await import("./plan/kind.ts")).orderPlan,
   data: async () => (await import("./data/kind.ts")).data,
   errorBudget: async () => (await import("./budget/kind.ts")).errorBudget,
+  running: async () => (await import("./running/kind.ts")).running,
   basisCount: async () => (await import("./basis/kind.ts")).basisCount,
   truncationError: async () => (await import("./truncation/kind.ts")).truncationError,
 };

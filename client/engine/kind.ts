@@ -12,6 +12,7 @@ export const kindNames = [
   "basisCount",
   "data",
   "errorBudget",
+  "running",
 ] as const;
 export type KindName = (typeof kindNames)[number];
 

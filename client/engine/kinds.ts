@@ -6,6 +6,7 @@ import { divergence } from "./divergence/kind.ts";
 import type { BlockKind, KindName } from "./kind.ts";
 import { orderPlan } from "./plan/kind.ts";
 import { premises } from "./premises/kind.ts";
+import { running } from "./running/kind.ts";
 import { scaling } from "./scaling/kind.ts";
 import { truncationError } from "./truncation/kind.ts";
 
@@ -22,4 +23,5 @@ export const kinds: Readonly<Record<KindName, BlockKind>> = {
   basisCount,
   data,
   errorBudget,
+  running,
 };

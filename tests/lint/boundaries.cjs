@@ -1,5 +1,5 @@
 /** Which part of the house may import which; broken on purpose in tests/lint/rules-bite.test.ts. */
-const engineNeighbours = "^(client/engine/|node_modules/(mathjs|zod|lib0)/)";
+const engineNeighbours = "^(client/engine/|node_modules/(mathjs|zod|lib0|odex)/)";
 
 module.exports = {
   forbidden: [
@@ -25,6 +25,13 @@ module.exports = {
       comment: "What reaches mathjs is checked in one place.",
       from: { path: "^client/engine/", pathNot: "^client/engine/notation/mathjs-parser\\.ts$" },
       to: { path: "^node_modules/mathjs/" },
+    },
+    {
+      name: "odex-has-one-door",
+      severity: "error",
+      comment: "Differential equations are integrated in one place, where poles are looked for.",
+      from: { pathNot: "^client/engine/running/integrate\\.ts$" },
+      to: { path: "^node_modules/odex/" },
     },
     {
       name: "mathjs-stays-in-the-engine",

@@ -9,6 +9,7 @@ const breaches = [
   ["engine-stays-pure", "client/engine/breach-of-rules/a.ts", 'import "react";\n'],
   ["engine-only-parses-with-mathjs", "client/engine/breach-of-rules/b.ts", 'import "mathjs";\n'],
   ["mathjs-has-one-door", "client/engine/breach-of-rules/k.ts", 'import "mathjs/number";\n'],
+  ["odex-has-one-door", "client/engine/breach-of-rules/l.ts", 'import "#odex";\n'],
   ["mathjs-stays-in-the-engine", "client/ui/breach-of-rules/c.ts", 'import "mathjs/number";\n'],
   [
     "server-takes-only-shared-code",

@@ -1,0 +1,121 @@
+/** Roots of small polynomials and eigenvalues of small matrices, in floating point. */
+
+export interface Complex {
+  readonly re: number;
+  readonly im: number;
+}
+export type NumberMatrix = readonly (readonly number[])[];
+
+const times = (a: Complex, b: Complex): Complex => ({
+  re: a.re * b.re - a.im * b.im,
+  im: a.re * b.im + a.im * b.re,
+});
+const minus = (a: Complex, b: Complex): Complex => ({ re: a.re - b.re, im: a.im - b.im });
+function over(a: Complex, b: Complex): Complex {
+  const size = b.re ** 2 + b.im ** 2;
+  return { re: (a.re * b.re + a.im * b.im) / size, im: (a.im * b.re - a.re * b.im) / size };
+}
+const SWEEPS = 400;
+
+/**
+ * All roots of Σ c_k x^k, `coefficients` by rising power, the last not zero (Durand 1960, Kerner 1966).
+ * @example polynomialRoots([-2, 0, 1]) // ±√2
+ */
+export function polynomialRoots(coefficients: readonly number[]): readonly Complex[] {
+  const degree = coefficients.length - 1;
+  const leading = coefficients[degree] ?? 0;
+  if (degree < 1 || leading === 0) return [];
+  const monic = coefficients.map((one) => one / leading);
+  const size = 1 + Math.max(...monic.slice(0, -1).map(Math.abs));
+  let roots: Complex[] = Array.from({ length: degree }, (_, k) => {
+    const angle = (2 * Math.PI * k) / degree + 0.4;
+    return { re: 0.6 * size * Math.cos(angle), im: 0.6 * size * Math.sin(angle) };
+  });
+  const at = (x: Complex) =>
+    monic.reduceRight<Complex>((sum, one) => ({ re: times(sum, x).re + one, im: times(sum, x).im }), {
+      re: 0,
+      im: 0,
+    });
+  for (let sweep = 0; sweep < SWEEPS; sweep++) {
+    let moved = 0;
+    roots = roots.map((root, own, all) => {
+      const others = all.reduce<Complex>(
+        (product, other, index) => (index === own ? product : times(product, minus(root, other))),
+        { re: 1, im: 0 },
+      );
+      if (others.re === 0 && others.im === 0) return { re: root.re + 1e-9 * size, im: root.im };
+      const step = over(at(root), others);
+      moved = Math.max(moved, Math.hypot(step.re, step.im));
+      return minus(root, step);
+    });
+    if (moved < 1e-15 * size) break;
+  }
+  // Roots of real polynomials that are real up to rounding are real.
+  return roots.map(({ re, im }) => (Math.abs(im) < 1e-7 * (1 + Math.abs(re)) ? { re, im: 0 } : { re, im }));
+}
+
+/** Eigenvalues by the characteristic polynomial (Faddeev, LeVerrier), for matrices of a few rows. */
+export function eigenvalues(matrix: NumberMatrix): readonly Complex[] {
+  const n = matrix.length;
+  if (n === 0) return [];
+  if (n === 1) return [{ re: matrix[0]?.[0] ?? 0, im: 0 }];
+  return polynomialRoots(characteristic(matrix));
+}
+
+/** det(x − A), by rising power. */
+export function characteristic(matrix: NumberMatrix): readonly number[] {
+  const n = matrix.length;
+  const coefficients: number[] = Array.from({ length: n + 1 }, (_, k) => (k === n ? 1 : 0));
+  let m: number[][] = matrix.map((row) => row.map(() => 0));
+  for (let k = 1; k <= n; k++) {
+    const known = coefficients[n - k + 1] ?? 0;
+    m = multiply(matrix, m).map((row, i) => row.map((entry, j) => entry + (i === j ? known : 0)));
+    const trace = multiply(matrix, m).reduce((sum, row, i) => sum + (row[i] ?? 0), 0);
+    coefficients[n - k] = -trace / k;
+  }
+  return coefficients;
+}
+
+function multiply(a: NumberMatrix, b: NumberMatrix): number[][] {
+  return a.map((row) => row.map((_, j) => row.reduce((sum, entry, k) => sum + entry * (b[k]?.[j] ?? 0), 0)));
+}
+
+/** Solves A x = b by elimination with pivots; null where A is singular. */
+export function solveLinear(matrix: NumberMatrix, right: readonly number[]): readonly number[] | null {
+  const rows = matrix.map((row, index) => [...row, right[index] ?? 0]);
+  const n = rows.length;
+  for (let column = 0; column < n; column++) {
+    const entry = (row: number) => Math.abs(rows[row]?.[column] ?? 0);
+    let best = column;
+    for (let row = column + 1; row < n; row++) if (entry(row) > entry(best)) best = row;
+    if (!(entry(best) > 1e-14)) return null;
+    const [top, chosen] = [rows[column] ?? [], rows[best] ?? []];
+    rows[best] = top;
+    rows[column] = chosen;
+    for (let row = 0; row < n; row++) {
+      if (row === column) continue;
+      const by = (rows[row]?.[column] ?? 0) / (chosen[column] ?? 1);
+      rows[row] = (rows[row] ?? []).map((value, index) => value - by * (chosen[index] ?? 0));
+    }
+  }
+  return rows.map((row, index) => (row[n] ?? 0) / (row[index] ?? 1));
+}
+
+/**
+ * The fraction of smallest denominator within rounding of a float, or null.
+ * @example nearbyFraction(0.3333333333333333) // [1, 3]
+ */
+export function nearbyFraction(value: number, most = 100_000): readonly [number, number] | null {
+  let [h, k, hBefore, kBefore] = [Math.floor(value), 1, 1, 0];
+  let rest = value - h;
+  while (Math.abs(value - h / k) > 1e-9 * Math.max(1, Math.abs(value))) {
+    if (rest === 0) return null;
+    const inverse = 1 / rest;
+    const whole = Math.floor(inverse);
+    rest = inverse - whole;
+    [h, hBefore] = [whole * h + hBefore, h];
+    [k, kBefore] = [whole * k + kBefore, k];
+    if (k > most) return null;
+  }
+  return [h, k];
+}
