@@ -2,6 +2,7 @@
 import type { NodeViewRenderer } from "@tiptap/core";
 import type { Node } from "@tiptap/pm/model";
 import { drawMath } from "../../ui/math.tsx";
+import { reachableWhenWide, scrollsWideEquation } from "./reachable-when-wide.ts";
 import type { DrawnFormula, MathEditing } from "./math-editing.ts";
 
 /** Sent to a formula's element to open it; `detail` is "new" for one typed just now. */
@@ -26,6 +27,7 @@ export function mathNodeView(editing: MathEditing): NodeViewRenderer {
       label: () => String(shown.attrs["label"] ?? ""),
     };
     editing.appeared(formula);
+    const endWatching = display ? reachableWhenWide(element) : () => undefined;
     const onClick = (event: MouseEvent) => {
       if (!editor.isEditable || event.shiftKey) return;
       event.preventDefault();
@@ -47,6 +49,7 @@ export function mathNodeView(editing: MathEditing): NodeViewRenderer {
         return true;
       },
       ignoreMutation: () => true,
+      stopEvent: (event) => scrollsWideEquation(event, element),
       selectNode() {
         element.classList.add("is-selected");
       },
@@ -55,6 +58,7 @@ export function mathNodeView(editing: MathEditing): NodeViewRenderer {
       },
       destroy() {
         gone = true;
+        endWatching();
         element.removeEventListener("click", onClick);
         element.removeEventListener(OPEN_FORMULA, onOpen);
         editing.vanished(formula);
