@@ -1,12 +1,10 @@
 /** Every screen, in both themes, wide and narrow: nothing serious for assistive technology, nothing off the side. */
-import type { Locator, Page } from "playwright/test";
 import { expectSound, lookOver } from "./axe.ts";
 import {
   block,
   fillField,
   makeNotebook,
   makeRefereeLink,
-  openNotebook,
   openSharing,
   prose,
   readProse,
@@ -89,55 +87,3 @@ test("the screens of a referee", async ({ enter, visit }) => {
   found.push(...(await lookOver(referee, "revoked link")));
   expectSound(found);
 });
-
-test("a notebook is made, written in and given a block with the keyboard alone", async ({ enter }) => {
-  const { page } = await enter("wren-lantern");
-  await tabTo(page, page.getByRole("button", { name: "New notebook" }).first());
-  await page.keyboard.press("Enter");
-  await tabTo(page, page.getByRole("dialog", { name: "New notebook" }).getByLabel("Title"));
-  await page.keyboard.type("By keyboard");
-  await page.keyboard.press("Enter");
-  await page.waitForURL("**/notebooks/*");
-  // A blank page waits for its first words.
-  await expect(prose(page)).toBeFocused();
-  await page.keyboard.type("Written without a mouse.");
-  await page.keyboard.press("Control+.");
-  await page.keyboard.type("premises");
-  await page.keyboard.press("Enter");
-  const premises = block(page, "Premises");
-  await expect(premises.getByLabel("name of the theory")).toBeFocused();
-  await page.keyboard.type("Lantern");
-  await tabTo(page, premises.getByLabel("symbol of a new field"));
-  await page.keyboard.type("chi");
-  await tabTo(page, premises.getByLabel("term, as typed of a new term"));
-  await page.keyboard.type("c_6/Lambda^2 chi^6");
-  await page.keyboard.press("Escape");
-  await page.keyboard.press("Escape");
-
-  await test.step("Escape leaves the block, arrow keys go past it, Enter goes back into it", async () => {
-    await expect(prose(page)).toBeFocused();
-    await page.keyboard.press("ArrowDown");
-    await page.keyboard.type("After the block.");
-    await expect(prose(page).getByText("After the block.", { exact: true })).toBeVisible();
-    await page.keyboard.press("Home");
-    await page.keyboard.press("ArrowUp");
-    await page.keyboard.press("Enter");
-    await expect(premises.locator(":focus")).toHaveCount(1);
-  });
-
-  await expect(premises.getByLabel("symbol of field 1")).toHaveValue("chi");
-  await openNotebook(page, page.url());
-  await expect(prose(page)).toContainText("Written without a mouse.");
-  await expect(block(page, "Premises").getByLabel("name of the theory")).toHaveValue("Lantern");
-  await expect(prose(page)).toContainText("After the block.");
-});
-
-/** Presses Tab until the focus is there, as often as a patient person would. */
-async function tabTo(page: Page, target: Locator): Promise<void> {
-  const MOST_PRESSES = 60;
-  for (let presses = 0; presses <= MOST_PRESSES; presses += 1) {
-    if (await target.evaluate((element) => element === document.activeElement)) return;
-    await page.keyboard.press("Tab");
-  }
-  throw new Error(`the focus did not reach ${String(target)} within ${MOST_PRESSES} presses of Tab`);
-}

@@ -57,6 +57,8 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
   const rows = block.tables[table] ?? noRows;
   const body = useRef<HTMLTableSectionElement>(null);
   const [wanted, setWanted] = useState<{ rowId: string; column: string; caretAtEnd: boolean } | null>(null);
+  /** The row that typing in the last line has made, while the focus is still where it began. */
+  const [begun, setBegun] = useState<{ rowId: string; column: string } | null>(null);
   const drag = useRowDrag(body, (rowId, beforeRowId) => block.moveRow(table, rowId, beforeRowId));
 
   // The row asked for exists in the page only after this drawing.
@@ -94,6 +96,17 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
     const row = rows[index];
     if (!row || block.readOnly || !rows[index + step]) return;
     block.moveRow(table, row.id, rows[step === -1 ? index - 1 : index + 2]?.id ?? null);
+  }
+  /** What stood there when the typing began was the empty line. */
+  function takeBack({ rowId, column }: { rowId: string; column: string }) {
+    setBegun(null);
+    block.removeRow(table, rowId);
+    const index = columns.findIndex((spec) => spec.column === column);
+    const fields = body.current?.querySelectorAll<HTMLElement>(".block-new-row td");
+    fields
+      ?.item(index + 1)
+      .querySelector("input")
+      ?.focus();
   }
   function remove(index: number) {
     const [row, neighbour] = [rows[index], rows[index + 1] ?? rows[index - 1]];
@@ -147,7 +160,7 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
                 </td>
               )}
               {columns.map((spec) => (
-                <td key={spec.column} data-heading={spec.heading}>
+                <td key={spec.column} data-heading={spec.heading} onBlur={() => setBegun(null)}>
                   <Value
                     spec={spec}
                     row={row}
@@ -155,6 +168,9 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
                     label={`${spec.heading} of ${noun} ${index + 1}`}
                     onEnter={() => goDown(index, spec.column)}
                     onPasteText={(text) => pasteAt(row.id, spec.column, text)}
+                    {...(begun?.rowId === row.id && begun.column === spec.column
+                      ? { onEscape: () => takeBack(begun) }
+                      : {})}
                   />
                 </td>
               ))}
@@ -171,9 +187,11 @@ export function RowTable({ table, noun, caption, columns, results = [], nameOf, 
               columns={columns}
               resultCount={results.length}
               invitation={rows.length === 0 ? invitation : undefined}
-              onBegin={(column, text) =>
-                setWanted({ rowId: block.addRow(table, { [column]: text }), column, caretAtEnd: true })
-              }
+              onBegin={(column, text) => {
+                const rowId = block.addRow(table, { [column]: text });
+                setWanted({ rowId, column, caretAtEnd: true });
+                setBegun({ rowId, column });
+              }}
               onPasteText={(column, text) => pasteAt(null, column, text)}
             />
           )}
@@ -193,9 +211,10 @@ interface ValueProps {
   readonly label: string;
   readonly onEnter: () => void;
   readonly onPasteText: (text: string) => boolean;
+  readonly onEscape?: () => void;
 }
 
-function Value({ spec, row, place, label, onEnter, onPasteText }: ValueProps) {
+function Value({ spec, row, place, label, onEnter, onPasteText, onEscape }: ValueProps) {
   const { options, reading, placeholder, size, notation } = spec;
   if (spec.refers) return <ReferenceField place={place} label={label} />;
   if (spec.scalarOf) return <ScalarField place={place} label={label} blockId={row[spec.scalarOf] ?? ""} />;
@@ -207,6 +226,7 @@ function Value({ spec, row, place, label, onEnter, onPasteText }: ValueProps) {
       label={label}
       onEnter={onEnter}
       onPasteText={onPasteText}
+      {...(onEscape === undefined ? {} : { onEscape })}
       {...(drawn === undefined || drawn === null ? {} : { reading: drawn })}
       {...(placeholder === undefined ? {} : { placeholder })}
       {...(size === undefined ? {} : { size })}

@@ -27,6 +27,8 @@ interface Props {
   readonly notation?: boolean;
   readonly size?: number;
   readonly onEnter?: () => void;
+  /** Takes Escape instead of the way back to what stood in the field. */
+  readonly onEscape?: () => void;
   /** True when the paste was taken care of. */
   readonly onPasteText?: (text: string) => boolean;
 }
@@ -43,6 +45,7 @@ export function TextField(props: Props) {
     notation = true,
     size,
     onEnter,
+    onEscape,
     onPasteText,
   } = props;
   const { readOnly } = useBlock();
@@ -74,9 +77,10 @@ export function TextField(props: Props) {
       event.preventDefault();
       draft.commit();
       onEnter?.();
-    } else if (event.key === "Escape" && draft.restore()) {
+    } else if (event.key === "Escape") {
       // Taken here: a second Escape leaves the field for the block.
-      event.stopPropagation();
+      if (onEscape || draft.restore()) event.stopPropagation();
+      onEscape?.();
     }
   }
   function onPaste(event: ClipboardEvent<HTMLInputElement>) {

@@ -46,6 +46,19 @@ describe("a table of rows", () => {
     expect(table()[3]).toBe("|9.26|");
   });
 
+  it("takes a begun row back whole on Escape, with the caret where it was, and undo brings it again", async () => {
+    await wren.user.type(at("X through it of a new order"), "9.26{Escape}");
+    expect(table()).toHaveLength(3);
+    expect(document.activeElement).toBe(at("X through it of a new order"));
+    act(() => void wren.world.session.history.undoOnce());
+    expect(table()).toHaveLength(4);
+  });
+
+  it("keeps a row once the focus has left where it began", async () => {
+    await wren.user.type(at("X through it of a new order"), "9.26{Tab}{Escape}");
+    expect(table()[3]).toBe("|9.26|");
+  });
+
   it("fills rows from lines of a spreadsheet, adding what is missing, as one step", () => {
     pasteInto("order n of order 3", '2\t9.33\tN2LO\r\n3\t9.26\t"N3""LO"\r\n');
     expect(table()).toEqual(["0|8.0|", "1|9.1|", "2|9.33|N2LO", '3|9.26|N3"LO']);
