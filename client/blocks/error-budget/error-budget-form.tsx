@@ -1,4 +1,4 @@
-import { combinations, conversions, sourceKinds } from "#engine/budget/inputs.ts";
+import { combinations, conversions, scalarParts, sourceKinds } from "#engine/budget/inputs.ts";
 import { useBlock } from "../block-handle.ts";
 import { ChoiceField } from "../parts/choice-field.tsx";
 import { ReferenceField, ScalarField } from "../parts/reference-field.tsx";
@@ -7,7 +7,14 @@ import { TextField } from "../parts/text-field.tsx";
 
 /** The value, typed or from a block, and the sources of its error. */
 export function ErrorBudgetForm() {
-  const { fields } = useBlock();
+  const { fields, tables } = useBlock();
+  const sources = [
+    { value: "", label: "choose a source" },
+    ...(tables["sources"] ?? []).map((row, index) => ({
+      value: row.id,
+      label: row["name"]?.trim() || `source ${index + 1}`,
+    })),
+  ];
   return (
     <div className="budget-form">
       <div className="block-settings">
@@ -43,6 +50,7 @@ export function ErrorBudgetForm() {
           { column: "size", heading: "size", size: 9, placeholder: "1.2 %" },
           { column: "from", heading: "or from", refers: true },
           { column: "scalar", heading: "its number", scalarOf: "from" },
+          { column: "part", heading: "taken is", options: scalarParts },
           { column: "group", heading: "moves with group", notation: false, size: 6, placeholder: "nothing" },
         ]}
       />
@@ -55,6 +63,17 @@ export function ErrorBudgetForm() {
         columns={[
           { column: "group", heading: "group", notation: false, size: 8 },
           { column: "coefficient", heading: "coefficient", size: 6, placeholder: "1" },
+        ]}
+      />
+      <RowTable
+        table="pairs"
+        noun="pair"
+        caption="Two sources with a coefficient of their own"
+        nameOf={(row) => sources.find(({ value }) => value !== "" && value === row["first"])?.label ?? ""}
+        columns={[
+          { column: "first", heading: "source", options: sources },
+          { column: "second", heading: "and source", options: sources },
+          { column: "coefficient", heading: "coefficient", size: 6, placeholder: "0" },
         ]}
       />
     </div>

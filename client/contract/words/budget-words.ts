@@ -21,6 +21,13 @@ export const budgetWords: Words = {
   "coefficient-unreadable": ({ text }) =>
     `${quoted(text)} is no coefficient of correlation. Give a number from -1 to 1.`,
   "coefficient-twice": ({ group }) => `The group ${quoted(group)} has two coefficients. Keep one of them.`,
+  "pair-incomplete": () => "Choose two of the sources above.",
+  "pair-with-itself": () => "A source moves with itself anyway. Choose two different ones.",
+  "pair-twice": () => "These two sources have a coefficient already. Keep one of them.",
+  "budget-scalar-certain": () =>
+    "That number has no uncertainty of its own to take. Take the number itself, or choose another.",
+  "correlations-too-many": ({ count, most }) =>
+    `${said(count)} sources are correlated with others; at most ${said(most)} are checked. Give fewer of them a group.`,
   "correlations-contradict": () =>
     "These coefficients contradict each other: the squared error would be negative. Three sources cannot all be opposed.",
   "budget-kinds-correlated": ({ groups }) =>

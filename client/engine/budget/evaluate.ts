@@ -2,9 +2,19 @@
 import { roundFloat, type Evaluation, type Problem, type Scalar } from "../evaluation.ts";
 import type { EvaluationContext } from "../kind.ts";
 import type { Theory } from "../premises/theory.ts";
-import { contradictoryGroups, linearSum, shares, variance, type Contribution } from "./combine.ts";
+import {
+  correlatedAmong,
+  isContradictory,
+  linearSum,
+  MOST_CORRELATED,
+  shares,
+  variance,
+  type Contribution,
+  type Correlation,
+} from "./combine.ts";
+import { readCorrelations } from "./correlations.ts";
 import { combinations, conversions, sourceKinds, type BudgetInputs, type SourceKind } from "./inputs.ts";
-import { readCorrelations, readSize, readValue, type Reading } from "./read-sizes.ts";
+import { readSize, readValue, type Reading } from "./read-sizes.ts";
 import { resultText, sizeText } from "./result-text.ts";
 import { readUnit } from "./units.ts";
 import type { BudgetRow, BudgetValue } from "./value.ts";
@@ -28,10 +38,10 @@ export function evaluateBudget(
     problems,
   };
   const value = readValue(inputs, reading);
-  const coefficients = readCorrelations(inputs.correlations, problems);
+  const correlations = readCorrelations(inputs, problems);
   const read = inputs.sources.flatMap((row): Read[] => {
     const size = readSize(row, value, reading);
-    return size === null ? [] : [{ row, size, group: row.group.trim() }];
+    return size === null ? [] : [{ row, rowId: row.id, size, group: row.group.trim() }];
   });
   if (read.length === 0)
     return {
@@ -41,21 +51,15 @@ export function evaluateBudget(
       scalars: [],
       working: [],
     };
-  const coefficientOf = (group: string) => coefficients.get(group) ?? 1;
+  const correlationOf = correlations.of;
   const linear = inputs.combine === combinations[1];
-  const squared = Math.max(0, variance(read, coefficientOf));
-  if (!linear && contradictoryGroups(read, coefficientOf).length > 0)
-    return {
-      value: null,
-      problems: [...problems, { code: "correlations-contradict", path: ["correlations"], facts: {} }],
-      notices: [],
-      scalars: [],
-      working: [],
-    };
+  const squared = Math.max(0, variance(read, correlationOf));
+  const wrong = linear ? null : wrongWith(read, correlations.hasPairs, correlationOf);
+  if (wrong) return { value: null, problems: [...problems, wrong], notices: [], scalars: [], working: [] };
   const combined = (some: readonly Contribution[]) =>
-    linear ? linearSum(some) : Math.sqrt(Math.max(0, variance(some, coefficientOf)));
+    linear ? linearSum(some) : Math.sqrt(Math.max(0, variance(some, correlationOf)));
   const total = combined(read);
-  const parts = shares(read, coefficientOf);
+  const parts = shares(read, correlationOf);
   const unit = inputs.unit.trim();
   const rows = read.map(({ row, size, group }, index): BudgetRow => ({
     rowId: row.id,
@@ -91,38 +95,52 @@ export function evaluateBudget(
   return {
     value: result,
     problems,
-    notices: noticesOf(read, linear, coefficientOf),
+    notices: noticesOf(read, linear, correlationOf),
     scalars: scalarsOf(result),
-    working: budgetWorking(result, read, coefficientOf, linear),
+    working: budgetWorking(result, read, correlationOf, linear),
   };
+}
+
+/** Coefficients that no random numbers can have, or too many to tell. */
+function wrongWith(read: readonly Read[], hasPairs: boolean, correlationOf: Correlation): Problem | null {
+  const path = [hasPairs ? "pairs" : "correlations"];
+  const count = correlatedAmong(read, correlationOf).length;
+  if (count > MOST_CORRELATED)
+    return { code: "correlations-too-many", path, facts: { count, most: MOST_CORRELATED } };
+  return isContradictory(read, correlationOf) ? { code: "correlations-contradict", path, facts: {} } : null;
 }
 
 function kindOf(text: string): SourceKind {
   return sourceKinds.find((kind) => kind === text) ?? "other";
 }
 
-function noticesOf(
-  read: readonly Read[],
-  linear: boolean,
-  coefficientOf: (group: string) => number,
-): Problem[] {
+function noticesOf(read: readonly Read[], linear: boolean, correlationOf: Correlation): Problem[] {
   if (linear) return [];
   const has = (kind: SourceKind) => read.some(({ row }) => row.kind === kind);
   const notices: Problem[] = [];
   if (has("scale variation") && has("truncation"))
     notices.push({ code: "scale-variation-and-truncation", path: ["sources"], facts: {} });
-  const kindsOf = (group: string) =>
-    new Set(read.filter((one) => one.group === group && one.size !== 0).map(({ row }) => row.kind));
-  const across = [...new Set(read.map(({ group }) => group))].filter(
-    (group) => group !== "" && coefficientOf(group) !== 0 && kindsOf(group).size > 1,
+  const present = read.filter(({ size }) => size !== 0);
+  const across = present.flatMap((one, index) =>
+    present
+      .slice(index + 1)
+      .filter((other) => one.row.kind !== other.row.kind && correlationOf(one, other) !== 0)
+      .map((other) => (one.group !== "" && one.group === other.group ? one.group : pairName(one, other))),
   );
   if (across.length > 0)
     notices.push({
       code: "budget-kinds-correlated",
       path: ["sources"],
-      facts: { groups: across.join(", ") },
+      facts: { groups: [...new Set(across)].slice(0, MOST_NAMED).join(", ") },
     });
   return notices;
+}
+
+const MOST_NAMED = 5;
+
+function pairName(one: Read, other: Read): string {
+  const name = ({ row }: Read) => row.name.trim() || row.kind;
+  return `${name(one)} and ${name(other)}`;
 }
 
 function scalarsOf(value: BudgetValue): Scalar[] {

@@ -5,6 +5,8 @@ export const sourceKinds = ["truncation", "parametric", "numerical", "scale vari
 export type SourceKind = (typeof sourceKinds)[number];
 export const combinations = ["in quadrature, with the correlations stated", "linearly"] as const;
 export const conversions = ["units as they are", "natural units, ħ = c = 1"] as const;
+/** What is taken of a number of another block. */
+export const scalarParts = ["the number", "its uncertainty"] as const;
 
 export const budgetShape = defineShape({
   fields: {
@@ -31,6 +33,8 @@ export const budgetShape = defineShape({
       /** Or taken from a block. */
       from: reference("any"),
       scalar: text(),
+      /** What of that number is the error: itself, or its own uncertainty. */
+      part: choice(...scalarParts),
       /** Sources of one group move together. */
       group: text(),
     },
@@ -38,6 +42,12 @@ export const budgetShape = defineShape({
       group: text(),
       /** Between any two sources of the group, −1 to 1; 1 where nothing is said. */
       coefficient: text("1"),
+    },
+    /** Two sources, by the ids of their rows, that have a coefficient of their own, whatever their groups. */
+    pairs: {
+      first: text(),
+      second: text(),
+      coefficient: text(),
     },
   },
 });

@@ -3,7 +3,8 @@ import type { InputPath, Problem, ScalarValue } from "../evaluation.ts";
 import type { EvaluationContext } from "../kind.ts";
 import { readQuantity } from "../notation/read-quantity.ts";
 import { sigmaOf } from "../notation/quantity.ts";
-import type { BudgetInputs } from "./inputs.ts";
+import { scalarParts, type BudgetInputs } from "./inputs.ts";
+import { plainNumber } from "./plain-number.ts";
 import { convert, readUnit, type BudgetUnit } from "./units.ts";
 
 export interface Reading {
@@ -28,7 +29,13 @@ export function readSize(
 ): number | null {
   const path = ["sources", row.id, "size"];
   if (row.from !== "")
-    return fromBlock(row.from, row.scalar, ["sources", row.id, "scalar"], reading, "error");
+    return fromBlock(
+      row.from,
+      row.scalar,
+      ["sources", row.id, "scalar"],
+      reading,
+      row.part === scalarParts[1] ? "uncertainty" : "error",
+    );
   if (row.size.trim() === "") {
     if (row.name.trim() !== "")
       reading.problems.push({ code: "size-missing", path, facts: { name: row.name } });
@@ -40,11 +47,6 @@ export function readSize(
   if (part === null) return refuse(reading, path, "size-unreadable", { text: row.size });
   if (value === null) return refuse(reading, path, "percent-of-nothing", {});
   return (part / 100) * value;
-}
-
-function plainNumber(text: string): number | null {
-  const number = Number(text.trim().replace("−", "-"));
-  return text.trim() !== "" && Number.isFinite(number) ? number : null;
 }
 
 function refuse(reading: Reading, path: InputPath, code: string, facts: Problem["facts"]): null {
@@ -98,20 +100,21 @@ function inUnit(
   });
 }
 
-/** Of a number with an uncertainty of its own, the value's row takes the value; an error is the number itself. */
+/** The value's row takes the value of a number; an error is the number itself, or the uncertainty it comes with. */
 function fromBlock(
   blockId: string,
   scalarId: string,
   path: InputPath,
   reading: Reading,
-  what: "value" | "error",
+  what: "value" | "error" | "uncertainty",
 ): number | null {
   const source = reading.context.source(blockId);
   // Why there is none is said already.
   if (!source) return null;
   const scalar = source.scalars.find(({ id }) => id === scalarId);
   if (!scalar) return refuse(reading, path, "budget-scalar-missing", { what });
-  const number = numberOf(scalar.value);
+  const number = what === "uncertainty" ? sigmaIn(scalar.value) : numberOf(scalar.value);
+  if (what === "uncertainty" && number === null) return refuse(reading, path, "budget-scalar-certain", {});
   if (number === null) return refuse(reading, path, "budget-scalar-no-number", { what });
   const unit = scalar.value.type === "number" ? (scalar.value.unit ?? "") : "";
   return inUnit(number, readUnit(unit), path, reading, scalar.id);
@@ -122,24 +125,6 @@ function numberOf(value: ScalarValue): number | null {
   return value.type === "exact" ? plainNumber(value.text) : null;
 }
 
-/** Coefficients by group. */
-export function readCorrelations(
-  rows: BudgetInputs["correlations"],
-  problems: Problem[],
-): ReadonlyMap<string, number> {
-  const found = new Map<string, number>();
-  for (const { id, group, coefficient } of rows) {
-    if (group.trim() === "") continue;
-    const value = plainNumber(coefficient);
-    if (value === null || value < -1 || value > 1)
-      problems.push({
-        code: "coefficient-unreadable",
-        path: ["correlations", id, "coefficient"],
-        facts: { text: coefficient },
-      });
-    else if (found.has(group.trim()))
-      problems.push({ code: "coefficient-twice", path: ["correlations", id, "group"], facts: { group } });
-    else found.set(group.trim(), value);
-  }
-  return found;
+function sigmaIn(value: ScalarValue): number | null {
+  return value.type === "number" ? (value.sigma ?? null) : null;
 }

@@ -40,6 +40,9 @@ async function formsAreThere() {
   });
 }
 
+/** Written by reading in a file, and by nobody's hand. */
+const unTyped: Readonly<Record<string, readonly string[]>> = { data: ["original", "lastImport"] };
+
 describe.each(kindNames)("the form of %s", (kind) => {
   const { shape } = kindDescriptions[kind];
   const variants: Record<string, Record<string, string>[]> = {
@@ -70,7 +73,7 @@ describe.each(kindNames)("the form of %s", (kind) => {
       cleanup();
     }
     const wanted = [
-      ...Object.keys(shape.fields),
+      ...Object.keys(shape.fields).filter((field) => !(unTyped[kind] ?? []).includes(field)),
       ...Object.entries(shape.tables).flatMap(([table, columns]) =>
         Object.keys(columns).map((column) => `${table}/${column}`),
       ),

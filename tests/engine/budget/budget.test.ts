@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { contradictoryGroups, linearSum, variance } from "#engine/budget/combine.ts";
+import { isContradictory, linearSum, variance } from "#engine/budget/combine.ts";
 import { budgetShape, type BudgetInputs } from "#engine/budget/inputs.ts";
 import { errorBudget } from "#engine/budget/kind.ts";
 import { resultText } from "#engine/budget/result-text.ts";
@@ -17,11 +17,12 @@ const source = (name: string, size: string, more: Partial<Source> = {}): Source 
   size,
   from: "",
   scalar: "",
+  part: "the number",
   group: "",
   ...more,
 });
 const evaluate = (inputs: Partial<BudgetInputs>, context: EvaluationContext = aloneContext) =>
-  errorBudget.evaluate({ ...initial, sources: [], correlations: [], ...inputs }, null, context);
+  errorBudget.evaluate({ ...initial, sources: [], correlations: [], pairs: [], ...inputs }, null, context);
 const total = (inputs: Partial<BudgetInputs>) => {
   const { value, problems } = evaluate(inputs);
   return value?.total ?? expect.fail(problems.map(({ code }) => code).join(", "));
@@ -66,8 +67,12 @@ describe("errors combined", () => {
     [4, -0.3333, false],
     [4, -0.4, true],
   ])("%d of one group with coefficient %d contradict each other: %s", (count, r, contradict) => {
-    const list = Array.from({ length: count }, (_, index) => ({ size: index === 0 ? 10 : 1, group: "g" }));
-    expect(contradictoryGroups(list, () => r).length > 0).toBe(contradict);
+    const list = Array.from({ length: count }, (_, index) => ({
+      rowId: String(index),
+      size: index === 0 ? 10 : 1,
+      group: "g",
+    }));
+    expect(isContradictory(list, () => r)).toBe(contradict);
   });
   it("are refused when they contradict each other, also beside a large error", () => {
     const sources = ["a", "b", "c"].map((name) =>
@@ -90,6 +95,7 @@ describe("errors combined", () => {
   });
   it("linearly are never less than otherwise, and never more than their sizes", () => {
     const contribution = fc.record({
+      rowId: fc.constant("a"),
       size: fc.double({ min: -10, max: 10, noNaN: true }),
       group: fc.constantFrom("", "a", "b"),
     });
@@ -98,11 +104,80 @@ describe("errors combined", () => {
         fc.array(contribution, { maxLength: 6 }),
         fc.double({ min: 0, max: 1, noNaN: true }),
         (list, r) => {
-          const squared = variance(list, () => r);
+          const squared = variance(list, (one, other) =>
+            one.group !== "" && one.group === other.group ? r : 0,
+          );
           expect(squared).toBeGreaterThanOrEqual(-1e-9);
           expect(Math.sqrt(Math.max(0, squared))).toBeLessThanOrEqual(linearSum(list) + 1e-9);
         },
       ),
+    );
+  });
+  // JCGM 100:2008, H.2, from memory: five simultaneous readings of voltage, current and phase angle (table H.2), their means
+  // and coefficients of correlation, and resistance, reactance and impedance with their uncertainties (tables H.3, H.4).
+  // From the readings follow the printed digits, but for the last one of the error of X; the sensitivities are those of R = (V/I) cos φ, X = (V/I) sin φ, Z = V/I.
+  describe("with a coefficient for each pair: resistance and reactance measured at once (GUM, H.2)", () => {
+    const readings = {
+      V: [5.007, 4.994, 5.005, 4.99, 4.999],
+      I: [19.663e-3, 19.639e-3, 19.64e-3, 19.685e-3, 19.678e-3],
+      phi: [1.0456, 1.0438, 1.0468, 1.0428, 1.0433],
+    };
+    const mean = (list: readonly number[]) => list.reduce((sum, one) => sum + one, 0) / list.length;
+    const covariance = (a: readonly number[], b: readonly number[]) =>
+      a.reduce((sum, one, n) => sum + (one - mean(a)) * ((b[n] ?? NaN) - mean(b)), 0) /
+      (a.length * (a.length - 1));
+    const u = (list: readonly number[]) => Math.sqrt(covariance(list, list));
+    const r = (a: readonly number[], b: readonly number[]) => covariance(a, b) / (u(a) * u(b));
+    const [V, I, phi] = [mean(readings.V), mean(readings.I), mean(readings.phi)];
+    const pairs = [
+      { id: "1", first: "V", second: "I", coefficient: String(r(readings.V, readings.I)) },
+      { id: "2", first: "phi", second: "V", coefficient: String(r(readings.V, readings.phi)) },
+      { id: "3", first: "I", second: "phi", coefficient: String(r(readings.I, readings.phi)) },
+    ];
+    it("has the printed means and coefficients", () => {
+      expect([V, 1000 * I, phi].map((one, n) => one.toFixed([4, 4, 5][n]))).toEqual([
+        "4.9990",
+        "19.6610",
+        "1.04446",
+      ]);
+      expect(pairs.map(({ coefficient }) => Number(coefficient).toFixed(2))).toEqual([
+        "-0.36",
+        "0.86",
+        "-0.65",
+      ]);
+    });
+    it.each([
+      ["R", (V / I) * Math.cos(phi), -(V / I) * Math.sin(phi), "127.732", "0.071"],
+      ["X", (V / I) * Math.sin(phi), (V / I) * Math.cos(phi), "219.847", "0.295"],
+      ["Z", V / I, 0, "254.260", "0.236"],
+    ])("%s", (_, value, byAngle, printed, error) => {
+      const sources = [
+        source("V", String((value / V) * u(readings.V))),
+        source("I", String((-value / I) * u(readings.I))),
+        source("phi", String(byAngle * u(readings.phi))),
+      ];
+      expect(value.toFixed(3)).toBe(printed);
+      // From memory 0.295 is printed for X, where the readings give 0.2956.
+      if (printed === "219.847")
+        expect(Math.abs(total({ sources, pairs }) - Number(error))).toBeLessThan(0.001);
+      else expect(total({ sources, pairs }).toFixed(3)).toBe(error);
+    });
+  });
+  it("by pairs: one's own coefficient counts before the group's", () => {
+    const sources = ["a", "b", "c"].map((name) => source(name, "1", { group: "g" }));
+    const pairs = [{ id: "p", first: "c", second: "a", coefficient: "−0.5" }];
+    // 3 + 2 (1 · 2 − 0.5): but a with b, and b with c, fully, leave a and c no choice.
+    expect(codes({ sources, pairs })).toContain("correlations-contradict");
+    const correlations = [{ id: "g", group: "g", coefficient: "0.25" }];
+    expect(total({ sources, pairs, correlations })).toBeCloseTo(Math.sqrt(3 + 2 * (0.25 + 0.25 - 0.5)), 11);
+  });
+  it.each([
+    [{ first: "a", second: "gone", coefficient: "0.5" }, "pair-incomplete"],
+    [{ first: "a", second: "a", coefficient: "0.5" }, "pair-with-itself"],
+    [{ first: "a", second: "b", coefficient: "" }, "coefficient-unreadable"],
+  ])("pair %j: %s", (pair, code) => {
+    expect(codes({ sources: [source("a", "1"), source("b", "1")], pairs: [{ id: "p", ...pair }] })).toContain(
+      code,
     );
   });
   it("have shares that add up to the whole", () => {
@@ -175,6 +250,7 @@ describe("a number of another block", () => {
             scalars: [
               { id: "error", label: "", value: { type: "number", value: 120, unit: "MeV" } },
               { id: "order", label: "", value: { type: "word", text: "none" } },
+              { id: "fit", label: "", value: { type: "number", value: 5000, sigma: 70, unit: "MeV" } },
             ],
           }
         : null,
@@ -186,6 +262,13 @@ describe("a number of another block", () => {
   });
   it("is taken in the unit of the budget", () => {
     expect(evaluate(taken("error"), context).value?.total).toBeCloseTo(0.12, 12);
+  });
+  it("is taken by its own uncertainty, where it has one", () => {
+    const part = "its uncertainty";
+    const fit = { unit: "GeV", sources: [source("fit", "", { from: "t", scalar: "fit", part })] };
+    expect(evaluate(fit, context).value?.total).toBeCloseTo(0.07, 12);
+    const error = { unit: "GeV", sources: [source("fit", "", { from: "t", scalar: "error", part })] };
+    expect(codes(error, context)).toContain("budget-scalar-certain");
   });
   it.each([
     ["", "budget-scalar-missing"],
