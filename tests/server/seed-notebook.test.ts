@@ -1,4 +1,6 @@
 /** The demonstration notebooks are complete and agree with themselves. */
+import { evaluateNotebook, readDocument } from "#engine/index.ts";
+import { ternBlocks } from "../../server/commands/tern-notebook.ts";
 import { expect, test } from "vitest";
 import { seedDemonstration } from "../../server/commands/seed-demonstration.ts";
 import { openDatabase, rows } from "../../server/data/database.ts";
@@ -30,6 +32,7 @@ test("both notebooks wait for their authors, with every result stored and every 
       "lantern-plan",
       "lantern-scaling",
       "tern",
+      "tern-data",
       "tern-error",
       "tern-graph",
       "tern-plan",
@@ -50,4 +53,20 @@ test("both notebooks wait for their authors, with every result stored and every 
     await database.destroy();
     await drop();
   }
+});
+
+test("the Tern notebook's 68 % intervals cover about 68 % of what is exactly known there", () => {
+  const { blocks } = readDocument({ type: "doc", content: ternBlocks });
+  const onInternalError = (error: unknown) => {
+    throw error;
+  };
+  const outcomes = evaluateNotebook(blocks, { memo: new Map(), onInternalError });
+  const scalars = outcomes.find(({ blockId }) => blockId === "tern-error")?.evaluation.scalars ?? [];
+  const share = (degree: number) => {
+    const value = scalars.find(({ id }) => id === `covered/${degree}`)?.value;
+    return value?.type === "number" ? value.value : NaN;
+  };
+  // 31 neighbours along one curve count as few: the share may stray by this much.
+  expect(Math.abs(share(68) - 0.68)).toBeLessThan(0.05);
+  expect(Math.abs(share(95) - 0.95)).toBeLessThan(0.05);
 });
