@@ -95,7 +95,7 @@ export function TextField(props: Props) {
           {label}
         </label>
       )}
-      <div className="block-field-box">
+      <div className="block-field-box" data-value={draft.text}>
         <input
           ref={input}
           id={id}
