@@ -10,16 +10,19 @@ const shapes: Readonly<Record<ScalingClass, string>> = {
 export function ClassMark({
   scalingClass,
   word = true,
+  says = scalingClass,
 }: {
   readonly scalingClass: ScalingClass;
   readonly word?: boolean;
+  /** A finer word for the class: "marginally irrelevant". */
+  readonly says?: string;
 }) {
   return (
     <span className={`block-class block-class-${scalingClass}`}>
       <svg width="10" height="10" viewBox="0 0 10 10" aria-hidden="true" focusable="false">
         <path d={shapes[scalingClass]} fill="currentColor" />
       </svg>
-      {word ? scalingClass : <span className="sr-only">{scalingClass}</span>}
+      {word ? says : <span className="sr-only">{says}</span>}
     </span>
   );
 }

@@ -85,7 +85,7 @@ function ClassOf({ row, symbol }: { readonly row: ScalingRow; readonly symbol: s
   if (row.scalingClass) {
     return (
       <Figure scalar={`${row.rowId}/class`}>
-        <ClassMark scalingClass={row.scalingClass} />
+        <ClassMark scalingClass={row.scalingClass} says={row.marginally ?? row.scalingClass} />
       </Figure>
     );
   }

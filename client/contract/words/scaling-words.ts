@@ -19,6 +19,15 @@ export const scalingWords: Words = {
     `The relevant term ${formula(facts["term"])} has its natural size, which upsets the counting. If it is tuned or protected, assign its size in the premises${facts["written"] ? `, such as ${quoted(facts["written"])}` : ""}.`,
   "loop-mass-below-probe": ({ ratio }) =>
     `If the heavy couplings come from loops of weak coupling, new states lie near Λ/4π, and the probe scale is ${said(ratio)} times that.`,
+  // With a Running block.
+  "fixed-point-gone": ({ text }) =>
+    `${quoted(text)} is none of the fixed points of that block. Choose another.`,
+  "fixed-point-above-critical": ({ d }) =>
+    `That fixed point exists below d = ${said(d)}, in isotropic spacetime. Set d of the premises below it, or leave it symbolic.`,
+  "running-of-other-premises": () =>
+    "That block runs none of these terms. Choose a Running block that stands on the same premises.",
+  "dimensions-not-known-there": ({ terms }) =>
+    `${formula(terms)} mix at the fixed point or are not covered there, so their dimensions are those of their fields.`,
   // Naive dimensional analysis.
   "analysis-needs-four-dimensions": () =>
     "Naive dimensional analysis is given here for d = 4 only. Set d to 4, or choose natural size.",

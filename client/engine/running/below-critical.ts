@@ -27,6 +27,7 @@ export function belowCritical(context: RunningContext): RunningPart {
     plot: null,
     epsilon: epsilon && shown(epsilon),
     fixedPoints: [],
+    drifts: [],
     problems,
     notices: [],
     scalars: [],
@@ -132,6 +133,17 @@ function presentPoint(
     name: point.couplings.every((value) => value === 0) ? "Gaussian" : `${index}`,
     unstable,
     exponents: classes.flatMap((one) => exponentsOf(one, nameOf(point, marginal), context, epsilon)),
+    dimensions: classes.flatMap(({ parameters, own, constant }) =>
+      parameters.flatMap(({ rowIds }, at) => {
+        const slope = own[at];
+        if (!slope) return [];
+        const form = {
+          constant: constant.plus(Rational.of(critical)).toString(),
+          perEpsilon: slope.minus(Rational.one).toString(),
+        };
+        return rowIds.map((rowId) => ({ rowId, ...form }));
+      }),
+    ),
     etas: point.etas.map(({ variable, order, value, exact }) => ({
       field: variable,
       latex: model.scalars.find(({ name }) => name === variable)?.latex ?? variable,

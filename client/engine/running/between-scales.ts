@@ -6,6 +6,7 @@ import type { RunningContext, RunningPart } from "./evaluate.ts";
 import { relativeSlopes, run, runnable, type RunningResult, type RunningSystem } from "./flow.ts";
 import { readScales, readStarts, type RunningScales } from "./read-scales.ts";
 import type { CouplingRow, RunningPlot, ScaleColumn } from "./value.ts";
+import { driftsOf } from "./drifts.ts";
 import { runningWorking } from "./working.ts";
 
 const SAMPLES = 61;
@@ -36,6 +37,7 @@ export function betweenScales(context: RunningContext): RunningPart {
     plot: null,
     epsilon: null,
     fixedPoints: [],
+    drifts: driftsOf(context, new Map()),
     problems,
     notices,
     scalars: [],
@@ -92,6 +94,7 @@ export function betweenScales(context: RunningContext): RunningPart {
     plot: plotOf(rows, result, samples, stateAt, scales, pole),
     epsilon: null,
     fixedPoints: [],
+    drifts: driftsOf(context, starts),
     problems,
     notices,
     scalars: scalarsOf(couplings, columns, pole),

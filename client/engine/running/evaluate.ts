@@ -31,7 +31,7 @@ export interface RunningContext {
 /** What one half adds to the β functions. */
 export interface RunningPart
   extends
-    Pick<RunningValue, "scales" | "couplings" | "pole" | "plot" | "epsilon" | "fixedPoints">,
+    Pick<RunningValue, "scales" | "couplings" | "pole" | "plot" | "epsilon" | "fixedPoints" | "drifts">,
     Pick<Evaluation, "problems" | "notices" | "scalars" | "working"> {}
 
 const MOST_PARAMETERS = 24;
@@ -80,8 +80,11 @@ export function evaluateRunning(inputs: RunningInputs, theory: Theory | null): E
     couplings: part.couplings,
     pole: part.pole,
     plot: part.plot,
+    critical,
     epsilon: part.epsilon,
     fixedPoints: part.fixedPoints,
+    drifts: part.drifts,
+    termRows: model.parameters.flatMap(({ rowIds }) => rowIds),
   };
   const notices: Notice[] = [
     ...(theory ? incompletePremises(theory) : []),

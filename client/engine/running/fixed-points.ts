@@ -33,6 +33,8 @@ export interface ExponentClass {
   /** Slope at ε = 0: −(d₀ − n(d₀ − 2)/2). */
   readonly constant: Rational;
   readonly slopes: readonly { readonly value: Complex; readonly exact: Rational | null }[];
+  /** By parameter: b where moving it moves no other one of the class and b is a fraction; else null. */
+  readonly own: readonly (Rational | null)[];
 }
 export type Critical = 4 | 3;
 
@@ -147,7 +149,11 @@ function quadraticSolutions(
     const slope = x !== 0 ? form(first, x, y) / x : form(second, x, y) / y;
     return Math.abs(slope) < 1e-12 ? [] : [[(c * x) / slope, (c * y) / slope]];
   });
-  return distinct([[0, 0], ...points.map((point) => polish(equations, variables, point) ?? point)]);
+  return distinct(
+    [[0, 0], ...points.map((point) => polish(equations, variables, point) ?? point)],
+    equations,
+    variables,
+  );
 }
 
 /** Newton's method from a lattice of places. */
@@ -182,7 +188,7 @@ function searched(
     );
     return sign < 0 || (point[sign] ?? 0) > 0;
   });
-  return distinct([zero, ...chosen]);
+  return distinct([zero, ...chosen], equations, variables);
 }
 const LATTICE = [-2.5, -0.9, -0.25, 0.2, 0.8, 2.2, 5];
 const NEWTON_STEPS = 60;
@@ -213,23 +219,33 @@ function polish(
   return null;
 }
 
-function distinct(points: readonly number[][]): readonly number[][] {
+/** A double root is found to half the digits only, from every side: of points so close the best stands for all. */
+const SAME = 1e-5;
+
+function distinct(
+  points: readonly number[][],
+  equations: readonly Polynomial[],
+  variables: readonly string[],
+): readonly number[][] {
+  const functions = equations.map((equation) => equation.compile(variables));
+  const residual = (point: readonly number[]) => Math.hypot(...functions.map((f) => f(point)));
   const kept: number[][] = [];
-  for (const point of points)
-    if (!kept.some((other) => other.every((value, index) => Math.abs(value - (point[index] ?? 0)) < 1e-7)))
+  for (const point of [...points].sort((a, b) => residual(a) - residual(b)))
+    if (!kept.some((other) => other.every((value, index) => Math.abs(value - (point[index] ?? 0)) < SAME)))
       kept.push(point);
   return kept;
 }
 
 function describe(
-  couplings: readonly number[],
+  found: readonly number[],
   model: Model,
   marginal: readonly Parameter[],
   slopes: readonly Polynomial[],
   equations: readonly Polynomial[],
   critical: Critical,
 ): FixedPoint {
-  const exact = exactPoint(couplings, marginal, equations);
+  const exact = exactPoint(found, marginal, equations);
+  const couplings = exact ? exact.map((one) => one.toFloat()) : found;
   const legs = [
     ...new Set(model.parameters.map((one) => (one.yukawa.length > 0 ? critical : one.legs))),
   ].sort((a, b) => a - b);
@@ -247,13 +263,17 @@ function describe(
   return { couplings, exact, classes, etas: critical === 4 ? etasOf(couplings, exact, model, marginal) : [] };
 }
 
+/** How far a fraction may lie from the root found; it counts only if it solves the equations exactly. */
+const EXACT_WITHIN = 1e-6;
+const MOST_BELOW_THE_LINE = 5000;
+
 function exactPoint(
   couplings: readonly number[],
   marginal: readonly Parameter[],
   equations: readonly Polynomial[],
 ): readonly Rational[] | null {
   const fractions = couplings.map((value) => {
-    const found = nearbyFraction(value);
+    const found = nearbyFraction(value, EXACT_WITHIN, MOST_BELOW_THE_LINE);
     return found ? Rational.of(found[0], found[1]) : null;
   });
   const point = fractions.filter((one): one is Rational => one !== null);
@@ -308,6 +328,10 @@ function exponentClass(
     legs: first.legs,
     marginal: isMarginalClass,
     constant: canonicalSlope(first, critical).constant,
+    own: own.map((_, column) => {
+      const moves = exactMatrix?.some((row, index) => index !== column && row[column]?.sign() !== 0) ?? true;
+      return moves ? null : (exactMatrix?.[column]?.[column] ?? null);
+    }),
     slopes: [...eigenvalues(matrix)]
       .sort((a, b) => a.re - b.re)
       .map((value) => ({ value, exact: exactEigenvalue(value, exactMatrix) })),
@@ -317,7 +341,7 @@ function exponentClass(
 /** A float is the fraction next to it when that one is an eigenvalue exactly: det(A − x) = 0. */
 function exactEigenvalue(value: Complex, matrix: readonly (readonly Rational[])[] | null): Rational | null {
   if (!matrix || value.im !== 0) return null;
-  const near = nearbyFraction(Number(value.re.toPrecision(9)));
+  const near = nearbyFraction(value.re, EXACT_WITHIN, MOST_BELOW_THE_LINE);
   if (!near) return null;
   const candidate = Rational.of(near[0], near[1]);
   const shifted = matrix.map((row, i) => row.map((entry, j) => (i === j ? entry.minus(candidate) : entry)));

@@ -102,13 +102,17 @@ export function solveLinear(matrix: NumberMatrix, right: readonly number[]): rea
 }
 
 /**
- * The fraction of smallest denominator within rounding of a float, or null.
+ * The first convergent that lies `within` of a float, with at most `most` below the line; else null.
  * @example nearbyFraction(0.3333333333333333) // [1, 3]
  */
-export function nearbyFraction(value: number, most = 100_000): readonly [number, number] | null {
+export function nearbyFraction(
+  value: number,
+  within = 1e-9,
+  most = 100_000,
+): readonly [number, number] | null {
   let [h, k, hBefore, kBefore] = [Math.floor(value), 1, 1, 0];
   let rest = value - h;
-  while (Math.abs(value - h / k) > 1e-9 * Math.max(1, Math.abs(value))) {
+  while (Math.abs(value - h / k) > within * Math.max(1, Math.abs(value))) {
     if (rest === 0) return null;
     const inverse = 1 / rest;
     const whole = Math.floor(inverse);

@@ -43,6 +43,8 @@ export interface FixedPointRow {
   /** How many of the marginal directions flow away toward low energy. */
   readonly unstable: number;
   readonly exponents: readonly ExponentRow[];
+  /** Terms that keep their form along the flow; others mix and have no dimension of their own. */
+  readonly dimensions: readonly TermDimension[];
   /** η of each scalar field to the lowest order at which it is not zero; 2γ. */
   readonly etas: readonly {
     readonly field: string;
@@ -63,6 +65,18 @@ export interface ExponentRow {
   readonly dimension: number;
 }
 
+/** What a term of the premises becomes at a fixed point: Δ = constant + perEpsilon · ε, fractions as text. */
+export interface TermDimension {
+  readonly rowId: string;
+  readonly constant: string;
+  readonly perEpsilon: string;
+}
+/** How the coupling of a term in d = 4 moves with the scale at one loop; null where its sign depends on values. */
+export interface TermDrift {
+  readonly rowId: string;
+  readonly drift: "grows with energy" | "fades with energy" | "stays" | null;
+}
+
 export interface RunningValue {
   readonly about: (typeof subjects)[number];
   readonly betas: readonly BetaRow[];
@@ -77,6 +91,11 @@ export interface RunningValue {
     readonly unit: string;
   } | null;
   readonly plot: RunningPlot | null;
+  /** Dimension of spacetime where the marginal couplings are marginal. */
+  readonly critical: 4 | 3;
   readonly epsilon: Exact | null;
   readonly fixedPoints: readonly FixedPointRow[];
+  readonly drifts: readonly TermDrift[];
+  /** Rows of the premises' terms whose couplings run here. */
+  readonly termRows: readonly string[];
 }

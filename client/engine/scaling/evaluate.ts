@@ -4,6 +4,7 @@ import type { DimensionSymbol } from "../exact/linear-form.ts";
 import { shown as shownExact } from "../exact/shown.ts";
 import { shown } from "../notation/quantity.ts";
 import { incompletePremises } from "../premises/incomplete.ts";
+import { aloneContext, type EvaluationContext } from "../kind.ts";
 import { presentEstimate, presentMeasured } from "../premises/present-measured.ts";
 import { exactValue, numberValue } from "../premises/scalars.ts";
 import type { Term, Theory } from "../premises/theory.ts";
@@ -17,14 +18,19 @@ import { scalingPlot } from "./plot.ts";
 import { sizeOf, type Size } from "./sizes.ts";
 import type { ScalingRow, ScalingValue } from "./value.ts";
 import { scalingWorking, type WorkedRow } from "./working.ts";
+import { withRunning, type WithRunning } from "./with-running.ts";
 import { readWorkingPoint, type Point } from "./working-point.ts";
 
 /**
  * Problems: `premises-missing`, those of the working point and of naive dimensional analysis. With the latter or
  * without a working point, dimensions and classes are still given, and no sizes.
  */
-export function evaluateScaling(inputs: ScalingInputs, theory: Theory | null): Evaluation<ScalingValue> {
-  if (!theory) {
+export function evaluateScaling(
+  inputs: ScalingInputs,
+  premises: Theory | null,
+  context: EvaluationContext = aloneContext,
+): Evaluation<ScalingValue> {
+  if (!premises) {
     return {
       value: null,
       problems: [{ code: "premises-missing", path: ["standsOn"], facts: {} }],
@@ -33,6 +39,8 @@ export function evaluateScaling(inputs: ScalingInputs, theory: Theory | null): E
       working: [],
     };
   }
+  const ran = withRunning(premises, inputs, context);
+  const { theory } = ran;
   const counting = inputs.at === "naive dimensional analysis" ? inputs.at : "natural size";
   const point = readWorkingPoint(theory, inputs);
   const refusals = counting === "natural size" ? [] : analysisRefusals(theory);
@@ -41,7 +49,7 @@ export function evaluateScaling(inputs: ScalingInputs, theory: Theory | null): E
     const found = sizeOf(term, theory, point, counting);
     const size: Size =
       refusals.length > 0 && found.from !== "assigned" ? { ...found, quantity: null } : found;
-    return { term, size, row: presentRow(term, size, free) };
+    return { term, size, row: presentRow(term, size, free, ran) };
   });
   const heavyLatex = point.heavy?.latex ?? "\\Lambda";
   const value: ScalingValue = {
@@ -59,14 +67,15 @@ export function evaluateScaling(inputs: ScalingInputs, theory: Theory | null): E
   };
   return {
     value,
-    problems: [...point.problems, ...refusals],
+    problems: [...point.problems, ...refusals, ...ran.problems],
     notices: [
       ...incompletePremises(theory),
       ...point.notices,
+      ...ran.notices,
       ...scalingCautions(theory, rows, point, inputs),
     ],
     scalars: scalars(rows, value, free),
-    working: scalingWorking(theory, rows, point, value),
+    working: scalingWorking(theory, rows, point, value, ran),
   };
 }
 
@@ -85,7 +94,7 @@ function presentPoint(point: Point | null): ScalingValue["probe"] {
   return point && { latex: point.latex, size: point.quantity && presentQuantity(point.quantity) };
 }
 
-function presentRow(term: Term, size: Size, free: DimensionSymbol | null): ScalingRow {
+function presentRow(term: Term, size: Size, free: DimensionSymbol | null, ran: WithRunning): ScalingRow {
   const { scalingClass, marginalAt, ranges } = classify(term.coefficient, free);
   return {
     rowId: term.rowId,
@@ -95,6 +104,9 @@ function presentRow(term: Term, size: Size, free: DimensionSymbol | null): Scali
     dimension: shownExact(term.dimension),
     coefficient: shownExact(term.coefficient),
     scalingClass,
+    marginally:
+      scalingClass === "marginal" && !term.kinetic ? (ran.marginally.get(term.rowId) ?? null) : null,
+    dimensionFrom: ran.anomalous.has(term.rowId) && !term.kinetic ? "fixed point" : "fields",
     marginalAt: marginalAt && marginalAt.toString(),
     ranges,
     size: size.quantity && presentEstimate(shown(size.quantity).value, shown(size.quantity).sigma),
@@ -134,7 +146,7 @@ function scalars(rows: readonly WorkedRow[], value: ScalingValue, free: Dimensio
             {
               id: `${rowId}/class`,
               label: `class of $${latex}$`,
-              value: { type: "word", text: row.scalingClass },
+              value: { type: "word", text: row.marginally ?? row.scalingClass },
             },
           ]
         : [];

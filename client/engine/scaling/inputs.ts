@@ -1,5 +1,5 @@
 /** What a person chooses for a Scaling block. */
-import { choice, defineShape, note, text, type InputsOf } from "../shape.ts";
+import { choice, defineShape, note, reference, text, type InputsOf } from "../shape.ts";
 
 export const scalingShape = defineShape({
   fields: {
@@ -12,6 +12,10 @@ export const scalingShape = defineShape({
     heavy: text(),
     /** What the couplings at the heavy scale are taken to be, and so what Λ means. */
     couplings: choice("not stated", "strong", "weak", "loop-generated"),
+    /** A Running block whose β functions split marginal terms, or whose fixed point gives dimensions. */
+    running: reference(["running"]),
+    /** Which of its fixed points, by the name its numbers have; "" is the one that attracts, else the first but the Gaussian. */
+    fixedPoint: text(),
     note: note(),
   },
   tables: {},

@@ -3,6 +3,8 @@ import type { Exact, Measured } from "../premises/value.ts";
 
 export type ScalingClass = "relevant" | "marginal" | "irrelevant";
 
+export type Marginally = "marginally relevant" | "marginally irrelevant" | "exactly marginal at one loop";
+
 /** Where a term has one class, as the free dimension runs over (from, to), ends excluded; null: unbounded. */
 export interface ClassRange {
   readonly from: string | null;
@@ -21,6 +23,9 @@ export interface ScalingRow {
   readonly coefficient: Exact;
   /** Null when it depends on the free dimension: see `ranges`. */
   readonly scalingClass: ScalingClass | null;
+  /** What one loop says of a marginal term; null when it says nothing or was not asked. */
+  readonly marginally: Marginally | null;
+  readonly dimensionFrom: "fields" | "fixed point";
   /** Value of the free dimension where the term is marginal, "8/3"; null if there is no free dimension or no such value. */
   readonly marginalAt: string | null;
   readonly ranges: readonly ClassRange[];

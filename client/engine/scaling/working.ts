@@ -9,6 +9,7 @@ import type { Term, Theory } from "../premises/theory.ts";
 import type { Size } from "./sizes.ts";
 import type { ScalingRow, ScalingValue } from "./value.ts";
 import { ratioLatex } from "./sizes.ts";
+import type { WithRunning } from "./with-running.ts";
 import type { WorkingPoint } from "./working-point.ts";
 import { LinearForm } from "../exact/linear-form.ts";
 
@@ -27,6 +28,7 @@ export function scalingWorking(
   rows: readonly WorkedRow[],
   point: WorkingPoint,
   value: Pick<ScalingValue, "counting" | "freeDimension" | "meaningOfHeavy">,
+  ran: Pick<WithRunning, "steps" | "anomalous">,
 ): WorkingStep[] {
   const measure = theory.spacetime.geometry === "isotropic" ? "d" : "D + z";
   const time = theory.spacetime.geometry === "isotropic" ? "" : ", $t = s^{z}t'$";
@@ -35,7 +37,8 @@ export function scalingWorking(
     prose(
       `Put $x = s\\,x'$${time} with the primed coordinates fixed, and rescale the fields so that their kinetic terms keep their form. The coefficient of an operator of dimension $\\Delta$ then picks up $s^{${measure} - \\Delta}$: toward low energy ($s \\to \\infty$) it grows if the exponent is positive (relevant), stays if it is zero (marginal) and fades if it is negative (irrelevant).`,
     ),
-    ...termSteps(theory, rows, value.freeDimension),
+    ...ran.steps,
+    ...termSteps(theory, rows, value.freeDimension, ran.anomalous),
     ...sizeSteps(rows, point, value, theory.spacetime.geometry === "isotropic" ? "d" : "D - z"),
   ];
 }
@@ -48,13 +51,21 @@ function termSteps(
   theory: Theory,
   rows: readonly WorkedRow[],
   free: ScalingValue["freeDimension"],
+  anomalous: WithRunning["anomalous"],
 ): readonly WorkingStep[] {
-  const steps = knownSteps.get(theory) ?? rows.flatMap((worked) => deriveTerm(worked, theory, free));
-  knownSteps.set(theory, steps);
+  const split = rows.some(({ row }) => row.marginally !== null);
+  const known = split ? undefined : knownSteps.get(theory);
+  const steps = known ?? rows.flatMap((worked) => deriveTerm(worked, theory, free, anomalous));
+  if (!split) knownSteps.set(theory, steps);
   return steps;
 }
 
-function deriveTerm({ term, row }: WorkedRow, theory: Theory, free: string | null): WorkingStep[] {
+function deriveTerm(
+  { term, row }: WorkedRow,
+  theory: Theory,
+  free: string | null,
+  anomalous: WithRunning["anomalous"],
+): WorkingStep[] {
   const operator = operatorLatex(term.monomial, theory.fields, theory.spacetime.geometry);
   const coefficient = coefficientLatex(term.monomial);
   const measure = theory.spacetime.geometry === "isotropic" ? "d" : "D + z";
@@ -69,7 +80,11 @@ function deriveTerm({ term, row }: WorkedRow, theory: Theory, free: string | nul
       : `,\\qquad 0 \\text{ at } ${free} = ${fraction(row.marginalAt)}`;
   return [
     prose(`$${term.latex}$`),
-    formula(dimensionLatex(term, theory).replace(/,\\qquad.*$/, "")),
+    formula(
+      row.dimensionFrom === "fixed point"
+        ? `\\Delta\\!\\left(${operator}\\right) = ${anomalous.get(row.rowId) ?? term.dimension.toLatex()}`
+        : dimensionLatex(term, theory).replace(/,\\qquad.*$/, ""),
+    ),
     formula(
       `\\left[${bare}\\right] = ${measure} - \\left[${operator}\\right]${numbers} = ${exponent}${zero}`,
     ),
@@ -86,9 +101,13 @@ function fraction(text: string): string {
   return under === undefined ? over : `\\frac{${over}}{${under}}`;
 }
 
-function classSentence({ scalingClass, ranges, kinetic }: ScalingRow, free: string | null): string {
+function classSentence(
+  { scalingClass, marginally, ranges, kinetic }: ScalingRow,
+  free: string | null,
+): string {
   if (kinetic)
     return "This is a kinetic term: it fixes the dimension of its field, so it is marginal by construction.";
+  if (marginally) return `It is ${marginally}.`;
   if (scalingClass) return `It is ${scalingClass}.`;
   const [below, above] = ranges;
   if (!below || !above || free === null) return "Its class depends on the dimensions left symbolic.";

@@ -48,6 +48,7 @@ describe.each(kindNames)("the form of %s", (kind) => {
   const variants: Record<string, Record<string, string>[]> = {
     premises: [{ geometry: "isotropic" }, { geometry: "anisotropic" }],
     divergence: [{ mode: "one graph" }, { mode: "whole theory" }],
+    scaling: [{ fixedPoint: "gaussian" }],
     running: [{ about: "running between two scales" }, { about: "fixed points in 4 − ε dimensions" }],
   };
   it("has a control for every field and column of its shape, and for nothing else", async () => {
