@@ -1,8 +1,8 @@
 /** Who may open a socket on which notebook: decided from the request alone, before any document is loaded. */
 import type { IncomingMessage } from "node:http";
-import { firstRow, type Database } from "../data/database.ts";
+import type { Database } from "../data/database.ts";
 import type { Sessions } from "../http/sessions.ts";
-import { accessTo } from "../policies/access.ts";
+import { personWithAccess } from "../policies/access.ts";
 import { resolveReferee } from "../policies/referee.ts";
 import { rightsOfMember, rightsOfReferee, type Rights, type Visitor } from "./visitor.ts";
 
@@ -58,11 +58,9 @@ async function admitMember(
   const identity = await sessions.identify(request);
   if (identity === null) return 401;
   const { personId, sessionId } = identity;
-  const person = await firstRow<{ name: string }>(database, "select name from people where id = ?", [
-    personId,
-  ]);
+  const person = await personWithAccess(database, personId, notebookId);
   if (person === undefined) return 401;
-  const access = await accessTo(database, personId, notebookId);
+  const { access } = person;
   // From outside, a notebook of strangers looks like none.
   if (access === null) return 404;
   return {

@@ -59,6 +59,11 @@ export class CommittedDocument {
     this.schemaVersion = stored.schemaVersion;
     this.rowsSinceState = stored.tail.length;
     this.#cache = new EncodingCache(document);
+    if (stored.state !== null && bad.length === 0)
+      this.#cache.begin(
+        stored.state,
+        stored.tail.map(({ update }) => update),
+      );
     const bytes = stored.tail.reduce((sum, { update }) => sum + update.length, stored.state?.length ?? 0);
     this.size = new DocumentSize(bytes, () => this.encoded().length);
     document.on("update", (update, origin) => {

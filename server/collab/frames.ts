@@ -63,8 +63,14 @@ function writeSync(step: number, bytes: Uint8Array): Uint8Array {
 export function writeStep1(document: Y.Doc): Uint8Array {
   return writeSync(syncStep1, Y.encodeStateVector(document));
 }
+/** One encoding goes to everybody who joins: its frame, as long as it is itself, is made once. */
+const framesOfWhole = new WeakMap<Uint8Array, Uint8Array>();
 export function writeStep2(update: Uint8Array): Uint8Array {
-  return writeSync(syncStep2, update);
+  const known = framesOfWhole.get(update);
+  if (known !== undefined) return known;
+  const frame = writeSync(syncStep2, update);
+  framesOfWhole.set(update, frame);
+  return frame;
 }
 export function writeUpdate(update: Uint8Array): Uint8Array {
   return writeSync(syncUpdate, update);

@@ -1,7 +1,8 @@
 /** node --import tsx tests/bench/opening.ts: how long a notebook with a long history takes to open, cold. */
 import * as Y from "yjs";
 import { startBenchServer } from "./bench-server.ts";
-import { columns } from "./figures.ts";
+import type { CastPerson } from "../server/collab/cast.ts";
+import { columns, median } from "./figures.ts";
 import { longHistory, store } from "./long-history.ts";
 import { memoryMegabytes } from "./processor-time.ts";
 import { joinRoom } from "./typing-crowd.ts";
@@ -12,7 +13,23 @@ const cases = [
   { edits: 1_000_000, rowsLeft: 400, promised: "2.5 ×" },
 ] as const;
 
+const ROUNDS = 3;
+
 const bench = await startBenchServer(1);
+
+/** Several notebooks with one history, which itself is let go. */
+async function stored(person: CastPerson, edits: number, rowsLeft: number) {
+  const updates = longHistory(edits);
+  const notebooks: string[] = [];
+  let whole: Uint8Array = new Uint8Array();
+  for (let round = 0; round < ROUNDS; round += 1) {
+    const notebookId = await bench.notebook([person]);
+    whole = await store(bench.database, notebookId, updates, rowsLeft);
+    notebooks.push(notebookId);
+  }
+  return { notebooks, whole };
+}
+
 try {
   const [person] = bench.people;
   if (person === undefined) throw new Error("nobody is there");
@@ -22,15 +39,20 @@ try {
     ["edits, of them rows", "bytes", "client alone", "open, cold", "ratio", "promised", "server memory"],
   ];
   for (const { edits, rowsLeft, promised } of cases) {
-    const notebookId = await bench.notebook([person]);
-    const whole = await store(bench.database, notebookId, longHistory(edits), rowsLeft);
-    let start = performance.now();
-    Y.applyUpdate(new Y.Doc(), whole);
-    const alone = performance.now() - start;
-    start = performance.now();
-    const { socket } = await joinRoom(bench.address(person, notebookId));
-    const open = performance.now() - start;
-    socket.terminate();
+    const { notebooks, whole } = await stored(person, edits, rowsLeft);
+    const alones: number[] = [];
+    const opens: number[] = [];
+    // By turns, each notebook for the first time: what this process has compiled and must tidy up is the same for both.
+    for (const notebookId of notebooks) {
+      let start = performance.now();
+      Y.applyUpdate(new Y.Doc(), whole);
+      alones.push(performance.now() - start);
+      start = performance.now();
+      const { socket } = await joinRoom(bench.address(person, notebookId));
+      opens.push(performance.now() - start);
+      socket.terminate();
+    }
+    const [alone, open] = [median(alones), median(opens)];
     table.push([
       `${edits}, ${rowsLeft}`,
       `${(whole.length / 1e6).toFixed(1)} MB`,
