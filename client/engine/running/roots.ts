@@ -51,15 +51,49 @@ export function polynomialRoots(coefficients: readonly number[]): readonly Compl
     if (moved < 1e-15 * size) break;
   }
   // Roots of real polynomials that are real up to rounding are real.
-  return roots.map(({ re, im }) => (Math.abs(im) < 1e-7 * (1 + Math.abs(re)) ? { re, im: 0 } : { re, im }));
+  return joined(roots, size).map(({ re, im }) =>
+    Math.abs(im) < 1e-7 * (1 + Math.abs(re)) ? { re, im: 0 } : { re, im },
+  );
 }
 
-/** Eigenvalues by the characteristic polynomial (Faddeev, LeVerrier), for matrices of a few rows. */
+/** Rounding tears a root of order m apart by its m-th root; the middle of the pieces is where it was. */
+function joined(roots: readonly Complex[], size: number): readonly Complex[] {
+  const near = (one: Complex, other: Complex) =>
+    Math.hypot(one.re - other.re, one.im - other.im) < 1e-4 * size;
+  return roots.map((root) => {
+    const pieces = roots.filter((other) => near(root, other));
+    const sum = pieces.reduce((total, { re, im }) => ({ re: total.re + re, im: total.im + im }));
+    const clean = (value: number) => (Math.abs(value) < 1e-14 * size ? 0 : value / pieces.length);
+    return { re: clean(sum.re), im: clean(sum.im) };
+  });
+}
+
+/**
+ * Eigenvalues by the characteristic polynomial (Faddeev, LeVerrier), for matrices of a few rows. Rows that do not act on
+ * each other are taken apart first: a repeated eigenvalue of a diagonal matrix is then as exact as its entries.
+ */
 export function eigenvalues(matrix: NumberMatrix): readonly Complex[] {
-  const n = matrix.length;
-  if (n === 0) return [];
-  if (n === 1) return [{ re: matrix[0]?.[0] ?? 0, im: 0 }];
-  return polynomialRoots(characteristic(matrix));
+  return blocksOf(matrix).flatMap((indices) => {
+    const block = indices.map((row) => indices.map((column) => matrix[row]?.[column] ?? 0));
+    return indices.length === 1
+      ? [{ re: block[0]?.[0] ?? 0, im: 0 }]
+      : polynomialRoots(characteristic(block));
+  });
+}
+
+/** Indices that reach each other through entries that are not zero: the diagonal blocks of a triangular form. */
+function blocksOf(matrix: NumberMatrix): readonly (readonly number[])[] {
+  const all = matrix.map((_, index) => index);
+  const reaches = matrix.map((row, from) => row.map((entry, to) => entry !== 0 || from === to));
+  for (const through of all)
+    for (const from of all)
+      if (reaches[from]?.[through] === true)
+        reaches[from] = (reaches[from] ?? []).map((known, to) => known || reaches[through]?.[to] === true);
+  const together = (one: number, other: number) =>
+    reaches[one]?.[other] === true && reaches[other]?.[one] === true;
+  return all
+    .filter((index) => all.find((other) => together(index, other)) === index)
+    .map((first) => all.filter((index) => together(first, index)));
 }
 
 /** det(x − A), by rising power. */

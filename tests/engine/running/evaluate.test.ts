@@ -203,6 +203,20 @@ describe("fixed points of several couplings", () => {
       expect(found).toContainEqual(point);
     // Both Ising points rotated by 45°: u = v = w = 1/6.
     expect(found).toContainEqual(near(1 / 6, 1 / 6, 1 / 6));
+    expect(found).toHaveLength(6);
+  });
+  // Own derivation: each of the three quartic couplings falls as −ε where all vanish; one root three times over.
+  it("gives exponents that repeat as exactly as those that do not", () => {
+    const theory = {
+      fields: { a: "real scalar" as const, b: "real scalar" as const },
+      terms: ["u/4! a^4", "v/4! b^4", "w/4 a^2 b^2"],
+    };
+    const question: Question = { theory, about: "4 - eps" };
+    const slopes = ["gaussian/4.1", "gaussian/4.2", "gaussian/4.3"].map((id) =>
+      scalar(question, `${id}/slope`),
+    );
+    expect(slopes).toEqual([-1, -1, -1]);
+    expect(scalar(question, "u=1/6,v=1/6,w=1/6/4.2/slope")).toBe(0);
   });
 });
 
