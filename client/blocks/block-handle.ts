@@ -97,6 +97,8 @@ export interface BlockHandle {
   onColleagues(listener: () => void): () => void;
   /** Who wrote the value that is stored now: a name, "someone" when not known, null for oneself. */
   writerOf(place: FieldPlace): string | null;
+  /** Adds rows to the premises that the block stands on, as one step of the history. */
+  addToPremises(table: string, rows: readonly Readonly<Record<string, string>>[]): void;
   /** For Premises: counts, or with `apply` makes, what a rewriting changes in its blocks and in the prose's formulas. */
   rewriteUses(rewriting: UseRewriting, apply: boolean): UseCounts;
   /** How many pins in the prose show a number of this block, read by `usePinCount`. */

@@ -2,6 +2,7 @@
 import type { KindName } from "#engine/kind.ts";
 import type { BlockParts } from "./block-parts.ts";
 import { basisCountParts } from "./basis-count/basis-count-parts.ts";
+import { closureParts } from "./closure/closure-parts.ts";
 import { dataParts } from "./data/data-parts.ts";
 import { errorBudgetParts } from "./error-budget/error-budget-parts.ts";
 import { divergenceParts } from "./divergence/divergence-parts.ts";
@@ -15,6 +16,7 @@ export const blockParts: Readonly<Record<KindName, BlockParts>> = {
   premises: premisesParts,
   scaling: scalingParts,
   divergence: divergenceParts,
+  closure: closureParts,
   orderPlan: orderPlanParts,
   truncationError: truncationErrorParts,
   basisCount: basisCountParts,

@@ -1,6 +1,7 @@
 /** Every block kind by name, without its computation: for documents, forms and the index of what can be placed. */
 import { basisCountDescription } from "./basis/description.ts";
 import { errorBudgetDescription } from "./budget/description.ts";
+import { closureDescription } from "./closure/description.ts";
 import { dataDescription } from "./data/description.ts";
 import { divergenceDescription } from "./divergence/description.ts";
 import type { BlockDescription, KindName } from "./kind.ts";
@@ -14,6 +15,7 @@ export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
   premises: premisesDescription,
   scaling: scalingDescription,
   divergence: divergenceDescription,
+  closure: closureDescription,
   orderPlan: orderPlanDescription,
   truncationError: truncationErrorDescription,
   basisCount: basisCountDescription,

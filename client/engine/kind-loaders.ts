@@ -5,6 +5,7 @@ export const kindLoaders: Readonly<Record<KindName, () => Promise<BlockKind>>> =
   premises: async () => (await import("./premises/kind.ts")).premises,
   scaling: async () => (await import("./scaling/kind.ts")).scaling,
   divergence: async () => (await import("./divergence/kind.ts")).divergence,
+  closure: async () => (await import("./closure/kind.ts")).closure,
   orderPlan: async () => (await import("./plan/kind.ts")).orderPlan,
   data: async () => (await import("./data/kind.ts")).data,
   errorBudget: async () => (await import("./budget/kind.ts")).errorBudget,

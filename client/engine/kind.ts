@@ -7,6 +7,7 @@ export const kindNames = [
   "premises",
   "scaling",
   "divergence",
+  "closure",
   "orderPlan",
   "truncationError",
   "basisCount",

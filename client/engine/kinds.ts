@@ -1,6 +1,7 @@
 /** The block kinds of this version, by name. What they are without computing is in `descriptions.ts`. */
 import { basisCount } from "./basis/kind.ts";
 import { errorBudget } from "./budget/kind.ts";
+import { closure } from "./closure/kind.ts";
 import { data } from "./data/kind.ts";
 import { divergence } from "./divergence/kind.ts";
 import type { BlockKind, KindName } from "./kind.ts";
@@ -18,6 +19,7 @@ export const kinds: Readonly<Record<KindName, BlockKind>> = {
   premises,
   scaling,
   divergence,
+  closure,
   orderPlan,
   truncationError,
   basisCount,

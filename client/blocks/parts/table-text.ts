@@ -1,4 +1,4 @@
-/** A table of the page as text for elsewhere: CSV (RFC 4180), or a LaTeX tabular. */
+/** A table of the page as text for elsewhere: CSV (RFC 4180), or a LaTeX tabular. What does something is left out. */
 
 interface Piece {
   readonly kind: "text" | "formula";
@@ -15,6 +15,7 @@ export function piecesOf(table: HTMLTableElement): readonly (readonly (readonly 
 function piecesIn(node: Node): Piece[] {
   if (node.nodeType === Node.TEXT_NODE) return [{ kind: "text", source: node.textContent ?? "" }];
   if (!(node instanceof Element) || node.classList.contains("sr-only")) return [];
+  if (node instanceof HTMLElement && node.dataset["copied"] === "no") return [];
   if (node.classList.contains("math")) {
     // Until KaTeX has drawn it, a formula shows its source.
     const drawn = node.querySelector('annotation[encoding="application/x-tex"]');

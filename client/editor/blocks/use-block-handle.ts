@@ -86,6 +86,7 @@ type Changes = Pick<
   | "onPinCounts"
   | "goToNextPin"
   | "rewriteUses"
+  | "addToPremises"
   | "isPending"
   | "premisesEvaluation"
   | "longWork"
@@ -100,9 +101,9 @@ type Changes = Pick<
 function changesOf(world: BlockWorld, blockId: string): Changes {
   const { directory, presence, results, session } = world;
 
-  function change(act: (element: Y.XmlElement, block: BlockInstance) => void): void {
-    const element = directory.element(blockId);
-    const block = directory.block(blockId);
+  function change(act: (element: Y.XmlElement, block: BlockInstance) => void, id = blockId): void {
+    const element = directory.element(id);
+    const block = directory.block(id);
     // A colleague may have deleted the block an instant ago; a demoted person's form may still be closing.
     if (!element || !block || session.state().readOnly) return;
     changeInputs(element, () => act(element, block));
@@ -161,6 +162,14 @@ function changesOf(world: BlockWorld, blockId: string): Changes {
     writerOf(place) {
       const clientId = writerOf(directory.element(blockId), place);
       return clientId === null ? "someone" : presence.nameOf(clientId);
+    },
+    addToPremises(table, rows) {
+      const premisesId = standsOnOf(world, blockId);
+      if (premisesId === null) return;
+      change((element, { kind }) => {
+        const fresh = rows.map((values) => ({ id: newId(), values }));
+        insertRows(element, kindDescriptions[kind], table, fresh, null);
+      }, premisesId);
     },
     rewriteUses: (rewriting, apply) => rewriteUses(world, blockId, rewriting, apply),
     pinCount: () => pinCountOf(blockId),

@@ -22,7 +22,7 @@ import type { Counterterm } from "./value.ts";
 const MOST_DERIVATIVES = 40;
 
 /** Whether the premises hold a mass term that mixes chiralities, so that odd powers of a fermion mass may appear. */
-function breaksChirality(theory: Theory): boolean {
+export function breaksChirality(theory: Theory): boolean {
   return theory.terms.some((term) => {
     const edges = halfEdgesOf(term.monomial, theory);
     const spinorLegs = edges
@@ -77,7 +77,7 @@ function derivativesUpTo(omega: Rational, legs: HalfEdges, theory: Theory): Deri
 }
 
 /** The rest of the dimension is made up by m², by m where chirality is broken, by energies for Schrödinger fields. */
-function isAnalytic(
+export function isAnalytic(
   rest: Rational,
   time: Rational | null,
   schroedinger: boolean,

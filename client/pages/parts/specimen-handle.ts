@@ -54,6 +54,7 @@ export function specimenHandle({
     colleaguesIn: (place: FieldPlace) => colleagues[placeKey(place)] ?? nobody,
     onColleagues: unheard,
     writerOf: () => null,
+    addToPremises: () => undefined,
     rewriteUses: () => ({ entries: 0, formulas: 0 }),
     pinCount: () => 0,
     onPinCounts: unheard,
