@@ -3,6 +3,7 @@ import type { KindName } from "#engine/kind.ts";
 import type { BlockParts } from "./block-parts.ts";
 import { basisCountParts } from "./basis-count/basis-count-parts.ts";
 import { closureParts } from "./closure/closure-parts.ts";
+import { countingRulesParts } from "./counting-rules/counting-rules-parts.ts";
 import { dataParts } from "./data/data-parts.ts";
 import { errorBudgetParts } from "./error-budget/error-budget-parts.ts";
 import { divergenceParts } from "./divergence/divergence-parts.ts";
@@ -15,6 +16,7 @@ import { truncationErrorParts } from "./truncation-error/truncation-error-parts.
 export const blockParts: Readonly<Record<KindName, BlockParts>> = {
   premises: premisesParts,
   scaling: scalingParts,
+  countingRules: countingRulesParts,
   divergence: divergenceParts,
   closure: closureParts,
   orderPlan: orderPlanParts,

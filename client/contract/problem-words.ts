@@ -3,6 +3,7 @@ import type { InputPath, Problem } from "#engine/evaluation.ts";
 import { basisWords } from "./words/basis-words.ts";
 import { budgetWords } from "./words/budget-words.ts";
 import { closureWords } from "./words/closure-words.ts";
+import { countingWords } from "./words/counting-words.ts";
 import { dataWords } from "./words/data-words.ts";
 import { divergenceWords } from "./words/divergence-words.ts";
 import { notationWords } from "./words/notation-words.ts";
@@ -20,6 +21,7 @@ export const problemWords: Words = {
   ...notationWords,
   ...premisesWords,
   ...scalingWords,
+  ...countingWords,
   ...divergenceWords,
   ...closureWords,
   ...planWords,

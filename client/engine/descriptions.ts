@@ -2,6 +2,7 @@
 import { basisCountDescription } from "./basis/description.ts";
 import { errorBudgetDescription } from "./budget/description.ts";
 import { closureDescription } from "./closure/description.ts";
+import { countingDescription } from "./counting/description.ts";
 import { dataDescription } from "./data/description.ts";
 import { divergenceDescription } from "./divergence/description.ts";
 import type { BlockDescription, KindName } from "./kind.ts";
@@ -14,6 +15,7 @@ import { truncationErrorDescription } from "./truncation/description.ts";
 export const kindDescriptions: Readonly<Record<KindName, BlockDescription>> = {
   premises: premisesDescription,
   scaling: scalingDescription,
+  countingRules: countingDescription,
   divergence: divergenceDescription,
   closure: closureDescription,
   orderPlan: orderPlanDescription,

@@ -4,6 +4,7 @@ import type { BlockKind, KindName } from "./kind.ts";
 export const kindLoaders: Readonly<Record<KindName, () => Promise<BlockKind>>> = {
   premises: async () => (await import("./premises/kind.ts")).premises,
   scaling: async () => (await import("./scaling/kind.ts")).scaling,
+  countingRules: async () => (await import("./counting/kind.ts")).countingRules,
   divergence: async () => (await import("./divergence/kind.ts")).divergence,
   closure: async () => (await import("./closure/kind.ts")).closure,
   orderPlan: async () => (await import("./plan/kind.ts")).orderPlan,

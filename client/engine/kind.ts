@@ -6,6 +6,7 @@ import type { InputsOf, Shape } from "./shape.ts";
 export const kindNames = [
   "premises",
   "scaling",
+  "countingRules",
   "divergence",
   "closure",
   "orderPlan",

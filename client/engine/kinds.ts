@@ -2,6 +2,7 @@
 import { basisCount } from "./basis/kind.ts";
 import { errorBudget } from "./budget/kind.ts";
 import { closure } from "./closure/kind.ts";
+import { countingRules } from "./counting/kind.ts";
 import { data } from "./data/kind.ts";
 import { divergence } from "./divergence/kind.ts";
 import type { BlockKind, KindName } from "./kind.ts";
@@ -18,6 +19,7 @@ import { truncationError } from "./truncation/kind.ts";
 export const kinds: Readonly<Record<KindName, BlockKind>> = {
   premises,
   scaling,
+  countingRules,
   divergence,
   closure,
   orderPlan,

@@ -23,7 +23,10 @@ export type ReadGraph =
   | { readonly ok: true; readonly graph: GraphParts; readonly degree: Degree }
   | { readonly ok: false; readonly problems: readonly Problem[] };
 
-export function readGraph(inputs: DivergenceInputs, theory: Theory): ReadGraph {
+/** The tables of any block that asks for one graph. */
+export type TypedGraph = Pick<DivergenceInputs, "vertices" | "legs">;
+
+export function readGraph(inputs: TypedGraph, theory: Theory): ReadGraph {
   const problems: Problem[] = [];
   const vertices = readVertices(inputs, theory, problems);
   const legs = readLegs(inputs, theory, problems);
@@ -50,7 +53,7 @@ function readCount(text: string, table: string, rowId: string, problems: Problem
   return null;
 }
 
-function readVertices(inputs: DivergenceInputs, theory: Theory, problems: Problem[]): GraphParts["vertices"] {
+function readVertices(inputs: TypedGraph, theory: Theory, problems: Problem[]): GraphParts["vertices"] {
   const found = new Map<string, GraphParts["vertices"][number]>();
   for (const row of inputs.vertices) {
     if (row.term === "") continue;
@@ -69,7 +72,7 @@ function readVertices(inputs: DivergenceInputs, theory: Theory, problems: Proble
   return [...found.values()];
 }
 
-function readLegs(inputs: DivergenceInputs, theory: Theory, problems: Problem[]): HalfEdges {
+function readLegs(inputs: TypedGraph, theory: Theory, problems: Problem[]): HalfEdges {
   let legs = noHalfEdges(theory);
   for (const row of inputs.legs) {
     if (row.field.trim() === "") continue;

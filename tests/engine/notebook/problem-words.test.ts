@@ -21,6 +21,7 @@ const notCodes = new Set([
   "relative-error",
   "scalar-gone",
   "self-conjugate",
+  "soft-collinear",
   "super-renormalisable",
 ]);
 
