@@ -10,6 +10,7 @@ import {
   standardModelWithNeutrinos,
 } from "#engine/basis/contents.ts";
 import { useBlock } from "../block-handle.ts";
+import { RepresentationChooser } from "./representation-chooser.tsx";
 
 /** Which fields, under which groups, up to which dimension. */
 export function BasisCountForm() {
@@ -68,6 +69,7 @@ export function BasisCountForm() {
           { column: "meaning", heading: "meaning", notation: false, size: 12 },
         ]}
       />
+      <RepresentationChooser />
     </div>
   );
 }

@@ -3,6 +3,7 @@ import type { Problem } from "../evaluation.ts";
 import { Rational } from "../exact/rational.ts";
 import { nameLatex } from "../notation/names.ts";
 import { readPlainName } from "../notation/rename.ts";
+import { splitCharges } from "./charge-text.ts";
 import type { Content, Flavours, Quantum } from "./content.ts";
 import type { BasisInputs, CountedKind } from "./inputs.ts";
 import type { Spin } from "./lorentz-integral.ts";
@@ -137,11 +138,6 @@ function readCharged(row: FieldRow, groups: readonly (Group | null)[], problems:
     }
   });
   return problems.length === before ? { representations, vectors, charges } : null;
-}
-
-/** Commas within Dynkin labels separate nothing. */
-function splitCharges(text: string): readonly string[] {
-  return text.split(/,(?![^(]*\))/).map((part) => part.trim());
 }
 
 function readCharge(text: string, modulo: number | null): Rational | null {

@@ -102,7 +102,8 @@ export function conjugate(representation: Representation): Representation {
   );
 }
 
-function labelsOf(diagram: readonly number[]): readonly number[] {
+/** Dynkin labels of a Young diagram. */
+export function labelsOf(diagram: readonly number[]): readonly number[] {
   return diagram.slice(0, -1).map((row, index) => row - (diagram[index + 1] ?? 0));
 }
 
@@ -176,4 +177,32 @@ function diagrams(boxes: number, rows: number, widest: number): number[][] {
     if (first === 0) break;
   }
   return found;
+}
+
+const MOST_BOXES_OFFERED = 6;
+const LARGEST_OFFERED = 64;
+const tables = new Map<number, readonly Representation[]>();
+
+/**
+ * The representations of SU(N) of up to six boxes and 64 components, each with its conjugate, by rising dimension.
+ * @example representationTable(3).map(({ name }) => name).slice(0, 4) // ["1", "3", "3bar", "6"]
+ */
+export function representationTable(n: number): readonly Representation[] {
+  const known = tables.get(n);
+  if (known) return known;
+  const found = new Map<string, Representation>();
+  for (let boxes = 0; boxes <= MOST_BOXES_OFFERED; boxes++)
+    for (const diagram of diagrams(boxes, n - 1, boxes)) {
+      if (dimensionOf([...diagram, 0]) > LARGEST_OFFERED) continue;
+      const representation = fromLabels(labelsOf([...diagram, 0]));
+      if (!representation || found.has(representation.diagram.join())) continue;
+      found.set(representation.diagram.join(), representation);
+      const other = conjugate(representation);
+      if (!found.has(other.diagram.join())) found.set(other.diagram.join(), other);
+    }
+  const adj = fromLabels(adjoint(n));
+  if (adj) found.set(adj.diagram.join(), found.get(adj.diagram.join()) ?? adj);
+  const table = [...found.values()].sort((a, b) => a.dimension - b.dimension);
+  tables.set(n, table);
+  return table;
 }

@@ -3,7 +3,12 @@ import { standardModel } from "#engine/basis/contents.ts";
 import { cycleTypes, factorial, partitionNumber } from "#engine/basis/cycle-types.ts";
 import { GaugeIntegral } from "#engine/basis/gauge-integral.ts";
 import { OrthogonalIntegral, symmetricCharacter } from "#engine/basis/orthogonal-integral.ts";
-import { conjugate, readRepresentation, type Representation } from "#engine/basis/representations.ts";
+import {
+  conjugate,
+  readRepresentation,
+  representationTable,
+  type Representation,
+} from "#engine/basis/representations.ts";
 import { operatorsAt } from "#engine/basis/value.ts";
 import { codes, count, evaluate, field, group, totals } from "./ask.ts";
 
@@ -296,5 +301,24 @@ describe("a count is refused", () => {
     expect(
       notices({ groups: [group("Y", "U(1)", "7/3")], fields: [field("phi", "complex scalar", "1")] }),
     ).toContain("everything-vanishes");
+  });
+});
+
+describe("the table of representations", () => {
+  it.each([2, 3, 4, 5, 8])("of SU(%d) names each as it is read, with its conjugate, and none twice", (n) => {
+    const table = representationTable(n);
+    const diagrams = table.map(({ diagram }) => diagram.join());
+    expect(new Set(diagrams).size).toBe(table.length);
+    for (const representation of table) {
+      expect(readRepresentation(representation.name, n)?.diagram).toEqual(representation.diagram);
+      expect(diagrams).toContain(conjugate(representation).diagram.join());
+    }
+    expect(diagrams).toContain(readRepresentation("adj", n)?.diagram.join());
+  });
+  // Dimensions of SU(3): (p + 1)(q + 1)(p + q + 2)/2 (Weyl 1925).
+  it("of SU(3) holds 1, 3, 6, 8, 10, 15 twice over and 27 with their conjugates", () => {
+    const names = representationTable(3).map(({ name }) => name);
+    expect(names).toEqual(expect.arrayContaining(["1", "3", "3bar", "6", "6bar", "8", "10", "10bar", "27"]));
+    expect(representationTable(3).filter(({ dimension }) => dimension === 15)).toHaveLength(4);
   });
 });
