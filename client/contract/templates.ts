@@ -6,6 +6,10 @@ export const templateNames = [
   "scalar-pair",
   "contact-gauge",
   "lifshitz",
+  "nucleons",
+  "bound-state",
+  "large-scattering-length",
+  "gravity",
   "standard-model-count",
 ] as const;
 export type Template = (typeof templateNames)[number];
@@ -32,6 +36,22 @@ export const templateWords: Readonly<Record<Template, TemplateWords>> = {
   "contact-gauge": {
     label: "Contact theory of fermions with a gauge field",
     hint: "In four dimensions: four fermions at a point, a photon, and the order to stop at.",
+  },
+  nucleons: {
+    label: "Static nucleons with pions",
+    hint: "Momenta and pion masses count alike: which graphs make the potential, and where three nucleons come in.",
+  },
+  "bound-state": {
+    label: "Bound state in powers of velocity",
+    hint: "A slow heavy particle in the field that binds it: relativity and spin against kinetic energy.",
+  },
+  "large-scattering-length": {
+    label: "Contact theory with a large scattering length",
+    hint: "Why counting by dimension fails there, and what is summed to all orders instead.",
+  },
+  gravity: {
+    label: "Gravity at low energy",
+    hint: "Loops against the curvature squared, in powers of energy over the Planck mass.",
   },
   "standard-model-count": {
     label: "Operators of the Standard Model",

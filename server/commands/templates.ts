@@ -5,7 +5,15 @@ import { lanternBlocks, lanternDocument } from "./lantern-notebook.ts";
 import type { PinMaker } from "./pin-maker.ts";
 import { countBlocks, countDocument } from "./templates-count.ts";
 import { contactBlocks, contactDocument } from "./templates-contact.ts";
+import { gravityBlocks, gravityDocument } from "./templates-gravity.ts";
 import { lifshitzBlocks, lifshitzDocument } from "./templates-lifshitz.ts";
+import {
+  boundStateBlocks,
+  boundStateDocument,
+  unnaturalBlocks,
+  unnaturalDocument,
+} from "./templates-nonrelativistic.ts";
+import { nucleonBlocks, nucleonDocument } from "./templates-nucleons.ts";
 import { scalarBlocks, scalarDocument } from "./templates-scalar.ts";
 import { ternBlocks, ternDocument } from "./tern-notebook.ts";
 
@@ -20,6 +28,10 @@ const documents: Readonly<Record<Exclude<Template, "blank">, WrittenTemplate>> =
   "scalar-pair": { blocks: scalarBlocks, write: scalarDocument },
   "contact-gauge": { blocks: contactBlocks, write: contactDocument },
   lifshitz: { blocks: lifshitzBlocks, write: lifshitzDocument },
+  nucleons: { blocks: nucleonBlocks, write: nucleonDocument },
+  "bound-state": { blocks: boundStateBlocks, write: boundStateDocument },
+  "large-scattering-length": { blocks: unnaturalBlocks, write: unnaturalDocument },
+  gravity: { blocks: gravityBlocks, write: gravityDocument },
   "standard-model-count": { blocks: countBlocks, write: countDocument },
 };
 

@@ -56,6 +56,15 @@ describe("numbers of the templates", () => {
     // Nishida and Son 2007, Phys. Rev. D 76, 086004: the dimer of dimension 2 couples with a marginal coupling.
     ["tern", "y/class", { type: "word", text: "marginal" }],
     ["tern", "r/coefficient", { type: "exact", text: "-1" }],
+    // Weinberg 1990, Phys. Lett. B 251, 288: Δ = d + n/2 − 2.
+    ["nucleons", "axial/order", { type: "exact", text: "0" }],
+    ["nucleons", "contact2/order", { type: "exact", text: "2" }],
+    // Lepage and others 1992, Phys. Rev. D 46, 4052.
+    ["bound-state", "relativity/order", { type: "exact", text: "2" }],
+    ["bound-state", "spin/order", { type: "exact", text: "2" }],
+    // Kaplan, Savage and Wise 1998, Nucl. Phys. B 534, 329.
+    ["large-scattering-length", "c0/order", { type: "exact", text: "0" }],
+    ["large-scattering-length", "verdict", { type: "word", text: "not by dimension" }],
     // Henning, Lu, Melia, Murayama 2017, J. High Energy Phys. 08, 016.
     ["standard-model-count", "total/6", { type: "exact", text: "3045" }],
     ["standard-model-count", "total/8", { type: "exact", text: "44807" }],
@@ -65,9 +74,22 @@ describe("numbers of the templates", () => {
   });
 
   it.each([
+    ["nucleons", ["0", "2", "3"]],
+    ["large-scattering-length", ["-1", "0"]],
+    ["gravity", ["2", "4", "4"]],
+  ] as const)("%s: its graphs count %j", (name, orders) => {
+    const found = evaluated(name).outcomes.flatMap(({ evaluation }) => evaluation.scalars);
+    expect(found.flatMap(({ id, value }) => (id === "graph/order" ? [value] : []))).toEqual(
+      orders.map((text) => ({ type: "exact", text })),
+    );
+  });
+
+  it.each([
     ["contact-gauge", "2"],
     // A linear divergence into 1/a: that is what the tuning costs.
     ["tern", "1"],
+    // One loop of two vertices of two derivatives each: four.
+    ["gravity", "4"],
     // D + z − 4·(four propagator powers of two fields): below zero, so finite.
     ["lifshitz", "-3"],
   ] as const)("%s: its graph diverges with degree %s", (name, degree) => {

@@ -47,21 +47,25 @@ function places(values: readonly (number | null)[]): readonly (number | null)[] 
   );
 }
 
+/**
+ * The kinetic terms stand in both sequences at 0, whether the premises write them or not: a term that dimensions put
+ * behind them and the rules beside them is no small correction any more.
+ */
 export function compareSequences(orders: readonly TermOrder[], rules: Rules): Compared {
-  const byRules = smallness(orders, rules);
   const exact = orders.map(({ term }) => term.coefficient.times(-1).asRational());
-  const byDimension = exact.map((one) => one?.toFloat() ?? null);
-  const comparable = byRules.map((value, index) => value !== null && byDimension[index] !== null);
-  const at = (list: readonly (number | null)[], index: number) => list[index] ?? 0;
-  const changes = orders.map((_, one) =>
-    comparable[one]
-      ? orders.filter(
-          (__, other) =>
-            comparable[other] &&
-            sideOf(at(byRules, one), at(byRules, other)) !==
-              sideOf(at(byDimension, one), at(byDimension, other)),
-        ).length
-      : 0,
+  const byRules = [...smallness(orders, rules), 0];
+  const byDimension = [...exact.map((one) => one?.toFloat() ?? null), 0];
+  const pairs = byRules.map((value, index) => {
+    const dimension = byDimension[index] ?? null;
+    return value === null || dimension === null ? null : { value, dimension };
+  });
+  const changes = pairs.map((one) =>
+    one === null
+      ? 0
+      : pairs.filter(
+          (other) =>
+            other !== null && sideOf(one.value, other.value) !== sideOf(one.dimension, other.dimension),
+        ).length,
   );
   const [place, placeByDimension] = [places(byRules), places(byDimension)];
   const terms = orders.map((_, index) => ({
@@ -69,19 +73,19 @@ export function compareSequences(orders: readonly TermOrder[], rules: Rules): Co
     placeByDimension: placeByDimension[index] ?? null,
     changes: changes[index] ?? 0,
   }));
-  const some = comparable.filter(Boolean).length >= 2;
-  if (!some || comparable.includes(false))
-    return { verdict: some ? differ(changes) : "not comparable", terms };
-  const verdict = changes.some((count) => count > 0)
-    ? "another sequence"
-    : proportional(orders, exact)
-      ? "just by dimension"
-      : "same sequence";
-  return { verdict, terms };
+  return { verdict: verdictOf(orders, exact, changes, pairs.includes(null) || orders.length === 0), terms };
 }
 
-const differ = (changes: readonly number[]): CountingVerdict =>
-  changes.some((count) => count > 0) ? "another sequence" : "not comparable";
+function verdictOf(
+  orders: readonly TermOrder[],
+  dimensions: readonly (Rational | null)[],
+  changes: readonly number[],
+  isPartial: boolean,
+): CountingVerdict {
+  if (changes.some((count) => count > 0)) return "another sequence";
+  if (isPartial) return "not comparable";
+  return proportional(orders, dimensions) ? "just by dimension" : "same sequence";
+}
 
 /** Whether every order is one positive number times the dimension; several parameters never are. */
 function proportional(orders: readonly TermOrder[], dimensions: readonly (Rational | null)[]): boolean {

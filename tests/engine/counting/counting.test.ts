@@ -51,7 +51,7 @@ describe("rules of one's own", () => {
   const theory: Sketch = { ...quartic, terms: ["lambda/4! phi^4", "g/6! phi^6"] };
   const rules = [
     { of: "field", symbol: "", weight: "1, 0" },
-    { of: "coupling or scale", symbol: "lambda", weight: "0, 1" },
+    { of: "coupling or scale", symbol: "lambda", weight: "0, 0" },
     { of: "coupling or scale", symbol: "g", weight: "0, 1/2" },
     { of: "measure", weight: "-4, 0" },
   ];
@@ -63,11 +63,11 @@ describe("rules of one's own", () => {
   it("count in several parameters, and compare sequences by size", () => {
     const value = valueOf({ theory, rules, parameters });
     expect(value.terms.map(({ order }) => order)).toEqual([
-      ["0", "1"],
+      ["0", "0"],
       ["2", "1/2"],
     ]);
-    // 0.01 against 0.1² · 0.1: the same sequence as dimensions 0 and 2.
-    expect(value.terms.map(({ size }) => size?.value)).toEqual([0.01, expect.closeTo(0.001, 12)]);
+    // 1 against 0.1² · 0.1: the same sequence as dimensions 0 and 2.
+    expect(value.terms.map(({ size }) => size?.value)).toEqual([1, expect.closeTo(0.001, 12)]);
     expect(value.verdict).toBe("same sequence");
     expect(value.isEdited).toBe(true);
   });
@@ -80,6 +80,13 @@ describe("rules of one's own", () => {
       [2, 1],
       [1, 2],
     ]);
+  });
+
+  it("see a term that comes to stand beside the kinetic terms, which no row writes", () => {
+    const beside = rules.map((rule) => (rule.symbol === "g" ? { ...rule, weight: "-2, 0" } : rule));
+    expect(valueOf({ theory: { ...theory, terms: ["g/6! phi^6"] }, rules: beside, parameters }).verdict).toBe(
+      "another sequence",
+    );
   });
 
   it("are corrected term by term among the exceptions", () => {
