@@ -26,21 +26,23 @@ export function CountingRulesForm() {
           placeholder="nothing"
         />
       </div>
-      <RowTable
-        table="parameters"
-        noun="parameter"
-        caption="Small parameters"
-        nameOf={(row) => row["symbol"] ?? ""}
-        invitation="as published"
-        columns={[
-          { column: "symbol", heading: "symbol", size: 6 },
-          { column: "value", heading: "value", size: 12, placeholder: "p/Lambda" },
-          { column: "meaning", heading: "meaning", notation: false, size: 18 },
-        ]}
-      />
-      {hasRules ? <OwnRules /> : <PublishedRules />}
-      <Exceptions />
-      <GraphTables />
+      <div className="counting-form">
+        <RowTable
+          table="parameters"
+          noun="parameter"
+          caption="Small parameters"
+          nameOf={(row) => row["symbol"] ?? ""}
+          invitation="as published"
+          columns={[
+            { column: "symbol", heading: "symbol", size: 6 },
+            { column: "value", heading: "value", size: 12, placeholder: "p/Lambda" },
+            { column: "meaning", heading: "meaning", notation: false, size: 18 },
+          ]}
+        />
+        {hasRules ? <OwnRules /> : <PublishedRules />}
+        <Exceptions />
+        <GraphTables />
+      </div>
     </>
   );
 }
