@@ -56,9 +56,12 @@ export function Axes({ x, y, xLabel, yLabel }: AxesProps) {
   );
 }
 
+/** Ends closer than this, in pixels, meet. */
+const MEET = 4;
+
 /**
- * Labels at the right end of the curves, moved apart where they would lie on each other. They stand in the order of the
- * curves halfway along, where these are apart: sizes meet at the heavy scale, and their order there says nothing.
+ * Labels at the right end of the curves, moved apart where they would lie on each other. Where ends meet, as sizes do at
+ * the heavy scale, their order there says nothing: those labels stand in the order of the curves halfway along.
  */
 export function EndLabels({
   curves,
@@ -79,7 +82,7 @@ export function EndLabels({
         ? [{ key, label, color, at: y.position(last[1]), rank: y.position(halfway[1]) }]
         : [];
     })
-    .sort((a, b) => a.rank - b.rank);
+    .sort((a, b) => (Math.abs(a.at - b.at) < MEET ? a.rank - b.rank : a.at - b.at));
   const placed = spread(
     wanted.map(({ at }) => at).sort((a, b) => a - b),
     11.5,
