@@ -6,6 +6,7 @@
  * Takes a PostgreSQL from SUBLEADING_TEST_DATABASE_URL or DATABASE_URL, Chromium from CHROMIUM_PATH, and the built page.
  * Figures and ratios only; the aims stand beside them.
  */
+import { printClosureTimes } from "./closure-times.ts";
 import { printEngineTimes } from "./engine-times.ts";
 import { printPageTimes } from "./page-times.ts";
 import { printGraphTimes } from "./graphs-times.ts";
@@ -17,5 +18,7 @@ printEngineTimes();
 console.log("");
 printTruncationTimes();
 printGraphTimes();
+console.log("");
+printClosureTimes();
 console.log("");
 await printPageTimes();
