@@ -107,6 +107,10 @@ function describeDemand(
     latex,
     text,
     legs: target.total,
+    legsOf: target.described.fields.map(({ fieldRowId, count, conjugateCount }) => ({
+      fieldRowId,
+      count: count + conjugateCount,
+    })),
     derivatives,
     timeDerivatives,
     dimension,

@@ -25,6 +25,8 @@ export interface DemandedOperator {
   readonly latex: string;
   readonly text: string;
   readonly legs: number;
+  /** Legs of each field, with those of its conjugate. */
+  readonly legsOf: readonly { readonly fieldRowId: string; readonly count: number }[];
   readonly derivatives: number;
   readonly timeDerivatives: number;
   readonly dimension: Exact;

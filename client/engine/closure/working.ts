@@ -2,11 +2,14 @@
 import type { WorkingStep } from "../evaluation.ts";
 import { bracketed } from "../divergence/formulas.ts";
 import { LinearForm } from "../exact/linear-form.ts";
+import { isRetarded } from "../divergence/retarded.ts";
 import type { Theory } from "../premises/theory.ts";
 import { isMissing, type ClosureValue, type DemandedOperator } from "./value.ts";
 
 /** Written out one by one: the first that are missing, or where none is the first that are demanded. */
 const MOST_SHOWN = 8;
+/** Operators of one order written in a line. */
+const MOST_NAMED = 8;
 
 export function explainClosure(value: ClosureValue, theory: Theory): WorkingStep[] {
   const { caps, operators } = value;
@@ -35,6 +38,7 @@ export function explainClosure(value: ClosureValue, theory: Theory): WorkingStep
       text: "Where $\\omega \\ge 0$ and a one-particle irreducible graph exists, the operators with these legs and $k \\le \\omega$ derivatives are demanded; the remainder $\\omega - k$ is made up by the coefficient. A part of a graph that hangs on one vertex and has no external leg sees no external momentum: then $k$ is at most the number of derivatives at the vertices.",
     },
     { step: "prose", text: regulatorText(value) },
+    { step: "prose", text: graphText(theory) },
     ...selectionSteps(value),
     ...(examples.length === 0
       ? []
@@ -46,6 +50,12 @@ export function explainClosure(value: ClosureValue, theory: Theory): WorkingStep
           ...examples.flatMap((operator) => explainOperator(operator, value, theory)),
           ...operatorsLeft(missing.length > 0 ? missing.length : operators.length),
         ]),
+    { step: "heading", text: "The closed set" },
+    ...value.orders.map(({ order: at, enters }): WorkingStep => {
+      const named = enters.slice(0, MOST_NAMED).map(({ latex }) => latex);
+      const rest = enters.length > MOST_NAMED ? [`\\ldots\\ (${enters.length - MOST_NAMED})`] : [];
+      return { step: "formula", latex: `n = ${at.latex}:\\quad ${[...named, ...rest].join(",\\;\\; ")}` };
+    }),
     { step: "heading", text: "Why it ends" },
     { step: "prose", text: endText(value) },
   ];
@@ -74,7 +84,22 @@ function regulatorText({ regulator, massless }: ClosureValue): string {
     "In dimensional regularisation with mass-independent subtraction a counterterm is a product of couplings and masses, so it has exactly the order $n$ of its insertions: the order in $1/\\Lambda$ is conserved.";
   return massless
     ? `${conserved} The theory is taken as massless: nothing makes up a remainder, and only $k = \\omega$ is demanded.`
-    : `${conserved} That supposes every mass kept as a light parameter, as masses make up the remainder: by even powers, and by odd ones where chirality is broken or spinors are among the legs.`;
+    : `${conserved} That supposes every mass kept as a light parameter, as masses make up the remainder: by even powers, and by odd ones only where a spinor has a mass term, written or demanded, as chirality protects it.`;
+}
+
+/** Which graphs count, beside their degree. */
+function graphText({ spacetime, fields }: Theory): string {
+  const d = spacetime.geometry === "isotropic" ? spacetime.d.asRational() : null;
+  const rules = [
+    "Loops of parts that hang together at single vertices multiply, so each such part must have $\\omega \\ge 0$ by itself, or only subdivergences are left.",
+    d && d.isInteger() && d.numerator % 2n !== 0n
+      ? "In odd $d$ dimensional regularisation has poles at even loop order only, for each such part."
+      : "",
+    fields.some(isRetarded)
+      ? "Retarded lines run forward in time: a graph in which they close on themselves vanishes, and where all lines are of Schrödinger fields an odd $D\\cdot L$ of such a part leaves no pole."
+      : "",
+  ];
+  return rules.filter((rule) => rule !== "").join(" ");
 }
 
 function selectionSteps({ shift }: ClosureValue): WorkingStep[] {
@@ -122,14 +147,13 @@ function inBrackets(latex: string): string {
 }
 
 /** "2\cdot 1 - 2\cdot \frac{3}{2}": count and weight of each field among the legs. */
-function legsWeight({ key }: DemandedOperator, theory: Theory): string {
-  const parts = (key.split("/")[0] ?? "").split(",").flatMap((part) => {
-    const [rowId, ...counts] = part.split(":");
-    const field = theory.fields.find((one) => one.rowId === rowId);
-    const count = counts.reduce((sum, text) => sum + Number(text), 0);
-    return field ? [`${count}\\cdot ${bracketed(field.weight)}`] : [];
-  });
-  return parts.join(" - ");
+function legsWeight({ legsOf }: DemandedOperator, theory: Theory): string {
+  return legsOf
+    .flatMap(({ fieldRowId, count }) => {
+      const field = theory.fields.find(({ rowId }) => rowId === fieldRowId);
+      return field ? [`${count}\\cdot ${bracketed(field.weight)}`] : [];
+    })
+    .join(" - ");
 }
 
 function endText({ rounds, verdict, caps, legsBeyond }: ClosureValue): string {
@@ -145,7 +169,7 @@ function endText({ rounds, verdict, caps, legsBeyond }: ClosureValue): string {
   const verdicts: Record<ClosureValue["verdict"], string> = {
     closed: `The premises hold every operator that is demanded: ${order} they are closed under renormalisation.`,
     "closed up to redundant operators": `All that the premises lack is redundant: integration by parts, equations of motion and redefinitions of fields turn it into other operators of the same order. Up to these, ${order}, they are closed under renormalisation.`,
-    "not closed": `With what is missing added, the set is closed under renormalisation ${order}.`,
+    "not closed": `With what is missing added at these orders, the set is closed under renormalisation ${order}. In the premises a term counts at the order of its dimension; where that is lower than the order at which it was demanded, more may be demanded then.`,
   };
   return `${turns}. ${cut}. ${verdicts[verdict]}`;
 }
