@@ -68,6 +68,24 @@ describe("renormalisable theories close on themselves", () => {
   });
 });
 
+describe("gauge theories", () => {
+  // Collins (1984) chapter 12, Srednicki (2007) chapter 72: the premises' own terms absorb all that diverges.
+  it("Yang–Mills theory with ghosts and fermions closes", () => {
+    const yangMills = theoryOf({
+      fields: { A: "gauge potential", c: "ghost", psi: "Dirac spinor" },
+      terms: {
+        three: { fields: "A3", derivatives: 1 },
+        four: "A4",
+        ghost: { fields: "c~ c A", derivatives: 1 },
+        quark: "psi~ psi A",
+        mass: "psi~ psi",
+      },
+    });
+    expect(missing(yangMills, { maxOrder: "0" })).toEqual({});
+    expect(closureOf(yangMills, { maxOrder: "0" }).verdict).toBe("closed");
+  });
+});
+
 describe("theories that need new terms at every order", () => {
   // Weinberg 1979, Physica A 96, 327, section 3: one loop of the two-derivative terms asks for four derivatives. Here with
   // (∂φ)⁴/Λ⁴, whose shift symmetry forbids everything with fewer: own derivation, k = 4L + Σ V k_i − 2 I.

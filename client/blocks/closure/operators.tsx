@@ -91,10 +91,11 @@ export function Operators({ value }: { readonly value: ClosureValue }) {
             show: ({ dimension }) => <Formula latex={dimension.latex} />,
           },
           { heading: "demanded by", show: (operator) => <Insertions operator={operator} /> },
+          { heading: "loops", numeric: true, show: ({ loops }) => String(loops) },
           { heading: "graph", show: (operator) => <Drawing operator={operator} value={value} /> },
           { heading: "ω", numeric: true, show: ({ omega }) => <Formula latex={omega.latex} /> },
           {
-            heading: value.regulator === "cutoff" ? "times the cutoff to" : "times masses to",
+            heading: value.regulator === "cutoff" ? "power of the cutoff" : "power of masses",
             numeric: true,
             show: ({ remainder }) => <Formula latex={remainder.latex} />,
           },
@@ -122,7 +123,7 @@ export function Operators({ value }: { readonly value: ClosureValue }) {
   );
 }
 
-function Insertions({ operator: { vertices, loops } }: { readonly operator: DemandedOperator }) {
+function Insertions({ operator: { vertices } }: { readonly operator: DemandedOperator }) {
   return (
     <>
       {vertices.map(({ latex, count, termRowId }, index) => (
@@ -133,7 +134,6 @@ function Insertions({ operator: { vertices, loops } }: { readonly operator: Dema
           {termRowId === null && <span className="sr-only"> (itself demanded)</span>}
         </span>
       ))}
-      ; {loops} {loops === 1 ? "loop" : "loops"}
     </>
   );
 }
@@ -155,7 +155,7 @@ function Drawing({
 
 function independenceWords({ independence, structures }: DemandedOperator): string {
   return independence === "independent" && structures !== null && structures > 1
-    ? `independent, ${String(structures)} of them`
+    ? `${String(structures)} independent ones`
     : independence;
 }
 

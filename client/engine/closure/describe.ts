@@ -2,7 +2,8 @@
 import { lineStyle } from "../divergence/line-styles.ts";
 import { Rational } from "../exact/rational.ts";
 import { shown } from "../exact/shown.ts";
-import type { Closure, Demand } from "./close.ts";
+import type { Closure } from "./close.ts";
+import type { Demand } from "./look-for.ts";
 import type { Frame } from "./frame.ts";
 import { independenceOf } from "./independence.ts";
 import { Structures } from "./structures.ts";

@@ -44,18 +44,33 @@ export function placeOf(surplus: number, counts: readonly number[]): number {
   return counts.reduce((bits, count, f) => bits + (count % 2) * 2 ** f, surplus * 2 ** counts.length);
 }
 
+/** What may still be looked at, over all rounds: a bound on time and memory that is the same everywhere. */
+export interface Allowance {
+  /** Partial sets. */
+  steps: number;
+  /** Sets that are kept. */
+  sets: number;
+}
+
+/** A set is of use when Σ V [g] leaves room for an operator's derivatives, at an order below the known one. */
+export interface Need {
+  /** [g] of the operator: the most that Σ V [g] may be. */
+  readonly coefficient: number;
+  readonly below: number;
+}
+
 /**
  * @param isFresh of each set one insertion at least is fresh: the others have been looked at before
- * @param places only sets in these places are kept
- * @returns null when there are more than `most`
+ * @param needs by place: only sets that one of them asks for are kept
+ * @returns null when the allowance does not suffice
  */
 export function insertionSets(
   insertions: readonly Insertion[],
   isFresh: (insertion: Insertion) => boolean,
   vertices: number,
-  places: ReadonlySet<number>,
+  needs: ReadonlyMap<number, readonly Need[]>,
   frame: Frame,
-  most: number,
+  allowance: Allowance,
 ): SetIndex | null {
   const list = [...insertions].sort((a, b) => a.order - b.order || a.legs - b.legs);
   const lastFresh = list.findLastIndex(isFresh);
@@ -66,7 +81,6 @@ export function insertionSets(
   };
   const groups = new Map<number, Map<number, InsertionSet[]>>();
   const chosen: number[] = list.map(() => 0);
-  let size = 0;
   let any = false;
   const fields = frame.weights.length;
   const parities = list.map(({ counts }) => placeOf(0, counts));
@@ -76,13 +90,14 @@ export function insertionSets(
     left: number,
     sums: { surplus: number; order: number; coefficient: number; parity: number; fresh: boolean },
   ): void => {
+    allowance.steps -= 1;
     if (left === 0) {
       if (!sums.fresh) return;
       any = true;
       const key = sums.surplus * 2 ** fields + sums.parity;
-      if (!places.has(key)) return;
-      size += 1;
-      if (size > most) return;
+      if (!needs.get(key)?.some((need) => isOfUse(sums, need, frame))) return;
+      allowance.sets -= 1;
+      if (allowance.sets < 0) return;
       const set = finished(list, chosen, sums, vertices, frame);
       const byRank = groups.get(key) ?? new Map<number, InsertionSet[]>();
       groups.set(key, byRank);
@@ -94,7 +109,8 @@ export function insertionSets(
     }
     for (let index = from; index < list.length; index += 1) {
       const insertion = list[index];
-      if (!insertion || size > most || (!sums.fresh && index > lastFresh)) return;
+      if (!insertion || allowance.sets < 0 || allowance.steps < 0 || (!sums.fresh && index > lastFresh))
+        return;
       const order = sums.order + insertion.order;
       // Insertions stand in rising order: the next ones cost as much or more.
       if (sums.order + left * insertion.order > frame.mostOrder) return;
@@ -109,7 +125,7 @@ export function insertionSets(
     }
   };
   choose(0, vertices, { surplus: 0, order: 0, coefficient: 0, parity: 0, fresh: false });
-  if (size > most) return null;
+  if (allowance.sets < 0 || allowance.steps < 0) return null;
   const sorted = new Map<number, RankedSets[]>();
   for (const [key, byRank] of groups) {
     const ranked = [...byRank].map(([rank, sets]) => ({
@@ -122,6 +138,16 @@ export function insertionSets(
     );
   }
   return { any, find: (place) => sorted.get(place) ?? [] };
+}
+
+function isOfUse(
+  sums: { readonly order: number; readonly coefficient: number },
+  { coefficient, below }: Need,
+  { settings }: Frame,
+): boolean {
+  if (sums.coefficient > coefficient) return false;
+  const order = settings.cutoff ? Math.max(0, sums.order + sums.coefficient - coefficient) : sums.order;
+  return order < below;
 }
 
 function finished(

@@ -41,6 +41,7 @@ export function targetsOf(frame: Frame): Target[] | null {
   const takesPart = (f: number) => insertions.some(({ counts }) => (counts[f] ?? 0) > 0);
   const choices = legChoices(theory, frame.mostLegs, MOST_CHOICES, takesPart);
   if (!choices) return null;
+  const antighosts = antighostsShift(frame);
   return choices.flatMap((legs) => {
     const bound = frame.measure - weightOf(legs, frame);
     const largest = bound + frame.mostOrder;
@@ -55,7 +56,8 @@ export function targetsOf(frame: Frame): Target[] | null {
     const candidates = countertermsOf(omega, legs, theory, settings.useSymmetries).flatMap(
       (counterterm): Candidate[] => {
         const { derivatives, timeDerivatives, gauge, massPower } = counterterm;
-        if (gauge === "excluded" || derivatives + timeDerivatives < shiftLegs) return [];
+        const ghostLegs = antighosts.reduce((sum, f) => sum + (legs.conjugate[f] ?? 0), 0);
+        if (gauge === "excluded" || derivatives + timeDerivatives < shiftLegs + ghostLegs) return [];
         const weight = units.whole(omega.minus(Rational.parse(massPower.text) ?? Rational.zero));
         const marks = `${timeDerivatives > 0 ? `t${timeDerivatives}` : ""}d${derivatives}`;
         return [{ key: `${described.key}/${marks}`, counterterm, weight, coefficient: bound - weight }];
@@ -76,5 +78,18 @@ export function targetsOf(frame: Frame): Target[] | null {
         candidates,
       },
     ];
+  });
+}
+
+/**
+ * Ghosts whose antighost always stands with a derivative, as in covariant gauges: one factors out of every graph for each
+ * external antighost, so operators with fewer are not demanded (from memory: Collins 1984, chapter 12).
+ */
+function antighostsShift({ theory, units, insertions }: Frame): number[] {
+  const one = units.whole(Rational.one);
+  return theory.fields.flatMap(({ kind }, f) => {
+    const withIt = insertions.filter(({ edges }) => (edges.conjugate[f] ?? 0) > 0);
+    const shifts = withIt.every(({ edges, derivatives }) => derivatives >= one * (edges.conjugate[f] ?? 0));
+    return kind === "ghost" && withIt.length > 0 && shifts ? [f] : [];
   });
 }
