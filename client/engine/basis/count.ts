@@ -5,15 +5,11 @@
  */
 import type { Progress } from "../kind.ts";
 import { Rational } from "../exact/rational.ts";
-import { fieldClasses, type FieldClass } from "./classes.ts";
-import type { Content, Quantum } from "./content.ts";
-import { cycleTypes, factorial } from "./cycle-types.ts";
+import type { FieldClass } from "./classes.ts";
+import type { Content } from "./content.ts";
+import { factorial } from "./cycle-types.ts";
 import { FlavourPolynomial } from "./flavour-polynomial.ts";
-import { GaugeIntegral } from "./gauge-integral.ts";
-import { LorentzIntegral } from "./lorentz-integral.ts";
-import { OrthogonalIntegral } from "./orthogonal-integral.ts";
-import type { Representation } from "./representations.ts";
-import { ScalarIntegral } from "./scalar-integral.ts";
+import { Integrals } from "./integrals.ts";
 
 export interface CountedClass extends FieldClass {
   /** By number of derivatives, those that are not zero. For one of the conjugate pair. */
@@ -24,18 +20,21 @@ export interface CountedClass extends FieldClass {
 const EXACT_BELOW = 2 ** 53;
 
 /**
+ * @param fields those that can hold operators: all of `fieldClasses`
  * @param least, most twice the mass dimension, inclusive; the count is complete above the dimension of spacetime only
  * @param tell told how far it is, once per class
+ * @param exactBelow what certifies a float; 0 counts every class in big integers
  */
 export function countOperators(
   content: Content,
+  fields: readonly FieldClass[],
   least: number,
   most: number,
   tell: (progress: Progress) => void,
+  exactBelow = EXACT_BELOW,
 ): readonly CountedClass[] {
-  const classes: FieldClass[] = [];
-  fieldClasses(content, most, (found) => classes.push(found) > 0);
-  const counter = new Counter(content, most);
+  const classes = [...fields];
+  const counter = new Counter(least, most, content, exactBelow);
   // Rising dimension, so that progress means something.
   classes.sort((a, b) => a.doubled - b.doubled);
   return classes.flatMap((found, index) => {
@@ -43,61 +42,35 @@ export function countOperators(
     const numbers = counter
       .count(found)
       .map((number, derivatives) => ({ derivatives, number }))
-      // At and below the dimension of spacetime these are no counts.
-      .filter(({ derivatives, number }) => found.doubled + 2 * derivatives >= least && !number.isZero());
-    for (const { number } of numbers) assertWhole(number);
+      .filter(({ number }) => !number.isZero());
     return numbers.length === 0 ? [] : [{ ...found, numbers }];
   });
 }
 
-/** Where the cycles of one quantum are written down: one number of a multiset for each integral. */
-interface Entries {
-  readonly others: number;
-  readonly scalars: number;
-  readonly gauge: readonly number[];
-  readonly vectors: readonly number[];
-}
-
-/** One product of cycle types: its weight, and the same by its factors for when the weight is too large to be exact. */
-interface Term {
-  readonly weight: number;
-  /** Valid until the next term. */
-  readonly factors: readonly bigint[];
-  readonly values: readonly number[];
-  readonly flavourPower: number;
-  readonly vector: Float64Array;
+/** Products of cycle types of the first few quanta. */
+interface Beginnings {
+  /** For each place of `Integrals`, of each product its multiset. */
+  readonly multisets: readonly number[][];
+  readonly flavourPowers: number[];
+  /** Exact while below `EXACT_BELOW`. */
+  readonly weights: number[];
 }
 
 class Counter {
-  readonly #lorentz: LorentzIntegral;
-  readonly #scalarIntegral: ScalarIntegral | null;
-  readonly #gauge: readonly GaugeIntegral[];
-  /** For each gauge group, of each representation its place among the different ones. */
-  readonly #numbers: readonly ReadonlyMap<Representation, number>[];
-  readonly #orthogonal: readonly OrthogonalIntegral[];
+  readonly #integrals: Integrals;
+  /** Of the class before: its powers, and the products after each quantum; the next one shares a beginning. */
+  #powers: readonly number[] = [];
+  readonly #beginnings: Beginnings[];
 
   constructor(
-    private readonly content: Content,
+    private readonly least: number,
     private readonly most: number,
+    content: Content,
+    private readonly exactBelow: number,
   ) {
-    const { quanta, d, withParity } = content;
-    this.#lorentz = new LorentzIntegral(most);
-    const isUsual = d === 4 && !withParity && !quanta.some(({ pseudoscalar }) => pseudoscalar);
-    this.#scalarIntegral = isUsual
-      ? null
-      : new ScalarIntegral(d, withParity, (quanta) => Math.floor((most - quanta * (d - 2)) / 2));
-    const different = content.gauge.map((_, index) => distinct(quanta, index));
-    this.#numbers = different.map(
-      (all, index) =>
-        new Map(
-          quanta.flatMap(({ representations }) => {
-            const own = representations[index];
-            return own ? [[own, all.findIndex(({ name }) => name === own.name)] as const] : [];
-          }),
-        ),
-    );
-    this.#gauge = content.gauge.map(({ n }, index) => new GaugeIntegral(n, different[index] ?? []));
-    this.#orthogonal = content.orthogonal.map(({ n }) => new OrthogonalIntegral(n));
+    this.#integrals = new Integrals(content, most);
+    const multisets = this.#integrals.multisets.map(({ empty }) => [empty]);
+    this.#beginnings = [{ multisets, flavourPowers: [0], weights: [1] }];
   }
 
   /** By number of derivatives. */
@@ -105,127 +78,118 @@ class Counter {
     const derivatives = Math.floor((this.most - found.doubled) / 2) + 1;
     const sums = this.#sum(found, derivatives);
     const arrangements = found.powers.reduce((product, power) => product * factorial(power), 1n);
-    return Array.from({ length: derivatives }, (_, k) =>
-      FlavourPolynomial.of(sums.map((byDerivatives) => Rational.of(byDerivatives[k] ?? 0n, arrangements))),
-    );
+    return Array.from({ length: derivatives }, (_, k) => {
+      const coefficients = Array.from(sums, (byDerivatives) => byDerivatives[k] ?? 0n);
+      // At and below the dimension of spacetime these are no counts.
+      if (found.doubled + 2 * k < this.least || coefficients.every((coefficient) => coefficient === 0n))
+        return FlavourPolynomial.zero;
+      assertWhole(coefficients, arrangements);
+      return FlavourPolynomial.of(
+        coefficients.map((coefficient) =>
+          coefficient === 0n ? Rational.zero : Rational.of(coefficient, arrangements),
+        ),
+      );
+    });
   }
 
   /** Sums [power of n_f][derivatives] before the division by Π n_i!. */
-  #sum(found: FieldClass, derivatives: number): bigint[][] {
+  #sum({ powers }: FieldClass, derivatives: number): bigint[][] {
+    const { multisets, flavourPowers, weights } = this.#expanded(powers);
+    const [others = [], scalars = [], ...groups] = multisets;
     const floats: Float64Array[] = [];
     let largest = 0;
-    this.#terms(found, ({ weight, flavourPower, vector }) => {
-      const sums = (floats[flavourPower] ??= new Float64Array(derivatives));
+    for (let index = 0; index < weights.length; index++) {
+      let weight = weights[index] ?? 0;
+      for (let group = 0; group < groups.length && weight !== 0; group++)
+        weight *= this.#integrals.group(group, groups[group]?.[index] ?? 0);
+      if (weight === 0) continue;
+      const vector = this.#integrals.vector(others[index] ?? 0, scalars[index] ?? 0);
+      const sums = (floats[flavourPowers[index] ?? 0] ??= new Float64Array(derivatives));
       let size = 0;
       for (let k = 0; k < derivatives; k++) {
         const term = weight * (vector[k] ?? 0);
         sums[k] = (sums[k] ?? 0) + term;
         size = Math.max(size, Math.abs(term));
       }
-      largest += size;
-    });
-    if (largest < EXACT_BELOW)
+      // A weight that is not exact may meet zeros only.
+      largest += size + Math.abs(weight);
+    }
+    // Never so for NaN, which an integral is that a float is not known to hold.
+    if (largest < this.exactBelow)
       return Array.from(floats, (sums: Float64Array | undefined) =>
         Array.from(sums ?? [], (sum) => BigInt(sum)),
       );
-    const exact: bigint[][] = [];
-    this.#terms(found, ({ factors, values, flavourPower, vector }) => {
-      const sums = (exact[flavourPower] ??= Array.from({ length: derivatives }, () => 0n));
-      const weight = [...factors, ...values.map(BigInt)].reduce((product, factor) => product * factor, 1n);
-      for (let k = 0; k < derivatives; k++) sums[k] = (sums[k] ?? 0n) + weight * BigInt(vector[k] ?? 0);
+    return this.#exactSum(powers, derivatives);
+  }
+
+  #expanded(powers: readonly number[]): Beginnings {
+    let at = 0;
+    while (at < this.#powers.length && powers[at] === this.#powers[at]) at += 1;
+    let last = this.#beginning(at);
+    for (; at < powers.length; at++) {
+      const power = powers[at] ?? 0;
+      if (power > 0) last = this.#extend(last, at, power);
+      this.#beginnings[at + 1] = last;
+    }
+    this.#powers = powers;
+    return last;
+  }
+
+  #beginning(at: number): Beginnings {
+    const found = this.#beginnings[at];
+    if (!found) throw new Error("quanta come in order");
+    return found;
+  }
+
+  #extend(before: Beginnings, at: number, power: number): Beginnings {
+    const choices = this.#integrals.choices(at, power);
+    const multisets = before.multisets.map((own, place) => {
+      const union = this.#integrals.multisets[place];
+      // The field does not know this group.
+      if (choices.length === 1 && choices[0]?.multisets[place] === 0) return own;
+      return own.flatMap((first) =>
+        choices.map((choice) => union?.union(first, choice.multisets[place] ?? 0) ?? 0),
+      );
     });
+    return {
+      multisets,
+      flavourPowers: before.flavourPowers.flatMap((first) =>
+        choices.map(({ flavourPower }) => first + flavourPower),
+      ),
+      weights: before.weights.flatMap((first) => choices.map(({ approximate }) => first * approximate)),
+    };
+  }
+
+  /** The same in big integers throughout. */
+  #exactSum(powers: readonly number[], derivatives: number): bigint[][] {
+    const { multisets, flavourPowers } = this.#expanded(powers);
+    const [others = [], scalars = [], ...groups] = multisets;
+    let weights = [1n];
+    for (const [at, power] of powers.entries())
+      if (power > 0)
+        weights = weights.flatMap((first) =>
+          this.#integrals.choices(at, power).map(({ factor }) => first * factor),
+        );
+    const exact: bigint[][] = [];
+    for (const [index, first] of weights.entries()) {
+      const weight = groups.reduce(
+        (product, group, at) => product * this.#integrals.exactGroup(at, group[index] ?? 0),
+        first,
+      );
+      if (weight === 0n) continue;
+      const vector = this.#integrals.exactVector(others[index] ?? 0, scalars[index] ?? 0);
+      const sums = (exact[flavourPowers[index] ?? 0] ??= Array.from({ length: derivatives }, () => 0n));
+      for (let k = 0; k < derivatives; k++) sums[k] = (sums[k] ?? 0n) + weight * (vector[k] ?? 0n);
+    }
     return Array.from(exact, (sums: bigint[] | undefined) => sums ?? []);
   }
-
-  /** Every choice of a cycle type for each power. */
-  #terms({ powers }: FieldClass, note: (term: Term) => void): void {
-    const { quanta } = this.content;
-    const factors: bigint[] = [];
-    const descend = (at: number, weight: number, flavourPower: number, entries: Entries) => {
-      if (at === quanta.length) {
-        const values = [
-          ...this.#gauge.map((gauge, index) => gauge.value(entries.gauge[index] ?? 0)),
-          ...this.#orthogonal.map((group, index) => group.value(entries.vectors[index] ?? 0)),
-        ];
-        if (values.includes(0)) return;
-        const vector =
-          this.#scalarIntegral?.value(entries.scalars) ??
-          this.#lorentz.value(entries.others, entries.scalars);
-        note({
-          weight: values.reduce((product, value) => product * value, weight),
-          factors,
-          values,
-          flavourPower,
-          vector,
-        });
-        return;
-      }
-      const power = powers[at] ?? 0;
-      const quantum = quanta[at];
-      if (power === 0 || !quantum) return descend(at + 1, weight, flavourPower, entries);
-      for (const { cycles, permutations } of cycleTypes(power)) {
-        const sign = quantum.isFermion && (power - cycles.length) % 2 === 1 ? -1n : 1n;
-        const copies =
-          quantum.flavours === "symbolic" ? 1n : BigInt(quantum.flavours) ** BigInt(cycles.length);
-        const factor = sign * copies * permutations;
-        factors.push(factor);
-        descend(
-          at + 1,
-          weight * Number(factor),
-          flavourPower + (quantum.flavours === "symbolic" ? cycles.length : 0),
-          this.#enter(entries, quantum, cycles),
-        );
-        factors.pop();
-      }
-    };
-    descend(0, 1, 0, {
-      others: 0,
-      scalars: 0,
-      gauge: this.#gauge.map(() => 0),
-      vectors: this.#orthogonal.map(() => 0),
-    });
-  }
-
-  #enter(entries: Entries, quantum: Quantum, cycles: readonly number[]): Entries {
-    let { others, scalars } = entries;
-    const gauge = [...entries.gauge];
-    const vectors = [...entries.vectors];
-    for (const k of cycles) {
-      if (quantum.spin !== "scalar")
-        others = this.#lorentz.others.add(others, this.#lorentz.element(quantum.spin, k));
-      else if (this.#scalarIntegral)
-        scalars = this.#scalarIntegral.cycles.add(
-          scalars,
-          this.#scalarIntegral.element(quantum.pseudoscalar, k),
-        );
-      else scalars = this.#lorentz.scalars.add(scalars, k);
-      for (const [index, integral] of this.#gauge.entries()) {
-        const representation = quantum.representations[index];
-        if (!representation || representation.dimension === 1) continue;
-        const number = this.#numbers[index]?.get(representation) ?? 0;
-        gauge[index] = integral.multisets.add(gauge[index] ?? 0, integral.element(number, k));
-      }
-      for (const [index, group] of this.#orthogonal.entries())
-        if (quantum.vectors[index]) vectors[index] = group.multisets.add(vectors[index] ?? 0, k);
-    }
-    return { others, scalars, gauge, vectors };
-  }
 }
 
-function distinct(quanta: readonly Quantum[], index: number): readonly Representation[] {
-  const found = new Map<string, Representation>();
-  for (const { representations } of quanta) {
-    const representation = representations[index];
-    if (representation) found.set(representation.name, representation);
-  }
-  return [...found.values()];
-}
-
-/** A count that is no count, for any number of flavours, is a mistake of ours. */
-function assertWhole(polynomial: FlavourPolynomial): void {
-  for (let flavours = 0; flavours <= polynomial.degree() + 1; flavours++) {
-    const value = polynomial.at(flavours);
-    if (!value.isInteger() || value.sign() < 0)
-      throw new Error(`${polynomial.toString()} operators cannot be, at n_f = ${flavours}`);
+/** A count that is no count, for any number of flavours, is a mistake of ours. Before the division, in integers. */
+function assertWhole(coefficients: readonly bigint[], arrangements: bigint): void {
+  for (let flavours = 0n; flavours <= BigInt(coefficients.length); flavours++) {
+    const value = coefficients.reduceRight((sum, coefficient) => sum * flavours + coefficient, 0n);
+    if (value < 0n || value % arrangements !== 0n)
+      throw new Error(`${value}/${arrangements} operators cannot be, at n_f = ${flavours}`);
   }
 }

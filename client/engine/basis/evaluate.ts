@@ -54,10 +54,10 @@ export function evaluateBasis(
   if (work.seconds > SECONDS_AT_ONCE && inputs.patience === patienceChoices[0]) {
     const minutes = Math.max(1, Math.round(work.seconds / 60));
     return refused([
-      { code: "count-takes-long", path: ["patience"], facts: { classes: work.classes, minutes } },
+      { code: "count-takes-long", path: ["patience"], facts: { classes: work.classes.length, minutes } },
     ]);
   }
-  const counted = countOperators(content, range.least, range.most, context.tell);
+  const counted = countOperators(content, work.classes, range.least, range.most, context.tell);
   const value = present(content, counted, range, flavours);
   return {
     value,

@@ -3,6 +3,7 @@
  * once: ∫ dμ 1/P(t; a, b) Π χ(t^k; a^k, b^k), with t counting derivatives (Henning, Lu, Melia, Murayama 2017). Complete
  * for operators of mass dimension above 4; below, conserved currents and free field strengths would be counted wrongly.
  */
+import { exactLorentz, pack, type Monomials } from "./exact-lorentz.ts";
 import { LONGEST_CYCLE } from "./gauge-integral.ts";
 import { Multisets } from "./multisets.ts";
 
@@ -25,11 +26,13 @@ interface SpinTerm {
   readonly k: number;
   readonly coefficient: number;
 }
+interface Derivatives {
+  readonly projected: Float64Array;
+  readonly largest: number;
+  readonly width: number;
+}
 /** A Laurent polynomial in a, b and t by packed exponents. */
 type Sparse = ReadonlyMap<number, number>;
-
-/** Packs exponents |x|, |y| < 512 and 0 ≤ k < 512. */
-const pack = (x: number, y: number, k: number) => ((x + 512) * 1024 + y + 512) * 512 + k;
 
 export class LorentzIntegral {
   /** Cycle lengths of scalars. */
@@ -37,19 +40,22 @@ export class LorentzIntegral {
   /** Cycles of everything else: see `element`. */
   readonly others = new Multisets(spins.length * LONGEST_CYCLE);
   readonly #cycles = new Multisets(LONGEST_CYCLE);
-  readonly #derivatives = new Map<number, Float64Array>();
+  readonly #derivatives = new Map<number, Derivatives>();
   readonly #characters = new Map<number, Sparse>([[this.others.empty, new Map([[pack(0, 0, 0), 1]])]]);
   readonly #spins = new Map<number, readonly SpinTerm[]>();
   readonly #values = new Map<number, Float64Array>();
 
   /** @param doubled twice the largest mass dimension that is counted */
-  constructor(private readonly doubled: number) {}
+  constructor(
+    private readonly doubled: number,
+    private readonly exactBelow = 2 ** 53,
+  ) {}
 
   element(spin: Spin, k: number): number {
     return spins.indexOf(spin) * LONGEST_CYCLE + k;
   }
 
-  /** Numbers by derivatives, from 0 to as many as the largest dimension leaves room for. Exact integers. */
+  /** Numbers by derivatives, from 0 to as many as the largest dimension leaves room for. Integers; NaN where floats may not be. */
   value(others: number, scalars: number): Float64Array {
     const key = others * 2 ** 26 + scalars;
     const known = this.#values.get(key);
@@ -57,6 +63,24 @@ export class LorentzIntegral {
     const value = this.#compute(others, scalars);
     this.#values.set(key, value);
     return value;
+  }
+
+  /** The same in big integers throughout. */
+  exactValue(others: number, scalars: number): readonly bigint[] {
+    const spinning = this.others.elementsOf(others).map((element) => {
+      const spin = spins[Math.floor(element / LONGEST_CYCLE)] ?? "left spinor";
+      return { spin, k: element % LONGEST_CYCLE };
+    });
+    const lengths = this.scalars.elementsOf(scalars);
+    const base =
+      spinning.reduce((sum, { spin, k }) => sum + k * doubledDimension[spin], 0) +
+      2 * lengths.reduce((sum, k) => sum + k, 0);
+    return exactLorentz(
+      [...spinning.map(({ k }) => k), ...lengths],
+      spinning.map(({ spin, k }) => characterOf(spin, k)),
+      lengths,
+      Math.max(0, Math.floor((this.doubled - base) / 2)),
+    );
   }
 
   #compute(others: number, scalars: number): Float64Array {
@@ -76,13 +100,17 @@ export class LorentzIntegral {
     const most = Math.floor((this.doubled - base) / 2);
     const value = new Float64Array(Math.max(0, most + 1));
     if (most < 0) return value;
-    const { projected, width } = this.#derivativesOf(cycles);
+    const { projected, largest, width } = this.#derivativesOf(cycles);
+    let size = 0;
     for (const { a, b, k, coefficient } of this.#spinsOf(others)) {
       if (a >= width || b >= width) continue;
+      size += Math.abs(coefficient);
       for (let total = k; total <= most; total++)
         value[total] =
           (value[total] ?? 0) + coefficient * (projected[((total - k) * width + a) * width + b] ?? 0);
     }
+    const bound = size * largest * 2 ** lengths.filter((k) => 2 * k <= most).length;
+    if (!(bound < this.exactBelow)) return value.fill(NaN);
     // A scalar's equation of motion: one factor 1 − t^{2k} for each cycle.
     for (const k of lengths)
       for (let total = most; total >= 2 * k; total--)
@@ -91,16 +119,17 @@ export class LorentzIntegral {
   }
 
   /** Π_k P(t^k; a^k, b^k) / P(t; a, b), on spins: [t][A][B] of the given width. */
-  #derivativesOf(cycles: number): { readonly projected: Float64Array; readonly width: number } {
+  #derivativesOf(cycles: number): Derivatives {
+    const known = this.#derivatives.get(cycles);
+    if (known) return known;
     const lengths = this.#cycles.elementsOf(cycles);
     const quanta = lengths.reduce((sum, k) => sum + k, 0);
     const most = Math.max(0, Math.floor(this.doubled / 2) - quanta);
-    const width = most + 1;
-    const known = this.#derivatives.get(cycles);
-    if (known) return { projected: known, width };
-    const projected = projectDerivatives(lengths, most);
-    this.#derivatives.set(cycles, projected);
-    return { projected, width };
+    const { projected, size } = projectDerivatives(lengths, most);
+    const largest = size < this.exactBelow ? largestOf(projected) : NaN;
+    const found = { projected, largest, width: most + 1 };
+    this.#derivatives.set(cycles, found);
+    return found;
   }
 
   #spinsOf(others: number): readonly SpinTerm[] {
@@ -143,10 +172,8 @@ export class LorentzIntegral {
   }
 }
 
-type Monomials = readonly (readonly [x: number, y: number, k: number, coefficient: number])[];
-
 /** The character of one field without P, at the k-th power of everything. */
-function characterOf(spin: Spin, k: number): Monomials {
+export function characterOf(spin: Spin, k: number): Monomials {
   const [one, other]: readonly [Monomials, Monomials] = [
     [
       [k, 0, 0, 1],
@@ -169,8 +196,10 @@ function characterOf(spin: Spin, k: number): Monomials {
 
 function multiply(character: Sparse, factor: Monomials, most: number): Sparse {
   const product = new Map<number, number>();
+  let size = 0;
   for (const [packed, coefficient] of character) {
     const k = packed % 512;
+    size += Math.abs(coefficient);
     for (const [x, y, t, c] of factor) {
       if (k + t > most) continue;
       // Packed exponents add like numbers, since none of them overflows.
@@ -178,10 +207,12 @@ function multiply(character: Sparse, factor: Monomials, most: number): Sparse {
       product.set(key, (product.get(key) ?? 0) + c * coefficient);
     }
   }
+  // Each of these terms, and no more than four of their sums in a spin.
+  if (4 * size * factor.length >= 2 ** 53) for (const key of product.keys()) product.set(key, NaN);
   return product;
 }
 
-function projectDerivatives(lengths: readonly number[], most: number): Float64Array {
+function projectDerivatives(lengths: readonly number[], most: number) {
   const side = 2 * most + 3;
   const layer = side * side;
   const series = new Float64Array((most + 1) * layer);
@@ -196,6 +227,8 @@ function projectDerivatives(lengths: readonly number[], most: number): Float64Ar
   const ones = lengths.filter((k) => k === 1).length;
   for (const k of lengths) if (k > 1 && k <= most) pass(k, 1);
   for (let one = 1; one < ones; one++) if (most > 0) pass(1, 1);
+  // Nothing has been taken away so far: the largest is the largest there ever was. What follows adds at most 64 of them.
+  const size = 64 * largestOf(series);
   if (ones === 0 && most > 0) pass(1, -1);
   const width = most + 1;
   const projected = new Float64Array(width * width * width);
@@ -206,7 +239,13 @@ function projectDerivatives(lengths: readonly number[], most: number): Float64Ar
       for (let b = 0; b <= most; b++)
         projected[(k * width + a) * width + b] =
           at(k, a, b) - at(k, a + 2, b) - at(k, a, b + 2) + at(k, a + 2, b + 2);
-  return projected;
+  return { projected, size };
+}
+
+function largestOf(values: Iterable<number>): number {
+  let largest = 0;
+  for (const value of values) largest = Math.max(largest, Math.abs(value));
+  return largest;
 }
 
 /** Divides by 1 − t^k a^{±k} b^{±k}, in place: exponents never leave the array, since |x|, |y| ≤ power of t. */

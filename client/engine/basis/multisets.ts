@@ -7,6 +7,7 @@ export class Multisets {
   readonly #elements: (readonly number[])[] = [[]];
   readonly #numbers = new Map<string, number>([["", 0]]);
   readonly #added = new Map<number, number>();
+  readonly #unions = new Map<number, number>();
 
   /** Number of the empty multiset. */
   readonly empty = 0;
@@ -27,6 +28,18 @@ export class Multisets {
       this.#numbers.set(text, number);
     }
     this.#added.set(step, number);
+    return number;
+  }
+
+  /** Both together. */
+  union(first: number, second: number): number {
+    if (first === this.empty) return second;
+    if (second === this.empty) return first;
+    const key = first * 2 ** 26 + second;
+    const known = this.#unions.get(key);
+    if (known !== undefined) return known;
+    const number = this.elementsOf(second).reduce((sum, element) => this.add(sum, element), first);
+    this.#unions.set(key, number);
     return number;
   }
 

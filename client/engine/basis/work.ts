@@ -1,5 +1,5 @@
 /** How much there is to count, looked at before it is done. */
-import { fieldClasses } from "./classes.ts";
+import { fieldClasses, type FieldClass } from "./classes.ts";
 import type { Content } from "./content.ts";
 import { partitionNumber } from "./cycle-types.ts";
 
@@ -14,23 +14,23 @@ const PER_QUANTUM_OF_AN_INTEGRAL = 0.8e-6;
 const PER_ENTRY_AND_FACTOR = 1.5e-9;
 
 export interface Work {
-  readonly classes: number;
+  readonly classes: readonly FieldClass[];
   readonly seconds: number;
   readonly isTooMuch: boolean;
 }
 
 /** @param most twice the largest mass dimension */
 export function amountOfWork(content: Content, most: number): Work {
-  let classes = 0;
+  const classes: FieldClass[] = [];
   const sizes = new Set<number>();
-  fieldClasses(content, most, ({ powers }) => {
-    classes += 1;
-    sizes.add(powers.reduce((sum, power) => sum + power, 0));
-    return classes <= MOST_CLASSES_COUNTED;
+  fieldClasses(content, most, (found) => {
+    classes.push(found);
+    sizes.add(found.powers.reduce((sum, power) => sum + power, 0));
+    return classes.length <= MOST_CLASSES_COUNTED;
   });
   // An integral over momenta depends on how many quanta there are and on their cycles, whatever they are called.
   let integrals = 0;
-  let seconds = classes * PER_CLASS;
+  let seconds = classes.length * PER_CLASS;
   for (const quanta of sizes) {
     const number = partitionNumber(quanta);
     integrals += number;
@@ -41,7 +41,7 @@ export function amountOfWork(content: Content, most: number): Work {
   return {
     classes,
     seconds,
-    isTooMuch: classes > MOST_CLASSES_COUNTED || integrals > MOST_INTEGRALS,
+    isTooMuch: classes.length > MOST_CLASSES_COUNTED || integrals > MOST_INTEGRALS,
   };
 }
 

@@ -1,8 +1,11 @@
 import { describe, expect, it } from "vitest";
 import { standardModel } from "#engine/basis/contents.ts";
+import { countOperators } from "#engine/basis/count.ts";
 import { cycleTypes, factorial, partitionNumber } from "#engine/basis/cycle-types.ts";
 import { GaugeIntegral } from "#engine/basis/gauge-integral.ts";
+import { basisShape, type BasisInputs } from "#engine/basis/inputs.ts";
 import { OrthogonalIntegral, symmetricCharacter } from "#engine/basis/orthogonal-integral.ts";
+import { readContent } from "#engine/basis/read-content.ts";
 import {
   conjugate,
   readRepresentation,
@@ -10,7 +13,12 @@ import {
   type Representation,
 } from "#engine/basis/representations.ts";
 import { operatorsAt } from "#engine/basis/value.ts";
+import { amountOfWork } from "#engine/basis/work.ts";
 import { codes, count, evaluate, field, group, totals } from "./ask.ts";
+
+const basisInputs = Object.fromEntries(
+  Object.entries(basisShape.fields).map(([name, spec]) => [name, spec.initial]),
+) as unknown as BasisInputs; // every single field of the shape
 
 const representation = (text: string, n: number): Representation =>
   readRepresentation(text, n) ?? expect.fail(`SU(${n}) has no ${text}`);
@@ -320,5 +328,39 @@ describe("the table of representations", () => {
     const names = representationTable(3).map(({ name }) => name);
     expect(names).toEqual(expect.arrayContaining(["1", "3", "3bar", "6", "6bar", "8", "10", "10bar", "27"]));
     expect(representationTable(3).filter(({ dimension }) => dimension === 15)).toHaveLength(4);
+  });
+});
+
+describe("a count in big integers", () => {
+  it("is the count in certified floats, class by class", () => {
+    const content = readContent(
+      { ...basisInputs, groups: standardModel.groups, fields: standardModel.fields },
+      4,
+      [],
+    );
+    const { classes } = amountOfWork(content, 16);
+    const [floats, exact] = [2 ** 53, 0].map((exactBelow) =>
+      countOperators(content, classes, 10, 16, () => undefined, exactBelow).map(({ powers, numbers }) => [
+        powers.join(),
+        numbers.map(({ derivatives, number }) => `${derivatives}: ${number.toString()}`),
+      ]),
+    );
+    expect(exact?.length).toBeGreaterThan(100);
+    expect(exact).toEqual(floats);
+  });
+
+  it("begins where what is added up in a group no longer certifies a float", () => {
+    const eight = representation("8", 3);
+    const power = (integral: GaugeIntegral, n: number) =>
+      Array.from({ length: n }, () => integral.element(0, 1)).reduce(
+        (multiset, element) => integral.multisets.add(multiset, element),
+        integral.multisets.empty,
+      );
+    const [strict, usual] = [new GaugeIntegral(3, [eight], 1000), new GaugeIntegral(3, [eight])];
+    // Singlets of four octets: their product with itself holds 1 + 8 + 8 + 10 + 10bar + 27, and 1 + 4 + 1 + 1 + 1 = 8.
+    expect(strict.value(power(strict, 4))).toBe(8);
+    expect(strict.value(power(strict, 8))).toBeNaN();
+    expect(strict.exactValue(power(strict, 4))).toBe(8n);
+    expect(strict.exactValue(power(strict, 8))).toBe(BigInt(usual.value(power(usual, 8))));
   });
 });
