@@ -29,6 +29,36 @@ export function DivergenceForm() {
         )}
       </div>
       {oneGraph && <GraphTables />}
+      {oneGraph && <Listing />}
     </>
+  );
+}
+
+/** Which graphs are drawn, and whether their legs are told apart. */
+function Listing() {
+  return (
+    <div className="block-settings">
+      <ChoiceField
+        place={{ field: "leftOut" }}
+        label="leave out graphs with"
+        showLabel
+        options={["nothing", "closed lines", "tadpole parts"]}
+      />
+      <ChoiceField
+        place={{ field: "toldLegs" }}
+        label="legs of one field are"
+        showLabel
+        options={["interchangeable", "labelled"]}
+      />
+      <ChoiceField
+        place={{ field: "furry" }}
+        label="what charge conjugation cancels"
+        showLabel
+        options={[
+          { value: "no", label: "stays listed" },
+          { value: "yes", label: "is left out" },
+        ]}
+      />
+    </div>
   );
 }

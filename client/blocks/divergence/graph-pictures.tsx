@@ -31,9 +31,24 @@ export function GraphPictures({ pictures }: { readonly pictures: Pictures }) {
   );
 }
 
-function countWords({ count, complete, irreducible }: Pictures): string {
+function countWords(pictures: Pictures): string {
+  return `${foundWords(pictures)}${leftOutWords(pictures)}`;
+}
+
+/** What the list does not show because somebody asked so. */
+function leftOutWords({ leftOut = "nothing", cancelled = null }: Pictures): string {
+  const without = leftOut === "nothing" ? "" : ` Those with ${leftOut} are left out.`;
+  if (cancelled === null) return without;
+  const furry =
+    cancelled === 0
+      ? "None cancels by charge conjugation."
+      : `${String(cancelled)} more ${cancelled === 1 ? "cancels" : "cancel"} by charge conjugation (Furry 1937): a closed fermion line with an odd number of vector vertices, run through both ways.`;
+  return `${without} ${furry} That supposes pure vector couplings that commute.`;
+}
+
+function foundWords({ count, complete, irreducible, labelled }: Pictures): string {
   const what = irreducible ? "one-particle irreducible" : "connected";
-  const legs = "legs of one field interchangeable";
+  const legs = labelled ? "legs told apart" : "legs of one field interchangeable";
   if (!complete)
     return count === 0
       ? "Too many graphs to look through while you type: none is drawn."

@@ -14,6 +14,12 @@ export const divergenceShape = defineShape({
     maxOrder: text("2"),
     /** Whether the charges of the premises' symmetries forbid amplitudes and counterterms. */
     symmetries: choice("yes", "no"),
+    /** One graph: what is not listed. Tadpole parts hang on one vertex without external legs; closed lines are such. */
+    leftOut: choice("nothing", "closed lines", "tadpole parts"),
+    /** One graph: whether legs of one field are told apart, so that each channel is a graph of its own. */
+    toldLegs: choice("interchangeable", "labelled"),
+    /** One graph: whether graphs that cancel by charge conjugation (Furry 1937) are left out. */
+    furry: choice("no", "yes"),
     note: note(),
   },
   tables: {

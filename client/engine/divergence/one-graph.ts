@@ -22,7 +22,7 @@ export function evaluateGraph(inputs: DivergenceInputs, theory: Theory): Evaluat
   const read = readGraph(inputs, theory);
   if (!read.ok) return { value: null, problems: read.problems, notices: [], scalars: [], working: [] };
   const { graph, degree } = read;
-  const value = describeGraph(graph, degree, theory, inputs.symmetries === "yes");
+  const value = describeGraph(graph, degree, theory, inputs);
   const cautions = graphCautions(
     {
       sign: degree.omega.asRational()?.sign() ?? null,
@@ -53,12 +53,13 @@ function describeGraph(
   graph: GraphParts,
   degree: Degree,
   theory: Theory,
-  useSymmetries: boolean,
+  inputs: DivergenceInputs,
 ): GraphDivergence {
   const { omega, loops, lines } = degree;
   const number = omega.asRational();
   const verdict = verdictOf(omega, loops);
-  const counterterms = number && loops > 0 ? countertermsOf(number, graph.legs, theory, useSymmetries) : [];
+  const counterterms =
+    number && loops > 0 ? countertermsOf(number, graph.legs, theory, inputs.symmetries === "yes") : [];
   const facts: GraphFacts = {
     verdict,
     omega,
@@ -96,7 +97,7 @@ function describeGraph(
     cutoff: cutoffMeaning(facts, dimensional),
     cutoffPower: verdict === "power" && !facts.vanishes ? shown(omega) : null,
     counterterms: facts.vanishes ? [] : counterterms,
-    pictures: picturesOf(graph, loops, theory),
+    pictures: picturesOf(graph, loops, theory, inputs),
   };
 }
 

@@ -3,8 +3,10 @@ import { enumerateGraphs } from "../graphs/enumerate.ts";
 import type { Graph, GraphRequest, VertexKind } from "../graphs/graph.ts";
 import type { Term, Theory } from "../premises/theory.ts";
 import type { GraphParts } from "./degree.ts";
+import { cancelsByCharge } from "./charge-conjugation.ts";
 import { closingSplits } from "./graph-existence.ts";
 import { conjugated, sameHalfEdges, totalOf } from "./half-edges.ts";
+import type { DivergenceInputs } from "./inputs.ts";
 import { lineStyle, vertexMark } from "./line-styles.ts";
 import { nestedDivergences, type Allowance } from "./nested.ts";
 import type { GraphPictures } from "./value.ts";
@@ -18,6 +20,9 @@ const MOST_VERTICES = 12;
 /** Many sources make graphs with so many symmetries that telling them apart takes long. */
 const MOST_SOURCES = 4;
 const MOST_CHOICES = 12_000;
+
+/** Which graphs are listed, and whether their legs are told apart. */
+export type Listing = Pick<DivergenceInputs, "leftOut" | "toldLegs" | "furry">;
 
 interface Kinds {
   readonly vertices: readonly VertexKind[];
@@ -53,15 +58,28 @@ function kindsOf({ vertices, legs }: GraphParts, theory: Theory): Kinds[] {
  *
  * @returns null above six loops, ten legs, twelve vertices or four of them with a single leg
  */
-export function picturesOf(graph: GraphParts, loops: number, theory: Theory): GraphPictures | null {
+export function picturesOf(
+  graph: GraphParts,
+  loops: number,
+  theory: Theory,
+  listing: Listing,
+): GraphPictures | null {
   const vertexCount = graph.vertices.reduce((sum, { count }) => sum + count, 0);
   if (loops > MOST_LOOPS || totalOf(graph.legs) > MOST_LEGS || vertexCount > MOST_VERTICES) return null;
   const sources = graph.vertices.reduce((sum, { edges, count }) => sum + (totalOf(edges) < 2 ? count : 0), 0);
   if (sources > MOST_SOURCES) return null;
   const kinds = kindsOf(graph, theory);
-  const irreducible = listAll(kinds, graph, theory, true);
-  const isEmpty = irreducible.graphs.length === 0 && !irreducible.truncated;
-  const { graphs, truncated } = isEmpty ? listAll(kinds, graph, theory, false) : irreducible;
+  const irreducible = listAll(kinds, graph, theory, listing, true);
+  // Where graphs are left out on request, an empty list says so: reducible ones are no substitute.
+  const isEmpty = listing.leftOut === "nothing" && irreducible.graphs.length === 0 && !irreducible.truncated;
+  const all = isEmpty ? listAll(kinds, graph, theory, listing, false) : irreducible;
+  const graphs =
+    listing.furry === "no"
+      ? all.graphs
+      : all.graphs.filter(
+          ({ found, split }) =>
+            !cancelsByCharge(found, kinds[split]?.terms.map(({ term }) => term) ?? [], theory),
+        );
   const allowance: Allowance = { choices: MOST_CHOICES };
   // Kinds of every split are told in one list, so that a graph's vertices can name them.
   const offsets = kinds.map((_, n) => kinds.slice(0, n).reduce((sum, { terms }) => sum + terms.length, 0));
@@ -69,7 +87,10 @@ export function picturesOf(graph: GraphParts, loops: number, theory: Theory): Gr
   return {
     irreducible: !isEmpty,
     count: graphs.length,
-    complete: !truncated,
+    complete: !all.truncated,
+    labelled: listing.toldLegs === "labelled",
+    leftOut: listing.leftOut,
+    cancelled: listing.furry === "no" ? null : all.graphs.length - graphs.length,
     fields: theory.fields.map((field, f) => ({
       symbol: field.symbol,
       latex: field.latex,
@@ -103,6 +124,7 @@ function listAll(
   kinds: readonly Kinds[],
   { legs }: GraphParts,
   theory: Theory,
+  { leftOut, toldLegs }: Listing,
   onlyOneParticleIrreducible: boolean,
 ): { graphs: { readonly found: Graph; readonly split: number }[]; truncated: boolean } {
   const graphs: { found: Graph; split: number }[] = [];
@@ -117,6 +139,9 @@ function listAll(
       vertices,
       external: legs,
       onlyOneParticleIrreducible,
+      dropSelfLoops: leftOut !== "nothing",
+      dropTadpoles: leftOut === "tadpole parts",
+      labelledLegs: toldLegs === "labelled",
       mostSteps: Math.floor(MOST_STEPS / kinds.length),
     });
     graphs.push(...list.graphs.map((found) => ({ found, split })));

@@ -139,8 +139,14 @@ export interface GraphPicture extends Graph {
 export interface GraphPictures {
   /** False when no graph is one-particle irreducible: then all connected ones are listed. */
   readonly irreducible: boolean;
-  /** Graphs found, with legs of one field interchangeable. */
+  /** Graphs found and not left out. */
   readonly count: number;
+  /** Whether legs of one field are told apart; else they are interchangeable. */
+  readonly labelled?: boolean;
+  /** What was asked to be left out: "nothing", "closed lines" or "tadpole parts". Absent from older results. */
+  readonly leftOut?: string;
+  /** How many graphs found cancel by charge conjugation and are left out; null when that was not asked for. */
+  readonly cancelled?: number | null;
   /** False when the search was cut short: there are more than `count`. */
   readonly complete: boolean;
   readonly fields: readonly {

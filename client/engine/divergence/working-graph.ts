@@ -93,6 +93,8 @@ function symbolicSteps({ logarithmicAt: at }: GraphDivergence): WorkingStep[] {
 /** Which graphs there are, and the sum of their weights that an integral over a single number checks. */
 function pictureSteps({ pictures }: GraphDivergence): WorkingStep[] {
   if (!pictures?.complete || pictures.count > pictures.list.length || pictures.count === 0) return [];
+  // The sum over a list from which graphs were left out is not that of field theory in zero dimensions.
+  if ((pictures.leftOut ?? "nothing") !== "nothing" || (pictures.cancelled ?? 0) > 0) return [];
   const weights = pictures.list.map(({ symmetry, labellings }) =>
     Rational.of(BigInt(labellings), BigInt(symmetry)),
   );
@@ -105,7 +107,7 @@ function pictureSteps({ pictures }: GraphDivergence): WorkingStep[] {
     { step: "heading", text: "Graphs" },
     {
       step: "prose",
-      text: `There ${pictures.count === 1 ? "is 1 graph" : `are ${String(pictures.count)} graphs`}, ${pictures.irreducible ? "one-particle irreducible" : "connected"}, with legs of one field interchangeable. $S$ permutes vertices and lines and holds the legs fixed; $N$ is the number of ways to label them. The sum is what field theory in zero dimensions gives with these vertices.`,
+      text: `There ${pictures.count === 1 ? "is 1 graph" : `are ${String(pictures.count)} graphs`}, ${pictures.irreducible ? "one-particle irreducible" : "connected"}, with ${pictures.labelled ? "legs told apart" : "legs of one field interchangeable"}. $S$ permutes vertices and lines and holds the legs fixed; $N$ is the number of ways to label them. The sum is what field theory in zero dimensions gives with these vertices.`,
     },
     { step: "formula", latex: `\\sum \\frac{N}{S}${terms} = ${total.toLatex()}` },
   ];
