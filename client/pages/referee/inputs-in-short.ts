@@ -16,6 +16,9 @@ const names: Readonly<Record<string, string>> = {
   maxLegs: "legs at most",
   maxOrder: "order at most",
   cap: "orders looked at",
+  leftOut: "graphs left out, with",
+  toldLegs: "legs of one field",
+  furry: "what charge conjugation cancels left out",
 };
 
 /** What comes before the value of a column, where the value alone would be a riddle. */
