@@ -1,6 +1,6 @@
 /** The screens of the larger blocks, and the page of parts: nothing serious for assistive technology, in both themes. */
 import { expectSound, lookOver } from "./axe.ts";
-import { addRow, block, goToShelf, makeNotebook, placeAtEnd } from "./notebook.ts";
+import { addRow, block, fillField, goToShelf, makeNotebook, placeAtEnd } from "./notebook.ts";
 import { test, expect } from "./stage.ts";
 
 test("counts of operators by dimension and by field content", async ({ enter }) => {
@@ -30,6 +30,22 @@ test("a table that is read in, and a budget", async ({ enter }) => {
   await expect(budget.getByText("agrees")).toBeVisible();
   found.push(...(await lookOver(page, "a table and a budget")));
   expectSound(found);
+});
+
+test("a closed set of operators, rules of counting, and running couplings", async ({ enter }) => {
+  test.slow();
+  const { page } = await enter("ines-tern");
+  await makeNotebook(page, "Counted by rules", "Quartic and sextic scalar pair");
+  await fillField(block(page, "Premises"), "spacetime dimension d", "4");
+  const closure = await placeAtEnd(page, "Closure");
+  await expect(closure.getByRole("table").first()).toBeVisible();
+  const counting = await placeAtEnd(page, "Counting rules");
+  await expect(counting.getByText("This counting is")).toBeVisible();
+  await counting.getByRole("button", { name: "edit these rules" }).click();
+  await expect(counting.getByLabel("exponent of rule 1", { exact: true })).toBeVisible();
+  const running = await placeAtEnd(page, "Running");
+  await expect(running.getByRole("table").first()).toBeVisible();
+  expectSound(await lookOver(page, "closure, counting rules and running"));
 });
 
 test("the page of parts", async ({ visit, stack }) => {

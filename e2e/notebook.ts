@@ -84,6 +84,9 @@ export type Kind =
   | "Divergence"
   | "Order plan"
   | "Truncation error"
+  | "Counting rules"
+  | "Closure"
+  | "Running"
   | "Basis count"
   | "Data"
   | "Error budget";

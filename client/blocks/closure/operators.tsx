@@ -182,7 +182,7 @@ function Presence({
             className="block-link"
             data-copied="no"
             title={term}
-            aria-label={`add ${text} to the premises`}
+            aria-label={`add to the premises: ${text}`}
             onClick={onAdd}
           >
             add to the premises
