@@ -38,6 +38,7 @@ test("a closed set of operators, rules of counting, and running couplings", asyn
   await makeNotebook(page, "Counted by rules", "Quartic and sextic scalar pair");
   await fillField(block(page, "Premises"), "spacetime dimension d", "4");
   const closure = await placeAtEnd(page, "Closure");
+  await fillField(closure, "up to order in 1/Λ", "0");
   await expect(closure.getByRole("table").first()).toBeVisible();
   const counting = await placeAtEnd(page, "Counting rules");
   await expect(counting.getByText("This counting is")).toBeVisible();
