@@ -93,7 +93,8 @@ export const ternBlocks: readonly DocumentNode[] = [
         ...names.map((name, n) => ({ id: `n${n}`, name, role: "order", order: String(n), unit: "mb" })),
         { id: "exact", name: "exact", role: "measured", unit: "mb" },
       ],
-      lines: tableLines.map((values, index) => ({ id: `l${index}`, values })),
+      // Together, as an import keeps them: nobody is meant to go through them one by one.
+      lines: [{ id: "lines", values: tableLines.join("\n") }],
     },
   }),
   block("truncationError", "tern-error", "tern", {

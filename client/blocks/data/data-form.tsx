@@ -51,7 +51,7 @@ export function DataForm() {
       {isPacked ? (
         <>
           <p className="block-line">
-            The lines were read in from a file; they stand below as they were understood.
+            The lines are kept together, as they were read in; they stand below as they were understood.
           </p>
           <LineEditor />
         </>

@@ -9,6 +9,8 @@ interface Axes {
 
 /** Half the length of the stroke that stands for a level. */
 const LEVEL = 20;
+/** More marks than these are drawn small, or they would hide what they stand beside. */
+const MANY = 16;
 
 /** Curves as lines with dashes, or as marks with shapes, and the error bars of marks. */
 export function Curves({ curves, x, y }: Axes & { readonly curves: readonly Curve[] }) {
@@ -27,7 +29,7 @@ export function Curves({ curves, x, y }: Axes & { readonly curves: readonly Curv
               <ErrorBar curve={curve} index={index} x={x} y={y} />
               <path
                 d={draw === "levels" ? `M${-LEVEL},0H${LEVEL}` : markOf(style)}
-                transform={`translate(${x.position(at).toFixed(2)} ${y.position(value).toFixed(2)})`}
+                transform={`translate(${x.position(at).toFixed(2)} ${y.position(value).toFixed(2)})${draw === "marks" && points.length > MANY ? " scale(0.55)" : ""}`}
                 className={`${draw === "levels" ? "plot-value" : "plot-point"} plot-${color}`}
               />
             </g>

@@ -14,6 +14,7 @@ export function DistanceFigure({ checks }: { readonly checks: CorrelatedValue["c
         kind: "linear",
         label: "order n",
         domain: [Math.min(...numbers) - 0.5, Math.max(...numbers) + 0.5],
+        ticks: numbers.map((order) => ({ value: order, label: String(order) })),
       }}
       y={{
         kind: "log",

@@ -41,6 +41,13 @@ export function TruncationErrorResult({ value }: ResultProps<TruncationValue>) {
         ; with <Formula latex={value.q.latex === "Q" ? "Q" : `Q = ${value.q.latex}`} /> ={" "}
         <Figure scalar="Q">{sizeText(value.q.value, 3)}</Figure>, the first order left out is{" "}
         <Figure scalar="next-order">{String(last.nextOrder)}</Figure>.
+        {value.highlighted !== null && value.highlighted.fromQ > 0 && (
+          <>
+            {" "}
+            Q is known to ± {sizeText(value.q.sigma, 2)}, which moves the half-width by up to{" "}
+            {withUnit(sizeText(value.highlighted.fromQ, 2), value.unit)}.
+          </>
+        )}
       </p>
       <ResultTable<MethodRow>
         caption={`Truncation error after order ${last.order}, by method${value.unit === "" ? "" : `, in ${value.unit}`}`}

@@ -4,12 +4,14 @@ import type { EvaluationContext } from "../kind.ts";
 import { readQuantity } from "../notation/read-quantity.ts";
 import { declaredScales } from "../premises/declared-scales.ts";
 import type { Theory } from "../premises/theory.ts";
+import { whiten } from "./cholesky.ts";
 import { checkConsistency, spreadOf, type Checks, type Spread } from "./checks.ts";
 import { coefficientsAlong, isUsedIn, type CoefficientsAlong } from "./coefficients-along.ts";
 import type { CurveData, CurveSource } from "./curve-data.ts";
 import { jointPosterior, type BreakdownBelief, type JointPosterior } from "./joint-posterior.ts";
 import { lengthRange } from "./length-search.ts";
-import type { Observable } from "./likelihood.ts";
+import { factorOf } from "./kernel.ts";
+import type { LengthFit, Observable } from "./likelihood.ts";
 import { readParameterAlong, type BreakdownScale, type ParameterAlong } from "./parameter-along.ts";
 import { readNumber } from "./read-orders.ts";
 import type { Settings } from "./read-settings.ts";
@@ -25,8 +27,11 @@ export interface Correlated {
   readonly nugget: number;
   readonly checks: Checks;
   /** From the coefficients through an order. */
-  spreadAt(order: number): Spread | null;
+  spreadAt: SpreadAt;
+  /** The same with Q a standard uncertainty lower, and higher, at every point at once; null when Q has none. */
+  readonly spreadsMoved: readonly [SpreadAt, SpreadAt] | null;
 }
+export type SpreadAt = (order: number) => Spread | null;
 
 interface Given {
   readonly inputs: TruncationInputs;
@@ -94,6 +99,14 @@ export function correlate(given: Given): Correlated | null {
   const { chosen } = posterior;
   const checks = checkConsistency(fitted, chosen, settings);
   notices.push(...cautions(posterior, fitted, main.nugget, coefficients.x.length, length));
+  const spreadFrom =
+    (squares: readonly number[]): SpreadAt =>
+    (order) =>
+      spreadOf(
+        squares.slice(0, fitted.orders.filter((one) => one.order <= order).length),
+        fitted.x.length,
+        settings,
+      );
   return {
     posterior,
     breakdown: along.breakdown,
@@ -101,13 +114,36 @@ export function correlate(given: Given): Correlated | null {
     fitted,
     nugget: main.nugget,
     checks,
-    spreadAt: (order) =>
-      spreadOf(
-        chosen.squares.slice(0, fitted.orders.filter((one) => one.order <= order).length),
-        fitted.x.length,
-        settings,
-      ),
+    spreadAt: spreadFrom(chosen.squares),
+    spreadsMoved: movedSpreads(fitted, along, chosen, spreadFrom),
   };
+}
+
+/**
+ * The scales that make Q uncertain are the same at every point, so Q moves at all of them together: the coefficients are
+ * those of Q(x) ± its standard uncertainty there. ℓ stays as fitted: it is read from how alike neighbours are, which a
+ * common factor does not change.
+ */
+function movedSpreads(
+  fitted: CoefficientsAlong,
+  along: ParameterAlong,
+  { length, nugget }: LengthFit,
+  spreadFrom: (squares: readonly number[]) => SpreadAt,
+): readonly [SpreadAt, SpreadAt] | null {
+  const shares = fitted.x.map((x) => {
+    const { value, sigma } = along.withSigma(x);
+    return sigma / value;
+  });
+  if (!shares.some((share) => share > 0)) return null;
+  const { factor } = factorOf(fitted.x, length, nugget);
+  const moved = (sign: -1 | 1) =>
+    spreadFrom(
+      fitted.orders.map(({ power, values }) => {
+        const there = values.map((c, point) => c * (1 + sign * (shares[point] ?? 0)) ** -power);
+        return whiten(factor, there).reduce((sum, z) => sum + z * z, 0);
+      }),
+    );
+  return [moved(-1), moved(1)];
 }
 
 /** How many x there are; those that differ only in the last digits of a double count as one. */

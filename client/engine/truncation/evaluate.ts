@@ -91,7 +91,13 @@ function evaluateCurve(
   const before = [...settings.notices, ...read.notices];
   if (!read.curve) return empty(read.problems, before);
   const { curve } = read;
-  const point = presentValue(inputs, curve.series, curve.at, curve.estimate);
+  const point = presentValue(
+    inputs,
+    curve.series,
+    curve.at,
+    curve.estimate,
+    curve.correlated?.spreadsMoved ?? null,
+  );
   const along = presentCurve(inputs, curve);
   const value: TruncationValue = {
     ...point,

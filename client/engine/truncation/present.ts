@@ -1,5 +1,6 @@
 /** Turns the estimates into the block's value: rounded, with the share of the uncertainty of Q. */
 import { roundFloat } from "../evaluation.ts";
+import type { Correlated } from "./correlated.ts";
 import type { ExpansionParameter } from "./expansion-parameter.ts";
 import {
   estimateSeries,
@@ -16,12 +17,15 @@ export function presentValue(
   series: Series,
   q: ExpansionParameter,
   estimate: SeriesEstimate,
+  spreadsMoved: Correlated["spreadsMoved"] = null,
 ): TruncationValue {
   const moved =
     q.sigma > 0
-      ? [q.value - q.sigma, q.value + q.sigma]
-          .filter((at) => at > 0)
-          .map((at) => estimateSeries({ ...series, spreadAlong: null }, at))
+      ? ([-1, 1] as const).flatMap((sign) => {
+          const at = q.value + sign * q.sigma;
+          const spreadAlong = spreadsMoved?.[sign < 0 ? 0 : 1] ?? null;
+          return at > 0 ? [estimateSeries({ ...series, spreadAlong }, at)] : [];
+        })
       : [];
   const orders = estimate.orders.map((at, index) =>
     presentOrder(

@@ -314,3 +314,30 @@ describe("the correlated model in a block", () => {
     expect(result.value?.curve?.correlated?.breakdown).toBeNull();
   });
 });
+
+describe("uncertainty of Q", () => {
+  const half = (lambda: number, spread = 0) => {
+    const theory = theoryOf({
+      fields: {},
+      terms: {},
+      scales: [{ symbol: "Lambda", role: "heavy", value: lambda, sigma: spread, unit: "MeV" }],
+    });
+    const { value } = evaluateCurve(
+      { d: ternTable(21, 3) },
+      { method: "correlated along x", at: "150", length: "60", nu0: "0" },
+      theory,
+    );
+    return value?.highlighted;
+  };
+  it("is carried into the correlated band, the coefficients at every point included", () => {
+    // ℓ is given and ν₀ = 0, so the band at another breakdown scale is the whole effect, computed apart.
+    const moved = half(600, 30);
+    // Q ± σ_Q with σ_Q/Q = 30/600: what Λ = 600/0.95 and 600/1.05 give.
+    const [lower, upper] = [half(600 / 0.95)?.halfWidth ?? NaN, half(600 / 1.05)?.halfWidth ?? NaN];
+    const here = half(600)?.halfWidth ?? NaN;
+    expect(moved?.halfWidth).toBeCloseTo(here, 10);
+    expect(moved?.fromQ).toBeCloseTo(Math.max(Math.abs(lower - here), Math.abs(upper - here)), 8);
+    expect(moved?.fromQ).toBeGreaterThan(0);
+    expect(half(600)?.fromQ).toBe(0);
+  });
+});
