@@ -47,6 +47,12 @@ export function OrderPlanForm() {
         showLabel
         none="no count"
       />
+      <ReferenceField
+        place={{ field: "counting" }}
+        label="lattice of orders from"
+        showLabel
+        none="p over Λ alone"
+      />
     </div>
   );
 }

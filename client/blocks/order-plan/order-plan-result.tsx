@@ -6,6 +6,7 @@ import { Figure } from "../parts/figure.tsx";
 import { sizeText, withUnit } from "../parts/number-text.ts";
 import { plain } from "../parts/plot-scales.ts";
 import { ResultTable } from "../parts/result-table.tsx";
+import { LatticeTable } from "./lattice-table.tsx";
 import { Shifts } from "./shifts.tsx";
 
 /** The order to stop at, what is in and out, and how far the choice carries. */
@@ -77,6 +78,7 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
         )}
         .
       </p>
+      {value.lattice !== undefined && <LatticeTable lattice={value.lattice} />}
       <Shifts value={value} />
     </>
   );

@@ -3,6 +3,8 @@ import { roundFloat, type Evaluation, type Problem } from "../evaluation.ts";
 import { incompletePremises } from "../premises/incomplete.ts";
 import type { EvaluationContext } from "../kind.ts";
 import type { Theory } from "../premises/theory.ts";
+import type { CountingValue } from "../counting/value.ts";
+import { planLattice } from "./lattice.ts";
 import { withOperators } from "./operators.ts";
 import { planCautions } from "./cautions.ts";
 import { corrections, rateEntries } from "./entries.ts";
@@ -61,7 +63,12 @@ export function evaluateOrderPlan(
   if (!expansion) return refuse([problem("plan-too-large", ["insertions"], { most: MOST_ENTRIES })]);
   const order = orderFor(expansion, workingPoint);
   const described = describePlan(expansion, order, read.terms, scales, theory);
-  const { value, notices } = withOperators(described, inputs.basis, theory, context);
+  const counting = inputs.counting === "" ? null : context.source(inputs.counting);
+  const lattice = counting
+    ? // the evaluator allows no other kind here
+      { lattice: planLattice(counting.value as CountingValue, settings.insertions, settings.target) }
+    : {};
+  const { value, notices } = withOperators({ ...described, ...lattice }, inputs.basis, theory, context);
   const missed = leftOutAt(expansion, expansion.orders.at(-1) ?? Rational.zero, workingPoint);
   const unreached = order
     ? []

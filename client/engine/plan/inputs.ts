@@ -19,6 +19,8 @@ export const orderPlanShape = defineShape({
     unlisted: choice("natural tail", "listed terms only"),
     /** A Basis count whose numbers of operators are shown beside the orders. */
     basis: reference(["basisCount"]),
+    /** Counting rules whose small parameters span a lattice of orders. */
+    counting: reference(["countingRules"]),
     note: note(),
   },
   tables: {},

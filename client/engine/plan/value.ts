@@ -2,6 +2,7 @@
  * What an Order plan says: plain JSON. Orders are exact powers of Q = p/Λ as text; sizes are floats relative to the
  * leading amplitude (or rate), rounded to 12 digits.
  */
+import type { PlanLattice } from "./lattice.ts";
 import type { Exact } from "../premises/value.ts";
 
 export interface Measured {
@@ -123,6 +124,8 @@ export interface OrderPlanValue {
     readonly size: number;
     readonly assigned: boolean;
   }[];
+  /** Orders of an amplitude in the parameters of a Counting rules block; null when they have no numbers below 1. */
+  readonly lattice?: PlanLattice | null;
   readonly shifts: readonly Shift[];
   readonly probeTable: readonly ProbeRow[];
   readonly curves: readonly LeftOutCurve[];
