@@ -1,3 +1,4 @@
+import { lazy, Suspense } from "react";
 import type { OrderPlanValue, PlanOrder } from "#engine/plan/value.ts";
 import { Formula } from "../../ui/math.tsx";
 import type { ResultProps } from "../block-parts.ts";
@@ -6,8 +7,9 @@ import { Figure } from "../parts/figure.tsx";
 import { sizeText, withUnit } from "../parts/number-text.ts";
 import { plain } from "../parts/plot-scales.ts";
 import { ResultTable } from "../parts/result-table.tsx";
-import { LatticeTable } from "./lattice-table.tsx";
 import { Shifts } from "./shifts.tsx";
+
+const Lattice = lazy(async () => ({ default: (await import("./lattice.tsx")).Lattice }));
 
 /** The order to stop at, what is in and out, and how far the choice carries. */
 export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
@@ -78,7 +80,11 @@ export function OrderPlanResult({ value }: ResultProps<OrderPlanValue>) {
         )}
         .
       </p>
-      {value.lattice !== undefined && <LatticeTable lattice={value.lattice} />}
+      {value.lattice !== undefined && (
+        <Suspense fallback={null}>
+          <Lattice value={value} />
+        </Suspense>
+      )}
       <Shifts value={value} />
     </>
   );

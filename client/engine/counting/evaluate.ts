@@ -1,5 +1,5 @@
 /** Evaluates Counting rules: the order of every term and of a graph, beside the order by dimension. */
-import type { Evaluation, Problem } from "../evaluation.ts";
+import { roundFloat, type Evaluation, type Problem } from "../evaluation.ts";
 import { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
 import { shown as shownExact } from "../exact/shown.ts";
@@ -52,6 +52,8 @@ export function evaluateCounting(inputs: CountingInputs, theory: Theory | null):
       size: quantity && shown(quantity).value,
       sigma: quantity && shown(quantity).sigma,
       shown: quantity && presentEstimate(quantity.value, sigmaOf(quantity)),
+      spread: relativeSpread(quantity),
+      follows: rules.follows.get(id) ?? null,
     })),
     terms: orders.map(({ term, order }, index) => ({
       termId: term.rowId,
@@ -112,6 +114,15 @@ function countGraph(
     size: sizeOf(order.amplitude, rules),
   };
   return { order, value };
+}
+
+function relativeSpread(quantity: Quantity | null): Readonly<Record<string, number>> {
+  return Object.fromEntries(
+    [...(quantity?.spread ?? [])].map(([source, share]) => [
+      source,
+      roundFloat(share / (quantity?.value ?? 1)),
+    ]),
+  );
 }
 
 export function vector(weights: Weights): OrderVector {

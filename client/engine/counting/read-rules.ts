@@ -8,6 +8,7 @@ import { readSymbol } from "../notation/read-symbol.ts";
 import { declaredScales } from "../premises/declared-scales.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { CountingInputs } from "./inputs.ts";
+import { followsOf, type Follows } from "./follows.ts";
 import type { PresetName } from "./preset-names.ts";
 import { presetNamed, proposalOf, type RuleRow } from "./presets.ts";
 import type { Weights } from "./weights.ts";
@@ -34,6 +35,8 @@ export interface Rules {
   /** By row id of the term. */
   readonly exceptions: ReadonlyMap<string, Weights>;
   readonly offset: Weights;
+  /** By id of a parameter: its powers of the probe and heavy scale, where it is a power of them. */
+  readonly follows: ReadonlyMap<string, Follows>;
   readonly preset: PresetName;
   /** Whether rules were typed that are not those of the published counting. */
   readonly isEdited: boolean;
@@ -49,6 +52,7 @@ export function readRules(inputs: CountingInputs, theory: Theory, problems: Prob
   const preset = presetNamed(inputs.preset);
   const proposed = proposedRows(preset, theory);
   const parameters = readParameters(inputs, proposed.parameters, theory, problems);
+  const follows = followsOf(inputs.parameters.length === 0 ? proposed.parameters : inputs.parameters, theory);
   const weightsAt = (text: string, path: readonly string[]) =>
     readWeights(text, parameters.length, theory, path, problems);
   const typed = inputs.rules.filter(({ weight, symbol }) => weight.trim() !== "" || symbol.trim() !== "");
@@ -67,7 +71,7 @@ export function readRules(inputs: CountingInputs, theory: Theory, problems: Prob
   const offset = inputs.offset.trim() === "" ? null : weightsAt(inputs.offset, ["offset"]);
   const none = parameters.map(() => LinearForm.zero);
   const isEdited = typed.length > 0 && !sameRows(typed, proposed.rules);
-  return { parameters, ...rules, exceptions, offset: offset ?? none, preset, isEdited };
+  return { parameters, ...rules, follows, exceptions, offset: offset ?? none, preset, isEdited };
 }
 
 /** The rows of the published counting, with ids of their own; its problems would be at the choice of it. */
@@ -181,7 +185,7 @@ function readWeights(
   return weights;
 }
 
-type Table = Omit<Rules, "parameters" | "exceptions" | "offset" | "preset" | "isEdited">;
+type Table = Omit<Rules, "parameters" | "follows" | "exceptions" | "offset" | "preset" | "isEdited">;
 
 function readTable(
   rows: RuleRows | CountingInputs["rules"],

@@ -13,6 +13,10 @@ export interface CountingParameter {
   readonly size: number | null;
   readonly sigma: number | null;
   readonly shown: Measured | null;
+  /** What one standard deviation of each independent source does to its logarithm. */
+  readonly spread: Readonly<Record<string, number>>;
+  /** Its powers of the probe and the heavy scale; null where it is no power of them, and without numbers. */
+  readonly follows: { readonly probe: number; readonly heavy: number } | null;
 }
 
 export interface CountedTerm {

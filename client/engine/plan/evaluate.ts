@@ -66,7 +66,12 @@ export function evaluateOrderPlan(
   const counting = inputs.counting === "" ? null : context.source(inputs.counting);
   const lattice = counting
     ? // the evaluator allows no other kind here
-      { lattice: planLattice(counting.value as CountingValue, settings.insertions, settings.target) }
+      {
+        lattice: planLattice(counting.value as CountingValue, settings.insertions, settings.target, {
+          probe: scales.probe.sigma / scales.probe.value,
+          heavy: scales.heavy.sigma / scales.heavy.value,
+        }),
+      }
     : {};
   const { value, notices } = withOperators({ ...described, ...lattice }, inputs.basis, theory, context);
   const missed = leftOutAt(expansion, expansion.orders.at(-1) ?? Rational.zero, workingPoint);

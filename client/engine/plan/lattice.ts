@@ -1,11 +1,14 @@
 /** The listed terms and their products in several small parameters: points of a lattice of orders, and where to cut. */
-import type { CountingValue } from "../counting/value.ts";
+import type { CountingParameter, CountingValue } from "../counting/value.ts";
 import { roundFloat } from "../evaluation.ts";
 import { Rational } from "../exact/rational.ts";
+import { latticeMoved, largestProbeOf, totalOf, type LatticeMove, type SizedPoint } from "./lattice-moves.ts";
 
 export interface LatticePoint {
   /** One exponent per parameter, canonical text. */
   readonly order: readonly string[];
+  /** Single terms that stand here; products of them are only counted. */
+  readonly terms: readonly string[];
   /** Terms and products that stand here, each of size Π λᵢ^nᵢ. */
   readonly count: number;
   /** Of one of them, relative to the leading amplitude. */
@@ -16,36 +19,133 @@ export interface LatticePoint {
 }
 
 export interface PlanLattice {
-  readonly parameters: readonly { readonly latex: string; readonly size: number }[];
+  readonly parameters: readonly { readonly latex: string; readonly symbol: string; readonly size: number }[];
   /** Largest first. */
   readonly points: readonly LatticePoint[];
+  /** Of the points beyond the cut, with its standard uncertainty from those of the parameters. */
+  readonly leftOut: { readonly value: number; readonly sigma: number };
+  /** Largest probe scale, as a multiple of this one, at which the same points suffice; null where that is not known. */
+  readonly largestProbe: number | null;
+  /** What is left out by the same cut when a scale moves by its uncertainty; empty where that is not known. */
+  readonly moves: readonly LatticeMove[];
+  /** Terms without an order, and those that are not smaller than the leading amplitude. */
+  readonly passedOver: { readonly withoutOrder: number; readonly notSmall: number };
 }
+
+type Sized = CountingParameter & { readonly size: number };
 
 const MOST_POINTS = 2_000;
 
 /**
- * Orders of up to `insertions` suppressed terms, cut where the sum of what is left out falls below `target`.
- * Exponents are exact and add; a size is Π λᵢ^nᵢ with natural coefficients. (Own derivation.)
+ * Orders of up to `insertions` suppressed terms, cut where the sum of what is left out falls below `target`. Exponents
+ * are exact and add; a size is Π λᵢ^nᵢ with natural coefficients. `relative` are the relative uncertainties of the
+ * probe and heavy scale, by which they are moved. (Own derivation.)
  *
  * @returns null when a parameter has no number below 1, or there are too many points.
  */
-export function planLattice(counting: CountingValue, insertions: number, target: number): PlanLattice | null {
-  const parameters = counting.parameters.flatMap(({ latex, size }) =>
-    size !== null && size > 0 && size < 1 ? [{ latex, size }] : [],
+export function planLattice(
+  counting: CountingValue,
+  insertions: number,
+  target: number,
+  relative: { readonly probe: number; readonly heavy: number } = { probe: 0, heavy: 0 },
+): PlanLattice | null {
+  const parameters = counting.parameters.flatMap((one): Sized[] =>
+    one.size !== null && one.size > 0 && one.size < 1 ? [{ ...one, size: one.size }] : [],
   );
   if (parameters.length === 0 || parameters.length < counting.parameters.length) return null;
   const sizeOf = (order: readonly Rational[]) =>
     order.reduce((size, power, at) => size * (parameters[at]?.size ?? 1) ** power.toFloat(), 1);
-  const suppressed = counting.terms
+  const listed = counting.terms
     .filter(({ kinetic, allowed }) => !kinetic && allowed)
-    .map(({ order }) => (order ?? []).flatMap((power) => Rational.parse(power) ?? []))
-    .filter((order) => order.length === parameters.length && sizeOf(order) < 1);
+    .map(({ order, latex }) => ({
+      latex,
+      order: (order ?? []).flatMap((power) => Rational.parse(power) ?? []),
+    }));
+  const ordered = listed.filter(({ order }) => order.length === parameters.length);
+  const isLeading = (order: readonly Rational[]) => order.every((power) => power.sign() === 0);
+  const suppressed = ordered.filter(({ order }) => sizeOf(order) < 1);
+  const counts = productsOf(
+    suppressed.map(({ order }) => order),
+    parameters.length,
+    insertions,
+  );
+  if (!counts) return null;
+  const sized = counts
+    .map((point): SizedPoint => ({ ...point, size: sizeOf(point.order) }))
+    .sort((a, b) => b.size - a.size);
+  const sums = sumsAfter(sized);
+  const isIn = sized.map(({ count, size }, at) => (sums[at] ?? 0) + count * size >= target);
+  const beyond = sized.filter((_, at) => !isIn[at]);
+  return {
+    parameters: parameters.map(({ latex, symbol, size }) => ({ latex, symbol, size })),
+    points: sized.map(({ order, count, size }, at) => ({
+      order: order.map(String),
+      terms: suppressed.filter((term) => sameOrder(term.order, order)).map(({ latex }) => latex),
+      count,
+      size: roundFloat(size),
+      leftOut: roundFloat(sums[at] ?? 0),
+      included: isIn[at] === true,
+    })),
+    leftOut: { value: roundFloat(totalOf(beyond)), sigma: roundFloat(sigmaOf(beyond, parameters)) },
+    largestProbe: largestProbeOf(beyond, parameters, target),
+    moves: latticeMoved(beyond, parameters, target, relative),
+    passedOver: {
+      withoutOrder: listed.length - ordered.length,
+      notSmall: ordered.filter(({ order }) => sizeOf(order) >= 1 && !isLeading(order)).length,
+    },
+  };
+}
 
-  // How many products there are of each number of insertions at each order, one term after the other.
-  const start = { order: parameters.map(() => Rational.zero), used: 0, count: 1 };
+const sameOrder = (a: readonly Rational[], b: readonly Rational[]) =>
+  a.every((power, at) => power.equals(b[at] ?? Rational.zero));
+
+/** From the last to the first, so that small ones are added before large ones. */
+function sumsAfter(points: readonly SizedPoint[]): readonly number[] {
+  const sums: number[] = [];
+  let sum = 0;
+  for (const { count, size } of points.toReversed()) {
+    sums.push(sum);
+    sum += count * size;
+  }
+  return sums.toReversed();
+}
+
+/** Parameters that share a source move together: its shares are added before they are squared. */
+function sigmaOf(points: readonly SizedPoint[], parameters: readonly Sized[]): number {
+  const sources = new Set(parameters.flatMap(({ spread }) => Object.keys(spread)));
+  return Math.hypot(
+    ...[...sources].map((source) =>
+      points.reduce((sum, { order, count, size }) => {
+        const share = order.reduce(
+          (shares, power, at) => shares + power.toFloat() * (parameters[at]?.spread[source] ?? 0),
+          0,
+        );
+        return sum + count * size * share;
+      }, 0),
+    ),
+  );
+}
+
+/** How many products there are of up to so many terms at each order, one term after the other. */
+function productsOf(
+  orders: readonly (readonly Rational[])[],
+  parameters: number,
+  insertions: number,
+): readonly { readonly order: readonly Rational[]; readonly count: number }[] | null {
+  interface Product {
+    readonly order: readonly Rational[];
+    readonly used: number;
+    readonly count: number;
+  }
+  const keyOf = ({ order, used }: Product) => `${used}: ${order.join(" ")}`;
+  const start: Product = {
+    order: Array.from({ length: parameters }, () => Rational.zero),
+    used: 0,
+    count: 1,
+  };
   let products = new Map([[keyOf(start), start]]);
-  for (const order of suppressed) {
-    const grown = new Map<string, typeof start>();
+  for (const order of orders) {
+    const grown = new Map<string, Product>();
     for (const product of products.values()) {
       let next = product;
       for (;;) {
@@ -64,27 +164,5 @@ export function planLattice(counting: CountingValue, insertions: number, target:
     const at = order.join(" ");
     if (used > 0) counts.set(at, { order, count: count + (counts.get(at)?.count ?? 0) });
   }
-  const sized = [...counts.values()]
-    .map(({ order, count }) => ({ order: order.map(String), count, size: sizeOf(order) }))
-    .sort((a, b) => b.size - a.size);
-  let leftOut = 0;
-  const points = sized
-    .toReversed()
-    .map((point) => {
-      const after = leftOut;
-      leftOut += point.count * point.size;
-      // What would be missing without it is still too much: it is in.
-      return {
-        ...point,
-        size: roundFloat(point.size),
-        leftOut: roundFloat(after),
-        included: leftOut >= target,
-      };
-    })
-    .toReversed();
-  return { parameters, points };
-}
-
-function keyOf({ order, used }: { readonly order: readonly Rational[]; readonly used: number }): string {
-  return `${used}: ${order.join(" ")}`;
+  return [...counts.values()];
 }

@@ -44,9 +44,38 @@ export function planScalars(value: OrderPlanValue): Scalar[] {
       0,
       probe.unit,
     ),
+    ...latticeScalars(value, number),
     ...value.terms.flatMap(({ rowId, latex, order: at, size }): Scalar[] => [
       number(`${rowId}/size`, `size of $${latex}$ at the probe scale`, size),
       { id: `${rowId}/order`, label: `order of $${latex}$`, value: { type: "exact", text: at.text } },
     ]),
+  ];
+}
+
+type MakeNumber = (id: string, label: string, size: number, sigma?: number, unit?: string) => Scalar;
+
+/** Of a plan in several parameters. */
+function latticeScalars({ lattice, probe }: OrderPlanValue, number: MakeNumber): Scalar[] {
+  if (!lattice) return [];
+  const names = lattice.parameters.map(({ latex }) => `$${latex}$`).join(", ");
+  const { leftOut, largestProbe, points } = lattice;
+  return [
+    number("lattice/left-out", `what is left out in powers of ${names}`, leftOut.value, leftOut.sigma),
+    {
+      id: "lattice/kept",
+      label: `number of orders in ${names} that are kept`,
+      value: { type: "exact", text: String(points.filter(({ included }) => included).length) },
+    },
+    ...(largestProbe === null
+      ? []
+      : [
+          number(
+            "lattice/largest-probe",
+            `largest probe scale at which these orders in ${names} suffice`,
+            largestProbe * probe.value,
+            0,
+            probe.unit,
+          ),
+        ]),
   ];
 }

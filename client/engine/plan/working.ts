@@ -26,6 +26,7 @@ export function explainPlan(
     ...sizeSteps(value, terms, spacetime.geometry === "isotropic" ? "d" : "D - z"),
     ...sumSteps(value),
     ...loopSteps(value),
+    ...latticeSteps(value),
     { step: "heading", text: "Assumptions" },
     {
       step: "prose",
@@ -130,5 +131,42 @@ function loopSteps({ loopFactor }: OrderPlanValue): WorkingStep[] {
             text: "With couplings of 1 each loop is taken to cost this factor; an order needs loops until the next falls below the target.",
           } as const,
         ]),
+  ];
+}
+
+/** The cut through the orders in several parameters. */
+function latticeSteps({ lattice, target }: OrderPlanValue): WorkingStep[] {
+  if (!lattice) return [];
+  const { parameters, points, leftOut } = lattice;
+  const names = parameters.map(({ latex }, index) => `${latex}^{n_{${String(index + 1)}}}`).join("\\,");
+  const kept = points.filter(({ included }) => included);
+  const at = (order: readonly string[]) => `\\left(${order.join(",\\,")}\\right)`;
+  const spread = leftOut.sigma > 0 ? ` \\pm ${floatLatex(leftOut.sigma)}` : "";
+  return [
+    { step: "heading", text: "In several small parameters" },
+    {
+      step: "prose",
+      text: `By the counting rules a term or product of orders $n$ has size $${names}$, with $${parameters.map(({ latex, size }) => `${latex} = ${floatLatex(size)}`).join(",\\; ")}$; exponents of products add, and coefficients are natural. Sorted by size, orders are kept until the sum of all others is below $${floatLatex(target)}$.`,
+    },
+    ...(kept.length === 0
+      ? []
+      : [
+          {
+            step: "formula",
+            latex: `\\text{kept: }${kept
+              .slice(0, 12)
+              .map(({ order }) => at(order))
+              .join(",\\; ")}${kept.length > 12 ? ",\\; \\dots" : ""}`,
+          } as const,
+        ]),
+    { step: "formula", latex: `\\text{left out} = ${floatLatex(leftOut.value)}${spread}` },
+    ...(leftOut.sigma > 0
+      ? [
+          {
+            step: "prose",
+            text: "Parameters that share a scale move together: its share in each is added before shares are combined in quadrature.",
+          } as const,
+        ]
+      : []),
   ];
 }
