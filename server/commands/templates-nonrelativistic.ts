@@ -1,6 +1,6 @@
 /**
  * Two templates of slow particles. The bound state agrees with Lepage, Magnea, Nakhleh, Magnea and Hornbostel 1992 (Phys.
- * Rev. D 46, 4052): relativity and spin at v² beside kinetic and Coulomb energy. The contact theory agrees with Kaplan,
+ * Rev. D 46, 4052): relativity and spin at v² against kinetic and Coulomb energy. The contact theory agrees with Kaplan,
  * Savage and Wise 1998 (Nucl. Phys. B 534, 329): all chains of C₀ at Q⁻¹, one C₂ at Q⁰.
  */
 import { block, heading, paragraph, type DocumentNode } from "./document-builder.ts";
@@ -8,23 +8,23 @@ import type { PinMaker } from "./pin-maker.ts";
 
 export const boundStateBlocks: readonly DocumentNode[] = [
   block("premises", "bound", "", {
-    fields: { name: "bound state", geometry: "anisotropic", D: "3", z: "2" },
+    fields: { name: "bound state", d: "4" },
     tables: {
       symmetries: [{ id: "number", name: "number", group: "U(1)" }],
       fields: [
-        { id: "psi", symbol: "psi", kind: "Schrödinger field", charges: "1", meaning: "heavy particle" },
-        { id: "A", symbol: "A", kind: "gauge potential", dimension: "2", charges: "0", meaning: "g A_0" },
-        { id: "E", symbol: "E", kind: "field strength", dimension: "3", charges: "0", meaning: "g E" },
-        { id: "B", symbol: "B", kind: "field strength", dimension: "4", charges: "0", meaning: "g B" },
+        { id: "psi", symbol: "psi", kind: "static heavy field", charges: "1", meaning: "heavy particle" },
+        { id: "A", symbol: "A", kind: "gauge potential", charges: "0", meaning: "g A_0" },
+        { id: "E", symbol: "E", kind: "field strength", charges: "0", meaning: "g E" },
+        { id: "B", symbol: "B", kind: "field strength", charges: "0", meaning: "g B" },
       ],
       scales: [{ id: "M", symbol: "M", value: "4.7 GeV", role: "other", meaning: "put yours here" }],
       terms: [
-        { id: "coulomb", term: "A psi* psi" },
-        { id: "kinetic", term: "1/(2 M) psi* d_i^2 psi" },
-        { id: "relativity", term: "c_1/(8 M^3) psi* d_i^4 psi" },
-        { id: "darwin", term: "c_2/(8 M^2) psi* psi d_i E" },
-        { id: "spin", term: "c_4/(2 M) psi* psi B" },
-        { id: "contact", term: "f/M^2 psi* psi* psi psi" },
+        { id: "coulomb", term: "A psibar psi" },
+        { id: "kinetic", term: "1/(2 M) psibar d^2 psi" },
+        { id: "relativity", term: "c_1/(8 M^3) psibar d^4 psi" },
+        { id: "darwin", term: "c_2/(8 M^2) psibar psi d E" },
+        { id: "spin", term: "c_4/(2 M) psibar psi B" },
+        { id: "contact", term: "f/M^2 psibar psibar psi psi" },
       ],
     },
   }),
@@ -33,17 +33,16 @@ export const boundStateBlocks: readonly DocumentNode[] = [
     tables: {
       parameters: [{ id: "v", symbol: "v", value: "0.3(1)", meaning: "put yours here" }],
       rules: [
-        { id: "psi", of: "field", symbol: "psi", weight: "D/2" },
+        { id: "psi", of: "field", symbol: "psi", weight: "3/2" },
         { id: "A", of: "field", symbol: "A", weight: "2" },
         { id: "E", of: "field", symbol: "E", weight: "3" },
         { id: "B", of: "field", symbol: "B", weight: "4" },
         { id: "d", of: "derivative", symbol: "", weight: "1" },
-        { id: "dt", of: "time derivative", symbol: "", weight: "2" },
-        { id: "measure", of: "measure", symbol: "", weight: "-D - 2" },
+        { id: "measure", of: "measure", symbol: "", weight: "-5" },
       ],
     },
   }),
-  block("scaling", "bound-scaling", "bound", { fields: { title: "under the same rescaling" } }),
+  block("scaling", "bound-scaling", "bound", { fields: { title: "by dimension" } }),
 ];
 
 export function boundStateDocument(pin: PinMaker): DocumentNode {
@@ -54,7 +53,7 @@ export function boundStateDocument(pin: PinMaker): DocumentNode {
     content: [
       heading(1, "Premises"),
       paragraph(
-        "A heavy particle in the field that binds it. The fields $A$, $E$ and $B$ stand for $g A_0$, $g\\mathbf{E}$ and $g\\mathbf{B}$; mass and velocity are placeholders: put your own.",
+        "A heavy particle in the field that binds it. The fields $A$, $E$ and $B$ stand for $g A_0$, $g\\mathbf{E}$ and $g\\mathbf{B}$, and all derivatives below are those in space; mass and velocity are placeholders: put your own.",
       ),
       premises,
       heading(1, "Powers of the velocity"),
@@ -74,13 +73,15 @@ export function boundStateDocument(pin: PinMaker): DocumentNode {
         ", before its coefficient, which has a loop of its own in front.",
       ),
       counting,
-      heading(1, "The same as a dimension"),
+      heading(1, "Against dimension"),
       paragraph(
-        "With time scaling as two lengths the magnetic term is ",
-        pin("bound-scaling", "spin/class", ""),
-        " by dimension as well: velocity counting is ",
+        "By dimension the kinetic energy would be ",
+        pin("bound-scaling", "kinetic/class", ""),
+        ", a correction like the magnetic term, and nothing would bind. Velocity counting is ",
         pin("bound-counting", "verdict", ""),
-        " as long as the field strengths count what they do here.",
+        ": of the six terms ",
+        pin("bound-counting", "changed", ""),
+        " change place.",
       ),
       scaling,
     ],

@@ -1,6 +1,6 @@
 /** Countings from the literature, each with its source. Values are from memory unless a derivation stands beside them. */
 import { describe, expect, it } from "vitest";
-import { graphOf, ordersOf, valueOf } from "../engine/counting/ask-counting.ts";
+import { count, graphOf, ordersOf, valueOf } from "../engine/counting/ask-counting.ts";
 import type { Sketch } from "../engine/premises/state.ts";
 
 describe("pions", () => {
@@ -59,6 +59,16 @@ describe("nucleons and pions", () => {
     expect(at([{ term: "t3", count: "1" }])).toBe("0");
     expect(at([{ term: "t2", count: "2" }])).toBe("0");
     expect(at([{ term: "t2", count: "4" }])).toBe("2");
+  });
+  // Weinberg 1991, 1992: three nucleons with two pions between Δ = 0 vertices stand at 2 in the other normalisation, where
+  // they cancel against the iterated potential; nothing but nucleons in between is enhanced, and said.
+  it("count 2 for the leading three-nucleon graph, and say that part of it is iterated", () => {
+    const asked = { theory, preset, vertices: [{ term: "t2", count: "4" }], legs: pairs("3") };
+    expect(graphOf(asked)).toBe("-1");
+    expect(graphOf({ ...asked, offset: "3" })).toBe("2");
+    expect(count(asked).notices.map(({ code }) => code)).toContain("pure-nucleon-states");
+    const onePion = { ...asked, vertices: [{ term: "t2", count: "2" }], legs: pairs("2") };
+    expect(count(onePion).notices.map(({ code }) => code)).not.toContain("pure-nucleon-states");
   });
   // In the other normalisation ν = −2 + 2A − 2C + …: 3A − 6 more. The leading three-nucleon force of three c_E, c_D, c_1
   // stands at 3 there (van Kolck 1994).
@@ -148,6 +158,42 @@ describe("soft and collinear modes", () => {
       ordersOf({ theory, preset: "soft-collinear", exceptions: [{ term: "t2", weight: "-1" }] }),
     ).toEqual(["0", "0", "0"]);
   });
+  // δ = 4 + 4u + Σ (k − 4) V^C + Σ (k − 8) V^U: the measure of what is only ultrasoft counts four less, u = 1 adds four.
+  it("give δ = 4 to leading collinear graphs and 8 to ultrasoft ones, however many loops", () => {
+    const gluons: Sketch = { fields: { a: "gauge potential" }, terms: ["g d a^3"] };
+    const rules = [
+      { of: "field", symbol: "a", weight: "2" },
+      { of: "derivative", weight: "2" },
+      { of: "measure", weight: "-4" },
+    ];
+    const ultrasoft = { theory: gluons, preset: "soft-collinear", rules, offset: "4" };
+    const exceptions = [{ term: "t1", weight: "-4" }];
+    const delta = (asked: Parameters<typeof valueOf>[0]) =>
+      valueOf(asked)
+        .graph?.withLegs.map(({ text }) => text)
+        .join();
+    for (const count of ["2", "4"]) {
+      const vertices = [{ term: "t1", count }];
+      expect(delta({ ...ultrasoft, exceptions, vertices, legs: [{ field: "a", count: "2" }] })).toBe("8");
+    }
+    const collinear = { theory, preset: "soft-collinear", exceptions: [{ term: "t2", weight: "-1" }] };
+    const legs = [{ field: "xi", leg: "pair" }];
+    for (const count of ["2", "4"])
+      expect(delta({ ...collinear, vertices: [{ term: "t2", count }], legs })).toBe("4");
+  });
+});
+
+describe("a heavy quark", () => {
+  // Neubert 1994: kinetic energy and magnetic moment at 1/m_Q; Darwin and spin-orbit terms at 1/m_Q² (from memory).
+  it("counts powers of 1/m", () => {
+    const theory: Sketch = {
+      fields: { h: "static heavy field", A: "gauge potential", G: "field strength" },
+      scales: { p: ["0.5 GeV", "probe"], m: ["4.8 GeV", "heavy"] },
+      terms: ["g hbar A h", "1/(2 m) hbar d^2 h", "g/(4 m) hbar h G", "g/(8 m^2) hbar h d G"],
+    };
+    expect(ordersOf({ theory, preset: "heavy quark" })).toEqual(["0", "1", "1", "2"]);
+    expect(valueOf({ theory, preset: "heavy quark" }).verdict).toBe("just by dimension");
+  });
 });
 
 describe("gravity", () => {
@@ -176,6 +222,16 @@ describe("gravity", () => {
       terms: ["m/M H", "1/M d_i^2 H^3", "m/M^2 H^2"],
     };
     expect(ordersOf({ theory, preset: "post-Newtonian" })).toEqual(["0, -1/2", "2, 1/2", "2, 0"]);
+    // As Lagrangians, one v above the action: Newton's potential L, three sources at the cubic vertex v² L (first order).
+    const at = (vertices: readonly Record<string, string>[]) =>
+      graphOf({ theory, preset: "post-Newtonian", vertices });
+    expect(at([{ term: "t1", count: "2" }])).toBe("1, -1");
+    expect(
+      at([
+        { term: "t1", count: "3" },
+        { term: "t2", count: "1" },
+      ]),
+    ).toBe("3, -1");
   });
 });
 

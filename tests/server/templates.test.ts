@@ -62,6 +62,9 @@ describe("numbers of the templates", () => {
     // Lepage and others 1992, Phys. Rev. D 46, 4052.
     ["bound-state", "relativity/order", { type: "exact", text: "2" }],
     ["bound-state", "spin/order", { type: "exact", text: "2" }],
+    ["bound-state", "kinetic/order", { type: "exact", text: "0" }],
+    ["bound-state", "kinetic/class", { type: "word", text: "irrelevant" }],
+    ["bound-state", "verdict", { type: "word", text: "not by dimension" }],
     // Kaplan, Savage and Wise 1998, Nucl. Phys. B 534, 329.
     ["large-scattering-length", "c0/order", { type: "exact", text: "0" }],
     ["large-scattering-length", "verdict", { type: "word", text: "not by dimension" }],

@@ -55,9 +55,15 @@ export function CountingRulesResult({ value }: ResultProps<CountingValue>) {
       {graph && (
         <>
           <p className="block-line">
-            The graph with legs <Formula latex={graph.legsLatex} /> and{" "}
-            {graph.loops === 1 ? "one loop" : `${String(graph.loops)} loops`} counts{" "}
-            <Order id="graph/order" order={graph.order} value={value} />
+            The graph with{" "}
+            {graph.legsLatex === "1" ? (
+              "no legs"
+            ) : (
+              <>
+                legs <Formula latex={graph.legsLatex} />
+              </>
+            )}{" "}
+            and {loopWords(graph.loops)} counts <Order id="graph/order" order={graph.order} value={value} />
             {graph.size && (
               <>
                 , which is <Figure scalar="graph/size">{graph.size.text}</Figure>
@@ -74,6 +80,10 @@ export function CountingRulesResult({ value }: ResultProps<CountingValue>) {
       </p>
     </>
   );
+}
+
+function loopWords(loops: number): string {
+  return loops === 0 ? "no loop" : loops === 1 ? "one loop" : `${String(loops)} loops`;
 }
 
 const Absent = () => <span className="block-absent">–</span>;

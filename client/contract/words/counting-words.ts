@@ -12,9 +12,13 @@ export const countingWords: Words = {
     `${quoted(text)} has a unit. A small parameter is a pure number, such as p/Lambda.`,
   "parameter-twice": ({ symbol }) => `${quoted(symbol)} is a parameter already. Give each its own symbol.`,
   "parameters-too-many": ({ most }) => `At most ${said(most)} small parameters are counted in.`,
+  "parameters-too-few": ({ wanted, symbols }) =>
+    `The published rules are in powers of ${said(wanted)} parameters, ${said(symbols)}; only the first are counted in here. Give all of them, or edit the rules.`,
+  "pure-nucleon-states": () =>
+    "Where nothing but nucleons stands between two vertices, this graph is enhanced by $m_N/Q$ over the order given. That part is not counted but iterated; the order is that of the irreducible rest.",
   "rule-twice": ({ of, text }) =>
     `There is a rule for ${text === "" ? `the ${said(of)}` : quoted(text)} already. Keep one of them.`,
-  "rule-symbol-unknown": ({ text }) => `${quoted(text)} is no field of the premises.`,
+  "rule-symbol-unknown": ({ text, of }) => `${quoted(text)} is no ${said(of)} of the premises.`,
   "rule-symbol-needless": ({ of }) => `A rule for the ${said(of)} takes no symbol.`,
   "rule-missing": ({ what }) => `No rule says what ${said(what)} count, so terms with them have no order.`,
   "exception-unknown": () => "This is no term of the premises (any more). Choose one of them.",

@@ -4,6 +4,7 @@ import { LinearForm } from "../exact/linear-form.ts";
 import { Rational } from "../exact/rational.ts";
 import { shown as shownExact } from "../exact/shown.ts";
 import { productLatex } from "../divergence/legs.ts";
+import { countOf } from "../divergence/half-edges.ts";
 import { readGraph } from "../divergence/read-graph.ts";
 import {
   number,
@@ -20,7 +21,6 @@ import type { Theory } from "../premises/theory.ts";
 import { conventionsOf } from "./conventions.ts";
 import type { CountingInputs } from "./inputs.ts";
 import { orderOfGraph, ordersOfTerms, type GraphOrder, type TermOrder } from "./orders.ts";
-import { proposalOf } from "./presets.ts";
 import { readRules, type Rules } from "./read-rules.ts";
 import { countingScalars } from "./scalars.ts";
 import { compareSequences } from "./sequences.ts";
@@ -30,7 +30,7 @@ import { countingWorking } from "./working.ts";
 
 /**
  * Problems: `premises-missing`, those of rules and orders, and of the graph. Notices: `kinetic-term-counts` (the weights do not
- * fit together), `sizes-need-numbers`.
+ * fit together), `sizes-need-numbers`, `pure-nucleon-states`.
  */
 export function evaluateCounting(inputs: CountingInputs, theory: Theory | null): Evaluation<CountingValue> {
   if (!theory) {
@@ -72,12 +72,12 @@ export function evaluateCounting(inputs: CountingInputs, theory: Theory | null):
     loopWeight: vector(rules.loop ?? []),
     conventions: conventionsOf(inputs.preset),
     isEdited: rules.isEdited,
-    proposal: proposalOf(rules.preset, theory),
+    proposal: rules.proposal,
   };
   return {
     value,
     problems,
-    notices: [...incompletePremises(theory), ...cautions(orders, rules)],
+    notices: [...incompletePremises(theory), ...cautions(orders, rules), ...iterated(graph, rules, theory)],
     scalars: countingScalars(value),
     working: countingWorking(theory, rules, orders, value, graph),
   };
@@ -86,6 +86,7 @@ export function evaluateCounting(inputs: CountingInputs, theory: Theory | null):
 export interface WorkedGraph {
   readonly order: GraphOrder;
   readonly value: CountedGraph;
+  readonly nucleonLegs: number;
 }
 
 function countGraph(
@@ -113,7 +114,11 @@ function countGraph(
     withLegs: vector(order.withLegs),
     size: sizeOf(order.amplitude, rules),
   };
-  return { order, value };
+  const nucleonLegs = theory.fields.reduce(
+    (sum, { statistics }, f) => sum + (statistics === "fermion" ? countOf(read.graph.legs, f) : 0),
+    0,
+  );
+  return { order, value, nucleonLegs };
 }
 
 function relativeSpread(quantity: Quantity | null): Readonly<Record<string, number>> {
@@ -142,6 +147,16 @@ function sizeOf(order: Weights, rules: Rules): Measured | null {
     size = timesQuantity(size, raised);
   }
   return presentEstimate(size.value, sigmaOf(size));
+}
+
+/** Weinberg 1991: nothing but nucleons between two vertices is enhanced by m_N/Q, so the order is that of the rest. */
+function iterated(graph: WorkedGraph | null, { preset }: Rules, { fields }: Theory): Problem[] {
+  if (preset !== "chiral, with nucleons" || !graph) return [];
+  const nucleons = fields.filter(({ statistics }) => statistics === "fermion").map(({ latex }) => latex);
+  const inside = graph.value.lines.some(({ latex }) => nucleons.includes(latex));
+  return inside && graph.nucleonLegs >= 4
+    ? [{ code: "pure-nucleon-states", path: ["vertices"], facts: {} }]
+    : [];
 }
 
 function cautions(orders: readonly TermOrder[], { parameters }: Rules): Problem[] {

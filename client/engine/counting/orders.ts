@@ -65,7 +65,7 @@ function vertexWeights({ monomial, rowId }: Term, rules: Rules, need: Need): Wei
     add(rules.timeDerivative, "time derivatives", monomial.timeDerivatives),
   ];
   for (const { symbol, power } of monomial.coefficients) {
-    const weights = rules.symbols.get(symbol);
+    const weights = rules.symbols.get(symbol) ?? rules.otherSymbols;
     if (weights) sum = plus(sum, times(weights, power));
   }
   const exception = rules.exceptions.get(rowId);

@@ -7,10 +7,10 @@ import { readQuantity } from "../notation/read-quantity.ts";
 import { readSymbol } from "../notation/read-symbol.ts";
 import { declaredScales } from "../premises/declared-scales.ts";
 import type { Theory } from "../premises/theory.ts";
-import type { CountingInputs } from "./inputs.ts";
 import { followsOf, type Follows } from "./follows.ts";
+import type { CountingInputs, RuleSubject } from "./inputs.ts";
 import type { PresetName } from "./preset-names.ts";
-import { presetNamed, proposalOf, type RuleRow } from "./presets.ts";
+import { presetNamed, proposalOf, type Proposal, type RuleRow } from "./presets.ts";
 import type { Weights } from "./weights.ts";
 
 export interface Parameter {
@@ -27,8 +27,9 @@ export interface Rules {
   readonly otherFields: Weights | null;
   readonly derivative: Weights | null;
   readonly timeDerivative: Weights | null;
-  /** Couplings and scales; what has no rule counts nothing. */
+  /** Couplings and scales; what has no rule, nor a rule without a symbol, counts nothing. */
   readonly symbols: ReadonlyMap<string, Weights>;
+  readonly otherSymbols: Weights | null;
   readonly measure: Weights | null;
   /** Of ∫ d^d p; minus the measure unless a rule says otherwise. */
   readonly loop: Weights | null;
@@ -38,6 +39,8 @@ export interface Rules {
   /** By id of a parameter: its powers of the probe and heavy scale, where it is a power of them. */
   readonly follows: ReadonlyMap<string, Follows>;
   readonly preset: PresetName;
+  /** Rows of the published counting, in as many parameters as there are. */
+  readonly proposal: Proposal;
   /** Whether rules were typed that are not those of the published counting. */
   readonly isEdited: boolean;
 }
@@ -45,18 +48,31 @@ export interface Rules {
 export const MOST_PARAMETERS = 4;
 
 /**
- * Problems: those of the notation, `weight-count`, `parameter-not-small`, `parameter-twice`, `parameters-too-many`, `rule-twice`,
+ * Problems: those of the notation, `weight-count`, `parameter-not-small`, `parameter-twice`, `parameters-too-many`,
+ * `parameters-too-few`, `rule-twice`,
  * `rule-symbol-unknown`, `rule-symbol-needless`, `exception-unknown`, `parameter-not-a-number`.
  */
 export function readRules(inputs: CountingInputs, theory: Theory, problems: Problem[]): Rules {
   const preset = presetNamed(inputs.preset);
-  const proposed = proposedRows(preset, theory);
-  const parameters = readParameters(inputs, proposed.parameters, theory, problems);
-  const follows = followsOf(inputs.parameters.length === 0 ? proposed.parameters : inputs.parameters, theory);
+  const published = proposalOf(preset, theory);
+  const typed = inputs.rules.filter(({ weight, symbol }) => weight.trim() !== "" || symbol.trim() !== "");
+  const named = withIds(published.parameters);
+  const parameters = readParameters(inputs, named, theory, problems);
+  const follows = followsOf(inputs.parameters.length === 0 ? named : inputs.parameters, theory);
+  const proposal = { ...published, rules: fitted(published, parameters.length) };
+  const proposed = withIds(proposal.rules);
+  if (typed.length === 0 && parameters.length < published.parameters.length)
+    problems.push({
+      code: "parameters-too-few",
+      path: ["parameters"],
+      facts: {
+        wanted: published.parameters.length,
+        symbols: published.parameters.map(({ symbol }) => symbol).join(", "),
+      },
+    });
   const weightsAt = (text: string, path: readonly string[]) =>
     readWeights(text, parameters.length, theory, path, problems);
-  const typed = inputs.rules.filter(({ weight, symbol }) => weight.trim() !== "" || symbol.trim() !== "");
-  const rules = readTable(typed.length === 0 ? proposed.rules : typed, theory, weightsAt, problems);
+  const rules = readTable(typed.length === 0 ? proposed : typed, theory, weightsAt, problems);
   const exceptions = new Map<string, Weights>();
   for (const { id, term, weight } of inputs.exceptions) {
     if (term === "") continue;
@@ -70,16 +86,22 @@ export function readRules(inputs: CountingInputs, theory: Theory, problems: Prob
   }
   const offset = inputs.offset.trim() === "" ? null : weightsAt(inputs.offset, ["offset"]);
   const none = parameters.map(() => LinearForm.zero);
-  const isEdited = typed.length > 0 && !sameRows(typed, proposed.rules);
-  return { parameters, ...rules, follows, exceptions, offset: offset ?? none, preset, isEdited };
+  const isEdited = typed.length > 0 && !sameRows(typed, proposed);
+  return { parameters, ...rules, follows, exceptions, offset: offset ?? none, preset, proposal, isEdited };
 }
 
-/** The rows of the published counting, with ids of their own; its problems would be at the choice of it. */
-function proposedRows(preset: PresetName, theory: Theory) {
-  const { parameters, rules } = proposalOf(preset, theory);
-  const named = <Row>(rows: readonly Row[]) =>
-    rows.map((row, index) => ({ id: `p${String(index + 1)}`, ...row }));
-  return { parameters: named(parameters), rules: named(rules) };
+/** Rows of the published counting, with ids of their own. */
+function withIds<Row>(rows: readonly Row[]) {
+  return rows.map((row, index) => ({ id: `p${String(index + 1)}`, ...row }));
+}
+
+/** Published rules say nothing of parameters that were added, so what they name counts 0 there. */
+function fitted({ rules }: Proposal, parameters: number): readonly RuleRow[] {
+  return rules.map((rule) => {
+    const exponents = rule.weight.split(", ");
+    const weight = Array.from({ length: parameters }, (_, index) => exponents[index] ?? "0").join(", ");
+    return { ...rule, weight };
+  });
 }
 
 type RuleRows = readonly (RuleRow & { readonly id: string })[];
@@ -185,7 +207,10 @@ function readWeights(
   return weights;
 }
 
-type Table = Omit<Rules, "parameters" | "follows" | "exceptions" | "offset" | "preset" | "isEdited">;
+type Table = Omit<
+  Rules,
+  "parameters" | "follows" | "exceptions" | "offset" | "preset" | "proposal" | "isEdited"
+>;
 
 function readTable(
   rows: RuleRows | CountingInputs["rules"],
@@ -208,8 +233,8 @@ function readTable(
       problems.push({ code: "symbol-unreadable", path: at("symbol"), facts: { text: typed } });
       continue;
     }
-    if (of === "field" && name !== "" && !theory.fields.some((field) => field.symbol === name)) {
-      problems.push({ code: "rule-symbol-unknown", path: at("symbol"), facts: { text: typed } });
+    if (named && name !== null && name !== "" && !isKnown(name, of, theory)) {
+      problems.push({ code: "rule-symbol-unknown", path: at("symbol"), facts: { text: typed, of } });
       continue;
     }
     const key = `${of} ${named ? (name ?? "") : ""}`;
@@ -221,7 +246,7 @@ function readTable(
     const weights = weightsAt(weight, at("weight"));
     if (!weights) continue;
     if (of === "field" && name !== null && name !== "") fields.set(name, weights);
-    else if (of === "coupling or scale" && name !== null) symbols.set(name, weights);
+    else if (of === "coupling or scale" && name !== null && name !== "") symbols.set(name, weights);
     else single.set(of, weights);
   }
   const measure = single.get("measure") ?? null;
@@ -231,9 +256,18 @@ function readTable(
     derivative: single.get("derivative") ?? null,
     timeDerivative: single.get("time derivative") ?? single.get("derivative") ?? null,
     symbols,
+    otherSymbols: single.get("coupling or scale") ?? null,
     measure,
     loop: single.get("loop") ?? (measure && measure.map((one) => one.times(-1))),
   };
+}
+
+/** Whether the premises have it: a field, or what stands in a coefficient or among the scales. */
+function isKnown(name: string, of: RuleSubject, { fields, scales, terms }: Theory): boolean {
+  return of === "field"
+    ? fields.some(({ symbol }) => symbol === name)
+    : scales.some(({ symbol }) => symbol === name) ||
+        terms.some(({ monomial }) => monomial.coefficients.some(({ symbol }) => symbol === name));
 }
 
 function canonical(text: string): string | null {

@@ -1,6 +1,8 @@
 /** The counting argument: the rules, each term by its parts, and a graph both ways. */
 import type { WorkingStep } from "../evaluation.ts";
+import { LinearForm } from "../exact/linear-form.ts";
 import { operatorLatex } from "../notation/operator-latex.ts";
+import { readSymbol } from "../notation/read-symbol.ts";
 import type { Theory } from "../premises/theory.ts";
 import type { WorkedGraph } from "./evaluate.ts";
 import { weightOfField, type TermOrder } from "./orders.ts";
@@ -37,6 +39,7 @@ export function countingWorking(
     prose(
       "A term counts its measure, fields, derivatives and couplings; kinetic terms count nothing when the weights fit together, so all orders are relative to them.",
     ),
+    ...exceptionSteps(orders, rules),
     ...orders.flatMap((one) => termStep(one, theory, rules)),
     ...comparison(value),
     ...(graph ? graphSteps(graph, rules, theory) : []),
@@ -52,6 +55,7 @@ function ruleSteps(theory: Theory, rules: Rules): WorkingStep[] {
       return weight ? [`${latex} &\\to ${vectorLatex(weight)}`] : [];
     }),
     ...(derivative ? [`\\partial &\\to ${vectorLatex(derivative)}`] : []),
+    ...namedWeights(rules),
     ...(isSplit && timeDerivative ? [`\\partial_t &\\to ${vectorLatex(timeDerivative)}`] : []),
     ...(measure ? [`\\text{measure} &\\to ${vectorLatex(measure)}`] : []),
     ...(loop ? [`\\text{loop} &\\to ${vectorLatex(loop)}`] : []),
@@ -60,6 +64,25 @@ function ruleSteps(theory: Theory, rules: Rules): WorkingStep[] {
   return lines.length === 0
     ? []
     : [prose(`In powers of ${names}:`), formula(`\\begin{aligned} ${lines.join(" \\\\ ")} \\end{aligned}`)];
+}
+
+/** Couplings and scales that count. */
+function namedWeights({ symbols }: Rules): string[] {
+  return [...symbols].flatMap(([symbol, weight]) => {
+    const read = readSymbol(symbol);
+    return read.ok && weight.some((one) => !one.equals(LinearForm.zero))
+      ? [`${read.value.latex} &\\to ${vectorLatex(weight)}`]
+      : [];
+  });
+}
+
+/** What a term counts by hand is no rule of the counting, so it is told apart. */
+function exceptionSteps(orders: readonly TermOrder[], { exceptions }: Rules): WorkingStep[] {
+  const told = orders.flatMap(({ term }) => {
+    const weight = exceptions.get(term.rowId);
+    return weight ? [`$${term.latex}$ counts $${vectorLatex(weight)}$ more`] : [];
+  });
+  return told.length === 0 ? [] : [prose(`By hand, ${told.join("; ")}.`)];
 }
 
 function termStep({ term, order, vertex }: TermOrder, theory: Theory, rules: Rules): WorkingStep[] {

@@ -83,7 +83,9 @@ describe("rules of one's own", () => {
   });
 
   it("see a term that comes to stand beside the kinetic terms, which no row writes", () => {
-    const beside = rules.map((rule) => (rule.symbol === "g" ? { ...rule, weight: "-2, 0" } : rule));
+    const beside = rules
+      .filter(({ symbol }) => symbol !== "lambda")
+      .map((rule) => (rule.symbol === "g" ? { ...rule, weight: "-2, 0" } : rule));
     expect(valueOf({ theory: { ...theory, terms: ["g/6! phi^6"] }, rules: beside, parameters }).verdict).toBe(
       "another sequence",
     );
@@ -105,6 +107,12 @@ describe("rules of one's own", () => {
     [
       "an unknown field",
       [{ of: "field", symbol: "chi", weight: "1" }],
+      "rule-symbol-unknown",
+      ["rules", "rules1", "symbol"],
+    ],
+    [
+      "a coupling that is nowhere",
+      [{ of: "coupling or scale", symbol: "zeta", weight: "1" }],
       "rule-symbol-unknown",
       ["rules", "rules1", "symbol"],
     ],
@@ -141,6 +149,31 @@ describe("rules of one's own", () => {
   ])("refuse %s as a small parameter", (value, code) => {
     const { problems } = count({ theory, parameters: [{ symbol: "Q", value }] });
     expect(problems.map((problem) => problem.code)).toContain(code);
+  });
+
+  it("leave published rules alone when a parameter is added, and say when one is missing", () => {
+    const value = valueOf({ theory, parameters });
+    expect(value.terms.map(({ order }) => order)).toEqual([
+      ["0", "0"],
+      ["2", "0"],
+    ]);
+    expect(value.proposal.rules.every(({ weight }) => weight.split(",").length === 2)).toBe(true);
+    const { problems } = count({ theory, preset: "post-Newtonian", parameters: parameters.slice(0, 1) });
+    expect(problems).toMatchObject([{ code: "parameters-too-few", path: ["parameters"] }]);
+  });
+
+  it("count all other couplings by the rule without a symbol, and tell weights of couplings in the working", () => {
+    const others = rules.map((rule) => (rule.symbol === "g" ? { ...rule, symbol: "" } : rule));
+    const { value, working } = count({ theory, rules: others, parameters });
+    expect(value?.terms.map(({ order }) => order)).toEqual([
+      ["0", "0"],
+      ["2", "1/2"],
+    ]);
+    const own = count({ theory, rules, parameters, exceptions: [{ term: "t2", weight: "1, 0" }] }).working;
+    const told = own.map((step) => (step.step === "formula" ? step.latex : step.text)).join("\n");
+    expect(told).toMatch(/g &\\to/);
+    expect(told).toContain("By hand");
+    expect(working.length).toBeGreaterThan(0);
   });
 
   it("warn when a kinetic term counts something", () => {
