@@ -30,7 +30,7 @@ export function ImportPreview({ file, columns, onChange }: PreviewProps) {
                 <span className="block">{column.name || `column ${index + 1}`}</span>
                 <select
                   aria-label={`role of ${column.name || `column ${index + 1}`}`}
-                  className="block-input block-choice"
+                  className="block-input block-choice min-h-6"
                   value={column.role}
                   onChange={(event) => change(index, { role: event.target.value as Chosen["role"] })} // of the options below
                 >
@@ -41,7 +41,7 @@ export function ImportPreview({ file, columns, onChange }: PreviewProps) {
                 {column.role === "order" && (
                   <input
                     aria-label={`order n of ${column.name}`}
-                    className="block-input block-notation"
+                    className="block-input block-notation min-h-6"
                     size={2}
                     value={column.order}
                     onChange={(event) => change(index, { order: event.target.value })}
@@ -49,7 +49,7 @@ export function ImportPreview({ file, columns, onChange }: PreviewProps) {
                 )}
                 <input
                   aria-label={`unit of ${column.name || `column ${index + 1}`}`}
-                  className="block-input block-notation"
+                  className="block-input block-notation min-h-6"
                   size={5}
                   placeholder="unit"
                   value={column.unit}

@@ -19,7 +19,7 @@ export function ReadingMarks({ delimiter, hasDecimalComma, onChange }: Props) {
       <label htmlFor={`${id}-delimiter`}>values are separated by</label>
       <select
         id={`${id}-delimiter`}
-        className="block-input block-choice"
+        className="block-input block-choice min-h-6"
         value={separated}
         onChange={(event) => onChange({ delimiter: event.target.value, hasDecimalComma })}
       >
@@ -32,7 +32,7 @@ export function ReadingMarks({ delimiter, hasDecimalComma, onChange }: Props) {
       <label htmlFor={`${id}-mark`}>decimal mark</label>
       <select
         id={`${id}-mark`}
-        className="block-input block-choice"
+        className="block-input block-choice min-h-6"
         value={hasDecimalComma ? "comma" : "point"}
         onChange={(event) =>
           onChange({ delimiter: separated, hasDecimalComma: event.target.value === "comma" })

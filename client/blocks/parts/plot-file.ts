@@ -59,7 +59,7 @@ export function svgFile(
     y: -MARGIN,
     width,
     height,
-    fill: getComputedStyle(drawing).getPropertyValue("--paper").trim() || "#ffffff",
+    fill: getComputedStyle(drawing).getPropertyValue("--paper").trim() || "white",
   }))
     ground.setAttribute(attribute, String(value));
   const title = document.createElementNS("http://www.w3.org/2000/svg", "title");
