@@ -1,5 +1,5 @@
 /** The screens of the larger blocks, and the page of parts: nothing serious for assistive technology, in both themes. */
-import { expectSound, lookOver } from "./axe.ts";
+import { expectSound, lookOver, twoSights } from "./axe.ts";
 import { addRow, block, fillField, goToShelf, makeNotebook, placeAtEnd } from "./notebook.ts";
 import { test, expect } from "./stage.ts";
 
@@ -10,7 +10,7 @@ test("counts of operators by dimension and by field content", async ({ enter }) 
   const counts = block(page, "Basis count").first();
   await counts.getByText(/^by field content/).click();
   await expect(counts.getByRole("searchbox", { name: "search" })).toBeVisible();
-  expectSound(await lookOver(page, "counts of operators"));
+  expectSound(await lookOver(page, "counts of operators", twoSights));
 });
 
 test("a table that is read in, and a budget", async ({ enter }) => {
@@ -22,13 +22,13 @@ test("a table that is read in, and a budget", async ({ enter }) => {
   await data.getByRole("button", { name: "read in a table" }).click();
   await page.getByLabel("or paste it here").fill("p [MeV],LO,NLO\n60,10.2,11.0\n120,8.1,9.0");
   await expect(page.getByRole("button", { name: "Read it in" })).toBeEnabled();
-  const found = [...(await lookOver(page, "reading in a table"))];
+  const found = [...(await lookOver(page, "reading in a table", twoSights))];
   await page.getByRole("button", { name: "Read it in" }).click();
   await expect(data.getByText("agrees")).toBeVisible();
   const budget = await placeAtEnd(page, "Error budget");
   await addRow(page, budget, "source", ["source", "omitted orders"], { size: "0.012" });
   await expect(budget.getByText("agrees")).toBeVisible();
-  found.push(...(await lookOver(page, "a table and a budget")));
+  found.push(...(await lookOver(page, "a table and a budget", twoSights)));
   expectSound(found);
 });
 
@@ -46,7 +46,7 @@ test("a closed set of operators, rules of counting, and running couplings", asyn
   await expect(counting.getByLabel("exponent of rule 1", { exact: true })).toBeVisible();
   const running = await placeAtEnd(page, "Running");
   await expect(running.getByRole("table").first()).toBeVisible();
-  expectSound(await lookOver(page, "closure, counting rules and running"));
+  expectSound(await lookOver(page, "closure, counting rules and running", twoSights));
 });
 
 test("the page of parts", async ({ visit, stack }) => {
@@ -54,5 +54,5 @@ test("the page of parts", async ({ visit, stack }) => {
   const page = await visit();
   await page.goto(`${stack.url}/parts`);
   await expect(page.getByRole("heading", { level: 1 })).toBeVisible();
-  expectSound(await lookOver(page, "parts"));
+  expectSound(await lookOver(page, "parts", twoSights));
 });

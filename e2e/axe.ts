@@ -23,10 +23,16 @@ export const sights: readonly Sight[] = [1440, 390].flatMap((width) => [
 const narrowWidths = [390, 1024];
 const HEIGHT = 900;
 
+/** Each width and each theme once: for large pages, which take long to look over. */
+export const twoSights: readonly Sight[] = [
+  { width: 1440, theme: "light" },
+  { width: 390, theme: "dark" },
+];
+
 /** One line for each finding, however small; those that fail a story begin with their impact. */
-export async function lookOver(page: Page, screen: string): Promise<readonly string[]> {
+export async function lookOver(page: Page, screen: string, from = sights): Promise<readonly string[]> {
   const lines: string[] = [];
-  for (const { width, theme } of sights) {
+  for (const { width, theme } of from) {
     await page.setViewportSize({ width, height: HEIGHT });
     await page.emulateMedia({ colorScheme: theme, reducedMotion: "reduce" });
     for (const { rule, impact, help, places } of await findingsOn(page)) {

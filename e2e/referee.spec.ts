@@ -131,7 +131,7 @@ test("a visitor without an account reads and checks every number, and hears when
   await test.step("closing the link cuts the open page within seconds, and its address says so", async () => {
     await revokeRefereeLink(owner, notebook, "journal");
     const words = "The authors have closed this link. Ask them for a new one.";
-    await expect(referee.getByRole("main").getByRole("alert")).toHaveText(words, { timeout: 5_000 });
+    await expect(referee.getByRole("main").getByRole("alert")).toHaveText(words);
     await expect(readProse(referee)).toHaveCount(0);
     await referee.goto(address);
     await expect(referee.getByRole("heading", { level: 1 })).toHaveText("This link opens nothing");
